@@ -1,0 +1,298 @@
+import type { Optic } from './optics/optic.ts';
+
+/**
+ * The contract of the engine: what goes into a reconstruction and what comes out of it.
+ *
+ * Everything here is plain JSON. Instants are ISO 8601 strings in UTC (`2026-02-03T09:50:00.000Z`), one minute apart
+ * where they form a series. Lengths are metres unless the name says mm, fluxes kW/m² or W/m² as the name says.
+ */
+
+export const engineVersion = '0.1.0';
+
+/** Climate classes with published or stated medians of aerosol and water; see `sky/climate-classes.ts`. */
+export const climateClasses = [
+  'clean-dry-mountain',
+  'temperate-rural',
+  'urban-maritime',
+  'humid-tropics',
+  'dusty-desert',
+] as const;
+export type ClimateClass = (typeof climateClasses)[number];
+
+export interface PlaceInput {
+  readonly latitudeDeg: number;
+  readonly longitudeDeg: number;
+  readonly elevationM: number;
+  /** Height of the optic above the surrounding ground; sets the dip of the horizon. */
+  readonly heightAboveGroundM: number;
+  /** IANA zone, used only to name local days and clock times in the recurrence calendar. */
+  readonly zone: string;
+}
+
+export interface SkyInput {
+  readonly climateClass: ClimateClass;
+  readonly pressureHpa?: number;
+  readonly temperatureC?: number;
+  readonly ozoneCm?: number;
+  readonly waterCm?: number;
+  readonly aod500?: number;
+  readonly aod380?: number;
+  readonly solarConstantWm2?: number;
+  /** Measured or archived direct normal irradiance, each value the mean over [startUtc, endUtc). */
+  readonly dniSeries?: {
+    readonly basis: 'measured' | 'derived' | 'hourly-archive';
+    readonly source: string;
+    readonly stationDistanceKm?: number;
+    readonly values: readonly { readonly startUtc: string; readonly endUtc: string; readonly dniWm2: number }[];
+  };
+}
+
+/** Window, rooflight or other opening that the light must pass, seen from the optic. */
+export interface OpeningInput {
+  /** Direction in which the opening looks, outward. */
+  readonly azimuthDeg: number;
+  readonly azimuthSigmaDeg: number;
+  /** Half-angle to the left and right within which the sun can enter. [°] 0…90 */
+  readonly halfWidthDeg: number;
+  readonly lowestElevationDeg?: number;
+  readonly highestElevationDeg?: number;
+  /** Solar transmittance of the glass in the path at normal incidence, 1 where there is none. */
+  readonly transmittance: number;
+  readonly transmittanceSource: string;
+}
+
+export interface SkylineInput {
+  /** Apparent elevation of the skyline by bearing; linear between points, closed round the circle. */
+  readonly points: readonly { readonly azimuthDeg: number; readonly elevationDeg: number; readonly name?: string }[];
+  readonly sigmaDeg: number;
+}
+
+/** Position of the mark, as surveyed from the optic's origin (sphere centre, mirror vertex, pane centre, lens node). */
+export interface MarkInput {
+  readonly bearingDeg: number;
+  readonly bearingSigmaDeg: number;
+  readonly elevationDeg: number;
+  readonly elevationSigmaDeg: number;
+  readonly distanceM: number;
+  readonly distanceSigmaM: number;
+  readonly lengthMm?: number;
+  readonly widthMm?: number;
+  /** Direction in which the trail was found to run, if it has one. */
+  readonly trailHeadingDeg?: number;
+  /** Outward normal of the target's surface; left out: faces the optic. */
+  readonly normalAzimuthDeg?: number;
+  readonly normalElevationDeg?: number;
+}
+
+export interface TargetInput {
+  /** Id of a row of `heating/target-materials.ts`. */
+  readonly materialId: string;
+  /** Solar absorptance as measured; left out: the row's fresh-to-charred range. */
+  readonly solarAbsorptance?: number;
+  readonly thicknessM?: number;
+}
+
+export interface ReconstructionInput {
+  readonly place: PlaceInput;
+  readonly window: { readonly startUtc: string; readonly endUtc: string; readonly clockSigmaS: number };
+  readonly sky: SkyInput;
+  readonly opening?: OpeningInput;
+  readonly skyline?: SkylineInput;
+  /** Left out when unknown: only sun, sky and daylight are then computed. */
+  readonly optic?: Optic;
+  /** Relative one-sigma of the optic's focal length or radius. Left out: 0.02 measured, 0.30 type default. */
+  readonly opticSigmaRel?: number;
+  readonly mark?: MarkInput;
+  readonly target?: TargetInput;
+  /** Year for which recurrence is listed; left out: the twelve months after the window. */
+  readonly recurrenceFromUtc?: string;
+  readonly rays?: number;
+  readonly samples?: number;
+  readonly seed: number;
+}
+
+export type MinuteVerdict = 'sunlit' | 'not-sunlit' | 'cannot-tell';
+
+/** Why a minute got its verdict; the words for the screen are in `app/domain/run-words.ts`. */
+export const minuteReasons = [
+  'sun-on-mark',
+  'night',
+  'near-horizon',
+  'below-skyline',
+  'outside-opening',
+  'wrong-side',
+  'beam-misses',
+  'uncertainty-straddles',
+  'skyline-unknown',
+  'optic-unknown',
+  'mark-unknown',
+] as const;
+export type MinuteReason = (typeof minuteReasons)[number];
+
+/** One minute of the window. Angles of the sun are apparent unless the name says airless. */
+export interface MinuteResult {
+  readonly atUtc: string;
+  readonly azimuthDeg: number;
+  readonly apparentElevationDeg: number;
+  readonly verdict: MinuteVerdict;
+  readonly reason: MinuteReason;
+  /** Lateral and axial distance of the focus from the mark, where an optic and a mark are known. */
+  readonly missLateralMm: number | null;
+  readonly missAxialMm: number | null;
+  /** Likely flux on the 5 mm disc centred on the mark. */
+  readonly fluxKwm2: number | null;
+}
+
+/** Consecutive minutes with one verdict and reason; `toUtc` is the end of the last minute. */
+export interface MinuteRun {
+  readonly fromUtc: string;
+  readonly toUtc: string;
+  readonly minutes: number;
+  readonly verdict: MinuteVerdict;
+  readonly reason: MinuteReason;
+}
+
+/** Low, middle and high of a quantity: P5, P50 and P95 where sampled, else the stated band. */
+export interface Band {
+  readonly low: number;
+  readonly mid: number;
+  readonly high: number;
+}
+
+export interface SourceRef {
+  readonly text: string;
+  /** False for values from memory: the screen then says "unverified". */
+  readonly verified: boolean;
+}
+
+export interface Assumption {
+  readonly field: string;
+  readonly value: string;
+  readonly source: SourceRef;
+}
+
+export interface DniResult {
+  readonly likelyWm2: number | null;
+  readonly secondModelWm2: number | null;
+  readonly boundWm2: number | null;
+  readonly measuredWm2: number | null;
+  readonly atOpticLikelyWm2: number | null;
+  readonly atOpticBoundWm2: number | null;
+  readonly basis: string;
+}
+
+export interface FluxDisc {
+  readonly disc: 'sun-image' | '1 mm' | '5 mm';
+  readonly diameterMm: number;
+  readonly centre: 'hot spot' | 'mark';
+  readonly concentration: Band;
+  readonly fluxKwm2: Band;
+}
+
+export interface BestMoment {
+  readonly atUtc: string;
+  readonly sun: {
+    readonly azimuthDeg: number;
+    readonly airlessElevationDeg: number;
+    readonly apparentElevationDeg: number;
+    readonly declinationDeg: number;
+    readonly distanceAu: number;
+    readonly angularDiameterDeg: number;
+    readonly equationOfTimeMin: number;
+  };
+  readonly dni: DniResult;
+  readonly missLateralMm: number | null;
+  readonly missAxialMm: number | null;
+  readonly toleranceLateralMm: number | null;
+  readonly toleranceAxialMm: number | null;
+}
+
+export interface FocusResult {
+  readonly method: 'closed-form' | 'ray-trace';
+  readonly focusKind: 'point' | 'line';
+  readonly focalLengthM: number;
+  readonly spotDiameterMm: Band;
+  readonly discs: readonly FluxDisc[];
+  readonly plane: string;
+  /** Spot or line width against distance from the optic's origin. */
+  readonly spotAtDistance: readonly { readonly distanceM: number; readonly diameterMm: number; readonly fluxKwm2: number }[];
+  readonly dangerZone: { readonly thresholdKwm2: number; readonly nearM: number; readonly farM: number } | null;
+  readonly trailSpeedMmPerH: number | null;
+  readonly trailHeadingDeg: number | null;
+  /** Sunlit minutes that the found trail needs at least; null for a line focus, which carries no time. */
+  readonly trailMinutesAtLeast: number | null;
+  readonly dwellS: readonly { readonly thresholdKwm2: number; readonly seconds: Band }[];
+}
+
+/** One way in which the target may respond. The band is seconds of steady sun on one point. */
+export interface TargetOutcome {
+  readonly id: 'softening' | 'scorch' | 'smoulder' | 'flaming' | 'skin-burn';
+  readonly answer: 'reached' | 'not reached' | 'cannot tell';
+  readonly timeS: Band | null;
+  readonly sentence: string;
+  readonly basis: string;
+  readonly sampleSizeMm: number | null;
+  readonly source: SourceRef;
+}
+
+export interface HeatingResult {
+  readonly materialId: string;
+  readonly surfaceTemperatureC: readonly { readonly timeS: number; readonly celsius: Band }[];
+  readonly outcomes: readonly TargetOutcome[];
+}
+
+export type TestName = 'geometry' | 'weather' | 'energy' | 'mark';
+export type TestResult = 'supports' | 'contradicts' | 'inconclusive' | 'not tested';
+
+/** One contradiction check. `passed` false refutes; null means that it could not be made. */
+export interface Check {
+  readonly id: string;
+  readonly test: TestName;
+  readonly passed: boolean | null;
+  readonly margin: number | null;
+  readonly unit: string;
+  readonly sentence: string;
+}
+
+export interface TestSummary {
+  readonly test: TestName;
+  readonly result: TestResult;
+  readonly sentence: string;
+  readonly margin: { readonly value: number; readonly low: number; readonly high: number; readonly unit: string; readonly agreeFrom: number | null; readonly agreeTo: number | null } | null;
+}
+
+/** Days on which the same alignment comes back. Dates are local days of the place, instants UTC. */
+export interface RecurrenceBand {
+  readonly firstOn: string;
+  readonly lastOn: string;
+  readonly days: readonly { readonly on: string; readonly bestUtc: string; readonly fromUtc: string; readonly toUtc: string; readonly minutes: number; readonly separationDeg: number }[];
+  readonly bestUtc: string;
+  readonly minutes: number;
+}
+
+export interface Grade {
+  readonly word: 'consistent' | 'not refuted' | 'inconsistent because' | 'cannot tell because';
+  readonly because: readonly string[];
+}
+
+export interface ReconstructionResult {
+  readonly engineVersion: string;
+  readonly seed: number;
+  readonly window: { readonly startUtc: string; readonly endUtc: string; readonly minutes: number };
+  /** Sunrise and sunset (upper limb, refracted) on each local day that the window touches; null where there is none. */
+  readonly daylight: readonly { readonly on: string; readonly sunriseUtc: string | null; readonly sunsetUtc: string | null; readonly polar: 'day' | 'night' | null }[];
+  readonly minutes: readonly MinuteResult[];
+  readonly runs: readonly MinuteRun[];
+  readonly totals: { readonly sunlit: number; readonly notSunlit: number; readonly cannotTell: number };
+  readonly best: BestMoment | null;
+  readonly focus: FocusResult | null;
+  readonly heating: HeatingResult | null;
+  readonly recurrence: readonly RecurrenceBand[];
+  /** What the recurrence needs of the sun; null where the optic or mark is unknown or the optic moves. */
+  readonly requiredSun: { readonly azimuthDeg: number; readonly apparentElevationDeg: number; readonly declinationDeg: number; readonly reachable: boolean } | null;
+  readonly checks: readonly Check[];
+  readonly tests: readonly TestSummary[];
+  readonly grade: Grade;
+  readonly assumptions: readonly Assumption[];
+  readonly warnings: readonly string[];
+}

@@ -1,0 +1,141 @@
+import type { Vector } from '#app/physics/vector.ts';
+import { dot } from '#app/physics/vector.ts';
+import { frameAbout } from './frame.ts';
+
+/** Shares of the power that met the optic, summed over rays; in units of ray weight. */
+export interface Ledger {
+  incident: number;
+  transmitted: number;
+  reflected: number;
+  absorbed: number;
+  stray: number;
+  blocked: number;
+  worstImbalance: number;
+}
+
+/**
+ * Rays that leave the optic, in its local axes, kept so that any number of planes can be cut through them.
+ *
+ * `weight` is power over direct irradiance [m²]; `reach` the distance after which the ray meets the optic again.
+ * Batch b holds the rays from `batchEnd[b − 1]` up to `batchEnd[b]`.
+ */
+export class RayBundle {
+  readonly px: Float64Array;
+  readonly py: Float64Array;
+  readonly pz: Float64Array;
+  readonly dx: Float64Array;
+  readonly dy: Float64Array;
+  readonly dz: Float64Array;
+  readonly weight: Float64Array;
+  readonly reach: Float64Array;
+  count = 0;
+  readonly batchEnd: number[] = [];
+  readonly ledger: Ledger = { incident: 0, transmitted: 0, reflected: 0, absorbed: 0, stray: 0, blocked: 0, worstImbalance: 0 };
+
+  constructor(capacity: number) {
+    this.px = new Float64Array(capacity);
+    this.py = new Float64Array(capacity);
+    this.pz = new Float64Array(capacity);
+    this.dx = new Float64Array(capacity);
+    this.dy = new Float64Array(capacity);
+    this.dz = new Float64Array(capacity);
+    this.weight = new Float64Array(capacity);
+    this.reach = new Float64Array(capacity).fill(Infinity);
+  }
+
+  get capacity(): number {
+    return this.px.length;
+  }
+
+  /** Start of a batch. */
+  batchStart(batch: number): number {
+    return batch === 0 ? 0 : (this.batchEnd[batch - 1] ?? 0);
+  }
+
+  endBatch(): void {
+    this.batchEnd.push(this.count);
+  }
+
+  /** Adds a ray with unlimited reach. */
+  push(px: number, py: number, pz: number, dx: number, dy: number, dz: number, weight: number): void {
+    const i = this.count++;
+    this.px[i] = px;
+    this.py[i] = py;
+    this.pz[i] = pz;
+    this.dx[i] = dx;
+    this.dy[i] = dy;
+    this.dz[i] = dz;
+    this.weight[i] = weight;
+  }
+}
+
+/** Plane of a receiver in the optic's local axes; the normal looks towards the light. */
+export interface LocalPlane {
+  readonly origin: Vector;
+  readonly normal: Vector;
+}
+
+/** Points where the rays meet a plane, in plane axes from its origin, with their weights. */
+export interface PlaneHits {
+  readonly x: Float64Array;
+  readonly y: Float64Array;
+  readonly weight: Float64Array;
+  count: number;
+  readonly batchEnd: number[];
+  columnDirection: Vector;
+  rowDirection: Vector;
+}
+
+export function emptyHits(capacity: number): PlaneHits {
+  return {
+    x: new Float64Array(capacity),
+    y: new Float64Array(capacity),
+    weight: new Float64Array(capacity),
+    count: 0,
+    batchEnd: [],
+    columnDirection: [1, 0, 0],
+    rowDirection: [0, 1, 0],
+  };
+}
+
+/**
+ * Cuts a plane through the bundle. Rays that come from behind, or would reach it only before they left the optic or
+ * after meeting it again, do not count.
+ *
+ * @param perBatch At most this many rays of each batch, for a quick look.
+ * @param row Direction that the rows of the plane's axes should follow, where it matters.
+ */
+export function cutPlane(bundle: RayBundle, plane: LocalPlane, hits: PlaneHits, perBatch = Infinity, row?: Vector): PlaneHits {
+  const [nx, ny, nz] = plane.normal;
+  const f = frameAbout(plane.normal, row ?? [0, 1, 0]);
+  const ex = f.x;
+  const ey = f.y;
+  const offset = dot(plane.origin, plane.normal);
+  const ox = dot(plane.origin, ex);
+  const oy = dot(plane.origin, ey);
+  const { px, py, pz, dx, dy, dz, weight, reach } = bundle;
+  let k = 0;
+  hits.batchEnd.length = 0;
+  for (let b = 0; b < bundle.batchEnd.length; b++) {
+    const start = bundle.batchStart(b);
+    const end = Math.min(bundle.batchEnd[b]!, start + perBatch);
+    for (let i = start; i < end; i++) {
+      const along = dx[i]! * nx + dy[i]! * ny + dz[i]! * nz;
+      if (along >= -1e-9) continue;
+      const t = (offset - px[i]! * nx - py[i]! * ny - pz[i]! * nz) / along;
+      if (t < 0 || t > reach[i]!) continue;
+      const x = px[i]! + t * dx[i]!;
+      const y = py[i]! + t * dy[i]!;
+      const z = pz[i]! + t * dz[i]!;
+      hits.x[k] = x * ex[0] + y * ex[1] + z * ex[2] - ox;
+      hits.y[k] = x * ey[0] + y * ey[1] + z * ey[2] - oy;
+      hits.weight[k] = weight[i]!;
+      k++;
+    }
+    hits.batchEnd.push(k);
+  }
+  hits.count = k;
+  hits.columnDirection = ex;
+  hits.rowDirection = ey;
+  return hits;
+}

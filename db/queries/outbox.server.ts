@@ -1,0 +1,47 @@
+import { and, eq, lte, sql } from 'drizzle-orm';
+import type { DbOrTx, Transaction } from '#db/client.server.ts';
+import { outbox } from '#db/schema/all.ts';
+
+export interface NewMail {
+  readonly dedupeKey: string;
+  readonly toAddress: string;
+  readonly subject: string;
+  readonly bodyText: string;
+  readonly bodyHtml: string;
+  readonly caseId: string | null;
+}
+
+/** Puts a message in the outbox within the caller's transaction. A second message with the same key is dropped. */
+export async function insertMail(tx: Transaction, mail: NewMail): Promise<void> {
+  await tx.insert(outbox).values(mail).onConflictDoNothing({ target: outbox.dedupeKey });
+}
+
+/** Messages that are due, locked for this transaction so that two workers never send the same one. */
+export function claimDueMail(tx: Transaction, limit: number) {
+  return tx
+    .select()
+    .from(outbox)
+    .where(and(eq(outbox.state, 'waiting'), lte(outbox.nextAttemptAt, sql`now()`)))
+    .orderBy(outbox.createdAt)
+    .limit(limit)
+    .for('update', { skipLocked: true });
+}
+
+export async function markMailSent(db: DbOrTx, mailId: string): Promise<void> {
+  await db.update(outbox).set({ state: 'sent', sentAt: sql`now()`, attempts: sql`${outbox.attempts} + 1`, lastError: null }).where(eq(outbox.id, mailId));
+}
+
+export const mailAttemptLimit = 8;
+
+/** Next try after 1, 2, 4 … minutes; after the last the message stays as failed and is listed for the administrator. */
+export async function markMailFailed(db: DbOrTx, mailId: string, error: string): Promise<void> {
+  await db
+    .update(outbox)
+    .set({
+      attempts: sql`${outbox.attempts} + 1`,
+      lastError: error.slice(0, 500),
+      state: sql`case when ${outbox.attempts} + 1 >= ${mailAttemptLimit} then 'failed' else 'waiting' end`,
+      nextAttemptAt: sql`now() + interval '1 minute' * power(2, ${outbox.attempts})`,
+    })
+    .where(eq(outbox.id, mailId));
+}

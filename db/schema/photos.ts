@@ -1,0 +1,74 @@
+import { sql } from 'drizzle-orm';
+import { bigint, check, index, integer, jsonb, pgTable, text, uniqueIndex, uuid } from 'drizzle-orm/pg-core';
+import { photoViews } from '#app/domain/incident.ts';
+import { createdAt, id, instant } from './_columns.ts';
+import { cases } from './cases.ts';
+import { users } from './people.ts';
+
+/** What the file itself says; offered to the person, applied only when confirmed. */
+export interface PhotoExif {
+  readonly takenAtLocal: string | null;
+  readonly utcOffset: string | null;
+  readonly latitudeDeg: number | null;
+  readonly longitudeDeg: number | null;
+  readonly directionDeg: number | null;
+  readonly directionReference: 'true' | 'magnetic' | null;
+  readonly camera: string | null;
+}
+
+/** Which offers the person took. */
+export interface PhotoExifAnswer {
+  readonly time: 'accepted' | 'declined' | null;
+  readonly place: 'accepted' | 'declined' | null;
+  readonly answeredAt: string | null;
+}
+
+/** A box to be masked in what leaves, as fractions of width and height. */
+export interface PhotoMask {
+  readonly leftShare: number;
+  readonly topShare: number;
+  readonly widthShare: number;
+  readonly heightShare: number;
+  readonly class: 'personal' | 'exact-place';
+}
+
+export const photos = pgTable(
+  'photos',
+  {
+    id: id(),
+    /** The report under way that the photo came with; stays after the case exists. */
+    reportClientId: uuid().notNull(),
+    /** Null until the report is sent. */
+    caseId: uuid().references(() => cases.id, { onDelete: 'restrict' }),
+    label: integer(),
+    fileName: text().notNull(),
+    mime: text().notNull(),
+    bytes: bigint({ mode: 'number' }).notNull(),
+    sha256: text().notNull(),
+    widthPx: integer().notNull(),
+    heightPx: integer().notNull(),
+    originalKey: text().notNull(),
+    viewKey: text(),
+    thumbnailKey: text(),
+    state: text({ enum: ['stored', 'ready', 'failed'] }).notNull().default('stored'),
+    exif: jsonb().$type<PhotoExif>().notNull(),
+    exifAnswer: jsonb().$type<PhotoExifAnswer>().notNull(),
+    view: text({ enum: photoViews }),
+    caption: text().notNull().default(''),
+    altText: text().notNull().default(''),
+    takenAt: instant(),
+    clockErrorS: integer().notNull().default(0),
+    masks: jsonb().$type<readonly PhotoMask[]>().notNull().default([]),
+    releasable: text({ enum: ['undecided', 'yes', 'no'] }).notNull().default('undecided'),
+    uploadedById: uuid().references(() => users.id, { onDelete: 'restrict' }),
+    createdAt: createdAt(),
+  },
+  (table) => [
+    uniqueIndex('photos_report_sha256_key').on(table.reportClientId, table.sha256),
+    uniqueIndex('photos_case_label_key').on(table.caseId, table.label),
+    index('photos_case_id_idx').on(table.caseId),
+    index('photos_uploaded_by_id_idx').on(table.uploadedById),
+    check('photos_label_with_case', sql`(${table.caseId} is null) = (${table.label} is null)`),
+    check('photos_sha256_hex', sql`${table.sha256} ~ '^[0-9a-f]{64}$'`),
+  ],
+);

@@ -1,0 +1,48 @@
+import { reactRouter } from '@react-router/dev/vite';
+import tailwindcss from '@tailwindcss/vite';
+import { defineConfig } from 'vitest/config';
+
+const quiet = ['./tests/support/quiet.ts'];
+
+export default defineConfig(({ mode }) => ({
+  // Under Vitest the modules run as they are; the framework's plugin would rewrite the routes for a browser.
+  plugins: mode === 'test' ? [] : [tailwindcss(), reactRouter()],
+  build: { target: 'es2022', sourcemap: false },
+  environments: {
+    ssr: { build: { rollupOptions: { input: './app/server.ts' } } },
+  },
+  test: {
+    // Two cores are the smallest machine the suite is meant for.
+    maxWorkers: 2,
+    passWithNoTests: false,
+    projects: [
+      { extends: true, test: { name: 'architecture', include: ['tests/architecture.test.ts'] } },
+      { extends: true, test: { name: 'unit', include: ['tests/unit/**/*.test.{ts,tsx}'], setupFiles: quiet } },
+      { extends: true, test: { name: 'handbook', include: ['tests/handbook/**/*.test.ts'], setupFiles: quiet, testTimeout: 60_000 } },
+      {
+        extends: true,
+        test: {
+          name: 'db',
+          include: ['tests/db/**/*.test.{ts,tsx}'],
+          setupFiles: ['./tests/support/test-env.ts', ...quiet],
+          globalSetup: ['./tests/support/template-database.ts'],
+          pool: 'forks',
+          testTimeout: 30_000,
+          hookTimeout: 60_000,
+        },
+      },
+      {
+        extends: true,
+        test: {
+          name: 'e2e',
+          include: ['tests/e2e/**/*.spec.ts'],
+          globalSetup: ['./tests/e2e/support/seeded-template.ts'],
+          pool: 'forks',
+          fileParallelism: false,
+          testTimeout: 120_000,
+          hookTimeout: 120_000,
+        },
+      },
+    ],
+  },
+}));
