@@ -30,6 +30,11 @@ export default tseslint.config(
     },
   },
   {
+    files: ['**/*.{js,mjs}'],
+    languageOptions: { ecmaVersion: 2024, sourceType: 'module' },
+    rules: { eqeqeq: 'error', 'prefer-const': 'error', 'no-unused-vars': ['error', { argsIgnorePattern: '^_' }], 'no-var': 'error' },
+  },
+  {
     files: ['app/**/*.tsx', 'tests/**/*.tsx'],
     extends: [jsxA11y.flatConfigs.recommended],
     plugins: { 'react-hooks': reactHooks },

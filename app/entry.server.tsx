@@ -4,6 +4,7 @@ import { isbot } from 'isbot';
 import { renderToPipeableStream } from 'react-dom/server';
 import { isRouteErrorResponse, ServerRouter } from 'react-router';
 import type { EntryContext, HandleErrorFunction, RouterContextProvider } from 'react-router';
+import { BodyTooLargeError } from '#app/http/body-meter.server.ts';
 import { nonceContext } from '#app/http/nonce-context.ts';
 import { log } from '#app/log.server.ts';
 
@@ -53,7 +54,7 @@ export default function handleRequest(
 
 /** Failures of loaders, actions and rendering. What a visitor's address or a closed tab caused is none of ours. */
 export const handleError: HandleErrorFunction = (error, { request }) => {
-  if (request.signal.aborted) return;
+  if (request.signal.aborted || error instanceof BodyTooLargeError) return;
   if (isRouteErrorResponse(error) && error.status < 500) return;
   log.error({ err: error, method: request.method, area: new URL(request.url).pathname.split('/')[1] }, 'a page failed');
 };

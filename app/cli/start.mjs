@@ -12,7 +12,7 @@ import { chooseDatabaseDir } from './provision/folders.mjs';
 import { ensureNodeModules, requireNodeVersion } from './provision/node-modules.mjs';
 import { requirePort, waitForPort } from './provision/ports.mjs';
 import { reportProblem, SetupProblem } from './provision/problem.mjs';
-import { endRunningCommands, run, startService } from './provision/processes.mjs';
+import { endRunningCommands, onStopRequest, run, startService } from './provision/processes.mjs';
 import { claimRun } from './provision/run-record.mjs';
 import { readPlan, startServices } from './provision/services.mjs';
 
@@ -41,13 +41,11 @@ function stopEverything() {
   return stopping;
 }
 
-for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) {
-  process.on(signal, () => {
-    if (stopping) return;
-    console.log('\n  Stopping');
-    void stopEverything().then(() => process.exit(0));
-  });
-}
+onStopRequest(() => {
+  if (stopping) return;
+  console.log('\n  Stopping');
+  void stopEverything().then(() => process.exit(0));
+});
 
 async function main() {
   requireNodeVersion();

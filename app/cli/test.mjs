@@ -13,7 +13,7 @@ import { makeScratchDir } from './provision/folders.mjs';
 import { ensureNodeModules, requireNodeVersion } from './provision/node-modules.mjs';
 import { freePort } from './provision/ports.mjs';
 import { reportProblem } from './provision/problem.mjs';
-import { endRunningCommands, run } from './provision/processes.mjs';
+import { endRunningCommands, onStopRequest, run } from './provision/processes.mjs';
 import { startServices } from './provision/services.mjs';
 
 const root = fileURLToPath(new URL('../..', import.meta.url)).replace(/\/$/, '');
@@ -45,12 +45,10 @@ const steps = {
   },
 };
 
-for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) {
-  process.once(signal, () => {
-    interrupted = true;
-    endRunningCommands();
-  });
-}
+onStopRequest(() => {
+  interrupted = true;
+  endRunningCommands();
+});
 
 const total = { passed: 0, failed: 0 };
 try {
@@ -124,7 +122,9 @@ async function countFailures(step, env) {
   }
 }
 
-const allOrNothing = (ok) => ({ passed: ok ? 1 : 0, failed: ok ? 0 : 1 });
+function allOrNothing(ok) {
+  return { passed: ok ? 1 : 0, failed: ok ? 0 : 1 };
+}
 
 async function tool(args, env) {
   const { code, output } = await run(process.execPath, args, { cwd: root, env });

@@ -105,9 +105,10 @@ function findingsNeeds(facts: MoveFacts): string[] {
   ];
 }
 
+/** A case that went straight from triage to action has no finding, and needs none to close. */
 function correctiveNeeds(facts: MoveFacts): string[] {
   return [
-    ...need(facts.finding?.state !== 'signed', 'A reviewer who is not the author signs the finding first.'),
+    ...need(facts.finding !== null && facts.finding.state !== 'signed', 'A reviewer who is not the author signs the finding first.'),
     ...need(facts.openReviewComments > 0, 'Settle every open review comment.'),
   ];
 }

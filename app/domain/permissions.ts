@@ -28,12 +28,13 @@ const beforeClose = ['reported', 'triage', 'returned', 'investigation', 'finding
 const atWork = ['triage', 'investigation', 'findings', 'corrective-action'] as const;
 
 export const caseRules = {
-  'case:read': { roles: ['investigator', 'reviewer', 'manager', 'privacy-lead'], states: 'any', relations: ['reporter-of-case', 'owner-of-action'] },
+  'case:read': { roles: ['investigator', 'reviewer', 'manager', 'privacy-lead'], states: 'any', relations: ['reporter-of-case', 'owner-of-action', 'verifier-of-action'] },
   'case:read-personal': { roles: ['investigator', 'reviewer', 'manager', 'privacy-lead'], states: 'any', relations: ['reporter-of-case'] },
   'case:read-health': { roles: ['investigator', 'privacy-lead'], states: 'any', relations: ['reporter-of-case'] },
   'case:read-privileged': { roles: ['privacy-lead'], states: 'any' },
   'case:add-note': { roles: ['investigator'], states: beforeClose, relations: ['reporter-of-case'] },
   'case:add-photo': { roles: ['investigator'], states: beforeClose, relations: ['reporter-of-case'] },
+  'photo:read-original': { roles: ['investigator', 'reviewer', 'privacy-lead'], states: 'any' },
   'case:triage': { roles: ['investigator', 'manager'], states: ['reported', 'triage', 'returned', 'duplicate'] },
   'case:close-at-triage': { roles: ['investigator', 'manager'], states: ['triage'] },
   'case:answer': { roles: ['investigator'], states: ['returned'], relations: ['reporter-of-case'] },

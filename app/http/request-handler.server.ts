@@ -3,6 +3,7 @@ import type { Request as ExpressRequest, RequestHandler, Response as ExpressResp
 import { createRequestHandler, RouterContextProvider } from 'react-router';
 import type { ServerBuild } from 'react-router';
 import { BodyMeter, tooLargeSentence } from './body-meter.server.ts';
+import { clientAddressContext } from './client-address.ts';
 import { nonceContext } from './nonce-context.ts';
 import { nonceOf } from './security-headers.server.ts';
 
@@ -31,6 +32,7 @@ export function pageHandler({ build, mode, bodyLimitBytes }: PageHandlerOptions)
     try {
       const context = new RouterContextProvider();
       context.set(nonceContext, nonceOf(response));
+      context.set(clientAddressContext, request.ip ?? 'unknown');
       const answer = await handle(webRequest(request, response, meter), context);
       // A route that turns the broken stream into an answer of its own does not know why it broke.
       if (meter.exceeded) refuseBody(request, response, bodyLimitBytes);

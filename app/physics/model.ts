@@ -104,8 +104,9 @@ export interface ReconstructionInput {
   readonly opticSigmaRel?: number;
   readonly mark?: MarkInput;
   readonly target?: TargetInput;
-  /** Year for which recurrence is listed; left out: the twelve months after the window. */
+  /** Span for which recurrence is listed, at most five years; left out: the twelve months after the window. */
   readonly recurrenceFromUtc?: string;
+  readonly recurrenceToUtc?: string;
   readonly rays?: number;
   readonly samples?: number;
   readonly seed: number;

@@ -1,36 +1,12 @@
 import { sql } from 'drizzle-orm';
 import { bigint, check, index, integer, jsonb, pgTable, text, uniqueIndex, uuid } from 'drizzle-orm/pg-core';
 import { photoViews } from '#app/domain/incident.ts';
+import type { PhotoExif, PhotoExifAnswer, PhotoMask } from '#app/domain/photo.ts';
 import { createdAt, id, instant } from './_columns.ts';
 import { cases } from './cases.ts';
 import { users } from './people.ts';
 
-/** What the file itself says; offered to the person, applied only when confirmed. */
-export interface PhotoExif {
-  readonly takenAtLocal: string | null;
-  readonly utcOffset: string | null;
-  readonly latitudeDeg: number | null;
-  readonly longitudeDeg: number | null;
-  readonly directionDeg: number | null;
-  readonly directionReference: 'true' | 'magnetic' | null;
-  readonly camera: string | null;
-}
-
-/** Which offers the person took. */
-export interface PhotoExifAnswer {
-  readonly time: 'accepted' | 'declined' | null;
-  readonly place: 'accepted' | 'declined' | null;
-  readonly answeredAt: string | null;
-}
-
-/** A box to be masked in what leaves, as fractions of width and height. */
-export interface PhotoMask {
-  readonly leftShare: number;
-  readonly topShare: number;
-  readonly widthShare: number;
-  readonly heightShare: number;
-  readonly class: 'personal' | 'exact-place';
-}
+export type { PhotoExif, PhotoExifAnswer, PhotoMask } from '#app/domain/photo.ts';
 
 export const photos = pgTable(
   'photos',
@@ -59,6 +35,9 @@ export const photos = pgTable(
     takenAt: instant(),
     clockErrorS: integer().notNull().default(0),
     masks: jsonb().$type<readonly PhotoMask[]>().notNull().default([]),
+    /** Last time the stored original was hashed again, and how it compared with the hash at intake. */
+    hashCheckedAt: instant(),
+    hashCheck: text({ enum: ['same', 'differs', 'missing'] }),
     releasable: text({ enum: ['undecided', 'yes', 'no'] }).notNull().default('undecided'),
     uploadedById: uuid().references(() => users.id, { onDelete: 'restrict' }),
     createdAt: createdAt(),

@@ -37,7 +37,7 @@ export async function startFakeMail(): Promise<FakeMail> {
             to: session.envelope.rcptTo.map((recipient) => recipient.address),
             subject: mail.subject ?? '',
             text: mail.text ?? '',
-            html: mail.html === false ? '' : mail.html,
+            html: mail.html || '',
             messageId: mail.messageId ?? '',
           });
           done();

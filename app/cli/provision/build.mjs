@@ -21,7 +21,7 @@ export async function ensureBuild(root, say) {
   if (existsSync(stamp) && readFileSync(stamp, 'utf8') === hash && existsSync(join(root, webEntry))) return;
   say('Building');
   rmSync(join(root, 'build'), { recursive: true, force: true });
-  const env = { ...process.env, NODE_ENV: 'production' };
+  const env = { ...process.env, NODE_ENV: 'production', NO_COLOR: '1' };
   const steps = [[join('node_modules', '@react-router', 'dev', 'bin.js'), 'build'], [join('app', 'cli', 'bundle.mjs')]];
   for (const args of steps) {
     const { code, output } = await run(process.execPath, args, { cwd: root, env });

@@ -11,7 +11,7 @@ export class SetupProblem extends Error {
 /** Prints a failure the way a newcomer can act on it, and returns the exit code. */
 export function reportProblem(error) {
   if (error instanceof SetupProblem) {
-    if (error.detail) console.error(lastLines(error.detail, 15));
+    if (error.detail) console.error(lastLines(error.detail, 40));
     console.error(`\n${error.message}`);
   } else {
     console.error(error);

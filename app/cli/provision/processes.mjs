@@ -42,6 +42,24 @@ export function run(command, args, options = {}) {
   });
 }
 
+/**
+ * Calls `stop` when we are told to stop, or when npm is: npm passes a signal only to the shell between itself and us,
+ * which ends without passing it on.
+ */
+export function onStopRequest(stop) {
+  for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(signal, stop);
+  if (!process.env.npm_lifecycle_event) return;
+  const parent = process.ppid;
+  const timer = setInterval(() => {
+    if (process.ppid === parent) return;
+    clearInterval(timer);
+    stop();
+  }, 300);
+  timer.unref();
+  // Whoever read our output may be gone by then.
+  for (const stream of [process.stdout, process.stderr]) stream.on('error', () => undefined);
+}
+
 /** True while a process with this id exists. */
 export function isAlive(pid) {
   try {

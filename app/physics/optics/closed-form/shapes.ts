@@ -22,6 +22,23 @@ export function ballFan(round: boolean, radiusM: number, medium: Medium): Fan {
   });
 }
 
+/** Light that runs parallel inside a liquid and leaves through a spherical bottom; distances from the sphere's centre. */
+export function roundBottomFan(radiusM: number, halfBeamM: number, medium: Medium, pathM: number): Fan {
+  const n = medium.refractiveIndex;
+  return buildFan(true, halfBeamM, (height) => {
+    const sinInside = height / radiusM;
+    if (sinInside * n >= 1) return null;
+    const bend = Math.asin(sinInside * n) - Math.asin(sinInside);
+    const surface = 1 - fresnelReflectance(Math.sqrt(1 - sinInside * sinInside), 1 / n);
+    const leavesAt = radiusM * Math.sqrt(1 - sinInside * sinInside);
+    return {
+      x0: height + Math.tan(bend) * leavesAt,
+      slope: -Math.tan(bend),
+      transmittance: surface * medium.internalTransmittance(pathM),
+    };
+  });
+}
+
 /** Spherical or parabolic concave mirror, light along its axis, from the vertex. */
 export function mirrorFan(figure: 'spherical' | 'parabolic', radiusM: number, halfApertureM: number, reflectance: number): Fan {
   return buildFan(true, halfApertureM, (height) => {

@@ -52,7 +52,14 @@ export function splitRay(ray: Float64Array, through: Float64Array, nx: number, n
   const dx = ray[0]!;
   const dy = ray[1]!;
   const dz = ray[2]!;
-  const c = -(nx * dx + ny * dy + nz * dz);
+  let c = -(nx * dx + ny * dy + nz * dz);
+  if (c < 0) {
+    // A rough wall can tilt a grazing normal past the ray.
+    c = -c;
+    nx = -nx;
+    ny = -ny;
+    nz = -nz;
+  }
   const k = 1 - eta * eta * (1 - c * c);
   const rx = dx + 2 * c * nx;
   const ry = dy + 2 * c * ny;

@@ -56,6 +56,8 @@ export interface Kernel {
   readonly clearanceM: number;
   /** Direction of the focal line in local axes, for a line focus. */
   readonly lineDirection: Vector | null;
+  /** Way of the central ray after the optic, in local axes. */
+  readonly chiefDirection: Vector;
   /** Samples used per ray, besides which the sun takes dimensions 2 and 3. */
   readonly dimensions: number;
   /** Rays that one sample may send out at most. */

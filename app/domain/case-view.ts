@@ -1,0 +1,129 @@
+import type { CardView } from './case-card.ts';
+import type { CaseState } from './case-state.ts';
+import type { SceneOpticKind } from './scene.ts';
+
+/** What screens of a case are given: explicit views, never rows of a table. Words are ready to be shown. */
+
+export interface ReturnView {
+  readonly atUtc: string;
+  /** "3 Aug 2026, 13:30" in the clock of the place. */
+  readonly words: string;
+  /** "in 19 days", "today". */
+  readonly inWords: string;
+}
+
+export const registerGroups = ['before-fix', 'new', 'settled'] as const;
+export type RegisterGroup = (typeof registerGroups)[number];
+export const registerGroupLabels: Record<RegisterGroup, string> = {
+  'before-fix': 'Sun returns before the fix is proven',
+  new: 'New',
+  settled: 'Settled, or no fixed return',
+};
+
+export interface RegisterRowView {
+  readonly number: number;
+  readonly group: RegisterGroup;
+  readonly opticKind: SceneOpticKind;
+  readonly title: string;
+  readonly place: string;
+  /** "9 May 2026" and "05:30 to 15:10, 4 days". */
+  readonly windowDay: string;
+  readonly windowHours: string;
+  readonly card: CardView;
+  readonly state: CaseState;
+  /** Certainty of the signed finding, kind of event before that, "reopened". */
+  readonly stateNote: string;
+  readonly nextReturn: ReturnView | null;
+  /** In place of a return: "not known yet", "see 123". */
+  readonly returnWords: string;
+  readonly waitsFor: string;
+  readonly position: { readonly latitudeDeg: number; readonly longitudeDeg: number };
+}
+
+export interface RegisterView {
+  readonly heading: string;
+  readonly rows: readonly RegisterRowView[];
+  readonly total: number;
+  readonly groupCounts: Readonly<Record<RegisterGroup, number>>;
+  readonly counts: { readonly all: number; readonly open: number; readonly late: number | null; readonly injury: number | null; readonly mine: number };
+  readonly span: { readonly fromHour: number; readonly toHour: number };
+}
+
+export interface CaseTab {
+  readonly key: string;
+  readonly label: string;
+  /** After `/cases/118`; empty for the account. */
+  readonly path: string;
+  readonly count: string | null;
+}
+
+export interface CaseHeaderView {
+  readonly number: number;
+  readonly title: string;
+  readonly subtitle: string;
+  readonly siteName: string;
+  readonly siteCode: string;
+  readonly zone: string;
+  readonly state: CaseState;
+  readonly stateNote: string;
+  readonly duplicateOf: number | null;
+  readonly legalHold: boolean;
+  /** Optimistic lock: forms that change the case send it back. */
+  readonly version: number;
+  readonly nextReturn: ReturnView | null;
+  readonly returnWords: string;
+  readonly card: CardView;
+  /** Which run the card shows, or that it shows daylight only. */
+  readonly cardNote: string;
+  readonly reconstructionNumber: number | null;
+  readonly tabs: readonly CaseTab[];
+}
+
+/** One line of what a move needs. */
+export interface NeedView {
+  readonly done: boolean;
+  readonly label: string;
+}
+
+export interface MoveView {
+  readonly id: string;
+  readonly label: string;
+  readonly ready: boolean;
+  readonly needs: readonly NeedView[];
+}
+
+export interface ClosedMoveView {
+  readonly id: string;
+  readonly label: string;
+  /** "Open to the site manager." */
+  readonly whoCan: string;
+}
+
+export interface LogLineView {
+  readonly sequence: number;
+  readonly atWords: string;
+  readonly actorName: string;
+  readonly summary: string;
+  readonly reason: string;
+}
+
+const numberWords = ['No', 'One', 'Two', 'Three', 'Four', 'Five', 'Six', 'Seven', 'Eight', 'Nine', 'Ten', 'Eleven', 'Twelve'] as const;
+/** "Five", and figures beyond twelve. */
+export const countInWords = (count: number): string => numberWords[count] ?? String(count);
+
+/** "today", "tomorrow", "in 19 days". */
+export function inDaysWords(days: number): string {
+  if (days <= 0) return 'today';
+  return days === 1 ? 'tomorrow' : `in ${days} days`;
+}
+
+/** Heading of the register: what it found, not what it is. */
+export function registerHeading(beforeFix: number, total: number, ownReportsOnly: boolean, open: number): string {
+  if (ownReportsOnly) {
+    if (total === 0) return 'You have not reported anything yet';
+    return open === 0 ? 'All your reports are settled' : `${countInWords(open)} of your reports ${open === 1 ? 'is' : 'are'} still open`;
+  }
+  if (total === 0) return 'No case matches';
+  if (beforeFix === 0) return 'No known return of the sun before a fix is proven';
+  return `${countInWords(beforeFix)} ${beforeFix === 1 ? 'case will be lit again before its' : 'cases will be lit again before their'} fix is proven`;
+}

@@ -1,0 +1,185 @@
+import type { MarkInput, OpeningInput, ReconstructionInput, SkyInput, SkylineInput, TargetInput } from '#app/physics/model.ts';
+import { openingTransmittance } from './optic-class-values.ts';
+import type { Measured, Scene, SceneSkyline } from './scene.ts';
+import { readOptic } from './scene-optic.ts';
+import type { InputOrigin } from './scene-optic.ts';
+
+export interface SceneSite {
+  readonly latitudeDeg: number;
+  readonly longitudeDeg: number;
+  readonly elevationM: number;
+  readonly zone: string;
+  readonly skyline: SceneSkyline | null;
+}
+
+/** Times of the case as the clocks read, with the clock error of the reading that found it. */
+export interface SceneTimes {
+  readonly onsetEarliestAt: Date | null;
+  readonly onsetLatestAt: Date | null;
+  readonly foundAt: Date | null;
+  readonly foundClockErrorS: number;
+  readonly foundPrecision: string;
+}
+
+export interface ReconstructionRequest {
+  readonly input: ReconstructionInput;
+  readonly origins: readonly InputOrigin[];
+  readonly missing: readonly string[];
+}
+
+const hourMs = 3_600_000;
+/** How far back onset is looked for when nobody saw the place sound: smouldering can hide for hours. */
+const backwardSearchMs = 8 * hourMs;
+export const longestWindowDays = 14;
+
+/** One sigma of the clock by how well the time is known. [s] */
+const clockSigmaS: Record<string, number> = { exact: 60, 'within-15-min': 450, 'within-1-h': 1800, 'date-only': 3600, unknown: 3600 };
+
+function windowOf(times: SceneTimes, origins: InputOrigin[], missing: string[]): ReconstructionInput['window'] | null {
+  // The reading that found the mark is corrected by the known error of its clock; typed onset times are true times.
+  const correctedFoundAt = times.foundAt ? new Date(times.foundAt.getTime() - times.foundClockErrorS * 1000) : null;
+  const end = times.onsetLatestAt ?? correctedFoundAt;
+  if (!end) {
+    missing.push('Give the time at which the mark was found, or the latest possible onset.');
+    return null;
+  }
+  let start = times.onsetEarliestAt;
+  if (start) origins.push({ field: 'Window', value: `${start.toISOString()} to ${end.toISOString()}`, origin: 'reported', note: 'last seen sound to latest onset', verified: true });
+  else {
+    start = new Date(end.getTime() - backwardSearchMs);
+    origins.push({ field: 'Window', value: '8 hours back', origin: 'assumed', note: 'nobody is recorded as having seen the place sound; smouldering can hide for hours', verified: true });
+  }
+  if (end.getTime() - start.getTime() > longestWindowDays * 24 * hourMs) {
+    start = new Date(end.getTime() - longestWindowDays * 24 * hourMs);
+    origins.push({ field: 'Window', value: `last ${longestWindowDays} days`, origin: 'assumed', note: 'longer windows are cut; narrow it if you can', verified: true });
+  }
+  return { startUtc: wholeMinute(start), endUtc: wholeMinute(end), clockSigmaS: clockSigmaS[times.foundPrecision] ?? 3600 };
+}
+
+const wholeMinute = (at: Date): string => new Date(Math.floor(at.getTime() / 60_000) * 60_000).toISOString();
+
+function note(origins: InputOrigin[], field: string, measured: Measured, unit: string): void {
+  const origin = measured.method === 'assumed' ? 'assumed' : measured.method === 'reported' || measured.method === 'estimated' ? 'reported' : 'measured';
+  origins.push({ field, value: `${measured.value}${measured.plusMinus === undefined ? '' : ` ±${measured.plusMinus}`} ${unit}`, origin, note: measured.method, verified: true });
+}
+
+/** Uncertainty where none was written down: what the method is worth. */
+function sigma(measured: Measured, byMethod: { measured: number; rough: number }): number {
+  if (measured.plusMinus !== undefined) return Math.max(measured.plusMinus, 1e-4);
+  return measured.method === 'measured' || measured.method === 'drawing' ? byMethod.measured : byMethod.rough;
+}
+
+function markOf(scene: Scene, origins: InputOrigin[], missing: string[]): MarkInput | undefined {
+  const { mark } = scene;
+  if (!mark.bearingDeg || !mark.elevationDeg || !mark.distanceMm) {
+    missing.push('Measure the mark from the optic: bearing, elevation and distance.');
+    return undefined;
+  }
+  note(origins, 'Mark, bearing', mark.bearingDeg, '° true');
+  note(origins, 'Mark, elevation', mark.elevationDeg, '°');
+  note(origins, 'Mark, distance', mark.distanceMm, 'mm');
+  return {
+    bearingDeg: mark.bearingDeg.value % 360,
+    bearingSigmaDeg: sigma(mark.bearingDeg, { measured: 1, rough: 8 }),
+    elevationDeg: mark.elevationDeg.value,
+    elevationSigmaDeg: sigma(mark.elevationDeg, { measured: 1, rough: 5 }),
+    distanceM: mark.distanceMm.value / 1000,
+    distanceSigmaM: sigma(mark.distanceMm, { measured: mark.distanceMm.value * 0.01, rough: mark.distanceMm.value * 0.1 }) / 1000,
+    ...(mark.lengthMm ? { lengthMm: mark.lengthMm.value } : {}),
+    ...(mark.widthMm ? { widthMm: mark.widthMm.value } : {}),
+    ...(mark.trailHeadingDeg ? { trailHeadingDeg: mark.trailHeadingDeg.value % 360 } : {}),
+    ...(mark.surfaceAzimuthDeg ? { normalAzimuthDeg: mark.surfaceAzimuthDeg.value % 360 } : {}),
+    ...(mark.surfaceElevationDeg ? { normalElevationDeg: mark.surfaceElevationDeg.value } : {}),
+  };
+}
+
+function openingOf(scene: Scene, origins: InputOrigin[]): OpeningInput | undefined {
+  const opening = scene.opening;
+  if (!opening) return undefined;
+  const glass = openingTransmittance[opening.glass];
+  note(origins, 'Opening faces', opening.azimuthDeg, '° true');
+  origins.push({ field: 'Glass in the path', value: String(glass.value), origin: opening.glass === 'unknown' ? 'assumed' : 'reported', note: glass.source, verified: glass.verified });
+  return {
+    azimuthDeg: opening.azimuthDeg.value % 360,
+    azimuthSigmaDeg: sigma(opening.azimuthDeg, { measured: 1, rough: 8 }),
+    halfWidthDeg: opening.halfWidthDeg,
+    transmittance: glass.value,
+    transmittanceSource: glass.source,
+    ...(opening.lowestElevationDeg === undefined ? {} : { lowestElevationDeg: opening.lowestElevationDeg }),
+    ...(opening.highestElevationDeg === undefined ? {} : { highestElevationDeg: opening.highestElevationDeg }),
+  };
+}
+
+function skylineOf(scene: Scene, site: SceneSite, origins: InputOrigin[], missing: string[]): SkylineInput | undefined {
+  const skyline = scene.skyline ?? site.skyline;
+  if (!skyline || skyline.points.length === 0) {
+    missing.push('Measure the skyline: without it nothing is said about what stands in front of the sun.');
+    return undefined;
+  }
+  origins.push({ field: 'Skyline', value: `${skyline.points.length} points ±${skyline.plusMinusDeg}°`, origin: 'measured', note: skyline.source, verified: true });
+  return {
+    sigmaDeg: skyline.plusMinusDeg,
+    points: skyline.points.map((point) => ({ azimuthDeg: point.azimuthDeg, elevationDeg: point.elevationDeg, ...(point.name ? { name: point.name } : {}) })),
+  };
+}
+
+function skyOf(scene: Scene, origins: InputOrigin[]): SkyInput {
+  const { air } = scene;
+  origins.push({ field: 'Air class', value: air.climateClass, origin: 'assumed', note: 'median of a climate class, not of the day', verified: true });
+  if (air.dni) origins.push({ field: 'Direct irradiance', value: `${air.dni.values.length} values`, origin: 'measured', note: air.dni.source, verified: true });
+  return {
+    climateClass: air.climateClass,
+    ...(air.pressureHpa === undefined ? {} : { pressureHpa: air.pressureHpa }),
+    ...(air.temperatureC === undefined ? {} : { temperatureC: air.temperatureC }),
+    ...(air.dni ? { dniSeries: { basis: air.dni.basis, source: air.dni.source, values: air.dni.values, ...(air.dni.stationDistanceKm === undefined ? {} : { stationDistanceKm: air.dni.stationDistanceKm }) } } : {}),
+  };
+}
+
+function targetOf(scene: Scene, origins: InputOrigin[], missing: string[]): TargetInput | undefined {
+  if (scene.target.material === 'dont-know') {
+    missing.push('Say what the target is made of.');
+    return undefined;
+  }
+  origins.push({ field: 'Target', value: scene.target.material, origin: 'reported', note: scene.target.colour ?? 'colour not stated', verified: true });
+  return { materialId: scene.target.material, ...(scene.target.thicknessMm ? { thicknessM: scene.target.thicknessMm.value / 1000 } : {}) };
+}
+
+/**
+ * The engine's input from what people recorded, with the origin of each value and a list of what is missing.
+ *
+ * @param recurrenceToUtc end of the recurrence calendar, which begins with the window.
+ * @returns An input even without optic or mark: sun, sky and daylight are still computed. `input` is null only when no
+ *   time at all is known.
+ */
+export function reconstructionInput(source: { scene: Scene; site: SceneSite; times: SceneTimes; seed: number; recurrenceToUtc: string }): ReconstructionRequest | { input: null; origins: readonly InputOrigin[]; missing: readonly string[] } {
+  const { scene, site, times } = source;
+  const origins: InputOrigin[] = [];
+  const missing: string[] = [];
+  const window = windowOf(times, origins, missing);
+  const reading = readOptic(scene.optic);
+  missing.push(...reading.missing);
+  const mark = markOf(scene, origins, missing);
+  const opening = openingOf(scene, origins);
+  const skyline = skylineOf(scene, site, origins, missing);
+  const target = targetOf(scene, origins, missing);
+  const sky = skyOf(scene, origins);
+  if (!window) return { input: null, origins: [...reading.origins, ...origins], missing };
+  const height = scene.optic.heightAboveGroundM;
+  return {
+    origins: [...reading.origins, ...origins],
+    missing,
+    input: {
+      place: { latitudeDeg: site.latitudeDeg, longitudeDeg: site.longitudeDeg, elevationM: site.elevationM, heightAboveGroundM: Math.max(0, height?.value ?? 0), zone: site.zone },
+      window,
+      sky,
+      seed: source.seed,
+      recurrenceFromUtc: window.startUtc,
+      recurrenceToUtc: source.recurrenceToUtc,
+      ...(opening ? { opening } : {}),
+      ...(skyline ? { skyline } : {}),
+      ...(reading.optic ? { optic: reading.optic, opticSigmaRel: reading.sigmaRel } : {}),
+      ...(mark ? { mark } : {}),
+      ...(target ? { target } : {}),
+    },
+  };
+}

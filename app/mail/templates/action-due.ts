@@ -1,0 +1,23 @@
+import { actionLink, actionName, nextReturnLine } from './action-words.ts';
+import type { ActionMail } from './action-words.ts';
+import { mail } from '#app/mail/render.ts';
+
+export const inDays = (days: number): string => (days === 0 ? 'today' : days === 1 ? 'tomorrow' : `in ${days} days`);
+
+/** To the owner, before the day. */
+export function actionDueMail(about: ActionMail & { readonly daysLeft: number }) {
+  const heading = `${actionName(about)} is due ${inDays(about.daysLeft)}`;
+  return { subject: heading, ...mail({ heading, lines: [`The day is ${about.dueWords}. If it cannot be met, move it on the case and say why.`, ...nextReturnLine(about)], link: actionLink(about) }) };
+}
+
+/** To the owner and the managers of the site, once the day has passed. */
+export function actionLateMail(about: ActionMail) {
+  const heading = `${actionName(about)} is late`;
+  return { subject: heading, ...mail({ heading, lines: [`It was due ${about.dueWords}. Mark it done with proof, or give it a new day with a reason.`, ...nextReturnLine(about)], link: actionLink(about) }) };
+}
+
+/** To the owner, when a person asks after it from the list. */
+export function actionReminderMail(about: ActionMail) {
+  const heading = `A reminder of ${actionName(about).toLowerCase()}, due ${about.dueWords}`;
+  return { subject: heading, ...mail({ heading, lines: ['Somebody who follows it asks how it stands. Mark it done with proof, or say on the case what holds it up.', ...nextReturnLine(about)], link: actionLink(about) }) };
+}

@@ -1,0 +1,127 @@
+import type { MinuteReason, MinuteVerdict, OpeningInput } from './model.ts';
+import { missOf, type Mark, type Miss } from './alignment.ts';
+import type { Beam, FocusModel } from './optics/closed-form/beam.ts';
+import type { Reach } from './reach.ts';
+import type { Skyline } from './skyline.ts';
+import type { SunMinute } from './sun-track.ts';
+import { halfAngleRad } from './sun/sun-disc.ts';
+import { degree, wrap180 } from './units.ts';
+import { dot } from './vector.ts';
+
+/** Everything that stands between the sun and the mark. */
+export interface Scene {
+  readonly dipDeg: number;
+  readonly skyline: Skyline | null;
+  readonly skylineSigmaDeg: number;
+  readonly opening: OpeningInput | undefined;
+  readonly model: FocusModel | null;
+  readonly mark: Mark | null;
+  readonly reach: Reach | null;
+}
+
+/** Judgement of one minute. */
+export interface Judgement {
+  readonly verdict: MinuteVerdict;
+  readonly reason: MinuteReason;
+  readonly miss: Miss | null;
+  readonly beam: Beam | null;
+}
+
+/** Radius of the sun's disc, and the least margin about the horizon that refraction near it demands. [°] */
+const discRadiusDeg = 0.27;
+const horizonMarginDeg = 0.3;
+
+/** Without a recorded skyline a sun lower than this may stand behind anything. Common practice. [°] */
+export const openSkyDeg = 5;
+
+/** A survey value counts as excluded beyond this many sigmas. */
+const sigmas = 2;
+
+type Finding = { readonly definite: boolean; readonly reason: MinuteReason } | null;
+
+function againstHorizon(sun: SunMinute, scene: Scene): Finding {
+  const aboveDeg = sun.apparentElevationDeg + discRadiusDeg + scene.dipDeg;
+  if (aboveDeg < -horizonMarginDeg) return { definite: true, reason: 'night' };
+  return aboveDeg < horizonMarginDeg + discRadiusDeg ? { definite: false, reason: 'near-horizon' } : null;
+}
+
+function againstSkyline(sun: SunMinute, scene: Scene): Finding {
+  if (scene.skyline === null) {
+    return sun.apparentElevationDeg < openSkyDeg ? { definite: false, reason: 'skyline-unknown' } : null;
+  }
+  const plusMinusDeg = sigmas * scene.skylineSigmaDeg;
+  const { lowDeg, highDeg } = scene.skyline.rangeDeg(sun.azimuthDeg, plusMinusDeg);
+  if (sun.apparentElevationDeg < lowDeg - plusMinusDeg) return { definite: true, reason: 'below-skyline' };
+  return sun.apparentElevationDeg < highDeg + plusMinusDeg ? { definite: false, reason: 'uncertainty-straddles' } : null;
+}
+
+function againstOpening(sun: SunMinute, opening: OpeningInput | undefined): Finding {
+  if (opening === undefined) return null;
+  const offDeg = Math.abs(wrap180(sun.azimuthDeg - opening.azimuthDeg));
+  const plusMinusDeg = sigmas * opening.azimuthSigmaDeg;
+  if (offDeg > opening.halfWidthDeg + plusMinusDeg) return { definite: true, reason: 'outside-opening' };
+  const { lowestElevationDeg: lowest = -90, highestElevationDeg: highest = 90 } = opening;
+  if (sun.apparentElevationDeg < lowest || sun.apparentElevationDeg > highest) return { definite: true, reason: 'outside-opening' };
+  return offDeg > opening.halfWidthDeg - plusMinusDeg ? { definite: false, reason: 'uncertainty-straddles' } : null;
+}
+
+/** Lateral tolerance of spot and mark along the direction in which the mark was missed. [m] */
+export function lateralToleranceM(reach: Reach, mark: Mark): number {
+  return reach.spotRadiusM + Math.max(mark.halfLengthM, mark.halfWidthM);
+}
+
+/** One sigma of the survey across the line of sight. [m] */
+export function surveySigmaM(mark: Mark): number {
+  return Math.max(mark.sigmaLevelM, mark.sigmaUprightM);
+}
+
+/** Sigma of the mark's place along the direction of its miss. [m] */
+function sigmaAlongMiss(miss: Miss, mark: Mark): number {
+  const [east, north, up] = miss.sideways;
+  const total = Math.hypot(east, north, up);
+  if (total === 0) return surveySigmaM(mark);
+  const upright = Math.abs(up) / total;
+  return Math.hypot(mark.sigmaUprightM * upright, mark.sigmaLevelM * Math.sqrt(Math.max(0, 1 - upright * upright)));
+}
+
+function againstMark(miss: Miss, beam: Beam, mark: Mark, reach: Reach): Finding {
+  if (dot(beam.direction, mark.normal) >= 0) return { definite: true, reason: 'wrong-side' };
+  const sigmaM = sigmaAlongMiss(miss, mark);
+  const beyondM = miss.lateralM - lateralToleranceM(reach, mark);
+  const shortM = Math.max(reach.nearM - miss.alongM, miss.alongM - reach.farM);
+  if (beyondM > sigmas * sigmaM || shortM > sigmas * mark.sigmaAxialM) return { definite: true, reason: 'beam-misses' };
+  return beyondM > 0 || shortM > 0 ? { definite: false, reason: 'uncertainty-straddles' } : null;
+}
+
+/** Findings about optic and mark, in the order in which the light meets them. */
+function againstOptic(sun: SunMinute, scene: Scene): { readonly finding: Finding; readonly miss: Miss | null; readonly beam: Beam | null } {
+  if (scene.model === null) return { finding: { definite: false, reason: 'optic-unknown' }, miss: null, beam: null };
+  const beam = scene.model.beamFor(sun.towardsSun, halfAngleRad(sun.distanceAu));
+  if (beam === null) return { finding: { definite: true, reason: 'wrong-side' }, miss: null, beam: null };
+  if (scene.mark === null || scene.reach === null) return { finding: { definite: false, reason: 'mark-unknown' }, miss: null, beam };
+  const miss = missOf(beam, scene.model, scene.mark);
+  return { finding: againstMark(miss, beam, scene.mark, scene.reach), miss, beam };
+}
+
+/**
+ * Whether the mark is in focused sunlight at one minute.
+ *
+ * A single definite obstacle settles it; only without one does a doubt make it "cannot tell". An unknown optic or mark
+ * therefore never hides that it was night.
+ */
+export function judgeMinute(sun: SunMinute, scene: Scene): Judgement {
+  const horizon = againstHorizon(sun, scene);
+  if (horizon?.definite === true) return { verdict: 'not-sunlit', reason: horizon.reason, miss: null, beam: null };
+  const { finding: optic, miss, beam } = againstOptic(sun, scene);
+  const findings = [againstSkyline(sun, scene), againstOpening(sun, scene.opening), optic, horizon];
+  const refusal = findings.find((finding) => finding?.definite === true);
+  if (refusal !== undefined && refusal !== null) return { verdict: 'not-sunlit', reason: refusal.reason, miss, beam };
+  const doubt = [horizon, ...findings].find((finding) => finding !== null);
+  if (doubt !== undefined && doubt !== null) return { verdict: 'cannot-tell', reason: doubt.reason, miss, beam };
+  return { verdict: 'sunlit', reason: 'sun-on-mark', miss, beam };
+}
+
+/** Angle that a length spans at a distance. [°] */
+export function spannedDeg(lengthM: number, distanceM: number): number {
+  return Math.atan2(lengthM, distanceM) / degree;
+}

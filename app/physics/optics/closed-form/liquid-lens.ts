@@ -1,0 +1,91 @@
+import { safeAcos } from '../../units.ts';
+import { lengthOf, unit, type Vector } from '../../vector.ts';
+import type { BowlOptic, DomeOptic } from '../optic.ts';
+import { slopeErrors } from '../optic-defaults.data.ts';
+import { fresnelReflectance, mediumOf } from '../refraction.ts';
+import { sharpestDistanceM, type FocusModel } from './beam.ts';
+import { radiusHolding, roundShare } from './meridional.ts';
+import { roundBottomFan } from './shapes.ts';
+
+/** Size of the liquid, checked. */
+interface Pool {
+  readonly radiusM: number;
+  readonly depthM: number;
+  readonly halfWidthM: number;
+}
+
+function poolOf(optic: BowlOptic | DomeOptic): Pool {
+  const { radiusM } = optic;
+  if (optic.kind === 'ponded-dome') {
+    const halfWidthM = optic.pondDiameterM / 2;
+    if (halfWidthM > radiusM) {
+      throw new RangeError(`optic.pondDiameterM ${optic.pondDiameterM} and optic.radiusM ${radiusM} disagree: the pond is wider than the dome.`);
+    }
+    return { radiusM, depthM: radiusM - Math.sqrt(radiusM * radiusM - halfWidthM * halfWidthM), halfWidthM };
+  }
+  const depthM = optic.liquidDepthM;
+  if (depthM > 2 * radiusM) {
+    throw new RangeError(`optic.liquidDepthM ${depthM} and optic.radiusM ${radiusM} disagree: a round bowl is two radii deep at most.`);
+  }
+  return { radiusM, depthM, halfWidthM: Math.sqrt(Math.max(0, depthM * (2 * radiusM - depthM))) };
+}
+
+/** Down-going direction inside the liquid, pointing back up to the light. */
+function insideDirection(towardsSun: Vector, refractiveIndex: number): Vector {
+  const east = towardsSun[0] / refractiveIndex;
+  const north = towardsSun[1] / refractiveIndex;
+  return [east, north, Math.sqrt(Math.max(0, 1 - east * east - north * north))];
+}
+
+/**
+ * Level liquid over a round bottom, with the centre of the round bottom as origin.
+ *
+ * The flat top bends parallel light as a whole; after that the round bottom has no axis of its own, so the spot stays
+ * round at any height of the sun and lies on the line through the centre.
+ */
+export function liquidLensModel(optic: BowlOptic | DomeOptic): FocusModel {
+  const medium = mediumOf(optic.kind === 'bowl' ? optic.material : { name: 'water' });
+  const n = medium.refractiveIndex;
+  const pool = poolOf(optic);
+  const slopeBlurRad = (2 * (n - 1) * (optic.slopeErrorMrad ?? slopeErrors[optic.kind].slopeErrorMrad)) / 1000;
+  const focalLengthM = (n * pool.radiusM) / (n - 1);
+  return {
+    focusKind: 'point',
+    focalLengthM,
+    generator: null,
+    lineHalfLengthM: 0,
+    moves: false,
+    throughput: medium.internalTransmittance(pool.depthM),
+    beamFor: (towardsSun, halfAngle) => {
+      const up = towardsSun[2];
+      if (up <= 0.02) return null;
+      const inside = insideDirection(towardsSun, n);
+      const direction: Vector = [-inside[0], -inside[1], -inside[2]];
+      const lightM2 = Math.PI * pool.halfWidthM ** 2 * up * (1 - fresnelReflectance(up, n));
+      const fan = roundBottomFan(
+        pool.radiusM, Math.min(pool.halfWidthM * Math.sqrt(inside[2]), 0.999 * pool.radiusM), medium, pool.depthM / inside[2],
+      );
+      // Half-angle inside the liquid is smaller, but the round bottom widens it again on the way out.
+      const blur = (z: number): number => Math.max(z - pool.radiusM, 0.05 * pool.radiusM) * Math.hypot(Math.tan(halfAngle), slopeBlurRad);
+      const concentration = (z: number, offset: number, disc: number): number =>
+        z <= pool.radiusM ? 0 : (lightM2 * roundShare(fan, z, Math.abs(offset), disc / 2, blur(z))) / ((Math.PI * disc * disc) / 4);
+      let sharpest: number | null = null;
+      return {
+        direction, tilt: safeAcos(up), across: null, concentration,
+        get focusM() {
+          sharpest ??= sharpestDistanceM((z) => concentration(z, 0, 2 * blur(z)), focalLengthM, 0.35, 1.02);
+          return sharpest;
+        },
+        spotDiameterM: (z) => 2 * radiusHolding(fan, z, 0.5, blur(z)),
+      };
+    },
+    requiredSun: (towardsMark) => {
+      const east = -towardsMark[0] * n;
+      const north = -towardsMark[1] * n;
+      const level = Math.hypot(east, north);
+      if (towardsMark[2] >= 0 || level >= 1) return null;
+      const sun: Vector = [east, north, Math.sqrt(1 - level * level)];
+      return lengthOf(sun) > 0 ? unit(sun) : null;
+    },
+  };
+}

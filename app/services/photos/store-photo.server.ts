@@ -1,0 +1,112 @@
+import { randomUUID } from 'node:crypto';
+import { inTransaction } from '#db/client.server.ts';
+import type { Transaction } from '#db/client.server.ts';
+import { insertLogEntry } from '#db/queries/log.server.ts';
+import { countReportPhotos, findPhotoByHash, insertPhoto, lockCaseRow, nextPhotoLabel } from '#db/queries/photos.server.ts';
+import type { NewPhoto, PhotoRow } from '#db/queries/photos.server.ts';
+import type { SentReport } from '#db/queries/reports.server.ts';
+import { findSentReport, lockReport } from '#db/queries/reports.server.ts';
+import { photoExtension, photoRefusal, photosPerReport } from '#app/domain/photo.ts';
+import type { ReportHolder } from '#app/domain/report.ts';
+import { preparePhotoJob } from '#app/jobs/definitions/prepare-photo.ts';
+import { enqueue } from '#app/jobs/queue.server.ts';
+import { log } from '#app/log.server.ts';
+import { holderId, isHeldBy, notYourReport } from '#app/services/reports/report-holder.server.ts';
+import { putObject } from '#app/storage/objects.server.ts';
+import { examinePhoto } from '#app/storage/photo-intake.server.ts';
+import type { ExaminedPhoto, IncomingFile } from '#app/storage/photo-intake.server.ts';
+
+/** Stored, or a sentence that names the file. */
+export type PhotoOutcome =
+  | { readonly ok: true; readonly photoId: string; readonly fileName: string; readonly bytes: number; readonly repeated: boolean }
+  | { readonly ok: false; readonly fileName: string; readonly sentence: string };
+
+/**
+ * Takes a photo for a report under way. The original goes to the object store first, byte for byte; only then is it
+ * acknowledged. The same bytes sent again give the same photo. A photo that arrives after its report was sent by the same
+ * holder joins the case.
+ *
+ * @throws DomainError `forbidden` when the report was sent by somebody else.
+ */
+export async function storeReportPhoto(params: { holder: ReportHolder; clientId: string; file: IncomingFile }): Promise<PhotoOutcome> {
+  const { holder, clientId, file } = params;
+  return storePhoto(file, clientId, holderId(holder), async (tx) => {
+    const sent = await findSentReport(tx, clientId);
+    if (sent && !isHeldBy(sent, holder)) throw notYourReport();
+    return sent;
+  });
+}
+
+/**
+ * The common path: examine, store the bytes, write the row, enqueue the preparation.
+ *
+ * @param findCase the case that the photo joins, null for a report under way; called under the report's lock.
+ */
+export async function storePhoto(file: IncomingFile, clientId: string, uploadedById: string | null, findCase: (tx: Transaction) => Promise<Pick<SentReport, 'caseId' | 'organisationId'> | null>): Promise<PhotoOutcome> {
+  const examined = await examinePhoto(file);
+  if (!examined.ok) return examined;
+  const { photo } = examined;
+  const photoId = randomUUID();
+  const originalKey = `originals/${photo.sha256}/${photoId}.${photoExtension[photo.mime]}`;
+  const stored = await putOriginal(originalKey, photo);
+  if (!stored) return { ok: false, fileName: photo.fileName, sentence: photoRefusal.notStored(photo.fileName) };
+  return inTransaction(async (tx) => {
+    await lockReport(tx, clientId);
+    const target = await findCase(tx);
+    const earlier = await findPhotoByHash(tx, { clientId, sha256: photo.sha256 });
+    if (earlier) return outcomeOf(earlier, true);
+    if ((await countReportPhotos(tx, clientId)) >= photosPerReport) return { ok: false, fileName: photo.fileName, sentence: photoRefusal.tooMany(photo.fileName) };
+    const label = target ? await labelIn(tx, target.caseId) : null;
+    const row = await insertPhoto(tx, { id: photoId, reportClientId: clientId, caseId: target?.caseId ?? null, label, uploadedById, originalKey, ...columnsOf(photo) });
+    if (!row) throw new Error('The photo was inserted by another transaction in spite of the lock.');
+    if (target) await logAdded(tx, row, target, uploadedById);
+    await enqueue(tx, preparePhotoJob, { photoId });
+    return outcomeOf(row, false);
+  });
+}
+
+async function putOriginal(key: string, photo: ExaminedPhoto): Promise<boolean> {
+  try {
+    await putObject(key, photo.bytes, photo.mime);
+    return true;
+  } catch (error) {
+    log.error({ err: error }, 'an original could not be stored');
+    return false;
+  }
+}
+
+async function labelIn(tx: Transaction, caseId: string): Promise<number> {
+  await lockCaseRow(tx, caseId);
+  return nextPhotoLabel(tx, caseId);
+}
+
+function columnsOf(photo: ExaminedPhoto): Omit<NewPhoto, 'reportClientId' | 'originalKey'> {
+  return {
+    fileName: photo.fileName,
+    mime: photo.mime,
+    bytes: photo.bytes.byteLength,
+    sha256: photo.sha256,
+    widthPx: photo.widthPx,
+    heightPx: photo.heightPx,
+    exif: photo.exif,
+    exifAnswer: { time: null, place: null, answeredAt: null },
+  };
+}
+
+function outcomeOf(row: PhotoRow, repeated: boolean): PhotoOutcome {
+  return { ok: true, photoId: row.id, fileName: row.fileName, bytes: row.bytes, repeated };
+}
+
+async function logAdded(tx: Transaction, row: PhotoRow, target: Pick<SentReport, 'caseId' | 'organisationId'>, actorId: string | null): Promise<void> {
+  await insertLogEntry(tx, {
+    actorId,
+    actorName: actorId ? await nameOf(tx, actorId) : 'Guest by site link',
+    organisationId: target.organisationId,
+    caseId: target.caseId,
+    event: 'photo.added',
+    subject: 'photos',
+    subjectId: row.id,
+    summary: `Photo ${row.label} added.`,
+    after: { label: row.label, sha256: row.sha256 },
+  });
+}

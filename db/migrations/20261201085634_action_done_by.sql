@@ -1,0 +1,4 @@
+ALTER TABLE "corrective_actions" ADD COLUMN "done_by_id" uuid;--> statement-breakpoint
+ALTER TABLE "corrective_actions" ADD CONSTRAINT "corrective_actions_done_by_id_users_id_fk" FOREIGN KEY ("done_by_id") REFERENCES "public"."users"("id") ON DELETE restrict ON UPDATE no action;--> statement-breakpoint
+CREATE INDEX "corrective_actions_done_by_id_idx" ON "corrective_actions" USING btree ("done_by_id");--> statement-breakpoint
+ALTER TABLE "corrective_actions" ADD CONSTRAINT "corrective_actions_verified_by_not_doer" CHECK ("corrective_actions"."verified_by_id" is null or "corrective_actions"."done_by_id" is null or "corrective_actions"."verified_by_id" <> "corrective_actions"."done_by_id");

@@ -1,0 +1,148 @@
+import { and, asc, eq, inArray, isNotNull, isNull, or, sql } from 'drizzle-orm';
+import type { DbOrTx, Transaction } from '#db/client.server.ts';
+import { cases, findings, hypotheses, involvements, logEntries, photos, sites } from '#db/schema/all.ts';
+import type { CaseState } from '#app/domain/case-state.ts';
+import type { ReportHolder, ReportSite } from '#app/domain/report.ts';
+
+const reportSite = { id: sites.id, organisationId: sites.organisationId, name: sites.name, code: sites.code, zone: sites.zone };
+
+/** Sites that the holder of a report may choose from: all of the person's organisation, or the one of the guest's link. */
+export function listReportSites(db: DbOrTx, holder: ReportHolder): Promise<ReportSite[]> {
+  const mine = holder.kind === 'guest' ? eq(sites.id, holder.site.id) : eq(sites.organisationId, holder.actor.organisationId);
+  return db.select(reportSite).from(sites).where(mine).orderBy(asc(sites.name), asc(sites.id));
+}
+
+/** The site whose account-free link carries this code; null when the link is closed or never was. */
+export async function getGuestSite(db: DbOrTx, guestCode: string): Promise<ReportSite | null> {
+  const [site] = await db.select(reportSite).from(sites).where(and(isNotNull(sites.guestCode), eq(sites.guestCode, guestCode)));
+  return site ?? null;
+}
+
+/** Makes everything that concerns one report under way wait in line: sending it, sending it twice, adding photos to it. */
+export async function lockReport(tx: Transaction, clientId: string): Promise<void> {
+  await tx.execute(sql`select pg_advisory_xact_lock(hashtextextended(${clientId}, 0))`);
+}
+
+export interface SentReport {
+  readonly caseId: string;
+  readonly caseNumber: number;
+  readonly receipt: string;
+  readonly state: CaseState;
+  readonly organisationId: string;
+  readonly siteId: string;
+  readonly reporterId: string | null;
+}
+
+const sentReport = {
+  caseId: cases.id,
+  caseNumber: cases.number,
+  receipt: cases.receipt,
+  state: cases.state,
+  organisationId: cases.organisationId,
+  siteId: cases.siteId,
+  reporterId: cases.reporterId,
+};
+
+/** The case that a report became, whoever sent it; the caller decides by `isHeldBy`. */
+export async function findSentReport(db: DbOrTx, clientId: string): Promise<SentReport | null> {
+  const [row] = await db.select(sentReport).from(cases).where(eq(cases.clientId, clientId));
+  return row ?? null;
+}
+
+export type NewReportedCase = Omit<typeof cases.$inferInsert, 'id' | 'number' | 'state' | 'version'>;
+
+/** Null when the receipt is taken; the caller makes another. */
+export async function insertReportedCase(tx: Transaction, values: NewReportedCase): Promise<SentReport | null> {
+  const [row] = await tx.insert(cases).values({ ...values, state: 'reported' }).onConflictDoNothing({ target: cases.receipt }).returning(sentReport);
+  return row ?? null;
+}
+
+export async function insertInvolvement(tx: Transaction, values: Omit<typeof involvements.$inferInsert, 'id' | 'createdAt'>): Promise<void> {
+  await tx.insert(involvements).values(values);
+}
+
+/** Gives the photos of the report to its case, labelled in the order they came. Photos that somebody else brought stay behind. */
+export async function attachReportPhotos(tx: Transaction, params: { clientId: string; caseId: string; actorId: string | null }): Promise<number> {
+  const mine = params.actorId ? or(isNull(photos.uploadedById), eq(photos.uploadedById, params.actorId)) : isNull(photos.uploadedById);
+  const waiting = await tx
+    .select({ id: photos.id })
+    .from(photos)
+    .where(and(eq(photos.reportClientId, params.clientId), isNull(photos.caseId), mine))
+    .orderBy(asc(photos.createdAt), asc(photos.id));
+  for (const [index, photo] of waiting.entries()) {
+    await tx.update(photos).set({ caseId: params.caseId, label: index + 1 }).where(eq(photos.id, photo.id));
+  }
+  return waiting.length;
+}
+
+/** What anyone with the receipt may know: states and times, the signed result, the question. No name, place or words of the account. */
+export interface ReportProgress {
+  readonly caseId: string;
+  readonly caseNumber: number;
+  readonly state: CaseState;
+  readonly zone: string;
+  readonly reportedAt: Date;
+  readonly closedAt: Date | null;
+  readonly closeReason: (typeof cases.$inferSelect)['closeReason'];
+  readonly question: string | null;
+  readonly answerDueAt: Date | null;
+  readonly photoCount: number;
+  readonly result: { readonly certainty: (typeof findings.$inferSelect)['certainty']; readonly kind: (typeof hypotheses.$inferSelect)['kind'] | null } | null;
+  /** First time each state was reached. */
+  readonly reachedAt: Partial<Record<CaseState, Date>>;
+}
+
+export async function getReportProgress(db: DbOrTx, receipt: string): Promise<ReportProgress | null> {
+  const [row] = await db
+    .select({
+      caseId: cases.id,
+      caseNumber: cases.number,
+      state: cases.state,
+      zone: cases.zone,
+      reportedAt: cases.reportedAt,
+      closedAt: cases.closedAt,
+      closeReason: cases.closeReason,
+      question: cases.question,
+      answerDueAt: cases.answerDueAt,
+    })
+    .from(cases)
+    .where(eq(cases.receipt, receipt));
+  if (!row) return null;
+  const [signed] = await db
+    .select({ certainty: findings.certainty, kind: hypotheses.kind })
+    .from(findings)
+    .leftJoin(hypotheses, eq(hypotheses.id, findings.selectedHypothesisId))
+    .where(and(eq(findings.caseId, row.caseId), eq(findings.state, 'signed')))
+    .orderBy(sql`${findings.version} desc`)
+    .limit(1);
+  const [counted] = await db.select({ photoCount: sql<number>`count(*)::int` }).from(photos).where(eq(photos.caseId, row.caseId));
+  return {
+    ...row,
+    question: row.state === 'returned' ? row.question : null,
+    result: signed ?? null,
+    photoCount: counted?.photoCount ?? 0,
+    reachedAt: await firstTimeInEachState(db, row.caseId),
+  };
+}
+
+/** Read from the log, where every move notes the state it led to. */
+async function firstTimeInEachState(db: DbOrTx, caseId: string): Promise<Partial<Record<CaseState, Date>>> {
+  const state = sql<CaseState>`${logEntries.after} ->> 'state'`;
+  const rows = await db
+    .select({ state, sequence: sql<number>`min(${logEntries.sequence})::int` })
+    .from(logEntries)
+    .where(and(eq(logEntries.caseId, caseId), sql`${logEntries.after} ->> 'state' is not null`))
+    .groupBy(state);
+  if (rows.length === 0) return {};
+  const times = await db
+    .select({ sequence: logEntries.sequence, at: logEntries.at })
+    .from(logEntries)
+    .where(inArray(logEntries.sequence, rows.map((row) => row.sequence)));
+  return Object.fromEntries(rows.flatMap((row) => times.filter((time) => time.sequence === row.sequence).map((time) => [row.state, time.at])));
+}
+
+/** The case behind a receipt, locked, for an answer by whoever holds the receipt. */
+export async function lockCaseByReceipt(tx: Transaction, receipt: string) {
+  const [row] = await tx.select().from(cases).where(eq(cases.receipt, receipt)).for('update');
+  return row ?? null;
+}
