@@ -21,6 +21,9 @@ const development = process.argv.includes('--dev');
 const workerOnly = process.argv.includes('--worker-only');
 const say = (line) => console.log(`  ${line}`);
 
+/** The S3 library's reminder about later versions of Node.js is for those who choose the versions, not for who starts us. */
+const quieted = { LOG_LEVEL: 'warn', AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED: 'true' };
+
 /** How to undo each thing done, in the order of doing. @type {{name: string, stop: () => unknown}[]} */
 const undo = [];
 const onStop = (name, stop) => undo.push({ name, stop });
@@ -65,7 +68,7 @@ async function main() {
   const databaseDir = () => chooseDatabaseDir(join(plan.dataDir, 'pg'), root);
   const services = await startServices({ root, plan, databaseDir, say, onStop });
   for (const { pid } of services.processes) record.addChild(pid);
-  const env = { LOG_LEVEL: 'warn', ...process.env, NODE_ENV: mode, HOST: host, PORT: String(port), PUBLIC_URL: url, ...services.env };
+  const env = { ...quieted, ...process.env, NODE_ENV: mode, HOST: host, PORT: String(port), PUBLIC_URL: url, ...services.env };
   await prepareDatabase(env, services.database);
   if (!development) await ensureBuild(root, say);
 
@@ -79,7 +82,7 @@ async function main() {
 async function startWorkerOnly(mode) {
   await ensureNodeModules(root, say);
   if (!development) await ensureBuild(root, say);
-  const env = { ...process.env, NODE_ENV: mode };
+  const env = { ...quieted, ...process.env, NODE_ENV: mode };
   const worker = launch('worker', [workerEntry], env, null);
   say('A worker runs. Ctrl-C stops it.');
   return watch([worker]);

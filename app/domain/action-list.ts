@@ -1,4 +1,5 @@
 import { daysFrom } from './action-form.ts';
+import { countInWords } from './case-view.ts';
 import type { ActionState } from './corrective-action.ts';
 import { isOpenAction, isUnprovenAction } from './corrective-action.ts';
 import type { Risk } from './incident.ts';
@@ -77,9 +78,6 @@ export function compareActions(a: ListedAction, b: ListedAction): number {
   const byDue = a.dueOn.localeCompare(b.dueOn);
   return byDue !== 0 ? byDue : risks.indexOf(b.risk) - risks.indexOf(a.risk);
 }
-
-const spelled = ['No', 'One', 'Two', 'Three', 'Four', 'Five', 'Six', 'Seven', 'Eight', 'Nine', 'Ten', 'Eleven', 'Twelve'] as const;
-export const countInWords = (count: number): string => spelled[count] ?? String(count);
 
 /** The finding of the page: what comes back before it is mended, and what is late. */
 export function actionsHeading(actions: readonly ListedAction[]): string {

@@ -101,3 +101,6 @@ export const moveEvent = (moveId: string): string => moveEvents[moveId] ?? 'case
 const workingStates: readonly CaseState[] = ['reported', 'triage', 'returned', 'investigation', 'findings', 'corrective-action'];
 /** Neither closed nor pointing at another case. */
 export const isOpenCase = (state: CaseState): boolean => workingStates.includes(state);
+
+/** Whether the form of this move asks for a reason before it can be sent; an old duplicate is checked on the way in. */
+export const asksReason = (moveId: string): boolean => reasonNeeded.includes(moveId);

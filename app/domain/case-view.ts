@@ -127,3 +127,69 @@ export function registerHeading(beforeFix: number, total: number, ownReportsOnly
   if (beforeFix === 0) return 'No known return of the sun before a fix is proven';
   return `${countInWords(beforeFix)} ${beforeFix === 1 ? 'case will be lit again before its' : 'cases will be lit again before their'} fix is proven`;
 }
+
+export interface FactView {
+  readonly term: string;
+  readonly value: string;
+  readonly note: string | null;
+}
+
+export interface PhotoStripView {
+  readonly id: string;
+  readonly label: string;
+  readonly caption: string;
+  readonly altText: string;
+  readonly ready: boolean;
+}
+
+export interface PersonView {
+  readonly id: string;
+  readonly role: string;
+  /** Null when this reader may not know: the class is then shown in its place. */
+  readonly name: string | null;
+  readonly withheld: 'child' | null;
+  readonly contact: string;
+  readonly note: string;
+}
+
+export interface InjuryView {
+  readonly id: string;
+  readonly part: string;
+  readonly kind: string;
+  readonly treatment: string;
+  readonly daysAway: string;
+  readonly restrictedDays: string;
+  readonly description: string;
+  readonly words: string;
+}
+
+/** Where the form of a move stands. */
+export type MovePlace = 'here' | 'triage' | 'findings';
+
+export interface CaseMovesView {
+  readonly open: readonly (MoveView & { readonly place: MovePlace; readonly asksReason: boolean })[];
+  readonly closed: readonly ClosedMoveView[];
+}
+
+export interface LackView {
+  readonly reader: string;
+  readonly items: readonly NeedView[];
+}
+
+export interface CaseAccountView {
+  readonly narrative: string;
+  readonly sentWords: string;
+  readonly question: { readonly question: string; readonly answer: string | null; readonly dueWords: string } | null;
+  readonly notes: readonly { readonly id: string; readonly meta: string; readonly body: string }[];
+  readonly mayAddNote: boolean;
+  readonly facts: readonly FactView[];
+  readonly warnings: readonly string[];
+  readonly photos: readonly PhotoStripView[];
+  readonly photoCount: number;
+  readonly people: readonly PersonView[] | null;
+  readonly injuries: readonly InjuryView[] | null;
+  readonly lacks: readonly LackView[] | null;
+  readonly moves: CaseMovesView;
+  readonly log: readonly LogLineView[] | null;
+  readonly logCount: number;
+}

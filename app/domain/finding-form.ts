@@ -1,5 +1,4 @@
 import { z } from 'zod';
-import type { MoveFacts } from './case-state.ts';
 import { certainties, classifications, reviewFields } from './finding.ts';
 import type { Certainty } from './finding.ts';
 import { isExaminedAlternative, testNames, untestedWithoutWhy } from './hypothesis.ts';
@@ -58,28 +57,4 @@ export function selectionObstacles(certainty: Certainty, selected: HypothesisFac
   if (selected.result === 'ruled-out') return ['The selected hypothesis is recorded as ruled out.'];
   if (certainty === 'probable' && selected.result !== 'probable') return ['The selected hypothesis is not recorded as probable on the hypotheses page.'];
   return [];
-}
-
-export interface CheckLine {
-  readonly done: boolean;
-  readonly label: string;
-  readonly note: string;
-}
-
-/** What a finding needs before it can be sent, ticked or open. `obstacles` are the sentences about its certainty. */
-export function sendChecklist(facts: MoveFacts, obstacles: readonly string[]): readonly CheckLine[] {
-  const draft = facts.finding?.state === 'draft' ? facts.finding : null;
-  const runs = facts.attachedReconstructions;
-  return [
-    { done: facts.onsetEarliestAt !== null && facts.onsetLatestAt !== null, label: 'Onset window', note: '' },
-    { done: facts.opticStated, label: 'Optic recorded, or recorded as unknown', note: '' },
-    { done: runs > 0 || Boolean(facts.reconstructionWaiver), label: 'A reconstruction attached, or a reason', note: runs > 0 ? `${runs} attached` : '' },
-    { done: facts.focusedHypotheses > 0, label: 'The focused-sunlight hypothesis', note: '' },
-    { done: facts.alternativesExamined >= 2, label: 'Two alternatives examined', note: `${facts.alternativesExamined} so far` },
-    { done: facts.untestedWithoutWhy === 0, label: 'Each test has a result or a reason', note: facts.untestedWithoutWhy > 0 ? `${facts.untestedWithoutWhy} open` : '' },
-    { done: facts.photoCount > 0 || Boolean(facts.evidenceWaiver), label: 'Photos, or a reason', note: facts.photoCount > 0 ? `${facts.photoCount}` : '' },
-    { done: draft !== null && draft.opinion.trim() !== '', label: 'Opinion written', note: '' },
-    { done: draft !== null && draft.limits.trim() !== '', label: 'Limits written', note: '' },
-    { done: obstacles.length === 0, label: 'Certainty goes with the tests', note: '' },
-  ];
 }

@@ -12,6 +12,9 @@ export const eventTypeLabels: Record<EventType, string> = {
   'undesired-circumstance': 'Undesired circumstance',
 };
 
+const isOneOf = <Value extends string>(values: readonly Value[]) => (value: string | null | undefined): value is Value => values.some((known) => known === value);
+export const isEventType = isOneOf(eventTypes);
+
 /** What the reporter sees, in the reporter's words; it suggests an event type and never fixes it. */
 export const sightings = ['mark', 'melted', 'bright-patch', 'smoke-or-fire', 'dont-know'] as const;
 export type Sighting = (typeof sightings)[number];
@@ -94,6 +97,7 @@ export const weatherSeenLabels: Record<WeatherSeen, string> = {
 export const risks = ['low', 'medium', 'high', 'severe'] as const;
 export type Risk = (typeof risks)[number];
 export const riskLabels: Record<Risk, string> = { low: 'Low', medium: 'Medium', high: 'High', severe: 'Severe' };
+export const isRisk = isOneOf(risks);
 /** Days within which an action falls due, by risk: our own default, editable per action. */
 export const riskDueDays: Record<Risk, number> = { severe: 1, high: 7, medium: 30, low: 90 };
 

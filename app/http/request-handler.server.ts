@@ -84,6 +84,8 @@ async function send(answer: Response, response: ExpressResponse): Promise<void> 
   response.statusMessage = answer.statusText;
   response.status(answer.status);
   for (const [name, value] of answer.headers) response.append(name, value);
+  // Pages hold what one person may see; going back to a half-filled form still works.
+  if (!answer.headers.has('cache-control')) response.setHeader('Cache-Control', 'private, no-cache');
   if (answer.body === null) {
     response.end();
     return;

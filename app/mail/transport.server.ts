@@ -17,7 +17,7 @@ let transporter: Transporter | undefined;
 const isLoopback = /\/\/(?:[^@/]*@)?(?:localhost|127\.0\.0\.1|\[::1\])/u;
 
 function connection(): Transporter {
-  transporter ??= nodemailer.createTransport(env.SMTP_URL, isLoopback.test(env.SMTP_URL) ? { ignoreTLS: true } : {});
+  transporter ??= nodemailer.createTransport({ url: env.SMTP_URL, ignoreTLS: isLoopback.test(env.SMTP_URL) });
   return transporter;
 }
 

@@ -1,7 +1,7 @@
 import type { MarkInput } from './model.ts';
-import type { Beam, FocusModel } from './optics/closed-form/beam.ts';
-import { airlessElevationDeg } from './sun/refraction.ts';
-import { declinationOf, type Observer } from './sun/solar-position.ts';
+import type { Beam, FocusModel } from '#app/physics/optics/closed-form/beam.ts';
+import { airlessElevationDeg } from '#app/physics/sun/refraction.ts';
+import { declinationOf, type Observer } from '#app/physics/sun/solar-position.ts';
 import { degree, wrap180 } from './units.ts';
 import { add, azimuthOf, dot, elevationOf, fromAzimuthElevation, lengthOf, scale, subtract, type Vector } from './vector.ts';
 
@@ -68,7 +68,7 @@ export function missOf(beam: Beam, model: FocusModel, mark: Mark, position = mar
   const sinSquared = 1 - cosine * cosine;
   const alongLineM = (dot(inPlane, g) - cosine * dot(inPlane, direction)) / sinSquared;
   const alongM = (dot(inPlane, direction) - cosine * dot(inPlane, g)) / sinSquared;
-  const beyondEndM = Math.max(0, Math.abs(alongLineM) - model.lineHalfLengthM);
+  const beyondEndM = Math.max(0, Math.abs(alongLineM) - model.lineHalfLengthM - mark.halfLengthM);
   const sideways = add(scale(across, offsetM), scale(g, Math.sign(alongLineM) * beyondEndM));
   return { lateralM: Math.hypot(offsetM, beyondEndM), offsetM: beyondEndM > 0 ? Math.sign(offsetM || 1) * Math.hypot(offsetM, beyondEndM) : offsetM, axialM: alongM - beam.focusM, alongM, sideways };
 }

@@ -1,10 +1,10 @@
 import type { MinuteReason, MinuteVerdict, OpeningInput } from './model.ts';
 import { missOf, type Mark, type Miss } from './alignment.ts';
-import type { Beam, FocusModel } from './optics/closed-form/beam.ts';
+import type { Beam, FocusModel } from '#app/physics/optics/closed-form/beam.ts';
 import type { Reach } from './reach.ts';
 import type { Skyline } from './skyline.ts';
 import type { SunMinute } from './sun-track.ts';
-import { halfAngleRad } from './sun/sun-disc.ts';
+import { halfAngleRad } from '#app/physics/sun/sun-disc.ts';
 import { degree, wrap180 } from './units.ts';
 import { dot } from './vector.ts';
 
@@ -65,9 +65,17 @@ function againstOpening(sun: SunMinute, opening: OpeningInput | undefined): Find
   return offDeg > opening.halfWidthDeg - plusMinusDeg ? { definite: false, reason: 'uncertainty-straddles' } : null;
 }
 
-/** Lateral tolerance of spot and mark along the direction in which the mark was missed. [m] */
-export function lateralToleranceM(reach: Reach, mark: Mark): number {
-  return reach.spotRadiusM + Math.max(mark.halfLengthM, mark.halfWidthM);
+/**
+ * Lateral tolerance of spot and mark. [m] A point focus may have run anywhere over the mark; the mark of a line focus
+ * lies along the line, so only its width counts across.
+ */
+export function lateralToleranceM(reach: Reach, mark: Mark, focusKind: FocusModel['focusKind']): number {
+  return reach.spotRadiusM + markHalfM(mark, focusKind);
+}
+
+/** Half the extent of the mark across the spot's reach. [m] */
+export function markHalfM(mark: Mark, focusKind: FocusModel['focusKind']): number {
+  return focusKind === 'line' ? mark.halfWidthM : Math.max(mark.halfLengthM, mark.halfWidthM);
 }
 
 /** One sigma of the survey across the line of sight. [m] */
@@ -84,10 +92,10 @@ function sigmaAlongMiss(miss: Miss, mark: Mark): number {
   return Math.hypot(mark.sigmaUprightM * upright, mark.sigmaLevelM * Math.sqrt(Math.max(0, 1 - upright * upright)));
 }
 
-function againstMark(miss: Miss, beam: Beam, mark: Mark, reach: Reach): Finding {
+function againstMark(miss: Miss, beam: Beam, mark: Mark, reach: Reach, focusKind: FocusModel['focusKind']): Finding {
   if (dot(beam.direction, mark.normal) >= 0) return { definite: true, reason: 'wrong-side' };
   const sigmaM = sigmaAlongMiss(miss, mark);
-  const beyondM = miss.lateralM - lateralToleranceM(reach, mark);
+  const beyondM = miss.lateralM - lateralToleranceM(reach, mark, focusKind);
   const shortM = Math.max(reach.nearM - miss.alongM, miss.alongM - reach.farM);
   if (beyondM > sigmas * sigmaM || shortM > sigmas * mark.sigmaAxialM) return { definite: true, reason: 'beam-misses' };
   return beyondM > 0 || shortM > 0 ? { definite: false, reason: 'uncertainty-straddles' } : null;
@@ -100,7 +108,7 @@ function againstOptic(sun: SunMinute, scene: Scene): { readonly finding: Finding
   if (beam === null) return { finding: { definite: true, reason: 'wrong-side' }, miss: null, beam: null };
   if (scene.mark === null || scene.reach === null) return { finding: { definite: false, reason: 'mark-unknown' }, miss: null, beam };
   const miss = missOf(beam, scene.model, scene.mark);
-  return { finding: againstMark(miss, beam, scene.mark, scene.reach), miss, beam };
+  return { finding: againstMark(miss, beam, scene.mark, scene.reach, scene.model.focusKind), miss, beam };
 }
 
 /**

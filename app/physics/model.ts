@@ -1,4 +1,4 @@
-import type { Optic } from './optics/optic.ts';
+import type { Optic } from '#app/physics/optics/optic.ts';
 
 /**
  * The contract of the engine: what goes into a reconstruction and what comes out of it.
@@ -276,12 +276,28 @@ export interface Grade {
   readonly because: readonly string[];
 }
 
+/** What the seeded sampling over the inputs' uncertainties found; null without optic, mark or beam. */
+export interface SamplingResult {
+  readonly samples: number;
+  /** Share of samples whose focus comes within reach of the mark at some minute of the window. */
+  readonly alignedShare: number;
+  readonly missLateralMm: Band;
+  /** Flux on a 5 mm disc at the part of the mark nearest to the spot, at the best minute. */
+  readonly fluxKwm2: Band;
+  readonly fluxOver: readonly { readonly thresholdKwm2: number; readonly share: number }[];
+  /** By how much the median flux still moves between the two halves of the sample. */
+  readonly convergenceKwm2: number;
+  /** One input at a time, one sigma either way, greatest effect first. */
+  readonly tornado: readonly { readonly input: string; readonly lowKwm2: number; readonly highKwm2: number }[];
+}
+
 export interface ReconstructionResult {
   readonly engineVersion: string;
   readonly seed: number;
   readonly window: { readonly startUtc: string; readonly endUtc: string; readonly minutes: number };
   /** Sunrise and sunset (upper limb, refracted) on each local day that the window touches; null where there is none. */
   readonly daylight: readonly { readonly on: string; readonly sunriseUtc: string | null; readonly sunsetUtc: string | null; readonly polar: 'day' | 'night' | null }[];
+  /** Every minute except those of night, which `runs` and `totals` hold. */
   readonly minutes: readonly MinuteResult[];
   readonly runs: readonly MinuteRun[];
   readonly totals: { readonly sunlit: number; readonly notSunlit: number; readonly cannotTell: number };
@@ -294,6 +310,8 @@ export interface ReconstructionResult {
   readonly checks: readonly Check[];
   readonly tests: readonly TestSummary[];
   readonly grade: Grade;
+  /** Null where nothing could be sampled. */
+  readonly sampling?: SamplingResult | null;
   readonly assumptions: readonly Assumption[];
   readonly warnings: readonly string[];
 }

@@ -1,5 +1,5 @@
 import type { Mark } from './alignment.ts';
-import type { Beam, FocusModel } from './optics/closed-form/beam.ts';
+import type { Beam, FocusModel } from '#app/physics/optics/closed-form/beam.ts';
 
 /** How far from the focus a mark may lie and still be reached. */
 export interface Reach {
@@ -8,12 +8,13 @@ export interface Reach {
   /** Nearest and farthest distance along the chief ray with a flux above the threshold. [m] */
   readonly nearM: number;
   readonly farM: number;
-  /** True where nowhere along the ray the threshold is reached; near and far then hold half of the greatest flux. */
+  /** True where nowhere along the ray the threshold is reached; near and far then hold a quarter of the greatest flux. */
   readonly belowThreshold: boolean;
   readonly thresholdKwm2: number;
 }
 
 const half = 0.5;
+const quarter = 0.25;
 
 /** Distance across the chief ray at which the flux falls to a level. [m] @param level Concentration, below that in the middle. */
 export function contourHalfWidthM(beam: Beam, distanceM: number, level: number, discM: number): number {
@@ -83,15 +84,19 @@ export function zoneAlong(beam: Beam, level: number, discM: number): { readonly 
 export function reachOf(beam: Beam, mark: Mark, dniWm2: number, thresholdKwm2: number): Reach {
   const discM = 0.005;
   const level = (thresholdKwm2 * 1000) / Math.max(dniWm2, 1);
-  const zone = zoneAlong(beam, level, discM);
+  const harmful = zoneAlong(beam, level, discM);
+  // A weak optic is judged by its flux, not by its depth: there a quarter of the greatest flux bounds the reach.
+  const zone = harmful ?? zoneAlong(beam, quarter * beam.concentration(beam.focusM, 0, discM), discM);
   const distanceM = mark.distanceM;
   const small = contourDiscM(distanceM);
   const middle = beam.concentration(distanceM, 0, small);
-  const spotRadiusM = middle > 0 ? contourHalfWidthM(beam, distanceM, half * middle, small) : small;
-  if (zone !== null) return { spotRadiusM, nearM: zone.nearM, farM: zone.farM, belowThreshold: false, thresholdKwm2 };
-  const peak = beam.concentration(beam.focusM, 0, discM);
-  const weak = zoneAlong(beam, half * peak, discM);
-  return { spotRadiusM, nearM: weak?.nearM ?? beam.focusM, farM: weak?.farM ?? beam.focusM, belowThreshold: true, thresholdKwm2 };
+  return {
+    spotRadiusM: middle > 0 ? contourHalfWidthM(beam, distanceM, half * middle, small) : small,
+    nearM: zone?.nearM ?? beam.focusM,
+    farM: zone?.farM ?? beam.focusM,
+    belowThreshold: harmful === null,
+    thresholdKwm2,
+  };
 }
 
 /** Whether a model can be tested against a mark at all. */

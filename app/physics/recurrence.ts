@@ -1,10 +1,10 @@
 import type { OpeningInput, RecurrenceBand } from './model.ts';
 import type { RequiredSun } from './alignment.ts';
 import type { Skyline } from './skyline.ts';
-import { airlessElevationDeg, refractionDeg } from './sun/refraction.ts';
-import type { Observer } from './sun/solar-position.ts';
-import { scanSun } from './sun/sun-scan.ts';
-import { localDay, nextDay } from './sun/zone-days.ts';
+import { airlessElevationDeg, refractionDeg } from '#app/physics/sun/refraction.ts';
+import type { Observer } from '#app/physics/sun/solar-position.ts';
+import { scanSun } from '#app/physics/sun/sun-scan.ts';
+import { localDay, nextDay } from '#app/physics/sun/zone-days.ts';
 import { degree, roundTo, toIsoUtc, wrap180 } from './units.ts';
 import { angleBetween, azimuthOf, elevationOf, fromAzimuthElevation, type Vector } from './vector.ts';
 

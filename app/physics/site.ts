@@ -1,10 +1,10 @@
 import { solarConstantWm2 } from './constants.ts';
 import type { Assumption, ReconstructionInput, SourceRef } from './model.ts';
-import { standardPressureAtPa } from './sky/air-mass.ts';
-import type { Air } from './sky/clear-sky.ts';
-import { angstromExponent, climateAir, defaultOzoneCm } from './sky/climate-classes.data.ts';
-import { horizonDipDeg } from './sun/refraction.ts';
-import type { Observer } from './sun/solar-position.ts';
+import { standardPressureAtPa } from '#app/physics/sky/air-mass.ts';
+import type { Air } from '#app/physics/sky/clear-sky.ts';
+import { angstromExponent, climateAir, defaultOzoneCm } from '#app/physics/sky/climate-classes.data.ts';
+import { horizonDipDeg } from '#app/physics/sun/refraction.ts';
+import type { Observer } from '#app/physics/sun/solar-position.ts';
 import { roundSignificant } from './units.ts';
 
 /** A place with every value settled, and the list of those that had to be assumed. */

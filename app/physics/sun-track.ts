@@ -1,7 +1,7 @@
-import { geocentricSun } from './sun/ephemeris.ts';
-import { refractionDeg } from './sun/refraction.ts';
-import type { Observer } from './sun/solar-position.ts';
-import { scanSun } from './sun/sun-scan.ts';
+import { geocentricSun } from '#app/physics/sun/ephemeris.ts';
+import { refractionDeg } from '#app/physics/sun/refraction.ts';
+import type { Observer } from '#app/physics/sun/solar-position.ts';
+import { scanSun } from '#app/physics/sun/sun-scan.ts';
 import { azimuthOf, elevationOf, fromAzimuthElevation, type Vector } from './vector.ts';
 
 /** The sun at one minute of a window. */

@@ -1,7 +1,7 @@
 import type { Mark } from './alignment.ts';
-import type { FocusModel } from './optics/closed-form/beam.ts';
-import { halfAngleRad } from './sun/sun-disc.ts';
-import { solarPosition, type Observer } from './sun/solar-position.ts';
+import type { FocusModel } from '#app/physics/optics/closed-form/beam.ts';
+import { halfAngleRad } from '#app/physics/sun/sun-disc.ts';
+import { solarPosition, type Observer } from '#app/physics/sun/solar-position.ts';
 import { azimuthOf, dot, lengthOf, scale, subtract, type Vector } from './vector.ts';
 
 /** Motion of the spot over the target. */

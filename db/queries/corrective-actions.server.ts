@@ -1,4 +1,4 @@
-import { and, asc, desc, eq, inArray, or, sql } from 'drizzle-orm';
+import { and, asc, count, desc, eq, inArray, or, sql } from 'drizzle-orm';
 import type { SQL } from 'drizzle-orm';
 import type { AnyPgColumn } from 'drizzle-orm/pg-core';
 import type { DbOrTx, Transaction } from '#db/client.server.ts';
@@ -219,4 +219,9 @@ export async function updateAction(tx: Transaction, actionId: string, change: Ac
 /** A file of proof; the same bytes given twice are kept once. */
 export async function insertProof(tx: Transaction, values: Omit<typeof actionProofs.$inferInsert, 'id' | 'createdAt'>): Promise<void> {
   await tx.insert(actionProofs).values(values).onConflictDoNothing({ target: [actionProofs.correctiveActionId, actionProofs.sha256] });
+}
+
+export async function countProofs(tx: Transaction, actionId: string): Promise<number> {
+  const [row] = await tx.select({ stored: count() }).from(actionProofs).where(eq(actionProofs.correctiveActionId, actionId));
+  return row?.stored ?? 0;
 }

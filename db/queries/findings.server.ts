@@ -96,7 +96,7 @@ export async function markFindingSigned(
 }
 
 /** What a signature covers besides the finding itself. */
-export async function readSignedBasis(tx: Transaction, caseId: string) {
+export async function readSignedBasis(tx: DbOrTx, caseId: string) {
   const [caseRow] = await tx
     .select({ number: cases.number, zone: cases.zone, foundAt: cases.foundAt, foundClockErrorS: cases.foundClockErrorS, onsetEarliestAt: cases.onsetEarliestAt, onsetLatestAt: cases.onsetLatestAt, onsetBasis: cases.onsetBasis, siteId: cases.siteId, organisationId: cases.organisationId })
     .from(cases)

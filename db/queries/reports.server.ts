@@ -79,6 +79,7 @@ export async function attachReportPhotos(tx: Transaction, params: { clientId: st
 export interface ReportProgress {
   readonly caseId: string;
   readonly caseNumber: number;
+  readonly reporterId: string | null;
   readonly state: CaseState;
   readonly zone: string;
   readonly reportedAt: Date;
@@ -97,6 +98,7 @@ export async function getReportProgress(db: DbOrTx, receipt: string): Promise<Re
     .select({
       caseId: cases.id,
       caseNumber: cases.number,
+      reporterId: cases.reporterId,
       state: cases.state,
       zone: cases.zone,
       reportedAt: cases.reportedAt,

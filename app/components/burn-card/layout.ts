@@ -104,6 +104,11 @@ function cardLines(axis: TimeAxis, size: CardSize, severalDays: boolean): { hour
   return { hourLines, shortLines: [...lead, ...shortLines].filter((x) => x > 0 && x < axis.widthPx) };
 }
 
+function windowEnds({ window, goesOn }: BurnCardModel): string[] {
+  if (!window) return [];
+  return [...(goesOn?.before ? [] : [window.startUtc]), ...(goesOn?.after ? [] : [window.endUtc])];
+}
+
 /**
  * Draws a burn card for the width that it gets. Pure: the same model and width give the same drawing on server and
  * browser.
@@ -139,7 +144,7 @@ export function layoutBurnCard(model: BurnCardModel, widthPx: number, size: Card
     severalDays,
     bodies: daylight.flatMap((day) => inSpan(day.riseUtc, day.setUtc)),
     cards: daylight.flatMap(covers).filter((stretch) => stretch.x2 > stretch.x1),
-    endBars: window ? [window.startUtc, window.endUtc].filter(visible).map((utc) => axis.x(utc)) : [],
+    endBars: windowEnds(model).filter(visible).map((utc) => axis.x(utc)),
     ...cardLines(axis, size, severalDays),
     slots: layoutSlots(model, runs.filter((run) => inSpan(run.fromUtc, run.toUtc).length > 0), axis, large && !severalDays, severalDays && large ? 4 : rule.slotHalfPx),
     dots: layoutDots(runs.filter((run) => inSpan(run.fromUtc, run.toUtc).length > 0), axis, rule.dotRadiusPx),

@@ -21,6 +21,8 @@ export interface BurnCardModel {
   readonly polar?: 'day' | 'night' | null;
   /** Onset window; null while nothing has been examined. */
   readonly window: { readonly startUtc: string; readonly endUtc: string } | null;
+  /** The window goes on beyond this card, which shows one day of it: no end bar there. */
+  readonly goesOn?: { readonly before: boolean; readonly after: boolean };
   readonly runs: readonly BurnRun[];
   /** Found or alarm time, corrected for clock error. */
   readonly foundAtUtc?: string | null;

@@ -1,4 +1,4 @@
-import { wallTime, zoneOffsetMin } from './wall-clock.ts';
+import { zoneOffsetMin } from './wall-clock.ts';
 
 /** Wall-clock axis of a card: elapsed time, with room left for an hour that the clock skips. */
 export interface TimeAxis {
@@ -13,6 +13,7 @@ export interface TimeAxis {
 }
 
 const hourMs = 3_600_000;
+const dayMs = 86_400_000;
 const quarterMs = 900_000;
 
 interface ClockChange {
@@ -20,16 +21,29 @@ interface ClockChange {
   readonly stepMs: number;
 }
 
+/** Asking the calendar is dear, so halves without a change of offset are left out; no civil clock changes twice in a day. */
 function clockChanges(fromMs: number, toMs: number, zone: string): ClockChange[] {
-  const changes: ClockChange[] = [];
-  let before = zoneOffsetMin(fromMs, zone);
-  // Civil clocks change on a quarter hour of UTC.
-  for (let at = Math.ceil(fromMs / quarterMs) * quarterMs; at < toMs; at += quarterMs) {
-    const now = zoneOffsetMin(at, zone);
-    if (now !== before) changes.push({ atMs: at, stepMs: (now - before) * 60_000 });
-    before = now;
+  const stepMs = (zoneOffsetMin(toMs, zone) - zoneOffsetMin(fromMs, zone)) * 60_000;
+  if (toMs - fromMs <= dayMs && stepMs === 0) return [];
+  if (toMs - fromMs <= quarterMs) return stepMs === 0 ? [] : [{ atMs: toMs, stepMs }];
+  const middle = Math.round((fromMs + toMs) / 2 / quarterMs) * quarterMs;
+  const split = middle <= fromMs || middle >= toMs ? (fromMs + toMs) / 2 : middle;
+  return [...clockChanges(fromMs, split, zone), ...clockChanges(split, toMs, zone)];
+}
+
+/** Full hours of the wall clock from `fromMs` to `toMs`, counted on from the offset in force. */
+function fullHours(fromMs: number, toMs: number, zone: string, changes: readonly ClockChange[]): { utcMs: number; hour: number }[] {
+  const hours: { utcMs: number; hour: number }[] = [];
+  const starts = [fromMs, ...changes.map((change) => change.atMs)];
+  let offsetMs = zoneOffsetMin(fromMs, zone) * 60_000;
+  for (const [index, start] of starts.entries()) {
+    if (index > 0) offsetMs += changes[index - 1]?.stepMs ?? 0;
+    const end = starts[index + 1];
+    for (let local = Math.ceil((start + offsetMs) / hourMs) * hourMs; end === undefined ? local - offsetMs <= toMs : local - offsetMs < end; local += hourMs) {
+      hours.push({ utcMs: local - offsetMs, hour: (((local / hourMs) % 24) + 24) % 24 });
+    }
   }
-  return changes;
+  return hours;
 }
 
 /** @throws RangeError if the span is empty. */
@@ -45,11 +59,7 @@ export function timeAxis(fromUtc: string, toUtc: string, zone: string, widthPx: 
     return ((ms - fromMs + skippedBefore(ms)) / lengthMs) * widthPx;
   };
   const toPx = (ms: number) => (ms / lengthMs) * widthPx;
-  const hours: { utcMs: number; x: number; hour: number }[] = [];
-  for (let at = Math.ceil(fromMs / quarterMs) * quarterMs; at <= toMs; at += quarterMs) {
-    const wall = wallTime(at, zone);
-    if (wall.minute === 0) hours.push({ utcMs: at, x: x(at), hour: wall.hour });
-  }
+  const hours = fullHours(fromMs, toMs, zone, changes).map((hour) => ({ ...hour, x: x(hour.utcMs) }));
   return {
     widthPx,
     pxPerHour: toPx(hourMs),

@@ -19,7 +19,7 @@ export function NumberTable({ caption, columns, rows }: NumberTableProps) {
       <tbody>
         {rows.map((row, index) => (
           <Row key={index} tight>
-            {row.map((value, place) => <Cell key={place} heading={place === 0} numeric={columns[place]?.numeric ?? false} className="font-normal">{value}</Cell>)}
+            {row.map((value, place) => <Cell key={place} heading={place === 0} numeric={columns[place]?.numeric ?? false} className="!font-normal">{value}</Cell>)}
           </Row>
         ))}
       </tbody>

@@ -16,17 +16,19 @@ export function innerOf(box: PlotBox): { x1: number; x2: number; y1: number; y2:
 
 export interface ChartFrameProps {
   readonly draw: (widthPx: number) => ReactNode;
-  readonly narrowPx?: number;
-  readonly widePx?: number;
+  /** Phone, column, wide column. [px] */
+  readonly widthsPx?: readonly [number, number, number];
 }
 
-/** Draws a figure for a phone and for a column at the desk; the frame shows the one that fits, at drawn size or larger. */
-export function ChartFrame({ draw, narrowPx = 328, widePx = 520 }: ChartFrameProps) {
-  const grown = (px: number) => ({ minWidth: px, maxWidth: px * 1.35 });
+/** Draws a figure for three widths; the frame shows the widest that fits. A drawing may grow a little, and scrolls rather than shrink. */
+export function ChartFrame({ draw, widthsPx = [328, 500, 640] }: ChartFrameProps) {
+  const names = ['narrow', 'middle', 'wide'] as const;
   return (
-    <div className="chart-frame">
-      <div data-drawn="narrow" style={{ minWidth: narrowPx === 328 ? 286 : narrowPx, maxWidth: narrowPx * 1.6 }}>{draw(narrowPx)}</div>
-      <div data-drawn="wide" style={grown(widePx)}>{draw(widePx)}</div>
+    <div className="chart-frame" data-wide={widthsPx[2]}>
+      {names.map((name, index) => {
+        const px = widthsPx[index] ?? 328;
+        return <div key={name} data-drawn={name} style={{ minWidth: index === 0 ? 286 : undefined, maxWidth: px * (index === 0 ? 1.5 : 1.25) }}>{draw(px)}</div>;
+      })}
     </div>
   );
 }

@@ -8,6 +8,7 @@ import { ChartFrame, HatchPattern, innerOf, PlotSvg, PlotText, XAxis, YAxis } fr
 import type { PlotBox } from './plot.tsx';
 import { sunPathView } from './sun-path-view.ts';
 import type { SunPathData, SunPathView } from './sun-path-view.ts';
+import { textWidthPx } from './text-width.ts';
 
 export interface SunPathProps extends SunPathData {
   readonly width: number;
@@ -35,7 +36,7 @@ export function SunPath({ width, ...data }: SunPathProps) {
         {view.references.map((reference) => <path key={reference.label} d={path([...reference.points]) ?? ''} className="fill-none stroke-slate" strokeDasharray="2 4" />)}
         {view.skyline.length > 0 ? <Skyline view={view} x={x} y={y} floor={inner.y2} hatch={`url(#${id}h)`} /> : null}
         <path d={path([...view.day]) ?? ''} className="fill-none stroke-clear" strokeWidth="1.5" />
-        <WindowBand view={view} path={path} x={x} y={y} />
+        <WindowBand view={view} path={path} />
       </g>
       <Required view={view} x={x} y={y} width={width} inner={inner} />
       <PathNames view={view} x={x} y={y} inner={inner} />
@@ -79,7 +80,7 @@ function Skyline({ view, x, y, floor, hatch }: LayerProps & { readonly floor: nu
   return <g><path d={area} className="fill-wash" /><path d={area} fill={hatch} /><path d={`M${top}`} className="fill-none stroke-ink" strokeWidth="1.9" strokeLinejoin="round" /></g>;
 }
 
-function WindowBand({ view, path, x, y }: LayerProps & { readonly path: (points: { az: number; alt: number }[]) => string | null }) {
+function WindowBand({ view, path }: Pick<LayerProps, 'view'> & { readonly path: (points: { az: number; alt: number }[]) => string | null }) {
   return (
     <g strokeLinecap="butt" className="fill-none">
       <path d={path([...view.window.map((minute) => minute)]) ?? ''} className="stroke-card-edge" strokeWidth="11" />
@@ -89,7 +90,6 @@ function WindowBand({ view, path, x, y }: LayerProps & { readonly path: (points:
         if (stretch.verdict === 'sunlit') return <path key={key} d={path([...stretch.points]) ?? ''} className="stroke-slot" strokeWidth="5" strokeLinecap="round" />;
         return stretch.verdict === 'cannot-tell' ? <path key={key} d={path([...stretch.points]) ?? ''} className="stroke-slot" strokeWidth="4" strokeLinecap="round" strokeDasharray="0 7" /> : null;
       })}
-      {view.window[0] ? <circle cx={x(view.window[0].az)} cy={y(view.window[0].alt)} r="1" className="stroke-ink" /> : null}
     </g>
   );
 }
@@ -102,7 +102,7 @@ function Required({ view, x, y, width, inner }: LayerProps & { readonly width: n
   const ry = Math.max(5, Math.abs(y(need.alt + need.altSigma) - cy));
   const short = `mark needs ${need.az.toFixed(1)}° ±${need.azSigma}`;
   const words = width < 400 ? short : `${short}, ${need.alt.toFixed(1)}° ±${need.altSigma}`;
-  const half = words.length * 3.3;
+  const half = textWidthPx(words, 12) / 2;
   const textX = Math.min(inner.x2 - half, Math.max(inner.x1 + half, cx));
   const textY = Math.max(inner.y1 + 12, cy - ry - 40);
   return (
@@ -119,7 +119,7 @@ function PathNames({ view, x, y, inner }: LayerProps & { readonly inner: Inner }
   const end = view.day.filter(visible).at(-1);
   return (
     <g>
-      {view.skyline.flatMap((point) => (point.name && visible(point) ? [<PlotText key={point.name} x={Math.max(inner.x1 + 4, x(point.az))} y={inner.y2 - 8}>{point.name}</PlotText>] : []))}
+      {view.skyline.flatMap((point) => (point.name && visible(point) && x(point.az) + 4 + textWidthPx(point.name, 12) < inner.x2 ? [<PlotText key={point.name} x={x(point.az) + 4} y={inner.y2 - 8}>{point.name}</PlotText>] : []))}
       {view.references.map((reference) => {
         const at = reference.points.filter(visible).at(-1);
         return at ? <PlotText key={reference.label} x={Math.min(inner.x2, x(at.az))} y={y(at.alt) - 5} anchor="end" tone="slate">{reference.label}</PlotText> : null;

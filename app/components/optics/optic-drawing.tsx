@@ -110,13 +110,16 @@ export interface OpticDrawingProps {
   readonly width?: number;
   /** Say the name: where no words stand beside the drawing. */
   readonly named?: boolean;
+  /** Said in place of the name. */
+  readonly label?: string;
 }
 
 /** The thing in ink, light in blue, and where it lands in brown. */
-export function OpticDrawing({ kind, width = 38, named = false }: OpticDrawingProps) {
+export function OpticDrawing({ kind, width = 38, named = false, label }: OpticDrawingProps) {
+  const said = label ?? (named ? opticDrawingNames[kind] : undefined);
   const drawing = kind === 'dont-know' ? null : drawings[kind];
   return (
-    <svg width={width} height={(width * 3) / 4} viewBox="0 0 64 48" className="flex-none" {...(named ? { role: 'img', 'aria-label': opticDrawingNames[kind] } : { 'aria-hidden': true })}>
+    <svg width={width} height={(width * 3) / 4} viewBox="0 0 64 48" className="flex-none" {...(said ? { role: 'img', 'aria-label': said } : { 'aria-hidden': true })}>
       {drawing === null ? <Unknown /> : (
         <>
           <path d={drawing.rays} className="fill-none stroke-clear" strokeWidth="1.2" strokeLinejoin="round" />

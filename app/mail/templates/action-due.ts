@@ -7,13 +7,13 @@ export const inDays = (days: number): string => (days === 0 ? 'today' : days ===
 /** To the owner, before the day. */
 export function actionDueMail(about: ActionMail & { readonly daysLeft: number }) {
   const heading = `${actionName(about)} is due ${inDays(about.daysLeft)}`;
-  return { subject: heading, ...mail({ heading, lines: [`The day is ${about.dueWords}. If it cannot be met, move it on the case and say why.`, ...nextReturnLine(about)], link: actionLink(about) }) };
+  return { subject: heading, ...mail({ heading, lines: [`The day is ${about.dueWords}. If it cannot be met, ask the investigator or the site manager for another day: they move it with a reason.`, ...nextReturnLine(about)], link: actionLink(about) }) };
 }
 
 /** To the owner and the managers of the site, once the day has passed. */
 export function actionLateMail(about: ActionMail) {
   const heading = `${actionName(about)} is late`;
-  return { subject: heading, ...mail({ heading, lines: [`It was due ${about.dueWords}. Mark it done with proof, or give it a new day with a reason.`, ...nextReturnLine(about)], link: actionLink(about) }) };
+  return { subject: heading, ...mail({ heading, lines: [`It was due ${about.dueWords}. Mark it done with proof, or agree a new day with the investigator or the site manager.`, ...nextReturnLine(about)], link: actionLink(about) }) };
 }
 
 /** To the owner, when a person asks after it from the list. */

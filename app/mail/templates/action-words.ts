@@ -14,7 +14,7 @@ export const actionName = ({ caseNumber, actionNumber }: Pick<ActionMail, 'caseN
 
 export const actionLink = ({ caseNumber, actionNumber }: Pick<ActionMail, 'caseNumber' | 'actionNumber'>) => ({
   href: `${env.PUBLIC_URL}/cases/${caseNumber}/actions#action-${actionNumber}`,
-  label: 'Open the action',
+  words: 'Open the action',
 });
 
 export const nextReturnLine = (about: ActionMail): string[] => (about.nextReturnWords ? [`The sun is expected back on the mark on ${about.nextReturnWords}, clock time at the place.`] : []);

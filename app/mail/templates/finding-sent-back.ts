@@ -8,5 +8,5 @@ export function findingSentBackMail(about: { readonly caseNumber: number; readon
     `Version ${about.version} was read in technical review and sent back. Your words are kept, and version ${about.version + 1} stands ready as a copy to work on.`,
     'Each comment names a field. Settle it when you have dealt with it.',
   ];
-  return { subject: heading, ...mail({ heading, lines, link: { href: `${env.PUBLIC_URL}/cases/${about.caseNumber}/findings`, label: 'Read the comments' } }) };
+  return { subject: heading, ...mail({ heading, lines, link: { href: `${env.PUBLIC_URL}/cases/${about.caseNumber}/findings`, words: 'Read the comments' } }) };
 }

@@ -5,5 +5,5 @@ import { mail } from '#app/mail/render.ts';
 export function reportAlertMail({ caseNumber }: { readonly caseNumber: number }) {
   const heading = `Case ${caseNumber}: a new report needs a first look within the hour`;
   const lines = ['An answer in the report cannot wait for the ordinary first look. Open the case to see which.'];
-  return { subject: heading, ...mail({ heading, lines, link: { href: `${env.PUBLIC_URL}/cases/${caseNumber}/triage`, label: `Open case ${caseNumber}` } }) };
+  return { subject: heading, ...mail({ heading, lines, link: { href: `${env.PUBLIC_URL}/cases/${caseNumber}/triage`, words: `Open case ${caseNumber}` } }) };
 }

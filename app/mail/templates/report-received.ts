@@ -9,5 +9,5 @@ export function reportReceivedMail({ receipt }: { readonly receipt: string }) {
     'If there is a question, it comes to you by this receipt. If you see the bright patch again, cover or shade it from the shaded side, do not look along the beam, and report it.',
     'Anyone with the receipt can read how far it is. That page holds no names.',
   ];
-  return { subject: heading, ...mail({ heading, lines, link: { href: `${env.PUBLIC_URL}/progress?code=${encodeURIComponent(receipt)}`, label: 'Follow your report' } }) };
+  return { subject: heading, ...mail({ heading, lines, link: { href: `${env.PUBLIC_URL}/progress?code=${encodeURIComponent(receipt)}`, words: 'Follow your report' } }) };
 }

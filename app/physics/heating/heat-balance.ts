@@ -1,4 +1,4 @@
-import { stefanBoltzmann } from '../constants.ts';
+import { stefanBoltzmann } from '#app/physics/constants.ts';
 
 /** Surroundings of a heated spot. */
 export interface SpotSurroundings {

@@ -1,6 +1,6 @@
-import type { Band, HeatingResult, SourceRef, TargetInput, TargetOutcome } from '../model.ts';
-import { zeroCelsiusK } from '../constants.ts';
-import { roundSignificant } from '../units.ts';
+import type { Band, HeatingResult, SourceRef, TargetInput, TargetOutcome } from '#app/physics/model.ts';
+import { zeroCelsiusK } from '#app/physics/constants.ts';
+import { roundSignificant } from '#app/physics/units.ts';
 import { steadySurfaceK, surfaceTemperatureK, type HeatedBody, type SpotSurroundings } from './heat-balance.ts';
 import { coneAbsorptance, ignitionTime } from './ignition.ts';
 import { burnTime, stollSource } from './skin-burn.ts';
@@ -111,10 +111,15 @@ function temperatureOutcome(
 function flamingOutcome(context: Context): TargetOutcome {
   const { material, absorptance, exposure } = context;
   const critical = material.criticalFlux;
+  let extrapolated = false;
   const times = (fluxKwm2: number, alpha: number): number[] => {
     const effective = (alpha / coneAbsorptance) * fluxKwm2;
     if (critical !== null && effective < critical.low) return [];
-    return material.ignition.flatMap((series) => ignitionTime(series, effective).seconds ?? []);
+    return material.ignition.flatMap((series) => {
+      const time = ignitionTime(series, effective);
+      extrapolated ||= time.extrapolated;
+      return time.seconds ?? [];
+    });
   };
   const base = { id: 'flaming', sampleSizeMm: 100 } as const;
   const first = material.ignition[0];
@@ -139,7 +144,7 @@ function flamingOutcome(context: Context): TargetOutcome {
       fast === null
         ? 'Even in the cleanest air and charred black, the flux stays under the lowest that ignited samples with a spark.'
         : `Samples of 100 mm with a spark ignite in ${seconds(likely)} at the likely flux, ${seconds(fast)} at the highest; a small spot without a spark needs more.`,
-    basis: `measured time to piloted ignition: ${material.ignition.map((series) => series.product).join('; ')}`,
+    basis: `measured time to piloted ignition: ${material.ignition.map((series) => series.product).join('; ')}${extrapolated ? '; extrapolated beyond the measured fluxes' : ''}`,
     source: first.source,
   };
 }

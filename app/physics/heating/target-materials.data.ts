@@ -138,10 +138,11 @@ const celluloseAndGround = {
 const roofAndWall = {
   'single-ply-membrane': {
     ...unknown,
-    name: 'single-ply roof membrane, EPDM',
+    name: 'single-ply roof membrane, EPDM or PVC',
     absorptanceFresh: sourced(0.82, 0.92, espr, 'espr-alpha-epdm-rubber', 'espr-alpha-epdm-membrane'),
     conductivityWmk: 0.144, densityKgm3: 1200, heatCapacityJkgk: 1459,
     thermalSource: thermal(fsri, 'fsri-k-epdm-membrane', 'fsri-rho-epdm-membrane', 'fsri-c-epdm-membrane'),
+    softeningC: sourced(71, 74, { text: 'taken from PVC siding for a PVC membrane; a rubber membrane does not soften', verified: false }, 'vsi-hdt'),
     ignition: [
       {
         product: 'EPDM membrane', points: [[25, 166.6], [35, 166.2], [50, 48.1], [75, 24.4]],

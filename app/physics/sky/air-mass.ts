@@ -1,5 +1,5 @@
-import { standardPressurePa } from '../constants.ts';
-import { degree } from '../units.ts';
+import { standardPressurePa } from '#app/physics/constants.ts';
+import { degree } from '#app/physics/units.ts';
 
 /**
  * Relative optical air mass. @param apparentZenithDeg Refracted zenith angle. [°] 0…90

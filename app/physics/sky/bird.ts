@@ -1,4 +1,4 @@
-import { degree } from '../units.ts';
+import { degree } from '#app/physics/units.ts';
 
 /** What the Bird model needs of the air. Ozone and water in cm of column, aerosol optical depth at 380 and 500 nm. */
 export interface BirdAir {

@@ -1,6 +1,5 @@
-import type { OpeningInput, SkyInput } from '../model.ts';
-import { parseUtc, wrap180 } from '../units.ts';
-import { degree } from '../units.ts';
+import type { OpeningInput, SkyInput } from '#app/physics/model.ts';
+import { degree, parseUtc, wrap180 } from '#app/physics/units.ts';
 import { clearSkyAt, type Air } from './clear-sky.ts';
 import { extraterrestrialWm2 } from './extraterrestrial.ts';
 import { paneTransmittance } from './pane-transmittance.ts';

@@ -1,4 +1,4 @@
-import { solarConstantWm2 } from '../constants.ts';
+import { solarConstantWm2 } from '#app/physics/constants.ts';
 
 /** Irradiance outside the atmosphere, normal to the sun. [W/m²] @param distanceAu [au] */
 export function extraterrestrialWm2(distanceAu: number, solarConstant = solarConstantWm2): number {

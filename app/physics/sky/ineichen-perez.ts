@@ -1,4 +1,4 @@
-import { degree } from '../units.ts';
+import { degree } from '#app/physics/units.ts';
 
 /**
  * Clear-sky model of Ineichen and Perez, without the later enhancement at low turbidity.

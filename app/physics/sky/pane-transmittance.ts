@@ -1,4 +1,4 @@
-import { degree, safeAcos } from '../units.ts';
+import { degree, safeAcos } from '#app/physics/units.ts';
 
 /**
  * Direct transmittance of clear 4 mm glass by angle of incidence, relative to normal incidence.

@@ -1,4 +1,4 @@
-import { findMinimum, findRoot } from '../root-search.ts';
+import { findMinimum, findRoot } from '#app/physics/root-search.ts';
 import { solarPosition, type Observer } from './solar-position.ts';
 import { nextDay, startOfLocalDay } from './zone-days.ts';
 

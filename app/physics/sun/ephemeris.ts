@@ -1,4 +1,4 @@
-import { degree, safeAsin, wrap180, wrap360 } from '../units.ts';
+import { degree, safeAsin, wrap180, wrap360 } from '#app/physics/units.ts';
 import { earthSunDistanceSeries, heliocentricLatitudeSeries, heliocentricLongitudeSeries } from './earth-orbit.data.ts';
 import { nutationTerms } from './nutation.data.ts';
 import { julianDay, terrestrialMinusUtcS } from './time-scales.ts';

@@ -1,4 +1,4 @@
-import { degree } from '../units.ts';
+import { degree } from '#app/physics/units.ts';
 
 /** Airless elevation below which the whole disc is under a level horizon and no refraction is applied. [°] */
 export const lowestRefractedDeg = -(0.26667 + 0.5667);

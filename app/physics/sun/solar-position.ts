@@ -1,5 +1,5 @@
-import { degree, safeAsin } from '../units.ts';
-import { azimuthOf, elevationOf, fromAzimuthElevation, type Vector } from '../vector.ts';
+import { degree, safeAsin } from '#app/physics/units.ts';
+import { azimuthOf, elevationOf, fromAzimuthElevation, type Vector } from '#app/physics/vector.ts';
 import { geocentricSun, type GeocentricSun } from './ephemeris.ts';
 import { refractionDeg } from './refraction.ts';
 

@@ -1,5 +1,5 @@
-import { astronomicalUnitM, solarRadiusM } from '../constants.ts';
-import { degree } from '../units.ts';
+import { astronomicalUnitM, solarRadiusM } from '#app/physics/constants.ts';
+import { degree } from '#app/physics/units.ts';
 
 /** Angular diameter of the sun's disc. [°] @param distanceAu Distance from the sun. [au] 0.98…1.02 */
 export function angularDiameterDeg(distanceAu: number): number {

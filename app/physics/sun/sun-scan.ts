@@ -1,4 +1,4 @@
-import { degree } from '../units.ts';
+import { degree } from '#app/physics/units.ts';
 import { geocentricSun } from './ephemeris.ts';
 import { observerInEarthRadii, parallaxSine, type Observer } from './solar-position.ts';
 

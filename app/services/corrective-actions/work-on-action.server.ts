@@ -32,18 +32,33 @@ export interface LockedAction {
 }
 
 /**
- * Runs `work` on an action that is locked, current, and open to the actor for `permission`.
+ * The action and its case, locked, current, and open to the actor for `permission`.
  *
  * @throws DomainError `not-found`, `forbidden`, `conflict`.
  */
+export async function lockForWork(tx: Transaction, target: ActionTarget, permission: CaseAction): Promise<LockedAction> {
+  const found = await lockAction(tx, target.actor, target.actionId);
+  if (!found) throw notFound('The action');
+  authorize(target.actor, permission, actionSubject(found.caseRow, found.action, target.actor.userId));
+  refuseStale(found.action, target.version);
+  const now = new Date();
+  return { actor: target.actor, ...found, now, today: localDay(now, found.caseRow.zone) };
+}
+
+/** Runs `work` on one action in a transaction of its own; see `lockForWork` for what is refused. */
 export function workOnAction<Result>(target: ActionTarget, permission: CaseAction, work: (tx: Transaction, locked: LockedAction) => Promise<Result>): Promise<Result> {
+  return inTransaction(async (tx) => work(tx, await lockForWork(tx, target, permission)));
+}
+
+/**
+ * Runs `work` on several actions in one transaction: all of them change, or none. They are locked in the order of their
+ * ids, so that two people who chose the same rows never wait for each other.
+ */
+export function workOnActions(actor: Actor, targets: readonly Omit<ActionTarget, 'actor'>[], permission: CaseAction, work: (tx: Transaction, locked: LockedAction) => Promise<void>): Promise<number> {
   return inTransaction(async (tx) => {
-    const found = await lockAction(tx, target.actor, target.actionId);
-    if (!found) throw notFound('The action');
-    authorize(target.actor, permission, actionSubject(found.caseRow, found.action, target.actor.userId));
-    refuseStale(found.action, target.version);
-    const now = new Date();
-    return work(tx, { actor: target.actor, ...found, now, today: localDay(now, found.caseRow.zone) });
+    const ordered = [...targets].sort((a, b) => a.actionId.localeCompare(b.actionId));
+    for (const target of ordered) await work(tx, await lockForWork(tx, { actor, ...target }, permission));
+    return ordered.length;
   });
 }
 

@@ -2,21 +2,13 @@ import { inTransaction } from '#db/client.server.ts';
 import type { Transaction } from '#db/client.server.ts';
 import { lockCase } from '#db/queries/case-subject.server.ts';
 import { insertReviewComment, listFindingRows, lockReviewComment, markCommentSettled } from '#db/queries/findings.server.ts';
-import type { FindingRow } from '#db/queries/findings.server.ts';
 import { insertLogEntry } from '#db/queries/log.server.ts';
 import { DomainError, notFound } from '#app/domain/errors.ts';
 import { reviewFieldLabels } from '#app/domain/finding.ts';
 import type { ReviewField } from '#app/domain/finding.ts';
-import { canOnCase } from '#app/domain/permissions.ts';
-import type { CaseSubject } from '#app/domain/permissions.ts';
+import { maySettleComment, withAuthorship } from '#app/domain/review-rights.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import { authorize } from '#app/services/authorize.ts';
-
-/** The subject with authorship of any version, since nobody reviews what they had a hand in. */
-export function withAuthorship(subject: CaseSubject, versions: readonly Pick<FindingRow, 'authorId'>[], userId: string): CaseSubject {
-  const wrote = versions.some((version) => version.authorId === userId);
-  return wrote && !subject.relations.includes('author-of-finding') ? { ...subject, relations: [...subject.relations, 'author-of-finding'] } : subject;
-}
 
 async function lockForReview(tx: Transaction, actor: Actor, caseNumber: number) {
   const found = await lockCase(tx, actor, caseNumber);
@@ -49,7 +41,7 @@ export async function settleReviewComment({ actor, caseNumber, commentId, reason
     const { row, subject } = await lockForReview(tx, actor, caseNumber);
     const comment = await lockReviewComment(tx, { caseId: row.id, commentId });
     if (!comment) throw notFound('The comment');
-    if (!maySettle(actor, subject, comment.findingAuthorId)) throw new DomainError('forbidden', 'A comment is settled by the author of the finding, or by a technical reviewer who is not the author.');
+    if (!maySettleComment(actor, subject, comment.findingAuthorId)) throw new DomainError('forbidden', 'A comment is settled by the author of the finding, or by a technical reviewer who is not the author.');
     if (comment.settledAt) throw new DomainError('conflict', 'This comment is settled already.');
     await markCommentSettled(tx, commentId, actor.userId);
     await insertLogEntry(tx, {
@@ -59,15 +51,6 @@ export async function settleReviewComment({ actor, caseNumber, commentId, reason
       reason,
     });
   });
-}
-
-/** Whether the person may settle a comment on a version by this author, while the finding is in work or in review. */
-export function maySettle(actor: Actor, subject: CaseSubject, findingAuthorId: string): boolean {
-  const atWork = subject.state === 'investigation' || subject.state === 'findings';
-  if (!atWork || actor.organisationId !== subject.organisationId) return false;
-  if (findingAuthorId === actor.userId) return true;
-  // The rule of review itself holds in the findings state only; the same person may settle once it has gone back.
-  return canOnCase(actor, 'finding:review', { ...subject, state: 'findings' });
 }
 
 const line = (actor: Actor, row: { readonly id: string; readonly organisationId: string }, commentId: string) => ({

@@ -3,9 +3,9 @@ import { lockCase } from '#db/queries/case-subject.server.ts';
 import { hasSeenOpinion, listFindingRows, opinionShownEvent } from '#db/queries/findings.server.ts';
 import { insertLogEntry } from '#db/queries/log.server.ts';
 import { DomainError, notFound } from '#app/domain/errors.ts';
+import { withAuthorship } from '#app/domain/review-rights.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import { authorize } from '#app/services/authorize.ts';
-import { withAuthorship } from './review-comments.server.ts';
 
 /** Opens the author's opinion and results to a reviewer who has read the inputs; the log keeps when that was. */
 export async function showOpinion({ actor, caseNumber }: { readonly actor: Actor; readonly caseNumber: number }): Promise<void> {

@@ -1,4 +1,3 @@
-import { randomUUID } from 'node:crypto';
 import { inTransaction } from '#db/client.server.ts';
 import type { Transaction } from '#db/client.server.ts';
 import { insertLogEntry } from '#db/queries/log.server.ts';
@@ -8,10 +7,11 @@ import type { SentReport } from '#db/queries/reports.server.ts';
 import { findSentReport, lockReport } from '#db/queries/reports.server.ts';
 import { photoExtension, photoRefusal, photosPerReport } from '#app/domain/photo.ts';
 import type { ReportHolder } from '#app/domain/report.ts';
+import type { Actor } from '#app/domain/roles.ts';
 import { preparePhotoJob } from '#app/jobs/definitions/prepare-photo.ts';
 import { enqueue } from '#app/jobs/queue.server.ts';
 import { log } from '#app/log.server.ts';
-import { holderId, isHeldBy, notYourReport } from '#app/services/reports/report-holder.server.ts';
+import { isHeldBy, notYourReport } from '#app/services/reports/report-holder.server.ts';
 import { putObject } from '#app/storage/objects.server.ts';
 import { examinePhoto } from '#app/storage/photo-intake.server.ts';
 import type { ExaminedPhoto, IncomingFile } from '#app/storage/photo-intake.server.ts';
@@ -20,6 +20,14 @@ import type { ExaminedPhoto, IncomingFile } from '#app/storage/photo-intake.serv
 export type PhotoOutcome =
   | { readonly ok: true; readonly photoId: string; readonly fileName: string; readonly bytes: number; readonly repeated: boolean }
   | { readonly ok: false; readonly fileName: string; readonly sentence: string };
+
+interface Upload {
+  readonly file: IncomingFile;
+  /** The report that the photo belongs to, sent or not. */
+  readonly clientId: string;
+  readonly uploader: Pick<Actor, 'userId' | 'displayName'> | null;
+}
+type PhotoTarget = Pick<SentReport, 'caseId' | 'organisationId'>;
 
 /**
  * Takes a photo for a report under way. The original goes to the object store first, byte for byte; only then is it
@@ -30,7 +38,7 @@ export type PhotoOutcome =
  */
 export async function storeReportPhoto(params: { holder: ReportHolder; clientId: string; file: IncomingFile }): Promise<PhotoOutcome> {
   const { holder, clientId, file } = params;
-  return storePhoto(file, clientId, holderId(holder), async (tx) => {
+  return storePhoto({ file, clientId, uploader: holder.kind === 'person' ? holder.actor : null }, async (tx) => {
     const sent = await findSentReport(tx, clientId);
     if (sent && !isHeldBy(sent, holder)) throw notYourReport();
     return sent;
@@ -42,12 +50,12 @@ export async function storeReportPhoto(params: { holder: ReportHolder; clientId:
  *
  * @param findCase the case that the photo joins, null for a report under way; called under the report's lock.
  */
-export async function storePhoto(file: IncomingFile, clientId: string, uploadedById: string | null, findCase: (tx: Transaction) => Promise<Pick<SentReport, 'caseId' | 'organisationId'> | null>): Promise<PhotoOutcome> {
+export async function storePhoto({ file, clientId, uploader }: Upload, findCase: (tx: Transaction) => Promise<PhotoTarget | null>): Promise<PhotoOutcome> {
   const examined = await examinePhoto(file);
   if (!examined.ok) return examined;
   const { photo } = examined;
-  const photoId = randomUUID();
-  const originalKey = `originals/${photo.sha256}/${photoId}.${photoExtension[photo.mime]}`;
+  // The same bytes of the same report always have the same key: a repeated upload leaves nothing behind.
+  const originalKey = `originals/${photo.sha256}/${clientId}.${photoExtension[photo.mime]}`;
   const stored = await putOriginal(originalKey, photo);
   if (!stored) return { ok: false, fileName: photo.fileName, sentence: photoRefusal.notStored(photo.fileName) };
   return inTransaction(async (tx) => {
@@ -57,10 +65,10 @@ export async function storePhoto(file: IncomingFile, clientId: string, uploadedB
     if (earlier) return outcomeOf(earlier, true);
     if ((await countReportPhotos(tx, clientId)) >= photosPerReport) return { ok: false, fileName: photo.fileName, sentence: photoRefusal.tooMany(photo.fileName) };
     const label = target ? await labelIn(tx, target.caseId) : null;
-    const row = await insertPhoto(tx, { id: photoId, reportClientId: clientId, caseId: target?.caseId ?? null, label, uploadedById, originalKey, ...columnsOf(photo) });
+    const row = await insertPhoto(tx, { reportClientId: clientId, caseId: target?.caseId ?? null, label, uploadedById: uploader?.userId ?? null, originalKey, ...columnsOf(photo) });
     if (!row) throw new Error('The photo was inserted by another transaction in spite of the lock.');
-    if (target) await logAdded(tx, row, target, uploadedById);
-    await enqueue(tx, preparePhotoJob, { photoId });
+    if (target) await logAdded(tx, row, target, uploader);
+    await enqueue(tx, preparePhotoJob, { photoId: row.id });
     return outcomeOf(row, false);
   });
 }
@@ -97,10 +105,10 @@ function outcomeOf(row: PhotoRow, repeated: boolean): PhotoOutcome {
   return { ok: true, photoId: row.id, fileName: row.fileName, bytes: row.bytes, repeated };
 }
 
-async function logAdded(tx: Transaction, row: PhotoRow, target: Pick<SentReport, 'caseId' | 'organisationId'>, actorId: string | null): Promise<void> {
+async function logAdded(tx: Transaction, row: PhotoRow, target: PhotoTarget, uploader: Upload['uploader']): Promise<void> {
   await insertLogEntry(tx, {
-    actorId,
-    actorName: actorId ? await nameOf(tx, actorId) : 'Guest by site link',
+    actorId: uploader?.userId ?? null,
+    actorName: uploader?.displayName ?? 'Guest by site link',
     organisationId: target.organisationId,
     caseId: target.caseId,
     event: 'photo.added',

@@ -89,6 +89,10 @@ describe('pageHandler', () => {
     expect(body).toMatch(/remove some photographs/);
   });
 
+  test('tells caches on the way to keep nothing that a route has not opened to them', async () => {
+    expect((await fetch(`http://127.0.0.1:${port}/echo`)).headers.get('cache-control')).toBe('private, no-cache');
+  });
+
   test('keeps host and port as the client typed them', async () => {
     expect(await (await fetch(`http://127.0.0.1:${port}/echo?x=1`)).text()).toBe(`http://127.0.0.1:${port}/echo?x=1`);
   });

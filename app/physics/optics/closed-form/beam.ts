@@ -1,4 +1,4 @@
-import type { Vector } from '../../vector.ts';
+import type { Vector } from '#app/physics/vector.ts';
 
 /** Light beyond the optic for one direction of the sun. */
 export interface Beam {

@@ -1,6 +1,6 @@
-import { cross, dot, fromAzimuthElevation, mirrored, scale, subtract, unit, type Vector } from '../../vector.ts';
-import type { PaneOptic } from '../optic.ts';
-import { slopeErrors } from '../optic-defaults.data.ts';
+import { cross, dot, fromAzimuthElevation, mirrored, scale, subtract, unit, type Vector } from '#app/physics/vector.ts';
+import type { PaneOptic } from '#app/physics/optics/optic.ts';
+import { slopeErrors } from '#app/physics/optics/optic-defaults.data.ts';
 import { sharpestDistanceM, type Beam, type FocusModel } from './beam.ts';
 import { circleOverlapM2 } from './meridional.ts';
 

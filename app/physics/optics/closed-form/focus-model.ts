@@ -1,4 +1,4 @@
-import type { Optic } from '../optic.ts';
+import type { Optic } from '#app/physics/optics/optic.ts';
 import type { FocusModel } from './beam.ts';
 import { bowedPaneModel } from './bowed-pane.ts';
 import { curvedReflectorModel, cylinderModel } from './line-optics.ts';

@@ -1,8 +1,8 @@
-import { degree } from '../../units.ts';
-import { cross, dot, fromAzimuthElevation, mirrored, scale, subtract, unit, type Vector } from '../../vector.ts';
-import type { CurvedReflectorOptic, CylinderOptic } from '../optic.ts';
-import { slopeErrors } from '../optic-defaults.data.ts';
-import { ballFocalLengthM, bravaisIndex, mediumOf } from '../refraction.ts';
+import { degree } from '#app/physics/units.ts';
+import { cross, dot, fromAzimuthElevation, mirrored, scale, subtract, unit, type Vector } from '#app/physics/vector.ts';
+import type { CurvedReflectorOptic, CylinderOptic } from '#app/physics/optics/optic.ts';
+import { slopeErrors } from '#app/physics/optics/optic-defaults.data.ts';
+import { ballFocalLengthM, bravaisIndex, mediumOf } from '#app/physics/optics/refraction.ts';
 import { sharpestDistanceM, type Beam, type FocusModel } from './beam.ts';
 import { radiusHolding, slotDensityPerM, type Fan } from './meridional.ts';
 import { ballFan, slotMirrorFan } from './shapes.ts';

@@ -1,8 +1,8 @@
-import { safeAcos } from '../../units.ts';
-import { lengthOf, unit, type Vector } from '../../vector.ts';
-import type { BowlOptic, DomeOptic } from '../optic.ts';
-import { slopeErrors } from '../optic-defaults.data.ts';
-import { fresnelReflectance, mediumOf } from '../refraction.ts';
+import { safeAcos } from '#app/physics/units.ts';
+import { lengthOf, unit, type Vector } from '#app/physics/vector.ts';
+import type { BowlOptic, DomeOptic } from '#app/physics/optics/optic.ts';
+import { slopeErrors } from '#app/physics/optics/optic-defaults.data.ts';
+import { fresnelReflectance, mediumOf } from '#app/physics/optics/refraction.ts';
 import { sharpestDistanceM, type FocusModel } from './beam.ts';
 import { radiusHolding, roundShare } from './meridional.ts';
 import { roundBottomFan } from './shapes.ts';

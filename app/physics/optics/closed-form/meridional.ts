@@ -24,7 +24,7 @@ export interface FanRay {
   readonly imageScale?: number;
 }
 
-/** Heights for a round aperture: equal areas. For a slot: equal widths over both halves. */
+/** Heights evenly spaced: from the axis out for a round aperture, where a ring weighs with its radius, or over both halves of a slot. */
 export function buildFan(round: boolean, halfApertureM: number, trace: (heightM: number) => FanRay | null): Fan {
   const x0 = new Float64Array(fanRays);
   const slope = new Float64Array(fanRays);
@@ -32,11 +32,11 @@ export function buildFan(round: boolean, halfApertureM: number, trace: (heightM:
   const imageScale = new Float64Array(fanRays).fill(1);
   for (let k = 0; k < fanRays; k++) {
     const share = (k + 0.5) / fanRays;
-    const ray = trace(round ? halfApertureM * Math.sqrt(share) : halfApertureM * (2 * share - 1));
+    const ray = trace(round ? halfApertureM * share : halfApertureM * (2 * share - 1));
     if (ray === null) continue;
     x0[k] = ray.x0;
     slope[k] = ray.slope;
-    weight[k] = ray.transmittance / fanRays;
+    weight[k] = (ray.transmittance * (round ? 2 * share : 1)) / fanRays;
     imageScale[k] = ray.imageScale ?? 1;
   }
   return { x0, slope, weight, imageScale };
@@ -55,6 +55,14 @@ export function circleOverlapM2(radiusA: number, radiusB: number, distance: numb
   return a2 * (halfA - Math.sin(2 * halfA) / 2) + b2 * (halfB - Math.sin(2 * halfB) / 2);
 }
 
+/** Half the gap to the neighbouring ray at a distance; without it the rays of a wide cone would leave dark rings. */
+function halfGapM(fan: Fan, k: number, zM: number): number {
+  const neighbour = k === 0 ? 1 : k - 1;
+  const x = (fan.x0[k] ?? 0) + (fan.slope[k] ?? 0) * zM;
+  const y = (fan.x0[neighbour] ?? 0) + (fan.slope[neighbour] ?? 0) * zM;
+  return (fan.weight[neighbour] ?? 0) === 0 ? 0 : Math.abs(x - y) / 2;
+}
+
 const ringSteps = 12;
 
 /**
@@ -70,7 +78,7 @@ export function roundShare(fan: Fan, zM: number, offsetM: number, discRadiusM: n
     const weight = fan.weight[k] ?? 0;
     if (weight === 0) continue;
     const ring = Math.abs((fan.x0[k] ?? 0) + (fan.slope[k] ?? 0) * zM);
-    const blur = blurM * (fan.imageScale[k] ?? 1);
+    const blur = Math.max(blurM * (fan.imageScale[k] ?? 1), halfGapM(fan, k, zM));
     const image = Math.PI * blur * blur;
     const reach = discRadiusM + blur;
     if (Math.abs(ring - offsetM) >= reach) continue;
@@ -104,7 +112,7 @@ export function slotDensityPerM(fan: Fan, zM: number, offsetM: number, discRadiu
   let sum = 0;
   for (let k = 0; k < fanRays; k++) {
     const centre = (fan.x0[k] ?? 0) + (fan.slope[k] ?? 0) * zM - offsetM;
-    const blur = blurM * (fan.imageScale[k] ?? 1);
+    const blur = Math.max(blurM * (fan.imageScale[k] ?? 1), halfGapM(fan, k, zM));
     if (Math.abs(centre) >= discRadiusM + blur) continue;
     const covered = discAreaTo(centre + blur, discRadiusM) - discAreaTo(centre - blur, discRadiusM);
     sum += ((fan.weight[k] ?? 0) * covered) / (2 * blur);

@@ -1,10 +1,10 @@
-import { degree, safeAcos } from '../../units.ts';
-import { dot, fromAzimuthElevation, mirrored, scale, type Vector } from '../../vector.ts';
+import { degree, safeAcos } from '#app/physics/units.ts';
+import { dot, fromAzimuthElevation, mirrored, scale, type Vector } from '#app/physics/vector.ts';
 import type {
   FresnelOptic, LensOptic, MirrorOptic, Optic, SphereOptic, TelescopeOptic,
-} from '../optic.ts';
-import { fresnelColourSpread, slopeErrors } from '../optic-defaults.data.ts';
-import { ballFocalLengthM, mediumOf, obliqueMirrorFociM } from '../refraction.ts';
+} from '#app/physics/optics/optic.ts';
+import { fresnelColourSpread, slopeErrors } from '#app/physics/optics/optic-defaults.data.ts';
+import { ballFocalLengthM, mediumOf, obliqueMirrorFociM } from '#app/physics/optics/refraction.ts';
 import { sharpestDistanceM, type Beam, type FocusModel } from './beam.ts';
 import { radiusHolding, roundShare, type Fan } from './meridional.ts';
 import { ballFan, idealFan, lensFan, mirrorFan } from './shapes.ts';

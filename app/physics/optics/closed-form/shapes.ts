@@ -1,4 +1,4 @@
-import { fresnelReflectance, type Medium } from '../refraction.ts';
+import { fresnelReflectance, type Medium } from '#app/physics/optics/refraction.ts';
 import { buildFan, type Fan, type FanRay } from './meridional.ts';
 
 /** Real rays through the shapes that the engine knows, in the plane that holds the axis and the light. */

@@ -1,9 +1,10 @@
+/* eslint-disable @typescript-eslint/no-non-null-assertion -- every index is bounded by its loop; a fallback in the hot loops would hide a wrong one as 0 */
 import type { Vector } from '#app/physics/vector.ts';
 import { dot, scale } from '#app/physics/vector.ts';
 import type { LocalPlane, PlaneHits } from './bundle.ts';
 import { cutPlane } from './bundle.ts';
 import { addScaled } from './frame.ts';
-import type { LineHint, Spot, SpotFinder } from './hot-spot.ts';
+import type { LineHint, SpotFinder } from './hot-spot.ts';
 import type { TracedOptic } from './trace-bundle.ts';
 
 /** Plane across the natural normal at a distance from O along the focal axis. */
@@ -47,26 +48,33 @@ function stretchAlong(hits: PlaneHits, ux: number, uy: number, at: number): numb
 
 export interface PlaneScan {
   readonly distanceM: number;
-  readonly spot: Spot | null;
   readonly concentration: number;
 }
 
-const concentrationOf = (spot: Spot | null): number => (spot ? spot.power / (Math.PI * spot.radius * spot.radius) : 0);
+/** Rays that a hot spot should rest on in a quick look. */
+const fewestInScan = 60;
 
 /** Hot spots of several radii in planes at given distances, from the first rays of every batch. */
 export function scanPlanes(traced: TracedOptic, distances: readonly number[], radii: readonly number[], perBatch: number, finder: SpotFinder, hits: PlaneHits): PlaneScan[][] {
   const scans: PlaneScan[][] = radii.map(() => []);
+  const share = sharePerBatch(traced, perBatch);
   for (const distanceM of distances) {
     const plane = naturalPlane(traced, distanceM);
     cutPlane(traced.bundle, plane, hits, perBatch);
-    const share = sharePerBatch(traced, perBatch);
     const line = lineHint(traced, plane, hits, null);
     radii.forEach((radius, k) => {
-      const spot = finder.find(hits, radius, line);
-      scans[k]?.push({ distanceM, spot, concentration: concentrationOf(spot) * share });
+      const spot = finder.find(hits, radius, line, 1, 'quick');
+      scans[k]?.push({ distanceM, concentration: (spot?.concentration ?? 0) * share });
     });
   }
   return scans;
+}
+
+/** Radius at which a quick look in a plane has rays enough, so that all planes can be compared with the same disc. */
+function scanRadius(traced: TracedOptic, distanceM: number, radius: number, perBatch: number, finder: SpotFinder, hits: PlaneHits): number {
+  const plane = naturalPlane(traced, distanceM);
+  cutPlane(traced.bundle, plane, hits, perBatch);
+  return finder.find(hits, radius, lineHint(traced, plane, hits, null), fewestInScan, 'quick')?.radius ?? radius;
 }
 
 /** All rays over those looked at. */
@@ -110,23 +118,28 @@ function vertex(scan: readonly PlaneScan[]): number {
 /** Distance of the plane in which a disc of each radius takes most power. */
 export function bestDistances(traced: TracedOptic, radii: readonly number[], finder: SpotFinder, hits: PlaneHits): number[] {
   const { focalDistanceM: f, clearanceM } = traced.kernel;
-  const low = Math.max(clearanceM, 0.25 * f);
+  const low = Math.max(clearanceM, 0.3 * f);
   const high = Math.max(1.6 * f, 1.2 * clearanceM);
-  const steps = 24;
+  const steps = 18;
   const ratio = (high / low) ** (1 / steps);
   const coarse = Array.from({ length: steps + 1 }, (_, i) => low * ratio ** i);
-  const scans = scanPlanes(traced, coarse, radii, 1200, finder, hits);
+  const wide = radii.map((radius) => scanRadius(traced, Math.max(clearanceM, 0.97 * f), radius, 800, finder, hits));
+  const scans = scanPlanes(traced, coarse, wide, 800, finder, hits);
   return radii.map((radius, k) => {
     const scan = scans[k] ?? [];
     let centre = scan[bestOf(scan)]?.distanceM ?? f;
-    // Twice finer round the best plane, then the top of a parabola so that noise does not choose the plane.
+    // Finer round the best plane until the values hardly differ; a parabola then keeps noise from choosing the plane.
     let width = ratio - 1;
-    for (const perBatch of [2500, 6000]) {
-      width /= 3;
-      const around = Array.from({ length: 7 }, (_, i) => Math.max(clearanceM, centre * (1 + width * (i - 3))));
-      const [fine = []] = scanPlanes(traced, around, [radius], perBatch, finder, hits);
+    for (let round = 0; round < 5; round++) {
+      width /= 2.5;
+      const around = Array.from({ length: 5 }, (_, i) => Math.max(clearanceM, centre * (1 + width * (i - 2))));
+      const perBatch = round === 0 ? 1000 : 2000;
+      const [fine = []] = scanPlanes(traced, around, [scanRadius(traced, centre, radius, perBatch, finder, hits)], perBatch, finder, hits);
       const best = bestOf(fine);
-      centre = best === 0 || best === 6 ? (fine[best]?.distanceM ?? centre) : perBatch === 6000 ? vertex(fine) : (fine[best]?.distanceM ?? centre);
+      const flat = Math.min(...fine.map((s) => s.concentration)) > 0.93 * (fine[best]?.concentration ?? 0);
+      const atEnd = best === 0 || best === 4;
+      centre = flat && !atEnd ? vertex(fine) : (fine[best]?.distanceM ?? centre);
+      if (flat) break;
     }
     return centre;
   });

@@ -1,3 +1,4 @@
+/* eslint-disable @typescript-eslint/no-non-null-assertion -- every index is bounded by its loop; a fallback in the hot loops would hide a wrong one as 0 */
 import type { ConvexSet } from './convex-body.ts';
 import { enterBody, leaveBody, newCrossing, tiltNormal } from './convex-body.ts';
 import { attenuate, powerOf, registerSize, splitRay, startRay } from './interact.ts';

@@ -1,3 +1,4 @@
+/* eslint-disable @typescript-eslint/no-non-null-assertion -- every index is bounded by its loop; a fallback in the hot loops would hide a wrong one as 0 */
 import type { Vector } from '#app/physics/vector.ts';
 import { dot } from '#app/physics/vector.ts';
 import { frameAbout } from './frame.ts';
@@ -27,7 +28,7 @@ export class RayBundle {
   readonly dy: Float64Array;
   readonly dz: Float64Array;
   readonly weight: Float64Array;
-  readonly reach: Float64Array;
+  #reach: Float64Array | null = null;
   count = 0;
   readonly batchEnd: number[] = [];
   readonly ledger: Ledger = { incident: 0, transmitted: 0, reflected: 0, absorbed: 0, stray: 0, blocked: 0, worstImbalance: 0 };
@@ -40,7 +41,6 @@ export class RayBundle {
     this.dy = new Float64Array(capacity);
     this.dz = new Float64Array(capacity);
     this.weight = new Float64Array(capacity);
-    this.reach = new Float64Array(capacity).fill(Infinity);
   }
 
   get capacity(): number {
@@ -52,12 +52,28 @@ export class RayBundle {
     return batch === 0 ? 0 : (this.batchEnd[batch - 1] ?? 0);
   }
 
+  /** Distances after which rays meet the optic again; null while none does. */
+  get reach(): Float64Array | null {
+    return this.#reach;
+  }
+
+  /** Adds a ray that meets the optic again at a distance, or never (Infinity). Beyond the capacity it is left out. */
+  pushLeg(px: number, py: number, pz: number, dx: number, dy: number, dz: number, weight: number, reach: number): void {
+    if (this.count >= this.capacity) return;
+    if (reach < Infinity) {
+      this.#reach ??= new Float64Array(this.capacity).fill(Infinity);
+      this.#reach[this.count] = reach;
+    }
+    this.push(px, py, pz, dx, dy, dz, weight);
+  }
+
   endBatch(): void {
     this.batchEnd.push(this.count);
   }
 
   /** Adds a ray with unlimited reach. */
   push(px: number, py: number, pz: number, dx: number, dy: number, dz: number, weight: number): void {
+    if (this.count >= this.capacity) return;
     const i = this.count++;
     this.px[i] = px;
     this.py[i] = py;
@@ -123,7 +139,7 @@ export function cutPlane(bundle: RayBundle, plane: LocalPlane, hits: PlaneHits, 
       const along = dx[i]! * nx + dy[i]! * ny + dz[i]! * nz;
       if (along >= -1e-9) continue;
       const t = (offset - px[i]! * nx - py[i]! * ny - pz[i]! * nz) / along;
-      if (t < 0 || t > reach[i]!) continue;
+      if (t < 0 || (reach && t > reach[i]!)) continue;
       const x = px[i]! + t * dx[i]!;
       const y = py[i]! + t * dy[i]!;
       const z = pz[i]! + t * dz[i]!;

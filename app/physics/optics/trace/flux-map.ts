@@ -1,3 +1,4 @@
+/* eslint-disable @typescript-eslint/no-non-null-assertion -- every index is bounded by its loop; a fallback in the hot loops would hide a wrong one as 0 */
 import type { PlaneHits } from './bundle.ts';
 
 /** Radii round a point that hold given shares of the power in the plane. */

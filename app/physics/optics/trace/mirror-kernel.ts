@@ -1,8 +1,9 @@
+/* eslint-disable @typescript-eslint/no-non-null-assertion -- every index is bounded by its loop; a fallback in the hot loops would hide a wrong one as 0 */
 import type { MirrorOptic } from '#app/physics/optics/optic.ts';
 import type { Vector } from '#app/physics/vector.ts';
 import { fromAzimuthElevation } from '#app/physics/vector.ts';
 import { cutOff, mostInteractions } from './body-path.ts';
-import type { OcclusionTestOf } from './body-optics.ts';
+import type { OcclusionTestOf } from './body-spec.ts';
 import type { RayBundle } from './bundle.ts';
 import { frameAbout, toLocal } from './frame.ts';
 import { gaussPair } from './gauss.ts';
@@ -117,10 +118,7 @@ function capTracer(cap: Cap): (samples: Samples, launch: Launch, bundle: RayBund
         lost += power * (1 - cap.reflectance);
         power *= cap.reflectance;
         t = nextMeeting(cap, x, y, z, dx, dy, dz);
-        if (bundle.count < bundle.capacity) {
-          bundle.reach[bundle.count] = t;
-          bundle.push(x, y, z, dx, dy, dz, w * power);
-        }
+        bundle.pushLeg(x, y, z, dx, dy, dz, w * power, t);
         if (t === Infinity) break;
         if (bounce + 1 >= mostInteractions || power < cutOff) {
           lost += power;

@@ -1,3 +1,4 @@
+/* eslint-disable @typescript-eslint/no-non-null-assertion -- every index is bounded by its loop; a fallback in the hot loops would hide a wrong one as 0 */
 import type { Vector } from '#app/physics/vector.ts';
 import { cutOff, mostInteractions } from './body-path.ts';
 import { newCrossing, tiltNormal } from './convex-body.ts';

@@ -1,8 +1,9 @@
+/* eslint-disable @typescript-eslint/no-non-null-assertion -- every index is bounded by its loop; a fallback in the hot loops would hide a wrong one as 0 */
 import type { CurvedReflectorOptic, PaneOptic } from '#app/physics/optics/optic.ts';
 import type { Vector } from '#app/physics/vector.ts';
 import { fromAzimuthElevation } from '#app/physics/vector.ts';
 import { cutOff, mostInteractions } from './body-path.ts';
-import type { OcclusionTestOf } from './body-optics.ts';
+import type { OcclusionTestOf } from './body-spec.ts';
 import type { RayBundle } from './bundle.ts';
 import { newCrossing, tiltNormal } from './convex-body.ts';
 import type { Frame } from './frame.ts';
@@ -78,10 +79,7 @@ function followSheet(
     dy += 2 * c * tilted.ny;
     dz += 2 * c * tilted.nz;
     const t = branch.surface.next(place, dx, dy, dz, uv);
-    if (bundle.count < bundle.capacity) {
-      bundle.reach[bundle.count] = t;
-      bundle.push(place[0]!, place[1]!, place[2]!, dx, dy, dz, weight * power);
-    }
+    bundle.pushLeg(place[0]!, place[1]!, place[2]!, dx, dy, dz, weight * power, t);
     if (t === Infinity) return power;
     if (power < cutOff) return 0;
     branch.surface.at(uv[0]!, uv[1]!, place);
@@ -104,15 +102,18 @@ function sheetKernel(spec: SheetSpec, sun: SunDisc, blockedIn: OcclusionTestOf):
   const towards = toLocal(spec.frame, sun.direction);
   const chief: Vector = [-towards[0], -towards[1], towards[2]];
   const blocked = blockedIn(spec.frame);
+  // Generators lengthen the way: only the part across them focuses, at (R/2)·cos i in that plane.
+  const across2 = Math.max(1e-4, 1 - towards[1] * towards[1]);
+  const focal = spec.line ? (spec.focalDistanceM * Math.max(0.05, towards[2])) / across2 : spec.focalDistanceM;
   return {
     frame: spec.frame,
     focusKind: spec.line ? 'line' : 'point',
     apertureM2: 1,
     focalAxis: chief,
-    focalDistanceM: spec.focalDistanceM,
+    focalDistanceM: focal,
     planeNormal: [-chief[0], -chief[1], -chief[2]],
     imageFocalM: spec.focalDistanceM,
-    clearanceM: 0.02 * spec.focalDistanceM,
+    clearanceM: 0.02 * focal,
     lineDirection: spec.line ? [0, 1, 0] : null,
     chiefDirection: chief,
     dimensions: spec.sigma > 0 ? 6 : 4,

@@ -1,3 +1,4 @@
+/* eslint-disable @typescript-eslint/no-non-null-assertion -- every index is bounded by its loop; a fallback in the hot loops would hide a wrong one as 0 */
 import type { SphereOptic } from '#app/physics/optics/optic.ts';
 import type { RayBundle } from './bundle.ts';
 import type { Launch, Samples } from './kernel.ts';

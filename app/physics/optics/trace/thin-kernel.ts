@@ -1,3 +1,4 @@
+/* eslint-disable @typescript-eslint/no-non-null-assertion -- every index is bounded by its loop; a fallback in the hot loops would hide a wrong one as 0 */
 import type { FresnelOptic, TelescopeOptic } from '#app/physics/optics/optic.ts';
 import { fromAzimuthElevation } from '#app/physics/vector.ts';
 import type { RayBundle } from './bundle.ts';

@@ -1,7 +1,10 @@
 import type { Optic } from '#app/physics/optics/optic.ts';
 import { lengthOf } from '#app/physics/vector.ts';
-import type { OcclusionTestOf } from './body-optics.ts';
-import { bowlKernel, cylinderKernel, domeKernel, lensKernel, sphereKernel } from './body-optics.ts';
+import type { OcclusionTestOf } from './body-spec.ts';
+import { cylinderKernel } from './bottle-optic.ts';
+import { lensKernel } from './lens-optic.ts';
+import { bowlKernel, domeKernel } from './pool-optic.ts';
+import { sphereKernel } from './sphere-optic.ts';
 import { RayBundle } from './bundle.ts';
 import { toLocal } from './frame.ts';
 import { guardEnergy } from './guards.ts';

@@ -1,13 +1,14 @@
 import type { Vector } from '#app/physics/vector.ts';
-import { dot, scale } from '#app/physics/vector.ts';
+import { dot } from '#app/physics/vector.ts';
 import { backEstimate } from './back-estimate.ts';
 import { bestDistances, lineHint, naturalPlane } from './best-plane.ts';
 import type { LocalPlane, PlaneHits } from './bundle.ts';
 import { cutPlane, emptyHits } from './bundle.ts';
+import { batchMean, discPowers } from './disc-power.ts';
 import { enclosingRadii, gridOf, profileAlong, widthAbove } from './flux-map.ts';
 import { addScaled, toGlobal, toLocal, unitOf } from './frame.ts';
 import { guardRadiance, radianceBound } from './guards.ts';
-import { batchMean, discPowers, SpotFinder } from './hot-spot.ts';
+import { SpotFinder } from './hot-spot.ts';
 import { batchCount } from './kernel.ts';
 import type { TracedOptic } from './trace-bundle.ts';
 import { traceBundle } from './trace-bundle.ts';
@@ -16,13 +17,23 @@ import { discNames } from './trace-model.ts';
 
 const backPaths = 32768;
 
+/** Rays that a hot spot should rest on. */
+export const fewestRays = 200;
+
+/** Place in a plane's axes. [m] */
+interface Place {
+  readonly x: number;
+  readonly y: number;
+}
+
 /** One receiver plane with everything measured in it. */
 interface Cut {
   readonly plane: LocalPlane;
   readonly hits: PlaneHits;
 }
 
-const digits = (value: number, count = 6): number => (Number.isFinite(value) ? Number(value.toPrecision(count)) : value);
+/** Rounds for output. */
+export const digits = (value: number, count = 6): number => (Number.isFinite(value) ? Number(value.toPrecision(count)) : value);
 const rounded = (v: Vector): Vector => [digits(v[0], 9), digits(v[1], 9), digits(v[2], 9)];
 
 function pointOf(cut: Cut, x: number, y: number): Vector {
@@ -50,30 +61,60 @@ class Focus {
     return { plane, hits: cutPlane(this.traced.bundle, plane, hits, Infinity, trail ? toLocal(this.traced.kernel.frame, trail) : undefined) };
   }
 
-  /** Hot spot of a disc in a plane; the place of the central ray if no light reaches it. */
-  hotSpot(cut: Cut, diameterM: number): { readonly x: number; readonly y: number } {
+  /** Hot spot of a disc in a plane, sought in some of the hits; the place of the central ray if no light reaches it. */
+  hotSpot(cut: Cut, diameterM: number, from = 0, to = cut.hits.count): Place {
     const line = lineHint(this.traced, cut.plane, cut.hits, this.#mark);
-    return this.#finder.find(cut.hits, diameterM / 2, line) ?? { x: 0, y: 0 };
+    return this.#finder.find(cut.hits, diameterM / 2, line, fewestRays, 'exact', from, to) ?? { x: 0, y: 0 };
+  }
+
+  /**
+   * Hot spot with its power, batch by batch. Each half of the batches is measured at the place that the other half
+   * found: the best of many noisy places would otherwise always look better than it is.
+   */
+  crossValidated(cut: Cut, diameterM: number): { readonly at: Place; readonly powers: number[] } {
+    const { hits } = cut;
+    const half = batchCount / 2;
+    const middle = hits.batchEnd[half - 1] ?? 0;
+    const a = this.hotSpot(cut, diameterM, 0, middle);
+    const b = this.hotSpot(cut, diameterM, middle, hits.count);
+    const atA = discPowers(hits, a.x, a.y, diameterM / 2);
+    const atB = discPowers(hits, b.x, b.y, diameterM / 2);
+    const sum = (p: readonly number[]): number => p.reduce((x, y) => x + y, 0);
+    const near = Math.hypot(a.x - b.x, a.y - b.y) < diameterM / 2;
+    const at = near ? { x: (a.x + b.x) / 2, y: (a.y + b.y) / 2 } : sum(atA) > sum(atB) ? a : b;
+    return { at, powers: [...atB.slice(0, half), ...atA.slice(half)] };
   }
 
   /** Foot of the mark in the plane's axes. */
-  markIn(cut: Cut): { readonly x: number; readonly y: number } | null {
+  markIn(cut: Cut): Place | null {
     if (!this.#mark) return null;
     const offset = addScaled(this.#mark, cut.plane.origin, -1);
     return { x: dot(offset, cut.hits.columnDirection), y: dot(offset, cut.hits.rowDirection) };
   }
 
-  /** Concentration on a disc: forward, or back-traced where too few rays fall on it. */
-  disc(name: DiscName, diameterM: number, cut: Cut, centre: 'hot spot' | 'mark', at: { readonly x: number; readonly y: number }): TraceDisc {
+  /** Disc on its own hot spot in a plane. */
+  hotDisc(name: DiscName, diameterM: number, cut: Cut): TraceDisc {
+    const { at, powers } = this.crossValidated(cut, diameterM);
+    return this.#disc(name, diameterM, cut, 'hot spot', at, powers);
+  }
+
+  /** Disc on the foot of the mark; none without a mark. */
+  markDisc(name: DiscName, diameterM: number, cut: Cut): TraceDisc[] {
+    const at = this.markIn(cut);
+    return at ? [this.#disc(name, diameterM, cut, 'mark', at, discPowers(cut.hits, at.x, at.y, diameterM / 2))] : [];
+  }
+
+  /** Concentration from forward rays, or traced back where too few of them fall on the disc. */
+  #disc(name: DiscName, diameterM: number, cut: Cut, centre: 'hot spot' | 'mark', at: Place, powers: readonly number[]): TraceDisc {
     const { kernel, sun } = this.traced;
     const area = (Math.PI / 4) * diameterM * diameterM;
-    const forward = batchMean(discPowers(cut.hits, at.x, at.y, diameterM / 2));
+    const forward = batchMean(powers);
     let estimate = { concentration: forward.mean / area, stdError: forward.stdError / area };
     let estimator: TraceDisc['estimator'] = 'forward';
     const position = pointOf(cut, at.x, at.y);
     if (kernel.backTrace && !(forward.stdError < 0.03 * forward.mean)) {
       const back = backEstimate(kernel.backTrace, position, cut.plane, diameterM, backPaths, this.request.seed);
-      if (forward.mean === 0 || back.stdError < estimate.stdError) {
+      if (forward.mean === 0 || (back.concentration > 0 && back.stdError < estimate.stdError)) {
         estimate = back;
         estimator = 'back-traced';
       }
@@ -94,7 +135,7 @@ class Focus {
   }
 
   /** Second answer on the 5 mm disc at the mark, or at the hot spot. */
-  backTraced(cut: Cut, hot: { readonly x: number; readonly y: number }): TraceResult['backTraced'] {
+  backTraced(cut: Cut, hot: Place): TraceResult['backTraced'] {
     const { backTrace } = this.traced.kernel;
     if (!backTrace) return null;
     const mark = this.markIn(cut);
@@ -103,7 +144,7 @@ class Focus {
     return { centre: mark ? 'mark' : 'hot spot', diameterM: 0.005, concentration: digits(concentration), stdError: digits(stdError, 3) };
   }
 
-  grid(cut: Cut, at: { readonly x: number; readonly y: number }, r50: number, imageM: number): FluxGrid | null {
+  grid(cut: Cut, at: Place, r50: number, imageM: number): FluxGrid | null {
     const cells = this.request.gridCells ?? 48;
     if (cells === 0) return null;
     const { frame } = this.traced.kernel;
@@ -118,7 +159,7 @@ class Focus {
     };
   }
 
-  contours(cut: Cut, at: { readonly x: number; readonly y: number }, imageM: number, r80: number): ContourWidth[] {
+  contours(cut: Cut, at: Place, imageM: number, r80: number): ContourWidth[] {
     const thresholds = this.request.thresholdsSuns ?? [];
     if (thresholds.length === 0) return [];
     const { trailDirection } = this.request;
@@ -173,22 +214,12 @@ export function measureFocus(request: TraceRequest, traced: TracedOptic): TraceR
   const bestPlanes: BestPlane[] = discNames.map((name, i) => {
     const distanceM = distances[i] ?? kernel.focalDistanceM;
     const cut = focus.cut(naturalPlane(traced, distanceM), hits);
-    const best = focus.disc(name, diameters[name], cut, 'hot spot', focus.hotSpot(cut, diameters[name]));
-    const mark = focus.markIn(cut);
-    if (!asked) {
-      discs.push(best);
-      if (mark) discs.push(focus.disc(name, diameters[name], cut, 'mark', mark));
-    }
+    const best = focus.hotDisc(name, diameters[name], cut);
+    if (!asked) discs.push(best, ...focus.markDisc(name, diameters[name], cut));
     return { disc: name, diameterM: best.diameterM, distanceM: digits(distanceM), concentration: best.concentration };
   });
   const cut = focus.cut(asked ?? naturalPlane(traced, distances[0] ?? kernel.focalDistanceM), hits);
-  if (asked) {
-    const mark = focus.markIn(cut);
-    for (const name of discNames) {
-      discs.push(focus.disc(name, diameters[name], cut, 'hot spot', focus.hotSpot(cut, diameters[name])));
-      if (mark) discs.push(focus.disc(name, diameters[name], cut, 'mark', mark));
-    }
-  }
+  if (asked) for (const name of discNames) discs.push(focus.hotDisc(name, diameters[name], cut), ...focus.markDisc(name, diameters[name], cut));
   const hot = focus.hotSpot(cut, Math.min(imageM, 0.005));
   const [r50 = 0, r80 = 0] = enclosingRadii(cut.hits, hot.x, hot.y, [0.5, 0.8]);
   return {
@@ -226,37 +257,4 @@ function shares(traced: TracedOptic): Pick<TraceResult, 'rays' | 'batches' | 'ap
     blockedFraction: met + ledger.blocked > 0 ? digits(ledger.blocked / (met + ledger.blocked)) : 0,
     worstImbalance: ledger.worstImbalance,
   };
-}
-
-/** Concentration of a disc on its hot spot at distances along the focal axis, from one bundle. */
-export function concentrationAlongAxis(traced: TracedOptic, diameterM: number, distancesM: readonly number[]): { readonly distanceM: number; readonly concentration: number }[] {
-  const finder = new SpotFinder(traced.bundle.capacity);
-  const hits = emptyHits(traced.bundle.capacity);
-  const area = (Math.PI / 4) * diameterM * diameterM;
-  return distancesM.map((distanceM) => {
-    const plane = naturalPlane(traced, distanceM);
-    cutPlane(traced.bundle, plane, hits);
-    const spot = finder.find(hits, diameterM / 2, lineHint(traced, plane, hits, null));
-    const power = spot && spot.radius === diameterM / 2 ? spot.power : 0;
-    const wide = spot ? spot.power / (Math.PI * spot.radius * spot.radius) : 0;
-    return { distanceM, concentration: digits(power > 0 ? power / area : wide, 4) };
-  });
-}
-
-/** Nearest and farthest distance at which a table of concentrations reaches a threshold; null if it never does. */
-export function dangerZone(table: readonly { readonly distanceM: number; readonly concentration: number }[], thresholdSuns: number): { readonly nearM: number; readonly farM: number } | null {
-  const crossing = (a: { distanceM: number; concentration: number }, b: { distanceM: number; concentration: number }): number =>
-    a.distanceM + ((thresholdSuns - a.concentration) / (b.concentration - a.concentration)) * (b.distanceM - a.distanceM);
-  const hot = table.map((p, i) => (p.concentration >= thresholdSuns ? i : -1)).filter((i) => i >= 0);
-  const first = hot[0];
-  const last = hot[hot.length - 1];
-  if (first === undefined || last === undefined) return null;
-  const [before, near, far, after] = [table[first - 1], table[first], table[last], table[last + 1]];
-  if (!near || !far) return null;
-  return { nearM: digits(before ? crossing(before, near) : near.distanceM), farM: digits(after ? crossing(far, after) : far.distanceM) };
-}
-
-/** Central ray of the optic, in ENU: direction in which its light goes on. */
-export function chiefDirection(traced: TracedOptic): Vector {
-  return scale(toGlobal(traced.kernel.frame, traced.kernel.chiefDirection), 1);
 }

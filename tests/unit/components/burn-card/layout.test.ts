@@ -4,6 +4,7 @@ import { headerSpan } from '#app/components/burn-card/model.ts';
 import type { BurnCardModel, BurnRun } from '#app/components/burn-card/model.ts';
 import { separateStretches, slotHalfHeightPx } from '#app/components/burn-card/slots.ts';
 import { daySpan } from '#app/components/burn-card/wall-clock.ts';
+import { textWidthPx } from '#app/components/charts/text-width.ts';
 import { burnCardSentence } from '#app/components/burn-card/words.ts';
 
 const at = (clock: string, day = '2026-02-03') => `${day}T${clock}:00.000Z`;
@@ -102,9 +103,15 @@ describe('layoutBurnCard', () => {
       const titles = layout.labels.filter((label) => label.sizePx === 13);
       expect(titles.some((label) => label.text === 'Sunlit, 30 min')).toBe(true);
       expect(titles.some((label) => label.text === "Can't tell, 12 min")).toBe(true);
-      for (const label of layout.labels.filter((one) => one.anchor === 'middle')) {
-        expect(label.x).toBeGreaterThan(0);
-        expect(label.x).toBeLessThan(width);
+      const extents = layout.labels.map((label) => {
+        const length = textWidthPx(label.text, label.sizePx, label.bold);
+        const x1 = label.x - { start: 0, middle: length / 2, end: length }[label.anchor];
+        return { y: label.y, x1, x2: x1 + length };
+      });
+      for (const [index, one] of extents.entries()) {
+        expect(one.x1).toBeGreaterThanOrEqual(-1);
+        expect(one.x2).toBeLessThanOrEqual(width + 1);
+        for (const other of extents.slice(index + 1).filter((two) => two.y === one.y)) expect(Math.min(one.x2, other.x2) - Math.max(one.x1, other.x1)).toBeLessThan(0);
       }
     }
   });

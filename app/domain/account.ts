@@ -1,0 +1,47 @@
+import { z } from 'zod';
+import { roles } from './roles.ts';
+
+/** NIST SP 800-63B, 5.1.1.2, asks for eight or more and no rules of composition; we ask for twelve. */
+export const shortestPassword = 12;
+export const longestPassword = 200;
+
+export const emailField = z
+  .string()
+  .trim()
+  .toLowerCase()
+  .max(254, 'This address is too long.')
+  .pipe(z.email('Write the whole e-mail address, like name@example.org.'));
+
+export const newPasswordField = z
+  .string()
+  .min(shortestPassword, `Use at least ${shortestPassword} characters. A few unrelated words are easy to keep in mind.`)
+  .max(longestPassword, `Use at most ${longestPassword} characters.`);
+
+export const signInSchema = z.object({
+  intent: z.literal('sign-in'),
+  email: emailField,
+  password: z.string().min(1, 'Type your password.').max(longestPassword, 'No password here is that long.'),
+});
+
+export const forgottenSchema = z.object({ intent: z.literal('send-link'), email: emailField });
+export const chosenPasswordSchema = z.object({ intent: z.literal('set-password'), password: newPasswordField });
+
+export const accountSchema = z.discriminatedUnion('intent', [
+  z.object({ intent: z.literal('change-password'), currentPassword: z.string().min(1, 'Type the password you use now.'), password: newPasswordField }),
+  z.object({ intent: z.literal('change-units'), units: z.enum(['metric', 'us']) }),
+  z.object({ intent: z.literal('sign-out-everywhere') }),
+]);
+
+export const inviteSchema = z.object({
+  intent: z.literal('invite'),
+  displayName: z.string().trim().min(2, 'Write the name of the person.').max(120, 'Use at most 120 characters.'),
+  email: emailField,
+  role: z.enum(roles, 'Choose a role.'),
+  siteId: z.union([z.uuid(), z.literal('')]).default(''),
+});
+
+/** Only addresses within the product, so that a link cannot lead a person elsewhere after signing in. */
+export function safeNext(next: string | null): string | null {
+  if (!next || !/^\/(?![/\\])/u.test(next)) return null;
+  return next.startsWith('/sign-') ? null : next;
+}

@@ -1,0 +1,125 @@
+import type { Assumption, OpeningInput, ReconstructionInput } from '#app/physics/model.ts';
+import { readMark, requiredSunFor, type Mark, type RequiredSun } from '#app/physics/alignment.ts';
+import { lowestHarmfulFluxKwm2 } from '#app/physics/heating/outcomes.ts';
+import type { TargetMaterial } from '#app/physics/heating/target-material.ts';
+import { targetMaterials } from '#app/physics/heating/target-materials.data.ts';
+import { spannedDeg, surveySigmaM, type Scene } from '#app/physics/lit.ts';
+import type { FocusModel } from '#app/physics/optics/closed-form/beam.ts';
+import { focusModelOf } from '#app/physics/optics/closed-form/focus-model.ts';
+import { measuredOpticSigmaRel, slopeErrors } from '#app/physics/optics/optic-defaults.data.ts';
+import { refractiveMaterials } from '#app/physics/optics/refractive-materials.data.ts';
+import { focusesForward, reachOf, type Reach } from '#app/physics/reach.ts';
+import { settleSite, type Site } from '#app/physics/site.ts';
+import { openingTransmittance, readDniSeries, type DniSeries } from '#app/physics/sky/direct-beam.ts';
+import { clearSkyAt } from '#app/physics/sky/clear-sky.ts';
+import { extraterrestrialWm2 } from '#app/physics/sky/extraterrestrial.ts';
+import { readSkyline } from '#app/physics/skyline.ts';
+import { minutesIn, sunTrack, type SunMinute } from '#app/physics/sun-track.ts';
+import { halfAngleRad } from '#app/physics/sun/sun-disc.ts';
+import { inRange, parseUtc } from '#app/physics/units.ts';
+
+/** A reconstruction with its input read, checked and completed. */
+export interface Setting {
+  readonly input: ReconstructionInput;
+  readonly site: Site;
+  readonly startMs: number;
+  readonly endMs: number;
+  readonly track: readonly SunMinute[];
+  readonly series: DniSeries | null;
+  readonly opening: OpeningInput | undefined;
+  readonly model: FocusModel | null;
+  readonly mark: Mark | null;
+  readonly required: RequiredSun | null;
+  readonly reach: Reach | null;
+  readonly scene: Scene;
+  readonly material: TargetMaterial | null;
+  readonly opticSigmaRel: number;
+  readonly assumptions: readonly Assumption[];
+}
+
+const longestWindowDays = 62;
+
+function readWindow(input: ReconstructionInput): { readonly startMs: number; readonly endMs: number } {
+  const startMs = parseUtc(input.window.startUtc, 'window.startUtc');
+  const endMs = parseUtc(input.window.endUtc, 'window.endUtc');
+  if (endMs < startMs) throw new RangeError('window.startUtc and window.endUtc disagree: the window ends before it starts.');
+  inRange('length of the window', (endMs - startMs) / 86_400_000, 0, longestWindowDays, 'days');
+  inRange('year of window.startUtc', new Date(startMs).getUTCFullYear(), 1900, 2100);
+  return { startMs, endMs };
+}
+
+function checkPlace({ place }: ReconstructionInput): void {
+  inRange('place.latitudeDeg', place.latitudeDeg, -90, 90, '°');
+  inRange('place.longitudeDeg', place.longitudeDeg, -180, 180, '°');
+  inRange('place.elevationM', place.elevationM, -500, 9000, 'm');
+  inRange('place.heightAboveGroundM', place.heightAboveGroundM, 0, 1000, 'm');
+}
+
+/** Class values that the closed forms take for what the input left open. */
+function opticAssumptions(input: ReconstructionInput): Assumption[] {
+  const { optic } = input;
+  if (optic === undefined) return [];
+  const list: Assumption[] = [];
+  if (optic.slopeErrorMrad === undefined) {
+    const row = slopeErrors[optic.kind];
+    list.push({ field: 'optic.slopeErrorMrad', value: `${row.slopeErrorMrad} mrad`, source: row.source });
+  }
+  if ('material' in optic && optic.material.name !== 'explicit') {
+    const row = refractiveMaterials[optic.material.name];
+    list.push({ field: 'optic.material', value: `${row.name}, index ${row.refractiveIndex}`, source: row.source });
+  }
+  if (input.opticSigmaRel === undefined) {
+    list.push({ field: 'opticSigmaRel', value: `${measuredOpticSigmaRel}`, source: { text: 'taken as measured on site, common practice', verified: true } });
+  }
+  return list;
+}
+
+/** Reach of the beam of the required sun in the cleanest air. */
+function settleReach(input: ReconstructionInput, site: Site, model: FocusModel, mark: Mark, required: RequiredSun | null, material: TargetMaterial | null, track: readonly SunMinute[]): Reach | null {
+  const nearest = track.reduce<SunMinute | null>((best, sun) => (best === null || sun.apparentElevationDeg > best.apparentElevationDeg ? sun : best), null);
+  const distanceAu = nearest?.distanceAu ?? 1;
+  const halfAngle = halfAngleRad(distanceAu);
+  const beam = (required === null ? null : model.beamFor(required.towards, halfAngle)) ?? (nearest === null ? null : model.beamFor(nearest.towardsSun, halfAngle));
+  if (beam === null) return null;
+  const elevationDeg = Math.max(required?.apparentElevationDeg ?? 30, 5);
+  const clear = clearSkyAt(elevationDeg, extraterrestrialWm2(distanceAu, site.air.solarConstantWm2), input.place.elevationM, site.air);
+  const glass = openingTransmittance(input.opening, required?.azimuthDeg ?? input.opening?.azimuthDeg ?? 0, elevationDeg);
+  return reachOf(beam, mark, (clear?.boundWm2 ?? 1000) * glass, lowestHarmfulFluxKwm2(material, site.air.temperatureC));
+}
+
+/**
+ * Reads and completes an input.
+ *
+ * @throws RangeError naming the field, its value and the allowed interval, or the two fields that contradict each other.
+ */
+export function settle(input: ReconstructionInput): Setting {
+  checkPlace(input);
+  const { startMs, endMs } = readWindow(input);
+  const site = settleSite(input);
+  const track = sunTrack(site.observer, startMs, minutesIn(startMs, endMs));
+  const model = input.optic === undefined ? null : focusModelOf(input.optic);
+  const mark = input.mark === undefined ? null : readMark(input.mark);
+  const material = input.target === undefined ? null : targetMaterials.get(input.target.materialId) ?? null;
+  if (input.target !== undefined && material === null) {
+    throw new RangeError(`target.materialId is "${input.target.materialId}"; it must be one of ${[...targetMaterials.keys()].join(', ')}.`);
+  }
+  const surveyDeg = mark === null ? 0 : 2 * spannedDeg(surveySigmaM(mark), mark.distanceM);
+  const required = model === null || mark === null || model.moves ? null : requiredSunFor(model, mark.towards, site.observer, surveyDeg);
+  const reach = model === null || mark === null || !focusesForward(model) ? null : settleReach(input, site, model, mark, required, material, track);
+  const skylineAssumption: Assumption[] = input.skyline === undefined
+    ? [{ field: 'skyline', value: 'level horizon', source: { text: 'no skyline recorded', verified: true } }]
+    : [];
+  return {
+    input, site, startMs, endMs, track, model, mark, required, reach, material,
+    series: readDniSeries(input.sky),
+    opening: input.opening,
+    opticSigmaRel: input.opticSigmaRel ?? measuredOpticSigmaRel,
+    scene: {
+      dipDeg: site.dipDeg,
+      skyline: input.skyline === undefined || input.skyline.points.length === 0 ? null : readSkyline(input.skyline),
+      skylineSigmaDeg: input.skyline?.sigmaDeg ?? 0,
+      opening: input.opening, model, mark, reach,
+    },
+    assumptions: [...site.assumptions, ...opticAssumptions(input), ...skylineAssumption],
+  };
+}
