@@ -1,6 +1,4 @@
-import { pino } from 'pino';
 import { closeDatabase } from '#db/client.server.ts';
-import { env } from '#app/env.server.ts';
 import { preparePhotoJob } from '#app/jobs/definitions/prepare-photo.ts';
 import { runReconstructionJob } from '#app/jobs/definitions/run-reconstruction.ts';
 import { sendMailJob } from '#app/jobs/definitions/send-mail.ts';
@@ -9,11 +7,10 @@ import { preparePhoto } from '#app/jobs/handlers/prepare-photo.server.ts';
 import { runReconstruction } from '#app/jobs/handlers/run-reconstruction.server.ts';
 import { sendDueMail } from '#app/jobs/handlers/send-mail.server.ts';
 import { handle, stopQueue } from '#app/jobs/queue.server.ts';
+import { log } from '#app/log.server.ts';
 import { purgeAbandonedPhotos } from '#app/services/photos/purge-abandoned-photos.server.ts';
 
 /** The second process: jobs from the queue, and what has to be looked at from time to time. */
-const log = pino({ level: env.LOG_LEVEL, name: 'worker' });
-
 const second = 1_000;
 const timers: NodeJS.Timeout[] = [];
 

@@ -1,3 +1,4 @@
+import { fileURLToPath } from 'node:url';
 import { drizzle } from 'drizzle-orm/postgres-js';
 import { migrate } from 'drizzle-orm/postgres-js/migrator';
 import postgres from 'postgres';
@@ -7,7 +8,7 @@ import { env } from '#app/env.server.ts';
 const client = postgres(env.DATABASE_URL, { max: 1, onnotice: () => undefined });
 try {
   await client`select pg_advisory_lock(hashtext('scorchline migrations'))`;
-  await migrate(drizzle(client), { migrationsFolder: new URL('./migrations', import.meta.url).pathname });
+  await migrate(drizzle(client), { migrationsFolder: fileURLToPath(new URL('./migrations', import.meta.url)) });
 } finally {
   await client.end();
 }

@@ -58,6 +58,7 @@ export const exampleInput: ReconstructionInput = {
   },
   target: { materialId: 'curtain-fabric', solarAbsorptance: 0.35, thicknessM: 0.0003 },
   recurrenceFromUtc: '2025-03-13T00:00:00Z',
+  recurrenceToUtc: '2026-03-13T00:00:00Z',
   rays: 100_000,
   samples: 4096,
   seed: 20250312,

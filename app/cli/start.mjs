@@ -121,13 +121,10 @@ function announce(url, plan) {
   console.log('\n  Ctrl-C stops everything.\n');
 }
 
+/** Written by whatever filled in the demonstration, since only that knows the people it invented. */
 function demoSignIns(plan) {
-  const written = join(plan.dataDir, 'demo-sign-ins.txt');
-  if (existsSync(written)) return readFileSync(written, 'utf8').trimEnd().replace(/^/gm, '  ');
-  const invented = join(root, 'fixtures', 'demo', 'sign-ins.json');
-  if (!existsSync(invented)) return '';
-  const lines = JSON.parse(readFileSync(invented, 'utf8')).map(({ role, email, password }) => `  ${role.padEnd(16)} ${email.padEnd(36)} ${password}`);
-  return ['  Demonstration sign-ins:', ...lines].join('\n');
+  const file = [plan.dataDir, join(root, '.data')].map((folder) => join(folder, 'demo-sign-ins.txt')).find((path) => existsSync(path));
+  return file ? ['Demonstration sign-ins:', ...readFileSync(file, 'utf8').trimEnd().split('\n')].map((line) => `  ${line}`).join('\n') : '';
 }
 
 /** Waits for as long as all parts run. */

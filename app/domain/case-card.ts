@@ -1,7 +1,8 @@
-import type { MinuteReason, ReconstructionResult } from '#app/physics/model.ts';
+import type { ReconstructionResult } from '#app/physics/model.ts';
 import { daylightOn } from '#app/physics/sun/daylight.ts';
 import { nextDay } from '#app/physics/sun/zone-days.ts';
 import { fromLocalInput, localDay } from './local-time.ts';
+import { minuteReasonWords } from './run-words.ts';
 
 /** What a burn card draws, as plain JSON: `BurnCardModel` of the components. */
 export interface CardView {
@@ -42,20 +43,6 @@ export type CardResult = Pick<ReconstructionResult, 'runs'> & {
   readonly window: { readonly startUtc: string; readonly endUtc: string };
   /** Sunlit minutes with a flux; empty for small cards. */
   readonly flux: readonly { readonly atUtc: string; readonly kwm2: number }[];
-};
-
-const reasonWords: Record<MinuteReason, string> = {
-  'sun-on-mark': 'the beam lands on the mark',
-  night: 'sun below the horizon',
-  'near-horizon': 'sun too near the horizon',
-  'below-skyline': 'behind the skyline',
-  'outside-opening': 'outside the opening',
-  'wrong-side': 'sun on the other side',
-  'beam-misses': 'beam misses the mark',
-  'uncertainty-straddles': 'uncertainty straddles',
-  'skyline-unknown': 'skyline not known',
-  'optic-unknown': 'optic not known',
-  'mark-unknown': 'mark not known',
 };
 
 interface Stretch {
@@ -113,7 +100,7 @@ function undecidedRuns(window: Stretch | null, daylight: CardView['daylight']): 
 }
 
 function runsOf(result: CardResult): CardRun[] {
-  return result.runs.map((run) => ({ fromUtc: run.fromUtc, toUtc: run.toUtc, verdict: run.verdict, reasonWords: reasonWords[run.reason] }));
+  return result.runs.map((run) => ({ fromUtc: run.fromUtc, toUtc: run.toUtc, verdict: run.verdict, reasonWords: minuteReasonWords[run.reason] }));
 }
 
 /** The large card of a case: its whole window. The span is the window's; the header adds its margins. */
@@ -156,7 +143,9 @@ export function dayCard(facts: CardCase, result: CardResult | null, { fromHour, 
   const at = (hour: number) => (hour === 24 ? startOf(nextDay(day), facts.zone) : localMoment(`${day}T${String(hour).padStart(2, '0')}:00`, facts.zone).toISOString());
   const span = { startUtc: at(fromHour), endUtc: at(toHour) };
   const light = daylightOf([day], facts);
-  const window = clipped(result?.window ?? statedWindow(facts), span);
+  const stated = result?.window ?? statedWindow(facts);
+  // Left whole where it touches the day, so that no end bar is drawn at a midnight on which nothing ended.
+  const window = clipped(stated, span) ? stated : null;
   const runs = result ? runsOf(result) : undecidedRuns(window, light.daylight);
   const foundAtUtc = facts.foundAt?.toISOString() ?? null;
   return {
@@ -183,9 +172,21 @@ function clipped(stretch: Stretch | null, span: Stretch): Stretch | null {
   return startUtc < endUtc ? { startUtc, endUtc } : null;
 }
 
-/** Whether the window or the find of this day lies outside 04 to 22, so that all rows show the whole day. */
+/** Whether an end of the window, or the find, lies on the day of the card but outside 04 to 22; then all rows show the whole day. */
 export function needsWholeDay(facts: CardCase, result: CardResult | null): boolean {
   const whole = dayCard(facts, result, { fromHour: 0, toHour: 24 });
   const usual = dayCard(facts, result, { fromHour: 4, toHour: 22 });
-  return whole.window?.startUtc !== usual.window?.startUtc || whole.window?.endUtc !== usual.window?.endUtc || whole.foundAtUtc !== usual.foundAtUtc;
+  const moments = [whole.window?.startUtc, whole.window?.endUtc, facts.foundAt?.toISOString()];
+  return moments.some((utc) => utc !== undefined && utc >= whole.fromUtc && utc <= whole.toUtc && (utc < usual.fromUtc || utc > usual.toUtc));
+}
+
+/** Today at a place: daylight, and the sunlit stretch where one is known. Without a run the daylight is left open. */
+export function todayCard(facts: { readonly zone: string; readonly latitudeDeg: number; readonly longitudeDeg: number; readonly elevationM: number; readonly now: Date; readonly sunlit: { readonly fromAt: Date; readonly toAt: Date } | null; readonly decided: boolean }): CardView {
+  const day = localDay(facts.now, facts.zone);
+  const whole = { startUtc: startOf(day, facts.zone), endUtc: startOf(nextDay(day), facts.zone) };
+  const asCase: CardCase = { ...facts, onsetEarliestAt: new Date(whole.startUtc), onsetLatestAt: new Date(whole.endUtc), foundAt: null, reportedAt: facts.now };
+  const card = dayCard({ ...asCase, onsetEarliestAt: null, onsetLatestAt: null }, null, { fromHour: 4, toHour: 22 });
+  if (!facts.decided) return { ...card, window: whole, runs: undecidedRuns(whole, card.daylight) };
+  const runs = facts.sunlit ? [{ fromUtc: facts.sunlit.fromAt.toISOString(), toUtc: facts.sunlit.toAt.toISOString(), verdict: 'sunlit' as const, reasonWords: reasonWords['sun-on-mark'] }] : [];
+  return { ...card, window: whole, runs };
 }

@@ -38,6 +38,8 @@ export interface RegisterRowView {
   readonly returnWords: string;
   readonly waitsFor: string;
   readonly position: { readonly latitudeDeg: number; readonly longitudeDeg: number };
+  /** Where the sun stood in the middle of the longest sunlit stretch, from true north clockwise; null without a run. */
+  readonly sunAzimuthDeg: number | null;
 }
 
 export interface RegisterView {
@@ -192,4 +194,53 @@ export interface CaseAccountView {
   readonly moves: CaseMovesView;
   readonly log: readonly LogLineView[] | null;
   readonly logCount: number;
+}
+
+export interface SimilarCaseView {
+  readonly row: RegisterRowView;
+  /** "same site", "same kind of optic", "same time of year". */
+  readonly reasons: readonly string[];
+  readonly consequence: string | null;
+  readonly likelihood: string | null;
+}
+
+export interface WaitingCaseView {
+  readonly number: number;
+  readonly title: string;
+  readonly place: string;
+  readonly state: CaseState;
+  readonly clockWords: string;
+  readonly group: 'hazard' | 'first-look' | 'reporter';
+}
+
+export interface SunOnItView {
+  /** Plain words: on it now, next, or why that is not known. */
+  readonly words: string;
+  readonly skyWords: string;
+  /** Today at the place, with a cursor at now. */
+  readonly card: CardView & { readonly cursorUtc: string | null };
+  readonly basis: string;
+  /** Whether today's minutes can be worked out on request. */
+  readonly mayWorkOut: boolean;
+}
+
+export interface TriageView {
+  readonly version: number;
+  readonly state: CaseState;
+  readonly hazard: { readonly answer: string; readonly words: string };
+  readonly account: Pick<CaseAccountView, 'narrative' | 'sentWords' | 'question'>;
+  readonly photos: readonly PhotoStripView[];
+  readonly photoCount: number;
+  /** Stored values of the facts form, as its fields show them. */
+  readonly facts: Readonly<Record<string, string>>;
+  readonly mayEdit: boolean;
+  readonly investigators: readonly { readonly userId: string; readonly name: string }[] | null;
+  readonly investigatorId: string;
+  readonly warnings: readonly string[];
+  readonly sun: SunOnItView;
+  readonly similar: readonly SimilarCaseView[];
+  readonly waiting: readonly WaitingCaseView[];
+  readonly moves: CaseMovesView;
+  readonly proposedAnswerDay: string;
+  readonly hurtWords: string | null;
 }

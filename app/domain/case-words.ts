@@ -42,9 +42,10 @@ export function returnView(at: Date | null, zone: string, now: Date): ReturnView
 }
 
 /** In place of a return that is not known, or that no longer matters. */
-export function noReturnWords(facts: { readonly state: CaseState; readonly duplicateOfNumber: number | null; readonly attachedRun: boolean; readonly sunlightRuledOut: boolean }): string {
+export function noReturnWords(facts: { readonly state: CaseState; readonly duplicateOfNumber: number | null; readonly attachedRun: boolean; readonly returnsListed: boolean; readonly sunlightRuledOut: boolean }): string {
   if (facts.state === 'duplicate' && facts.duplicateOfNumber !== null) return `see ${facts.duplicateOfNumber}`;
   if (facts.sunlightRuledOut) return 'not applicable';
+  if (facts.returnsListed) return 'after the listed year';
   return facts.attachedRun ? 'no fixed return' : 'not known yet';
 }
 

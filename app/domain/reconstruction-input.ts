@@ -1,5 +1,7 @@
 import type { MarkInput, OpeningInput, ReconstructionInput, SkyInput, SkylineInput, TargetInput } from '#app/physics/model.ts';
 import { openingTransmittance } from './optic-class-values.ts';
+import { formatDayClock } from './local-time.ts';
+import { measureMethodLabels, targetMaterialLabels } from './scene.ts';
 import type { Measured, Scene, SceneSkyline } from './scene.ts';
 import { readOptic } from './scene-optic.ts';
 import type { InputOrigin } from './scene-optic.ts';
@@ -35,7 +37,7 @@ export const longestWindowDays = 14;
 /** One sigma of the clock by how well the time is known. [s] */
 const clockSigmaS: Record<string, number> = { exact: 60, 'within-15-min': 450, 'within-1-h': 1800, 'date-only': 3600, unknown: 3600 };
 
-function windowOf(times: SceneTimes, origins: InputOrigin[], missing: string[]): ReconstructionInput['window'] | null {
+function windowOf(times: SceneTimes, zone: string, origins: InputOrigin[], missing: string[]): ReconstructionInput['window'] | null {
   // The reading that found the mark is corrected by the known error of its clock; typed onset times are true times.
   const correctedFoundAt = times.foundAt ? new Date(times.foundAt.getTime() - times.foundClockErrorS * 1000) : null;
   const end = times.onsetLatestAt ?? correctedFoundAt;
@@ -44,23 +46,30 @@ function windowOf(times: SceneTimes, origins: InputOrigin[], missing: string[]):
     return null;
   }
   let start = times.onsetEarliestAt;
-  if (start) origins.push({ field: 'Window', value: `${start.toISOString()} to ${end.toISOString()}`, origin: 'reported', note: 'last seen sound to latest onset', verified: true });
+  if (start) origins.push({ field: 'Window', value: `${formatDayClock(start, zone)} to ${formatDayClock(end, zone)}`, origin: 'reported', note: 'last seen sound to latest onset', verified: true });
   else {
     start = new Date(end.getTime() - backwardSearchMs);
-    origins.push({ field: 'Window', value: '8 hours back', origin: 'assumed', note: 'nobody is recorded as having seen the place sound; smouldering can hide for hours', verified: true });
+    origins.push({ field: 'Start of the window', value: '8 hours back', origin: 'assumed', note: 'nobody is recorded as having seen the place sound; smouldering can hide for hours', verified: true });
   }
   if (end.getTime() - start.getTime() > longestWindowDays * 24 * hourMs) {
     start = new Date(end.getTime() - longestWindowDays * 24 * hourMs);
-    origins.push({ field: 'Window', value: `last ${longestWindowDays} days`, origin: 'assumed', note: 'longer windows are cut; narrow it if you can', verified: true });
+    origins.push({ field: 'Window, cut', value: `last ${longestWindowDays} days`, origin: 'assumed', note: 'longer windows are cut; narrow it if you can', verified: true });
+  }
+  if (end.getTime() - start.getTime() < 60_000) {
+    missing.push('Mend the times: the earliest onset must lie before the latest onset, and before the mark was found.');
+    return null;
   }
   return { startUtc: wholeMinute(start), endUtc: wholeMinute(end), clockSigmaS: clockSigmaS[times.foundPrecision] ?? 3600 };
 }
+
+const movedWords = { yes: 'yes', no: 'no', 'dont-know': 'not known' } as const;
+const movedNotes = { yes: 'the pose is that of the day it was measured', no: '', 'dont-know': 'taken as not moved' } as const;
 
 const wholeMinute = (at: Date): string => new Date(Math.floor(at.getTime() / 60_000) * 60_000).toISOString();
 
 function note(origins: InputOrigin[], field: string, measured: Measured, unit: string): void {
   const origin = measured.method === 'assumed' ? 'assumed' : measured.method === 'reported' || measured.method === 'estimated' ? 'reported' : 'measured';
-  origins.push({ field, value: `${measured.value}${measured.plusMinus === undefined ? '' : ` ±${measured.plusMinus}`} ${unit}`, origin, note: measured.method, verified: true });
+  origins.push({ field, value: `${measured.value}${measured.plusMinus === undefined ? '' : ` ±${measured.plusMinus}`} ${unit}`, origin, note: measureMethodLabels[measured.method].toLowerCase(), verified: true });
 }
 
 /** Uncertainty where none was written down: what the method is worth. */
@@ -125,7 +134,7 @@ function skylineOf(scene: Scene, site: SceneSite, origins: InputOrigin[], missin
 
 function skyOf(scene: Scene, origins: InputOrigin[]): SkyInput {
   const { air } = scene;
-  origins.push({ field: 'Air class', value: air.climateClass, origin: 'assumed', note: 'median of a climate class, not of the day', verified: true });
+  origins.push({ field: 'Air class', value: air.climateClass.replaceAll('-', ' '), origin: 'assumed', note: 'median of a climate class, not of the day', verified: true });
   if (air.dni) origins.push({ field: 'Direct irradiance', value: `${air.dni.values.length} values`, origin: 'measured', note: air.dni.source, verified: true });
   return {
     climateClass: air.climateClass,
@@ -140,7 +149,7 @@ function targetOf(scene: Scene, origins: InputOrigin[], missing: string[]): Targ
     missing.push('Say what the target is made of.');
     return undefined;
   }
-  origins.push({ field: 'Target', value: scene.target.material, origin: 'reported', note: scene.target.colour ?? 'colour not stated', verified: true });
+  origins.push({ field: 'Target', value: targetMaterialLabels[scene.target.material].toLowerCase(), origin: 'reported', note: scene.target.colour ?? 'colour not stated', verified: true });
   return { materialId: scene.target.material, ...(scene.target.thicknessMm ? { thicknessM: scene.target.thicknessMm.value / 1000 } : {}) };
 }
 
@@ -155,7 +164,7 @@ export function reconstructionInput(source: { scene: Scene; site: SceneSite; tim
   const { scene, site, times } = source;
   const origins: InputOrigin[] = [];
   const missing: string[] = [];
-  const window = windowOf(times, origins, missing);
+  const window = windowOf(times, site.zone, origins, missing);
   const reading = readOptic(scene.optic);
   missing.push(...reading.missing);
   const mark = markOf(scene, origins, missing);
@@ -163,8 +172,10 @@ export function reconstructionInput(source: { scene: Scene; site: SceneSite; tim
   const skyline = skylineOf(scene, site, origins, missing);
   const target = targetOf(scene, origins, missing);
   const sky = skyOf(scene, origins);
-  if (!window) return { input: null, origins: [...reading.origins, ...origins], missing };
   const height = scene.optic.heightAboveGroundM;
+  if (height) note(origins, 'Height above the ground', height, 'm');
+  if (scene.optic.kind !== 'dont-know') origins.push({ field: 'Moved since', value: movedWords[scene.optic.movedSince], origin: 'reported', note: movedNotes[scene.optic.movedSince], verified: true });
+  if (!window) return { input: null, origins: [...reading.origins, ...origins], missing };
   return {
     origins: [...reading.origins, ...origins],
     missing,

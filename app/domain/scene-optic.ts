@@ -3,6 +3,7 @@ import {
   classCentreBowM, classFresnelTransmittance, classLensFocalRatio, classMirrorRadiusM, classReflectance, classTelescopeTransmittance, opticSigma,
 } from './optic-class-values.ts';
 import type { ClassValue } from './optic-class-values.ts';
+import { measureMethodLabels } from './scene.ts';
 import type { Measured, SceneOptic } from './scene.ts';
 
 /** Where a value of the engine's input came from. */
@@ -45,13 +46,13 @@ class Reader {
       this.note(field, measured, unit);
       return measured.value * unitM;
     }
-    this.origins.push({ field, value: `${classValue.value / unitM} ${unit}`.trim(), origin: 'assumed', note: classValue.source, verified: classValue.verified });
+    this.origins.push({ field, value: `${Number((classValue.value / unitM).toPrecision(3))} ${unit}`.trim(), origin: 'assumed', note: classValue.source, verified: classValue.verified });
     return classValue.value;
   }
 
   note(field: string, measured: Measured, unit: string): void {
     const origin = measured.method === 'assumed' ? 'assumed' : measured.method === 'reported' || measured.method === 'estimated' ? 'reported' : 'measured';
-    this.origins.push({ field, value: `${measured.value}${measured.plusMinus === undefined ? '' : ` ±${measured.plusMinus}`} ${unit}`.trim(), origin, note: measured.method, verified: true });
+    this.origins.push({ field, value: `${measured.value}${measured.plusMinus === undefined ? '' : ` ±${measured.plusMinus}`} ${unit}`.trim(), origin, note: measureMethodLabels[measured.method].toLowerCase(), verified: true });
   }
 
   assume(field: string, value: string, note: string): void {
@@ -228,5 +229,8 @@ export function readOptic(scene: SceneOptic): OpticReading {
   const reader = new Reader();
   if (scene.kind === 'dont-know') return { optic: null, sigmaRel: opticSigma.classValue, origins: [], missing: ['Say what kind of optic it was.'] };
   const optic = builders[scene.kind](reader, scene);
+  if (reader.sigmaRel === opticSigma.classValue) {
+    reader.origins.push({ field: 'Spread of the optic', value: `±${opticSigma.classValue * 100} %`, origin: 'assumed', note: 'focal length or radius is a class value; from memory', verified: false });
+  }
   return { optic, sigmaRel: reader.sigmaRel, origins: reader.origins, missing: reader.missing };
 }

@@ -3,13 +3,15 @@ import type { Beam, FocusModel } from '#app/physics/optics/closed-form/beam.ts';
 import { airlessElevationDeg } from '#app/physics/sun/refraction.ts';
 import { declinationOf, type Observer } from '#app/physics/sun/solar-position.ts';
 import { degree, wrap180 } from './units.ts';
-import { add, azimuthOf, dot, elevationOf, fromAzimuthElevation, lengthOf, scale, subtract, type Vector } from './vector.ts';
+import { add, azimuthOf, dot, elevationOf, fromAzimuthElevation, lengthOf, scale, subtract, unit, type Vector } from './vector.ts';
 
-/** A surveyed mark relative to the optic's origin. */
+/** A surveyed mark, seen from the point from which the chief ray starts. */
 export interface Mark {
   readonly towards: Vector;
   readonly distanceM: number;
   readonly position: Vector;
+  /** As surveyed, from the optic's origin. [m] */
+  readonly surveyed: Vector;
   /** One sigma across the line of sight, level and upright, and along it. [m] */
   readonly sigmaLevelM: number;
   readonly sigmaUprightM: number;
@@ -21,13 +23,17 @@ export interface Mark {
   readonly normal: Vector;
 }
 
-export function readMark(input: MarkInput): Mark {
-  const towards = fromAzimuthElevation(input.bearingDeg, input.elevationDeg);
+/** @param startsAt Where the chief ray starts, from the origin of the survey. [m] */
+export function readMark(input: MarkInput, startsAt: Vector): Mark {
+  const surveyed = scale(fromAzimuthElevation(input.bearingDeg, input.elevationDeg), input.distanceM);
+  const position = subtract(surveyed, startsAt);
+  const towards = unit(position);
   const faces = input.normalAzimuthDeg !== undefined || input.normalElevationDeg !== undefined;
   return {
     towards,
-    distanceM: input.distanceM,
-    position: scale(towards, input.distanceM),
+    distanceM: lengthOf(position),
+    position,
+    surveyed,
     sigmaLevelM: input.distanceM * Math.cos(input.elevationDeg * degree) * input.bearingSigmaDeg * degree,
     sigmaUprightM: input.distanceM * input.elevationSigmaDeg * degree,
     sigmaAxialM: input.distanceSigmaM,

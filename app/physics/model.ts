@@ -223,6 +223,30 @@ export interface FocusResult {
   /** Sunlit minutes that the found trail needs at least; null for a line focus, which carries no time. */
   readonly trailMinutesAtLeast: number | null;
   readonly dwellS: readonly { readonly thresholdKwm2: number; readonly seconds: Band }[];
+  /** What only the ray trace gives; null where the closed form alone was possible. */
+  readonly traced?: TracedFocusResult | null;
+}
+
+/** Figures of the ray trace at the best minute, in the plane that `plane` names. */
+export interface TracedFocusResult {
+  readonly rays: number;
+  /** Share of the power meeting the optic that leaves it towards the focus. */
+  readonly transmittedFraction: number;
+  /** Radii round the hot spot that hold half and four fifths of the power in the plane. */
+  readonly r50Mm: number;
+  readonly r80Mm: number;
+  /** Distance of the 5 mm hot spot from the mark; null without a mark. */
+  readonly hotSpotOffsetMm: number | null;
+  /** One-sigma noise of the 5 mm hot-spot concentration. */
+  readonly stdError: number;
+  /** Closed-form concentration on the same disc, for comparison. */
+  readonly closedForm: number;
+  /** Second, independent answer traced back from the target; `agrees` is false where the two differ by more than their errors. */
+  readonly backTraced: { readonly centre: 'hot spot' | 'mark'; readonly concentration: number; readonly stdError: number; readonly forward: number; readonly agrees: boolean } | null;
+  /** Sharpest distance for each disc. */
+  readonly bestPlanes: readonly { readonly disc: string; readonly distanceM: number; readonly concentration: number }[];
+  /** Concentration in suns on a square grid round the hot spot, row by row. */
+  readonly map: { readonly cells: number; readonly sizeMm: number; readonly suns: readonly number[] } | null;
 }
 
 /** One way in which the target may respond. The band is seconds of steady sun on one point. */

@@ -8,11 +8,13 @@ import { sampleAt, samplingResult } from '#app/physics/reconstruction/sampling-r
 import { settle, type Setting } from '#app/physics/reconstruction/setting.ts';
 import { gradeOf, summarise } from '#app/physics/reconstruction/test-summaries.ts';
 import { warningsOf } from '#app/physics/reconstruction/warnings.ts';
+import { traceAt, tracerAssumptions } from '#app/physics/reconstruction/traced-focus.ts';
 import { bestMinute, judgeWindow, minuteResults, minuteRuns, totalsOf } from '#app/physics/reconstruction/window.ts';
 import { recurrenceBands, yearMinutes } from './recurrence.ts';
 import { daylightOn } from '#app/physics/sun/daylight.ts';
+import { spotMotion } from './trail.ts';
 import { localDay, nextDay } from '#app/physics/sun/zone-days.ts';
-import { parseUtc, roundTo, toIsoUtc } from './units.ts';
+import { inRange, parseUtc, roundTo, toIsoUtc } from './units.ts';
 
 /** Least and greatest angular tolerance of the recurrence: the sun's radius, and what a rough survey may widen it to. [°] */
 const recurrenceToleranceDeg = [0.27, 2] as const;
@@ -36,6 +38,9 @@ function recurrenceOf(setting: Setting): ReconstructionResult['recurrence'] {
   const surveyDeg = spannedDeg(surveySigmaM(mark), mark.distanceM);
   const [least, most] = recurrenceToleranceDeg;
   const startMs = input.recurrenceFromUtc === undefined ? setting.endMs : parseUtc(input.recurrenceFromUtc, 'recurrenceFromUtc');
+  const endMs = input.recurrenceToUtc === undefined ? startMs + yearMinutes * 60_000 : parseUtc(input.recurrenceToUtc, 'recurrenceToUtc');
+  if (endMs <= startMs) throw new RangeError('recurrenceFromUtc and recurrenceToUtc disagree: the span must end after it starts.');
+  inRange('length of the recurrence span', (endMs - startMs) / 86_400_000, 0, 5 * 366, 'days');
   return recurrenceBands({
     observer: site.observer, zone: site.zone, required,
     startMs: Math.ceil(startMs / 60_000) * 60_000,
@@ -82,9 +87,13 @@ export function reconstruct(input: ReconstructionInput, onProgress: (done: numbe
   });
   const best = bestMinute(judged);
   const light = best === null ? null : lightAt(best, setting);
-  const sampling = best === null || light === null ? null : sampleAt(judged, best, light, setting);
+  const motion = best === null || setting.model === null || setting.mark === null ? null : spotMotion(setting.model, setting.mark, setting.site.observer, best.sun.utcMs);
+  const traced = best === null || best.beam === null ? null : traceAt(best, best.beam, motion, setting);
   onProgress(total - 3, total);
-  const focus = best === null || light === null || best.beam === null ? null : focusOf(best, best.beam, lightBand(light, sampling), sampling, setting);
+  const calibration = traced?.calibration ?? (() => 1);
+  const sampling = best === null || light === null ? null : sampleAt(judged, best, light, calibration, setting);
+  const parts = light === null ? null : { light: lightBand(light, sampling), sampling, traced, motion };
+  const focus = best === null || parts === null || best.beam === null ? null : focusOf(best, best.beam, parts, setting);
   const heating = heatingAt(focus, setting);
   onProgress(total - 2, total);
   const checks = contradictionChecks(setting, { judged, best, focus, heating, dwellAtBoundS: focus?.harmfulDwellS?.high ?? null });
@@ -98,7 +107,7 @@ export function reconstruct(input: ReconstructionInput, onProgress: (done: numbe
     seed: input.seed,
     window: { startUtc: toIsoUtc(setting.startMs), endUtc: toIsoUtc(setting.endMs), minutes: judged.length },
     daylight: daylightOf(setting),
-    minutes: minuteResults(judged, setting),
+    minutes: minuteResults(judged, calibration, setting),
     runs: minuteRuns(judged),
     totals: findings.totals,
     best: best === null ? null : bestMoment(best, setting),
@@ -115,7 +124,7 @@ export function reconstruct(input: ReconstructionInput, onProgress: (done: numbe
     tests,
     grade: gradeOf(setting, findings, tests),
     sampling: sampling === null ? null : samplingResult(sampling, setting),
-    assumptions: setting.assumptions,
+    assumptions: traced === null ? setting.assumptions : [...setting.assumptions, ...tracerAssumptions(traced)],
     warnings: warningsOf(setting, judged, best, light),
   };
 }

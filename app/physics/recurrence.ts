@@ -3,7 +3,7 @@ import type { RequiredSun } from './alignment.ts';
 import type { Skyline } from './skyline.ts';
 import { airlessElevationDeg, refractionDeg } from '#app/physics/sun/refraction.ts';
 import type { Observer } from '#app/physics/sun/solar-position.ts';
-import { scanSun } from '#app/physics/sun/sun-scan.ts';
+import { scanSun, type SunScan } from '#app/physics/sun/sun-scan.ts';
 import { localDay, nextDay } from '#app/physics/sun/zone-days.ts';
 import { degree, roundTo, toIsoUtc, wrap180 } from './units.ts';
 import { angleBetween, azimuthOf, elevationOf, fromAzimuthElevation, type Vector } from './vector.ts';
@@ -48,24 +48,33 @@ function nearMinutes(query: RecurrenceQuery): readonly NearMinute[] {
   const airlessRequired = fromAzimuthElevation(
     required.azimuthDeg, airlessElevationDeg(required.apparentElevationDeg, observer.pressureHpa, observer.temperatureC),
   );
-  const scan = scanSun(observer, query.startMs, minuteMs, query.minutes);
   // Refraction differs by a few tenths of a degree over the tolerance near the horizon; the coarse sieve allows for it.
   const sieve = Math.cos(reach + 0.6 * degree);
-  const [e, n, u] = airlessRequired;
-  const { east, north, up } = scan;
   const near: NearMinute[] = [];
+  // Year by year, so that a span of several years needs no more memory than one.
+  for (let first = 0; first < query.minutes; first += yearMinutes) {
+    const scan = scanSun(observer, query.startMs + first * minuteMs, minuteMs, Math.min(yearMinutes, query.minutes - first));
+    siftYear(scan, first, airlessRequired, sieve, (index, airless) => {
+      const elevation = elevationOf(airless);
+      const apparent = elevation + refractionDeg(elevation, observer.pressureHpa, observer.temperatureC);
+      const towards = fromAzimuthElevation(azimuthOf(airless), apparent);
+      const separation = angleBetween(towards, required.towards);
+      if (separation <= reach) near.push({ index, towards, separation });
+    });
+  }
+  return near;
+}
+
+/** Hands on the minutes whose airless sun passes the coarse sieve. */
+function siftYear(scan: SunScan, first: number, towards: Vector, sieve: number, pass: (index: number, airless: Vector) => void): void {
+  const [e, n, u] = towards;
+  const { east, north, up } = scan;
   for (let i = 0; i < scan.count; i++) {
     const x = east[i] ?? 0;
     const y = north[i] ?? 0;
     const z = up[i] ?? 0;
-    if (x * e + y * n + z * u < sieve) continue;
-    const airless = elevationOf([x, y, z]);
-    const apparent = airless + refractionDeg(airless, observer.pressureHpa, observer.temperatureC);
-    const towards = fromAzimuthElevation(azimuthOf([x, y, z]), apparent);
-    const separation = angleBetween(towards, required.towards);
-    if (separation <= reach) near.push({ index: i, towards, separation });
+    if (x * e + y * n + z * u >= sieve) pass(first + i, [x, y, z]);
   }
-  return near;
 }
 
 /** Closest approach between two neighbouring minutes: share of the step and separation there. */

@@ -12,18 +12,26 @@ export interface ConcentrationTable {
 const alongSteps = 28;
 const acrossSteps = 28;
 
-/** Table over [nearM, farM] and [0, widestM]; offsets are spaced by squares, so that the core is fine. */
-export function tabulate(beam: Beam, nearM: number, farM: number, widestM: number, discM: number): ConcentrationTable {
+/**
+ * Table over [nearM, farM] and [0, widestM]; offsets are spaced by squares, so that the core is fine.
+ *
+ * @param calibration Traced over closed-form concentration at a distance: the trace gives the height, the closed form
+ *   the shape across.
+ */
+export function tabulate(
+  beam: Beam, nearM: number, farM: number, widestM: number, discM: number, calibration: (distanceM: number) => number,
+): ConcentrationTable {
   const cells = new Float64Array((alongSteps + 1) * (acrossSteps + 1));
   for (let i = 0; i <= alongSteps; i++) {
     const z = nearM + ((farM - nearM) * i) / alongSteps;
+    const scale = calibration(z);
     for (let j = 0; j <= acrossSteps; j++) {
       const offset = widestM * (j / acrossSteps) ** 2;
       // A skew line is not the same on its two sides; the sample does not know which side it is on.
       const value = beam.across === null
         ? beam.concentration(z, offset, discM)
         : (beam.concentration(z, offset, discM) + beam.concentration(z, -offset, discM)) / 2;
-      cells[i * (acrossSteps + 1) + j] = value;
+      cells[i * (acrossSteps + 1) + j] = value * scale;
     }
   }
   const read = (distanceM: number, offsetM: number): number => {

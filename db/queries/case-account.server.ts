@@ -1,6 +1,6 @@
 import { and, asc, count, eq, sql } from 'drizzle-orm';
 import type { DbOrTx } from '#db/client.server.ts';
-import { correctiveActions, involvements, logEntries, photos, releases, sites, users } from '#db/schema/all.ts';
+import { correctiveActions, involvements, logEntries, photos, releases, users } from '#db/schema/all.ts';
 import { caseFactList, whatIsLacking, windowWarnings } from '#app/domain/case-account.ts';
 import { wholeCard } from '#app/domain/case-card.ts';
 import { asksReason } from '#app/domain/case-move.ts';
@@ -17,6 +17,8 @@ import type { Actor } from '#app/domain/roles.ts';
 import { holdsRole } from '#app/domain/roles.ts';
 import type { Scene } from '#app/domain/scene.ts';
 import { correctedFoundAt } from './case-header.server.ts';
+import type { CasePlace } from './case-place.server.ts';
+import { casePlace } from './case-place.server.ts';
 import { readMoveFacts } from './case-moves.server.ts';
 import { listCaseNotes } from './case-notes.server.ts';
 import type { CaseRow } from './case-subject.server.ts';
@@ -39,7 +41,7 @@ export async function getCaseAccount(db: DbOrTx, params: { actor: Actor; caseNum
   const facts = await readMoveFacts(db, row);
   const mayReadLog = canOnCase(actor, 'log:read', subject);
   const log = mayReadLog ? await listCaseLog(db, { actor, caseNumber, limit: latestLogLines }) : null;
-  const place = await placeOf(db, row);
+  const place = await casePlace(db, row);
   return {
     narrative: row.narrative,
     sentWords: `${row.guestReport ? 'Sent without an account' : 'Sent'} ${formatDayClock(row.reportedAt, row.zone)}, receipt ${row.receipt}. A note may be added; the text is not changed.`,
@@ -73,13 +75,7 @@ async function nameOf(db: DbOrTx, userId: string | null): Promise<string | null>
   return person?.displayName ?? null;
 }
 
-async function placeOf(db: DbOrTx, row: CaseRow) {
-  const [site] = await db.select({ latitudeDeg: sites.latitudeDeg, longitudeDeg: sites.longitudeDeg, elevationM: sites.elevationM, skyline: sites.skyline }).from(sites).where(eq(sites.id, row.siteId));
-  if (!site) throw new Error(`The site of case ${row.number} is missing.`);
-  return { ...site, latitudeDeg: row.latitudeDeg ?? site.latitudeDeg, longitudeDeg: row.longitudeDeg ?? site.longitudeDeg };
-}
-
-function hasDaylight(row: CaseRow, place: Awaited<ReturnType<typeof placeOf>>): boolean {
+function hasDaylight(row: CaseRow, place: CasePlace): boolean {
   if (!row.onsetEarliestAt || !row.onsetLatestAt) return true;
   const card = wholeCard({ ...place, ...row, latitudeDeg: place.latitudeDeg, longitudeDeg: place.longitudeDeg, foundAt: null }, null, { start: [], end: [] });
   return card.runs.length > 0;
@@ -146,7 +142,7 @@ async function lacksOf(db: DbOrTx, row: CaseRow, facts: MoveFacts, scene: Scene 
     .where(and(eq(correctiveActions.caseId, row.id), sql`${correctiveActions.state} <> 'withdrawn'`));
   const [released] = await db.select({ made: count() }).from(releases).where(eq(releases.caseId, row.id));
   const [decided] = await db.select({ photos: count() }).from(photos).where(and(eq(photos.caseId, row.id), sql`${photos.releasable} <> 'undecided'`));
-  const place = await placeOf(db, row);
+  const place = await casePlace(db, row);
   return whatIsLacking({
     ...row,
     scene,

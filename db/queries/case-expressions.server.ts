@@ -31,6 +31,9 @@ export const instantParameter = (at: Date): SQL => sql`${at.toISOString()}::time
 export const nextReturnAt = (now: Date) =>
   sql<Date | null>`(select min(sr.best_at) from sun_returns sr where sr.case_id = ${cases.id} and sr.to_at > ${instantParameter(now)})`.mapWith(sunReturns.bestAt);
 
+/** Whether the attached run listed any return at all, past ones included. */
+export const returnsListed = sql<boolean>`exists (select 1 from sun_returns sr where sr.case_id = ${cases.id})`;
+
 /** At least one action was shown effective, and none is still to be done, verified, shown, or replaced. */
 export const fixProven = sql<boolean>`(exists (select 1 from corrective_actions a where a.case_id = ${cases.id} and a.state = 'effective')
   and not exists (select 1 from corrective_actions a where a.case_id = ${cases.id} and a.state in ('open', 'in-progress', 'done', 'verified', 'not-effective')))`;

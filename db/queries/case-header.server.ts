@@ -10,7 +10,7 @@ import { formatClock, formatDay } from '#app/domain/local-time.ts';
 import type { CaseSubject } from '#app/domain/permissions.ts';
 import { canOnCase } from '#app/domain/permissions.ts';
 import type { Actor } from '#app/domain/roles.ts';
-import { duplicateOfNumber, headerRun, nextReturnAt, signedCertainty, sunlightRuledOut } from './case-expressions.server.ts';
+import { duplicateOfNumber, headerRun, nextReturnAt, returnsListed, signedCertainty, sunlightRuledOut } from './case-expressions.server.ts';
 import { caseSubject } from './case-subject.server.ts';
 import { stateSince } from './cases.server.ts';
 import { visibleTo } from './scope.server.ts';
@@ -29,6 +29,7 @@ async function readHeader(db: DbOrTx, params: { actor: Actor; caseNumber: number
       duplicateOfNumber,
       signedCertainty,
       sunlightRuledOut,
+      returnsListed,
       nextReturnAt: nextReturnAt(params.now),
       run: headerRun,
       photoCount: counted('photos'),
@@ -68,7 +69,7 @@ export async function getCaseHeader(db: DbOrTx, params: { actor: Actor; caseNumb
     legalHold: row.legalHold,
     version: row.version,
     nextReturn: live ? returnView(facts.nextReturnAt, row.zone, params.now) : null,
-    returnWords: noReturnWords({ state: row.state, duplicateOfNumber: facts.duplicateOfNumber, attachedRun: run?.attached ?? false, sunlightRuledOut: facts.sunlightRuledOut }),
+    returnWords: noReturnWords({ state: row.state, duplicateOfNumber: facts.duplicateOfNumber, attachedRun: run?.attached ?? false, returnsListed: facts.returnsListed, sunlightRuledOut: facts.sunlightRuledOut }),
     card: wholeCard(cardCase(facts), run, cardWords(row)),
     cardNote: cardNote(run, mayReadRuns),
     reconstructionNumber: mayReadRuns ? (run?.number ?? null) : null,

@@ -5,6 +5,7 @@ import type { RegisterGroup, RegisterRowView, RegisterView } from '#app/domain/c
 import { registerGroups, registerHeading } from '#app/domain/case-view.ts';
 import { waitsFor } from '#app/domain/case-waiting.ts';
 import { noReturnWords, returnView, stateNote, windowWords } from '#app/domain/case-words.ts';
+import { sunAzimuthDeg } from '#app/domain/sun-now.ts';
 import { localDay } from '#app/domain/local-time.ts';
 import { caseRules } from '#app/domain/permissions.ts';
 import { holdsRoleAnywhere } from '#app/domain/roles.ts';
@@ -22,7 +23,7 @@ export async function getRegister(db: DbOrTx, query: RegisterQuery): Promise<Reg
   const ownOnly = !holdsRoleAnywhere(query.actor, caseRules['case:read'].roles);
   return {
     heading: registerHeading(groupCounts['before-fix'], total, ownOnly, counts.open),
-    rows: facts.map((one) => rowView(one, query, span)),
+    rows: facts.map((one) => registerRow(one, query.now, span)),
     total,
     groupCounts,
     counts: { ...counts, late: mayFilterLate(query.actor) ? counts.late : null, injury: mayFilterInjury(query.actor) ? counts.injury : null },
@@ -50,7 +51,8 @@ function cardCase(facts: RegisterFacts): CardCase {
   };
 }
 
-function rowView(facts: RegisterFacts, { now }: RegisterQuery, span: RegisterView['span']): RegisterRowView {
+/** One case as a row of a list. */
+export function registerRow(facts: RegisterFacts, now: Date, span: RegisterView['span']): RegisterRowView {
   const { zone, state } = facts;
   const window = windowWords(facts.onsetEarliestAt, facts.onsetLatestAt, correctedFound(facts), zone);
   const relevant = state !== 'closed' && state !== 'duplicate' && !facts.sunlightRuledOut;
@@ -66,7 +68,7 @@ function rowView(facts: RegisterFacts, { now }: RegisterQuery, span: RegisterVie
     state,
     stateNote: stateNote({ ...facts, mayReadHealth: facts.healthVisible }),
     nextReturn: relevant ? returnView(facts.nextReturnAt, zone, now) : null,
-    returnWords: noReturnWords({ state, duplicateOfNumber: facts.duplicateOfNumber, attachedRun: facts.run !== null, sunlightRuledOut: facts.sunlightRuledOut }),
+    returnWords: noReturnWords({ state, duplicateOfNumber: facts.duplicateOfNumber, attachedRun: facts.run !== null, returnsListed: facts.returnsListed, sunlightRuledOut: facts.sunlightRuledOut }),
     waitsFor: waitsFor({
       ...facts,
       today: localDay(now, zone),
@@ -75,7 +77,15 @@ function rowView(facts: RegisterFacts, { now }: RegisterQuery, span: RegisterVie
       actions: facts.actionsVisible ? facts.actions : null,
     }),
     position: { latitudeDeg: rounded(facts.latitudeDeg), longitudeDeg: rounded(facts.longitudeDeg) },
+    sunAzimuthDeg: azimuthInBurn(facts),
   };
+}
+
+function azimuthInBurn(facts: RegisterFacts): number | null {
+  const sunlit = (facts.run?.runs ?? []).filter((run) => run.verdict === 'sunlit').sort((a, b) => b.minutes - a.minutes)[0];
+  if (!sunlit) return null;
+  const middle = new Date((Date.parse(sunlit.fromUtc) + Date.parse(sunlit.toUtc)) / 2);
+  return Math.round(sunAzimuthDeg(middle, { latitudeDeg: facts.latitudeDeg, longitudeDeg: facts.longitudeDeg, elevationM: facts.siteElevationM }));
 }
 
 /** Places on the map are shown to two decimals, about a kilometre. */

@@ -8,7 +8,7 @@ import { caseRules } from '#app/domain/permissions.ts';
 import type { Actor, Role } from '#app/domain/roles.ts';
 import { holdsRoleAnywhere } from '#app/domain/roles.ts';
 import {
-  actionsInBrief, attachedRun, draftExists, duplicateOfNumber, fixProven, hasLateAction, instantParameter, latestOpticKind, markBearingKnown, nextReturnAt, openComments, signedCertainty, sunlightRuledOut,
+  actionsInBrief, attachedRun, draftExists, duplicateOfNumber, fixProven, hasLateAction, instantParameter, latestOpticKind, markBearingKnown, nextReturnAt, openComments, returnsListed, signedCertainty, sunlightRuledOut,
 } from './case-expressions.server.ts';
 import { visibleTo } from './scope.server.ts';
 
@@ -107,52 +107,69 @@ function orderOf({ filter, now }: RegisterQuery): SQL[] {
   return [sql`${group} asc`, sql`case when ${group} = 1 then ${nextReturnAt(now)} end asc nulls last`, sql`case when ${group} = 2 then ${cases.reportedAt} end asc nulls last`, lastly];
 }
 
+/** Columns of a row, as facts. */
+function registerColumns(actor: Actor, now: Date) {
+  return {
+    id: cases.id,
+    number: cases.number,
+    title: cases.title,
+    placeDetail: cases.placeDetail,
+    siteId: cases.siteId,
+    organisationId: cases.organisationId,
+    siteName: sites.name,
+    siteElevationM: sites.elevationM,
+    latitudeDeg: sql<number>`coalesce(${cases.latitudeDeg}, ${sites.latitudeDeg})`,
+    longitudeDeg: sql<number>`coalesce(${cases.longitudeDeg}, ${sites.longitudeDeg})`,
+    zone: cases.zone,
+    state: cases.state,
+    eventType: cases.eventType,
+    potentialConsequence: cases.potentialConsequence,
+    likelihood: cases.likelihood,
+    reopenCount: cases.reopenCount,
+    closeReason: cases.closeReason,
+    answerDueAt: cases.answerDueAt,
+    foundAt: cases.foundAt,
+    foundPrecision: cases.foundPrecision,
+    foundClockErrorS: cases.foundClockErrorS,
+    onsetEarliestAt: cases.onsetEarliestAt,
+    onsetLatestAt: cases.onsetLatestAt,
+    reportedAt: cases.reportedAt,
+    group: groupOf(now),
+    opticKind: latestOpticKind,
+    markBearingKnown,
+    signedCertainty,
+    sunlightRuledOut,
+    returnsListed,
+    draftExists,
+    openComments,
+    duplicateOfNumber,
+    nextReturnAt: nextReturnAt(now),
+    run: attachedRun,
+    actions: actionsInBrief,
+    actionsVisible: sql<boolean>`${actionsVisible(actor)}`,
+    healthVisible: sql<boolean>`${healthVisible(actor)}`,
+  };
+}
+
 /** One page of the register: raw facts of each case, in order. */
 export function listRegisterRows(db: DbOrTx, query: RegisterQuery) {
   return db
-    .select({
-      id: cases.id,
-      number: cases.number,
-      title: cases.title,
-      placeDetail: cases.placeDetail,
-      siteId: cases.siteId,
-      organisationId: cases.organisationId,
-      siteName: sites.name,
-      siteElevationM: sites.elevationM,
-      latitudeDeg: sql<number>`coalesce(${cases.latitudeDeg}, ${sites.latitudeDeg})`,
-      longitudeDeg: sql<number>`coalesce(${cases.longitudeDeg}, ${sites.longitudeDeg})`,
-      zone: cases.zone,
-      state: cases.state,
-      eventType: cases.eventType,
-      reopenCount: cases.reopenCount,
-      closeReason: cases.closeReason,
-      answerDueAt: cases.answerDueAt,
-      foundAt: cases.foundAt,
-      foundPrecision: cases.foundPrecision,
-      foundClockErrorS: cases.foundClockErrorS,
-      onsetEarliestAt: cases.onsetEarliestAt,
-      onsetLatestAt: cases.onsetLatestAt,
-      reportedAt: cases.reportedAt,
-      group: groupOf(query.now),
-      opticKind: latestOpticKind,
-      markBearingKnown,
-      signedCertainty,
-      sunlightRuledOut,
-      draftExists,
-      openComments,
-      duplicateOfNumber,
-      nextReturnAt: nextReturnAt(query.now),
-      run: attachedRun,
-      actions: actionsInBrief,
-      actionsVisible: sql<boolean>`${actionsVisible(query.actor)}`,
-      healthVisible: sql<boolean>`${healthVisible(query.actor)}`,
-    })
+    .select(registerColumns(query.actor, query.now))
     .from(cases)
     .innerJoin(sites, eq(sites.id, cases.siteId))
     .where(conditions(query))
     .orderBy(...orderOf(query))
     .limit(pageSize)
     .offset((query.filter.page - 1) * pageSize);
+}
+
+/** The same facts of some cases, those that the actor may see, in no order. */
+export function listRegisterFacts(db: DbOrTx, params: { actor: Actor; caseIds: readonly string[]; now: Date }) {
+  return db
+    .select(registerColumns(params.actor, params.now))
+    .from(cases)
+    .innerJoin(sites, eq(sites.id, cases.siteId))
+    .where(and(visibleTo(params.actor), inArray(cases.id, [...params.caseIds])));
 }
 export type RegisterFacts = Awaited<ReturnType<typeof listRegisterRows>>[number];
 

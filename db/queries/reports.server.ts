@@ -7,9 +7,9 @@ import type { ReportHolder, ReportSite } from '#app/domain/report.ts';
 const reportSite = { id: sites.id, organisationId: sites.organisationId, name: sites.name, code: sites.code, zone: sites.zone };
 
 /** Sites that the holder of a report may choose from: all of the person's organisation, or the one of the guest's link. */
-export function listReportSites(db: DbOrTx, holder: ReportHolder): Promise<ReportSite[]> {
+export function listReportSites(db: DbOrTx, holder: ReportHolder): Promise<(ReportSite & { latitudeDeg: number; longitudeDeg: number })[]> {
   const mine = holder.kind === 'guest' ? eq(sites.id, holder.site.id) : eq(sites.organisationId, holder.actor.organisationId);
-  return db.select(reportSite).from(sites).where(mine).orderBy(asc(sites.name), asc(sites.id));
+  return db.select({ ...reportSite, latitudeDeg: sites.latitudeDeg, longitudeDeg: sites.longitudeDeg }).from(sites).where(mine).orderBy(asc(sites.name), asc(sites.id));
 }
 
 /** The site whose account-free link carries this code; null when the link is closed or never was. */

@@ -2,7 +2,6 @@ import { randomInt, randomUUID } from 'node:crypto';
 import type { DemoCase } from '#fixtures/demo/demo-case.ts';
 import type { Transaction } from '#db/client.server.ts';
 import { caseNotes, cases, injuries, involvements, logEntries, scenes } from '#db/schema/all.ts';
-import { riskDueDays } from '#app/domain/incident.ts';
 import { seedActions, seedFinding } from './finding-and-actions.ts';
 import { moment } from './moment.ts';
 import { pick } from './people-and-sites.ts';

@@ -4,6 +4,7 @@ import type { FormAnswer } from '#app/components/findings/problem-fields.ts';
 import { ChoiceChips } from '#app/components/forms/choice-chips.tsx';
 import { ErrorSummary } from '#app/components/forms/error-summary.tsx';
 import { Select, TextArea, TextInput, TickBox } from '#app/components/forms/text-field.tsx';
+import { cautions } from '#app/components/layout/cautions.ts';
 import { AppLink } from '#app/components/ui/app-link.tsx';
 import { Button } from '#app/components/ui/button.tsx';
 import { SectionHeading } from '#app/components/ui/page-title.tsx';
@@ -58,6 +59,7 @@ export function ActionForm({ people, defaults, defaultRisk, todayOn, answer, clo
           <TextInput field={field('cost')} label="Cost" inputMode="numeric" aside="not required" />
           <TextInput field={field('costCurrency')} label="Currency" maxLength={3} autoCapitalize="characters" />
         </div>
+        <p className="text-small text-second">{cautions.film}</p>
         <Button>Give the action</Button>
       </Form>
     </section>

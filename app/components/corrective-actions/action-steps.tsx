@@ -50,14 +50,16 @@ interface StepProps extends ActionStepsProps {
   readonly intent: string;
   readonly title: string;
   readonly files?: boolean;
+  /** Values to start from. */
+  readonly stored?: Readonly<Record<string, string>>;
   readonly labels?: readonly (readonly [name: string, label: string])[];
   readonly children: (field: (name: string) => FieldLike) => ReactNode;
 }
 
 /** One step: a folded form that posts action, version and intent. */
-function Step({ actionId, number, version, intent, title, files = false, labels = [], answer, children }: StepProps) {
+function Step({ actionId, number, version, intent, title, files = false, stored = {}, labels = [], answer, children }: StepProps) {
   const problem = answerTo(answer, intent, { name: 'actionId', value: actionId });
-  const field = problemFields(problem, {}, `${intent}-${number}-`);
+  const field = problemFields(problem, stored, `${intent}-${number}-`);
   return (
     <details className="border-b border-hair" open={problem !== null}>
       <summary className="min-h-11 py-2.5 font-semibold desk:min-h-8 desk:py-1.5">{title}</summary>
@@ -159,10 +161,10 @@ function NoteStep({ label, button, ...props }: ActionStepsProps & { readonly int
 
 function ReDateStep(props: ActionStepsProps) {
   return (
-    <Step {...props} intent="re-date" title="Give it another day" labels={[['dueOn', 'New day'], ['reason', 'Reason']]}>
+    <Step {...props} intent="re-date" title="Give it another day" stored={{ dueOn: props.dueOn }} labels={[['dueOn', 'New day'], ['reason', 'Reason']]}>
       {(field) => (
         <>
-          <div className="max-w-60"><TextInput field={field('dueOn')} label="New day" type="date" min={props.todayOn} defaultValue={props.dueOn} /></div>
+          <div className="max-w-60"><TextInput field={field('dueOn')} label="New day" type="date" min={props.todayOn} /></div>
           <TextInput field={field('reason')} label="Reason" />
           <Button look="outlined">Re-date</Button>
         </>
@@ -174,12 +176,12 @@ function ReDateStep(props: ActionStepsProps) {
 function ReassignStep(props: ActionStepsProps) {
   const options = personOptions(props.people);
   return (
-    <Step {...props} intent="reassign" title="Give it to somebody else" labels={[['ownerId', 'Owner'], ['verifierId', 'Verifier'], ['reason', 'Reason']]}>
+    <Step {...props} intent="reassign" title="Give it to somebody else" stored={{ ownerId: props.ownerId, verifierId: props.verifierId }} labels={[['ownerId', 'Owner'], ['verifierId', 'Verifier'], ['reason', 'Reason']]}>
       {(field) => (
         <>
           <div className="grid gap-3 tablet:grid-cols-2">
-            <Select field={field('ownerId')} label="Owner" options={options} defaultValue={props.ownerId} />
-            <Select field={field('verifierId')} label="Verifier" options={options} defaultValue={props.verifierId} />
+            <Select field={field('ownerId')} label="Owner" options={options} />
+            <Select field={field('verifierId')} label="Verifier" options={options} />
           </div>
           <TextInput field={field('reason')} label="Reason" />
           <Button look="outlined">Give it</Button>

@@ -38,7 +38,7 @@ export function EngineSays({ caseNumber, words, takeOverHref }: EngineSaysProps)
         {words.tests.map((test) => <li key={test.label}><TestMark result={test.result} label={test.label} why={test.sentence} /></li>)}
       </ul>
       <p className="mt-2 max-w-[64ch] text-small text-second">Computed from the values entered, about focused sunlight only. It is not a cause: a person states results, and may disagree with reasons.</p>
-      {takeOverHref ? <p className="mt-1 text-small"><AppLink href={takeOverHref}>Take over the engine&rsquo;s words</AppLink> <span className="text-second">fills the four tests below; nothing is kept until you save.</span></p> : null}
+      {takeOverHref ? <p className="mt-1 text-small"><AppLink href={takeOverHref}>Take over the engine&rsquo;s words</AppLink> <span className="text-second">opens the sunlight hypothesis with its four tests filled in as a suggestion; nothing is kept until you save.</span></p> : null}
     </section>
   );
 }

@@ -26,20 +26,20 @@ export function RegisterFilters({ filter, counts, showAs }: RegisterFiltersProps
     return count === null ? [] : [{ href: `${path}${registerSearch(filter, { view })}`, label: viewWords[view], count, current: filter.view === view }];
   });
   return (
-    <div className="space-y-1 pb-2 desk:flex desk:flex-wrap desk:items-center desk:gap-x-5 desk:space-y-0" data-print="no">
+    <div className="space-y-1 pb-2 desk:flex desk:flex-wrap desk:items-center desk:gap-x-6 desk:space-y-0" data-print="no">
       <Tabs label="Which cases" look="filter" items={views} />
-      <Form method="get" action={path} role="search" aria-label="Filter the register" className="flex flex-wrap items-center gap-x-4 gap-y-1" onChange={(event) => void submit(event.currentTarget)}>
+      <Form method="get" action={path} role="search" aria-label="Filter the register" className="words-scroll flex items-center gap-x-4 gap-y-1 desk:flex-wrap" onChange={(event) => void submit(event.currentTarget)}>
         {filter.view === 'all' ? null : <input type="hidden" name="view" value={filter.view} />}
         <FilterList name="state" label="State" value={filter.state} options={caseStates.map((state) => [state, caseStateLabels[state]])} />
         <FilterList name="optic" label="Optic" value={filter.optic} options={sceneOpticKinds.map((kind) => [kind, sceneOpticLabels[kind]])} />
         <FilterList name="result" label="Result" value={filter.result} options={registerResults.map((result) => [result, registerResultLabels[result]])} />
         <FilterList name="within" label="Sun returns" value={filter.within} options={returnSpans.map((days) => [String(days), `within ${days} days`])} />
         <FilterList name="sort" label="Order" value={filter.sort} options={registerSorts.map((sort) => [sort, registerSortLabels[sort]])} any={null} />
-        <label className="flex items-center gap-1.5 text-small">
+        <label className="flex flex-none items-center gap-1.5 text-small">
           <span className="text-second">Words</span>
           <input type="search" name="q" defaultValue={filter.q} data-find className="min-h-11 w-36 border-b-[1.5px] border-edge bg-transparent px-1 desk:min-h-8" onChange={(event) => event.stopPropagation()} />
         </label>
-        <button type="submit" className="min-h-11 cursor-pointer text-small underline decoration-ember decoration-2 underline-offset-4 desk:min-h-8">Show</button>
+        <button type="submit" className="min-h-11 flex-none cursor-pointer text-small underline decoration-ember decoration-2 underline-offset-4 desk:min-h-8">Show</button>
       </Form>
       <p className="flex min-h-11 items-center gap-3 text-small desk:min-h-8">
         <span className="text-second">Show as</span>
@@ -69,9 +69,9 @@ interface FilterListProps {
 
 function FilterList({ name, label, value, options, any = 'any' }: FilterListProps) {
   return (
-    <label className="flex items-center gap-1.5 text-small">
+    <label className="flex flex-none items-center gap-1.5 text-small">
       <span className="text-second">{label}</span>
-      <select key={String(value)} name={name} defaultValue={value === null ? '' : String(value)} className="min-h-11 max-w-44 cursor-pointer border-b-[1.5px] border-edge bg-transparent pr-1 desk:min-h-8">
+      <select key={String(value)} name={name} defaultValue={value === null ? '' : String(value)} className="min-h-11 max-w-52 cursor-pointer border-b-[1.5px] border-edge bg-transparent pr-1 [field-sizing:content] desk:min-h-8">
         {any === null ? null : <option value="">{any}</option>}
         {options.map(([option, words]) => <option key={option} value={option} className="bg-sheet text-ink">{words}</option>)}
       </select>

@@ -14,12 +14,15 @@ export interface ReportBarProps {
 export function ReportBar({ hydrated, draft, sending, photosOnTheWay }: ReportBarProps) {
   const { title, detail } = words({ hydrated, draft, sending, photosOnTheWay });
   const waits = hydrated && draft.missing !== null;
+  const send = <Button look={waits ? 'waiting' : 'filled'} name="intent" value="send">{buttonWord(sending)}</Button>;
+  // Without a script the make-safe card is on the same page, and nothing may lie over it.
+  if (!hydrated) return <div className="flex items-center justify-between gap-4 border-t-2 border-ink py-4"><p>{detail}</p>{send}</div>;
   return (
     <FixedBar
       title={title}
       detail={detail}
-      onPhone={hydrated && draft.savedAt !== null}
-      action={<Button look={waits ? 'waiting' : 'filled'} name="intent" value="send">{buttonWord(sending)}</Button>}
+      onPhone={draft.savedAt !== null}
+      action={send}
     />
   );
 }
@@ -31,7 +34,7 @@ function buttonWord(sending: SendingState): string {
 }
 
 function words({ hydrated, draft, sending, photosOnTheWay }: ReportBarProps): { title: string; detail: string } {
-  if (!hydrated) return { title: 'Four answers, then send', detail: "“Don't know” is an answer" };
+  if (!hydrated) return { title: '', detail: "Four answers are needed; “Don't know” is one." };
   const saved = draft.unkept ? 'Not kept: leave this page open' : draft.savedAt === null ? 'Nothing typed yet' : `Saved on this phone, ${draft.savedAt}`;
   if (sending === 'waiting-for-signal') return { title: saved, detail: 'No signal. It goes by itself, once only' };
   if (sending === 'waiting-for-photos') return { title: saved, detail: `${photosOnTheWay === 1 ? 'One photo is' : `${photosOnTheWay} photos are`} still on the way` };

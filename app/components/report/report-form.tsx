@@ -72,7 +72,7 @@ export function ReportForm({ address, clientId, sites, guest, state, stored, for
       <button type="submit" name="intent" value="send" tabIndex={-1} aria-hidden="true" className="sr-only">Send</button>
       <div className="pb-4"><ErrorSummary errors={state.formErrors} fields={summaryFields(field, state)} title="Not sent yet. What you typed is still here." /></div>
       <PhotoStrip field={field} clientId={clientId} stored={stored} uploads={uploads} />
-      <WhereQuestion field={field} sites={sites} fixed={guest} onSite={startClock} />
+      <WhereQuestion field={field} sites={sites} chosen={site} fixed={guest} onSite={startClock} />
       <WhenQuestion field={field} state={state} zoneWords={site ? site.zone.replaceAll('_', ' ') : null} nowLocal={site?.nowLocal ?? ''} onAnswer={pinNow} />
       <Question number={3} answers="sighting" title="What do you see?">
         <ChoiceChips field={field('sighting')} legend={<span className="sr-only">What do you see?</span>} options={sightings.map((value) => ({ value, label: sightingLabels[value], dashed: value === 'dont-know' }))} />

@@ -11,18 +11,21 @@ export interface SiteChoice {
   readonly zone: string;
   /** The present on the clock of the site, `YYYY-MM-DDTHH:MM`. */
   readonly nowLocal: string;
+  /** To about 100 m; null for guests, who are told no position. */
+  readonly around: { readonly latitudeDeg: number; readonly longitudeDeg: number } | null;
 }
 
 export interface WhereQuestionProps {
   readonly field: ReportField;
   readonly sites: readonly SiteChoice[];
+  readonly chosen: SiteChoice | undefined;
   /** The link says where: nothing to choose. */
   readonly fixed: boolean;
   readonly onSite?: (siteId: string) => void;
 }
 
 /** First question. A site is always needed; the spot in words and a position help. */
-export function WhereQuestion({ field, sites, fixed, onSite }: WhereQuestionProps) {
+export function WhereQuestion({ field, sites, chosen, fixed, onSite }: WhereQuestionProps) {
   const only = sites.length === 1 ? sites[0] : undefined;
   return (
     <Question number={1} answers="siteId" title="Where is it?">
@@ -43,7 +46,7 @@ export function WhereQuestion({ field, sites, fixed, onSite }: WhereQuestionProp
         />
       )}
       <TextInput field={field('placeDetail')} label="The spot, in words" help="Such as: roof, south edge by hatch 2. No names of people." autoComplete="off" maxLength={300} />
-      <PositionFields field={field} />
+      <PositionFields field={field} around={chosen?.around ?? null} />
     </Question>
   );
 }

@@ -24,5 +24,5 @@ function WhenHydrated({ waiting, children }: { readonly waiting: ReactNode; read
 }
 
 function Waiting({ tall = false }: { readonly tall?: boolean }) {
-  return <p className={`flex items-center justify-center border border-hair text-small text-second ${tall ? 'h-72 tablet:h-[420px] desk:h-[612px]' : 'h-80 tablet:h-96'}`}>Drawing the map</p>;
+  return <p className={`flex items-center justify-center border border-hair text-small text-second ${tall ? 'h-60 tablet:h-[420px] desk:h-[612px]' : 'h-80 tablet:h-96'}`}>Drawing the map</p>;
 }

@@ -57,7 +57,7 @@ export default function CaseMap({ points, sunOverhead, onFollow }: CaseMapProps)
 
   return (
     <div className="map-outer relative pb-6 tablet:pl-14">
-      <div className="map-frame h-72 tablet:h-[420px] desk:h-[612px]">
+      <div className="map-frame h-60 tablet:h-[420px] desk:h-[612px]">
         <div ref={frame} role="group" aria-label={`Map of ${points.length} ${points.length === 1 ? 'case' : 'cases'}. The same cases are in the list.`} />
         <button type="button" className="map-button top-2 right-2" aria-label="Zoom in" onClick={() => map?.zoomIn(1, { animate: false })}><Sign plus /></button>
         <button type="button" className="map-button top-[51px] right-2" aria-label="Zoom out" onClick={() => map?.zoomOut(1, { animate: false })}><Sign /></button>
@@ -85,7 +85,7 @@ function Edge({ ticks, axis, inside = false }: { readonly ticks: readonly EdgeTi
     : inside ? 'tablet:hidden' : 'absolute top-0 left-0 hidden w-12 tablet:block';
   return (
     <div aria-hidden="true" className={place}>
-      {ticks.filter((tick) => tick.axis === axis && tick.atPx > 12).map(({ text, atPx }) => (
+      {ticks.filter((tick) => tick.axis === axis && tick.atPx > 12 && (axis === 'latitude' || tick.atPx < tick.ofPx - 20)).map(({ text, atPx }) => (
         <span
           key={`${text}${atPx}`}
           className={`map-tick ${axis === 'longitude' ? '-translate-x-1/2' : `-translate-y-1/2 ${inside ? 'left-0' : 'right-0'}`}`}

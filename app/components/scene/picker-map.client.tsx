@@ -91,12 +91,13 @@ export default function PickerMap({ place, around, accuracyM, onMove }: PickerMa
 
   return (
     <div className="map-frame h-80 tablet:h-96">
-      {/* The map itself takes the arrow keys; the same steps are buttons beside it. */}
+      {/* The map itself takes the arrow keys, as a widget of role application does; the same steps are buttons beside it. */}
+      {/* eslint-disable-next-line jsx-a11y/no-noninteractive-element-interactions -- the rule does not count role application as a widget */}
       <div
         ref={frame}
         role="application"
         aria-label="Map. Arrow keys move the cross 1 metre, with Shift 10 metres; plus and minus zoom."
-        // eslint-disable-next-line jsx-a11y/no-noninteractive-tabindex -- role application is a widget here
+        // eslint-disable-next-line jsx-a11y/no-noninteractive-tabindex -- as above
         tabIndex={0}
         onKeyDown={press}
       />

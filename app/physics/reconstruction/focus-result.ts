@@ -3,12 +3,15 @@ import { roundBand } from '#app/physics/heating/outcomes.ts';
 import { contourDiscM, contourHalfWidthM, zoneAlong } from '#app/physics/reach.ts';
 import type { Beam } from '#app/physics/optics/closed-form/beam.ts';
 import type { DirectBeam } from '#app/physics/sky/direct-beam.ts';
-import { angularDiameterDeg } from '#app/physics/sun/sun-disc.ts';
-import { spotMotion, trailMinutesAtLeast, type SpotMotion } from '#app/physics/trail.ts';
+import { beamLimbDarkening, solarTemperatureK, stefanBoltzmann } from '#app/physics/constants.ts';
+import { PhysicsGuardError } from '#app/physics/optics/trace/guards.ts';
+import { angularDiameterDeg, meanOverCentre } from '#app/physics/sun/sun-disc.ts';
+import { trailMinutesAtLeast, type SpotMotion } from '#app/physics/trail.ts';
 import { percentiles, type Sampling } from '#app/physics/uncertainty.ts';
 import { degree, roundSignificant, roundTo, safeAcos } from '#app/physics/units.ts';
 import { dot } from '#app/physics/vector.ts';
 import type { Setting } from './setting.ts';
+import { cutShares, tracedResult, type TracedFocus } from './traced-focus.ts';
 import { markDiscM, type JudgedMinute } from './window.ts';
 
 /** Direct irradiance at the optic: low, likely and with the cleanest air. [W/m²] */
@@ -47,20 +50,28 @@ function planeWords(plane: Plane): string {
   return `on the target at the mark, ${place} from the optic’s origin, ${stance}`;
 }
 
-/** Concentration at the likely distance and at the ends of the optic's tolerance, in order. */
-function concentrationBand(plane: Plane, offsetM: number, discM: number, opticSigmaRel: number): Band {
+/**
+ * Concentration at the likely distance and at the ends of the optic's tolerance, in order.
+ *
+ * @param traced Likely value of the trace; the closed form then only gives the shares of the ends.
+ */
+function concentrationBand(plane: Plane, offsetM: number, discM: number, opticSigmaRel: number, traced: number | null): Band {
   const at = (scale: number): number => plane.cosine * plane.beam.concentration(plane.distanceM / scale, offsetM, discM);
-  const mid = at(1);
-  const ends = [at(1 + p95 * opticSigmaRel), at(1 - Math.min(0.9, p95 * opticSigmaRel)), mid];
+  const closed = at(1);
+  const mid = traced ?? closed;
+  const factor = closed > 0 ? mid / closed : 1;
+  const ends = [at(1 + p95 * opticSigmaRel) * factor, at(1 - Math.min(0.9, p95 * opticSigmaRel)) * factor, mid];
   return { low: Math.min(...ends), mid, high: Math.max(...ends) };
 }
 
-function discsOf(plane: Plane, light: LightBand, sampling: Sampling | null, imageM: number, opticSigmaRel: number): readonly FluxDisc[] {
+function discsOf(plane: Plane, light: LightBand, sampling: Sampling | null, traced: TracedFocus | null, imageM: number, opticSigmaRel: number): readonly FluxDisc[] {
   const sizes = [['sun-image', imageM], ['1 mm', 0.001], ['5 mm', markDiscM]] as const;
   const centres = plane.marked ? (['hot spot', 'mark'] as const) : (['hot spot'] as const);
   return centres.flatMap((centre) =>
     sizes.map(([disc, discM]) => {
-      const concentration = concentrationBand(plane, centre === 'mark' ? plane.offsetM : 0, discM, opticSigmaRel);
+      const concentration = concentrationBand(
+        plane, centre === 'mark' ? plane.offsetM : 0, discM, opticSigmaRel, traced?.concentration(disc, centre) ?? null,
+      );
       const sampled = centre === 'mark' && disc === '5 mm' && sampling !== null;
       const fluxKwm2 = sampled
         ? { low: sampling.fluxKwm2.low, mid: (concentration.mid * light.mid) / 1000, high: Math.max(sampling.fluxKwm2.high, (concentration.mid * light.mid) / 1000) }
@@ -82,27 +93,35 @@ export function contourWidthM(plane: Pick<Plane, 'beam' | 'distanceM' | 'cosine'
   return 2 * contourHalfWidthM(plane.beam, plane.distanceM, level, contourDiscM(plane.distanceM));
 }
 
-function dwellBand(plane: Plane, thresholdKwm2: number, light: LightBand, motion: SpotMotion): Band {
-  const seconds = (lightWm2: number): number => contourWidthM(plane, thresholdKwm2, lightWm2) / motion.acrossMPerS;
+/** Time for which one point of the trail stays above a flux: width of the contour along the trail over the speed. */
+function dwellBand(plane: Plane, thresholdKwm2: number, light: LightBand, traced: TracedFocus | null, motion: SpotMotion): Band {
+  const seconds = (lightWm2: number): number =>
+    traced === null
+      ? contourWidthM(plane, thresholdKwm2, lightWm2) / motion.acrossMPerS
+      : (lightWm2 <= 0 ? 0 : traced.contourWidthM((thresholdKwm2 * 1000) / lightWm2)) / motion.speedMPerS;
   return { low: seconds(light.low), mid: seconds(light.mid), high: seconds(light.high) };
 }
 
-function dwellOf(plane: Plane, light: LightBand, motion: SpotMotion | null): FocusResult['dwellS'] {
+function dwellOf(plane: Plane, light: LightBand, traced: TracedFocus | null, motion: SpotMotion | null): FocusResult['dwellS'] {
   if (motion === null || motion.acrossMPerS <= 0) return [];
-  return dwellThresholds.map((thresholdKwm2) => ({ thresholdKwm2, seconds: roundBand(dwellBand(plane, thresholdKwm2, light, motion)) }));
+  return dwellThresholds.map((thresholdKwm2) => ({ thresholdKwm2, seconds: roundBand(dwellBand(plane, thresholdKwm2, light, traced, motion)) }));
 }
 
-const distanceShares = [0.2, 0.35, 0.5, 0.6, 0.7, 0.8, 0.85, 0.9, 0.95, 1, 1.05, 1.1, 1.2, 1.35, 1.5, 1.75, 2, 2.5] as const;
-
-function spotAtDistance(beam: Beam, lightWm2: number): FocusResult['spotAtDistance'] {
-  return distanceShares.map((share) => {
+function spotAtDistance(beam: Beam, lightWm2: number, traced: TracedFocus | null): FocusResult['spotAtDistance'] {
+  return cutShares.map((share, index) => {
     const distanceM = share * beam.focusM;
     return {
       distanceM: roundSignificant(distanceM, 4),
       diameterMm: roundSignificant(beam.spotDiameterM(distanceM) * 1000, 3),
-      fluxKwm2: roundSignificant((beam.concentration(distanceM, 0, markDiscM) * lightWm2) / 1000, 3),
+      fluxKwm2: roundSignificant(((traced?.along[index]?.concentration ?? beam.concentration(distanceM, 0, markDiscM)) * lightWm2) / 1000, 3),
     };
   });
+}
+
+/** @throws PhysicsGuardError if a flux would make a black body hotter than the middle of the sun's disc. */
+function guardTemperature(fluxWm2: number): void {
+  const limitWm2 = (stefanBoltzmann * solarTemperatureK ** 4) / meanOverCentre(beamLimbDarkening);
+  if (fluxWm2 > limitWm2) throw new PhysicsGuardError(`a flux of ${fluxWm2.toPrecision(4)} W/m² exceeds that of the sun's surface`);
 }
 
 export interface FocusOutcome {
@@ -123,39 +142,50 @@ export function lightBand(light: DirectBeam, sampling: Sampling | null): LightBa
   return { low: Math.min(low, likely), mid: likely, high: Math.max(bound * light.transmittance, likely) };
 }
 
-/** Focus at the best minute, in numbers. */
-export function focusOf(minute: JudgedMinute, beam: Beam, light: LightBand, sampling: Sampling | null, setting: Setting): FocusOutcome | null {
-  const { model, mark, reach, input } = setting;
+/** What was computed at the best minute before its numbers are put together. */
+export interface FocusParts {
+  readonly light: LightBand;
+  readonly sampling: Sampling | null;
+  readonly traced: TracedFocus | null;
+  readonly motion: SpotMotion | null;
+}
+
+/** Focus at the best minute, in numbers: from the trace where there is one, else from the closed form. */
+export function focusOf(minute: JudgedMinute, beam: Beam, parts: FocusParts, setting: Setting): FocusOutcome | null {
+  const { light, sampling, traced, motion } = parts;
+  const { model, reach, input } = setting;
   if (model === null) return null;
   const plane = planeOf(minute, beam, setting);
   const imageM = Math.abs(model.focalLengthM) * angularDiameterDeg(minute.sun.distanceAu) * degree;
-  const motion = mark === null ? null : spotMotion(model, mark, setting.site.observer, minute.sun.utcMs);
-  const scorchWidthM = contourWidthM(plane, scorchContourKwm2, light.high);
+  const scorchWidthM = traced === null ? contourWidthM(plane, scorchContourKwm2, light.high) : traced.contourWidthM((scorchContourKwm2 * 1000) / Math.max(light.high, 1));
   const small = contourDiscM(plane.distanceM);
   const halfMaxM = 2 * contourHalfWidthM(beam, plane.distanceM, 0.5 * beam.concentration(plane.distanceM, 0, small), small);
   const spread = percentiles(Float64Array.from([imageM, Math.max(halfMaxM, imageM), Math.max(beam.spotDiameterM(plane.distanceM), halfMaxM, imageM)]));
   const thresholdKwm2 = reach?.thresholdKwm2 ?? scorchContourKwm2;
-  const zone = light.mid > 0 ? zoneAlong(beam, (thresholdKwm2 * 1000) / light.mid, markDiscM) : null;
+  const zoneSuns = (thresholdKwm2 * 1000) / Math.max(light.mid, 1);
+  const zone = traced === null ? zoneAlong(beam, zoneSuns, markDiscM) : traced.dangerZone(zoneSuns);
   const trailM = (input.mark?.lengthMm ?? 0) / 1000;
   const minutes = motion === null ? null : trailMinutesAtLeast(model, trailM, scorchWidthM, motion.speedMPerS);
-  const hot = concentrationBand(plane, 0, markDiscM, setting.opticSigmaRel);
+  const hot = concentrationBand(plane, 0, markDiscM, setting.opticSigmaRel, traced?.concentration('5 mm', 'hot spot') ?? null);
+  guardTemperature(hot.high * light.high);
   return {
     spotRadiusM: halfMaxM / 2,
-    harmfulDwellS: motion === null || motion.acrossMPerS <= 0 ? null : dwellBand(plane, thresholdKwm2, light, motion),
+    harmfulDwellS: motion === null || motion.acrossMPerS <= 0 ? null : dwellBand(plane, thresholdKwm2, light, traced, motion),
     hotSpotKwm2: { low: (hot.low * light.low) / 1000, mid: (hot.mid * light.mid) / 1000, high: (hot.high * light.high) / 1000 },
     result: {
-      method: 'closed-form',
+      method: traced === null ? 'closed-form' : 'ray-trace',
       focusKind: model.focusKind,
       focalLengthM: roundSignificant(model.focalLengthM, 4),
       spotDiameterMm: roundBand({ low: spread.low * 1000, mid: spread.mid * 1000, high: spread.high * 1000 }),
-      discs: discsOf(plane, light, sampling, imageM, setting.opticSigmaRel),
+      discs: discsOf(plane, light, sampling, traced, imageM, setting.opticSigmaRel),
       plane: planeWords(plane),
-      spotAtDistance: spotAtDistance(beam, light.mid),
+      spotAtDistance: spotAtDistance(beam, light.mid, traced),
       dangerZone: zone === null ? null : { thresholdKwm2: roundSignificant(thresholdKwm2, 3), nearM: roundSignificant(zone.nearM, 3), farM: roundSignificant(zone.farM, 3) },
       trailSpeedMmPerH: motion === null ? null : roundSignificant(motion.speedMPerS * 3_600_000, 3),
       trailHeadingDeg: motion === null ? null : roundTo(motion.headingDeg, 1),
       trailMinutesAtLeast: minutes === null ? null : roundTo(minutes, 1),
-      dwellS: dwellOf(plane, light, motion),
+      dwellS: dwellOf(plane, light, traced, motion),
+      traced: traced === null ? null : tracedResult(traced, plane.cosine * beam.concentration(plane.distanceM, 0, markDiscM)),
     },
   };
 }

@@ -57,7 +57,7 @@ function candidates(judged: readonly JudgedMinute[], best: JudgedMinute, mark: M
 }
 
 /** Plan of the sampling at the best minute; null where something that it needs is unknown. */
-function planFor(judged: readonly JudgedMinute[], best: JudgedMinute, light: DirectBeam, setting: Setting): SamplingPlan | null {
+function planFor(judged: readonly JudgedMinute[], best: JudgedMinute, light: DirectBeam, calibration: (distanceM: number) => number, setting: Setting): SamplingPlan | null {
   const { model, mark, reach } = setting;
   const { beam, miss } = best;
   const spread = beamSpread(best, light, setting);
@@ -91,12 +91,12 @@ function planFor(judged: readonly JudgedMinute[], best: JudgedMinute, light: Dir
     markHalfM: markHalfM(mark, model.focusKind),
     nearM: reach.nearM,
     farM: reach.farM,
-    table: tabulate(beam, nearTableM, miss.alongM * (1 + spanRel), widestM, markDiscM),
+    table: tabulate(beam, nearTableM, miss.alongM * (1 + spanRel), widestM, markDiscM, calibration),
   };
 }
 
-export function sampleAt(judged: readonly JudgedMinute[], best: JudgedMinute, light: DirectBeam, setting: Setting): Sampling | null {
-  const plan = planFor(judged, best, light, setting);
+export function sampleAt(judged: readonly JudgedMinute[], best: JudgedMinute, light: DirectBeam, calibration: (distanceM: number) => number, setting: Setting): Sampling | null {
+  const plan = planFor(judged, best, light, calibration, setting);
   if (plan === null || plan.track.length === 0) return null;
   return samplePlan(plan, setting.input.samples ?? defaultSamples, setting.input.seed);
 }

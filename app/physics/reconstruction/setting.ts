@@ -4,7 +4,7 @@ import { lowestHarmfulFluxKwm2 } from '#app/physics/heating/outcomes.ts';
 import type { TargetMaterial } from '#app/physics/heating/target-material.ts';
 import { targetMaterials } from '#app/physics/heating/target-materials.data.ts';
 import { spannedDeg, surveySigmaM, type Scene } from '#app/physics/lit.ts';
-import type { FocusModel } from '#app/physics/optics/closed-form/beam.ts';
+import { surveyOrigin, type FocusModel } from '#app/physics/optics/closed-form/beam.ts';
 import { focusModelOf } from '#app/physics/optics/closed-form/focus-model.ts';
 import { measuredOpticSigmaRel, slopeErrors } from '#app/physics/optics/optic-defaults.data.ts';
 import { refractiveMaterials } from '#app/physics/optics/refractive-materials.data.ts';
@@ -98,7 +98,7 @@ export function settle(input: ReconstructionInput): Setting {
   const site = settleSite(input);
   const track = sunTrack(site.observer, startMs, minutesIn(startMs, endMs));
   const model = input.optic === undefined ? null : focusModelOf(input.optic);
-  const mark = input.mark === undefined ? null : readMark(input.mark);
+  const mark = input.mark === undefined ? null : readMark(input.mark, model?.startsAt ?? surveyOrigin);
   const material = input.target === undefined ? null : targetMaterials.get(input.target.materialId) ?? null;
   if (input.target !== undefined && material === null) {
     throw new RangeError(`target.materialId is "${input.target.materialId}"; it must be one of ${[...targetMaterials.keys()].join(', ')}.`);

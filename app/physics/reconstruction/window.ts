@@ -21,7 +21,7 @@ export function judgeWindow(setting: Setting, onMinute: (done: number) => void):
 export const markDiscM = 0.005;
 
 /** Likely flux at the mark; null where the beam passes so far off that the closed forms say nothing. */
-function fluxAtMarkKwm2(minute: JudgedMinute, setting: Setting): number | null {
+function fluxAtMarkKwm2(minute: JudgedMinute, calibration: (distanceM: number) => number, setting: Setting): number | null {
   const { beam, miss, sun } = minute;
   const { mark, reach } = setting;
   if (beam === null || miss === null || mark === null || reach === null) return null;
@@ -31,16 +31,16 @@ function fluxAtMarkKwm2(minute: JudgedMinute, setting: Setting): number | null {
   );
   if (light.likelyWm2 === null) return null;
   const cosine = Math.max(0, -dot(beam.direction, mark.normal));
-  return (beam.concentration(miss.alongM, miss.offsetM, markDiscM) * cosine * light.likelyWm2 * light.transmittance) / 1000;
+  return (calibration(miss.alongM) * beam.concentration(miss.alongM, miss.offsetM, markDiscM) * cosine * light.likelyWm2 * light.transmittance) / 1000;
 }
 
 /**
- * Minutes for the result. Night is left to the runs, which keep it whole: of four days half would be empty rows.
+ * Minutes for the result, their flux by the closed form scaled with the trace at the best minute. Night is left to the runs, which keep it whole: of four days half would be empty rows.
  */
-export function minuteResults(judged: readonly JudgedMinute[], setting: Setting): readonly MinuteResult[] {
+export function minuteResults(judged: readonly JudgedMinute[], calibration: (distanceM: number) => number, setting: Setting): readonly MinuteResult[] {
   return judged.filter((minute) => minute.reason !== 'night').map((minute) => {
     const lit = minute.verdict !== 'not-sunlit' || minute.reason === 'beam-misses';
-    const flux = lit ? fluxAtMarkKwm2(minute, setting) : null;
+    const flux = lit ? fluxAtMarkKwm2(minute, calibration, setting) : null;
     return {
       atUtc: toIsoUtc(minute.sun.utcMs),
       azimuthDeg: roundTo(minute.sun.azimuthDeg, 2),

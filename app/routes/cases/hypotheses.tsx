@@ -48,6 +48,7 @@ export function loader({ request, context, params }: Route.LoaderArgs) {
       engineHidden: !outcomeShown,
       editable,
       closedBecause: editable ? null : whoCan('hypothesis:write'),
+      takeOverHref: editable && engine ? `?edit=${list.find((hypothesis) => hypothesis.kind === 'focused-sunlight')?.id ?? 'new'}&engine=1#hypothesis-form` : undefined,
       form: editable ? await formView(actor, list, engine, url.searchParams) : null,
     };
   });
@@ -80,7 +81,6 @@ async function formView(actor: Actor, list: readonly HypothesisView[], engine: E
     openedAt: existing?.updatedAt.toISOString() ?? '',
     stored: hypothesisFields(suggested ? { ...start, tests: suggestedTests(engineTests(engine), start.tests) } : start),
     suggested,
-    takeOverHref: mayTakeOver && !suggested ? `?edit=${edit}&engine=1#hypothesis-form` : undefined,
     people: await listColleagues(db, actor.organisationId),
   };
 }
@@ -131,7 +131,7 @@ export default function Hypotheses({ loaderData, actionData }: Route.ComponentPr
         </section>
       ) : null}
       <div className="mt-4 max-w-[60rem]">
-        {loaderData.engineHidden ? <p className="text-second">What the engine computed is hidden until you ask to see the author&rsquo;s opinion.</p> : <EngineSays caseNumber={caseNumber} words={engine} takeOverHref={form?.takeOverHref} />}
+        {loaderData.engineHidden ? <p className="text-second">What the engine computed is hidden until you ask to see the author&rsquo;s opinion.</p> : <EngineSays caseNumber={caseNumber} words={engine} takeOverHref={form?.suggested ? undefined : loaderData.takeOverHref} />}
       </div>
     </div>
   );

@@ -19,7 +19,7 @@ import { readReceipt } from '#app/domain/report.ts';
 import { clientAddressContext } from '#app/http/client-address.ts';
 import type { FormProblem } from '#app/http/form-result.server.ts';
 import { formProblem, problemFromError } from '#app/http/form-result.server.ts';
-import { limitRate } from '#app/http/rate-limit.server.ts';
+import { limitRate } from '#app/auth/rate-limit.server.ts';
 import { respond } from '#app/http/to-response.server.ts';
 import { answerQuestion } from '#app/services/reports/answer-question.server.ts';
 import { db } from '#db/client.server.ts';

@@ -14,7 +14,7 @@ import { formatDayClock } from '#app/domain/local-time.ts';
 import { homeFor } from '#app/domain/navigation.ts';
 import { clientIdSchema, readReceipt } from '#app/domain/report.ts';
 import { clientAddressContext } from '#app/http/client-address.ts';
-import { limitReporting } from '#app/http/report-limits.server.ts';
+import { limitReporting } from '#app/auth/report-limits.server.ts';
 import { respond } from '#app/http/to-response.server.ts';
 import { db } from '#db/client.server.ts';
 import { getReportProgress } from '#db/queries/reports.server.ts';

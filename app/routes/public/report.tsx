@@ -16,7 +16,7 @@ import { env } from '#app/env.server.ts';
 import { clientAddressContext } from '#app/http/client-address.ts';
 import { typedValues } from '#app/http/form-result.server.ts';
 import { readForm } from '#app/http/multipart-form.server.ts';
-import { limitReporting } from '#app/http/report-limits.server.ts';
+import { limitReporting } from '#app/auth/report-limits.server.ts';
 import { respond, statusFor } from '#app/http/to-response.server.ts';
 import { storeReportPhoto } from '#app/services/photos/store-photo.server.ts';
 import { removeDraftPhoto } from '#app/services/photos/remove-draft-photo.server.ts';
@@ -44,7 +44,14 @@ async function viewOf(holder: ReportHolder, clientId: string, guestCode: string 
     holderKey: holder.kind === 'person' ? `person-${holder.actor.userId}` : `site-${holder.site.id}`,
     guestCode,
     guest: holder.kind === 'guest',
-    sites: sites.map(({ id, name, code, zone }) => ({ id, name, code, zone, nowLocal: toLocalInput(now, zone) })),
+    sites: sites.map((site) => ({
+      id: site.id,
+      name: site.name,
+      code: site.code,
+      zone: site.zone,
+      nowLocal: toLocalInput(now, site.zone),
+      around: holder.kind === 'person' ? { latitudeDeg: Number(site.latitudeDeg.toFixed(3)), longitudeDeg: Number(site.longitudeDeg.toFixed(3)) } : null,
+    })),
     emergencyNumber: env.EMERGENCY_NUMBER,
     photos: photos.map(({ id, fileName, state }) => ({ id, fileName, state })),
     closeHref: holder.kind === 'person' ? homeFor(holder.actor) : '/',

@@ -5,7 +5,7 @@ import type { ReportHolder } from '#app/domain/report.ts';
 import { clientIdSchema } from '#app/domain/report.ts';
 import { clientAddressContext } from '#app/http/client-address.ts';
 import { readForm } from '#app/http/multipart-form.server.ts';
-import { limitReporting } from '#app/http/report-limits.server.ts';
+import { limitReporting } from '#app/auth/report-limits.server.ts';
 import { statusFor } from '#app/http/to-response.server.ts';
 import { removeDraftPhoto } from '#app/services/photos/remove-draft-photo.server.ts';
 import type { PhotoOutcome } from '#app/services/photos/store-photo.server.ts';

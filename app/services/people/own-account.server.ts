@@ -5,7 +5,7 @@ import { hashPassword, verifyPassword } from '#app/auth/password.server.ts';
 import { closeEverySession, openSession } from '#app/auth/session.server.ts';
 import { DomainError } from '#app/domain/errors.ts';
 import type { Actor } from '#app/domain/roles.ts';
-import { limitRate } from '#app/http/rate-limit.server.ts';
+import { limitRate } from '#app/auth/rate-limit.server.ts';
 
 /** Changes one's own password; every other session ends. Returns the cookie of the new one. */
 export async function changePassword(actor: Actor, request: { currentPassword: string; password: string }): Promise<string> {

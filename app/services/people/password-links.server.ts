@@ -9,7 +9,7 @@ import { mailedTokenHash, newMailedToken, tokenLifetimeMs } from '#app/auth/mail
 import { hashPassword } from '#app/auth/password.server.ts';
 import { closeEverySession, openSession } from '#app/auth/session.server.ts';
 import { DomainError } from '#app/domain/errors.ts';
-import { limitRate } from '#app/http/rate-limit.server.ts';
+import { limitRate } from '#app/auth/rate-limit.server.ts';
 import { passwordResetMail } from '#app/mail/templates/account.ts';
 
 /** A fresh link for a person; links sent before stop working. */

@@ -3,7 +3,7 @@ import { getAccountByEmail } from '#db/queries/users.server.ts';
 import { verifyPassword } from '#app/auth/password.server.ts';
 import { openSession } from '#app/auth/session.server.ts';
 import { DomainError } from '#app/domain/errors.ts';
-import { limitRate } from '#app/http/rate-limit.server.ts';
+import { limitRate } from '#app/auth/rate-limit.server.ts';
 
 const windowS = 900;
 

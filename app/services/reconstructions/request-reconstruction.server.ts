@@ -2,34 +2,14 @@ import { inTransaction } from '#db/client.server.ts';
 import { lockCase } from '#db/queries/case-subject.server.ts';
 import { insertLogEntry } from '#db/queries/log.server.ts';
 import { getReconstructionSource, insertReconstruction } from '#db/queries/reconstructions.server.ts';
-import type { ReconstructionSource } from '#db/queries/reconstructions.server.ts';
 import { DomainError, notFound } from '#app/domain/errors.ts';
-import { reconstructionInput } from '#app/domain/reconstruction-input.ts';
+import { draftInput } from '#app/domain/reconstruction-draft.ts';
 import type { Actor } from '#app/domain/roles.ts';
-import { sceneSchema } from '#app/domain/scene.ts';
 import { runReconstructionJob } from '#app/jobs/definitions/run-reconstruction.ts';
 import { enqueue } from '#app/jobs/queue.server.ts';
 import { engineVersion } from '#app/physics/model.ts';
 import { authorize } from '#app/services/authorize.ts';
 import { hashOf } from '#app/storage/sha256.server.ts';
-
-/** The calendar of return runs from the onset to thirteen months from now, and is cut at five years. */
-const calendarAheadMs = 400 * 86_400_000;
-const longestCalendarMs = 5 * 365 * 86_400_000;
-
-/** The engine's input for a case as it stands now, with the origin of each value and what is missing. */
-export function draftInput(source: ReconstructionSource, now: Date) {
-  const from = source.times.onsetEarliestAt ?? source.times.onsetLatestAt ?? source.times.foundAt ?? now;
-  const to = Math.min(now.getTime() + calendarAheadMs, from.getTime() + longestCalendarMs);
-  return reconstructionInput({
-    scene: source.scene ?? sceneSchema.parse({}),
-    site: source.site,
-    times: source.times,
-    seed: source.caseNumber,
-    // Whole days, so that two requests on one day ask for the same and hash alike.
-    recurrenceToUtc: new Date(Math.floor(to / 86_400_000) * 86_400_000).toISOString(),
-  });
-}
 
 /** Freezes the input and queues a run; returns its number within the case. */
 export function requestReconstruction(request: { actor: Actor; caseNumber: number; note: string }): Promise<{ number: number }> {

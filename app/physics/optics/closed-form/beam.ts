@@ -1,5 +1,7 @@
 import type { Vector } from '#app/physics/vector.ts';
 
+export const surveyOrigin: Vector = [0, 0, 0];
+
 /** Light beyond the optic for one direction of the sun. */
 export interface Beam {
   /** Unit direction of the chief ray beyond the optic, from its origin. */
@@ -28,6 +30,8 @@ export interface FocusModel {
   readonly focalLengthM: number;
   /** Unit direction of the straight generators of a line optic. */
   readonly generator: Vector | null;
+  /** Point from which the chief ray starts, seen from the origin of the survey. [m] Zero except for a ponded dome. */
+  readonly startsAt: Vector;
   /** Half the optic's extent along its generators. [m] */
   readonly lineHalfLengthM: number;
   /** True for optics that are turned by hand or by a drive. */

@@ -1,7 +1,7 @@
 import { cross, dot, fromAzimuthElevation, mirrored, scale, subtract, unit, type Vector } from '#app/physics/vector.ts';
 import type { PaneOptic } from '#app/physics/optics/optic.ts';
 import { slopeErrors } from '#app/physics/optics/optic-defaults.data.ts';
-import { sharpestDistanceM, type Beam, type FocusModel } from './beam.ts';
+import { sharpestDistanceM, surveyOrigin, type Beam, type FocusModel } from './beam.ts';
 import { circleOverlapM2 } from './meridional.ts';
 
 /** Cells along each side of the pane. */
@@ -154,6 +154,7 @@ export function bowedPaneModel(optic: PaneOptic): FocusModel {
     focusKind: 'point',
     focalLengthM: focusing ? shortRadiusM / 2 : -shortRadiusM / 2,
     generator: null,
+    startsAt: surveyOrigin,
     lineHalfLengthM: 0,
     moves: false,
     throughput: optic.reflectance,

@@ -3,7 +3,7 @@ import { cross, dot, fromAzimuthElevation, mirrored, scale, subtract, unit, type
 import type { CurvedReflectorOptic, CylinderOptic } from '#app/physics/optics/optic.ts';
 import { slopeErrors } from '#app/physics/optics/optic-defaults.data.ts';
 import { ballFocalLengthM, bravaisIndex, mediumOf } from '#app/physics/optics/refraction.ts';
-import { sharpestDistanceM, type Beam, type FocusModel } from './beam.ts';
+import { sharpestDistanceM, surveyOrigin, type Beam, type FocusModel } from './beam.ts';
 import { radiusHolding, slotDensityPerM, type Fan } from './meridional.ts';
 import { ballFan, slotMirrorFan } from './shapes.ts';
 
@@ -69,6 +69,7 @@ export function cylinderModel(optic: CylinderOptic): FocusModel {
     focusKind: 'line',
     focalLengthM: ballFocalLengthM(radiusM, medium.refractiveIndex),
     generator,
+    startsAt: surveyOrigin,
     lineHalfLengthM: optic.lengthM / 2,
     moves: false,
     throughput: medium.internalTransmittance(optic.diameterM),
@@ -113,6 +114,7 @@ export function curvedReflectorModel(optic: CurvedReflectorOptic): FocusModel {
     focusKind: 'line',
     focalLengthM: optic.radiusM / 2,
     generator,
+    startsAt: surveyOrigin,
     lineHalfLengthM: optic.lengthM / 2,
     moves: false,
     throughput: optic.reflectance,

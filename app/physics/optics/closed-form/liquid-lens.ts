@@ -3,7 +3,7 @@ import { lengthOf, unit, type Vector } from '#app/physics/vector.ts';
 import type { BowlOptic, DomeOptic } from '#app/physics/optics/optic.ts';
 import { slopeErrors } from '#app/physics/optics/optic-defaults.data.ts';
 import { fresnelReflectance, mediumOf } from '#app/physics/optics/refraction.ts';
-import { sharpestDistanceM, type FocusModel } from './beam.ts';
+import { sharpestDistanceM, surveyOrigin, type FocusModel } from './beam.ts';
 import { radiusHolding, roundShare } from './meridional.ts';
 import { roundBottomFan } from './shapes.ts';
 
@@ -38,7 +38,7 @@ function insideDirection(towardsSun: Vector, refractiveIndex: number): Vector {
 }
 
 /**
- * Level liquid over a round bottom, with the centre of the round bottom as origin.
+ * Level liquid over a round bottom; the chief ray starts from the centre of the sphere that the bottom belongs to.
  *
  * The flat top bends parallel light as a whole; after that the round bottom has no axis of its own, so the spot stays
  * round at any height of the sun and lies on the line through the centre.
@@ -53,6 +53,8 @@ export function liquidLensModel(optic: BowlOptic | DomeOptic): FocusModel {
     focusKind: 'point',
     focalLengthM,
     generator: null,
+    // A bowl is surveyed from the centre of its sphere, a dome from its lowest point.
+    startsAt: optic.kind === 'ponded-dome' ? [0, 0, pool.radiusM] : surveyOrigin,
     lineHalfLengthM: 0,
     moves: false,
     throughput: medium.internalTransmittance(pool.depthM),

@@ -5,7 +5,7 @@ import type {
 } from '#app/physics/optics/optic.ts';
 import { fresnelColourSpread, slopeErrors } from '#app/physics/optics/optic-defaults.data.ts';
 import { ballFocalLengthM, mediumOf, obliqueMirrorFociM } from '#app/physics/optics/refraction.ts';
-import { sharpestDistanceM, type Beam, type FocusModel } from './beam.ts';
+import { sharpestDistanceM, surveyOrigin, type Beam, type FocusModel } from './beam.ts';
 import { radiusHolding, roundShare, type Fan } from './meridional.ts';
 import { ballFan, idealFan, lensFan, mirrorFan } from './shapes.ts';
 
@@ -78,7 +78,7 @@ function roundModel(shape: RoundShape): FocusModel {
     return shape.axis !== null && dot(sun, shape.axis) <= 0 ? null : sun;
   };
   return {
-    focusKind: 'point', focalLengthM: shape.focalLengthM, generator: null, lineHalfLengthM: 0,
+    focusKind: 'point', focalLengthM: shape.focalLengthM, generator: null, startsAt: surveyOrigin, lineHalfLengthM: 0,
     moves: shape.moves, throughput: shape.throughput, beamFor, requiredSun,
   };
 }

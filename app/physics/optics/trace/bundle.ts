@@ -21,13 +21,13 @@ export interface Ledger {
  * Batch b holds the rays from `batchEnd[b − 1]` up to `batchEnd[b]`.
  */
 export class RayBundle {
-  readonly px: Float64Array;
-  readonly py: Float64Array;
-  readonly pz: Float64Array;
-  readonly dx: Float64Array;
-  readonly dy: Float64Array;
-  readonly dz: Float64Array;
-  readonly weight: Float64Array;
+  px: Float64Array;
+  py: Float64Array;
+  pz: Float64Array;
+  dx: Float64Array;
+  dy: Float64Array;
+  dz: Float64Array;
+  weight: Float64Array;
   #reach: Float64Array | null = null;
   count = 0;
   readonly batchEnd: number[] = [];
@@ -57,9 +57,9 @@ export class RayBundle {
     return this.#reach;
   }
 
-  /** Adds a ray that meets the optic again at a distance, or never (Infinity). Beyond the capacity it is left out. */
+  /** Adds a ray that meets the optic again at a distance, or never (Infinity). */
   pushLeg(px: number, py: number, pz: number, dx: number, dy: number, dz: number, weight: number, reach: number): void {
-    if (this.count >= this.capacity) return;
+    if (this.count >= this.capacity) this.#grow();
     if (reach < Infinity) {
       this.#reach ??= new Float64Array(this.capacity).fill(Infinity);
       this.#reach[this.count] = reach;
@@ -71,9 +71,25 @@ export class RayBundle {
     this.batchEnd.push(this.count);
   }
 
+  #grow(): void {
+    const larger = (from: Float64Array): Float64Array => {
+      const to = new Float64Array(2 * from.length).fill(Infinity, from.length);
+      to.set(from);
+      return to;
+    };
+    this.px = larger(this.px);
+    this.py = larger(this.py);
+    this.pz = larger(this.pz);
+    this.dx = larger(this.dx);
+    this.dy = larger(this.dy);
+    this.dz = larger(this.dz);
+    this.weight = larger(this.weight);
+    if (this.#reach) this.#reach = larger(this.#reach);
+  }
+
   /** Adds a ray with unlimited reach. */
   push(px: number, py: number, pz: number, dx: number, dy: number, dz: number, weight: number): void {
-    if (this.count >= this.capacity) return;
+    if (this.count >= this.capacity) this.#grow();
     const i = this.count++;
     this.px[i] = px;
     this.py[i] = py;

@@ -137,17 +137,18 @@ function capTracer(cap: Cap): (samples: Samples, launch: Launch, bundle: RayBund
   };
 }
 
-/** Back-traced estimator, all bounces. Points are spread evenly over the rim's disc and dropped on the face. */
+/** Back-traced estimator, all bounces. */
 function capBackTrace(cap: Cap, sun: SunDisc, blocked: (px: number, py: number, pz: number, sx: number, sy: number, sz: number) => boolean): BackTrace {
   const sunSolidAngle = Math.PI * Math.sin(sun.halfAngleRad) ** 2;
   const gaussians = new Float64Array(2);
   return {
     dimensions: 4,
     path(at: Vector, receiver: Vector, u) {
-      const r = cap.rim * Math.sqrt(u[0]!);
+      // Equal areas of a sphere lie between equal heights; on a paraboloid the rim's disc serves.
+      const r = cap.spherical ? Math.sqrt(u[0]! * cap.rimZ * (2 * cap.radius - u[0]! * cap.rimZ)) : cap.rim * Math.sqrt(u[0]!);
       let x = r * Math.cos(2 * Math.PI * u[1]!);
       let y = r * Math.sin(2 * Math.PI * u[1]!);
-      let z = sag(cap, r * r);
+      let z = cap.spherical ? u[0]! * cap.rimZ : sag(cap, r * r);
       gaussPair(u[2]!, u[3]!, gaussians, 0);
       let dx = x - at[0];
       let dy = y - at[1];
@@ -161,7 +162,8 @@ function capBackTrace(cap: Cap, sun: SunDisc, blocked: (px: number, py: number, 
       innerNormal({ ...cap, sigma: 0 }, x, y, z, 0, 0);
       const facing = -(dx * normal[0]! + dy * normal[1]! + dz * normal[2]!);
       if (facing <= 0 || nextMeeting(cap, x, y, z, -dx, -dy, -dz) < d) return 0;
-      const solid = (Math.PI * cap.rim * cap.rim * facing) / (normal[2]! * d * d);
+      const area = cap.spherical ? 2 * Math.PI * cap.radius * cap.rimZ : (Math.PI * cap.rim * cap.rim) / normal[2]!;
+      const solid = (area * facing) / (d * d);
       let power = 1;
       for (let bounce = 0; bounce < mostInteractions && power > cutOff; bounce++) {
         innerNormal(cap, x, y, z, bounce & 1 ? gaussians[1]! : gaussians[0]!, bounce & 1 ? -gaussians[0]! : gaussians[1]!);

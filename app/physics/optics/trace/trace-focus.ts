@@ -15,7 +15,8 @@ import { traceBundle } from './trace-bundle.ts';
 import type { BestPlane, ContourWidth, DiscName, FluxGrid, TraceDisc, TraceRequest, TraceResult } from './trace-model.ts';
 import { discNames } from './trace-model.ts';
 
-const backPaths = 32768;
+/** Paths traced back for one disc: fewer where fewer rays were asked for. */
+const backPaths = (rays: number): number => Math.max(2048, Math.min(32768, rays / 4));
 
 /** Rays that a hot spot should rest on. */
 export const fewestRays = 200;
@@ -113,7 +114,7 @@ class Focus {
     let estimator: TraceDisc['estimator'] = 'forward';
     const position = pointOf(cut, at.x, at.y);
     if (kernel.backTrace && !(forward.stdError < 0.03 * forward.mean)) {
-      const back = backEstimate(kernel.backTrace, position, cut.plane, diameterM, backPaths, this.request.seed);
+      const back = backEstimate(kernel.backTrace, position, cut.plane, diameterM, backPaths(this.traced.rays), this.request.seed);
       if (forward.mean === 0 || (back.concentration > 0 && back.stdError < estimate.stdError)) {
         estimate = back;
         estimator = 'back-traced';
@@ -140,7 +141,7 @@ class Focus {
     if (!backTrace) return null;
     const mark = this.markIn(cut);
     const at = mark ?? hot;
-    const { concentration, stdError } = backEstimate(backTrace, pointOf(cut, at.x, at.y), cut.plane, 0.005, 2 * backPaths, this.request.seed);
+    const { concentration, stdError } = backEstimate(backTrace, pointOf(cut, at.x, at.y), cut.plane, 0.005, 2 * backPaths(this.traced.rays), this.request.seed);
     return { centre: mark ? 'mark' : 'hot spot', diameterM: 0.005, concentration: digits(concentration), stdError: digits(stdError, 3) };
   }
 
