@@ -98,7 +98,6 @@ export const reconstructionSchema = z.strictObject({
   target: targetSchema.optional(),
   recurrenceFromUtc: instant.optional(),
   recurrenceToUtc: instant.optional(),
-  recurrenceToUtc: instant.optional(),
   rays: z.int().min(1000).max(5_000_000).optional(),
   samples: z.int().min(64).max(65_536).optional(),
   seed: z.int().min(0).max(4_294_967_295),

@@ -48,16 +48,24 @@ export function yearOfSun(query: YearQuery): { readonly days: readonly YearDay[]
   const reach: YearSpan[] = [];
   let day = query.firstOn;
   let dayMs = startMs;
+  let offsetMs = zoneOffsetMs(dayMs, zone);
   for (let count = 0; count < query.days; count += 1) {
     const following = nextDay(day);
-    const endMs = startOfLocalDay(following, zone);
+    // Most days keep their offset; asking the zone data costs more than all the rest.
+    const steady = zoneOffsetMs(dayMs + 86_400_000, zone) === offsetMs;
+    const endMs = steady ? dayMs + 86_400_000 : startOfLocalDay(following, zone);
+    const begin = dayMs;
     const first = Math.ceil((dayMs - startMs) / stepMs);
     const last = Math.floor((endMs - startMs) / stepMs);
-    const minute = (index: number): number => minuteOfDay(startMs + index * stepMs, dayMs, endMs, zone);
+    const minute = (index: number): number => {
+      const atMs = startMs + index * stepMs;
+      return steady ? Math.min(1440, Math.max(0, (atMs - begin) / 60_000)) : minuteOfDay(atMs, begin, endMs, zone);
+    };
     days.push({ on: day, ...daylightBetween(first, last, height, minute) });
     reach.push(...spansBetween(first, last, clear, minute).map((span) => ({ on: day, ...span })));
     day = following;
     dayMs = endMs;
+    if (!steady) offsetMs = zoneOffsetMs(dayMs, zone);
   }
   return { days, reach };
 }

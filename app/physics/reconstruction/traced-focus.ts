@@ -25,7 +25,7 @@ export interface TracedFocus {
   readonly result: TraceResult;
   /** Hot-spot concentration of the 5 mm disc along the beam. */
   readonly along: readonly ZonePoint[];
-  /** Traced over closed-form concentration of the 5 mm hot spot at a distance. */
+  /** Traced over closed-form concentration on 5 mm at a distance: at the mark where light falls on it, else on the hot spot. */
   readonly calibration: (distanceM: number) => number;
   readonly concentration: (disc: DiscName, centre: 'hot spot' | 'mark') => number | null;
   /** Length of the contour along the trail above a number of suns. [m] */
@@ -72,11 +72,26 @@ function widthReader(result: TraceResult): (suns: number) => number {
 /** The closed forms miss by less than this; a greater ratio means a plane in which one of the two sees no light. */
 const greatestCalibration = 4;
 
+/** Ratio kept between the limits that a plausible comparison allows. */
+function heldRatio(traced: number, closed: number): number {
+  return Math.min(greatestCalibration, Math.max(1 / greatestCalibration, traced / closed));
+}
+
+/** Traced over closed-form concentration on the disc centred on the mark; null where the closed form sees no light. */
+function ratioAtMark(minute: JudgedMinute, beam: Beam, result: TraceResult, setting: Setting): number | null {
+  const { mark } = setting;
+  const { miss } = minute;
+  const traced = result.discs.find((row) => row.disc === '5 mm' && row.centre === 'mark');
+  if (mark === null || miss === null || traced === undefined || traced.concentration <= 3 * traced.stdError) return null;
+  const closed = -dot(beam.direction, mark.normal) * beam.concentration(miss.alongM, miss.offsetM, markDiscM);
+  return closed > 0 ? heldRatio(traced.concentration, closed) : null;
+}
+
 function calibrationReader(along: readonly ZonePoint[], beam: Beam): (distanceM: number) => number {
   const ratios = along.flatMap(({ distanceM, concentration }) => {
     const closed = beam.concentration(distanceM, 0, markDiscM);
     if (closed <= 0 || concentration <= 0) return [];
-    return [{ distanceM, ratio: Math.min(greatestCalibration, Math.max(1 / greatestCalibration, concentration / closed)) }];
+    return [{ distanceM, ratio: heldRatio(concentration, closed) }];
   });
   return (distanceM) => {
     const after = ratios.findIndex((row) => row.distanceM >= distanceM);
@@ -103,10 +118,13 @@ export function traceAt(minute: JudgedMinute, beam: Beam, motion: SpotMotion | n
   const along = concentrationAlongAxis(traced, markDiscM, cutShares.map((share) => share * beam.focusM - shift)).map((point) => ({
     ...point, distanceM: point.distanceM + shift,
   }));
+  const alongBeam = calibrationReader(along, beam);
+  const atMark = ratioAtMark(minute, beam, result, setting);
+  const anchorM = minute.miss?.alongM ?? beam.focusM;
   return {
     result,
     along,
-    calibration: calibrationReader(along, beam),
+    calibration: atMark === null ? alongBeam : (distanceM) => (atMark * alongBeam(distanceM)) / alongBeam(anchorM),
     concentration: (disc, centre) => result.discs.find((row) => row.disc === disc && row.centre === centre)?.concentration ?? null,
     contourWidthM: widthReader(result),
     dangerZone: (suns) => dangerZone(along, suns),
