@@ -13,6 +13,7 @@ export const exampleInput: ReconstructionInput = {
     aod500: 0.12,
     aod380: 0.17,
     solarConstantWm2: 1361.1,
+    circumsolarRatio: 0.03,
     dniSeries: {
       basis: 'measured',
       source: 'invented station, 6 km west',

@@ -7,7 +7,7 @@ import type { Risk } from './incident.ts';
 const required = (max: number, sentence: string) => plainText(max).pipe(z.string().min(1, sentence));
 const day = z.iso.date('Give the day as year, month and day, such as 2026-07-24.');
 const person = z.uuid('Choose a person from the list.');
-const tick = z.union([z.literal('on'), z.undefined()]).transform((value) => value === 'on');
+const tick = z.literal('on').optional().transform((value) => value === 'on');
 
 /** Reasons are read by others later: a full stop or a dash is not one. */
 export const reasonSchema = required(2_000, 'Give the reason in a few words.').pipe(z.string().min(5, 'Give the reason in a few words.'));

@@ -187,6 +187,11 @@ export function todayCard(facts: { readonly zone: string; readonly latitudeDeg: 
   const asCase: CardCase = { ...facts, onsetEarliestAt: new Date(whole.startUtc), onsetLatestAt: new Date(whole.endUtc), foundAt: null, reportedAt: facts.now };
   const card = dayCard({ ...asCase, onsetEarliestAt: null, onsetLatestAt: null }, null, { fromHour: 4, toHour: 22 });
   if (!facts.decided) return { ...card, window: whole, runs: undecidedRuns(whole, card.daylight) };
-  const runs = facts.sunlit ? [{ fromUtc: facts.sunlit.fromAt.toISOString(), toUtc: facts.sunlit.toAt.toISOString(), verdict: 'sunlit' as const, reasonWords: reasonWords['sun-on-mark'] }] : [];
+  const runs = facts.sunlit ? [{ fromUtc: facts.sunlit.fromAt.toISOString(), toUtc: facts.sunlit.toAt.toISOString(), verdict: 'sunlit' as const, reasonWords: minuteReasonWords['sun-on-mark'] }] : [];
   return { ...card, window: whole, runs };
+}
+
+/** The day of `now` with the minutes of a run made for it. */
+export function runCard(place: { readonly zone: string; readonly latitudeDeg: number; readonly longitudeDeg: number; readonly elevationM: number }, result: CardResult, now: Date): CardView {
+  return dayCard({ ...place, onsetEarliestAt: null, onsetLatestAt: null, foundAt: null, reportedAt: now }, result, { fromHour: 4, toHour: 22 });
 }

@@ -46,6 +46,7 @@ const skySchema = z.strictObject({
   aod500: z.number().min(0).max(5).optional(),
   aod380: z.number().min(0).max(5).optional(),
   solarConstantWm2: z.number().min(1300).max(1400).optional(),
+  circumsolarRatio: z.number().min(0).max(0.5).optional(),
   dniSeries: dniSeriesSchema.optional(),
 });
 

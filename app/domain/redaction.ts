@@ -1,26 +1,25 @@
-import type { RedactedText, ReleasedCase, WithheldCounts } from './released-case.ts';
+import type { CaseBeforeRedaction } from './case-before-redaction.ts';
 import type { FourTests } from './hypothesis.ts';
+import type { HeldWords, Searcher } from './redact-text.ts';
+import { redactText, searcherFor } from './redact-text.ts';
+import { releasedCaseSchema, withheldClasses } from './released-case.ts';
+import type { RedactedText, ReleasedCase, WithheldClass, WithheldCounts } from './released-case.ts';
+import { releasedMeasurements } from './released-measurements.ts';
+import { authorNames, chronologyOf, correctedFound, injuryWords, releasedEvent, releasedResult } from './released-parts.ts';
 
 /**
  * What leaves the house, by field and reader. Anything that has no line here does not leave: `redactCase` builds the
- * released case field by field and asks this table for each.
+ * released case field by field, asks this table for each, and drops whatever the released shape does not name.
  */
 export const audiences = ['insurer', 'other-party'] as const;
 export type Audience = (typeof audiences)[number];
-
-export const withheldClasses = ['personal', 'health', 'child', 'legal', 'exact-place', 'commercial', 'free-text'] as const;
-export type WithheldClass = (typeof withheldClasses)[number];
-export const withheldLabels: Record<WithheldClass, string> = {
-  personal: 'personal',
-  health: 'health',
-  child: 'child',
-  legal: 'legal',
-  'exact-place': 'exact place',
-  commercial: 'commercial',
-  'free-text': 'not reviewed',
+export const audienceLabels: Record<Audience, string> = { insurer: 'Insurer', 'other-party': 'Other party' };
+export const audienceMeanings: Record<Audience, string> = {
+  insurer: 'Site by name, roles not names, reasoning and signed finding in full, loss but no cost of actions.',
+  'other-party': 'No site or organisation by name, no directions of the sun, no hypotheses, the opinion without causes and limits, no loss.',
 };
 
-type Treatment = 'shown' | 'reduced' | 'removed';
+export type Treatment = 'shown' | 'reduced' | 'removed';
 interface Policy {
   readonly class: WithheldClass | null;
   readonly insurer: Treatment;
@@ -40,260 +39,250 @@ export const fieldPolicies = {
   injury: { class: 'health', insurer: 'reduced', 'other-party': 'removed' },
   child: { class: 'child', insurer: 'removed', 'other-party': 'removed' },
   freeText: { class: 'free-text', insurer: 'reduced', 'other-party': 'reduced' },
-  photos: { class: 'personal', insurer: 'reduced', 'other-party': 'reduced' },
+  photos: { class: 'photo', insurer: 'reduced', 'other-party': 'reduced' },
   measurements: { class: null, insurer: 'shown', 'other-party': 'shown' },
-  reconstruction: { class: null, insurer: 'shown', 'other-party': 'shown' },
-  hypotheses: { class: null, insurer: 'shown', 'other-party': 'removed' },
+  reconstruction: { class: 'exact-place', insurer: 'shown', 'other-party': 'reduced' },
+  hypotheses: { class: 'free-text', insurer: 'shown', 'other-party': 'removed' },
   draftFinding: { class: 'legal', insurer: 'removed', 'other-party': 'removed' },
-  signedFinding: { class: null, insurer: 'shown', 'other-party': 'reduced' },
+  signedFinding: { class: 'free-text', insurer: 'shown', 'other-party': 'reduced' },
   privileged: { class: 'legal', insurer: 'removed', 'other-party': 'removed' },
   loss: { class: 'commercial', insurer: 'shown', 'other-party': 'removed' },
-  actions: { class: null, insurer: 'shown', 'other-party': 'reduced' },
+  actions: { class: 'free-text', insurer: 'shown', 'other-party': 'reduced' },
   actionCost: { class: 'commercial', insurer: 'removed', 'other-party': 'removed' },
   reporterNotes: { class: 'free-text', insurer: 'reduced', 'other-party': 'removed' },
 } as const satisfies Record<string, Policy>;
 export type PolicyField = keyof typeof fieldPolicies;
 
-/** Lines of free text that the preparer decides one by one; what is undecided is held back. */
+/** Lines of free text, and photos, that the preparer decides one by one; what is undecided is held back. */
 export type LineDecision = 'share' | 'hold-back';
+export type Decisions = Readonly<Record<string, LineDecision>>;
 
-/** Everything the redactor is given; it never leaves the server. */
-export interface CaseBeforeRedaction {
-  readonly released: Omit<ReleasedCase, 'title' | 'placeDetail' | 'account' | 'notes' | 'interimControl' | 'photos' | 'hypotheses' | 'finding' | 'actions' | 'injury' | 'siteName' | 'loss'>;
-  readonly siteName: string;
-  readonly siteAddress: string;
-  readonly hasPosition: boolean;
-  readonly privilegedNote: string | null;
-  readonly hasDraftFinding: boolean;
-  readonly loss: ReleasedCase['loss'];
-  readonly title: string;
-  readonly placeDetail: string;
-  readonly account: string;
-  readonly interimControl: string;
-  readonly notes: readonly { readonly id: string; readonly at: string; readonly authorId: string | null; readonly text: string }[];
-  readonly photos: readonly { readonly photoId: string; readonly label: number; readonly view: string | null; readonly caption: string; readonly altText: string; readonly maskCount: number; readonly releasable: 'undecided' | 'yes' | 'no'; readonly hadPlace: boolean }[];
-  readonly hypotheses: readonly { readonly id: string; readonly kind: ReleasedCase['hypotheses'][number]['kind']; readonly statement: string; readonly predicts: string; readonly evidenceFor: string; readonly evidenceAgainst: string; readonly tests: FourTests; readonly result: ReleasedCase['hypotheses'][number]['result'] }[];
-  readonly finding: { readonly version: number; readonly signedAt: string; readonly opinion: string; readonly certainty: NonNullable<ReleasedCase['finding']>['certainty']; readonly classification: NonNullable<ReleasedCase['finding']>['classification']; readonly causes: string; readonly limits: string; readonly frozenHash: string } | null;
-  readonly actions: readonly { readonly number: number; readonly title: string; readonly controlLevel: string; readonly dueOn: string; readonly state: string; readonly effect: string; readonly hasCost: boolean }[];
-  readonly people: readonly { readonly name: string | null; readonly email: string | null; readonly phone: string | null; readonly isChild: boolean; readonly guardianContact: string | null }[];
-  /** Staff of the case, whose names may stand in free text. */
-  readonly staffNames: readonly string[];
-  readonly injuries: readonly { readonly treatment: string }[];
-  readonly anyoneHurt: string;
+export type { CaseBeforeRedaction } from './case-before-redaction.ts';
+
+export interface LineToDecide {
+  readonly key: string;
+  readonly label: string;
+  readonly text: string;
 }
 
-const emailPattern = /[\p{L}\p{N}._%+-]+@[\p{L}\p{N}.-]+\.\p{L}{2,}/gu;
-const phonePattern = /(?<![\p{L}\p{N}])\+?\d[\d ()/-]{6,}\d(?![\p{L}\p{N}])/gu;
-const datePattern = /^\d{4}-\d{2}-\d{2}$/u;
-const coordinatePattern = /-?\d{1,3}\.\d{3,}\s*[°]?\s*[NSEW]?\s*[,; ]\s*-?\d{1,3}\.\d{3,}\s*[°]?\s*[NSEW]?|\d{1,3}°\s*\d{1,2}['′]\s*(?:\d{1,2}(?:\.\d+)?["″])?\s*[NSEW]/gu;
-const healthPattern = /\b(?:blister\w*|burn(?:t|ed)? (?:her|his|their|my) \w+|hospital\w*|ambulance|surgery|diagnos\w*|medication|pregnan\w*|asthma\w*|scar(?:s|red|ring)?|wound\w*)\b/giu;
+export const photoKey = (photoId: string): string => `photo:${photoId}`;
 
-/** Name parts worth searching for: whole names, and each part of three letters or more. */
-function namePatterns(names: readonly string[]): RegExp | null {
-  const parts = new Set<string>();
-  for (const name of names) {
-    const clean = name.trim();
-    if (clean.length < 2) continue;
-    parts.add(clean);
-    for (const part of clean.split(/\s+/u)) if (part.length >= 3) parts.add(part);
-  }
-  if (parts.size === 0) return null;
-  const escaped = [...parts].sort((a, b) => b.length - a.length).map((part) => part.replace(/[.*+?^${}()|[\]\\]/gu, '\\$&'));
-  return new RegExp(`(?<![\\p{L}\\p{N}])(?:${escaped.join('|')})(?:['’]s)?(?![\\p{L}\\p{N}])`, 'giu');
+const lines = (...texts: readonly string[]): string => texts.filter((text) => text.trim() !== '').join('\n');
+
+/** The free-text lines that this reader could get, in reading order, for the preparer to decide on. */
+export function linesToDecide(source: CaseBeforeRedaction, audience: Audience): readonly LineToDecide[] {
+  const open = (field: PolicyField) => fieldPolicies[field][audience] !== 'removed';
+  const finding = source.finding;
+  const brief = fieldPolicies.signedFinding[audience] === 'reduced';
+  const all: LineToDecide[] = [
+    { key: 'title', label: 'Title', text: source.title },
+    ...(open('placeDetail') ? [{ key: 'placeDetail', label: 'Place in the building', text: source.placeDetail }] : []),
+    { key: 'account', label: 'Account', text: source.account },
+    { key: 'interimControl', label: 'Interim control', text: source.interimControl },
+    ...(open('reporterNotes') ? source.notes.map((note, index) => ({ key: `note:${note.id}`, label: `Note ${index + 1}`, text: note.text })) : []),
+    ...(open('hypotheses')
+      ? source.hypotheses.map((one, index) => ({
+          key: `hypothesis:${one.id}`,
+          label: `Hypothesis ${index + 1}`,
+          text: lines(one.statement, one.predicts, one.evidenceFor, one.evidenceAgainst, ...Object.values(one.tests).map((test) => test.why)),
+        }))
+      : []),
+    ...(finding ? [{ key: 'finding', label: `Finding, version ${finding.version}`, text: brief ? finding.opinion : lines(finding.opinion, finding.causes, finding.limits) }] : []),
+    ...source.actions.map((action) => ({ key: `action:${action.number}`, label: `Action ${action.number}`, text: fieldPolicies.actions[audience] === 'reduced' ? action.title : lines(action.title, action.effect) })),
+    ...source.photos.filter((photo) => photo.releasable === 'yes').map((photo) => ({ key: `caption:${photo.photoId}`, label: `Words of photo ${photo.label}`, text: lines(photo.caption, photo.altText) })),
+  ];
+  return all.filter((line) => line.text.trim() !== '');
 }
 
-interface Hit {
-  readonly start: number;
-  readonly end: number;
-  readonly class: WithheldClass;
-}
-
-/** Takes names, contacts, coordinates and health words out of running text. */
-export function redactText(text: string, names: readonly string[], place: readonly string[] = []): RedactedText {
-  const hits: Hit[] = [];
-  const collect = (pattern: RegExp | null, withheld: WithheldClass, accept: (match: string) => boolean = () => true) => {
-    if (!pattern) return;
-    for (const match of text.matchAll(pattern)) {
-      if (accept(match[0].trim())) hits.push({ start: match.index, end: match.index + match[0].length, class: withheld });
-    }
+/** Everything that must not be read out of what leaves, whoever typed it where. */
+export function heldWords(source: CaseBeforeRedaction, audience: Audience): HeldWords {
+  const stated = (values: readonly (string | null)[]) => values.filter((value): value is string => value !== null && value.trim() !== '');
+  const guardians = stated(source.people.map((person) => person.guardianContact));
+  const hidesPlace = fieldPolicies.siteName[audience] === 'removed';
+  return {
+    names: [...new Set([...source.staff.map((person) => person.name), ...stated(source.people.map((person) => person.name)), ...guardians])],
+    emails: [...new Set(stated([...source.staff.map((person) => person.email), ...source.people.map((person) => person.email)]))],
+    phones: [...new Set([...stated(source.people.map((person) => person.phone)), ...guardians])],
+    coordinates: [source.site, ...(source.position ? [source.position] : []), ...source.photos.flatMap((photo) => (photo.exifPlace ? [photo.exifPlace] : []))].map(({ latitudeDeg, longitudeDeg }) => ({ latitudeDeg, longitudeDeg })),
+    addresses: stated([source.site.address]),
+    places: hidesPlace ? stated([source.site.name, source.site.code, source.organisationName]) : [],
   };
-  collect(coordinatePattern, 'exact-place');
-  collect(namePatterns(place.filter((part) => part.length >= 4)), 'exact-place', (match) => place.some((part) => part.toLowerCase() === match.toLowerCase()));
-  collect(emailPattern, 'personal');
-  collect(phonePattern, 'personal', (match) => !datePattern.test(match) && match.replace(/\D/gu, '').length >= 8);
-  collect(namePatterns(names), 'personal');
-  collect(healthPattern, 'health');
-  return cut(text, hits);
 }
 
-function cut(text: string, hits: readonly Hit[]): RedactedText {
-  const pieces: ({ text: string } | { withheld: WithheldClass })[] = [];
-  let at = 0;
-  for (const hit of [...hits].sort((a, b) => a.start - b.start || b.end - a.end)) {
-    if (hit.end <= at) continue;
-    if (hit.start > at) pieces.push({ text: text.slice(at, hit.start) });
-    // Overlapping hits become one block of the first class, so that the count is of blocks a reader sees.
-    pieces.push({ withheld: hit.class });
-    at = hit.end;
-  }
-  if (at < text.length) pieces.push({ text: text.slice(at) });
-  return pieces;
+/** A photo of the release: which original it is made from, and under which name it leaves. */
+export interface SharedPhoto {
+  readonly photoId: string;
+  readonly fileName: string;
 }
 
 export interface Redaction {
   readonly released: ReleasedCase;
   readonly withheld: WithheldCounts;
+  readonly photos: readonly SharedPhoto[];
 }
 
-/** Keys of the free-text lines of a case, in reading order, for the preparer to decide on. */
-export function linesToDecide(source: CaseBeforeRedaction): readonly { key: string; label: string; text: string }[] {
-  return [
-    { key: 'title', label: 'Title', text: source.title },
-    { key: 'placeDetail', label: 'Place in the building', text: source.placeDetail },
-    { key: 'account', label: 'Account', text: source.account },
-    { key: 'interimControl', label: 'Interim control', text: source.interimControl },
-    ...source.notes.map((note, index) => ({ key: `note:${note.id}`, label: `Note ${index + 1}`, text: note.text })),
-    ...source.hypotheses.flatMap((hypothesis, index) => [
-      { key: `hypothesis:${hypothesis.id}`, label: `Hypothesis ${index + 1}`, text: [hypothesis.statement, hypothesis.predicts, hypothesis.evidenceFor, hypothesis.evidenceAgainst].filter(Boolean).join('\n') },
-    ]),
-    ...(source.finding ? [{ key: 'finding', label: `Finding, version ${source.finding.version}`, text: [source.finding.opinion, source.finding.causes, source.finding.limits].filter(Boolean).join('\n') }] : []),
-    ...source.actions.map((action) => ({ key: `action:${action.number}`, label: `Action ${action.number}`, text: [action.title, action.effect].filter(Boolean).join('\n') })),
-  ].filter((line) => line.text.trim() !== '');
+/** One reader's view of one case under way: what the table says, and lines cut as decided. */
+interface Desk {
+  readonly source: CaseBeforeRedaction;
+  readonly searcher: Searcher;
+  readonly decisions: Decisions;
+  readonly treatment: (field: PolicyField) => Treatment;
+  readonly line: (key: string, text: string, field?: PolicyField) => RedactedText;
+}
+
+function deskFor(source: CaseBeforeRedaction, audience: Audience, decisions: Decisions): Desk {
+  const searcher = searcherFor(heldWords(source, audience));
+  const treatment = (field: PolicyField): Treatment => fieldPolicies[field][audience];
+  return {
+    source,
+    searcher,
+    decisions,
+    treatment,
+    line: (key, text, field = 'freeText') => {
+      if (text.trim() === '') return [];
+      const held = treatment(field) === 'removed' || decisions[key] !== 'share';
+      return held ? [{ withheld: 'free-text' }] : redactText(text, searcher);
+    },
+  };
 }
 
 /**
  * The case as `audience` may read it, and how many things were withheld, by class.
  *
- * @param decisions what the preparer decided for each line of `linesToDecide`; a line without a decision is held back.
+ * @param decisions what the preparer decided for each line of `linesToDecide` and each photo; whatever has no decision is
+ *   held back, and so is a photo that the photo sheet does not call releasable.
  */
-export function redactCase(source: CaseBeforeRedaction, audience: Audience, decisions: Readonly<Record<string, LineDecision>>): Redaction {
-  const counts: Record<WithheldClass, number> = { personal: 0, health: 0, child: 0, legal: 0, 'exact-place': 0, commercial: 0, 'free-text': 0 };
-  const names = [...source.staffNames, ...source.people.flatMap((person) => (person.name ? [person.name] : []))];
-  const hidesSite = fieldPolicies.siteName[audience] === 'removed';
-  const place = [source.siteAddress, ...(hidesSite ? [source.siteName] : [])].filter(Boolean);
+export function redactCase(source: CaseBeforeRedaction, audience: Audience, decisions: Decisions): Redaction {
+  const desk = deskFor(source, audience, decisions);
+  const shared = source.photos.filter((photo) => photo.releasable === 'yes' && decisions[photoKey(photo.photoId)] === 'share');
+  const photos = shared.map((photo) => ({ photoId: photo.photoId, fileName: `photo-${String(photo.label).padStart(2, '0')}.jpg` }));
+  // Parsing drops every key that the released shape does not name.
+  const released = releasedCaseSchema.parse({
+    ...plainPart(desk),
+    ...textPart(desk),
+    photos: shared.map((photo, index) => ({
+      fileName: photos[index]?.fileName,
+      view: photo.view,
+      caption: desk.line(`caption:${photo.photoId}`, photo.caption),
+      altText: desk.line(`caption:${photo.photoId}`, photo.altText),
+      maskCount: photo.masks.length,
+    })),
+  });
+  return { released, withheld: countWithheld(desk, released, shared.length), photos };
+}
 
-  const treatment = (field: PolicyField): Treatment => fieldPolicies[field][audience];
-  const withhold = (withheld: WithheldClass, howMany = 1) => {
-    counts[withheld] += howMany;
+/** Numbers and words from our own lists. */
+function plainPart({ source, searcher, treatment }: Desk) {
+  const run = source.reconstruction;
+  const place = treatment('reconstruction') === 'shown' ? 'shown' : 'reduced';
+  return {
+    caseNumber: source.caseNumber,
+    eventType: releasedEvent(source.eventType),
+    siteName: treatment('siteName') === 'removed' ? null : source.site.name,
+    siteUse: source.site.use,
+    zone: source.zone,
+    foundAt: correctedFound(source),
+    foundPrecision: source.foundPrecision,
+    foundClockErrorS: source.foundClockErrorS,
+    onsetEarliestAt: source.onsetEarliestAt,
+    onsetLatestAt: source.onsetLatestAt,
+    onsetBasis: source.onsetBasis,
+    reportedAt: source.reportedAt,
+    injury: injuryWords(source, treatment('injury')),
+    extent: source.extent,
+    weatherSeen: source.weatherSeen,
+    loss: treatment('loss') === 'shown' ? source.loss : null,
+    measurements: treatment('measurements') === 'removed' ? [] : releasedMeasurements(source.scene),
+    reconstruction: run && treatment('reconstruction') !== 'removed'
+      ? { number: run.number, engineVersion: run.engineVersion, inputHash: place === 'shown' ? run.inputHash : null, resultHash: run.resultHash, result: releasedResult(run.result, searcher, place) }
+      : null,
+    returnDays: source.returnDays,
+    chronology: chronologyOf(source),
   };
-  const line = (key: string, text: string, field: PolicyField = 'freeText'): RedactedText => {
-    if (text.trim() === '') return [];
-    if (treatment(field) === 'removed' || decisions[key] !== 'share') {
-      withhold('free-text');
-      return [{ withheld: 'free-text' }];
-    }
-    const redacted = redactText(text, names, place);
-    for (const piece of redacted) if ('withheld' in piece) withhold(piece.withheld);
-    return redacted;
-  };
+}
 
-  if (source.hasPosition) withhold('exact-place');
-  if (source.siteAddress) withhold('exact-place');
-  if (hidesSite) withhold('exact-place');
-  for (const person of source.people) {
-    if (person.isChild) withhold('child');
-    for (const contact of [person.name, person.email, person.phone]) if (contact) withhold('personal');
-    if (person.guardianContact) withhold('child');
-  }
-  if (source.privilegedNote) withhold('legal');
-  if (source.hasDraftFinding) withhold('legal');
-  if (source.injuries.length > 0) withhold('health', source.injuries.length);
-  if (source.loss && treatment('loss') === 'removed') withhold('commercial');
-
-  const sharedPhotos = source.photos.filter((photo) => photo.releasable === 'yes');
-  withhold('personal', source.photos.length - sharedPhotos.length);
-  for (const photo of sharedPhotos) {
-    withhold('personal', photo.maskCount);
-    if (photo.hadPlace) withhold('exact-place');
-  }
-  withhold('commercial', source.actions.filter((action) => action.hasCost).length);
-
-  const released: ReleasedCase = {
-    ...source.released,
+/** What people typed. */
+function textPart(desk: Desk) {
+  const { source, treatment, line } = desk;
+  const authors = authorNames(source);
+  const { finding } = source;
+  const inBrief = treatment('signedFinding') === 'reduced';
+  const brief = (text: string): RedactedText => (inBrief && text.trim() !== '' ? [{ withheld: 'free-text' }] : line('finding', text, 'signedFinding'));
+  return {
     title: line('title', source.title),
-    siteName: hidesSite ? null : source.siteName,
     placeDetail: line('placeDetail', source.placeDetail, 'placeDetail'),
     account: line('account', source.account),
-    notes: source.notes.map((note, index) => ({ at: note.at, by: `Person ${index + 1}`, text: line(`note:${note.id}`, note.text, 'reporterNotes') })),
-    injury: injuryWords(source, treatment('injury')),
     interimControl: line('interimControl', source.interimControl),
-    loss: treatment('loss') === 'shown' ? source.loss : null,
-    photos: sharedPhotos.map((photo) => ({
-      photoId: photo.photoId,
-      fileName: `photo-${String(photo.label).padStart(2, '0')}.jpg`,
-      view: photo.view,
-      caption: redactText(photo.caption, names, place),
-      altText: redactText(photo.altText, names, place).map((piece) => ('text' in piece ? piece.text : '(withheld)')).join(''),
-      maskCount: photo.maskCount,
-    })),
-    hypotheses:
-      treatment('hypotheses') === 'removed'
-        ? []
-        : source.hypotheses.map((hypothesis) => {
-            const shared = decisions[`hypothesis:${hypothesis.id}`] === 'share';
-            if (!shared) withhold('free-text');
-            const field = (text: string): RedactedText => {
-              if (!shared) return text.trim() ? [{ withheld: 'free-text' }] : [];
-              const redacted = redactText(text, names, place);
-              for (const piece of redacted) if ('withheld' in piece) withhold(piece.withheld);
-              return redacted;
-            };
-            return {
-              kind: hypothesis.kind,
-              result: hypothesis.result,
-              tests: redactTests(hypothesis.tests, shared, names, place),
-              statement: field(hypothesis.statement),
-              predicts: field(hypothesis.predicts),
-              evidenceFor: field(hypothesis.evidenceFor),
-              evidenceAgainst: field(hypothesis.evidenceAgainst),
-            };
-          }),
-    finding: source.finding
-      ? {
-          version: source.finding.version,
-          signedAt: source.finding.signedAt,
-          certainty: source.finding.certainty,
-          classification: source.finding.classification,
-          frozenHash: source.finding.frozenHash,
-          opinion: line('finding', source.finding.opinion, 'signedFinding'),
-          causes: line('finding', source.finding.causes, 'signedFinding'),
-          limits: line('finding', source.finding.limits, 'signedFinding'),
-        }
-      : null,
-    actions: source.actions.map((action) => ({
-      number: action.number,
-      title: line(`action:${action.number}`, action.title),
-      controlLevel: action.controlLevel,
-      dueOn: action.dueOn,
-      state: action.state,
-      effect: treatment('actions') === 'reduced' ? [] : line(`action:${action.number}`, action.effect),
+    notes: source.notes.map((note, index) => ({ at: note.at, by: authors[index], text: line(`note:${note.id}`, note.text, 'reporterNotes') })),
+    hypotheses: treatment('hypotheses') === 'removed' ? [] : source.hypotheses.map((one) => releasedHypothesis(desk, one)),
+    finding: finding && {
+      version: finding.version,
+      signedAt: finding.signedAt,
+      certainty: finding.certainty,
+      classification: finding.classification,
+      frozenHash: finding.frozenHash,
+      opinion: line('finding', finding.opinion, 'signedFinding'),
+      causes: brief(finding.causes),
+      limits: brief(finding.limits),
+    },
+    actions: source.actions.map(({ number, title, controlLevel, interim, dueOn, state, effect }) => ({
+      number,
+      controlLevel,
+      interim,
+      dueOn,
+      state,
+      title: line(`action:${number}`, title),
+      effect: treatment('actions') === 'shown' ? line(`action:${number}`, effect) : [],
     })),
   };
-  return { released, withheld: counts };
 }
 
-/** Reasons of tests are free text too; results are not. */
-function redactTests(tests: FourTests, shared: boolean, names: readonly string[], place: readonly string[]): FourTests {
-  const one = (test: FourTests['geometry']) => ({
-    result: test.result,
-    why: shared ? redactText(test.why, names, place).map((piece) => ('text' in piece ? piece.text : '(withheld)')).join('') : '',
-  });
-  return { geometry: one(tests.geometry), weather: one(tests.weather), energy: one(tests.energy), mark: one(tests.mark) };
+function releasedHypothesis({ line }: Desk, one: CaseBeforeRedaction['hypotheses'][number]) {
+  const cut = (text: string) => line(`hypothesis:${one.id}`, text, 'hypotheses');
+  // Results of tests come from a list of ours, the reasons are typed.
+  const test = ({ result, why }: FourTests['geometry']) => ({ result, why: cut(why) });
+  return {
+    kind: one.kind,
+    result: one.result,
+    tests: { geometry: test(one.tests.geometry), weather: test(one.tests.weather), energy: test(one.tests.energy), mark: test(one.tests.mark) },
+    statement: cut(one.statement),
+    predicts: cut(one.predicts),
+    evidenceFor: cut(one.evidenceFor),
+    evidenceAgainst: cut(one.evidenceAgainst),
+  };
 }
 
-const treatmentWords: Record<string, string> = {
-  none: 'no treatment',
-  'first-aid': 'first aid',
-  'medical-treatment': 'medical treatment',
-  'emergency-department': 'emergency department',
-  'in-patient': 'in-patient',
-  unknown: 'treatment not stated',
-};
+/** Blocks that the reader sees, and whole fields that are not there at all. */
+function countWithheld({ source, treatment }: Desk, released: ReleasedCase, sharedPhotos: number): WithheldCounts {
+  const counts: Record<WithheldClass, number> = { personal: 0, health: 0, child: 0, legal: 0, 'exact-place': 0, commercial: 0, 'free-text': 0, photo: 0 };
+  countBlocks(released, counts);
+  const add = (withheld: WithheldClass, howMany: number) => {
+    counts[withheld] += howMany;
+  };
+  const shownPhotos = source.photos.filter((photo) => released.photos.some(({ fileName }) => fileName === `photo-${String(photo.label).padStart(2, '0')}.jpg`));
+  const stated = (values: readonly (string | null)[]) => values.filter((value) => value !== null && value.trim() !== '').length;
+  for (const person of source.people) {
+    add('personal', stated([person.name, person.email, person.phone]));
+    add('child', (person.isChild ? 1 : 0) + stated([person.guardianContact]));
+  }
+  add('exact-place', (source.position ? 1 : 0) + stated([source.site.address]) + (treatment('siteName') === 'removed' ? 1 : 0));
+  add('exact-place', source.reconstruction && treatment('reconstruction') === 'reduced' ? 1 : 0);
+  add('exact-place', shownPhotos.filter((photo) => photo.exifPlace !== null).length);
+  for (const mask of shownPhotos.flatMap((photo) => photo.masks)) add(mask.class, 1);
+  add('photo', source.photos.length - sharedPhotos);
+  add('health', treatment('injury') === 'removed' ? 1 : source.injuries.length);
+  add('legal', stated([source.privilegedNote, source.legalHoldReason]) + (source.hasDraftFinding ? 1 : 0));
+  add('commercial', (source.loss && treatment('loss') !== 'shown' ? 1 : 0) + source.actions.filter((action) => action.hasCost).length);
+  add('free-text', treatment('hypotheses') === 'removed' ? source.hypotheses.length : 0);
+  return counts;
+}
 
-/** An insurer learns that someone was hurt and the level of treatment, never the part of the body or the person. */
-function injuryWords(source: CaseBeforeRedaction, how: Treatment): string {
-  if (source.injuries.length === 0) return source.anyoneHurt === 'yes' ? 'yes' : source.anyoneHurt === 'no' ? 'none' : 'not known';
-  if (how === 'removed') return 'withheld';
-  const words = [...new Set(source.injuries.map((injury) => treatmentWords[injury.treatment] ?? 'treatment not stated'))];
-  return `yes, ${words.join(', ')}`;
+function countBlocks(value: unknown, counts: Record<WithheldClass, number>): void {
+  if (typeof value !== 'object' || value === null) return;
+  if ('withheld' in value) {
+    const known = withheldClasses.find((one) => one === value.withheld);
+    if (known) counts[known] += 1;
+    return;
+  }
+  for (const part of Object.values(value)) countBlocks(part, counts);
 }

@@ -1,53 +1,108 @@
-import type { Certainty, Classification } from './finding.ts';
-import type { WithheldClass } from './redaction.ts';
-import type { HypothesisKind, HypothesisResult, FourTests } from './hypothesis.ts';
-import type { ReconstructionResult } from '#app/physics/model.ts';
+import { z } from 'zod';
+import { actionStates, controlLevels } from './corrective-action.ts';
+import { certainties, classifications } from './finding.ts';
+import { hypothesisKinds, hypothesisResults, testResults } from './hypothesis.ts';
+import { extents, foundPrecisions, onsetBases, photoViews, siteUses, weatherSeen } from './incident.ts';
+import { releasedResultSchema } from './released-result.ts';
 
-/** Running text in which some words were taken out. A withheld piece says its class and nothing of its length. */
-export type RedactedText = readonly ({ readonly text: string } | { readonly withheld: WithheldClass })[];
-
+export const withheldClasses = ['personal', 'health', 'child', 'legal', 'exact-place', 'commercial', 'free-text', 'photo'] as const;
+export type WithheldClass = (typeof withheldClasses)[number];
+export const withheldLabels: Record<WithheldClass, string> = {
+  personal: 'personal',
+  health: 'health',
+  child: 'child',
+  legal: 'legal',
+  'exact-place': 'exact place',
+  commercial: 'commercial',
+  'free-text': 'text held back',
+  photo: 'photos held back',
+};
 export type WithheldCounts = Readonly<Record<WithheldClass, number>>;
 
+const redactedText = z.array(z.union([z.object({ text: z.string() }), z.object({ withheld: z.enum(withheldClasses) })]));
+/** Running text in which some words were taken out. A withheld piece says its class and nothing of its length. */
+export type RedactedText = z.infer<typeof redactedText>;
+
+const instant = z.string();
+const test = z.object({ result: z.enum(testResults), why: redactedText });
+
+/** An injury is one kind for a reader outside: which part of the body it was is a health matter. */
+export const releasedEvents = ['fire', 'heat-damage', 'injury', 'near-miss', 'undesired-circumstance', 'not-stated'] as const;
+export const releasedEventLabels: Record<(typeof releasedEvents)[number], string> = {
+  fire: 'Fire',
+  'heat-damage': 'Heat damage: scorch, melt or distortion',
+  injury: 'Injury',
+  'near-miss': 'Near miss',
+  'undesired-circumstance': 'Undesired circumstance',
+  'not-stated': 'Not stated',
+};
+
 /**
- * A case as it leaves the house. This shape, and only this shape, is stored in a release: a field that is not here
- * cannot leak. Built by `redactCase`.
+ * A case as it leaves the house. This shape, and only this shape, is stored in a release: whatever is not named here is
+ * dropped when the release is made. Built by `redactCase`.
  */
-export interface ReleasedCase {
-  readonly caseNumber: number;
-  readonly title: RedactedText;
-  readonly eventType: string;
-  readonly siteName: string | null;
-  readonly siteUse: string;
-  readonly placeDetail: RedactedText;
-  readonly zone: string;
-  readonly foundAt: string | null;
-  readonly foundPrecision: string;
-  readonly onsetEarliestAt: string | null;
-  readonly onsetLatestAt: string | null;
-  readonly onsetBasis: string | null;
-  readonly reportedAt: string;
-  readonly account: RedactedText;
-  readonly notes: readonly { readonly at: string; readonly by: string; readonly text: RedactedText }[];
-  readonly injury: string;
-  readonly extent: string | null;
-  readonly weatherSeen: string | null;
-  readonly interimControl: RedactedText;
-  readonly loss: { readonly amount: number; readonly currency: string } | null;
-  readonly measurements: readonly { readonly label: string; readonly value: string }[];
-  readonly photos: readonly { readonly photoId: string; readonly fileName: string; readonly view: string | null; readonly caption: RedactedText; readonly altText: string; readonly maskCount: number }[];
-  readonly reconstruction: { readonly number: number; readonly engineVersion: string; readonly inputHash: string; readonly resultHash: string; readonly result: ReconstructionResult } | null;
-  readonly hypotheses: readonly { readonly kind: HypothesisKind; readonly statement: RedactedText; readonly predicts: RedactedText; readonly evidenceFor: RedactedText; readonly evidenceAgainst: RedactedText; readonly tests: FourTests; readonly result: HypothesisResult }[];
-  readonly finding: {
-    readonly version: number;
-    readonly signedAt: string;
-    readonly opinion: RedactedText;
-    readonly certainty: Certainty;
-    readonly classification: Classification;
-    readonly causes: RedactedText;
-    readonly limits: RedactedText;
-    readonly frozenHash: string;
-  } | null;
-  readonly actions: readonly { readonly number: number; readonly title: RedactedText; readonly controlLevel: string; readonly dueOn: string; readonly state: string; readonly effect: RedactedText }[];
-  readonly returnDays: readonly { readonly on: string; readonly bestAt: string; readonly minutes: number }[];
-  readonly chronology: readonly { readonly at: string; readonly what: string }[];
-}
+export const releasedCaseSchema = z.object({
+  caseNumber: z.number().int(),
+  title: redactedText,
+  eventType: z.enum(releasedEvents),
+  siteName: z.string().nullable(),
+  siteUse: z.enum(siteUses),
+  placeDetail: redactedText,
+  zone: z.string(),
+  /** Corrected for the error of the clock that it was read from. */
+  foundAt: instant.nullable(),
+  foundPrecision: z.enum(foundPrecisions),
+  foundClockErrorS: z.number(),
+  onsetEarliestAt: instant.nullable(),
+  onsetLatestAt: instant.nullable(),
+  onsetBasis: z.enum(onsetBases).nullable(),
+  reportedAt: instant,
+  account: redactedText,
+  notes: z.array(z.object({ at: instant, by: z.string(), text: redactedText })),
+  injury: z.string(),
+  extent: z.enum(extents).nullable(),
+  weatherSeen: z.enum(weatherSeen).nullable(),
+  interimControl: redactedText,
+  loss: z.object({ amount: z.number(), currency: z.string() }).nullable(),
+  measurements: z.array(z.object({ group: z.string(), label: z.string(), value: z.string(), plusMinus: z.string(), unit: z.string(), method: z.string() })),
+  photos: z.array(z.object({ fileName: z.string(), view: z.enum(photoViews).nullable(), caption: redactedText, altText: redactedText, maskCount: z.number().int() })),
+  reconstruction: z
+    .object({
+      number: z.number().int(),
+      engineVersion: z.string(),
+      /** Null where the reader may not know the place, which the hash is made from with everything else. */
+      inputHash: z.string().nullable(),
+      resultHash: z.string(),
+      result: releasedResultSchema,
+    })
+    .nullable(),
+  hypotheses: z.array(
+    z.object({
+      kind: z.enum(hypothesisKinds),
+      statement: redactedText,
+      predicts: redactedText,
+      evidenceFor: redactedText,
+      evidenceAgainst: redactedText,
+      tests: z.object({ geometry: test, weather: test, energy: test, mark: test }),
+      result: z.enum(hypothesisResults),
+    }),
+  ),
+  finding: z
+    .object({
+      version: z.number().int(),
+      signedAt: instant,
+      opinion: redactedText,
+      certainty: z.enum(certainties),
+      classification: z.enum(classifications),
+      causes: redactedText,
+      limits: redactedText,
+      frozenHash: z.string(),
+    })
+    .nullable(),
+  actions: z.array(
+    z.object({ number: z.number().int(), title: redactedText, controlLevel: z.enum(controlLevels), interim: z.boolean(), dueOn: z.string(), state: z.enum(actionStates), effect: redactedText }),
+  ),
+  returnDays: z.array(z.object({ on: z.string(), bestAt: instant, minutes: z.number() })),
+  chronology: z.array(z.object({ at: instant, what: z.string() })),
+});
+export type ReleasedCase = z.infer<typeof releasedCaseSchema>;

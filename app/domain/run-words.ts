@@ -1,4 +1,4 @@
-import type { Check, Grade, MinuteReason, MinuteVerdict, SkylineInput, TargetOutcome, TestName } from '#app/physics/model.ts';
+import type { Check, Grade, MinuteReason, MinuteVerdict, SkylineInput, TargetOutcome } from '#app/physics/model.ts';
 import type { OpticKind, RefractiveMaterialName } from '#app/physics/optics/optic.ts';
 
 /** Words of the screen for what the engine answers with ids. The engine's own sentences are shown as they are. */
@@ -18,8 +18,6 @@ export const minuteReasonWords: Record<MinuteReason, string> = {
 };
 
 export const minuteVerdictWords: Record<MinuteVerdict, string> = { sunlit: 'sunlit', 'not-sunlit': 'not sunlit', 'cannot-tell': "can't tell" };
-
-export const testLabels: Record<TestName, string> = { geometry: 'Geometry', weather: 'Weather', energy: 'Energy', mark: 'Mark' };
 
 export const outcomeLabels: Record<TargetOutcome['id'], string> = {
   softening: 'Softens',

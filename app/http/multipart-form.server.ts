@@ -27,7 +27,8 @@ export async function readForm(request: Request, onFile: (file: UploadedFile) =>
   const limits = { maxFiles: filesPerRequest, maxParts: partsPerRequest, maxFileSize: totalBytes, maxTotalSize: totalBytes };
   try {
     return await parseFormData(request, limits, async (upload) => {
-      if (upload.size === 0 && upload.name === '') return null;
+      // A file field left empty: browsers send it with an empty name, other clients with none, for which the parser has a word.
+      if (upload.size === 0 && ['', 'file-upload'].includes(upload.name)) return null;
       await onFile({ fieldName: upload.fieldName, name: upload.name, bytes: await upload.bytes() });
       return null;
     });

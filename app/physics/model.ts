@@ -38,6 +38,8 @@ export interface SkyInput {
   readonly aod500?: number;
   readonly aod380?: number;
   readonly solarConstantWm2?: number;
+  /** Share of the direct irradiance that comes from the aureole round the disc; left out: 0. 0…0.5 */
+  readonly circumsolarRatio?: number;
   /** Measured or archived direct normal irradiance, each value the mean over [startUtc, endUtc). */
   readonly dniSeries?: {
     readonly basis: 'measured' | 'derived' | 'hourly-archive';

@@ -4,7 +4,7 @@ import { listActionHistory, listActions, listProofs, listReturnDays } from './co
 import type { ActionRecord, ReturnDay } from './corrective-actions.server.ts';
 import { listColleagues } from './recipients.server.ts';
 import { defaultDueOn } from '#app/domain/action-form.ts';
-import { actionsHeading } from '#app/domain/action-list.ts';
+import { actionGroups, actionsHeading, groupOf } from '#app/domain/action-list.ts';
 import { actionLine, actionRights, actionStory, inOrder, returnSpans } from '#app/domain/action-view.ts';
 import type { ActionLine, ActionRights } from '#app/domain/action-view.ts';
 import { effectivenessCheckOn } from '#app/domain/corrective-action.ts';
@@ -53,7 +53,7 @@ export async function getCaseActions(db: DbOrTx, { actor, caseNumber, now }: { r
     returns: returnSpans(returns.map((day) => day.onDay)),
     upcoming: returns.filter((day) => day.bestAt > now).slice(0, 4).map((day) => `${formatDayClock(day.bestAt, row.zone)}, ${day.minutes} min`),
     interimControl: row.interimControl ? { words: row.interimControl, ends: row.interimControlEnds } : null,
-    cards: inOrder(cards.map((one) => one.line)).flatMap((line) => cards.filter((one) => one.line.id === line.id)),
+    cards: actionGroups.flatMap((group) => inOrder(cards.map((one) => one.line).filter((line) => groupOf(line) === group)).flatMap((line) => cards.filter((one) => one.line.id === line.id))),
     mayAdd,
     addClosed: mayAdd ? null : whoCan('action:write'),
     people: mayAdd ? await listColleagues(db, actor.organisationId) : [],

@@ -4,7 +4,7 @@ import { correctiveActions, involvements, logEntries, photos, releases, users } 
 import { caseFactList, whatIsLacking, windowWarnings } from '#app/domain/case-account.ts';
 import { wholeCard } from '#app/domain/case-card.ts';
 import { asksReason } from '#app/domain/case-move.ts';
-import type { MoveFacts } from '#app/domain/case-state.ts';
+import type { Move, MoveFacts } from '#app/domain/case-state.ts';
 import { movesFrom } from '#app/domain/case-state.ts';
 import type { CaseAccountView, CaseMovesView, InjuryView, LackView, LogLineView, MovePlace, PersonView, PhotoStripView } from '#app/domain/case-view.ts';
 import { photoViewLabels } from '#app/domain/incident.ts';
@@ -160,9 +160,13 @@ const places: Readonly<Record<string, MovePlace>> = { triage: 'triage', reported
 /** The finding is sent from its own page, where it is written; duplicates are undone where they were marked. */
 const placeOfMove = (moveId: string, from: string): MovePlace => (moveId === 'send-findings' ? 'findings' : (places[from] ?? 'here'));
 
+/** The way onward stands first, ways back and aside after it. */
+const weight = (move: Move) => (onward.includes(move.id) ? 0 : 1);
+const onward: readonly string[] = ['open-triage', 'accept', 'answer', 'send-findings', 'sign', 'close'];
+
 /** Moves from the present state: those open to this person with what they need, and the others with who can. */
 export function movesOf(actor: Actor, subject: CaseSubject, facts: MoveFacts): CaseMovesView {
-  const all = movesFrom(subject.state);
+  const all = [...movesFrom(subject.state)].sort((a, b) => weight(a) - weight(b));
   const mine = all.filter((move) => canOnCase(actor, move.action, subject));
   return {
     open: mine.map((move) => ({ id: move.id, label: move.label, ready: isReady(move, facts), needs: moveChecklist(move, facts), place: placeOfMove(move.id, move.from), asksReason: asksReason(move.id) })),

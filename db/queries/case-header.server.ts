@@ -126,7 +126,7 @@ function tabsFor(facts: HeaderFacts, actor: Actor, subject: CaseSubject): CaseTa
     shown ? [{ key, label, path: key === 'account' ? '' : `/${key}`, count: count === null ? null : String(count) }] : [];
   return [
     ...tab('account', 'Account', true),
-    ...tab('triage', 'First look', may('case:triage')),
+    ...tab('triage', may('case:triage') ? 'First look' : 'Facts and risk', may('case:triage') || may('case:edit-facts') || may('case:assign')),
     ...tab('measurements', 'Measurements', may('reconstruction:read')),
     ...tab('photos', 'Photos', true, facts.photoCount),
     ...tab('reconstructions', 'Reconstructions', may('reconstruction:read'), facts.runCount),

@@ -81,7 +81,7 @@ export function listActions(db: DbOrTx, params: { readonly actor: Actor; readonl
 
 /** Every action somebody may have to be reminded of, whatever the organisation. For the timer only. */
 export function listActionsToRemind(db: DbOrTx): Promise<ActionRecord[]> {
-  const states: ActionState[] = ['open', 'in-progress', 'done', 'verified'];
+  const states: ActionState[] = ['open', 'in-progress', 'done', 'verified', 'not-effective'];
   return selectActions(db).where(inArray(correctiveActions.state, states)).orderBy(asc(correctiveActions.dueOn));
 }
 

@@ -86,7 +86,7 @@ export function listReconstructions(db: DbOrTx, params: { actor: Actor; caseNumb
       ...lineColumns,
       totals: sql<ReconstructionResult['totals'] | null>`${reconstructions.result} -> 'totals'`,
       grade: sql<ReconstructionResult['grade'] | null>`${reconstructions.result} -> 'grade'`,
-      window: sql<ReconstructionResult['window'] | null>`${reconstructions.result} -> 'window'`,
+      window: sql<{ readonly startUtc: string; readonly endUtc: string }>`coalesce(${reconstructions.result} -> 'window', ${reconstructions.input} -> 'window')`,
     })
     .from(reconstructions)
     .innerJoin(cases, eq(cases.id, reconstructions.caseId))
@@ -99,7 +99,7 @@ export type ReconstructionLine = Awaited<ReturnType<typeof listReconstructions>>
 /** One run, whole; null when it is not there or the case is not the actor's to see. */
 export async function getReconstruction(db: DbOrTx, params: { actor: Actor; caseNumber: number; number: number }) {
   const [row] = await db
-    .select({ ...lineColumns, input: reconstructions.input, result: reconstructions.result, resultHash: reconstructions.resultHash, zoneRules: reconstructions.zoneRules, zone: cases.zone, caseId: cases.id })
+    .select({ ...lineColumns, input: reconstructions.input, result: reconstructions.result, resultHash: reconstructions.resultHash, zoneRules: reconstructions.zoneRules, zone: cases.zone, caseId: cases.id, runCount: sql<number>`(select count(*)::int from reconstructions other where other.case_id = ${cases.id})` })
     .from(reconstructions)
     .innerJoin(cases, eq(cases.id, reconstructions.caseId))
     .leftJoin(users, eq(users.id, reconstructions.requestedById))

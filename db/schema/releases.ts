@@ -1,6 +1,7 @@
 import { sql } from 'drizzle-orm';
 import { check, index, integer, jsonb, pgTable, text, uniqueIndex, uuid } from 'drizzle-orm/pg-core';
 import { audiences } from '#app/domain/redaction.ts';
+import type { LineDecision } from '#app/domain/redaction.ts';
 import type { ReleasedCase, WithheldCounts } from '#app/domain/released-case.ts';
 import { createdAt, id, instant } from './_columns.ts';
 import { cases } from './cases.ts';
@@ -31,10 +32,14 @@ export const releases = pgTable(
     withheld: jsonb().$type<WithheldCounts>().notNull(),
     files: jsonb().$type<readonly ReleaseFile[]>().notNull().default([]),
     releasedHash: text().notNull(),
+    /** What the preparer decided for each line and photo, by key; none of the text. */
+    decisions: jsonb().$type<Readonly<Record<string, LineDecision>>>().notNull().default({}),
     preparedById: uuid().notNull().references(() => users.id, { onDelete: 'restrict' }),
     approvedById: uuid().references(() => users.id, { onDelete: 'restrict' }),
     approvedAt: instant(),
     expiresAt: instant().notNull(),
+    withdrawnAt: instant(),
+    withdrawnReason: text(),
     createdAt: createdAt(),
   },
   (table) => [
@@ -44,6 +49,7 @@ export const releases = pgTable(
     index('releases_approved_by_id_idx').on(table.approvedById),
     check('releases_second_person', sql`${table.approvedById} is null or ${table.approvedById} <> ${table.preparedById}`),
     check('releases_released_approved', sql`${table.state} <> 'released' or ${table.approvedAt} is not null`),
+    check('releases_withdrawn_reason', sql`(${table.state} = 'withdrawn') = (${table.withdrawnReason} is not null and ${table.withdrawnAt} is not null)`),
   ],
 );
 

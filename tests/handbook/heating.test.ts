@@ -3,7 +3,10 @@ import { z } from 'zod';
 import { discRiseK, steadySurfaceK, thickRiseK } from '#app/physics/heating/heat-balance.ts';
 import { ignitionTime, thickIgnitionTimeS } from '#app/physics/heating/ignition.ts';
 import { burnFluxKwm2, burnTime } from '#app/physics/heating/skin-burn.ts';
+import { heatingOf } from '#app/physics/heating/outcomes.ts';
 import { targetMaterials } from '#app/physics/heating/target-materials.data.ts';
+import { focusModelOf } from '#app/physics/optics/closed-form/focus-model.ts';
+import { fromAzimuthElevation } from '#app/physics/vector.ts';
 import materialRows from '#fixtures/reference/materials.json';
 import { checkRow, numbers, rowIds, worstAbsolute, worstRelative } from './check-row.ts';
 
@@ -63,6 +66,28 @@ describe('ignition', () => {
       }
     }
     expect(compared).toBeGreaterThan(40);
+  });
+});
+
+describe('a reported case', () => {
+  const row = checkRow('case-01', z.object({ bowl_diameter_in: z.number(), height_above_deck_in: z.number(), air_F: z.number() }), z.object({ cedar_smokes_after_s: z.number() }));
+  test(`${row.name}: wood under such a bowl chars no later than twice the reported time, in a mean sky and with fresh wood`, () => {
+    const { bowl_diameter_in, height_above_deck_in, air_F } = row.inputs;
+    const radiusM = (bowl_diameter_in * 0.0254) / 2;
+    // Fill level, sky and sun's height are not reported: two thirds of a radius, 700–900 W/m² and 61° are taken.
+    const beam = focusModelOf({ kind: 'bowl', radiusM, liquidDepthM: 0.7 * radiusM, material: { name: 'water' } }).beamFor(fromAzimuthElevation(180, 61), 0.00465);
+    const timber = targetMaterials.get('timber');
+    expect(beam).not.toBeNull();
+    expect(timber).toBeDefined();
+    if (beam === null || timber === undefined) return;
+    const downwards = -beam.direction[2];
+    const suns = downwards * beam.concentration((radiusM + height_above_deck_in * 0.0254) / downwards, 0, 0.005);
+    const { outcomes } = heatingOf('timber', timber, { materialId: 'timber' }, {
+      fluxKwm2: { low: 0.7 * suns, mid: 0.8 * suns, high: 0.9 * suns }, dwellS: { low: 60, mid: 60, high: 60 }, airC: (air_F - 32) / 1.8, spotRadiusM: 0.0025,
+    });
+    const scorch = outcomes.find((outcome) => outcome.id === 'scorch');
+    expect(scorch?.answer).toBe('reached');
+    expect(scorch?.timeS?.high ?? Number.POSITIVE_INFINITY).toBeLessThan(2 * row.expected.cedar_smokes_after_s);
   });
 });
 

@@ -1,38 +1,33 @@
-import rows from '#fixtures/reference/check-values.json';
+import { z } from 'zod';
+import { checkRow } from './check-row.ts';
 
-interface CheckRow {
-  readonly id: string;
-  readonly expected: Record<string, unknown>;
-  readonly tolerance: string;
-  readonly source: string;
-}
-
-const table: readonly CheckRow[] = rows;
+const anything = z.record(z.string(), z.unknown());
 
 /** Row of the reference collection with its numbers and tolerances, for one test. */
 export class Check {
-  readonly #row: CheckRow;
+  readonly #id: string;
+  readonly #expected: Record<string, unknown>;
+  readonly #tolerance: string;
+  /** Test name: row and source. */
+  readonly name: string;
 
   constructor(id: string) {
-    const found = table.find((r) => r.id === id);
-    if (!found) throw new Error(`the reference collection has no row ${id}`);
-    this.#row = found;
-  }
-
-  /** Test name: row and source. */
-  get name(): string {
-    return `${this.#row.id}: ${this.#row.source}`;
+    const row = checkRow(id, anything, anything);
+    this.#id = id;
+    this.#expected = row.expected;
+    this.#tolerance = row.tolerance;
+    this.name = row.name;
   }
 
   number(key: string): number {
-    const value = this.#row.expected[key];
-    if (typeof value !== 'number') throw new Error(`${this.#row.id} has no number ${key}`);
+    const value = this.#expected[key];
+    if (typeof value !== 'number') throw new Error(`${this.#id} has no number ${key}`);
     return value;
   }
 
   numbers(key: string): number[] {
-    const value = this.#row.expected[key];
-    if (!Array.isArray(value)) throw new Error(`${this.#row.id} has no list ${key}`);
+    const value = this.#expected[key];
+    if (!Array.isArray(value)) throw new Error(`${this.#id} has no list ${key}`);
     return value.map((v) => Number(v));
   }
 
@@ -41,12 +36,12 @@ export class Check {
    * Lengths are returned in millimetres, as the rows give them.
    */
   tolerance(expected: number, label = ''): number {
-    const part = this.#row.tolerance
+    const part = this.#tolerance
       .split(';')
       .map((p) => p.trim())
       .find((p) => (label === '' ? /^[\d.]/.test(p) : p.startsWith(`${label} `)));
     const match = /([\d.]+(?:e-?\d+)?) ?(%|mm|deg)?/.exec((part ?? '').slice(label.length));
-    if (!match) throw new Error(`${this.#row.id} states no tolerance for "${label}"`);
+    if (!match) throw new Error(`${this.#id} states no tolerance for "${label}"`);
     const size = Number(match[1]);
     return match[2] === '%' ? (Math.abs(expected) * size) / 100 : size;
   }

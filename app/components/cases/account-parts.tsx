@@ -11,7 +11,7 @@ import type { RefusedForm } from './form-fields.ts';
 import { Refusal } from './refusal.tsx';
 
 /** The reporter's words, in serif as written. */
-export function AccountText({ account }: { readonly account: CaseAccountView }) {
+export function AccountText({ account }: { readonly account: Pick<CaseAccountView, 'narrative' | 'sentWords' | 'question'> }) {
   return (
     <section aria-labelledby="account-heading">
       <h2 id="account-heading" className="pb-1 text-group font-semibold">Account</h2>

@@ -13,6 +13,9 @@ export interface CaseHeadProps {
   readonly path: string;
 }
 
+/** The page of one run draws the card of that run. */
+const ownCard = /\/reconstructions\/\d+\/?$/u;
+
 /** Number, title, state and next return, the card of the window, and the tabs as words. */
 export function CaseHead({ head, path }: CaseHeadProps) {
   const base = href('/cases/:caseNumber', { caseNumber: String(head.number) });
@@ -21,8 +24,12 @@ export function CaseHead({ head, path }: CaseHeadProps) {
   return (
     <>
       <PageTitle number={head.number} below={head.subtitle} aside={<StateAndReturn head={head} />}>{head.title}</PageTitle>
-      <CaptionedBurnCard model={{ ...head.card, ...span }} size="L" label={`Case ${head.number}`} links={<CardLinks head={head} base={base} />} />
-      <p className="pb-3 text-small text-second">{head.cardNote}</p>
+      {ownCard.test(path) ? null : (
+        <>
+          <CaptionedBurnCard model={{ ...head.card, ...span }} size="L" label={`Case ${head.number}`} links={<CardLinks head={head} base={base} />} />
+          <p className="pb-3 text-small text-second">{head.cardNote}</p>
+        </>
+      )}
       <Tabs label={`Parts of case ${head.number}`} items={head.tabs.map((tab) => ({ href: `${base}${tab.path}`, label: tab.label, current: isCurrent(tab.path), ...(tab.count === null ? {} : { count: tab.count }) }))} />
     </>
   );

@@ -43,7 +43,7 @@ function Narrow({ name, label, all, value, options }: NarrowProps) {
   return (
     <label className="flex items-center gap-1.5">
       {label}
-      <select key={value ?? ''} name={name} defaultValue={value ?? ''} className="field-box !h-9 !w-auto max-w-44 !py-0 text-small">
+      <select key={value ?? ''} name={name} defaultValue={value ?? ''} className="field-box !min-h-9 !w-auto max-w-44 !py-1 !text-small">
         <option value="">{all}</option>
         {options.map(([option, words]) => <option key={option} value={option}>{words}</option>)}
       </select>

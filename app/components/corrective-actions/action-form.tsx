@@ -35,7 +35,7 @@ const riskOptions = risks.map((value) => ({ value, label: riskLabels[value] }));
 export function ActionForm({ people, defaults, defaultRisk, todayOn, answer, closeHref }: ActionFormProps) {
   const problem = answerTo(answer, 'add');
   const field = problemFields(problem, { risk: defaultRisk, controlLevel: 'engineering' });
-  const named = [['title', 'What is to be done'], ['controlLevel', 'Level of control'], ['ownerId', 'Owner'], ['verifierId', 'Verifier'], ['dueOn', 'Due'], ['risk', 'Risk'], ['cost', 'Cost'], ['costCurrency', 'Currency']] as const;
+  const named = [['title', 'What is to be done'], ['controlLevel', 'Level of control'], ['interim', 'Interim'], ['ownerId', 'Owner'], ['verifierId', 'Verifier'], ['dueOn', 'Due'], ['risk', 'Risk'], ['cost', 'Cost'], ['costCurrency', 'Currency']] as const;
   const dueHelp = `Left empty: ${risks.map((risk) => `${riskLabels[risk].toLowerCase()} ${formatIsoDay(defaults[risk])}`).join(', ')}.`;
   return (
     <section id="action-form" aria-labelledby="action-form-title" className="mb-8">

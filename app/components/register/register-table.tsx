@@ -36,8 +36,8 @@ export function RegisterTable({ rows, groupCounts, span, grouped }: RegisterTabl
           <Head>Mark and place</Head>
           <Head className="max-desk:hidden">Onset window</Head>
           <Head className="w-[24%] min-w-48"><span className="sr-only">Sun on the mark in the window. </span><SharedHourRuler fromHour={span.fromHour} toHour={span.toHour} /></Head>
-          <Head>State and finding</Head>
-          <Head>Sun returns</Head>
+          <Head className="desk:min-w-42">State and finding</Head>
+          <Head className="desk:min-w-38">Sun returns</Head>
           <Head className="max-desk:hidden">What it waits for</Head>
         </tr>
       </thead>
@@ -73,7 +73,7 @@ const cell = 'pr-3 pt-[5px] pb-1 last:pr-0 max-tablet:p-0';
 function RegisterRow({ row }: { readonly row: RegisterRowView }) {
   const to = href('/cases/:caseNumber', { caseNumber: String(row.number) });
   return (
-    <tr role="row" className="border-b border-hair align-top focus-within:bg-wash max-tablet:grid max-tablet:grid-cols-[3.25rem_minmax(0,1fr)_4rem] max-tablet:gap-x-3 max-tablet:gap-y-1.5 max-tablet:py-3">
+    <tr role="row" className="border-b border-hair align-top focus-within:bg-wash max-tablet:grid max-tablet:grid-cols-[2.5rem_minmax(0,1fr)_4rem] max-tablet:gap-x-3 max-tablet:gap-y-1.5 max-tablet:py-3">
       <td role="cell" className={`${cell} font-serif text-group leading-6 text-second`}>{row.number}</td>
       <td role="cell" className={`${cell} max-tablet:col-start-3 max-tablet:row-start-1 max-tablet:justify-self-end`}>
         <OpticDrawing kind={opticDrawingOf(row.opticKind)} width={44} named />
@@ -87,8 +87,8 @@ function RegisterRow({ row }: { readonly row: RegisterRowView }) {
         <span className="block text-second">{row.windowHours}</span>
       </td>
       <td role="cell" className={`${cell} max-tablet:col-span-3`}><BurnCard model={row.card} size="S" label={`Case ${row.number}`} /></td>
-      <td role="cell" className={`${cell} max-tablet:col-span-2`}><StateMark state={row.state} note={row.stateNote} below /></td>
-      <td role="cell" className={`${cell} max-tablet:col-start-3 max-tablet:-ml-20 max-tablet:text-right`}>
+      <td role="cell" className={`${cell} max-tablet:col-span-2 max-[359px]:col-span-3`}><StateMark state={row.state} note={row.stateNote} below /></td>
+      <td role="cell" className={`${cell} max-tablet:col-start-3 max-tablet:-ml-20 max-tablet:text-right max-[359px]:col-span-3 max-[359px]:col-start-1 max-[359px]:ml-0 max-[359px]:text-left`}>
         {row.nextReturn ? (
           <>
             <time dateTime={row.nextReturn.atUtc} className="font-medium">{row.nextReturn.words}</time>

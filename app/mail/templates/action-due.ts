@@ -21,3 +21,10 @@ export function actionReminderMail(about: ActionMail) {
   const heading = `A reminder of ${actionName(about).toLowerCase()}, due ${about.dueWords}`;
   return { subject: heading, ...mail({ heading, lines: ['Somebody who follows it asks how it stands. Mark it done with proof, or say on the case what holds it up.', ...nextReturnLine(about)], link: actionLink(about) }) };
 }
+
+/** To the owner and the managers of the site, before the sun is back on a mark whose fix is not verified. */
+export function sunReturnsMail(about: ActionMail & { readonly daysLeft: number }) {
+  const heading = `${actionName(about)}: the sun is back ${inDays(about.daysLeft)}, and the fix is not verified`;
+  const lines = [...nextReturnLine(about), `The fix is due ${about.dueWords}. Until it is in place, keep the optic shaded or covered, and people and things that burn out of the way.`];
+  return { subject: heading, ...mail({ heading, lines, link: actionLink(about) }) };
+}

@@ -1,4 +1,5 @@
 import type { Assumption, TracedFocusResult } from '#app/physics/model.ts';
+import { slopeErrors } from '#app/physics/optics/optic-defaults.data.ts';
 import type { Beam } from '#app/physics/optics/closed-form/beam.ts';
 import { concentrationAlongAxis, dangerZone, type ZonePoint } from '#app/physics/optics/trace/danger-zone.ts';
 import { traceBundle } from '#app/physics/optics/trace/trace-bundle.ts';
@@ -37,7 +38,9 @@ function requestFor(minute: JudgedMinute, beam: Beam, motion: SpotMotion | null,
   const { input, mark } = setting;
   if (input.optic === undefined) return null;
   const common = {
-    optic: input.optic,
+    // The same class value as the closed form's, so that both answers are about one optic.
+    optic: { ...input.optic, slopeErrorMrad: input.optic.slopeErrorMrad ?? slopeErrors[input.optic.kind].slopeErrorMrad },
+    circumsolarRatio: input.sky.circumsolarRatio ?? 0,
     sunDirection: minute.sun.towardsSun,
     sunHalfAngleRad: halfAngleRad(minute.sun.distanceAu),
     rays: input.rays ?? defaultRays,

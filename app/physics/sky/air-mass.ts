@@ -28,8 +28,3 @@ export function absoluteAirMass(relativeAirMass: number, pressurePa: number): nu
 export function standardPressureAtPa(elevationM: number): number {
   return 100 * ((44331.514 - elevationM) / 11880.516) ** (1 / 0.1902632);
 }
-
-/** Height at which the standard atmosphere has this pressure. [m] */
-export function standardElevationM(pressurePa: number): number {
-  return 44331.514 - 11880.516 * (pressurePa / 100) ** 0.1902632;
-}

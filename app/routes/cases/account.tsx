@@ -2,7 +2,6 @@ import { href, redirect } from 'react-router';
 import type { Route } from './+types/account';
 import { db } from '#db/client.server.ts';
 import { getCaseAccount } from '#db/queries/case-account.server.ts';
-import { findCase } from '#db/queries/case-subject.server.ts';
 import { requireActor } from '#app/auth/middleware.server.ts';
 import { AccountText, Lacks, LogLines, Notes, People, PhotoStrip } from '#app/components/cases/account-parts.tsx';
 import { InjuryBox } from '#app/components/cases/injury-box.tsx';
@@ -15,7 +14,6 @@ import { FactList } from '#app/components/ui/fact-list.tsx';
 import { readCaseNumber } from '#app/domain/case-number.ts';
 import { notFound } from '#app/domain/errors.ts';
 import { injuryForm } from '#app/domain/injury.ts';
-import type { Actor } from '#app/domain/roles.ts';
 import { formProblem, problemFromError, typedValues } from '#app/http/form-result.server.ts';
 import { respond } from '#app/http/to-response.server.ts';
 import { addNote } from '#app/services/cases/add-note.server.ts';
@@ -45,7 +43,7 @@ export async function action({ request, context, params }: Route.ActionArgs) {
         await saveInjury({ actor, caseNumber, form: parsed.data });
       } else if (intent === 'add-note') await addNote({ actor, caseNumber, body: typed['body'] ?? '' });
       else {
-        const outcome = await moveByForm({ actor, caseNumber, zone: await zoneOf(actor, caseNumber), typed });
+        const outcome = await moveByForm({ actor, caseNumber, typed });
         if (outcome.state === 'triage' && typed['moveId'] === 'open-triage') return redirect(`${page}/triage`, 303);
       }
     } catch (error) {
@@ -53,12 +51,6 @@ export async function action({ request, context, params }: Route.ActionArgs) {
     }
     return redirect(page, 303);
   });
-}
-
-async function zoneOf(actor: Actor, caseNumber: number): Promise<string> {
-  const found = await findCase(db, actor, caseNumber);
-  if (!found) throw notFound('The case');
-  return found.row.zone;
 }
 
 export default function Account({ loaderData: account, actionData: problem }: Route.ComponentProps) {

@@ -102,7 +102,7 @@ export default function CaseActions({ loaderData: page, actionData }: Route.Comp
   return (
     <div>
       <div className="flex flex-wrap items-start justify-between gap-4 pb-4">
-        <div className="max-w-[64ch]">
+        <div className="min-w-0 flex-1 basis-80">
           <h2 className="font-serif text-title">{page.cards.length === 0 ? 'No action is given yet' : page.heading}</h2>
           <ReturnsLine upcoming={page.upcoming} zone={page.zone} />
           {page.interimControl ? <p>Until then: {page.interimControl.words}{page.interimControl.ends ? <span className="text-second">, until {page.interimControl.ends}</span> : null}</p> : null}

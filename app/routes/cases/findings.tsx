@@ -8,7 +8,7 @@ import { FindingForm } from '#app/components/findings/finding-form.tsx';
 import { FindingText } from '#app/components/findings/finding-words.tsx';
 import { answerTo } from '#app/components/findings/problem-fields.ts';
 import { ReviewComments } from '#app/components/findings/review-comments.tsx';
-import { ReviewInputsTable } from '#app/components/findings/review-inputs-table.tsx';
+import { ReviewInputs } from '#app/components/findings/review-inputs.tsx';
 import { ReviewMoves, signFormId } from '#app/components/findings/review-moves.tsx';
 import { VersionList } from '#app/components/findings/version-list.tsx';
 import { Columns } from '#app/components/layout/page.tsx';
@@ -143,7 +143,7 @@ export default function Findings({ loaderData: page, actionData }: Route.Compone
         <Columns side={side} sideLabel="Comments and moves">
           {page.mode === 'review' && !page.opinionShown ? <HiddenOpinion /> : null}
           {page.chosen ? <FindingText words={page.chosen.words} note={page.chosen.note} /> : null}
-          {page.mode === 'review' ? <div className="pt-6"><ReviewInputsTable groups={page.inputs} pins={page.comments} formId={signFormId} ticked={(signing?.typed['ticked'] ?? '').split(' ')} errors={signing?.fieldErrors['read']} /></div> : null}
+          {page.mode === 'review' ? <div className="pt-6"><ReviewInputs groups={page.inputs} pins={page.comments} formId={signFormId} ticked={(signing?.typed['ticked'] ?? '').split(' ')} errors={signing?.fieldErrors['read']} /></div> : null}
           {page.versions.length === 0 && !page.form ? <EmptyState title="No finding is open to you yet.">It is written by an investigator and signed by a technical reviewer who is not the author.</EmptyState> : null}
           <VersionList versions={page.versions} chosen={page.chosenVersion} hashAgrees={page.hashAgrees} />
           {page.frozenText ? <FrozenText text={page.frozenText} /> : null}

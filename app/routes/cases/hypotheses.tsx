@@ -47,7 +47,7 @@ export function loader({ request, context, params }: Route.LoaderArgs) {
       engine: engine && outcomeShown ? engineWords(engine) : null,
       engineHidden: !outcomeShown,
       editable,
-      closedBecause: editable ? null : whoCan('hypothesis:write'),
+      closedBecause: editable ? null : `${whoCan('hypothesis:write').replace(/\.$/u, '')} while the case is under investigation.`,
       takeOverHref: editable && engine ? `?edit=${list.find((hypothesis) => hypothesis.kind === 'focused-sunlight')?.id ?? 'new'}&engine=1#hypothesis-form` : undefined,
       form: editable ? await formView(actor, list, engine, url.searchParams) : null,
     };
@@ -122,7 +122,7 @@ export default function Hypotheses({ loaderData, actionData }: Route.ComponentPr
       )}
       <div className="flex flex-wrap items-center gap-x-4 gap-y-2 py-3">
         {loaderData.editable && !form ? <ButtonLink href="?edit=new#hypothesis-form" look="outlined">Add a hypothesis</ButtonLink> : null}
-        <p className="text-small text-second">Each is tested for what would disprove it. &ldquo;Not ruled out&rdquo; is not &ldquo;shown&rdquo;. There is no total.{loaderData.closedBecause ? ` Changes now: ${loaderData.closedBecause}` : ''}</p>
+        <p className="text-small text-second">Each is tested for what would disprove it. &ldquo;Not ruled out&rdquo; is not &ldquo;shown&rdquo;. There is no total.{loaderData.closedBecause ? ` Changes: ${loaderData.closedBecause}` : ''}</p>
       </div>
       {loaderData.obstacles.length > 0 ? (
         <section aria-labelledby="probable-needs" className="max-w-[64ch] py-3">

@@ -26,12 +26,15 @@ export function loader({ request, params, context }: Route.LoaderArgs) {
     const progress = receipt ? await getReportProgress(db, receipt) : null;
     if (!receipt || !progress) throw notFound('The report');
     const actor = context.get(actorContext);
+    const query = new URL(request.url).searchParams;
+    const guestCode = query.get('at');
     return {
       receipt,
       receivedWords: formatDayClock(progress.reportedAt, progress.zone),
       photoCount: progress.photoCount,
       /** Set right after sending: the draft of this id may leave the device. */
-      sentClientId: clientIdSchema.safeParse(new URL(request.url).searchParams.get('report')).data ?? null,
+      sentClientId: clientIdSchema.safeParse(query.get('report')).data ?? null,
+      anotherHref: guestCode ? `/report?at=${encodeURIComponent(guestCode)}` : actor ? '/report' : null,
       closeHref: actor ? homeFor(actor) : '/',
       caseHref: actor && progress.reporterId === actor.userId ? href('/cases/:caseNumber', { caseNumber: String(progress.caseNumber) }) : null,
     };
@@ -41,7 +44,7 @@ export function loader({ request, params, context }: Route.LoaderArgs) {
 export const meta: Route.MetaFunction = () => [{ title: 'Report received · Scorchline' }];
 
 export default function ReportReceived({ loaderData }: Route.ComponentProps) {
-  const { receipt, receivedWords, photoCount, sentClientId, closeHref, caseHref } = loaderData;
+  const { receipt, receivedWords, photoCount, sentClientId, closeHref, caseHref, anotherHref } = loaderData;
   return (
     <>
       <TaskHeader title="Your report" closeHref={closeHref} />
@@ -68,7 +71,7 @@ export default function ReportReceived({ loaderData }: Route.ComponentProps) {
         <div className="space-y-3 pt-6">
           <ButtonLink href={`/progress?code=${receipt}`} block size="large">Follow this report</ButtonLink>
           {caseHref ? <p><AppLink href={caseHref}>Open it in the register, to add a note or photos</AppLink></p> : null}
-          <p><AppLink href="/report">Report another mark</AppLink></p>
+          {anotherHref ? <p><AppLink href={anotherHref}>Report another mark</AppLink></p> : null}
         </div>
       </Page>
     </>

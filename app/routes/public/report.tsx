@@ -29,6 +29,9 @@ import { findSentReport, listReportSites } from '#db/queries/reports.server.ts';
 const guestCodeOf = (request: Request) => new URL(request.url).searchParams.get('at');
 const clientIdOf = (request: Request) => clientIdSchema.safeParse(new URL(request.url).searchParams.get('report')).data ?? null;
 
+/** With the link's code, so that another mark can be reported from there, and the id whose draft may leave the device. */
+const receivedAddress = (receipt: string, guestCode: string | null, clientId: string) => `/received/${receipt}?${new URLSearchParams({ ...(guestCode ? { at: guestCode } : {}), report: clientId }).toString()}`;
+
 /** The holder, or the way to the sign-in page. */
 async function requireHolder(request: Request, context: Readonly<RouterContextProvider>): Promise<ReportHolder> {
   const holder = await identifyHolder(context.get(actorContext), guestCodeOf(request));
@@ -67,7 +70,7 @@ export function loader({ request, context }: Route.LoaderArgs) {
     // The id stands in the address, so that a reload without a script goes on with the same report.
     if (!clientId) throw redirect(reportAddress(randomUUID(), guestCode));
     const sent = await findSentReport(db, clientId);
-    if (sent) throw redirect(isHeldBy(sent, holder) ? `/received/${sent.receipt}` : reportAddress(randomUUID(), guestCode));
+    if (sent) throw redirect(isHeldBy(sent, holder) ? receivedAddress(sent.receipt, guestCode, clientId) : reportAddress(randomUUID(), guestCode));
     return viewOf(holder, clientId, guestCode);
   });
 }
@@ -111,7 +114,7 @@ async function answer(received: Received) {
   if (refused.length > 0) return backToForm(received, { fieldErrors: photoErrors(refused, true) }, 400);
   try {
     const { receipt } = await submitReport({ holder, clientId, report: reading.report });
-    return redirect(`/received/${receipt}?report=${clientId}`, 303);
+    return redirect(receivedAddress(receipt, received.guestCode, clientId), 303);
   } catch (error) {
     if (!(error instanceof DomainError)) throw error;
     return backToForm(received, { formErrors: [error.message] }, statusFor(error));

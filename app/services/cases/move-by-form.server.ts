@@ -1,5 +1,7 @@
+import { db } from '#db/client.server.ts';
+import { findCase } from '#db/queries/case-subject.server.ts';
 import { moveExtra, moveForm } from '#app/domain/move-form.ts';
-import { DomainError } from '#app/domain/errors.ts';
+import { DomainError, notFound } from '#app/domain/errors.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import type { MoveOutcome } from './move-case.server.ts';
 import { moveCase } from './move-case.server.ts';
@@ -8,10 +10,9 @@ import { moveCase } from './move-case.server.ts';
  * Makes the move that a posted form asks for.
  *
  * @param typed Fields of the form by name.
- * @param zone Zone of the place, in which a day of the form ends.
  * @throws DomainError as `moveCase`, its sentences named by the fields of the form.
  */
-export async function moveByForm(request: { actor: Actor; caseNumber: number; zone: string; typed: Readonly<Record<string, string>> }): Promise<MoveOutcome> {
+export async function moveByForm(request: { actor: Actor; caseNumber: number; typed: Readonly<Record<string, string>> }): Promise<MoveOutcome> {
   const parsed = moveForm.safeParse(request.typed);
   if (!parsed.success) {
     const fieldErrors: Record<string, string[]> = {};
@@ -19,8 +20,10 @@ export async function moveByForm(request: { actor: Actor; caseNumber: number; zo
     throw new DomainError('invalid-input', 'Some fields cannot be read.', { fieldErrors });
   }
   const { moveId, version, reason } = parsed.data;
+  const found = await findCase(db, request.actor, request.caseNumber);
+  if (!found) throw notFound('The case');
   try {
-    return await moveCase({ actor: request.actor, caseNumber: request.caseNumber, moveId, version, reason, extra: moveExtra(parsed.data, request.zone) });
+    return await moveCase({ actor: request.actor, caseNumber: request.caseNumber, moveId, version, reason, extra: moveExtra(parsed.data, found.row.zone) });
   } catch (error) {
     throw namedAsInForm(error);
   }

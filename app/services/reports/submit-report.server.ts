@@ -5,6 +5,8 @@ import { insertLogEntry } from '#db/queries/log.server.ts';
 import type { NewReportedCase, SentReport } from '#db/queries/reports.server.ts';
 import { attachReportPhotos, findSentReport, insertInvolvement, insertReportedCase, lockReport } from '#db/queries/reports.server.ts';
 import { insertScene } from '#db/queries/scenes.server.ts';
+import { DomainError } from '#app/domain/errors.ts';
+import { canInOrganisation } from '#app/domain/permissions.ts';
 import type { Report, ReportHolder } from '#app/domain/report.ts';
 import { receiptFrom, titleOfReport } from '#app/domain/report.ts';
 import { enqueue } from '#app/jobs/queue.server.ts';
@@ -31,9 +33,11 @@ export interface Receipt {
  *
  * Two sendings of one report wait for each other on a lock of their client id, so the second finds the first's case.
  *
- * @throws DomainError `forbidden` when the client id belongs to somebody else's report.
+ * @throws DomainError `forbidden` when the site is not the holder's to report for, or the client id belongs to somebody
+ *   else's report.
  */
 export async function submitReport(submission: Submission): Promise<Receipt> {
+  refuseForeignSite(submission);
   return inTransaction(async (tx) => {
     await lockReport(tx, submission.clientId);
     const earlier = await findSentReport(tx, submission.clientId);
@@ -50,6 +54,11 @@ export async function submitReport(submission: Submission): Promise<Receipt> {
     await enqueue(tx, sendMailJob, {});
     return { receipt: sent.receipt, caseNumber: sent.caseNumber, repeated: false };
   });
+}
+
+function refuseForeignSite({ holder, report }: Submission): void {
+  const own = holder.kind === 'person' ? report.site.organisationId === holder.actor.organisationId && canInOrganisation(holder.actor, 'report:create') : report.site.id === holder.site.id;
+  if (!own) throw new DomainError('forbidden', 'This site is not one you can report for. Choose another, or use the link at the place.');
 }
 
 function caseValues({ holder, clientId, report }: Submission): Omit<NewReportedCase, 'receipt'> {

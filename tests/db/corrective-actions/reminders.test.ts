@@ -5,33 +5,51 @@ import type { ActionStage } from './stage.ts';
 import { db } from '#db/client.server.ts';
 import { correctiveActions, outbox, users } from '#db/schema/all.ts';
 import { addDays } from '#app/domain/action-form.ts';
-import { reminderFor, sendDueReminders } from '#app/jobs/handlers/due-reminders.server.ts';
+import { remindersFor, sendDueReminders } from '#app/jobs/handlers/due-reminders.server.ts';
+import type { ReminderFacts } from '#app/jobs/handlers/due-reminders.server.ts';
 
 const noonOf = (day: string) => new Date(`${day}T12:00:00Z`);
 const due = '2026-07-24';
 
 describe('which reminder is due', () => {
-  const open = (values: Partial<Parameters<typeof reminderFor>[0]> = {}) => ({ state: 'open' as const, dueOn: due, effectCheckOn: null, ...values });
-  test.each([
-    ['2026-07-16', null],
-    ['2026-07-17', 'due-7'],
-    ['2026-07-20', 'due-7'],
-    ['2026-07-23', 'due-1'],
-    ['2026-07-24', 'due-1'],
-    ['2026-07-25', 'late'],
-  ])('on %s for an action due 2026-07-24: %s', (today, kind) => {
-    expect(reminderFor(open(), today, '2026-06-01')).toBe(kind);
+  const on = (today: string, values: Partial<ReminderFacts> = {}) =>
+    remindersFor({ state: 'open', dueOn: due, effectCheckOn: null, givenOn: '2026-06-01', returnOn: null, today, ...values }).map((reminder) => reminder.kind);
+
+  test.each<[string, string[]]>([
+    ['2026-07-16', []],
+    ['2026-07-17', ['due-7']],
+    ['2026-07-20', ['due-7']],
+    ['2026-07-23', ['due-1']],
+    ['2026-07-24', ['due-1']],
+    ['2026-07-25', ['late']],
+  ])('on %s for an action due 2026-07-24: %j', (today, kinds) => {
+    expect(on(today)).toEqual(kinds);
   });
 
   test('none before the day to somebody who was given it today', () => {
-    expect(reminderFor(open(), '2026-07-20', '2026-07-20')).toBeNull();
-    expect(reminderFor(open(), '2026-07-25', '2026-07-25')).toBe('late');
+    expect(on('2026-07-20', { givenOn: '2026-07-20' })).toEqual([]);
+    expect(on('2026-07-25', { givenOn: '2026-07-25' })).toEqual(['late']);
   });
 
   test('none once it is done; the check when the sun is back', () => {
-    expect(reminderFor(open({ state: 'done' }), '2026-08-30', '2026-06-01')).toBeNull();
-    expect(reminderFor(open({ state: 'verified', effectCheckOn: '2026-08-03' }), '2026-08-02', '2026-06-01')).toBeNull();
-    expect(reminderFor(open({ state: 'verified', effectCheckOn: '2026-08-03' }), '2026-08-03', '2026-06-01')).toBe('check-due');
+    expect(on('2026-08-30', { state: 'done' })).toEqual([]);
+    expect(on('2026-08-02', { state: 'verified', effectCheckOn: '2026-08-03' })).toEqual([]);
+    expect(on('2026-08-03', { state: 'verified', effectCheckOn: '2026-08-03' })).toEqual(['check-due']);
+  });
+
+  test.each<[string, string[]]>([
+    ['2026-09-05', []],
+    ['2026-09-06', ['sun-14']],
+    ['2026-09-17', ['sun-3']],
+    ['2026-09-20', ['sun-3']],
+    ['2026-09-21', []],
+  ])('on %s for a done, unverified fix when the sun is back on 2026-09-20: %j', (today, kinds) => {
+    expect(on(today, { state: 'done', returnOn: '2026-09-20' })).toEqual(kinds);
+  });
+
+  test('the sun is no reason to remind once the fix is verified', () => {
+    expect(on('2026-09-18', { state: 'verified', returnOn: '2026-09-20' })).toEqual([]);
+    expect(on('2026-09-18', { state: 'not-effective', returnOn: '2026-09-20' })).toEqual(['sun-3']);
   });
 });
 
@@ -69,6 +87,13 @@ describe('the hourly run', () => {
     await db.update(correctiveActions).set({ dueOn: '2026-08-20' }).where(eq(correctiveActions.caseId, stage.caseId));
     await sendDueReminders(noonOf('2026-08-14'));
     expect((await subjects(stage.owner.email)).at(-1)).toContain('due in 6 days');
+  });
+
+  test('a stretch of return days is announced once at fourteen days and once at three', async () => {
+    const other = await actionStage(['2026-12-20', '2026-12-21', '2026-12-22']);
+    await existingAction(other, { dueOn: '2027-02-01', createdAt: noonOf('2026-06-01') });
+    for (const day of ['2026-12-06', '2026-12-07', '2026-12-17', '2026-12-19', '2026-12-21']) await sendDueReminders(noonOf(day));
+    expect(await subjects(other.owner.email)).toEqual([expect.stringContaining('back in 14 days'), expect.stringContaining('back in 3 days')]);
   });
 
   test('nobody is written to whose account is switched off', async () => {

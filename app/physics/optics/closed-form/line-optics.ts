@@ -1,7 +1,7 @@
 import { degree } from '#app/physics/units.ts';
 import { cross, dot, fromAzimuthElevation, mirrored, scale, subtract, unit, type Vector } from '#app/physics/vector.ts';
 import type { CurvedReflectorOptic, CylinderOptic } from '#app/physics/optics/optic.ts';
-import { slopeErrors } from '#app/physics/optics/optic-defaults.data.ts';
+import { paneTiltMrad, slopeErrors } from '#app/physics/optics/optic-defaults.data.ts';
 import { ballFocalLengthM, bravaisIndex, mediumOf } from '#app/physics/optics/refraction.ts';
 import { sharpestDistanceM, surveyOrigin, type Beam, type FocusModel } from './beam.ts';
 import { radiusHolding, slotDensityPerM, type Fan } from './meridional.ts';
@@ -108,7 +108,9 @@ export function curvedReflectorModel(optic: CurvedReflectorOptic): FocusModel {
   }
   const normal = fromAzimuthElevation(optic.axisAzimuthDeg, optic.axisElevationDeg);
   const generator = reflectorGenerator(optic, normal);
-  const slopeBlurRad = (4 * (optic.slopeErrorMrad ?? slopeErrors[optic.kind].slopeErrorMrad)) / 1000;
+  const slopeMrad = optic.slopeErrorMrad ?? slopeErrors[optic.kind].slopeErrorMrad;
+  // Flat panes stand a little off the ideal curve, each in its own way.
+  const slopeBlurRad = (4 * Math.hypot(slopeMrad, optic.paneWidthM === undefined ? 0 : paneTiltMrad)) / 1000;
   const kept: FocusCache = new Map();
   return {
     focusKind: 'line',

@@ -1,11 +1,11 @@
 import type { CylinderOptic } from '#app/physics/optics/optic.ts';
+import { ballFocalLengthM, bravaisIndex } from '#app/physics/optics/refraction.ts';
 import { dot, fromAzimuthElevation } from '#app/physics/vector.ts';
 import { aimAtBar } from './body-kernel.ts';
 import type { OcclusionTestOf } from './body-spec.ts';
 import { kernelOf } from './body-spec.ts';
 import { addScaled, frameAbout, unitOf } from './frame.ts';
 import type { Kernel } from './kernel.ts';
-import { ballFocalLength, skewIndex } from './paraxial.ts';
 import { slopeError } from './slope-defaults.ts';
 import { indexForFocus } from './spectral.ts';
 import type { SunDisc } from './sun-sampling.ts';
@@ -20,8 +20,7 @@ export function cylinderKernel(optic: CylinderOptic, request: TraceRequest, sun:
   if (cosSkew < 0.02) throw new RangeError('sunDirection and the axis of the bottle agree within about 1°: no line focus forms');
   const frame = frameAbout(unitOf(across, 'sunDirection'), axis);
   const radius = optic.diameterM / 2;
-  const n = skewIndex(indexForFocus(optic.material), Math.acos(cosSkew));
-  const focal = ballFocalLength(n, optic.diameterM);
+  const focal = ballFocalLengthM(radius, bravaisIndex(indexForFocus(optic.material), along));
   const slope = slopeError(optic);
   const halfLength = optic.lengthM / 2;
   const width = 1.3 * sun.halfAngleRad + 6 * slope.sigmaRad + (sun.circumsolarRatio > 0 ? 0.04 : 0);

@@ -1,3 +1,5 @@
+import { fresnelReflectance } from '#app/physics/optics/refraction.ts';
+
 /**
  * Reflectances of a bare interface for light polarised across (s) and in (p) the plane of incidence.
  *
@@ -18,12 +20,6 @@ export function fresnelReflectances(n1: number, n2: number, cosIncidence: number
   return [rs * rs, rp * rp];
 }
 
-/** Mean of the two, for sunlight. */
-export function unpolarisedReflectance(n1: number, n2: number, cosIncidence: number): number {
-  const [s, p] = fresnelReflectances(n1, n2, cosIncidence);
-  return (s + p) / 2;
-}
-
 /** Angle of incidence at which p light is not reflected. [rad] */
 export function brewsterAngle(n1: number, n2: number): number {
   return Math.atan2(n2, n1);
@@ -31,7 +27,7 @@ export function brewsterAngle(n1: number, n2: number): number {
 
 /** Index of float glass for the rise of reflectance towards grazing; Rubin 1985 at 0.59 µm. */
 const paneIndex = 1.523;
-const paneNormal = unpolarisedReflectance(1, paneIndex, 1);
+const paneNormal = fresnelReflectance(1, paneIndex);
 
 /**
  * Reflectance of a pane of which only the value at normal incidence is known: it rises to 1 as bare glass does.
@@ -39,6 +35,6 @@ const paneNormal = unpolarisedReflectance(1, paneIndex, 1);
  * @param normalReflectance Solar reflectance at normal incidence. 0…1
  */
 export function paneReflectance(normalReflectance: number, cosIncidence: number): number {
-  const rise = (unpolarisedReflectance(1, paneIndex, cosIncidence) - paneNormal) / (1 - paneNormal);
+  const rise = (fresnelReflectance(cosIncidence, paneIndex) - paneNormal) / (1 - paneNormal);
   return normalReflectance + (1 - normalReflectance) * Math.max(0, rise);
 }

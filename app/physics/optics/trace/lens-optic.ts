@@ -1,4 +1,5 @@
 import type { LensOptic } from '#app/physics/optics/optic.ts';
+import { lensmakerFocalLengthM } from '#app/physics/optics/refraction.ts';
 import { fromAzimuthElevation } from '#app/physics/vector.ts';
 import { aimAtDisc } from './body-kernel.ts';
 import type { OcclusionTestOf } from './body-spec.ts';
@@ -6,11 +7,20 @@ import { kernelOf } from './body-spec.ts';
 import type { ConvexSet } from './convex-body.ts';
 import { frameAbout, toLocal } from './frame.ts';
 import type { Kernel } from './kernel.ts';
-import { lensmakerFocalLength, lensRadius } from './paraxial.ts';
 import { slopeError } from './slope-defaults.ts';
 import { indexForFocus } from './spectral.ts';
 import type { SunDisc } from './sun-sampling.ts';
 import type { TraceRequest } from './trace-model.ts';
+
+/** Radius of curvature of a lens of known focal length. */
+export function lensRadius(shape: 'plano-convex' | 'biconvex', n: number, focalLength: number, thickness: number): number {
+  const k = n - 1;
+  if (shape === 'plano-convex') return focalLength * k;
+  // f = R² n / (k (2 n R − k t)): the larger root is the lens.
+  const b = 2 * k * focalLength;
+  const c = (k * k * thickness * focalLength) / n;
+  return (b + Math.sqrt(b * b - 4 * c)) / 2;
+}
 
 function lensSets(optic: LensOptic, radius: number, thickness: number, front: number): ConvexSet[] {
   const back = front - thickness;
@@ -37,7 +47,7 @@ function lensShape(optic: LensOptic): { radius: number; thickness: number; princ
     radius = lensRadius(optic.shape, n, optic.focalLengthM, thickness);
   }
   if (optic.shape === 'plano-convex') return { radius, thickness, principal: optic.faceToSun === 'curved' ? thickness * (1 - 1 / n) : thickness };
-  const focal = lensmakerFocalLength(n, radius, -radius, thickness);
+  const focal = lensmakerFocalLengthM(n, radius, -radius, thickness);
   return { radius, thickness, principal: thickness - (focal * (n - 1) * thickness) / (n * radius) };
 }
 

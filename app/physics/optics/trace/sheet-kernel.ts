@@ -1,5 +1,6 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- every index is bounded by its loop; a fallback in the hot loops would hide a wrong one as 0 */
 import type { CurvedReflectorOptic, PaneOptic } from '#app/physics/optics/optic.ts';
+import { fresnelReflectance } from '#app/physics/optics/refraction.ts';
 import type { Vector } from '#app/physics/vector.ts';
 import { fromAzimuthElevation } from '#app/physics/vector.ts';
 import { cutOff, mostInteractions } from './body-path.ts';
@@ -8,7 +9,7 @@ import type { RayBundle } from './bundle.ts';
 import { newCrossing, tiltNormal } from './convex-body.ts';
 import type { Frame } from './frame.ts';
 import { frameAbout, toLocal } from './frame.ts';
-import { paneReflectance, unpolarisedReflectance } from './fresnel.ts';
+import { paneReflectance } from './fresnel.ts';
 import { gaussPair } from './gauss.ts';
 import type { Kernel, Launch, Samples } from './kernel.ts';
 import { centreRadiusCoefficients } from './plate.ts';
@@ -132,7 +133,7 @@ const lawOf = (reflectance: number, request: TraceRequest, glass: boolean): Law 
 
 /** Both faces of an uncoated outer pane, absorption in it left out. */
 function clearPane(cosIncidence: number): number {
-  const r = unpolarisedReflectance(1, 1.523, Math.min(1, cosIncidence));
+  const r = fresnelReflectance(Math.min(1, cosIncidence), 1.523);
   return (2 * r) / (1 + r);
 }
 

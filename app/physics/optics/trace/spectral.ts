@@ -128,7 +128,7 @@ export function beamMean(fromUm: number, toUm: number, quantity: (wavelengthUm: 
  * Internal transmittance for the direct beam, surfaces left out.
  *
  * @param pathM Path in the material. [m] ≥ 0
- * @see PHYSICS of solar glazing: weighting with ASTM G173-03 direct
+ * @see ASTM G173-03, direct normal spectrum, for the weights
  */
 export function solarInternalTransmittance(material: RefractiveMaterialName, pathM: number, fromUm = 0.28, toUm = 4): number {
   return beamMean(fromUm, toUm, (x) => Math.exp(-absorptionPerM(material, x) * pathM));

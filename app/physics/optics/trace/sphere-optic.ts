@@ -1,11 +1,11 @@
 import type { SphereOptic } from '#app/physics/optics/optic.ts';
+import { ballFocalLengthM } from '#app/physics/optics/refraction.ts';
 import { aimAtBall } from './body-kernel.ts';
 import type { Body } from './body-path.ts';
 import type { OcclusionTestOf } from './body-spec.ts';
 import { always, kernelOf } from './body-spec.ts';
 import { frameAbout } from './frame.ts';
 import type { Kernel } from './kernel.ts';
-import { ballFocalLength } from './paraxial.ts';
 import { slopeError } from './slope-defaults.ts';
 import { channelsOf, indexForFocus } from './spectral.ts';
 import { traceSphere } from './sphere-kernel.ts';
@@ -18,7 +18,7 @@ export function sphereKernel(optic: SphereOptic, request: TraceRequest, sun: Sun
   const frame = frameAbout(sun.direction);
   const slope = slopeError(optic);
   const body: Body = { sets: [{ kind: 'ball', centreZ: 0, radius, rough: true }], slopeSigmaRad: slope.sigmaRad, allBranches: request.branches === 'all' };
-  const focal = ballFocalLength(indexForFocus(optic.material), optic.diameterM);
+  const focal = ballFocalLengthM(radius, indexForFocus(optic.material));
   const kernel = kernelOf(
     {
       frame,

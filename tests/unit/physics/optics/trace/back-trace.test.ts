@@ -1,10 +1,13 @@
-import { describe, expect, test } from 'vitest';
+import { describe, expect, test, vi } from 'vitest';
 import type { Optic } from '#app/physics/optics/optic.ts';
 import { backTracedDiscAt, discAt, hotDiscIn } from '#app/physics/optics/trace/measure.ts';
 import { naturalPlane } from '#app/physics/optics/trace/best-plane.ts';
 import { toGlobal } from '#app/physics/optics/trace/frame.ts';
 import { traceBundle } from '#app/physics/optics/trace/trace-bundle.ts';
 import { fromAzimuthElevation } from '#app/physics/vector.ts';
+
+// Ray traces are plain arithmetic; on a busy machine they may take their time.
+vi.setConfig({ testTimeout: 60_000 });
 
 const up = { axisAzimuthDeg: 0, axisElevationDeg: 90 } as const;
 const glass = { name: 'explicit', refractiveIndex: 1.5, absorptionPerM: 2 } as const;

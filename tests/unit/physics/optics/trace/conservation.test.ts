@@ -1,5 +1,5 @@
 import fc from 'fast-check';
-import { describe, expect, test } from 'vitest';
+import { describe, expect, test, vi } from 'vitest';
 import type { Optic } from '#app/physics/optics/optic.ts';
 import { guardEnergy, guardRadiance, PhysicsGuardError, radianceBound } from '#app/physics/optics/trace/guards.ts';
 import { discAt } from '#app/physics/optics/trace/measure.ts';
@@ -7,6 +7,9 @@ import { traceBundle } from '#app/physics/optics/trace/trace-bundle.ts';
 import { traceFocus } from '#app/physics/optics/trace/trace-focus.ts';
 import type { TraceRequest } from '#app/physics/optics/trace/trace-model.ts';
 import { fromAzimuthElevation } from '#app/physics/vector.ts';
+
+// Ray traces are plain arithmetic; on a busy machine they may take their time.
+vi.setConfig({ testTimeout: 60_000 });
 
 const half = (0.2665 * Math.PI) / 180;
 const upright = { axisAzimuthDeg: 0, axisElevationDeg: 90 } as const;

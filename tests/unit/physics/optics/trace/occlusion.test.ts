@@ -1,10 +1,13 @@
-import { describe, expect, test } from 'vitest';
+import { describe, expect, test, vi } from 'vitest';
 import { frameAbout } from '#app/physics/optics/trace/frame.ts';
 import { occlusionTest } from '#app/physics/optics/trace/occlusion.ts';
 import { discAt } from '#app/physics/optics/trace/measure.ts';
 import { traceBundle } from '#app/physics/optics/trace/trace-bundle.ts';
 import type { Occluder, TraceRequest } from '#app/physics/optics/trace/trace-model.ts';
 import type { Vector } from '#app/physics/vector.ts';
+
+// Ray traces are plain arithmetic; on a busy machine they may take their time.
+vi.setConfig({ testTimeout: 60_000 });
 
 const sun: Vector = [0, 0, 1];
 const request: TraceRequest = {

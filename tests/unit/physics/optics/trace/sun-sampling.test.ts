@@ -61,9 +61,20 @@ describe('sampled sun', () => {
     expect(outside).toBeCloseTo(circumsolarRatio, 2);
   });
 
-  test('gives the aureole of Buie, Monger and Dey its slope: steeper for a clearer sky', () => {
-    const gamma = [0.02, 0.1, 0.3].map((csr) => buieGamma(buieChi(csr)));
-    expect(gamma.every((g) => g < -1.5 && g > -3)).toBe(true);
-    expect([...gamma].sort((a, b) => a - b)).not.toEqual([...gamma].reverse());
+  test('slope of the aureole follows the published formula, 2.2 ln(0.52·0.1)·0.1^0.43 − 0.1 = −2.517 at χ 0.1', () => {
+    expect(buieGamma(0.1)).toBeCloseTo(-2.517, 2);
+  });
+
+  test.each([0.02, 0.05, 0.1, 0.2, 0.3])('the corrected χ makes the published profile carry the asked circumsolar ratio %f', (csr) => {
+    // Disc cos(0.326 θ)/cos(0.308 θ) to 4.65 mrad, aureole e^κ θ^γ to 43.6 mrad, κ = 0.9 ln(13.5 χ) χ^−0.3.
+    const chi = buieChi(csr);
+    const kappa = 0.9 * Math.log(13.5 * chi) * chi ** -0.3;
+    const integral = (from: number, to: number, profile: (mrad: number) => number): number => {
+      const step = (to - from) / 4000;
+      return Array.from({ length: 4000 }, (_, i) => from + (i + 0.5) * step).reduce((sum, r) => sum + profile(r) * r * step, 0);
+    };
+    const disc = integral(0, 4.65, (r) => Math.cos(0.326 * r) / Math.cos(0.308 * r));
+    const aureole = integral(4.65, 43.6, (r) => Math.exp(kappa) * r ** buieGamma(chi));
+    expect(Math.abs(aureole / (disc + aureole) - csr)).toBeLessThan(0.01);
   });
 });
