@@ -5,7 +5,10 @@ import { plainText, riskDueDays, risks } from './incident.ts';
 import type { Risk } from './incident.ts';
 
 const required = (max: number, sentence: string) => plainText(max).pipe(z.string().min(1, sentence));
-const day = z.iso.date('Give the day as year, month and day, such as 2026-07-24.');
+const daySentence = 'Give the day as year, month and day, such as 2026-07-24.';
+const day = z.iso.date(daySentence);
+/** An empty field is no day. */
+const dayOrNone = z.union([z.literal('').transform(() => null), day], daySentence).default(null);
 const person = z.uuid('Choose a person from the list.');
 const tick = z.literal('on').optional().transform((value) => value === 'on');
 
@@ -23,13 +26,13 @@ export const actionFormSchema = z
     ownerId: person,
     verifierId: person,
     /** Left empty: the default of the risk. */
-    dueOn: z.union([z.literal('').transform(() => null), day]).default(null),
+    dueOn: dayOrNone,
     risk: z.enum(risks, 'Choose the risk if nothing is done.'),
     cost: z
-      .union([z.literal('').transform(() => null), z.string().regex(/^\d{1,12}$/, 'Give the cost as whole units, digits only.').transform(Number)])
+      .union([z.literal('').transform(() => null), z.string().regex(/^\d{1,12}$/).transform(Number)], 'Give the cost as whole units, digits only.')
       .default(null),
     costCurrency: z
-      .union([z.literal('').transform(() => null), z.string().trim().toUpperCase().regex(/^[A-Z]{3}$/, 'Give the currency as three letters, such as GBP.')])
+      .union([z.literal('').transform(() => null), z.string().trim().toUpperCase().regex(/^[A-Z]{3}$/)], 'Give the currency as three letters, such as GBP.')
       .default(null),
   })
   .superRefine((form, context) => {
@@ -49,7 +52,7 @@ export const reassignSchema = z
 export const verifySchema = z.object({
   note: required(4_000, 'Say what you checked, and how.'),
   /** Left empty: the first day of return. */
-  effectCheckOn: z.union([z.literal('').transform(() => null), day]).default(null),
+  effectCheckOn: dayOrNone,
 });
 export const effectSchema = z.object({
   effective: z.enum(['effective', 'not-effective'], 'Say whether it works.'),

@@ -81,6 +81,18 @@ const markSchema = z.strictObject({
   normalElevationDeg: elevation.optional(),
 });
 
+const markCoordinatesSchema = z.strictObject({
+  eastM: z.number().min(-1000).max(1000),
+  northM: z.number().min(-1000).max(1000),
+  upM: z.number().min(-1000).max(1000),
+  sigmaM: z.number().min(0).max(1000),
+  lengthMm: z.number().min(0).max(1_000_000).optional(),
+  widthMm: z.number().min(0).max(1_000_000).optional(),
+  trailHeadingDeg: azimuth.optional(),
+  normalAzimuthDeg: azimuth.optional(),
+  normalElevationDeg: elevation.optional(),
+});
+
 const targetSchema = z.strictObject({
   materialId: z.enum([...targetMaterials.keys()]),
   solarAbsorptance: z.number().min(0).max(1).optional(),
@@ -96,6 +108,7 @@ export const reconstructionSchema = z.strictObject({
   optic: opticSchema.optional(),
   opticSigmaRel: z.number().min(0).max(1).optional(),
   mark: markSchema.optional(),
+  markCoordinates: markCoordinatesSchema.optional(),
   target: targetSchema.optional(),
   recurrenceFromUtc: instant.optional(),
   recurrenceToUtc: instant.optional(),

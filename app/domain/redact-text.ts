@@ -117,13 +117,13 @@ function nearHeldCoordinates(folded: FoldedText, held: HeldWords['coordinates'])
     const next = numbers[index + 1];
     return held.flatMap(({ latitudeDeg, longitudeDeg }) => {
       const alone = number.decimals >= 3 && (isNear(number.size, latitudeDeg, number.decimals) || isNear(number.size, longitudeDeg, number.decimals));
-      if (alone) return [hitAt(folded, number.start, number.end, 'exact-place', 'coordinates')];
+      if (alone) return [hitAt(folded, number.start, number.end, 'exact-place', 'held-coordinates')];
       const close = next !== undefined && next.start - number.end <= 24;
       const pair =
         close &&
         ((isNear(number.size, latitudeDeg, number.decimals) && isNear(next.size, longitudeDeg, next.decimals)) ||
           (isNear(number.size, longitudeDeg, number.decimals) && isNear(next.size, latitudeDeg, next.decimals)));
-      return pair ? [hitAt(folded, number.start, next.end, 'exact-place', 'coordinates')] : [];
+      return pair ? [hitAt(folded, number.start, next.end, 'exact-place', 'held-coordinates')] : [];
     });
   });
 }

@@ -156,7 +156,7 @@ export function runView(input: ReconstructionInput, result: ReconstructionResult
     dayLabel: formatIsoDay(day).replace(/ \d{4}$/u, ''),
     dayPath: pathOfDay(input, day),
     references: referencePaths(input),
-    skyline: input.skyline?.points ?? [],
+    skyline: namedOnce(input.skyline?.points ?? []),
     required: requiredSun(input, result),
     opening: input.opening ? { fromAzimuthDeg: input.opening.azimuthDeg - input.opening.halfWidthDeg, toAzimuthDeg: input.opening.azimuthDeg + input.opening.halfWidthDeg } : null,
     irradiance: irradianceOf(input, result, card, day),
@@ -168,6 +168,16 @@ export function runView(input: ReconstructionInput, result: ReconstructionResult
     markDistanceM: input.mark?.distanceM ?? null,
     result: { ...rest, focus: focus ? { ...focus, traced: traced ? withoutMap(traced) : null } : null },
   };
+}
+
+/** A building surveyed at several corners is named at the first of them. */
+function namedOnce(points: RunView['skyline']): RunView['skyline'] {
+  const said = new Set<string>();
+  return points.map(({ azimuthDeg, elevationDeg, name }) => {
+    if (!name || said.has(name)) return { azimuthDeg, elevationDeg };
+    said.add(name);
+    return { azimuthDeg, elevationDeg, name };
+  });
 }
 
 function withoutMap({ map: _map, ...figures }: NonNullable<FocusResult['traced']>): TracedView {

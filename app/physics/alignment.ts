@@ -1,4 +1,4 @@
-import type { MarkInput } from './model.ts';
+import type { MarkCoordinatesInput, MarkInput } from './model.ts';
 import type { Beam, FocusModel } from '#app/physics/optics/closed-form/beam.ts';
 import { airlessElevationDeg } from '#app/physics/sun/refraction.ts';
 import { declinationOf, type Observer } from '#app/physics/sun/solar-position.ts';
@@ -21,6 +21,23 @@ export interface Mark {
   readonly trailHeadingDeg: number | null;
   /** Outward normal of the target's surface; the surface faces the optic where it was not recorded. */
   readonly normal: Vector;
+}
+
+/** Bearing, elevation and distance of a mark that was surveyed by coordinates, with its uncertainty carried over. */
+export function markFromCoordinates(given: MarkCoordinatesInput): MarkInput {
+  const { eastM, northM, upM, sigmaM, ...rest } = given;
+  const position: Vector = [eastM, northM, upM];
+  const distanceM = lengthOf(position);
+  if (distanceM < 0.001) throw new RangeError('markCoordinates lie in the optic’s origin; the mark must be at least 0.001 m from it.');
+  return {
+    ...rest,
+    bearingDeg: azimuthOf(position),
+    bearingSigmaDeg: Math.atan2(sigmaM, Math.hypot(eastM, northM)) / degree,
+    elevationDeg: elevationOf(position),
+    elevationSigmaDeg: Math.atan2(sigmaM, distanceM) / degree,
+    distanceM,
+    distanceSigmaM: sigmaM,
+  };
 }
 
 /** @param startsAt Where the chief ray starts, from the origin of the survey. [m] */

@@ -86,6 +86,15 @@ export interface MarkInput {
   readonly normalElevationDeg?: number;
 }
 
+/** Position of the mark by coordinates from the optic's origin, instead of bearing, elevation and distance. */
+export interface MarkCoordinatesInput extends Pick<MarkInput, 'lengthMm' | 'widthMm' | 'trailHeadingDeg' | 'normalAzimuthDeg' | 'normalElevationDeg'> {
+  readonly eastM: number;
+  readonly northM: number;
+  readonly upM: number;
+  /** One sigma of each coordinate. [m] */
+  readonly sigmaM: number;
+}
+
 export interface TargetInput {
   /** Id of a row of `heating/target-materials.ts`. */
   readonly materialId: string;
@@ -105,6 +114,8 @@ export interface ReconstructionInput {
   /** Relative one-sigma of the optic's focal length or radius. Left out: 0.02 measured, 0.30 type default. */
   readonly opticSigmaRel?: number;
   readonly mark?: MarkInput;
+  /** Given instead of `mark`, never beside it. */
+  readonly markCoordinates?: MarkCoordinatesInput;
   readonly target?: TargetInput;
   /** Span for which recurrence is listed, at most five years; left out: the twelve months after the window. */
   readonly recurrenceFromUtc?: string;

@@ -199,10 +199,11 @@ export function samplePlan(plan: SamplingPlan, count: number, seed: number): Sam
     if (state.axialOk && state.lateralM <= plan.lateralToleranceM) aligned++;
   }
   const middle = count >> 1;
+  const nominal = stateFor(plan, () => 0).fluxKwm2;
   const tornado = inputNames.map((input, d) => {
     const minus = stateFor(plan, (index) => (index === d ? -1 : 0)).fluxKwm2;
     const plus = stateFor(plan, (index) => (index === d ? 1 : 0)).fluxKwm2;
-    return { input, lowKwm2: Math.min(minus, plus), highKwm2: Math.max(minus, plus) };
+    return { input, lowKwm2: Math.min(minus, plus, nominal), highKwm2: Math.max(minus, plus, nominal) };
   });
   tornado.sort((a, b) => b.highKwm2 - b.lowKwm2 - (a.highKwm2 - a.lowKwm2));
   return {

@@ -1,6 +1,6 @@
 import { and, asc, desc, eq, inArray, isNotNull, isNull, sql } from 'drizzle-orm';
 import type { DbOrTx } from '#db/client.server.ts';
-import { caseNotes, cases, correctiveActions, findings, hypotheses, injuries, involvements, logEntries, organisations, photos, reconstructions, scenes, sites, sunReturns, users } from '#db/schema/all.ts';
+import { caseNotes, correctiveActions, findings, hypotheses, injuries, involvements, logEntries, organisations, photos, reconstructions, scenes, sites, sunReturns, users } from '#db/schema/all.ts';
 import type { ActionBeforeRedaction, CaseBeforeRedaction, FindingBeforeRedaction, PhotoBeforeRedaction } from '#app/domain/case-before-redaction.ts';
 import type { CaseState } from '#app/domain/case-state.ts';
 import type { Actor } from '#app/domain/roles.ts';

@@ -1,10 +1,10 @@
-import { and, asc, count, desc, eq, inArray, max, ne, or, sql } from 'drizzle-orm';
+import { and, asc, desc, eq, inArray, max, ne, or, sql } from 'drizzle-orm';
 import type { SQL } from 'drizzle-orm';
 import type { DbOrTx, Transaction } from '#db/client.server.ts';
 import { cases, grants, organisations, releaseOpenings, releases, users } from '#db/schema/all.ts';
 import { caseRules } from '#app/domain/permissions.ts';
 import type { Audience, Decisions } from '#app/domain/redaction.ts';
-import type { RedactedText, ReleasedCase, WithheldCounts } from '#app/domain/released-case.ts';
+import type { ReleasedCase, WithheldCounts } from '#app/domain/released-case.ts';
 import type { Actor, Role } from '#app/domain/roles.ts';
 import type { ReleaseFile } from '#db/schema/releases.ts';
 import { visibleTo } from './scope.server.ts';
@@ -151,15 +151,6 @@ export function listOpenings(db: DbOrTx, params: { readonly actor: Actor; readon
     .where(and(keptBy(params.actor), eq(releases.id, params.releaseId)))
     .orderBy(desc(releaseOpenings.createdAt))
     .limit(100);
-}
-
-/** Words of a title that is stored redacted. */
-export type StoredTitle = RedactedText;
-
-/** How many releases of the case there are, for the page that prepares the next one. */
-export async function countReleases(db: DbOrTx, caseId: string): Promise<number> {
-  const [row] = await db.select({ made: count() }).from(releases).where(eq(releases.caseId, caseId));
-  return row?.made ?? 0;
 }
 
 /** Decisions of the newest release for the same reader, to begin the next one with. */

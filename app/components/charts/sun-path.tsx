@@ -100,7 +100,7 @@ function Required({ view, x, y, width, inner }: LayerProps & { readonly width: n
   const [cx, cy] = [x(need.az), y(need.alt)];
   const rx = Math.max(5, Math.abs(x(need.az + need.azSigma) - cx));
   const ry = Math.max(5, Math.abs(y(need.alt + need.altSigma) - cy));
-  const short = `mark needs ${need.az.toFixed(1)}° ±${need.azSigma}`;
+  const short = `mark needs ${(((need.az % 360) + 360) % 360).toFixed(1)}° ±${need.azSigma}`;
   const words = width < 400 ? short : `${short}, ${need.alt.toFixed(1)}° ±${need.altSigma}`;
   const half = textWidthPx(words, 12) / 2;
   const textX = Math.min(inner.x2 - half, Math.max(inner.x1 + half, cx));

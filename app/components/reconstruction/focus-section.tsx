@@ -12,46 +12,53 @@ type Focus = NonNullable<RunView['result']['focus']>;
 export interface FocusSectionProps {
   readonly focus: Focus;
   readonly rings: RunView['rings'];
-  readonly markDistanceM: number | null;
   readonly clock: string;
 }
 
 const bandWords = (band: Band): string => `${plainNumber(band.low)} to ${plainNumber(band.high)}`;
 const lengthWords = (metres: number): string => (metres < 2 ? `${plainNumber(metres * 1000)} mm` : `${plainNumber(metres)} m`);
 
-/** Flux on named discs in a named plane, the beam along its way, and how long it rests on a point. */
-export function FocusSection({ focus, rings, markDistanceM, clock }: FocusSectionProps) {
+/** The beam along its way: width of spot or line, where it is strong, and where the mark lies. */
+export function BeamFigure({ focus, markDistanceM }: Pick<FocusSectionProps, 'focus'> & { readonly markDistanceM: number | null }) {
+  return (
+    <SpotDistanceFigure
+      figure="Fig. 2"
+      title={focus.focusKind === 'line' ? 'Line width against distance, mm' : 'Spot size against distance, mm'}
+      points={focus.spotAtDistance}
+      dangerZone={focus.dangerZone}
+      markDistanceM={markDistanceM}
+      focusKind={focus.focusKind}
+      note="Flux in the table: mean over a 5 mm disc on the hot spot at that distance, across the chief ray, likely sky."
+    />
+  );
+}
+
+/** Flux on named discs in a named plane, and how long it rests on a point. */
+export function FocusSection({ focus, rings, clock }: FocusSectionProps) {
   const line = focus.focusKind === 'line';
   const centre = focus.discs.some((disc) => disc.centre === 'mark') ? 'mark' : 'hot spot';
   const method = focus.traced ? `${focus.traced.rays.toLocaleString('en-GB')} rays traced` : 'Closed form, no rays traced';
   return (
     <div className="grid gap-x-8 gap-y-6 [&>*]:min-w-0 tablet:grid-cols-2">
+      <div className="space-y-6">
       <FluxDiscsFigure
-        figure="Fig. 2"
+        figure="Fig. 3"
         title={`Flux at ${clock}, kW/m²`}
         discs={focus.discs.filter((disc) => disc.centre === 'hot spot')}
         rings={rings}
         focusKind={focus.focusKind}
         note={`Plane: ${focus.plane}. Picture centred on the hot spot. ${method}. ${rings.length > 0 ? 'Rings: circles as large as the area over 1, 3, 10, 30, 100 and 300 kW/m², as far as the map holds them.' : ''}`}
       />
-      <section aria-label="Focus in numbers" className="border-t-[1.5px] border-ink pt-1.5">
-        <h3 className="pb-2 text-body font-semibold">Focus in numbers</h3>
-        <DiscTable focus={focus} centre={centre} />
-        <FactList facts={focusFacts(focus, line)} />
-      </section>
-      <SpotDistanceFigure
-        figure="Fig. 3"
-        title={line ? 'Line width against distance, mm' : 'Spot size against distance, mm'}
-        points={focus.spotAtDistance}
-        dangerZone={focus.dangerZone}
-        markDistanceM={markDistanceM}
-        focusKind={focus.focusKind}
-        note="Flux in the table: mean over a 5 mm disc on the hot spot at that distance, across the chief ray, likely sky."
-      />
       <section aria-label="Time on one point" className="border-t-[1.5px] border-ink pt-1.5">
         <h3 className="pb-2 text-body font-semibold">Time on one point</h3>
         {focus.dwellS.length > 0 ? <DwellTable focus={focus} /> : <p className="text-second">The motion of the spot over the mark could not be worked out.</p>}
         {line ? <p className="pt-2 font-semibold">A line focus makes a long mark at once: the length of the mark carries no time.</p> : null}
+      </section>
+      </div>
+      <section aria-label="Focus in numbers" className="border-t-[1.5px] border-ink pt-1.5">
+        <h3 className="pb-2 text-body font-semibold">Focus in numbers</h3>
+        <DiscTable focus={focus} centre={centre} />
+        <FactList facts={focusFacts(focus, line)} />
       </section>
     </div>
   );

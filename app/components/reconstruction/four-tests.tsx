@@ -25,12 +25,23 @@ export function FourTests({ tests }: { readonly tests: readonly TestSummary[] })
               <span role="cell" className="max-tablet:justify-self-end"><TestMark result={test.result} /></span>
               <span role="cell" className="max-tablet:col-span-2">{test.sentence}</span>
               <span role="cell" className="max-tablet:col-span-2">
-                {test.margin ? <MarginRuler {...test.margin} log={test.test === 'energy'} label={`${testLabels[test.test]} margin`} /> : <span className="text-small text-second">no margin in numbers</span>}
+                {test.margin ? <Margin test={test} margin={test.margin} /> : <span className="text-small text-second">no margin in numbers</span>}
               </span>
             </div>
           ))}
         </div>
       </div>
     </section>
+  );
+}
+
+/** The ruler carries the unit alone; what it measures stands under it. */
+function Margin({ test, margin }: { readonly test: TestSummary; readonly margin: NonNullable<TestSummary['margin']> }) {
+  const [unit = margin.unit, ...rest] = margin.unit.split(' ');
+  return (
+    <>
+      <MarginRuler {...margin} unit={unit} log={test.test === 'energy'} label={`${testLabels[test.test]}, ${rest.join(' ')}`} />
+      {rest.length > 0 ? <span className="block text-axis text-second">{unit} {rest.join(' ')}</span> : null}
+    </>
   );
 }

@@ -1,9 +1,9 @@
 import { plainNumber } from '#app/components/charts/number-table.tsx';
 import { TemperatureCurveFigure } from '#app/components/charts/temperature-curve.tsx';
-import { Cell, DataTable, HeadCell, Row, TableHead } from '#app/components/ui/data-table.tsx';
 import { outcomeLabels } from '#app/domain/run-words.ts';
 import { targetMaterialLabels, targetMaterials } from '#app/domain/scene.ts';
-import type { HeatingResult } from '#app/physics/model.ts';
+import type { HeatingResult, TargetOutcome } from '#app/physics/model.ts';
+import { StackTable } from './stack-table.tsx';
 
 /** "curtain fabric", or the engine's own id where the register has no word for it. */
 function materialWords(id: string): string {
@@ -29,25 +29,29 @@ const secondsWords = (value: number): string => (value >= 5400 ? `${plainNumber(
 export function OutcomeTable({ heating }: { readonly heating: HeatingResult }) {
   if (heating.outcomes.length === 0) return <p className="text-second">Nothing is on file for this material.</p>;
   return (
-    <DataTable caption="What the target may do">
-      <TableHead>
-        <HeadCell>Outcome</HeadCell>
-        <HeadCell>Answer</HeadCell>
-        <HeadCell numeric>Steady sun needed</HeadCell>
-        <HeadCell>Why</HeadCell>
-        <HeadCell>Basis and source</HeadCell>
-      </TableHead>
-      <tbody>
-        {heating.outcomes.map((outcome) => (
-          <Row key={outcome.id}>
-            <Cell heading>{outcomeLabels[outcome.id]}</Cell>
-            <Cell>{outcome.answer === 'cannot tell' ? "can't tell" : outcome.answer}</Cell>
-            <Cell numeric note={outcome.timeS ? `${secondsWords(outcome.timeS.low)} to ${secondsWords(outcome.timeS.high)}` : undefined}>{outcome.timeS ? secondsWords(outcome.timeS.mid) : 'none'}</Cell>
-            <Cell className="min-w-48">{outcome.sentence}</Cell>
-            <Cell className="min-w-48" note={`${outcome.source.text}${outcome.source.verified ? '' : '; unverified'}`}>{outcome.basis}{outcome.sampleSizeMm === null ? '' : `; samples of ${plainNumber(outcome.sampleSizeMm)} mm`}</Cell>
-          </Row>
-        ))}
-      </tbody>
-    </DataTable>
+    <StackTable
+      caption="Outcomes for the target"
+      heads={['Outcome', 'Answer', 'Steady sun needed', 'Why', 'Basis and source']}
+      columns="tablet:grid-cols-[6rem_5.5rem_7rem_minmax(0,1fr)_minmax(0,1fr)]"
+      rows={heating.outcomes.map((outcome) => ({
+        key: outcome.id,
+        cells: [
+          outcomeLabels[outcome.id],
+          outcome.answer === 'cannot tell' ? "can't tell" : outcome.answer,
+          <Seconds key="time" outcome={outcome} />,
+          outcome.sentence,
+          <Basis key="basis" outcome={outcome} />,
+        ],
+      }))}
+    />
   );
+}
+
+function Seconds({ outcome }: { readonly outcome: TargetOutcome }) {
+  if (!outcome.timeS) return 'no figure';
+  return <>{secondsWords(outcome.timeS.mid)}<span className="block text-axis text-second">{secondsWords(outcome.timeS.low)} to {secondsWords(outcome.timeS.high)}</span></>;
+}
+
+function Basis({ outcome }: { readonly outcome: TargetOutcome }) {
+  return <>{outcome.basis}{outcome.sampleSizeMm === null ? '' : `; samples of ${plainNumber(outcome.sampleSizeMm)} mm`}<span className="block text-axis text-second">{outcome.source.text}{outcome.source.verified ? '' : '; unverified'}</span></>;
 }

@@ -3,6 +3,7 @@ import { YearPlateFigure } from '#app/components/charts/year-plate.tsx';
 import { Cell, DataTable, HeadCell, Row, TableHead } from '#app/components/ui/data-table.tsx';
 import type { ReturnBandView } from '#app/domain/run-returns.ts';
 import type { RunView } from '#app/domain/run-view.ts';
+import { StackTable } from './stack-table.tsx';
 
 const whenWords = { past: 'past', window: 'holds the window' } as const;
 
@@ -26,26 +27,22 @@ export function ReturnsSection({ view, zone }: { readonly view: RunView; readonl
 function BandTable({ bands, zone }: { readonly bands: readonly ReturnBandView[]; readonly zone: string }) {
   return (
     <div>
-      <DataTable caption={`Days of return, clock of ${zone.replaceAll('_', ' ')}`} captionShown>
-        <TableHead>
-          <HeadCell>Days</HeadCell>
-          <HeadCell>Clock</HeadCell>
-          <HeadCell>Closest</HeadCell>
-          <HeadCell numeric>Minutes in all</HeadCell>
-          <HeadCell> </HeadCell>
-        </TableHead>
-        <tbody>
-          {bands.map((band) => (
-            <Row key={band.bestWords} tight className={band.when === 'past' ? 'text-second' : ''}>
-              <Cell heading note={`${band.dayCount} ${band.dayCount === 1 ? 'day' : 'days'}`}>{band.daysWords}</Cell>
-              <Cell>{band.clockWords}</Cell>
-              <Cell>{band.bestWords}</Cell>
-              <Cell numeric>{band.minutes}</Cell>
-              <Cell>{band.when ? whenWords[band.when] : ''}</Cell>
-            </Row>
-          ))}
-        </tbody>
-      </DataTable>
+      <p className="pb-1 text-small text-second">Clock of {zone.replaceAll('_', ' ')}</p>
+      <StackTable
+        caption="Days of return"
+        heads={['Days', 'Clock', 'Closest', 'In all', 'Against today']}
+        columns="tablet:grid-cols-[minmax(0,1.6fr)_minmax(0,1fr)_minmax(0,1.2fr)_6rem_9rem]"
+        rows={bands.map((band) => ({
+          key: band.bestWords,
+          cells: [
+            <Days key="days" band={band} />,
+            band.clockWords,
+            band.bestWords,
+            `${band.minutes} min`,
+            band.when ? whenWords[band.when] : 'to come',
+          ],
+        }))}
+      />
       <details>
         <summary className="inline-flex min-h-8 items-center text-small underline decoration-ember decoration-2 underline-offset-4">Every day</summary>
         <DataTable caption={`Every day of return, clock of ${zone.replaceAll('_', ' ')}`}>
@@ -73,4 +70,8 @@ function BandTable({ bands, zone }: { readonly bands: readonly ReturnBandView[];
       </details>
     </div>
   );
+}
+
+function Days({ band }: { readonly band: ReturnBandView }) {
+  return <>{band.daysWords}<span className="block text-axis font-normal text-second">{band.dayCount} {band.dayCount === 1 ? 'day' : 'days'}</span></>;
 }

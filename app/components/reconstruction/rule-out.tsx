@@ -1,11 +1,12 @@
 import { plainNumber } from '#app/components/charts/number-table.tsx';
-import { Cell, DataTable, HeadCell, Row, TableHead } from '#app/components/ui/data-table.tsx';
 import { SectionHeading } from '#app/components/ui/page-title.tsx';
 import { testLabels } from '#app/domain/hypothesis.ts';
 import { checkAnswer, checkLabel } from '#app/domain/run-words.ts';
 import type { Check } from '#app/physics/model.ts';
+import { StackTable } from './stack-table.tsx';
 
-const marginWords = (check: Check): string => (check.margin === null ? 'no figure' : `${plainNumber(check.margin)} ${check.unit}`);
+const withUnit = (value: number, unit: string): string => `${plainNumber(value)}${unit === '°' ? '' : ' '}${unit}`;
+const marginWords = (check: Check): string => (check.margin === null ? 'no figure' : withUnit(check.margin, check.unit));
 
 /** What speaks against the hypothesis, what could still, and by how much each value would have to be wrong. */
 export function RuleOut({ checks }: { readonly checks: readonly Check[] }) {
@@ -15,7 +16,7 @@ export function RuleOut({ checks }: { readonly checks: readonly Check[] }) {
   return (
     <section aria-labelledby="rule-out">
       <SectionHeading id="rule-out">What would rule this out?</SectionHeading>
-      {against.length > 0 ? <SentenceList heading="Speaks against it now" lines={against.map((check) => ({ key: check.id, words: check.sentence, note: check.margin === null ? checkLabel(check) : `${checkLabel(check)}, short by ${plainNumber(Math.abs(check.margin))} ${check.unit}` }))} /> : null}
+      {against.length > 0 ? <SentenceList heading="Speaks against it now" lines={against.map((check) => ({ key: check.id, words: check.sentence, note: check.margin === null ? checkLabel(check) : `${checkLabel(check)}, short by ${withUnit(Math.abs(check.margin), check.unit)}` }))} /> : null}
       {open.length > 0 ? <SentenceList heading="Could still, once it is known" lines={open.map((check) => ({ key: check.id, words: check.sentence, note: checkLabel(check) }))} /> : null}
       {passed.length > 0 ? <SentenceList heading="Would, if a value is wrong by more than its margin" lines={passed.map((check) => ({ key: check.id, words: `${checkLabel(check)}: more than ${marginWords(check)}`, note: check.sentence }))} /> : null}
     </section>
@@ -40,24 +41,20 @@ export function CheckTable({ checks }: { readonly checks: readonly Check[] }) {
   return (
     <section aria-labelledby="checks">
       <SectionHeading id="checks" note="a check refutes only with the most favourable values">Contradiction checks</SectionHeading>
-      <DataTable caption="Contradiction checks">
-        <TableHead>
-          <HeadCell>Check</HeadCell>
-          <HeadCell>Answer</HeadCell>
-          <HeadCell numeric>Margin</HeadCell>
-          <HeadCell>In words</HeadCell>
-        </TableHead>
-        <tbody>
-          {checks.map((check) => (
-            <Row key={check.id} tight>
-              <Cell heading note={testLabels[check.test]}>{checkLabel(check)}</Cell>
-              <Cell className={check.passed === false ? 'font-semibold' : ''}>{checkAnswer(check.passed)}</Cell>
-              <Cell numeric>{marginWords(check)}</Cell>
-              <Cell className="min-w-56">{check.sentence}</Cell>
-            </Row>
-          ))}
-        </tbody>
-      </DataTable>
+      <StackTable
+        caption="Checks with their margins"
+        heads={['Check', 'Answer', 'Margin', 'In words']}
+        columns="tablet:grid-cols-[14rem_9rem_7rem_minmax(0,1fr)]"
+        rows={checks.map((check) => ({
+          key: check.id,
+          strong: check.passed === false,
+          cells: [<Named key="name" check={check} />, checkAnswer(check.passed), marginWords(check), check.sentence],
+        }))}
+      />
     </section>
   );
+}
+
+function Named({ check }: { readonly check: Check }) {
+  return <>{checkLabel(check)}<span className="block text-axis font-normal text-second">{testLabels[check.test]}</span></>;
 }

@@ -6,7 +6,7 @@ import { Caution } from '#app/components/ui/caution.tsx';
 import { SectionHeading } from '#app/components/ui/page-title.tsx';
 import type { RunPageView } from '#app/domain/run-page.ts';
 import type { RunView } from '#app/domain/run-view.ts';
-import { FocusSection } from './focus-section.tsx';
+import { BeamFigure, FocusSection } from './focus-section.tsx';
 import { FourTests } from './four-tests.tsx';
 import { HeatFigure, OutcomeTable } from './heat-section.tsx';
 import { InputsColumn } from './inputs-column.tsx';
@@ -43,9 +43,12 @@ export function RunBody({ page, view, label, words }: RunBodyProps) {
         }
       >
         <div className="space-y-8">
-          <SunSection view={view} zone={page.zone} cursorUtc={cursorUtc} />
+          <div className="grid gap-x-8 gap-y-6 [&>*]:min-w-0 tablet:grid-cols-2">
+            <SunSection view={view} zone={page.zone} cursorUtc={cursorUtc} />
+            {result.focus ? <BeamFigure focus={result.focus} markDistanceM={view.markDistanceM} /> : null}
+          </div>
           <FourTests tests={result.tests} />
-          {result.focus && clock ? <FocusSection focus={result.focus} rings={view.rings} markDistanceM={view.markDistanceM} clock={clock} /> : null}
+          {result.focus && clock ? <FocusSection focus={result.focus} rings={view.rings} clock={clock} /> : null}
           <div className="grid gap-x-8 gap-y-6 [&>*]:min-w-0 tablet:grid-cols-2">
             <IrradianceSection view={view} zone={page.zone} clock={clock} />
             {result.heating ? <HeatFigure heating={result.heating} /> : null}

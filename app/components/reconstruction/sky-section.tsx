@@ -24,9 +24,9 @@ export function SunSection({ view, zone, cursorUtc }: SunSectionProps) {
       references={view.references}
       skyline={view.skyline}
       required={view.required}
-      opening={view.opening ? { ...view.opening, name: 'seen through the opening' } : null}
+      opening={view.opening}
       cursorUtc={cursorUtc}
-      note={`Azimuth from true north, apparent altitude.${several} ${view.skyline.length === 0 ? 'No skyline was measured: nothing is said about what stands in front of the sun.' : ''}${view.required ? ' Ellipse: where the sun must stand for the focus to fall on the mark, with the ± of the survey.' : ''}`}
+      note={`Azimuth from true north, apparent altitude.${several} ${view.skyline.length === 0 ? 'No skyline was measured: nothing is said about what stands in front of the sun.' : ''}${view.opening ? ' Blue wash between dashes: seen through the opening.' : ''}${view.required ? ' Ellipse: where the sun must stand for the focus to fall on the mark, with the ± of the survey.' : ''}`}
     />
   );
 }
@@ -59,7 +59,7 @@ export function IrradianceSection({ view, zone, clock }: { readonly view: RunVie
         likely={irradiance.likely}
         {...(irradiance.measured.length > 0 && irradiance.measuredName ? { measured: irradiance.measured, measuredName: irradiance.measuredName } : {})}
         sunlit={irradiance.sunlit}
-        note={`Square to the sun, before any glass. Dashed: clean-air bound. Thin: likely clear sky of the air class. No curve below 3°. ${irradiance.measured.length === 0 ? 'No measured series was entered for this time.' : ''}`}
+        note={`Square to the sun, before any glass. Dashed: clean-air bound. Thin: likely clear sky of the air class, below 6° the lower of two models; none below 3°. ${irradiance.measured.length === 0 ? 'No measured series was entered for this time.' : ''}`}
       />
       {dni && clock ? (
         <div className="pt-2">

@@ -49,7 +49,7 @@ function StoredTile({ photo, clientId }: { readonly photo: StoredPhoto; readonly
     <li className="min-w-0">
       <div className="flex aspect-[3/2] items-center justify-center overflow-hidden bg-wash">
         {photo.state === 'ready'
-          ? <img src={`/photos/${photo.id}/thumbnail?report=${clientId}`} alt={`Photo ${photo.fileName}`} className="h-full w-full object-cover" />
+          ? <img src={`/photos/${photo.id}/thumbnail?report=${clientId}`} alt={photo.fileName} className="h-full w-full object-cover" />
           : <span className="px-2 text-center text-axis text-second">{photo.state === 'failed' ? 'kept; cannot be shown' : 'being prepared'}</span>}
       </div>
       <p className="truncate pt-1 text-axis text-second">{photo.fileName}</p>
@@ -63,7 +63,7 @@ function StoredTile({ photo, clientId }: { readonly photo: StoredPhoto; readonly
 function UploadTile({ upload, number, onTakeOff }: { readonly upload: PhotoUpload; readonly number: number; readonly onTakeOff: () => void }) {
   return (
     <li className="min-w-0">
-      <img src={upload.previewUrl} alt={`Photo ${number}`} className="aspect-[3/2] w-full bg-wash object-cover" />
+      <img src={upload.previewUrl} alt={upload.file.name} className="aspect-[3/2] w-full bg-wash object-cover" />
       <p className="truncate pt-1 text-axis text-second">{upload.state === 'stored' ? 'with the team' : upload.state === 'interrupted' ? 'waits for signal' : 'on its way'}</p>
       {upload.state === 'sending' ? null : <button type="button" onClick={onTakeOff} className="min-h-6 cursor-pointer text-axis underline decoration-ember decoration-2 underline-offset-4">Take off<span className="sr-only"> photo {number}</span></button>}
     </li>

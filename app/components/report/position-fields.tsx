@@ -10,8 +10,7 @@ export interface PositionFieldsProps {
   readonly around: { readonly latitudeDeg: number; readonly longitudeDeg: number } | null;
 }
 
-const names = ['latitudeDeg', 'longitudeDeg', 'accuracyM'] as const;
-type Typed = Record<(typeof names)[number], string>;
+type Typed = Record<'latitudeDeg' | 'longitudeDeg' | 'accuracyM', string>;
 
 /** Latitude and longitude, folded away. The map is fetched when it is opened, not before: signal may be poor. */
 export function PositionFields({ field, around }: PositionFieldsProps) {

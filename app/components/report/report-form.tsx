@@ -38,7 +38,7 @@ export interface ReportFormProps {
 export function ReportForm({ address, clientId, sites, guest, state, stored, formRef, draft, sending, uploads }: ReportFormProps) {
   const hydrated = useHydrated();
   const field = reportFields(state);
-  const site = sites.find((one) => one.id === draft.siteId);
+  const site = sites.find((one) => one.id === draft.values['siteId']);
   const fill = (name: string, value: string, onlyEmpty: boolean) => {
     const input = formRef.current?.elements.namedItem(name);
     if (input instanceof HTMLInputElement && !(onlyEmpty && input.value)) input.value = value;
@@ -73,7 +73,7 @@ export function ReportForm({ address, clientId, sites, guest, state, stored, for
       <div className="pb-4"><ErrorSummary errors={state.formErrors} fields={summaryFields(field, state)} title="Not sent yet. What you typed is still here." /></div>
       <PhotoStrip field={field} clientId={clientId} stored={stored} uploads={uploads} />
       <WhereQuestion field={field} sites={sites} chosen={site} fixed={guest} onSite={startClock} />
-      <WhenQuestion field={field} state={state} zoneWords={site ? site.zone.replaceAll('_', ' ') : null} nowLocal={site?.nowLocal ?? ''} onAnswer={pinNow} />
+      <WhenQuestion field={field} state={state} site={site} values={draft.values} onAnswer={pinNow} />
       <Question number={3} answers="sighting" title="What do you see?">
         <ChoiceChips field={field('sighting')} legend={<span className="sr-only">What do you see?</span>} options={sightings.map((value) => ({ value, label: sightingLabels[value], dashed: value === 'dont-know' }))} />
         <TextArea field={field('narrative')} label="In your words" help="What, how large, which way it runs. No names, nothing about injuries." rows={3} maxLength={4000} />

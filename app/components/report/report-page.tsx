@@ -43,7 +43,7 @@ export function ReportPage({ view, problem }: { readonly view: ReportView; reado
   const uploads = usePhotoUploads(photosAddress(clientId, guestCode));
   const sending = useReportSending({ form, address, photosOnTheWay: uploads.onTheWay });
   const addressOf = useCallback((id: string) => reportAddress(id, guestCode), [guestCode]);
-  const draft = useReportDraft({ form, clientId, holderKey: view.holderKey, addressOf, mending: problem !== null, firstSiteId: problem?.typed['siteId'] ?? (view.sites.length === 1 ? (view.sites[0]?.id ?? '') : '') });
+  const draft = useReportDraft({ form, clientId, holderKey: view.holderKey, addressOf, mending: problem !== null, first: { ...(view.sites.length === 1 ? { siteId: view.sites[0]?.id ?? '' } : {}), ...problem?.typed } });
   const atForm = hydrated && draft.begun;
 
   useEffect(() => {

@@ -11,8 +11,8 @@ export interface ReportDraft {
   readonly unkept: boolean;
   readonly answered: number;
   readonly missing: string | null;
-  /** The chosen site, empty while there is none. */
-  readonly siteId: string;
+  /** What the form holds, by field name. */
+  readonly values: Readonly<Record<string, string>>;
   /** Past the make-safe card. */
   readonly begun: boolean;
   readonly begin: () => void;
@@ -29,25 +29,24 @@ interface Params {
   readonly addressOf: (clientId: string) => string;
   /** The server has sent the form back to be mended: its words are newer than the kept ones. */
   readonly mending: boolean;
-  /** Chosen before anything is kept. */
-  readonly firstSiteId: string;
+  /** What the server filled in. */
+  readonly first: Readonly<Record<string, string>>;
 }
 
 const clock = (ms: number) => new Date(ms).toLocaleTimeString('en-GB', { hour: '2-digit', minute: '2-digit' });
 
 /** Keeps the words of the form on this device with every change, and puts them back after a reload. */
-export function useReportDraft({ form, clientId, holderKey, addressOf, mending, firstSiteId }: Params): ReportDraft {
+export function useReportDraft({ form, clientId, holderKey, addressOf, mending, first }: Params): ReportDraft {
   const navigate = useNavigate();
   const [savedAt, setSavedAt] = useState<string | null>(null);
   const [unkept, setUnkept] = useState(false);
   const [begun, setBegun] = useState(mending);
-  const [answers, setAnswers] = useState<{ answered: number; missing: string | null; siteId: string }>({ answered: 0, missing: null, siteId: firstSiteId });
+  const [values, setValues] = useState<Readonly<Record<string, string>>>(first);
   const restored = useRef(false);
 
   const count = useCallback(() => {
     if (!form.current) return;
-    const values = formValues(form.current);
-    setAnswers({ ...answersIn((name) => values[name] ?? ''), siteId: values['siteId'] ?? '' });
+    setValues(formValues(form.current));
   }, [form]);
 
   const write = useCallback(
@@ -83,7 +82,8 @@ export function useReportDraft({ form, clientId, holderKey, addressOf, mending, 
   return {
     savedAt,
     unkept,
-    ...answers,
+    ...answersIn((name) => values[name] ?? ''),
+    values,
     begun: begun || mending,
     begin: () => {
       setBegun(true);

@@ -2,17 +2,20 @@ import { ChoiceChips } from '#app/components/forms/choice-chips.tsx';
 import { TickBox } from '#app/components/forms/text-field.tsx';
 import { foundPrecisionLabels } from '#app/domain/incident.ts';
 import { foundAnswerLabels, foundAnswers } from '#app/domain/report-fields.ts';
+import { FoundCard } from './found-card.tsx';
+import type { FoundAnswerTyped } from './found-card.tsx';
 import { MomentField } from './moment-field.tsx';
 import { Follows, Question } from './question.tsx';
 import type { ReportField, ReportFormState } from './report-fields.ts';
+import type { SiteChoice } from './where-question.tsx';
 
 export interface WhenQuestionProps {
   readonly field: ReportField;
   readonly state: ReportFormState;
-  /** Zone of the place in words, or null while no site is chosen. */
-  readonly zoneWords: string | null;
-  /** The present on the clock of the place, to start from; empty while no site is chosen. */
-  readonly nowLocal: string;
+  /** The chosen site; its clock and daylight are those of the answer. */
+  readonly site: SiteChoice | undefined;
+  /** What the form holds at the moment. */
+  readonly values: Readonly<Record<string, string>>;
   /** Called with the answer, so that "Just now" can be pinned to the moment it was pressed. */
   readonly onAnswer?: (answer: string) => void;
 }
@@ -20,8 +23,10 @@ export interface WhenQuestionProps {
 const precisions = (['exact', 'within-15-min', 'within-1-h', 'date-only'] as const).map((value) => ({ value, label: foundPrecisionLabels[value] }));
 
 /** Second question. A range and "Don't know" are answers like any other. */
-export function WhenQuestion({ field, state, zoneWords, nowLocal, onAnswer }: WhenQuestionProps) {
-  const clock = zoneWords ? `Clock time at the place, ${zoneWords}.` : 'Clock time at the place.';
+export function WhenQuestion({ field, state, site, values, onAnswer }: WhenQuestionProps) {
+  const clock = site ? `Clock time at the place, ${site.zone.replaceAll('_', ' ')}.` : 'Clock time at the place.';
+  const nowLocal = site?.nowLocal ?? '';
+  const typed = (name: keyof FoundAnswerTyped) => values[name] ?? '';
   const moments = { field, state };
   return (
     <Question number={2} answers="foundWhen" title={<span id="found-question">When was it found?</span>}>
@@ -43,6 +48,7 @@ export function WhenQuestion({ field, state, zoneWords, nowLocal, onAnswer }: Wh
       <Follows on="not-range">
         <MomentField {...moments} name="lastSoundLocal" label="Last seen sound, if you know" help="The last time somebody saw that the mark was not there. Leave it empty if you don't know." />
       </Follows>
+      {site ? <FoundCard site={site} typed={{ foundWhen: typed('foundWhen'), foundNowAt: typed('foundNowAt'), foundLocal: typed('foundLocal'), foundFromLocal: typed('foundFromLocal'), foundToLocal: typed('foundToLocal'), lastSoundLocal: typed('lastSoundLocal') }} /> : null}
       {state.longWindowDays === null ? null : (
         <TickBox field={field('longWindowConfirmed')} value="yes" label={`It is right: between sound and found lie ${state.longWindowDays} days.`} />
       )}

@@ -4,6 +4,18 @@ import { PositionFields } from './position-fields.tsx';
 import { Question } from './question.tsx';
 import type { ReportField } from './report-fields.ts';
 
+export interface TodayAtSite {
+  /** Span of the card. */
+  readonly fromUtc: string;
+  readonly toUtc: string;
+  /** Null where the sun does not cross the horizon that day. */
+  readonly riseUtc: string | null;
+  readonly setUtc: string | null;
+  readonly polar: 'day' | 'night' | null;
+  /** "Daylight today 05:17 to 20:51." */
+  readonly words: string;
+}
+
 export interface SiteChoice {
   readonly id: string;
   readonly name: string;
@@ -11,6 +23,9 @@ export interface SiteChoice {
   readonly zone: string;
   /** The present on the clock of the site, `YYYY-MM-DDTHH:MM`. */
   readonly nowLocal: string;
+  readonly nowUtc: string;
+  /** The local day, for the card under the second question. */
+  readonly today: TodayAtSite;
   /** To about 100 m; null for guests, who are told no position. */
   readonly around: { readonly latitudeDeg: number; readonly longitudeDeg: number } | null;
 }

@@ -1,5 +1,5 @@
 import type { Assumption, OpeningInput, ReconstructionInput } from '#app/physics/model.ts';
-import { readMark, requiredSunFor, type Mark, type RequiredSun } from '#app/physics/alignment.ts';
+import { markFromCoordinates, readMark, requiredSunFor, type Mark, type RequiredSun } from '#app/physics/alignment.ts';
 import { lowestHarmfulFluxKwm2 } from '#app/physics/heating/outcomes.ts';
 import type { TargetMaterial } from '#app/physics/heating/target-material.ts';
 import { targetMaterials } from '#app/physics/heating/target-materials.data.ts';
@@ -87,12 +87,21 @@ function settleReach(input: ReconstructionInput, site: Site, model: FocusModel, 
   return reachOf(beam, mark, (clear?.boundWm2 ?? 1000) * glass, lowestHarmfulFluxKwm2(material, site.air.temperatureC));
 }
 
+/** The input with its mark by bearing, however it was surveyed. */
+function withMark(given: ReconstructionInput): ReconstructionInput {
+  const { markCoordinates, ...rest } = given;
+  if (markCoordinates === undefined) return given;
+  if (given.mark !== undefined) throw new RangeError('mark and markCoordinates disagree: give one of the two.');
+  return { ...rest, mark: markFromCoordinates(markCoordinates) };
+}
+
 /**
  * Reads and completes an input.
  *
  * @throws RangeError naming the field, its value and the allowed interval, or the two fields that contradict each other.
  */
-export function settle(input: ReconstructionInput): Setting {
+export function settle(given: ReconstructionInput): Setting {
+  const input = withMark(given);
   checkPlace(input);
   const { startMs, endMs } = readWindow(input);
   const site = settleSite(input);

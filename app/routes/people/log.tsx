@@ -1,3 +1,88 @@
-export default function Placeholder() {
-  return null;
+import { Form, href } from 'react-router';
+import type { Route } from './+types/log';
+import { db } from '#db/client.server.ts';
+import { listOrganisationLog } from '#db/queries/organisation-log.server.ts';
+import { requireActorWho } from '#app/auth/middleware.server.ts';
+import { TextInput } from '#app/components/forms/text-field.tsx';
+import { Page } from '#app/components/layout/page.tsx';
+import { AppLink } from '#app/components/ui/app-link.tsx';
+import { Button } from '#app/components/ui/button.tsx';
+import { Cell, DataTable, HeadCell, Row, TableHead } from '#app/components/ui/data-table.tsx';
+import { PageTitle } from '#app/components/ui/page-title.tsx';
+import { holdsRole } from '#app/domain/roles.ts';
+import { respond } from '#app/http/to-response.server.ts';
+
+const pageSize = 100;
+const wholeNumber = (text: string | null) => (text && /^\d{1,9}$/u.test(text) ? Number(text) : undefined);
+
+export function loader({ context, request }: Route.LoaderArgs) {
+  return respond(async () => {
+    const actor = requireActorWho(context, request, 'log:read-all');
+    const params = new URL(request.url).searchParams;
+    const filter = { event: params.get('event')?.slice(0, 80) ?? '', person: params.get('person')?.slice(0, 80) ?? '', caseNumber: params.get('case') ?? '' };
+    // The log crosses sites, so the roles must be held for all of them; an administrator reads no case content.
+    const withContent = holdsRole(actor, ['reviewer', 'privacy-lead'], null);
+    const lines = await listOrganisationLog(db, {
+      organisationId: actor.organisationId,
+      event: filter.event || undefined,
+      person: filter.person || undefined,
+      caseNumber: wholeNumber(filter.caseNumber),
+      before: wholeNumber(params.get('before')),
+      limit: pageSize + 1,
+      withContent,
+    });
+    const shown = lines.slice(0, pageSize);
+    return {
+      filter,
+      withContent,
+      olderThan: lines.length > pageSize ? (shown.at(-1)?.sequence ?? null) : null,
+      lines: shown.map((line) => ({ ...line, at: line.at.toISOString().slice(0, 19).replace('T', ' ') })),
+    };
+  });
+}
+
+export const meta: Route.MetaFunction = () => [{ title: 'Log · Scorchline' }];
+
+export default function OrganisationLog({ loaderData }: Route.ComponentProps) {
+  const { filter, lines, olderThan, withContent } = loaderData;
+  const older = new URLSearchParams({ event: filter.event, person: filter.person, case: filter.caseNumber, before: String(olderThan ?? '') });
+  return (
+    <Page>
+      <PageTitle below={withContent ? 'Lines are only ever added.' : 'Lines are only ever added. What was done in a case is not shown to administrators.'}>Who did what, and when</PageTitle>
+      <Form method="get" className="flex flex-wrap items-end gap-4 pb-5">
+        <div className="w-52"><TextInput field={{ name: 'event', defaultValue: filter.event }} label="Event" /></div>
+        <div className="w-52"><TextInput field={{ name: 'person', defaultValue: filter.person }} label="Person" /></div>
+        <div className="w-32"><TextInput field={{ name: 'case', defaultValue: filter.caseNumber }} label="Case number" inputMode="numeric" /></div>
+        <Button look="outlined">Show</Button>
+      </Form>
+      <DataTable caption="Log, newest first">
+        <TableHead>
+          <HeadCell>When, UTC</HeadCell>
+          <HeadCell>Who</HeadCell>
+          <HeadCell>Case</HeadCell>
+          <HeadCell>Event</HeadCell>
+          <HeadCell>What and why</HeadCell>
+        </TableHead>
+        <tbody>
+          {lines.map((line) => (
+            <Row key={line.sequence} tight>
+              <Cell>{line.at}</Cell>
+              <Cell>{line.actorName}</Cell>
+              <Cell>{line.caseNumber === null ? '' : withContent ? <AppLink href={href('/cases/:caseNumber', { caseNumber: String(line.caseNumber) })}>{line.caseNumber}</AppLink> : line.caseNumber}</Cell>
+              <Cell>
+                <code className="font-mono text-axis">{line.event}</code>
+              </Cell>
+              <Cell note={line.reason || undefined}>{line.summary}</Cell>
+            </Row>
+          ))}
+        </tbody>
+      </DataTable>
+      {lines.length === 0 ? <p className="py-4 font-serif text-account">No line fits.</p> : null}
+      {olderThan === null ? null : (
+        <p className="pt-4">
+          <AppLink href={`/log?${older.toString()}`}>Older lines</AppLink>
+        </p>
+      )}
+    </Page>
+  );
 }

@@ -5,14 +5,10 @@ import type { Route } from './+types/report';
 import { actorContext } from '#app/auth/actor-context.ts';
 import { requireActor } from '#app/auth/middleware.server.ts';
 import { ReportPage, reportAddress } from '#app/components/report/report-page.tsx';
-import type { ReportView } from '#app/components/report/report-page.tsx';
 import type { ReportFormState } from '#app/components/report/report-fields.ts';
 import { DomainError } from '#app/domain/errors.ts';
-import { toLocalInput } from '#app/domain/local-time.ts';
-import { homeFor } from '#app/domain/navigation.ts';
 import type { ReportHolder } from '#app/domain/report.ts';
 import { clientIdSchema, readReport } from '#app/domain/report.ts';
-import { env } from '#app/env.server.ts';
 import { clientAddressContext } from '#app/http/client-address.ts';
 import { typedValues } from '#app/http/form-result.server.ts';
 import { readForm } from '#app/http/multipart-form.server.ts';
@@ -20,11 +16,11 @@ import { limitReporting } from '#app/auth/report-limits.server.ts';
 import { respond, statusFor } from '#app/http/to-response.server.ts';
 import { storeReportPhoto } from '#app/services/photos/store-photo.server.ts';
 import { removeDraftPhoto } from '#app/services/photos/remove-draft-photo.server.ts';
-import { holderId, identifyHolder, isHeldBy } from '#app/services/reports/report-holder.server.ts';
+import { identifyHolder, isHeldBy } from '#app/services/reports/report-holder.server.ts';
 import { submitReport } from '#app/services/reports/submit-report.server.ts';
 import { db } from '#db/client.server.ts';
-import { listDraftPhotos } from '#db/queries/photos.server.ts';
 import { findSentReport, listReportSites } from '#db/queries/reports.server.ts';
+import { reportView } from './report-view.server.ts';
 
 const guestCodeOf = (request: Request) => new URL(request.url).searchParams.get('at');
 const clientIdOf = (request: Request) => clientIdSchema.safeParse(new URL(request.url).searchParams.get('report')).data ?? null;
@@ -38,29 +34,6 @@ async function requireHolder(request: Request, context: Readonly<RouterContextPr
   return holder ?? { kind: 'person', actor: requireActor(context, request) };
 }
 
-async function viewOf(holder: ReportHolder, clientId: string, guestCode: string | null): Promise<ReportView> {
-  const now = new Date();
-  const sites = await listReportSites(db, holder);
-  const photos = await listDraftPhotos(db, { clientId, actorId: holderId(holder) });
-  return {
-    clientId,
-    holderKey: holder.kind === 'person' ? `person-${holder.actor.userId}` : `site-${holder.site.id}`,
-    guestCode,
-    guest: holder.kind === 'guest',
-    sites: sites.map((site) => ({
-      id: site.id,
-      name: site.name,
-      code: site.code,
-      zone: site.zone,
-      nowLocal: toLocalInput(now, site.zone),
-      around: holder.kind === 'person' ? { latitudeDeg: Number(site.latitudeDeg.toFixed(3)), longitudeDeg: Number(site.longitudeDeg.toFixed(3)) } : null,
-    })),
-    emergencyNumber: env.EMERGENCY_NUMBER,
-    photos: photos.map(({ id, fileName, state }) => ({ id, fileName, state })),
-    closeHref: holder.kind === 'person' ? homeFor(holder.actor) : '/',
-  };
-}
-
 export function loader({ request, context }: Route.LoaderArgs) {
   return respond(async () => {
     await limitReporting('look', null, context.get(clientAddressContext));
@@ -71,7 +44,7 @@ export function loader({ request, context }: Route.LoaderArgs) {
     if (!clientId) throw redirect(reportAddress(randomUUID(), guestCode));
     const sent = await findSentReport(db, clientId);
     if (sent) throw redirect(isHeldBy(sent, holder) ? receivedAddress(sent.receipt, guestCode, clientId) : reportAddress(randomUUID(), guestCode));
-    return viewOf(holder, clientId, guestCode);
+    return reportView(holder, clientId, guestCode);
   });
 }
 
@@ -129,7 +102,7 @@ function photoErrors(refused: readonly string[], restIsFine: boolean): Record<st
 /** The form again, with everything that was typed and every photo that was taken. */
 async function backToForm({ holder, clientId, form, guestCode }: Received, problem: Partial<Omit<ReportFormState, 'typed'>>, status: number) {
   const state: ReportFormState = { typed: typedValues(form), formErrors: [], fieldErrors: {}, repeated: {}, longWindowDays: null, ...problem };
-  return data({ state, view: await viewOf(holder, clientId, guestCode) }, { status });
+  return data({ state, view: await reportView(holder, clientId, guestCode) }, { status });
 }
 
 export const meta: Route.MetaFunction = () => [{ title: 'Report a mark · Scorchline' }];

@@ -1,7 +1,7 @@
 import type { Route } from './+types/action-calendar';
 import { db } from '#db/client.server.ts';
 import { listActions, listReturnDays } from '#db/queries/corrective-actions.server.ts';
-import { requireActorWho } from '#app/auth/middleware.server.ts';
+import { requireActor } from '#app/auth/middleware.server.ts';
 import { actionCalendar } from '#app/domain/action-calendar.ts';
 import { calendarText } from '#app/domain/icalendar.ts';
 import { env } from '#app/env.server.ts';
@@ -10,7 +10,7 @@ import { respond } from '#app/http/to-response.server.ts';
 /** Due days and effect checks as iCalendar, of the actions that the reader may see; `?mine=1` narrows it to their own. */
 export function loader({ request, context }: Route.LoaderArgs) {
   return respond(async () => {
-    const actor = requireActorWho(context, request, 'actions:read');
+    const actor = requireActor(context, request);
     const onlyMine = new URL(request.url).searchParams.get('mine') === '1';
     const all = await listActions(db, { actor });
     const actions = onlyMine ? all.filter((action) => action.ownerId === actor.userId || action.verifierId === actor.userId) : all;

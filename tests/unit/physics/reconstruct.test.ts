@@ -187,6 +187,21 @@ describe('runs', () => {
     expect(result.totals.sunlit + result.totals.notSunlit + result.totals.cannotTell).toBe(5760);
   });
 
+  test('a mark by coordinates gives what the same mark by bearing gives', () => {
+    const { mark, ...rest } = { ...exampleInput, ...fast };
+    const { bearingDeg = 0, elevationDeg = 0, distanceM = 0 } = mark ?? {};
+    const level = distanceM * Math.cos((elevationDeg * Math.PI) / 180);
+    const result = reconstruct({
+      ...rest,
+      markCoordinates: {
+        eastM: level * Math.sin((bearingDeg * Math.PI) / 180), northM: level * Math.cos((bearingDeg * Math.PI) / 180),
+        upM: distanceM * Math.sin((elevationDeg * Math.PI) / 180), sigmaM: 0.001, normalAzimuthDeg: 215, normalElevationDeg: 0,
+      },
+    });
+    expect(result.requiredSun).toEqual(reconstruct({ ...exampleInput, ...fast }).requiredSun);
+    expect(() => reconstruct({ ...exampleInput, ...fast, markCoordinates: { eastM: 1, northM: 0, upM: 0, sigmaM: 0 } })).toThrow(/mark and markCoordinates disagree/);
+  });
+
   test('what the input left open is listed under assumptions with its source', () => {
     const result = reconstruct({ ...fast, sky: rural, place: place(51.5, 0, 'Europe/London'), window: window('2026-03-01T11:00:00Z', '2026-03-01T12:00:00Z') });
     const fields = result.assumptions.map((assumption) => assumption.field);

@@ -1,0 +1,69 @@
+import { FieldError } from '#app/components/forms/field.tsx';
+import { describedBy, fieldIds, fieldText, hasErrors } from '#app/components/forms/field-like.ts';
+import type { FieldLike } from '#app/components/forms/field-like.ts';
+import { measureMethodLabels, measureMethods } from '#app/domain/scene.ts';
+import type { SceneField } from '#app/domain/scene-fields.ts';
+import { fieldName } from '#app/domain/scene-fields.ts';
+
+export interface MeasuredRowsProps {
+  readonly fields: readonly SceneField[];
+  readonly field: (name: string) => FieldLike;
+}
+
+const norths = [
+  ['', 'which north?'],
+  ['true', 'true'],
+  ['magnetic', 'magnetic'],
+  ['grid', 'grid'],
+] as const;
+const methods = [['', 'how?'], ...measureMethods.map((method) => [method, measureMethodLabels[method]] as const)] as const;
+
+/** Value, ±, unit, north and method of each measured thing, one row each. */
+export function MeasuredRows({ fields, field }: MeasuredRowsProps) {
+  return <div>{fields.map((one) => <MeasuredRow key={fieldName(one)} of={one} field={field} />)}</div>;
+}
+
+function MeasuredRow({ of, field }: { readonly of: SceneField; readonly field: MeasuredRowsProps['field'] }) {
+  const name = fieldName(of);
+  const value = field(name);
+  const { id } = fieldIds(value);
+  return (
+    <fieldset id={`${id}-row`} className={`border-b border-hair py-2 ${hasErrors(value) ? 'border-l-5 border-l-ink pl-3' : ''}`}>
+      <legend className="sr-only">{of.label}</legend>
+      <div className="flex flex-wrap items-end gap-x-3 gap-y-1">
+        <div className="min-w-44 flex-[1_1_12rem]">
+          <label htmlFor={id} className="font-medium">{of.label}</label>
+          {of.help ? <span className="block text-axis text-second" id={fieldIds(value).helpId}>{of.help}</span> : null}
+        </div>
+        <Box label={`${of.label}, value`} field={value} width="w-24" describedBy={describedBy(value, Boolean(of.help))} invalid={hasErrors(value)} id={id} />
+        <span className="pb-2.5 text-second">{of.unit}</span>
+        <span className="pb-2.5 text-second" aria-hidden="true">±</span>
+        <Box label={`${of.label}, plus or minus`} field={field(`${name}.plusMinus`)} width="w-20" />
+        {of.bearing ? <Pick label={`${of.label}, which north`} field={field(`${name}.north`)} options={norths} /> : null}
+        <Pick label={`${of.label}, method`} field={field(`${name}.method`)} options={methods} />
+      </div>
+      <FieldError field={value} />
+    </fieldset>
+  );
+}
+
+interface BoxProps {
+  readonly label: string;
+  readonly field: FieldLike;
+  readonly width: string;
+  readonly id?: string;
+  readonly describedBy?: string | undefined;
+  readonly invalid?: boolean;
+}
+
+function Box({ label, field, width, id, describedBy: description, invalid = false }: BoxProps) {
+  return <input id={id ?? fieldIds(field).id} name={field.name} defaultValue={fieldText(field)} aria-label={label} aria-describedby={description} aria-invalid={invalid || undefined} autoComplete="off" inputMode="text" className={`field-box ${width}`} />;
+}
+
+function Pick({ label, field, options }: { readonly label: string; readonly field: FieldLike; readonly options: readonly (readonly [string, string])[] }) {
+  return (
+    <select name={field.name} id={fieldIds(field).id} defaultValue={fieldText(field)} aria-label={label} className="field-box w-auto">
+      {options.map(([value, words]) => <option key={value} value={value}>{words}</option>)}
+    </select>
+  );
+}

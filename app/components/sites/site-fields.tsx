@@ -1,0 +1,32 @@
+import { Select, TextInput } from '#app/components/forms/text-field.tsx';
+import type { FieldLike } from '#app/components/forms/field-like.ts';
+import { siteUseLabels } from '#app/domain/site-form.ts';
+
+export type SiteFieldOf = (name: string) => FieldLike;
+
+/** Facts of a site; the code stands only where a new one is made. */
+export function SiteFields({ field, withCode }: { readonly field: SiteFieldOf; readonly withCode: boolean }) {
+  return (
+    <div className="grid gap-4 tablet:grid-cols-2">
+      {withCode ? <TextInput field={field('code')} label="Short code" help="In addresses and on the report link; it stays." /> : null}
+      <TextInput field={field('name')} label="Name" />
+      <TextInput field={field('address')} label="Address" />
+      <TextInput field={field('latitudeDeg')} label="Latitude, degrees" inputMode="decimal" help="North positive, like 53.50" />
+      <TextInput field={field('longitudeDeg')} label="Longitude, degrees" inputMode="decimal" help="East positive, like -1.60" />
+      <TextInput field={field('elevationM')} label="Height above sea level, m" inputMode="decimal" />
+      <TextInput field={field('zone')} label="Time zone" help="Leave empty to take it from the coordinates." />
+      <Select field={field('use')} label="Use" options={Object.entries(siteUseLabels).map(([value, label]) => ({ value, label }))} />
+      <Select field={field('jurisdiction')} label="Jurisdiction" options={[{ value: 'GB', label: 'Great Britain' }, { value: 'EU', label: 'European Union' }, { value: 'US', label: 'United States' }, { value: 'other', label: 'Other' }]} />
+    </div>
+  );
+}
+
+export const siteFieldLabels: readonly { readonly name: string; readonly label: string }[] = [
+  { name: 'code', label: 'Short code' },
+  { name: 'name', label: 'Name' },
+  { name: 'address', label: 'Address' },
+  { name: 'latitudeDeg', label: 'Latitude' },
+  { name: 'longitudeDeg', label: 'Longitude' },
+  { name: 'elevationM', label: 'Height above sea level' },
+  { name: 'zone', label: 'Time zone' },
+];

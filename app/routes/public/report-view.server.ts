@@ -1,0 +1,61 @@
+import type { ReportView } from '#app/components/report/report-page.tsx';
+import type { TodayAtSite } from '#app/components/report/where-question.tsx';
+import { formatClock, localDay, toLocalInput } from '#app/domain/local-time.ts';
+import { homeFor } from '#app/domain/navigation.ts';
+import type { ReportHolder } from '#app/domain/report.ts';
+import { env } from '#app/env.server.ts';
+import { daylightOn } from '#app/physics/sun/daylight.ts';
+import { holderId } from '#app/services/reports/report-holder.server.ts';
+import { db } from '#db/client.server.ts';
+import { listDraftPhotos } from '#db/queries/photos.server.ts';
+import { listReportSites } from '#db/queries/reports.server.ts';
+
+/** Everything that the page of a report under way shows, for its holder. */
+export async function reportView(holder: ReportHolder, clientId: string, guestCode: string | null): Promise<ReportView> {
+  const now = new Date();
+  const sites = await listReportSites(db, holder);
+  const photos = await listDraftPhotos(db, { clientId, actorId: holderId(holder) });
+  return {
+    clientId,
+    holderKey: holder.kind === 'person' ? `person-${holder.actor.userId}` : `site-${holder.site.id}`,
+    guestCode,
+    guest: holder.kind === 'guest',
+    sites: sites.map((site) => ({
+      id: site.id,
+      name: site.name,
+      code: site.code,
+      zone: site.zone,
+      nowLocal: toLocalInput(now, site.zone),
+      // To the minute, as the clock time beside it.
+      nowUtc: new Date(Math.floor(now.getTime() / 60_000) * 60_000).toISOString(),
+      today: todayAt(site, now),
+      around: holder.kind === 'person' ? { latitudeDeg: Number(site.latitudeDeg.toFixed(3)), longitudeDeg: Number(site.longitudeDeg.toFixed(3)) } : null,
+    })),
+    emergencyNumber: env.EMERGENCY_NUMBER,
+    photos: photos.map(({ id, fileName, state }) => ({ id, fileName, state })),
+    closeHref: holder.kind === 'person' ? homeFor(holder.actor) : '/',
+  };
+}
+
+const hourMs = 3_600_000;
+/** Sunrise and sunset are worked out for a level horizon without air; these two do not enter. */
+const standardAir = { pressureHpa: 1013.25, temperatureC: 15 } as const;
+
+interface SitePlace {
+  readonly zone: string;
+  readonly latitudeDeg: number;
+  readonly longitudeDeg: number;
+}
+
+/** Daylight of the local day, with an hour on each side for the card. */
+function todayAt({ zone, latitudeDeg, longitudeDeg }: SitePlace, now: Date): TodayAtSite {
+  const { sunriseMs, sunsetMs, polar } = daylightOn(localDay(now, zone), zone, { latitudeDeg, longitudeDeg, elevationM: 0, ...standardAir });
+  const iso = (ms: number) => new Date(ms).toISOString();
+  const rises = sunriseMs !== null && sunsetMs !== null && sunriseMs < sunsetMs;
+  const fromMs = Math.floor((rises ? Math.min(sunriseMs, now.getTime()) - hourMs : now.getTime() - 12 * hourMs) / hourMs) * hourMs;
+  const toMs = Math.ceil((rises ? Math.max(sunsetMs, now.getTime()) + hourMs : now.getTime() + 6 * hourMs) / hourMs) * hourMs;
+  const words = rises
+    ? `Daylight today ${formatClock(new Date(sunriseMs), zone)} to ${formatClock(new Date(sunsetMs), zone)}.`
+    : polar === 'night' ? 'The sun does not rise today.' : polar === 'day' ? 'The sun does not set today.' : '';
+  return { fromUtc: iso(fromMs), toUtc: iso(toMs), riseUtc: rises ? iso(sunriseMs) : null, setUtc: rises ? iso(sunsetMs) : null, polar, words };
+}
