@@ -3,6 +3,7 @@ import { preparePhotoJob } from '#app/jobs/definitions/prepare-photo.ts';
 import { runReconstructionJob } from '#app/jobs/definitions/run-reconstruction.ts';
 import { sendMailJob } from '#app/jobs/definitions/send-mail.ts';
 import { sendDueReminders } from '#app/jobs/handlers/due-reminders.server.ts';
+import { forgetExpired } from '#app/jobs/handlers/forget-expired.server.ts';
 import { preparePhoto } from '#app/jobs/handlers/prepare-photo.server.ts';
 import { runReconstruction } from '#app/jobs/handlers/run-reconstruction.server.ts';
 import { sendDueMail } from '#app/jobs/handlers/send-mail.server.ts';
@@ -40,6 +41,7 @@ await handle(sendMailJob, async () => {
 every(5 * second, 'sending mail', sendDueMail);
 every(3_600 * second, 'reminders', sendDueReminders);
 every(86_400 * second, 'removal of abandoned photos', purgeAbandonedPhotos);
+every(86_400 * second, 'removal of what has run out', forgetExpired);
 log.info('worker is ready');
 
 let stopping = false;

@@ -17,12 +17,14 @@ const firstFreeNumber = 201;
 /** Fills an empty database with the demonstration; a database that holds an organisation is left alone. */
 async function seed(): Promise<void> {
   const [held] = await db.select({ count: sql<number>`count(*)::int` }).from(organisations);
+  const demoCases = [...roomCases, ...outdoorCases, ...thingCases];
   if ((held?.count ?? 0) > 0) {
     console.info('The database holds data already; nothing was added.');
+    // Releases come after the rest; a seed that was cut short there is finished here.
+    await seedReleases(demoCases);
     return;
   }
   const now = new Date();
-  const demoCases = [...roomCases, ...outdoorCases, ...thingCases];
   await inTransaction(async (tx) => {
     const places = await seedPeopleAndSites(tx);
     const ids = new Map<number, string>();

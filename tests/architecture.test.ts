@@ -40,7 +40,7 @@ const zones: readonly Zone[] = [
   },
   {
     path: 'app/services',
-    own: ['app/services', 'app/domain', 'app/physics', 'app/jobs/queue.server.ts', 'app/jobs/define-job.ts', 'app/jobs/definitions', 'app/storage', 'app/mail', 'app/env.server.ts', 'app/log.server.ts', 'app/auth', 'db'],
+    own: ['app/services', 'app/domain', 'app/physics', 'app/jobs/queue.server.ts', 'app/jobs/define-job.ts', 'app/jobs/definitions', 'app/jobs/engine-runner.server.ts', 'app/storage', 'app/mail', 'app/env.server.ts', 'app/log.server.ts', 'app/auth', 'db'],
     packages: 'any',
     never: interfaceLibraries,
   },

@@ -32,16 +32,32 @@ export const accountSchema = z.discriminatedUnion('intent', [
   z.object({ intent: z.literal('sign-out-everywhere') }),
 ]);
 
-export const inviteSchema = z.object({
-  intent: z.literal('invite'),
-  displayName: z.string().trim().min(2, 'Write the name of the person.').max(120, 'Use at most 120 characters.'),
-  email: emailField,
+/** A role and where it holds; an empty site stands for every site of the organisation. */
+export const grantFields = {
   role: z.enum(roles, 'Choose a role.'),
-  siteId: z.union([z.uuid(), z.literal('')]).default(''),
-});
+  siteId: z.union([z.uuid(), z.literal('')], 'Choose a site of your organisation.').default(''),
+};
 
-/** Only addresses within the product, so that a link cannot lead a person elsewhere after signing in. */
+/** People and rights know no sites: whoever could change them for one site could give themselves all the others. */
+export const administratorForAllSites = {
+  check: ({ role, siteId }: { readonly role: string; readonly siteId: string }) => role !== 'administrator' || siteId === '',
+  said: { path: ['siteId'], message: 'An administrator looks after the whole organisation. Choose all sites.' },
+};
+
+export const inviteSchema = z
+  .object({
+    intent: z.literal('invite'),
+    displayName: z.string().trim().min(2, 'Write the name of the person.').max(120, 'Use at most 120 characters.'),
+    email: emailField,
+    ...grantFields,
+  })
+  .refine(administratorForAllSites.check, administratorForAllSites.said);
+
+/**
+ * Where to go after signing in: an address within the product, or null. A browser drops tabs and line breaks from an
+ * address and takes a backslash for a slash, so none of these are let through.
+ */
 export function safeNext(next: string | null): string | null {
-  if (!next || !/^\/(?![/\\])/u.test(next)) return null;
-  return next.startsWith('/sign-') ? null : next;
+  if (!next || !/^\/(?!\/)[^\\\p{Cc}\s]*$/u.test(next)) return null;
+  return /^\/sign-(?:in|out)(?:[/?#]|$)/u.test(next) ? null : next;
 }

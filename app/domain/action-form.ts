@@ -15,6 +15,8 @@ const tick = z.literal('on').optional().transform((value) => value === 'on');
 /** Reasons are read by others later: a full stop or a dash is not one. */
 export const reasonSchema = required(2_000, 'Give the reason in a few words.').pipe(z.string().min(5, 'Give the reason in a few words.'));
 
+const costSentence = 'Give the cost as whole units, digits only.';
+const currencySentence = 'Give the currency as three letters, such as GBP.';
 const sameTwice = 'Choose somebody else to verify: nobody verifies their own fix.';
 
 export const actionFormSchema = z
@@ -29,10 +31,10 @@ export const actionFormSchema = z
     dueOn: dayOrNone,
     risk: z.enum(risks, 'Choose the risk if nothing is done.'),
     cost: z
-      .union([z.literal('').transform(() => null), z.string().regex(/^\d{1,12}$/).transform(Number)], 'Give the cost as whole units, digits only.')
+      .union([z.literal('').transform(() => null), z.string().regex(/^\d{1,12}$/, costSentence).transform(Number)], costSentence)
       .default(null),
     costCurrency: z
-      .union([z.literal('').transform(() => null), z.string().trim().toUpperCase().regex(/^[A-Z]{3}$/)], 'Give the currency as three letters, such as GBP.')
+      .union([z.literal('').transform(() => null), z.string().trim().toUpperCase().regex(/^[A-Z]{3}$/, currencySentence)], currencySentence)
       .default(null),
   })
   .superRefine((form, context) => {

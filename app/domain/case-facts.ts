@@ -80,7 +80,7 @@ function readClock(local: string, zone: string, which: '' | 'first' | 'second'):
   const reading = fromLocalInput(local, zone, which === '' ? undefined : which);
   if (reading.kind === 'instant') return { instant: reading.instant };
   if (reading.kind === 'fold') return { instant: null, sentence: 'The clocks went back and showed this time twice: say whether you mean the first or the second pass.' };
-  if (reading.kind === 'gap') return { instant: null, sentence: `The clocks skipped this time that night; the next that existed is ${formatClock(reading.after, zone)}.` };
+  if (reading.kind === 'gap') return { instant: null, sentence: `The clocks went forward and skipped this time; the same moment read ${formatClock(reading.after, zone)}.` };
   return { instant: null, sentence: 'This is not a date and time; write it as day, month, year, hour and minute.' };
 }
 

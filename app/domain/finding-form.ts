@@ -11,7 +11,7 @@ const words = (max: number) => plainText(max).default('');
 export const findingFormSchema = z.object({
   opinion: words(20_000),
   selectedHypothesisId: z
-    .union([z.literal(''), z.uuid()], 'Choose one of the hypotheses, or none.')
+    .union([z.literal(''), z.uuid('Choose one of the hypotheses, or none.')], 'Choose one of the hypotheses, or none.')
     .default('')
     .transform((id) => (id === '' ? null : id)),
   certainty: z.enum(certainties, 'Choose how certain the opinion is.'),

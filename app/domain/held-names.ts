@@ -2,8 +2,10 @@ import { foldWord } from './folded-text.ts';
 
 /** Patterns over folded text under which the names that a case holds may stand. Null where there is nothing to look for. */
 export interface NamePatterns {
-  /** Found however they are written. */
-  readonly always: RegExp | null;
+  /** Whole names, found however they are written and joined. */
+  readonly whole: RegExp | null;
+  /** Single words of names, found however they are written. */
+  readonly parts: RegExp | null;
   /** Parts of names that are also ordinary words, or very short: found where the original begins with a capital. */
   readonly capitalised: RegExp | null;
 }
@@ -27,13 +29,12 @@ const withoutWordSpaces = /[\p{Script=Han}\p{Script=Hiragana}\p{Script=Katakana}
 const escapeSigns = (text: string): string => text.replace(/[.*+?^${}()|[\]\\/]/gu, '\\$&');
 const before = '(?<![\\p{L}\\p{N}])';
 const after = '(?![\\p{L}\\p{N}])';
-const initials = '(?:\\p{L}\\.\\s?){0,3}';
 const ending = "(?:'s|s'|s|es)?";
 
 /** Spellings of one word of a name: accents dropped, and written out as they are in German and the Nordic languages. */
 function spellings(word: string): string[] {
   const written = word.toLowerCase().replace(/[äöüåø]/gu, (letter) => ({ ä: 'ae', ö: 'oe', ü: 'ue', å: 'aa', ø: 'oe' })[letter] ?? letter);
-  const all = new Set([foldWord(word), foldWord(written)]);
+  const all = new Set([foldWord(word), foldWord(written), foldWord(word).replace(/['-]/gu, '')]);
   const short = foldWord(word).replace(/([aou])e/gu, '$1');
   if (short.length >= 4) all.add(short);
   return [...all].filter(Boolean);
@@ -43,7 +44,8 @@ const wordsOf = (name: string): string[] => name.trim().split(/[\s,;()]+/u).map(
 const oneOf = (options: readonly string[]): string => `(?:${options.map(escapeSigns).join('|')})`;
 
 interface Forms {
-  readonly always: Set<string>;
+  readonly whole: Set<string>;
+  readonly parts: Set<string>;
   readonly capitalised: Set<string>;
 }
 
@@ -53,17 +55,17 @@ function addWhole(words: readonly string[], forms: Forms): void {
   if (named.length === 0) return;
   if (named.length === 1) {
     const only = named[0] ?? '';
-    if (withoutWordSpaces.test(only)) for (const spelling of spellings(only)) forms.always.add(escapeSigns(spelling));
+    if (withoutWordSpaces.test(only)) for (const spelling of spellings(only)) forms.whole.add(escapeSigns(spelling));
     return;
   }
   const between = '[^\\p{L}\\p{N}]{0,3}';
   for (const order of [named, [...named.slice(-1), ...named.slice(0, -1)]]) {
     const letters = order.join('').length;
     const pattern = order.map((word) => oneOf(spellings(word))).join(between);
-    forms.always.add(letters >= 8 ? `${pattern}${ending}` : `${before}${pattern}${ending}${after}`);
+    forms.whole.add(letters >= 8 ? `${pattern}${ending}` : `${before}${pattern}${ending}${after}`);
   }
   const dotted = named.map((word) => `${escapeSigns(foldWord(word).slice(0, 1))}\\.`).join('\\s?');
-  forms.always.add(`${before}${dotted}${after}`);
+  forms.whole.add(`${before}${dotted}${after}`);
 }
 
 /** Each word of the name alone, and the parts of a double name. */
@@ -73,8 +75,8 @@ function addParts(words: readonly string[], forms: Forms): void {
     if (folded.length < 2 || titles.has(folded) || particles.has(folded)) continue;
     const rare = folded.length >= 3 && !ordinaryWords.has(folded);
     for (const spelling of spellings(word)) {
-      if (withoutWordSpaces.test(word)) forms.always.add(escapeSigns(spelling));
-      else if (rare) forms.always.add(`${before}${initials}${escapeSigns(spelling)}${ending}${after}`);
+      if (withoutWordSpaces.test(word)) forms.parts.add(escapeSigns(spelling));
+      else if (rare) forms.parts.add(`${before}${escapeSigns(spelling)}${ending}${after}`);
       else forms.capitalised.add(`${before}${escapeSigns(spelling)}${ending}${after}`);
     }
   }
@@ -85,20 +87,20 @@ const joined = (forms: ReadonlySet<string>): RegExp | null =>
 
 /** Patterns for every name in the list, whole and in parts. Names of one letter cannot be looked for. */
 export function namePatterns(names: readonly string[]): NamePatterns {
-  const forms: Forms = { always: new Set(), capitalised: new Set() };
+  const forms: Forms = { whole: new Set(), parts: new Set(), capitalised: new Set() };
   for (const name of names) {
     const words = wordsOf(name);
     addWhole(words, forms);
     addParts(words, forms);
   }
-  return { always: joined(forms.always), capitalised: joined(forms.capitalised) };
+  return { whole: joined(forms.whole), parts: joined(forms.parts), capitalised: joined(forms.capitalised) };
 }
 
 /** Whole names only, for searching bytes in which our own words stand as well. */
 export function wholeNamePattern(names: readonly string[]): RegExp | null {
-  const forms: Forms = { always: new Set(), capitalised: new Set() };
+  const forms: Forms = { whole: new Set(), parts: new Set(), capitalised: new Set() };
   for (const name of names) addWhole(wordsOf(name), forms);
-  return joined(forms.always);
+  return joined(forms.whole);
 }
 
 /** Parts of the names that are also ordinary words: found only with a capital, so somebody has to read for them. */

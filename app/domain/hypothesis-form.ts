@@ -24,7 +24,7 @@ export const hypothesisFormSchema = z
     markResult: outcome,
     markWhy: why,
     result: z.enum(hypothesisResults, 'Choose a result; "not tested" is one.'),
-    testedById: z.union([z.literal(''), z.uuid()], 'Choose a person from the list.').default(''),
+    testedById: z.union([z.literal(''), z.uuid('Choose a person from the list.')], 'Choose a person from the list.').default(''),
   })
   .transform((form) => ({
     kind: form.kind,

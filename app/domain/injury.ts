@@ -25,8 +25,14 @@ export const treatmentLabels: Record<(typeof treatments)[number], string> = {
 const days = z
   .string()
   .default('')
-  .transform((text) => (text.trim() === '' ? null : Number(text)))
-  .pipe(z.union([z.null(), z.number('Write whole days, such as 2.').int('Write whole days, such as 2.').min(0, 'Days cannot be negative.').max(3_650, 'That is more than ten years.')]));
+  .transform((text, context) => {
+    const typed = text.trim();
+    if (typed === '') return null;
+    const count = Number(typed);
+    if (/^\d+$/u.test(typed) && count <= 3_650) return count;
+    context.addIssue({ code: 'custom', message: 'Write whole days, such as 2; at most 3650.' });
+    return z.NEVER;
+  });
 
 export const injuryForm = z.object({
   injuryId: z.union([z.literal(''), z.uuid()]).default(''),

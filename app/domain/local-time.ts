@@ -52,7 +52,7 @@ export function toLocalInput(instant: Date, zone: string): string {
 
 export type LocalReading =
   | { readonly kind: 'instant'; readonly instant: Date }
-  /** The clock jumped over this time; `before` and `after` are the instants nearest to it. */
+  /** The clock jumped over this time; `after` is the instant that as many minutes past the jump would be. */
   | { readonly kind: 'gap'; readonly after: Date }
   /** The clock showed this time twice; both instants are given, earlier first. */
   | { readonly kind: 'fold'; readonly first: Date; readonly second: Date }
@@ -88,7 +88,9 @@ export function daysBetween(from: Date, to: Date, zone: string): number {
   return zoned(from, zone).toPlainDate().until(zoned(to, zone).toPlainDate()).days;
 }
 
+/** Whether the name is an IANA zone; a fixed offset such as `+01:00` is none, since it knows no summer time. */
 export function isZone(name: string): boolean {
+  if (!/^[A-Za-z]/u.test(name)) return false;
   try {
     Temporal.Instant.fromEpochMilliseconds(0).toZonedDateTimeISO(name);
     return true;

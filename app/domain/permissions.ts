@@ -121,7 +121,10 @@ export const organisationRules = {
 } as const satisfies Record<string, readonly Role[]>;
 export type OrganisationAction = keyof typeof organisationRules;
 
+/** These reach every site, so a role that holds for one site only does not open them. */
+const acrossSites: readonly OrganisationAction[] = ['people:manage', 'log:read-all'];
+
 export function canInOrganisation(actor: Actor, action: OrganisationAction): boolean {
   const allowed: readonly Role[] = organisationRules[action];
-  return actor.grants.some((grant) => allowed.includes(grant.role));
+  return actor.grants.some((grant) => allowed.includes(grant.role) && (grant.siteId === null || !acrossSites.includes(action)));
 }

@@ -62,13 +62,22 @@ export function findHits(text: string, searcher: Searcher): readonly Hit[] {
   const hits = [
     ...telling(folded),
     ...collect(folded, searcher.contacts, 'personal', 'contact'),
-    ...collect(folded, searcher.names.always, 'personal', 'name'),
-    ...collect(folded, searcher.names.capitalised, 'personal', 'name').filter((hit) => /^\p{Lu}/u.test(text.slice(hit.start))),
+    ...namesIn(folded, searcher.names),
     ...collect(folded, searcher.addresses, 'exact-place', 'address'),
     ...collect(folded, searcher.places, 'exact-place', 'place'),
     ...nearHeldCoordinates(folded, searcher.held.coordinates),
   ];
   return joinOverlaps(text, hits);
+}
+
+/** Names with the initials before them. */
+function namesIn(folded: FoldedText, { whole, parts, capitalised }: NamePatterns): Hit[] {
+  const text = folded.original;
+  const inCapitals = collect(folded, capitalised, 'personal', 'name').filter((hit) => /^\p{Lu}/u.test(text.slice(hit.start)));
+  return [...collect(folded, whole, 'personal', 'name'), ...collect(folded, parts, 'personal', 'name'), ...inCapitals].map((hit) => {
+    const initials = /(?<![\p{L}\p{N}])(?:\p{Lu}\.\s?){1,3}$/u.exec(text.slice(0, hit.start))?.[0] ?? '';
+    return { ...hit, start: hit.start - initials.length };
+  });
 }
 
 function telling(folded: FoldedText): Hit[] {

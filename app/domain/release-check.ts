@@ -43,11 +43,11 @@ interface Material {
  * @param data The parsed data file.
  * @param files Text files and the names of all files.
  */
-export function checkReleasedText(params: { readonly source: CaseBeforeRedaction; readonly audience: Audience; readonly data: unknown; readonly texts: readonly ReleasedText[]; readonly fileNames: readonly string[] }): readonly ReleaseCheck[] {
-  const { source, audience, data, texts, fileNames } = params;
+export function checkReleasedText(params: { readonly source: CaseBeforeRedaction; readonly audience: Audience; readonly data: unknown; readonly texts: readonly ReleasedText[]; readonly fileNames: readonly string[]; readonly changeNote: string }): readonly ReleaseCheck[] {
+  const { source, audience, data, texts, fileNames, changeNote } = params;
   const held = heldWords(source, audience);
   const searcher = searcherFor(held);
-  const material = gather(data, texts);
+  const material = gather(data, texts, [{ where: 'change note', text: changeNote }]);
   const typedHits = hitsIn(material.typed, searcher);
   const heldHits = hitsIn(material.strings, searcher);
   const found = (hits: ReturnType<typeof hitsIn>, ...kinds: readonly string[]) => [...new Set(hits.filter((hit) => kinds.includes(hit.of)).map((hit) => hit.where))];
@@ -77,17 +77,21 @@ function hitsIn(pieces: readonly Piece[], searcher: Searcher): (Hit & { where: s
 /** Instants, days and hashes, of which a long reconstruction has thousands. */
 const oursByForm = /^(?:\d{4}-\d{2}-\d{2}(?:T[\d:.]+Z)?|[0-9a-f]{64})$/u;
 
-function gather(data: unknown, texts: readonly ReleasedText[]): Material {
+/** Pieces of running text, the words beside the files, and the name of a weather station in the basis of a flux. */
+const isTyped = (where: string): boolean => (where.endsWith(' text') && !where.startsWith('reconstruction')) || where.endsWith(' basis') || where === 'change note';
+
+function gather(data: unknown, texts: readonly ReleasedText[], notes: readonly Piece[]): Material {
   const strings: Piece[] = [];
   const numbers: { where: string; value: number }[] = [];
   const keys = new Set<string>();
   const seen = new Set<string>();
   const walk = (value: unknown, path: readonly string[]): void => {
     if (typeof value === 'string') {
-      if (!oursByForm.test(value) && !seen.has(value)) strings.push({ where: whereOf(path), text: value });
-      seen.add(value);
-    }
-    else if (typeof value === 'number') numbers.push({ where: whereOf(path), value });
+      const where = whereOf(path);
+      const key = `${isTyped(where)} ${value}`;
+      if (!oursByForm.test(value) && !seen.has(key)) strings.push({ where, text: value });
+      seen.add(key);
+    } else if (typeof value === 'number') numbers.push({ where: whereOf(path), value });
     else if (typeof value === 'object' && value !== null) {
       for (const [key, part] of Object.entries(value)) {
         if (!Array.isArray(value)) keys.add(key);
@@ -96,8 +100,8 @@ function gather(data: unknown, texts: readonly ReleasedText[]): Material {
     }
   };
   walk(data, []);
-  const typed = strings.filter(({ where }) => (where.endsWith(' text') && !where.startsWith('reconstruction')) || where.endsWith(' basis'));
-  return { strings, typed, numbers, keys: [...keys], files: texts.map(({ fileName, text }) => ({ where: fileName, text })) };
+  const all = [...strings, ...notes];
+  return { strings: all, typed: all.filter(({ where }) => isTyped(where)), numbers, keys: [...keys], files: texts.map(({ fileName, text }) => ({ where: fileName, text })) };
 }
 
 /** `hypotheses 2 statement 1 text` */

@@ -29,7 +29,9 @@ export const siteFormSchema = z.discriminatedUnion('intent', [
   z.object({ intent: z.literal('close-guest-link') }),
 ]);
 
-export const siteUseLabels: Record<(typeof siteUses)[number], string> = {
+export type SiteUse = (typeof siteUses)[number];
+
+export const siteUseLabels: Record<SiteUse, string> = {
   office: 'Office',
   dwelling: 'Dwelling',
   school: 'School',

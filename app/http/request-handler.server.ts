@@ -1,4 +1,6 @@
-import { createReadableStreamFromReadable, writeReadableStreamToWritable } from '@react-router/node';
+import { Readable } from 'node:stream';
+import { pipeline } from 'node:stream/promises';
+import { createReadableStreamFromReadable } from '@react-router/node';
 import type { Request as ExpressRequest, RequestHandler, Response as ExpressResponse } from 'express';
 import { createRequestHandler, RouterContextProvider } from 'react-router';
 import type { ServerBuild } from 'react-router';
@@ -91,7 +93,9 @@ async function send(answer: Response, response: ExpressResponse): Promise<void> 
     return;
   }
   try {
-    await writeReadableStreamToWritable(answer.body, response);
+    // A pipeline waits when the reader is slow; the framework's writer flushes the compressor after each piece and
+    // leaves a listener behind every time.
+    await pipeline(Readable.from(answer.body), response);
   } catch (error) {
     // The reader left before the end; there is nobody to tell.
     if (!response.destroyed) throw error;

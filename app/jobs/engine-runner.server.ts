@@ -1,12 +1,31 @@
 import { existsSync } from 'node:fs';
 import { Worker } from 'node:worker_threads';
 import { DomainError } from '#app/domain/errors.ts';
+import type { RecurrenceAnswer, RecurrenceRequest } from '#app/domain/recurrence-request.ts';
 import type { ReconstructionInput, ReconstructionResult } from '#app/physics/model.ts';
 
-type Answer =
+/** What a thread is asked to do. */
+export type EngineTask =
+  | { readonly kind: 'reconstruction'; readonly input: ReconstructionInput }
+  | { readonly kind: 'recurrence'; readonly request: RecurrenceRequest };
+
+type Answer<Result> =
   | { readonly kind: 'progress'; readonly done: number; readonly total: number }
-  | { readonly kind: 'result'; readonly result: ReconstructionResult }
+  | { readonly kind: 'result'; readonly result: Result }
   | { readonly kind: 'problem'; readonly refused: boolean; readonly message: string };
+
+export interface EngineOptions {
+  readonly timeoutMs: number;
+  readonly onProgress?: (done: number, total: number) => void;
+}
+
+/** The thread was stopped because it took too long. */
+export class EngineTimeoutError extends Error {
+  constructor(timeoutMs: number) {
+    super(`The reconstruction took longer than ${Math.round(timeoutMs / 1000)} s and was stopped.`);
+    this.name = 'EngineTimeoutError';
+  }
+}
 
 /** In development the thread runs from its source; a build bundles it beside the worker, at most two folders above. */
 function threadLocation(): { url: URL; execArgv: string[] } {
@@ -18,21 +37,15 @@ function threadLocation(): { url: URL; execArgv: string[] } {
   throw new Error('engine.thread.mjs is missing from the build.');
 }
 
-/**
- * Runs the engine in a thread of its own.
- *
- * @throws DomainError `invalid-input` when the engine refuses the input, with the engine's sentence; Error when the
- *   thread fails or takes longer than `timeoutMs`.
- */
-export function runEngine(input: ReconstructionInput, options: { timeoutMs: number; onProgress?: (done: number, total: number) => void }): Promise<ReconstructionResult> {
+function inThread<Result>(task: EngineTask, options: EngineOptions): Promise<Result> {
   const { url, execArgv } = threadLocation();
   return new Promise((resolve, reject) => {
-    const thread = new Worker(url, { workerData: input, execArgv });
+    const thread = new Worker(url, { workerData: task, execArgv });
     const timer = setTimeout(() => {
       void thread.terminate();
-      reject(new Error(`The reconstruction took longer than ${Math.round(options.timeoutMs / 1000)} s and was stopped.`));
+      reject(new EngineTimeoutError(options.timeoutMs));
     }, options.timeoutMs);
-    thread.on('message', (answer: Answer) => {
+    thread.on('message', (answer: Answer<Result>) => {
       if (answer.kind === 'progress') options.onProgress?.(answer.done, answer.total);
       else if (answer.kind === 'result') resolve(answer.result);
       else reject(answer.refused ? new DomainError('invalid-input', answer.message) : new Error(answer.message));
@@ -43,4 +56,19 @@ export function runEngine(input: ReconstructionInput, options: { timeoutMs: numb
       reject(new Error(`The reconstruction ended without an answer (exit ${code}).`));
     });
   });
+}
+
+/**
+ * Runs the engine in a thread of its own.
+ *
+ * @throws DomainError `invalid-input` when the engine refuses the input, with the engine's sentence; EngineTimeoutError
+ *   when it takes longer than `timeoutMs`; Error when the thread fails.
+ */
+export function runEngine(input: ReconstructionInput, options: EngineOptions): Promise<ReconstructionResult> {
+  return inThread({ kind: 'reconstruction', input }, options);
+}
+
+/** The calendar of return alone, in a thread of its own. Throws as `runEngine`. */
+export function runRecurrence(request: RecurrenceRequest, options: EngineOptions): Promise<RecurrenceAnswer> {
+  return inThread({ kind: 'recurrence', request }, options);
 }

@@ -13,7 +13,7 @@ export interface MailParts {
 const escapeHtml = (text: string): string =>
   text.replace(/[&<>"']/gu, (sign) => ({ '&': '&amp;', '<': '&lt;', '>': '&gt;', '"': '&quot;', "'": '&#39;' })[sign] ?? sign);
 
-const foot = 'You get this because of your part in a case. Scorchline never asks for a password by mail.';
+const foot = 'Scorchline writes to people with an account or a part in a case. It never asks for a password by mail.';
 
 /** One plain letter in text and HTML; the HTML loads nothing from anywhere. */
 export function mail({ heading, lines, link }: MailParts): MailBody {

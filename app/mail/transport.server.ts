@@ -11,13 +11,16 @@ export interface OutgoingMail {
   readonly messageId: string;
 }
 
+/** A server that does not answer is given up for this turn, since a row of the outbox is held meanwhile. */
+const patience = { connectionTimeout: 10_000, greetingTimeout: 10_000, socketTimeout: 30_000 } as const;
+
 let transporter: Transporter | undefined;
 
 /** A server on this machine has no certificate; any other one is spoken to in TLS as the address says. */
 const isLoopback = /\/\/(?:[^@/]*@)?(?:localhost|127\.0\.0\.1|\[::1\])/u;
 
 function connection(): Transporter {
-  transporter ??= nodemailer.createTransport({ url: env.SMTP_URL, ignoreTLS: isLoopback.test(env.SMTP_URL) });
+  transporter ??= nodemailer.createTransport({ url: env.SMTP_URL, ignoreTLS: isLoopback.test(env.SMTP_URL), ...patience });
   return transporter;
 }
 

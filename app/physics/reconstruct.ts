@@ -63,7 +63,8 @@ function heatingAt(focus: FocusOutcome | null, setting: Setting): HeatingResult 
   const { input, material, site } = setting;
   if (focus === null || material === null || input.target === undefined || focus.harmfulDwellS === null) return null;
   return heatingOf(input.target.materialId, material, input.target, {
-    fluxKwm2: focus.hotSpotKwm2,
+    // Only the most favourable end counts on direct sun beside the focus.
+    fluxKwm2: { ...focus.hotSpotKwm2, high: focus.hotSpotKwm2.high + focus.besideKwm2 },
     dwellS: focus.harmfulDwellS,
     airC: site.air.temperatureC,
     // Fluxes are means over 5 mm, so a finer core is not followed.

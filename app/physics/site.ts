@@ -18,10 +18,6 @@ export interface Site {
 
 const classSource: SourceRef = { text: 'climate class, stated median', verified: false };
 const standardSource: SourceRef = { text: 'ICAO standard atmosphere at the site’s height', verified: true };
-const commonPractice: SourceRef = { text: 'common practice', verified: true };
-
-/** Air temperature taken where none is given. [°C] */
-const defaultTemperatureC = 12;
 
 /** Settles pressure, temperature, ozone, water and aerosol; what was not given comes from the climate class. */
 export function settleSite(input: Pick<ReconstructionInput, 'place' | 'sky'>): Site {
@@ -34,7 +30,7 @@ export function settleSite(input: Pick<ReconstructionInput, 'place' | 'sky'>): S
   };
   const median = climateAir[sky.climateClass];
   const pressureHpa = settle('sky.pressureHpa', sky.pressureHpa, standardPressureAtPa(place.elevationM) / 100, 'hPa', standardSource);
-  const temperatureC = settle('sky.temperatureC', sky.temperatureC, defaultTemperatureC, '°C', commonPractice);
+  const temperatureC = settle('sky.temperatureC', sky.temperatureC, median.temperatureC, '°C', classSource);
   const aod500 = settle('sky.aod500', sky.aod500, median.aod500, '', classSource);
   const air: Air = {
     pressureHpa,

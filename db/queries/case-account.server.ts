@@ -54,7 +54,7 @@ export async function getCaseAccount(db: DbOrTx, params: { actor: Actor; caseNum
     people: await peopleOf(db, actor, row, subject),
     injuries: mayReadInjuries(actor, row, subject) ? (await listInjuries(db, params)).map(injuryView) : null,
     lacks: canOnCase(actor, 'reconstruction:read', subject) ? await lacksOf(db, row, facts, scene?.scene ?? null) : null,
-    moves: movesOf(actor, subject, facts),
+    moves: mayReadLog ? movesOf(actor, subject, facts) : { ...movesOf(actor, subject, facts), closed: [] },
     log: log?.map((line) => logLineView(line, row.zone)) ?? null,
     logCount: mayReadLog ? await countLog(db, row.id) : 0,
   };

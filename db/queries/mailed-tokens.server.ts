@@ -1,4 +1,4 @@
-import { and, eq, gt, isNull, sql } from 'drizzle-orm';
+import { and, eq, gt, isNull, lt, sql } from 'drizzle-orm';
 import type { DbOrTx, Transaction } from '#db/client.server.ts';
 import { mailedTokens, users } from '#db/schema/all.ts';
 
@@ -27,7 +27,15 @@ export async function useMailedToken(tx: Transaction, tokenHash: string, purpose
   return row?.userId ?? null;
 }
 
-/** Ends every other link of the same purpose. */
-export async function retireMailedTokens(tx: Transaction, userId: string, purpose: TokenPurpose): Promise<void> {
-  await tx.update(mailedTokens).set({ usedAt: sql`now()` }).where(and(eq(mailedTokens.userId, userId), eq(mailedTokens.purpose, purpose), isNull(mailedTokens.usedAt)));
+/** Ends the links of a person that are still open: those of one purpose, or all of them. */
+export async function retireMailedTokens(tx: Transaction, userId: string, purpose?: TokenPurpose): Promise<void> {
+  await tx
+    .update(mailedTokens)
+    .set({ usedAt: sql`now()` })
+    .where(and(eq(mailedTokens.userId, userId), purpose ? eq(mailedTokens.purpose, purpose) : undefined, isNull(mailedTokens.usedAt)));
+}
+
+/** Removes links that ended more than a month ago. */
+export async function deleteOldMailedTokens(db: DbOrTx): Promise<void> {
+  await db.delete(mailedTokens).where(lt(mailedTokens.expiresAt, sql`now() - interval '30 days'`));
 }

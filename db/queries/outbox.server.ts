@@ -27,8 +27,13 @@ export function claimDueMail(tx: Transaction, limit: number) {
     .for('update', { skipLocked: true });
 }
 
+/** Letters without a case hold links that open an account, so their words are not kept once they have gone. */
 export async function markMailSent(db: DbOrTx, mailId: string): Promise<void> {
-  await db.update(outbox).set({ state: 'sent', sentAt: sql`now()`, attempts: sql`${outbox.attempts} + 1`, lastError: null }).where(eq(outbox.id, mailId));
+  const keptOfCase = (column: typeof outbox.bodyText | typeof outbox.bodyHtml) => sql`case when ${outbox.caseId} is null then '' else ${column} end`;
+  await db
+    .update(outbox)
+    .set({ state: 'sent', sentAt: sql`now()`, attempts: sql`${outbox.attempts} + 1`, lastError: null, bodyText: keptOfCase(outbox.bodyText), bodyHtml: keptOfCase(outbox.bodyHtml) })
+    .where(eq(outbox.id, mailId));
 }
 
 export const mailAttemptLimit = 8;

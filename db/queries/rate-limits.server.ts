@@ -1,4 +1,4 @@
-import { sql } from 'drizzle-orm';
+import { lt, sql } from 'drizzle-orm';
 import type { DbOrTx } from '#db/client.server.ts';
 import { rateLimits } from '#db/schema/all.ts';
 
@@ -17,4 +17,9 @@ export async function countHit(db: DbOrTx, key: string, windowS: number): Promis
     })
     .returning({ hits: rateLimits.hits });
   return row?.hits ?? 1;
+}
+
+/** Forgets counters of windows that are over; their keys hold addresses. No window is longer than a day. */
+export async function deleteOldHits(db: DbOrTx): Promise<void> {
+  await db.delete(rateLimits).where(lt(rateLimits.windowStartedAt, sql`now() - interval '1 day'`));
 }

@@ -17,6 +17,12 @@ export async function getSiteByCode(db: DbOrTx, organisationId: string, code: st
   return row ?? null;
 }
 
+/** As `getSiteByCode`, held until the transaction ends. */
+export async function lockSiteByCode(tx: Transaction, organisationId: string, code: string): Promise<SiteRow | null> {
+  const [row] = await tx.select().from(sites).where(and(eq(sites.code, code), eq(sites.organisationId, organisationId))).for('update');
+  return row ?? null;
+}
+
 /** Sites of the organisation for a list to choose from. */
 export function listSiteChoices(db: DbOrTx, organisationId: string): Promise<{ id: string; code: string; name: string }[]> {
   return db.select({ id: sites.id, code: sites.code, name: sites.name }).from(sites).where(eq(sites.organisationId, organisationId)).orderBy(asc(sites.name));

@@ -1,6 +1,6 @@
-import { and, asc, eq, sql } from 'drizzle-orm';
+import { and, asc, count, eq, inArray, isNotNull, isNull, notInArray, or, sql } from 'drizzle-orm';
 import type { DbOrTx, Transaction } from '#db/client.server.ts';
-import { grants, organisations, sites, users } from '#db/schema/all.ts';
+import { cases, correctiveActions, grants, organisations, sites, users } from '#db/schema/all.ts';
 import type { Role } from '#app/domain/roles.ts';
 
 export interface Account {
@@ -111,9 +111,49 @@ export async function lockAdministrators(tx: Transaction, organisationId: string
     .select({ userId: grants.userId })
     .from(grants)
     .innerJoin(users, eq(users.id, grants.userId))
-    .where(and(eq(users.organisationId, organisationId), eq(users.disabled, false), eq(grants.role, 'administrator')))
+    .where(and(eq(users.organisationId, organisationId), eq(users.disabled, false), isNotNull(users.passwordHash), eq(grants.role, 'administrator')))
     .for('update');
   return [...new Set(rows.map((row) => row.userId))];
+}
+
+export interface Leaver {
+  readonly displayName: string;
+  readonly openCases: number;
+  readonly openActions: number;
+}
+
+/** People whose account is switched off and who still hold open cases or actions, by name. Counts only. */
+export async function listLeavers(db: DbOrTx, organisationId: string): Promise<Leaver[]> {
+  const heldCases = db
+    .select({ userId: cases.assignedToId, count: count().as('open_cases') })
+    .from(cases)
+    .where(notInArray(cases.state, ['closed', 'duplicate']))
+    .groupBy(cases.assignedToId)
+    .as('held_cases');
+  const heldActions = db
+    .select({ userId: correctiveActions.ownerId, count: count().as('open_actions') })
+    .from(correctiveActions)
+    .where(inArray(correctiveActions.state, ['open', 'in-progress']))
+    .groupBy(correctiveActions.ownerId)
+    .as('held_actions');
+  const rows = await db
+    .select({ displayName: users.displayName, openCases: heldCases.count, openActions: heldActions.count })
+    .from(users)
+    .leftJoin(heldCases, eq(heldCases.userId, users.id))
+    .leftJoin(heldActions, eq(heldActions.userId, users.id))
+    .where(and(eq(users.organisationId, organisationId), eq(users.disabled, true), or(isNotNull(heldCases.count), isNotNull(heldActions.count))))
+    .orderBy(asc(users.displayName));
+  return rows.map((row) => ({ displayName: row.displayName, openCases: row.openCases ?? 0, openActions: row.openActions ?? 0 }));
+}
+
+/** Who holds a role for a site, by role and name; roles for every site are included. Accounts that are switched off are left out. */
+export function listPeopleOfSite(db: DbOrTx, params: { organisationId: string; siteId: string }) {
+  return db
+    .select({ role: grants.role, displayName: users.displayName, siteId: grants.siteId })
+    .from(grants)
+    .innerJoin(users, eq(users.id, grants.userId))
+    .where(and(eq(users.organisationId, params.organisationId), eq(users.disabled, false), or(isNull(grants.siteId), eq(grants.siteId, params.siteId))))
+    .orderBy(asc(users.displayName));
 }
 
 export async function getOrganisationName(db: DbOrTx, organisationId: string): Promise<string> {

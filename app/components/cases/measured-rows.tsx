@@ -30,16 +30,15 @@ function MeasuredRow({ of, field }: { readonly of: SceneField; readonly field: M
   return (
     <fieldset id={`${id}-row`} className={`border-b border-hair py-2 ${hasErrors(value) ? 'border-l-5 border-l-ink pl-3' : ''}`}>
       <legend className="sr-only">{of.label}</legend>
-      <div className="flex flex-wrap items-end gap-x-3 gap-y-1">
-        <div className="min-w-44 flex-[1_1_12rem]">
+      <div className="grid grid-cols-[minmax(0,1fr)_2.5rem_minmax(0,1fr)] items-center gap-x-2 gap-y-1 tablet:grid-cols-[minmax(0,1fr)_6rem_3rem_5rem_8rem_10.5rem]">
+        <div className="max-tablet:col-span-3">
           <label htmlFor={id} className="font-medium">{of.label}</label>
           {of.help ? <span className="block text-axis text-second" id={fieldIds(value).helpId}>{of.help}</span> : null}
         </div>
-        <Box label={`${of.label}, value`} field={value} width="w-24" describedBy={describedBy(value, Boolean(of.help))} invalid={hasErrors(value)} id={id} />
-        <span className="pb-2.5 text-second">{of.unit}</span>
-        <span className="pb-2.5 text-second" aria-hidden="true">±</span>
-        <Box label={`${of.label}, plus or minus`} field={field(`${name}.plusMinus`)} width="w-20" />
-        {of.bearing ? <Pick label={`${of.label}, which north`} field={field(`${name}.north`)} options={norths} /> : null}
+        <Box label={`${of.label}, value`} field={value} describedBy={describedBy(value, Boolean(of.help))} invalid={hasErrors(value)} id={id} />
+        <span className="text-second">{of.unit} <span aria-hidden="true">±</span></span>
+        <Box label={`${of.label}, plus or minus`} field={field(`${name}.plusMinus`)} />
+        {of.bearing ? <Pick label={`${of.label}, which north`} field={field(`${name}.north`)} options={norths} /> : <span className="max-tablet:hidden" />}
         <Pick label={`${of.label}, method`} field={field(`${name}.method`)} options={methods} />
       </div>
       <FieldError field={value} />
@@ -50,19 +49,18 @@ function MeasuredRow({ of, field }: { readonly of: SceneField; readonly field: M
 interface BoxProps {
   readonly label: string;
   readonly field: FieldLike;
-  readonly width: string;
   readonly id?: string;
   readonly describedBy?: string | undefined;
   readonly invalid?: boolean;
 }
 
-function Box({ label, field, width, id, describedBy: description, invalid = false }: BoxProps) {
-  return <input id={id ?? fieldIds(field).id} name={field.name} defaultValue={fieldText(field)} aria-label={label} aria-describedby={description} aria-invalid={invalid || undefined} autoComplete="off" inputMode="text" className={`field-box ${width}`} />;
+function Box({ label, field, id, describedBy: description, invalid = false }: BoxProps) {
+  return <input id={id ?? fieldIds(field).id} name={field.name} defaultValue={fieldText(field)} aria-label={label} aria-describedby={description} aria-invalid={invalid || undefined} autoComplete="off" inputMode="text" className="field-box w-full min-w-0" />;
 }
 
 function Pick({ label, field, options }: { readonly label: string; readonly field: FieldLike; readonly options: readonly (readonly [string, string])[] }) {
   return (
-    <select name={field.name} id={fieldIds(field).id} defaultValue={fieldText(field)} aria-label={label} className="field-box w-auto">
+    <select name={field.name} id={fieldIds(field).id} defaultValue={fieldText(field)} aria-label={label} className="field-box w-full min-w-0 max-tablet:last:col-span-3">
       {options.map(([value, words]) => <option key={value} value={value}>{words}</option>)}
     </select>
   );

@@ -30,7 +30,7 @@ export function MovesPanel(props: MovesPanelProps) {
   return (
     <section aria-labelledby="moves-heading">
       <h2 id="moves-heading" className="text-group font-semibold">Moves open to you</h2>
-      {moves.open.length === 0 ? <p className="py-1 text-small text-second">None from this state.</p> : <p className="pb-1 text-small text-second">Each one writes a line in the log.</p>}
+      {moves.open.length === 0 ? <p className="py-1 text-small text-second">None from this state; the next step is with somebody else.</p> : <p className="pb-1 text-small text-second">Each one writes a line in the log.</p>}
       {moves.open.map((move, index) => <OneMove key={move.id} move={move} first={index === 0} {...props} />)}
       {moves.closed.length > 0 ? (
         <div className="pt-3">

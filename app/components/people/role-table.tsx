@@ -1,49 +1,85 @@
-import { Cell, DataTable, HeadCell, Row, TableHead } from '#app/components/ui/data-table.tsx';
+import { AppLink } from '#app/components/ui/app-link.tsx';
+import { Cell, DataTable, GroupRow, HeadCell, Row, TableHead } from '#app/components/ui/data-table.tsx';
 import { roleLabels, roleMeanings, roles } from '#app/domain/roles.ts';
+import type { Role } from '#app/domain/roles.ts';
 import { roleTable } from '#app/domain/role-table.ts';
+import type { Right } from '#app/domain/role-table.ts';
 
-const shownRoles = roles.filter((role) => role !== 'insurer');
+const ground = (isChosen: boolean) => (isChosen ? 'bg-wash' : '');
 
-/** The permission table as the server applies it: a filled square may, a dash may not. */
-export function RoleTable() {
+/** The permission table as the server applies it; the head of a column chooses a role and shows what it means. */
+export function RoleTable({ chosen }: { readonly chosen: Role }) {
   return (
-    <div className="space-y-5 pt-3">
-      <dl className="grid gap-x-10 gap-y-2 desk:grid-cols-2">
-        {roles.map((role) => (
-          <div key={role}>
-            <dt className="font-semibold">{roleLabels[role]}</dt>
-            <dd className="text-second">{roleMeanings[role]}</dd>
-          </div>
-        ))}
-      </dl>
-      <DataTable caption="Actions by role; a role for one site covers that site only">
-        <TableHead>
-          <HeadCell>Action</HeadCell>
-          {shownRoles.map((role) => <HeadCell key={role}>{roleLabels[role]}</HeadCell>)}
-          <HeadCell>Also, or not</HeadCell>
-        </TableHead>
-        <tbody>
-          {roleTable().map((row) => (
-            <Row key={row.action} tight>
-              <Cell heading>{row.words}</Cell>
-              {shownRoles.map((role) => (
-                <Cell key={role}>
-                  <Right may={row.roles.includes(role)} />
-                </Cell>
+    <div className="gap-x-10 pt-1 desk:grid desk:grid-cols-[minmax(0,1fr)_260px]">
+      <div className="min-w-0">
+        <DataTable caption="What each role may do; a role for one site covers that site only">
+          <TableHead>
+            <HeadCell>Action</HeadCell>
+            {roles.map((role) => (
+              <HeadCell key={role} className={`min-w-[88px] !pl-1.5 ${ground(role === chosen)}`}>
+                <AppLink href={`/people?role=${role}#rights-heading`} className="inline-flex min-h-6 items-end" {...(role === chosen ? { 'aria-current': 'true' as const } : {})}>
+                  {roleLabels[role]}
+                </AppLink>
+              </HeadCell>
+            ))}
+          </TableHead>
+          {roleTable().map((group) => (
+            <tbody key={group.heading}>
+              <GroupRow columns={roles.length + 1}>{group.heading}</GroupRow>
+              {group.rows.map((row) => (
+                <Row key={row.words} tight>
+                  <Cell heading className="min-w-[132px] !font-normal">{row.words}</Cell>
+                  {roles.map((role) => (
+                    <Cell key={role} className={`!pl-1.5 ${ground(role === chosen)}`}>
+                      <RightMark right={row.rights[role]} />
+                    </Cell>
+                  ))}
+                </Row>
               ))}
-              <Cell>{row.relations}</Cell>
-            </Row>
+            </tbody>
           ))}
-        </tbody>
-      </DataTable>
+        </DataTable>
+        <Key />
+      </div>
+      <div className="max-desk:pt-6 desk:border-l desk:border-hair desk:pl-6">
+        <h3 className="border-t-[1.5px] border-ink pt-2 text-group font-semibold">{roleLabels[chosen]}</h3>
+        <p className="pt-1.5">{roleMeanings[chosen]}</p>
+      </div>
     </div>
   );
 }
 
-function Right({ may }: { readonly may: boolean }) {
+const said = { any: 'may', part: 'may, limited to', limit: 'may, but', no: 'may not' } as const;
+
+function RightMark({ right }: { readonly right: Right }) {
   return (
-    <svg width="14" height="14" viewBox="0 0 14 14" role="img" aria-label={may ? 'may' : 'may not'} className="fill-ink stroke-ink">
-      {may ? <rect x="2" y="2" width="10" height="10" /> : <line x1="3" x2="11" y1="7" y2="7" strokeWidth="1.5" />}
+    <span className="block text-axis">
+      <Shape kind={right.kind} />
+      <span className="sr-only">{said[right.kind]} </span>
+      {'words' in right ? <span className="block text-second">{right.words}</span> : null}
+    </span>
+  );
+}
+
+/** Filled: any. Half: own or assigned. Open: with the limit named. Dash: no. */
+function Shape({ kind }: { readonly kind: Right['kind'] }) {
+  return (
+    <svg width="14" height="14" viewBox="0 0 14 14" aria-hidden="true" className="my-0.5 inline-block stroke-ink" fill="none">
+      {kind === 'no' ? <line x1="3.5" x2="10.5" y1="7" y2="7" strokeWidth="1.5" /> : <rect x="1.5" y="1.5" width="11" height="11" strokeWidth="1.5" className={kind === 'any' ? 'fill-ink' : ''} />}
+      {kind === 'part' ? <path d="M1.5 12.5V1.5H12.5Z" className="fill-ink" stroke="none" /> : null}
     </svg>
+  );
+}
+
+function Key() {
+  return (
+    <ul className="flex flex-wrap gap-x-6 gap-y-1 pt-3 text-axis text-second" aria-label="Signs of the table">
+      {([['any', 'any case at the sites of the role'], ['part', 'only what is named'], ['limit', 'with the limit named'], ['no', 'no']] as const).map(([kind, words]) => (
+        <li key={kind} className="flex items-center gap-2">
+          <Shape kind={kind} />
+          {words}
+        </li>
+      ))}
+    </ul>
   );
 }

@@ -18,6 +18,7 @@ export interface FoundAnswerTyped {
  */
 export function foundCardModel(site: SiteChoice, typed: FoundAnswerTyped): BurnCardModel | null {
   const { today, zone, nowLocal, nowUtc } = site;
+  if (!today) return null;
   // Within one day of one place, clock time and instant differ by the same amount, except on the two days of a change.
   const instantOf = (local: string) => (local.slice(0, 10) === nowLocal.slice(0, 10) ? new Date(Date.parse(nowUtc) + Date.parse(`${local}Z`) - Date.parse(`${nowLocal}Z`)).toISOString() : null);
   const foundLocal = typed.foundWhen === 'at' ? typed.foundLocal : typed.foundWhen === 'range' ? typed.foundToLocal : '';
@@ -44,7 +45,7 @@ export function FoundCard({ site, typed }: { readonly site: SiteChoice; readonly
   return (
     <div>
       <BurnCard model={model} size="M" label="Today at the place" />
-      <p className="text-axis text-second">{site.today.words}{model.window ? ' Dots: since it was last seen sound; nothing is measured yet.' : ''}</p>
+      <p className="text-axis text-second">{site.today?.words}{model.window ? ' Dots: since it was last seen sound; nothing is measured yet.' : ''}</p>
     </div>
   );
 }

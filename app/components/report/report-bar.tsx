@@ -33,9 +33,12 @@ function buttonWord(sending: SendingState): string {
   return sending === 'waiting-for-signal' ? 'Try now' : 'Send';
 }
 
+/** A desk computer is not called a phone. */
+const deviceWord = () => (window.matchMedia('(pointer: coarse)').matches ? 'phone' : 'device');
+
 function words({ hydrated, draft, sending, photosOnTheWay }: ReportBarProps): { title: string; detail: string } {
   if (!hydrated) return { title: '', detail: "Four answers are needed; “Don't know” is one." };
-  const saved = draft.unkept ? 'Not kept: leave this page open' : draft.savedAt === null ? 'Nothing typed yet' : `Saved on this phone, ${draft.savedAt}`;
+  const saved = draft.unkept ? 'Not kept: leave this page open' : draft.savedAt === null ? 'Nothing typed yet' : `Saved on this ${deviceWord()}, ${draft.savedAt}`;
   if (sending === 'waiting-for-signal') return { title: saved, detail: 'No signal. It goes by itself, once only' };
   if (sending === 'waiting-for-photos') return { title: saved, detail: `${photosOnTheWay === 1 ? 'One photo is' : `${photosOnTheWay} photos are`} still on the way` };
   return { title: saved, detail: draft.missing === null ? 'All four answered' : `${draft.answered} of 4 answered; say ${draft.missing}` };

@@ -70,7 +70,7 @@ export function ReportForm({ address, clientId, sites, guest, state, stored, for
       <input type="hidden" name="clientId" value={clientId} />
       {/* The first button of a form answers the Enter key: it must be the one that sends. */}
       <button type="submit" name="intent" value="send" tabIndex={-1} aria-hidden="true" className="sr-only">Send</button>
-      <div className="pb-4"><ErrorSummary errors={state.formErrors} fields={summaryFields(field, state)} title="Not sent yet. What you typed is still here." /></div>
+      <div className="pb-4 empty:hidden"><ErrorSummary errors={state.formErrors} fields={summaryFields(field, state)} title="Not sent yet. What you typed is still here." /></div>
       <PhotoStrip field={field} clientId={clientId} stored={stored} uploads={uploads} />
       <WhereQuestion field={field} sites={sites} chosen={site} fixed={guest} onSite={startClock} />
       <WhenQuestion field={field} state={state} site={site} values={draft.values} onAnswer={pinNow} />

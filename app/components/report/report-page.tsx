@@ -44,7 +44,8 @@ export function ReportPage({ view, problem }: { readonly view: ReportView; reado
   const sending = useReportSending({ form, address, photosOnTheWay: uploads.onTheWay });
   const addressOf = useCallback((id: string) => reportAddress(id, guestCode), [guestCode]);
   const draft = useReportDraft({ form, clientId, holderKey: view.holderKey, addressOf, mending: problem !== null, first: { ...(view.sites.length === 1 ? { siteId: view.sites[0]?.id ?? '' } : {}), ...problem?.typed } });
-  const atForm = hydrated && draft.begun;
+  // A form that came back to be mended is the page, with a script or without.
+  const atForm = problem !== null || (hydrated && draft.begun);
 
   useEffect(() => {
     if (!problem) return;

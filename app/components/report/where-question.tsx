@@ -24,8 +24,8 @@ export interface SiteChoice {
   /** The present on the clock of the site, `YYYY-MM-DDTHH:MM`. */
   readonly nowLocal: string;
   readonly nowUtc: string;
-  /** The local day, for the card under the second question. */
-  readonly today: TodayAtSite;
+  /** The local day, for the card under the second question; null: no card. */
+  readonly today: TodayAtSite | null;
   /** To about 100 m; null for guests, who are told no position. */
   readonly around: { readonly latitudeDeg: number; readonly longitudeDeg: number } | null;
 }

@@ -5,6 +5,7 @@ import { nearestPoint, placeLabels } from './label-places.ts';
 import type { Box } from './label-places.ts';
 import type { EdgeTick } from './world-layers.client.ts';
 import { STILL, addGraticule, addNight, addWorld } from './world-layers.client.ts';
+import { useLatest } from './use-latest.ts';
 import './map.css';
 
 const PIN_RADIUS = 5;
@@ -17,6 +18,7 @@ export default function CaseMap({ points, sunOverhead, onFollow }: CaseMapProps)
   const [ticks, setTicks] = useState<readonly EdgeTick[]>([]);
   const [map, setMap] = useState<L.Map | null>(null);
   const [narrow, setNarrow] = useState(false);
+  const follow = useLatest(onFollow);
   const overheadLatitude = sunOverhead?.latitudeDeg;
   const overheadLongitude = sunOverhead?.longitudeDeg;
 
@@ -50,7 +52,7 @@ export default function CaseMap({ points, sunOverhead, onFollow }: CaseMapProps)
     }
   }, [map, overheadLatitude, overheadLongitude]);
 
-  useEffect(() => (map ? showPoints(map, points, narrow, onFollow) : undefined), [map, points, narrow, onFollow]);
+  useEffect(() => (map ? showPoints(map, points, narrow, follow) : undefined), [map, points, narrow, follow]);
   useEffect(() => {
     if (map) fitTo(map, points);
   }, [map, points]);
@@ -98,6 +100,8 @@ function Edge({ ticks, axis, inside = false }: { readonly ticks: readonly EdgeTi
   );
 }
 
+type Follow = { readonly current: CaseMapProps['onFollow'] };
+
 interface Pin {
   readonly point: CasePoint;
   readonly marker: L.Marker;
@@ -106,8 +110,8 @@ interface Pin {
 }
 
 /** Puts a marker for each case, arranges the labels, and arranges them again after each move. Returns the way back. */
-function showPoints(map: L.Map, points: readonly CasePoint[], narrow: boolean, onFollow: CaseMapProps['onFollow']): () => void {
-  const pins = points.map((point) => addPin(map, point, narrow, onFollow));
+function showPoints(map: L.Map, points: readonly CasePoint[], narrow: boolean, follow: Follow): () => void {
+  const pins = points.map((point) => addPin(map, point, narrow, follow));
   const arrange = () => arrangeLabels(map, pins);
   map.on('moveend zoomend resize', arrange);
   arrange();
@@ -117,7 +121,7 @@ function showPoints(map: L.Map, points: readonly CasePoint[], narrow: boolean, o
   };
 }
 
-function addPin(map: L.Map, point: CasePoint, narrow: boolean, onFollow: CaseMapProps['onFollow']): Pin {
+function addPin(map: L.Map, point: CasePoint, narrow: boolean, follow: Follow): Pin {
   const holder = document.createElement('div');
   const { svg, leader } = drawPin(point);
   const label = document.createElement('a');
@@ -130,9 +134,9 @@ function addPin(map: L.Map, point: CasePoint, narrow: boolean, onFollow: CaseMap
   if (point.note && !narrow) label.append(document.createTextNode(point.note));
   label.addEventListener('click', (event) => {
     event.stopPropagation();
-    if (!onFollow || event.metaKey || event.ctrlKey || event.shiftKey || event.button !== 0) return;
+    if (!follow.current || event.metaKey || event.ctrlKey || event.shiftKey || event.button !== 0) return;
     event.preventDefault();
-    onFollow(point.href);
+    follow.current(point.href);
   });
   holder.append(svg, label);
   const icon = L.divIcon({ html: holder, className: '', iconSize: [0, 0] });

@@ -6,6 +6,7 @@ import { stepped } from './coordinate-text.ts';
 import { lengthText, scaleBar } from './graticule.ts';
 import type { EdgeTick } from './world-layers.client.ts';
 import { STILL, addGraticule, addWorld } from './world-layers.client.ts';
+import { useLatest } from './use-latest.ts';
 import './map.css';
 
 export interface PickerMapProps {
@@ -142,14 +143,6 @@ function followSize(map: L.Map, element: HTMLElement): () => void {
   const watcher = new ResizeObserver(() => map.invalidateSize({ animate: false }));
   watcher.observe(element);
   return () => watcher.disconnect();
-}
-
-function useLatest<T>(value: T): { readonly current: T } {
-  const latest = useRef(value);
-  useEffect(() => {
-    latest.current = value;
-  });
-  return latest;
 }
 
 /** The fixed cross at the middle; its centre is filled once a place is set. */

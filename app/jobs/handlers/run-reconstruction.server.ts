@@ -1,6 +1,7 @@
 import { db } from '#db/client.server.ts';
 import { claimReconstruction, storeFailure, storeResult, updateProgress } from '#db/queries/reconstructions.server.ts';
 import { DomainError } from '#app/domain/errors.ts';
+import { log } from '#app/log.server.ts';
 import { hashOf } from '#app/storage/sha256.server.ts';
 import { runEngine } from '../engine-runner.server.ts';
 
@@ -24,7 +25,7 @@ export async function runReconstruction({ reconstructionId }: { reconstructionId
         if (now - lastReport < progressEveryMs) return;
         lastReport = now;
         // Progress is for the eye; a lost report is made good by the next one.
-        updateProgress(db, reconstructionId, done, total).catch((error: unknown) => console.error('progress was not stored', error));
+        updateProgress(db, reconstructionId, done, total).catch((error: unknown) => log.warn({ err: error }, 'progress was not stored'));
       },
     });
     await storeResult(db, reconstructionId, { result, resultHash: hashOf(result), zoneRules: process.versions.tz ?? '' });
@@ -33,7 +34,7 @@ export async function runReconstruction({ reconstructionId }: { reconstructionId
       await storeFailure(db, reconstructionId, error.message);
       return;
     }
-    await storeFailure(db, reconstructionId, 'The run failed on our side and is tried again.');
+    await storeFailure(db, reconstructionId, 'The run failed on our side. It is tried up to three times; if this stays, run it again.');
     throw error;
   }
 }

@@ -86,16 +86,15 @@ function declinationCheck(setting: Setting): Check {
 function missChecks(setting: Setting, { best }: Evidence): Check[] {
   const { mark, model, reach } = setting;
   const miss = best?.miss ?? null;
-  if (model === null || mark === null || reach === null || miss === null || best === null) {
+  if (model === null || mark === null || reach === null || miss === null || best === null || !lightReaches(best)) {
     return [check('focus-beside-mark', 'geometry', null, null, 'mm', 'Needs the optic, the mark and light on the optic.')];
   }
   const lateral = (lateralToleranceM(reach, mark, model.focusKind) + 2 * surveySigmaM(mark) - miss.lateralM) * 1000;
   const near = miss.alongM - reach.nearM;
   const far = reach.farM - miss.alongM;
   const axial = (Math.min(near, far) + 2 * mark.sigmaAxialM) * 1000;
-  const reached = lightReaches(best);
   return [
-    check('focus-beside-mark', 'geometry', reached ? lateral >= 0 : null, lateral, 'mm',
+    check('focus-beside-mark', 'geometry', lateral >= 0, lateral, 'mm',
       `At its closest the focus passes ${roundSignificant(miss.lateralM * 1000, 3)} mm beside the mark.`),
     check('mark-within-depth', 'geometry', axial >= 0, axial, 'mm',
       `The mark lies ${roundSignificant(Math.abs(miss.axialM) * 1000, 3)} mm ${miss.axialM >= 0 ? 'beyond' : 'short of'} the sharpest distance.`),
@@ -104,16 +103,16 @@ function missChecks(setting: Setting, { best }: Evidence): Check[] {
 
 function fluxCheck(setting: Setting, { focus, best }: Evidence): Check {
   const { reach } = setting;
-  if (focus === null || reach === null || best === null) return check('flux-in-clean-air', 'energy', null, null, 'kW/m²', 'Needs the optic, the mark and light on the optic.');
+  if (focus === null || reach === null || best === null || !lightReaches(best)) return check('flux-in-clean-air', 'energy', null, null, 'kW/m²', 'Needs the optic, the mark and light on the optic.');
   if (best.sun.apparentElevationDeg < 3) return check('flux-in-clean-air', 'energy', null, null, 'kW/m²', 'Below 3° no clear-sky figure holds, so flux cannot refute.');
-  const highest = focus.hotSpotKwm2.high;
+  const highest = focus.hotSpotKwm2.high + focus.besideKwm2;
   const margin = highest - reach.thresholdKwm2;
   return check('flux-in-clean-air', 'energy', margin >= 0, margin, 'kW/m²',
-    `In the cleanest air the hot spot gives ${roundSignificant(highest, 2)} kW/m² on 5 mm; the target needs ${roundSignificant(reach.thresholdKwm2, 2)} at least.`);
+    `In the cleanest air the hot spot gives ${roundSignificant(highest, 2)} kW/m² on 5 mm${focus.besideKwm2 > 0 ? ', direct sun on the target included' : ''}; the target needs ${roundSignificant(reach.thresholdKwm2, 2)} at least.`);
 }
 
-function dwellCheck({ heating, dwellAtBoundS }: Evidence): Check {
-  if (heating === null || dwellAtBoundS === null || heating.outcomes.length === 0) {
+function dwellCheck({ best, heating, dwellAtBoundS }: Evidence): Check {
+  if (best === null || !lightReaches(best) || heating === null || dwellAtBoundS === null || heating.outcomes.length === 0) {
     return check('dwell-long-enough', 'energy', null, null, 's', 'Needs the target material and the motion of the spot.');
   }
   const refused = heating.outcomes.every((outcome) => outcome.answer === 'not reached');
@@ -141,9 +140,9 @@ function overcastCheck(setting: Setting, { judged }: Evidence): Check {
     dark ? `Direct irradiance stayed at or below ${Math.round(highest)} W/m² through the whole window.` : `Direct irradiance reached ${Math.round(highest)} W/m² in the window.`);
 }
 
-function trailChecks(setting: Setting, { focus, judged }: Evidence): Check[] {
+function trailChecks(setting: Setting, { best, focus, judged }: Evidence): Check[] {
   const { mark, model } = setting;
-  if (mark === null || model === null || focus === null) return [check('trail-heading', 'mark', null, null, '°', 'Needs the optic and the mark.')];
+  if (mark === null || model === null || focus === null || best === null || !lightReaches(best)) return [check('trail-heading', 'mark', null, null, '°', 'Needs the optic, the mark and light on the optic.')];
   const list: Check[] = [];
   const computed = focus.result.trailHeadingDeg;
   if (mark.trailHeadingDeg === null || computed === null) {
@@ -156,6 +155,8 @@ function trailChecks(setting: Setting, { focus, judged }: Evidence): Check[] {
   const needed = focus.result.trailMinutesAtLeast;
   if (model.focusKind === 'line') {
     list.push(check('trail-time', 'mark', null, null, 'min', 'A line focus makes a long mark at once: its length carries no time.'));
+  } else if (needed === 0 && mark.halfLengthM > 0) {
+    list.push(check('trail-time', 'mark', null, null, 'min', 'The mark is no longer than the spot is wide: its length carries no time.'));
   } else if (needed !== null && mark.halfLengthM > 0) {
     const available = judged.filter((minute) => minute.verdict !== 'not-sunlit').length;
     list.push(check('trail-time', 'mark', available >= needed, available - needed, 'min',

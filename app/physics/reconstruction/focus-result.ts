@@ -15,7 +15,10 @@ import { cutShares, tracedResult, type TracedFocus } from './traced-focus.ts';
 import { markDiscM, type JudgedMinute } from './window.ts';
 
 /** Direct irradiance at the optic: low, likely and with the cleanest air. [W/m²] */
-export type LightBand = Band;
+export interface LightBand extends Band {
+  /** Bound before any glass in the path. [W/m²] */
+  readonly beside: number;
+}
 
 /** Fluxes at which the dwell is quoted. [kW/m²] */
 const dwellThresholds = [1.5, 5, 10, 12.5, 20, 25, 50] as const;
@@ -128,7 +131,9 @@ export interface FocusOutcome {
   readonly result: FocusResult;
   /** Flux on the 5 mm disc round the hot spot, for the energy test: low, likely, cleanest air. [kW/m²] */
   readonly hotSpotKwm2: Band;
-  /** Radius of the spot at half of its greatest flux. [m] */
+  /** Direct sun that may lie on the target beside the focused light: the bound for a reflecting optic, else none. [kW/m²] */
+  readonly besideKwm2: number;
+  /** Radius of the round spot, at half of the greatest flux, that loses as much heat sideways. [m] */
   readonly spotRadiusM: number;
   /** Time above the lowest harmful flux at one point; null without a mark. [s] */
   readonly harmfulDwellS: Band | null;
@@ -139,7 +144,7 @@ export function lightBand(light: DirectBeam, sampling: Sampling | null): LightBa
   const likely = (light.likelyWm2 ?? 0) * light.transmittance;
   const bound = light.measuredWm2 === null ? (light.boundWm2 ?? light.likelyWm2 ?? 0) : light.measuredWm2 * 1.05;
   const low = sampling?.beamAtOpticWm2.low ?? likely * 0.8;
-  return { low: Math.min(low, likely), mid: likely, high: Math.max(bound * light.transmittance, likely) };
+  return { low: Math.min(low, likely), mid: likely, high: Math.max(bound * light.transmittance, likely), beside: bound };
 }
 
 /** What was computed at the best minute before its numbers are put together. */
@@ -169,7 +174,9 @@ export function focusOf(minute: JudgedMinute, beam: Beam, parts: FocusParts, set
   const hot = concentrationBand(plane, 0, markDiscM, setting.opticSigmaRel, traced?.concentration('5 mm', 'hot spot') ?? null);
   guardTemperature(hot.high * light.high);
   return {
-    spotRadiusM: halfMaxM / 2,
+    besideKwm2: model.reflects ? light.beside / 1000 : 0,
+    // A line loses heat to two sides only; the round spot of the same area stands for it.
+    spotRadiusM: model.focusKind === 'line' ? Math.sqrt((halfMaxM / 2) * model.lineHalfLengthM) : halfMaxM / 2,
     harmfulDwellS: motion === null || motion.acrossMPerS <= 0 ? null : dwellBand(plane, thresholdKwm2, light, traced, motion),
     hotSpotKwm2: { low: (hot.low * light.low) / 1000, mid: (hot.mid * light.mid) / 1000, high: (hot.high * light.high) / 1000 },
     result: {

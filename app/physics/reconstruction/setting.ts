@@ -74,16 +74,35 @@ function opticAssumptions(input: ReconstructionInput): Assumption[] {
   return list;
 }
 
-/** Reach of the beam of the required sun in the cleanest air. */
-function settleReach(input: ReconstructionInput, site: Site, model: FocusModel, mark: Mark, required: RequiredSun | null, material: TargetMaterial | null, track: readonly SunMinute[]): Reach | null {
-  const nearest = track.reduce<SunMinute | null>((best, sun) => (best === null || sun.apparentElevationDeg > best.apparentElevationDeg ? sun : best), null);
-  const distanceAu = nearest?.distanceAu ?? 1;
-  const halfAngle = halfAngleRad(distanceAu);
-  const beam = (required === null ? null : model.beamFor(required.towards, halfAngle)) ?? (nearest === null ? null : model.beamFor(nearest.towardsSun, halfAngle));
+/** Direction of the sun by which the reach is settled: the required one, else the highest that meets the working face. */
+function referenceSun(model: FocusModel, required: RequiredSun | null, track: readonly SunMinute[]): SunMinute | null {
+  let best: SunMinute | null = null;
+  for (const sun of track) {
+    if (best !== null && sun.apparentElevationDeg <= best.apparentElevationDeg) continue;
+    if (required !== null || model.beamFor(sun.towardsSun, halfAngleRad(sun.distanceAu)) !== null) best = sun;
+  }
+  return best;
+}
+
+/** What the reach depends on besides the optic. */
+interface ReachParts {
+  readonly input: ReconstructionInput;
+  readonly site: Site;
+  readonly mark: Mark;
+  readonly required: RequiredSun | null;
+  readonly material: TargetMaterial | null;
+  readonly track: readonly SunMinute[];
+}
+
+/** Reach of the beam in the cleanest air; null where no sun of the window meets the working face. */
+function settleReach(model: FocusModel, { input, site, mark, required, material, track }: ReachParts): Reach | null {
+  const reference = referenceSun(model, required, track);
+  if (reference === null) return null;
+  const beam = model.beamFor(required?.towards ?? reference.towardsSun, halfAngleRad(reference.distanceAu));
   if (beam === null) return null;
-  const elevationDeg = Math.max(required?.apparentElevationDeg ?? 30, 5);
-  const clear = clearSkyAt(elevationDeg, extraterrestrialWm2(distanceAu, site.air.solarConstantWm2), input.place.elevationM, site.air);
-  const glass = openingTransmittance(input.opening, required?.azimuthDeg ?? input.opening?.azimuthDeg ?? 0, elevationDeg);
+  const elevationDeg = Math.max(required?.apparentElevationDeg ?? reference.apparentElevationDeg, 5);
+  const clear = clearSkyAt(elevationDeg, extraterrestrialWm2(reference.distanceAu, site.air.solarConstantWm2), input.place.elevationM, site.air);
+  const glass = openingTransmittance(input.opening, required?.azimuthDeg ?? reference.azimuthDeg, elevationDeg);
   return reachOf(beam, mark, (clear?.boundWm2 ?? 1000) * glass, lowestHarmfulFluxKwm2(material, site.air.temperatureC));
 }
 
@@ -114,7 +133,7 @@ export function settle(given: ReconstructionInput): Setting {
   }
   const surveyDeg = mark === null ? 0 : 2 * spannedDeg(surveySigmaM(mark), mark.distanceM);
   const required = model === null || mark === null || model.moves ? null : requiredSunFor(model, mark.towards, site.observer, surveyDeg);
-  const reach = model === null || mark === null || !focusesForward(model) ? null : settleReach(input, site, model, mark, required, material, track);
+  const reach = model === null || mark === null || !focusesForward(model) ? null : settleReach(model, { input, site, mark, required, material, track });
   const skylineAssumption: Assumption[] = input.skyline === undefined
     ? [{ field: 'skyline', value: 'level horizon', source: { text: 'no skyline recorded', verified: true } }]
     : [];

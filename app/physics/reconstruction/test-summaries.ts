@@ -117,7 +117,7 @@ export function gradeOf(setting: Setting, findings: Findings, tests: readonly Te
   const missing: string[] = [];
   if (setting.model === null) missing.push('the optic is unknown');
   if (setting.mark === null) missing.push('the place of the mark is unknown');
-  if (setting.model !== null && setting.reach === null && setting.mark !== null) missing.push('the optic does not focus as described');
+  if (setting.model !== null && setting.reach === null && setting.mark !== null) missing.push('no sun of the window meets the working face of the optic, or it spreads light as described');
   if (missing.length > 0) return { word: 'cannot tell because', because: missing };
   const open = tests.filter((summary) => summary.result !== 'supports').map((summary) => `${summary.test}: ${summary.sentence}`);
   return open.length === 0 ? { word: 'consistent', because: [] } : { word: 'not refuted', because: open };

@@ -4,6 +4,8 @@ import type { ClimateClass } from '#app/physics/model.ts';
 export interface ClimateAir {
   readonly aod500: number;
   readonly waterCm: number;
+  /** Air temperature by day. [°C] */
+  readonly temperatureC: number;
   readonly name: string;
 }
 
@@ -17,9 +19,9 @@ export const defaultOzoneCm = 0.3;
 export const classSigmaLn = 0.4;
 
 export const climateAir: Readonly<Record<ClimateClass, ClimateAir>> = {
-  'clean-dry-mountain': { aod500: 0.04, waterCm: 0.6, name: 'clean dry mountain' },
-  'temperate-rural': { aod500: 0.12, waterCm: 1.5, name: 'temperate rural' },
-  'urban-maritime': { aod500: 0.22, waterCm: 2.5, name: 'urban or maritime summer' },
-  'humid-tropics': { aod500: 0.3, waterCm: 4.5, name: 'humid tropics' },
-  'dusty-desert': { aod500: 0.4, waterCm: 1.5, name: 'dusty desert' },
+  'clean-dry-mountain': { aod500: 0.04, waterCm: 0.6, temperatureC: 5, name: 'clean dry mountain' },
+  'temperate-rural': { aod500: 0.12, waterCm: 1.5, temperatureC: 12, name: 'temperate rural' },
+  'urban-maritime': { aod500: 0.22, waterCm: 2.5, temperatureC: 15, name: 'urban or maritime summer' },
+  'humid-tropics': { aod500: 0.3, waterCm: 4.5, temperatureC: 28, name: 'humid tropics' },
+  'dusty-desert': { aod500: 0.4, waterCm: 1.5, temperatureC: 28, name: 'dusty desert' },
 };

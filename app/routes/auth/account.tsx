@@ -47,7 +47,7 @@ export default function Account({ loaderData, actionData }: Route.ComponentProps
   const next = { name: 'password', errors: problem?.fieldErrors.password ?? [], required: true };
   return (
     <Page width="reading">
-      <PageTitle below={`${loaderData.email}. ${loaderData.roles.join(', ')}.`}>{loaderData.name}</PageTitle>
+      <PageTitle below={[loaderData.email, ...loaderData.roles].join(', ')}>{loaderData.name}</PageTitle>
       {actionData?.ok ? <Notice role="status">{actionData.said}</Notice> : null}
       <section aria-labelledby="units-heading" className="pt-6">
         <SectionHeading id="units-heading">Units</SectionHeading>

@@ -170,7 +170,7 @@ function FrozenText({ text }: { readonly text: string }) {
   return (
     <details className="mt-4">
       <summary>What was signed, whole</summary>
-      <pre tabIndex={0} className="mt-2 max-h-96 overflow-auto border border-hair bg-sheet p-3 font-mono text-axis">{text}</pre>
+      <pre className="mt-2 border border-hair bg-sheet p-3 font-mono text-axis break-words whitespace-pre-wrap">{text}</pre>
       <p className="pt-1 text-axis text-second">The hash is the SHA-256 of these values as JSON with the keys in order and no spaces.</p>
     </details>
   );

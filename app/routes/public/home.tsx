@@ -5,9 +5,9 @@ import { SignInForm } from '#app/components/auth/sign-in-form.tsx';
 import { BurnCard } from '#app/components/burn-card/burn-card.tsx';
 import { cautions } from '#app/components/layout/cautions.ts';
 import { Page } from '#app/components/layout/page.tsx';
-import { ButtonLink } from '#app/components/ui/button.tsx';
+import { TextInput } from '#app/components/forms/text-field.tsx';
+import { Button, ButtonLink } from '#app/components/ui/button.tsx';
 import { Caution } from '#app/components/ui/caution.tsx';
-import { SectionHeading } from '#app/components/ui/page-title.tsx';
 import { homeFor } from '#app/domain/navigation.ts';
 import { formatIsoDay } from '#app/domain/local-time.ts';
 import { sampleCards } from '#app/services/samples/sample-cards.server.ts';
@@ -23,43 +23,33 @@ export const meta: Route.MetaFunction = () => [
   { name: 'description', content: 'A register for burns, melts and near misses from focused sunlight.' },
 ];
 
+/**
+ * On a phone the order is: question, card, make safe, sign in, samples. At the desk sign-in stands beside the question;
+ * the order of reading stays that of the phone, so that making safe is always met first.
+ */
 export default function Home({ loaderData }: Route.ComponentProps) {
   const { samples } = loaderData;
-  const [first] = samples;
   return (
     <Page>
-      <div className="grid gap-x-16 gap-y-8 pt-8 desk:grid-cols-[minmax(0,1fr)_370px] desk:pt-12">
-        <div>
+      <div className="grid gap-x-14 gap-y-8 pt-7 desk:grid-cols-[400px_minmax(0,1fr)_370px] desk:gap-y-10 desk:pt-12">
+        <div className="desk:col-span-2 desk:row-start-1">
           <h1 className="font-serif text-landing">Could the sun have done it?</h1>
-          <p className="max-w-[56ch] pt-5 text-account">
+          <p className="max-w-[56ch] pt-4 text-account desk:pt-5">
             A register for burns, melts and near misses from focused sunlight. Log the mark from a phone. Test the sun, the weather, the energy and the mark apart. See the day it
             will be lit again, and close the case before then.
           </p>
         </div>
-        <section aria-labelledby="sign-in-heading" className="border-t-2 border-ink pt-4 max-desk:order-3">
-          <h2 id="sign-in-heading" className="pb-3 text-[1.125rem] font-semibold">Sign in</h2>
-          <SignInForm next={null} />
-        </section>
-        <section aria-labelledby="now-heading" className="desk:hidden">
+        {samples[0] ? <LargeSample sample={samples[0]} /> : null}
+        <section aria-labelledby="now-heading" className="desk:col-start-1 desk:row-start-3">
           <MakeSafe headingId="now-heading" />
         </section>
-      </div>
-      {first ? (
-        <figure className="pt-8">
-          <BurnCard model={first.large} size="hero" label={`Invented sample: ${first.title}`} />
-          <figcaption className="pt-3 text-small text-second">
-            Invented sample, computed: {first.title}, {formatIsoDay(first.day)}, {first.large.zone}. Dark: the time examined. Cut through: sunlight on the mark was possible,{' '}
-            {first.sunlitMinutes} minutes. Dots: cannot be told.
-          </figcaption>
-        </figure>
-      ) : null}
-      <div className="grid gap-x-16 gap-y-8 pt-10 desk:grid-cols-[minmax(0,400px)_minmax(0,1fr)]">
-        <section aria-labelledby="now-heading-desk" className="max-desk:hidden">
-          <MakeSafe headingId="now-heading-desk" />
+        <section aria-labelledby="sign-in-heading" className="border-t-2 border-ink pt-3 desk:col-start-3 desk:row-start-1">
+          <h2 id="sign-in-heading" className="pb-2 text-[1.125rem]/6 font-semibold">Sign in</h2>
+          <SignInForm next={null} />
         </section>
-        <section aria-labelledby="samples-heading">
-          <SectionHeading id="samples-heading">Three cases, all invented</SectionHeading>
-          <ul>
+        <section aria-labelledby="samples-heading" className="desk:col-span-2 desk:col-start-2 desk:row-start-3">
+          <h2 id="samples-heading" className="pb-2 text-[1.125rem]/6 font-semibold">Three cases to read, all invented</h2>
+          <ul className="border-t border-hair">
             {samples.map((sample) => (
               <li key={sample.key} className="grid items-center gap-x-8 gap-y-2 border-b border-hair py-3 tablet:grid-cols-[minmax(0,1fr)_300px]">
                 <div>
@@ -77,10 +67,25 @@ export default function Home({ loaderData }: Route.ComponentProps) {
   );
 }
 
+/** The first sample, edge to edge; its facts are computed, its place is invented. */
+function LargeSample({ sample }: { readonly sample: Route.ComponentProps['loaderData']['samples'][number] }) {
+  return (
+    <figure className="desk:col-span-3 desk:row-start-2">
+      <div className="mx-[calc(-1*var(--page-margin))]">
+        <BurnCard model={sample.large} size="hero" label={`Invented sample: ${sample.title}`} />
+      </div>
+      <figcaption className="pt-3 text-small text-second">
+        Invented place, computed sun: {sample.title}, {formatIsoDay(sample.day)}, {sample.large.zone}. Dark: the time examined. Cut through: sunlight on the mark was possible,{' '}
+        {sample.sunlitMinutes} minutes. Dots: cannot be told.
+      </figcaption>
+    </figure>
+  );
+}
+
 function MakeSafe({ headingId }: { readonly headingId: string }) {
   return (
     <Caution>
-      <h2 id={headingId} className="text-[1.125rem] font-semibold">If it is happening now</h2>
+      <h2 id={headingId} className="text-[1.125rem]/6 font-semibold">If it is happening now</h2>
       <p className="pt-2">
         <b className="font-semibold">Smoking or burning:</b> raise the alarm, get out, call the emergency number. Report after.
       </p>
@@ -91,7 +96,12 @@ function MakeSafe({ headingId }: { readonly headingId: string }) {
       <p className="pt-4">
         <ButtonLink href="/report">Report a mark</ButtonLink>
       </p>
-      <p className="pt-2 text-small text-second">Without an account: use the link or code posted at your site.</p>
+      <form method="get" action="/report" className="flex flex-wrap items-end gap-x-3 gap-y-2 pt-4">
+        <div className="min-w-0 flex-1 basis-44">
+          <TextInput field={{ name: 'at', id: `${headingId}-code`, required: true }} label="No account? Code posted at your site" autoComplete="off" autoCapitalize="none" spellCheck={false} />
+        </div>
+        <Button look="outlined">Report with the code</Button>
+      </form>
     </Caution>
   );
 }

@@ -4,6 +4,7 @@ import { formatClock, localDay, toLocalInput } from '#app/domain/local-time.ts';
 import { homeFor } from '#app/domain/navigation.ts';
 import type { ReportHolder } from '#app/domain/report.ts';
 import { env } from '#app/env.server.ts';
+import type { Daylight } from '#app/physics/sun/daylight.ts';
 import { daylightOn } from '#app/physics/sun/daylight.ts';
 import { holderId } from '#app/services/reports/report-holder.server.ts';
 import { db } from '#db/client.server.ts';
@@ -28,7 +29,7 @@ export async function reportView(holder: ReportHolder, clientId: string, guestCo
       nowLocal: toLocalInput(now, site.zone),
       // To the minute, as the clock time beside it.
       nowUtc: new Date(Math.floor(now.getTime() / 60_000) * 60_000).toISOString(),
-      today: todayAt(site, now),
+      today: sites.length <= sitesWithDaylight ? todayAt(site, now) : null,
       around: holder.kind === 'person' ? { latitudeDeg: Number(site.latitudeDeg.toFixed(3)), longitudeDeg: Number(site.longitudeDeg.toFixed(3)) } : null,
     })),
     emergencyNumber: env.EMERGENCY_NUMBER,
@@ -38,6 +39,23 @@ export async function reportView(holder: ReportHolder, clientId: string, guestCo
 }
 
 const hourMs = 3_600_000;
+/** Houses with more sites than this do without the card: a sunrise takes milliseconds. */
+const sitesWithDaylight = 40;
+/** Sunrise and sunset by place and day, which many looks share. Emptied when it grows past a few days of sites. */
+const daylights = new Map<string, Daylight>();
+
+function daylightToday(place: SitePlace, now: Date): Daylight {
+  const day = localDay(now, place.zone);
+  const key = [day, place.zone, place.latitudeDeg, place.longitudeDeg].join(' ');
+  const known = daylights.get(key);
+  if (known) return known;
+  if (daylights.size > 2_000) daylights.clear();
+  const { latitudeDeg, longitudeDeg } = place;
+  const daylight = daylightOn(day, place.zone, { latitudeDeg, longitudeDeg, elevationM: 0, ...standardAir });
+  daylights.set(key, daylight);
+  return daylight;
+}
+
 /** Sunrise and sunset are worked out for a level horizon without air; these two do not enter. */
 const standardAir = { pressureHpa: 1013.25, temperatureC: 15 } as const;
 
@@ -48,8 +66,9 @@ interface SitePlace {
 }
 
 /** Daylight of the local day, with an hour on each side for the card. */
-function todayAt({ zone, latitudeDeg, longitudeDeg }: SitePlace, now: Date): TodayAtSite {
-  const { sunriseMs, sunsetMs, polar } = daylightOn(localDay(now, zone), zone, { latitudeDeg, longitudeDeg, elevationM: 0, ...standardAir });
+function todayAt(place: SitePlace, now: Date): TodayAtSite {
+  const { zone } = place;
+  const { sunriseMs, sunsetMs, polar } = daylightToday(place, now);
   const iso = (ms: number) => new Date(ms).toISOString();
   const rises = sunriseMs !== null && sunsetMs !== null && sunriseMs < sunsetMs;
   const fromMs = Math.floor((rises ? Math.min(sunriseMs, now.getTime()) - hourMs : now.getTime() - 12 * hourMs) / hourMs) * hourMs;

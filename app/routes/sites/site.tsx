@@ -2,19 +2,20 @@ import { Form, href, redirect } from 'react-router';
 import type { Route } from './+types/site';
 import { db } from '#db/client.server.ts';
 import { getSiteByCode, listCasesAtSite } from '#db/queries/sites.server.ts';
+import { listPeopleOfSite } from '#db/queries/users.server.ts';
 import { requireActorWho } from '#app/auth/middleware.server.ts';
 import { ErrorSummary } from '#app/components/forms/error-summary.tsx';
 import { Columns, Page } from '#app/components/layout/page.tsx';
+import { SiteCases } from '#app/components/sites/site-cases.tsx';
 import { SiteFields, siteFieldLabels } from '#app/components/sites/site-fields.tsx';
-import { AppLink } from '#app/components/ui/app-link.tsx';
+import { SitePeople } from '#app/components/sites/site-people.tsx';
+import { SiteSide } from '#app/components/sites/site-side.tsx';
 import { Button } from '#app/components/ui/button.tsx';
-import { Cell, DataTable, HeadCell, Row, TableHead } from '#app/components/ui/data-table.tsx';
-import { FactList } from '#app/components/ui/fact-list.tsx';
 import { PageTitle, SectionHeading } from '#app/components/ui/page-title.tsx';
-import { StateMark } from '#app/components/ui/state-mark.tsx';
 import { notFound } from '#app/domain/errors.ts';
 import { formatDay, formatDayClock } from '#app/domain/local-time.ts';
 import { holdsRole } from '#app/domain/roles.ts';
+import type { Actor } from '#app/domain/roles.ts';
 import { siteFormSchema, siteUseLabels } from '#app/domain/site-form.ts';
 import { env } from '#app/env.server.ts';
 import { fieldErrorsOf } from '#app/http/field-errors.ts';
@@ -29,28 +30,36 @@ export function loader({ context, request, params }: Route.LoaderArgs) {
     if (!site) throw notFound('The site');
     const rows = await listCasesAtSite(db, { actor, siteId: site.id, now: new Date() });
     const mayManage = holdsRole(actor, ['administrator', 'manager'], site.id);
+    const people = mayManage ? await listPeopleOfSite(db, { organisationId: actor.organisationId, siteId: site.id }) : [];
     return {
+      ...placeFor(actor, site),
       code: site.code,
       name: site.name,
-      address: site.address,
-      latitudeDeg: site.latitudeDeg,
-      longitudeDeg: site.longitudeDeg,
       elevationM: site.elevationM,
       zone: site.zone,
       use: site.use,
       jurisdiction: site.jurisdiction,
       skylinePoints: site.skyline?.points.length ?? 0,
       mayManage,
-      guestLink: mayManage && site.guestCode ? `${env.PUBLIC_URL}/report?at=${encodeURIComponent(site.guestCode)}` : null,
+      guest: mayManage && site.guestCode ? { code: site.guestCode, link: `${env.PUBLIC_URL}/report?at=${encodeURIComponent(site.guestCode)}` } : null,
+      people: people.map((person) => ({ role: person.role, name: person.displayName, onlyHere: person.siteId !== null })),
       cases: rows.map((row) => ({
         number: row.number,
         title: row.title,
         state: row.state,
         reported: formatDay(row.reportedAt, site.zone),
+        nextReturnMs: row.nextReturnAt ? new Date(row.nextReturnAt).getTime() : null,
         nextReturn: row.nextReturnAt ? formatDayClock(new Date(row.nextReturnAt), site.zone) : null,
       })),
     };
   });
+}
+
+/** The exact place is for those who work on cases there or look after the site; others get two decimals, some 1 km. */
+function placeFor(actor: Actor, site: { readonly id: string; readonly address: string; readonly latitudeDeg: number; readonly longitudeDeg: number }) {
+  const isExact = holdsRole(actor, ['investigator', 'reviewer', 'manager', 'privacy-lead', 'administrator'], site.id);
+  const shown = (deg: number) => (isExact ? deg : Math.round(deg * 100) / 100);
+  return { isExact, address: isExact ? site.address : '', latitudeDeg: shown(site.latitudeDeg), longitudeDeg: shown(site.longitudeDeg) };
 }
 
 export function action({ context, request, params }: Route.ActionArgs) {
@@ -78,78 +87,38 @@ export const meta: Route.MetaFunction = ({ loaderData }) => [{ title: `${loaderD
 
 export default function Site({ loaderData, actionData }: Route.ComponentProps) {
   const site = loaderData;
-  const open = site.cases.filter((row) => row.state !== 'closed' && row.state !== 'duplicate').length;
+  const open = site.cases.filter((row) => row.state !== 'closed' && row.state !== 'duplicate');
+  return (
+    <Page>
+      <PageTitle below={`${siteUseLabels[site.use]}, ${site.zone}`}>
+        {open.length === 0 ? `Nothing is open at ${site.name}` : open.length === 1 ? `One case is open at ${site.name}` : `${open.length} cases are open at ${site.name}`}
+      </PageTitle>
+      <Columns sideLabel="About the site" side={<SiteSide site={site} />}>
+        <SectionHeading note="newest first">Cases here</SectionHeading>
+        {site.cases.length === 0 ? <p className="py-4 font-serif text-account">No marks recorded at this site that you may see.</p> : <SiteCases cases={site.cases} />}
+        {site.mayManage ? <SitePeople people={site.people} /> : null}
+        {site.mayManage ? <ChangeSite site={site} problem={actionData ?? null} /> : null}
+      </Columns>
+    </Page>
+  );
+}
+
+type Problem = Exclude<Route.ComponentProps['actionData'], undefined>;
+
+function ChangeSite({ site, problem }: { readonly site: Route.ComponentProps['loaderData']; readonly problem: Problem | null }) {
   const stored: Record<string, string> = {
     name: site.name, address: site.address, latitudeDeg: String(site.latitudeDeg), longitudeDeg: String(site.longitudeDeg), elevationM: String(site.elevationM), zone: site.zone, use: site.use, jurisdiction: site.jurisdiction,
   };
-  const field = (name: string) => ({ name, id: `site-${name}`, defaultValue: actionData?.typed[name] ?? stored[name] ?? '', errors: actionData?.fieldErrors[name] ?? [] });
-  const side = (
-    <>
-      <SectionHeading>The place</SectionHeading>
-      <FactList
-        facts={[
-          { term: 'Code', value: site.code },
-          { term: 'Use', value: siteUseLabels[site.use] },
-          { term: 'Address', value: site.address || 'not recorded' },
-          { term: 'Position', value: `${site.latitudeDeg.toFixed(2)}°, ${site.longitudeDeg.toFixed(2)}°`, note: 'north and east positive' },
-          { term: 'Height above sea level', value: `${site.elevationM} m` },
-          { term: 'Time zone', value: site.zone },
-          { term: 'Skyline', value: site.skylinePoints > 0 ? `${site.skylinePoints} points` : 'not measured' },
-        ]}
-      />
-      {site.mayManage ? (
-        <section aria-labelledby="guest-heading" className="pt-8">
-          <SectionHeading id="guest-heading">Report link without an account</SectionHeading>
-          {site.guestLink ? <p className="pt-3 font-mono text-axis break-all">{site.guestLink}</p> : <p className="pt-3">Closed. Opened, anyone with the link can report a mark here, and see nothing else.</p>}
-          <Form method="post" className="pt-3">
-            <input type="hidden" name="intent" value={site.guestLink ? 'close-guest-link' : 'open-guest-link'} />
-            <Button look="outlined">{site.guestLink ? 'Close the link' : 'Open a link'}</Button>
-          </Form>
-        </section>
-      ) : null}
-    </>
-  );
+  const field = (name: string) => ({ name, id: `site-${name}`, defaultValue: problem?.typed[name] ?? stored[name] ?? '', errors: problem?.fieldErrors[name] ?? [] });
   return (
-    <Page>
-      <PageTitle below={siteUseLabels[site.use]}>{open === 0 ? `Nothing is open at ${site.name}` : open === 1 ? `One case is open at ${site.name}` : `${open} cases are open at ${site.name}`}</PageTitle>
-      <Columns side={side} sideLabel="About the site">
-        <DataTable caption="Cases at this site, newest first">
-          <TableHead>
-            <HeadCell>No.</HeadCell>
-            <HeadCell>Mark</HeadCell>
-            <HeadCell>State</HeadCell>
-            <HeadCell>Reported</HeadCell>
-            <HeadCell>Sun returns</HeadCell>
-          </TableHead>
-          <tbody>
-            {site.cases.map((row) => (
-              <Row key={row.number}>
-                <Cell>{row.number}</Cell>
-                <Cell heading>
-                  <AppLink href={href('/cases/:caseNumber', { caseNumber: String(row.number) })}>{row.title}</AppLink>
-                </Cell>
-                <Cell>
-                  <StateMark state={row.state} />
-                </Cell>
-                <Cell>{row.reported}</Cell>
-                <Cell>{row.nextReturn ?? 'no return on file'}</Cell>
-              </Row>
-            ))}
-          </tbody>
-        </DataTable>
-        {site.cases.length === 0 ? <p className="py-4 font-serif text-account">No marks recorded at this site that you may see.</p> : null}
-        {site.mayManage ? (
-          <details className="pt-8" open={actionData !== undefined}>
-            <summary className="cursor-pointer font-semibold">Change the facts of this site</summary>
-            <Form method="post" className="space-y-5 pt-4" noValidate>
-              <ErrorSummary errors={actionData?.formErrors ?? []} fields={siteFieldLabels.filter(({ name }) => name !== 'code').map(({ name, label }) => ({ field: field(name), label }))} />
-              <input type="hidden" name="intent" value="change-site" />
-              <SiteFields field={field} withCode={false} />
-              <Button look="outlined">Save the site</Button>
-            </Form>
-          </details>
-        ) : null}
-      </Columns>
-    </Page>
+    <details className="pt-10" open={problem !== null}>
+      <summary className="min-h-11 content-center font-semibold tablet:min-h-6">Change the facts of this site</summary>
+      <Form method="post" className="max-w-[720px] space-y-5 pt-4" noValidate>
+        <ErrorSummary errors={problem?.formErrors ?? []} fields={siteFieldLabels.filter(({ name }) => name !== 'code').map(({ name, label }) => ({ field: field(name), label }))} />
+        <input type="hidden" name="intent" value="change-site" />
+        <SiteFields field={field} withCode={false} />
+        <Button look="outlined">Save the site</Button>
+      </Form>
+    </details>
   );
 }

@@ -1,11 +1,13 @@
 import { inTransaction } from '#db/client.server.ts';
 import type { Transaction } from '#db/client.server.ts';
 import { insertLogEntry } from '#db/queries/log.server.ts';
+import { retireMailedTokens } from '#db/queries/mailed-tokens.server.ts';
 import { insertMail } from '#db/queries/outbox.server.ts';
 import { getSiteById } from '#db/queries/sites.server.ts';
 import { deleteGrant, getAccount, getGrant, getOrganisationName, insertGrant, lockAdministrators, updateDisabled } from '#db/queries/users.server.ts';
 import { mailedTokenHash } from '#app/auth/mailed-token.server.ts';
 import { closeEverySession } from '#app/auth/session.server.ts';
+import { administratorForAllSites } from '#app/domain/account.ts';
 import { DomainError, notFound } from '#app/domain/errors.ts';
 import type { Actor, Role } from '#app/domain/roles.ts';
 import { roleLabels } from '#app/domain/roles.ts';
@@ -35,6 +37,7 @@ export function addRole(actor: Actor, wanted: { userId: string; role: Role; site
   requireAdministrator(actor);
   return inTransaction(async (tx) => {
     const account = await ownPerson(tx, actor, wanted.userId);
+    if (wanted.role === 'administrator' && wanted.siteId) throw new DomainError('invalid-input', 'Nothing was changed.', { fieldErrors: { siteId: [administratorForAllSites.said.message] } });
     const site = wanted.siteId ? await getSiteById(tx, actor.organisationId, wanted.siteId) : null;
     if (wanted.siteId && !site) throw notFound('The site');
     if (!(await insertGrant(tx, wanted))) throw new DomainError('conflict', `${account.displayName} holds this role already.`);
@@ -59,7 +62,9 @@ export async function switchAccount(actor: Actor, change: { userId: string; disa
   if (change.disabled && change.userId === actor.userId) throw new DomainError('invalid-state', 'You cannot switch off your own account. Ask another administrator.');
   await inTransaction(async (tx) => {
     const account = await ownPerson(tx, actor, change.userId);
+    if (account.disabled === change.disabled) return;
     if (change.disabled) await keepOneAdministrator(tx, actor.organisationId, account.id);
+    if (change.disabled) await retireMailedTokens(tx, account.id);
     await updateDisabled(tx, account.id, change.disabled);
     await logChange(tx, actor, account.id, change.disabled ? 'person.switched-off' : 'person.switched-on', `${account.displayName}: account ${change.disabled ? 'switched off' : 'switched on'}`, change.reason);
   });
@@ -71,6 +76,7 @@ export function inviteAgain(actor: Actor, userId: string): Promise<void> {
   requireAdministrator(actor);
   return inTransaction(async (tx) => {
     const account = await ownPerson(tx, actor, userId);
+    if (account.disabled) throw new DomainError('invalid-state', `The account of ${account.displayName} is switched off. Switch it on first.`);
     if (account.passwordHash) throw new DomainError('invalid-state', `${account.displayName} has taken up the invitation already.`);
     const token = await issueLink(tx, account.id, 'invitation');
     const organisation = await getOrganisationName(tx, actor.organisationId);

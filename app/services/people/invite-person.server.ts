@@ -7,15 +7,14 @@ import { getOrganisationName, insertGrant, insertPerson } from '#db/queries/user
 import { mailedTokenHash } from '#app/auth/mailed-token.server.ts';
 import type { inviteSchema } from '#app/domain/account.ts';
 import { DomainError } from '#app/domain/errors.ts';
-import { canInOrganisation } from '#app/domain/permissions.ts';
 import type { Actor } from '#app/domain/roles.ts';
-import { roleLabels } from '#app/domain/roles.ts';
+import { holdsRole, roleLabels } from '#app/domain/roles.ts';
 import { invitationMail } from '#app/mail/templates/account.ts';
 import { issueLink } from './password-links.server.ts';
 
 /** Every service on people begins with this. */
 export function requireAdministrator(actor: Actor): void {
-  if (!canInOrganisation(actor, 'people:manage')) throw new DomainError('forbidden', 'Only an administrator looks after people and roles.');
+  if (!holdsRole(actor, ['administrator'], null)) throw new DomainError('forbidden', 'Only an administrator looks after people and roles.');
 }
 
 /** Adds a person with one role and mails the link by which they choose a password. */

@@ -1,5 +1,6 @@
 import { db, inTransaction } from '#db/client.server.ts';
 import { insertLogEntry } from '#db/queries/log.server.ts';
+import { retireMailedTokens } from '#db/queries/mailed-tokens.server.ts';
 import { getAccount, updatePassword, updateUnits } from '#db/queries/users.server.ts';
 import { hashPassword, verifyPassword } from '#app/auth/password.server.ts';
 import { closeEverySession, openSession } from '#app/auth/session.server.ts';
@@ -18,6 +19,7 @@ export async function changePassword(actor: Actor, request: { currentPassword: s
   const passwordHash = await hashPassword(request.password);
   await inTransaction(async (tx) => {
     await updatePassword(tx, actor.userId, passwordHash);
+    await retireMailedTokens(tx, actor.userId);
     await insertLogEntry(tx, { actorId: actor.userId, actorName: actor.displayName, organisationId: actor.organisationId, caseId: null, event: 'account.password-changed', subject: 'users', subjectId: actor.userId, summary: 'Password changed' });
   });
   await closeEverySession(actor.userId);

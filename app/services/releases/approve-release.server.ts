@@ -1,5 +1,6 @@
 import { db, inTransaction } from '#db/client.server.ts';
 import type { Transaction } from '#db/client.server.ts';
+import { readCaseBeforeRedaction } from '#db/queries/case-before-redaction.server.ts';
 import { lockCase } from '#db/queries/case-subject.server.ts';
 import type { CaseRow } from '#db/queries/case-subject.server.ts';
 import { insertLogEntry } from '#db/queries/log.server.ts';
@@ -12,6 +13,7 @@ import type { CaseSubject } from '#app/domain/permissions.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import { releaseMadeMail } from '#app/mail/templates/release-made.ts';
 import { authorize } from '#app/services/authorize.ts';
+import { hashOf } from '#app/storage/sha256.server.ts';
 import { inspectRelease } from './check-release.server.ts';
 
 /** The case as the permission to approve sees it: whoever prepared a release is known as such. */
@@ -37,6 +39,8 @@ export async function releaseCaseFile({ actor, caseNumber, number }: { readonly 
     if (!release) throw notFound('The release');
     authorize(actor, 'release:approve', subjectFor(locked.subject, release, actor));
     refuseUnlessPrepared(release);
+    const current = await readCaseBeforeRedaction(tx, { actor, caseNumber });
+    if (!current || hashOf(current.source) !== first.sourceHash) throw new DomainError('conflict', 'The case changed at this moment. Nothing was released: read the page again.');
     if (!first.passed) {
       throw new DomainError('invalid-state', 'A search of what would leave found something. Prepare it again with that held back.', { needs: first.checks.filter((check) => !check.passed).map((check) => `${check.label}: ${check.note}.`) });
     }

@@ -18,6 +18,8 @@ export interface ReleaseInspection {
   readonly passed: boolean;
   /** False when the same decisions would give something else today. */
   readonly caseUnchanged: boolean;
+  /** Stands for the case as it was while the bytes were searched. */
+  readonly sourceHash: string;
 }
 
 interface ReadFile extends ReleaseFile {
@@ -33,7 +35,7 @@ export async function inspectRelease(db: DbOrTx, params: { readonly actor: Actor
   for (const file of release.files) files.push({ ...file, found: await getObject(file.objectKey) });
   const checks = [hashCheck(release, files), ...textChecks(release, files, current.source), ...(await photoChecks(files, current.source))];
   const today = redactCase(current.source, release.audience, release.decisions);
-  return { checks, passed: checks.every((check) => check.passed), caseUnchanged: hashOf(today.released) === release.releasedHash };
+  return { checks, passed: checks.every((check) => check.passed), caseUnchanged: hashOf(today.released) === release.releasedHash, sourceHash: hashOf(current.source) };
 }
 
 function hashCheck(release: ReleaseRow, files: readonly ReadFile[]): ReleaseCheck {
@@ -50,7 +52,7 @@ function textChecks(release: ReleaseRow, files: readonly ReadFile[], source: Cas
   const data = texts.find((file) => file.fileName === dataFileName)?.text ?? '';
   // The manifest is shown to the reader beside the files.
   const manifest = { fileName: 'manifest', text: files.map((file) => `${file.name} ${file.change}`).join('\n') };
-  return checkReleasedText({ source, audience: release.audience, data: parsed(data), texts: [...texts, manifest, { fileName: 'change note', text: release.changeNote }], fileNames: files.map((file) => file.name) });
+  return checkReleasedText({ source, audience: release.audience, data: parsed(data), texts: [...texts, manifest], changeNote: release.changeNote, fileNames: files.map((file) => file.name) });
 }
 
 function parsed(text: string): unknown {

@@ -9,7 +9,8 @@ import { insertRelease, listRecipientOrganisations } from '#db/queries/releases.
 import type { ReleaseFile } from '#db/queries/releases.server.ts';
 import type { CaseBeforeRedaction } from '#app/domain/case-before-redaction.ts';
 import { DomainError, notFound } from '#app/domain/errors.ts';
-import { audienceLabels, linesToDecide, redactCase } from '#app/domain/redaction.ts';
+import { audienceLabels, heldWords, linesToDecide, redactCase } from '#app/domain/redaction.ts';
+import { findHits, searcherFor } from '#app/domain/redact-text.ts';
 import type { Audience, Decisions, Redaction } from '#app/domain/redaction.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import { authorize } from '#app/services/authorize.ts';
@@ -54,6 +55,7 @@ export async function prepareRelease(request: PrepareRequest): Promise<number> {
   if (request.basis !== null && request.basis !== basisOf(before.source, audience)) {
     throw new DomainError('conflict', 'The case changed while this page was open. Your decisions are still here: read the lines and photos again, then prepare.');
   }
+  refuseTellingNote(request.changeNote, before.source, audience);
   const redaction = redactCase(before.source, audience, decisions);
   const id = randomUUID();
   const files = await storeFiles(id, await makeReleaseFiles(redaction, before.source));
@@ -64,6 +66,13 @@ export async function prepareRelease(request: PrepareRequest): Promise<number> {
     await Promise.allSettled(files.map((file) => deleteObject(file.objectKey)));
     throw error;
   }
+}
+
+/** The note goes out as it is typed, so it may hold nothing that would be cut from a line. */
+function refuseTellingNote(changeNote: string, source: CaseBeforeRedaction, audience: Audience): void {
+  if (findHits(changeNote, searcherFor(heldWords(source, audience))).length === 0) return;
+  const sentence = 'The change note goes out as it stands: leave out names, contacts, places, health and legal matters.';
+  throw new DomainError('invalid-input', sentence, { fieldErrors: { changeNote: [sentence] } });
 }
 
 async function storeFiles(releaseId: string, made: readonly MadeFile[]): Promise<ReleaseFile[]> {

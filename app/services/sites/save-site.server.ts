@@ -3,7 +3,7 @@ import tzLookup from 'tz-lookup';
 import { inTransaction } from '#db/client.server.ts';
 import type { Transaction } from '#db/client.server.ts';
 import { insertLogEntry } from '#db/queries/log.server.ts';
-import { getSiteByCode, insertSite, updateGuestCode, updateSite } from '#db/queries/sites.server.ts';
+import { insertSite, lockSiteByCode, updateGuestCode, updateSite } from '#db/queries/sites.server.ts';
 import type { NewSite } from '#db/queries/sites.server.ts';
 import { DomainError, notFound } from '#app/domain/errors.ts';
 import { holdsRole } from '#app/domain/roles.ts';
@@ -32,7 +32,7 @@ export function addSite(actor: Actor, site: NewSite): Promise<void> {
 }
 
 async function ownSite(tx: Transaction, actor: Actor, code: string) {
-  const site = await getSiteByCode(tx, actor.organisationId, code);
+  const site = await lockSiteByCode(tx, actor.organisationId, code);
   if (!site) throw notFound('The site');
   requireSiteRights(actor, site.id);
   return site;
@@ -50,6 +50,8 @@ export function changeSite(actor: Actor, code: string, facts: Omit<NewSite, 'cod
 export function setGuestLink(actor: Actor, code: string, open: boolean): Promise<void> {
   return inTransaction(async (tx) => {
     const site = await ownSite(tx, actor, code);
+    // A second press must not make a new word: the first may be posted at the door already.
+    if (open === (site.guestCode !== null)) return;
     const guestCode = open ? `${site.code.toLowerCase()}-${randomBytes(9).toString('base64url')}` : null;
     await updateGuestCode(tx, site.id, guestCode);
     await logSite(tx, actor, site.id, open ? 'site.guest-link-opened' : 'site.guest-link-closed', `Report link of ${site.name} ${open ? 'opened' : 'closed'}`);

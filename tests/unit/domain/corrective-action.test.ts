@@ -168,6 +168,12 @@ describe('one action', () => {
   };
   const actor = (userId: string, ...roles: ('manager' | 'reviewer')[]): Actor => ({ userId, organisationId: 'o', displayName: 'A', email: 'a@example.test', units: 'metric', grants: roles.map((role) => ({ role, siteId: null })) });
 
+  test('is shown by a named state even where the view would hide it', () => {
+    const line = actionLine({ ...source, state: 'withdrawn' }, [], new Date('2026-07-15T08:42:00Z'));
+    const at = (address: string) => passesFilter(line, readActionFilter(new URLSearchParams(address)), 'owner');
+    expect([at(''), at('view=all'), at('state=withdrawn'), at('state=open'), at('view=mine&state=withdrawn'), at('view=all&risk=high'), at('view=all&site=Block C')]).toEqual([false, true, true, false, false, false, true]);
+  });
+
   test('says how late it is and when the sun is back, in the clock of the place', () => {
     const line = actionLine(source, [{ onDay: '2026-08-03', bestAt: new Date('2026-08-03T12:30:00Z') }], new Date('2026-07-15T08:42:00Z'));
     expect(line).toMatchObject({ dueNote: '12 days late', returnWords: '3 Aug 2026, 13:30', returnNote: 'in 19 days', nextReturnOn: '2026-08-03' });

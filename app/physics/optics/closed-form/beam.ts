@@ -36,6 +36,8 @@ export interface FocusModel {
   readonly lineHalfLengthM: number;
   /** True for optics that are turned by hand or by a drive. */
   readonly moves: boolean;
+  /** True where the light comes back from the face that it meets; the target may then stand in direct sun as well. */
+  readonly reflects: boolean;
   /** Transmitted or reflected share of sunlight at the middle of the aperture. 0…1 */
   readonly throughput: number;
   /** Null where the sun stands behind the working face. */

@@ -157,6 +157,7 @@ export function bowedPaneModel(optic: PaneOptic): FocusModel {
     startsAt: surveyOrigin,
     lineHalfLengthM: 0,
     moves: false,
+    reflects: true,
     throughput: optic.reflectance,
     beamFor,
     requiredSun: (towardsMark) => {

@@ -72,6 +72,7 @@ export function cylinderModel(optic: CylinderOptic): FocusModel {
     startsAt: surveyOrigin,
     lineHalfLengthM: optic.lengthM / 2,
     moves: false,
+    reflects: false,
     throughput: medium.internalTransmittance(optic.diameterM),
     beamFor: (towardsSun, halfAngle) => {
       const sinAxial = dot(towardsSun, generator);
@@ -119,6 +120,7 @@ export function curvedReflectorModel(optic: CurvedReflectorOptic): FocusModel {
     startsAt: surveyOrigin,
     lineHalfLengthM: optic.lengthM / 2,
     moves: false,
+    reflects: true,
     throughput: optic.reflectance,
     beamFor: (towardsSun, halfAngle) => {
       const cosNormal = dot(towardsSun, normal);

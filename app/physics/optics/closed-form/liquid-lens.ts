@@ -57,6 +57,7 @@ export function liquidLensModel(optic: BowlOptic | DomeOptic): FocusModel {
     startsAt: optic.kind === 'ponded-dome' ? [0, 0, pool.radiusM] : surveyOrigin,
     lineHalfLengthM: 0,
     moves: false,
+    reflects: false,
     throughput: medium.internalTransmittance(pool.depthM),
     beamFor: (towardsSun, halfAngle) => {
       const up = towardsSun[2];

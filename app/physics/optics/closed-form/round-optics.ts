@@ -79,7 +79,7 @@ function roundModel(shape: RoundShape): FocusModel {
   };
   return {
     focusKind: 'point', focalLengthM: shape.focalLengthM, generator: null, startsAt: surveyOrigin, lineHalfLengthM: 0,
-    moves: shape.moves, throughput: shape.throughput, beamFor, requiredSun,
+    moves: shape.moves, reflects: shape.reflects, throughput: shape.throughput, beamFor, requiredSun,
   };
 }
 

@@ -1,0 +1,117 @@
+import { Form, href } from 'react-router';
+import { AppLink } from '#app/components/ui/app-link.tsx';
+import { Button } from '#app/components/ui/button.tsx';
+import { FactList } from '#app/components/ui/fact-list.tsx';
+import { SectionHeading } from '#app/components/ui/page-title.tsx';
+import { TickLine } from '#app/components/ui/tick-line.tsx';
+import type { SiteUse } from '#app/domain/site-form.ts';
+import { siteUseLabels } from '#app/domain/site-form.ts';
+import type { SiteCase } from './site-cases.tsx';
+import type { SitePerson } from './site-people.tsx';
+
+export interface SiteSideProps {
+  readonly site: {
+    readonly code: string;
+    readonly address: string;
+    readonly isExact: boolean;
+    readonly latitudeDeg: number;
+    readonly longitudeDeg: number;
+    readonly elevationM: number;
+    readonly zone: string;
+    readonly use: SiteUse;
+    readonly skylinePoints: number;
+    readonly mayManage: boolean;
+    readonly guest: { readonly code: string; readonly link: string } | null;
+    readonly people: readonly SitePerson[];
+    readonly cases: readonly (SiteCase & { readonly nextReturnMs: number | null })[];
+  };
+}
+
+const compass = (deg: number, positive: string, negative: string, digits: number) => `${Math.abs(deg).toFixed(digits)}° ${deg < 0 ? negative : positive}`;
+
+/** The side of a site's page: when the sun is back, the place, what is still missing, and the link for guests. */
+export function SiteSide({ site }: SiteSideProps) {
+  const digits = site.isExact ? 4 : 2;
+  return (
+    <div className="space-y-8">
+      <NextSun cases={site.cases} />
+      <section aria-labelledby="place-heading">
+        <SectionHeading id="place-heading">The place</SectionHeading>
+        <FactList
+          facts={[
+            { term: 'Code', value: site.code },
+            { term: 'Use', value: siteUseLabels[site.use] },
+            ...(site.isExact ? [{ term: 'Address', value: site.address || 'not recorded' }] : []),
+            { term: 'Position', value: `${compass(site.latitudeDeg, 'N', 'S', digits)}, ${compass(site.longitudeDeg, 'E', 'W', digits)}`, ...(site.isExact ? {} : { note: 'rounded' }) },
+            { term: 'Height above sea level', value: `${site.elevationM} m` },
+            { term: 'Time zone', value: site.zone },
+            { term: 'Skyline', value: site.skylinePoints > 0 ? `${site.skylinePoints} points` : 'not measured' },
+          ]}
+        />
+      </section>
+      {site.mayManage ? <StillLacking site={site} /> : null}
+      {site.mayManage ? <GuestLink guest={site.guest} /> : null}
+    </div>
+  );
+}
+
+/** Open marks that are lit again, soonest first. */
+function NextSun({ cases }: Pick<SiteSideProps['site'], 'cases'>) {
+  const returning = cases.filter((row) => row.nextReturnMs !== null && row.state !== 'duplicate').sort((a, b) => (a.nextReturnMs ?? 0) - (b.nextReturnMs ?? 0));
+  return (
+    <section aria-labelledby="next-sun-heading">
+      <SectionHeading id="next-sun-heading" note="local time">Next sun on this site</SectionHeading>
+      {returning.length === 0 ? <p>No mark here is expected to be lit again on file.</p> : null}
+      <ul>
+        {returning.map((row) => (
+          <li key={row.number} className="border-b border-hair py-2">
+            <span className="block font-semibold">{row.nextReturn}</span>
+            <span className="text-small">
+              <AppLink href={href('/cases/:caseNumber', { caseNumber: String(row.number) })}>{row.number}</AppLink>, {row.title}
+            </span>
+          </li>
+        ))}
+      </ul>
+    </section>
+  );
+}
+
+function StillLacking({ site }: SiteSideProps) {
+  const hasManager = site.people.some((person) => person.role === 'manager');
+  return (
+    <section aria-labelledby="lacking-heading">
+      <SectionHeading id="lacking-heading">What this site still lacks</SectionHeading>
+      <TickLine done>Position and time zone</TickLine>
+      <TickLine done={site.address !== ''}>Address</TickLine>
+      <TickLine done={site.skylinePoints > 0} note={site.skylinePoints > 0 ? undefined : 'measured case by case until then'}>Skyline of the site</TickLine>
+      <TickLine done={hasManager}>A site manager</TickLine>
+      <TickLine done={site.guest !== null}>Report link for people without an account</TickLine>
+    </section>
+  );
+}
+
+function GuestLink({ guest }: Pick<SiteSideProps['site'], 'guest'>) {
+  return (
+    <section aria-labelledby="guest-heading">
+      <SectionHeading id="guest-heading">Report link without an account</SectionHeading>
+      {guest ? (
+        <>
+          <p>Anyone with the link or the code can report a mark here, and sees nothing else.</p>
+          <dl className="pt-2">
+            <dt className="text-small text-second">Link</dt>
+            <dd className="font-mono text-small break-all">{guest.link}</dd>
+            <dt className="pt-2 text-small text-second">Code, to be typed on the first page</dt>
+            <dd className="font-mono text-small break-all">{guest.code}</dd>
+          </dl>
+        </>
+      ) : (
+        <p>Closed. Once opened, anyone with the link can report a mark here, and sees nothing else.</p>
+      )}
+      <Form method="post" className="pt-3">
+        <input type="hidden" name="intent" value={guest ? 'close-guest-link' : 'open-guest-link'} />
+        <Button look="outlined">{guest ? 'Close the link' : 'Open a link'}</Button>
+      </Form>
+      {guest ? <p className="pt-2 text-small text-second">A closed link never works again; a new one gets a new code.</p> : null}
+    </section>
+  );
+}
