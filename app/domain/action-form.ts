@@ -80,13 +80,3 @@ export function returnStillToCome(check: { readonly today: string; readonly veri
   const first = [...check.returnDays].sort().find((returnDay) => returnDay >= check.verifiedOn);
   return first !== undefined && check.today < first ? first : null;
 }
-
-/** Sentences of a refused form, by the name of the field beside which each belongs. */
-export function sentencesByField(error: z.ZodError): Record<string, string[]> {
-  const sentences: Record<string, string[]> = {};
-  for (const issue of error.issues) {
-    const field = String(issue.path[0] ?? '');
-    sentences[field] = [...(sentences[field] ?? []), issue.message];
-  }
-  return sentences;
-}

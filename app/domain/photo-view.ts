@@ -84,7 +84,7 @@ export function photoCard(photo: PhotoFacts, about: PhotoCaseFacts): PhotoCard {
     sha256: photo.sha256,
     hashCheck: photo.hashCheck,
     hashWords: hashWords(photo, about.zone),
-    sizeWords: `${photo.widthPx} by ${photo.heightPx} px, ${(photo.bytes / 1_000_000).toFixed(1)} MB`,
+    sizeWords: `${photo.widthPx} by ${photo.heightPx} px, ${photo.bytes < 1_000_000 ? `${Math.ceil(photo.bytes / 1000)} kB` : `${(photo.bytes / 1_000_000).toFixed(1)} MB`}`,
     masks: photo.masks,
     releasable: photo.releasable,
   };

@@ -154,14 +154,38 @@ function joinOverlaps(text: string, hits: readonly Hit[]): readonly Hit[] {
  * place, a health matter, a child or legal advice.
  */
 export function redactText(text: string, searcher: Searcher): RedactedText {
+  return cut(text, findHits(text, searcher), 0, text.length);
+}
+
+/** The part of a text from `start` to `end`, with blocks where it is hit. */
+function cut(text: string, hits: readonly Hit[], start: number, end: number): RedactedText {
   const pieces: RedactedText = [];
-  let at = 0;
-  for (const hit of findHits(text, searcher)) {
+  let at = start;
+  for (const hit of hits) {
+    if (hit.end <= start || hit.start >= end) continue;
     if (hit.start > at) pieces.push({ text: text.slice(at, hit.start) });
     pieces.push({ withheld: hit.withheld });
-    at = hit.end;
+    at = Math.min(end, hit.end);
   }
-  if (at < text.length) pieces.push({ text: text.slice(at) });
+  if (at < end) pieces.push({ text: text.slice(at, end) });
+  return pieces;
+}
+
+/**
+ * The same where only some sentences are shared. The text is searched as a whole, so that nothing is missed at the seam
+ * of two sentences; sentences held back in a row are one block.
+ */
+export function redactSentences(text: string, searcher: Searcher, sentences: readonly { readonly start: number; readonly end: number }[], isShared: (sentence: string) => boolean): RedactedText {
+  const hits = findHits(text, searcher);
+  const pieces: RedactedText = [];
+  let heldBefore = false;
+  for (const { start, end } of sentences) {
+    if (text.slice(start, end).trim() === '') continue;
+    const shared = isShared(text.slice(start, end));
+    if (shared) pieces.push(...(heldBefore ? [{ text: ' ' }] : []), ...cut(text, hits, start, end));
+    else if (!heldBefore) pieces.push({ withheld: 'free-text' });
+    heldBefore = !shared;
+  }
   return pieces;
 }
 

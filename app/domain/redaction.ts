@@ -1,98 +1,18 @@
 import type { CaseBeforeRedaction } from './case-before-redaction.ts';
 import type { FourTests } from './hypothesis.ts';
 import type { HeldWords, Searcher } from './redact-text.ts';
-import { redactText, searcherFor } from './redact-text.ts';
+import { redactSentences, redactText, searcherFor } from './redact-text.ts';
+import { lineKey, linesToDecide, photoKey, sentencesOf } from './lines-to-decide.ts';
+import { fieldPolicies } from './release-policy.ts';
+import type { Audience, PolicyField, Treatment } from './release-policy.ts';
 import { releasedCaseSchema, withheldClasses } from './released-case.ts';
 import type { RedactedText, ReleasedCase, WithheldClass, WithheldCounts } from './released-case.ts';
 import { releasedMeasurements } from './released-measurements.ts';
 import { authorNames, chronologyOf, correctedFound, injuryWords, releasedEvent, releasedResult } from './released-parts.ts';
 
-/**
- * What leaves the house, by field and reader. Anything that has no line here does not leave: `redactCase` builds the
- * released case field by field, asks this table for each, and drops whatever the released shape does not name.
- */
-export const audiences = ['insurer', 'other-party'] as const;
-export type Audience = (typeof audiences)[number];
-export const audienceLabels: Record<Audience, string> = { insurer: 'Insurer', 'other-party': 'Other party' };
-export const audienceMeanings: Record<Audience, string> = {
-  insurer: 'Site by name, roles not names, reasoning and signed finding in full, loss but no cost of actions.',
-  'other-party': 'No site or organisation by name, no directions of the sun, no hypotheses, the opinion without causes and limits, no loss.',
-};
-
-export type Treatment = 'shown' | 'reduced' | 'removed';
-interface Policy {
-  readonly class: WithheldClass | null;
-  readonly insurer: Treatment;
-  readonly 'other-party': Treatment;
-}
-
-/** Field × reader. `class` is what the count of withheld things says when the field is reduced or removed. */
-export const fieldPolicies = {
-  identity: { class: null, insurer: 'shown', 'other-party': 'shown' },
-  siteName: { class: 'exact-place', insurer: 'shown', 'other-party': 'removed' },
-  placeDetail: { class: 'free-text', insurer: 'reduced', 'other-party': 'removed' },
-  position: { class: 'exact-place', insurer: 'removed', 'other-party': 'removed' },
-  siteAddress: { class: 'exact-place', insurer: 'removed', 'other-party': 'removed' },
-  dates: { class: null, insurer: 'shown', 'other-party': 'shown' },
-  people: { class: 'personal', insurer: 'removed', 'other-party': 'removed' },
-  contacts: { class: 'personal', insurer: 'removed', 'other-party': 'removed' },
-  injury: { class: 'health', insurer: 'reduced', 'other-party': 'removed' },
-  child: { class: 'child', insurer: 'removed', 'other-party': 'removed' },
-  freeText: { class: 'free-text', insurer: 'reduced', 'other-party': 'reduced' },
-  photos: { class: 'photo', insurer: 'reduced', 'other-party': 'reduced' },
-  measurements: { class: null, insurer: 'shown', 'other-party': 'shown' },
-  reconstruction: { class: 'exact-place', insurer: 'shown', 'other-party': 'reduced' },
-  hypotheses: { class: 'free-text', insurer: 'shown', 'other-party': 'removed' },
-  draftFinding: { class: 'legal', insurer: 'removed', 'other-party': 'removed' },
-  signedFinding: { class: 'free-text', insurer: 'shown', 'other-party': 'reduced' },
-  privileged: { class: 'legal', insurer: 'removed', 'other-party': 'removed' },
-  loss: { class: 'commercial', insurer: 'shown', 'other-party': 'removed' },
-  actions: { class: 'free-text', insurer: 'shown', 'other-party': 'reduced' },
-  actionCost: { class: 'commercial', insurer: 'removed', 'other-party': 'removed' },
-  reporterNotes: { class: 'free-text', insurer: 'reduced', 'other-party': 'removed' },
-} as const satisfies Record<string, Policy>;
-export type PolicyField = keyof typeof fieldPolicies;
-
 /** Lines of free text, and photos, that the preparer decides one by one; what is undecided is held back. */
 export type LineDecision = 'share' | 'hold-back';
 export type Decisions = Readonly<Record<string, LineDecision>>;
-
-export type { CaseBeforeRedaction } from './case-before-redaction.ts';
-
-export interface LineToDecide {
-  readonly key: string;
-  readonly label: string;
-  readonly text: string;
-}
-
-export const photoKey = (photoId: string): string => `photo:${photoId}`;
-
-const lines = (...texts: readonly string[]): string => texts.filter((text) => text.trim() !== '').join('\n');
-
-/** The free-text lines that this reader could get, in reading order, for the preparer to decide on. */
-export function linesToDecide(source: CaseBeforeRedaction, audience: Audience): readonly LineToDecide[] {
-  const open = (field: PolicyField) => fieldPolicies[field][audience] !== 'removed';
-  const finding = source.finding;
-  const brief = fieldPolicies.signedFinding[audience] === 'reduced';
-  const all: LineToDecide[] = [
-    { key: 'title', label: 'Title', text: source.title },
-    ...(open('placeDetail') ? [{ key: 'placeDetail', label: 'Place in the building', text: source.placeDetail }] : []),
-    { key: 'account', label: 'Account', text: source.account },
-    { key: 'interimControl', label: 'Interim control', text: source.interimControl },
-    ...(open('reporterNotes') ? source.notes.map((note, index) => ({ key: `note:${note.id}`, label: `Note ${index + 1}`, text: note.text })) : []),
-    ...(open('hypotheses')
-      ? source.hypotheses.map((one, index) => ({
-          key: `hypothesis:${one.id}`,
-          label: `Hypothesis ${index + 1}`,
-          text: lines(one.statement, one.predicts, one.evidenceFor, one.evidenceAgainst, ...Object.values(one.tests).map((test) => test.why)),
-        }))
-      : []),
-    ...(finding ? [{ key: 'finding', label: `Finding, version ${finding.version}`, text: brief ? finding.opinion : lines(finding.opinion, finding.causes, finding.limits) }] : []),
-    ...source.actions.map((action) => ({ key: `action:${action.number}`, label: `Action ${action.number}`, text: fieldPolicies.actions[audience] === 'reduced' ? action.title : lines(action.title, action.effect) })),
-    ...source.photos.filter((photo) => photo.releasable === 'yes').map((photo) => ({ key: `caption:${photo.photoId}`, label: `Words of photo ${photo.label}`, text: lines(photo.caption, photo.altText) })),
-  ];
-  return all.filter((line) => line.text.trim() !== '');
-}
 
 /** Everything that must not be read out of what leaves, whoever typed it where. */
 export function heldWords(source: CaseBeforeRedaction, audience: Audience): HeldWords {
@@ -127,21 +47,31 @@ interface Desk {
   readonly searcher: Searcher;
   readonly decisions: Decisions;
   readonly treatment: (field: PolicyField) => Treatment;
-  readonly line: (key: string, text: string, field?: PolicyField) => RedactedText;
+  /** Text that is shared or held back as a whole. */
+  readonly line: (group: string, text: string, field?: PolicyField) => RedactedText;
+  /** Text that is decided sentence by sentence. */
+  readonly testimony: (group: string, text: string, field?: PolicyField) => RedactedText;
 }
+
+const heldBack: RedactedText = [{ withheld: 'free-text' }];
 
 function deskFor(source: CaseBeforeRedaction, audience: Audience, decisions: Decisions): Desk {
   const searcher = searcherFor(heldWords(source, audience));
   const treatment = (field: PolicyField): Treatment => fieldPolicies[field][audience];
+  const shared = new Set(linesToDecide(source, audience).filter((line) => decisions[line.key] === 'share').map((line) => line.group));
   return {
     source,
     searcher,
     decisions,
     treatment,
-    line: (key, text, field = 'freeText') => {
+    line: (group, text, field = 'freeText') => {
       if (text.trim() === '') return [];
-      const held = treatment(field) === 'removed' || decisions[key] !== 'share';
-      return held ? [{ withheld: 'free-text' }] : redactText(text, searcher);
+      return treatment(field) === 'removed' || !shared.has(group) ? heldBack : redactText(text, searcher);
+    },
+    testimony: (group, text, field = 'freeText') => {
+      if (text.trim() === '') return [];
+      if (treatment(field) === 'removed') return heldBack;
+      return redactSentences(text, searcher, sentencesOf(text), (sentence) => decisions[lineKey(group, sentence)] === 'share');
     },
   };
 }
@@ -203,17 +133,17 @@ function plainPart({ source, searcher, treatment }: Desk) {
 
 /** What people typed. */
 function textPart(desk: Desk) {
-  const { source, treatment, line } = desk;
+  const { source, treatment, line, testimony } = desk;
   const authors = authorNames(source);
   const { finding } = source;
   const inBrief = treatment('signedFinding') === 'reduced';
-  const brief = (text: string): RedactedText => (inBrief && text.trim() !== '' ? [{ withheld: 'free-text' }] : line('finding', text, 'signedFinding'));
+  const brief = (text: string): RedactedText => (inBrief && text.trim() !== '' ? heldBack : line('finding', text, 'signedFinding'));
   return {
     title: line('title', source.title),
     placeDetail: line('placeDetail', source.placeDetail, 'placeDetail'),
-    account: line('account', source.account),
+    account: testimony('account', source.account),
     interimControl: line('interimControl', source.interimControl),
-    notes: source.notes.map((note, index) => ({ at: note.at, by: authors[index], text: line(`note:${note.id}`, note.text, 'reporterNotes') })),
+    notes: source.notes.map((note, index) => ({ at: note.at, by: authors[index], text: testimony(`note:${note.id}`, note.text, 'reporterNotes') })),
     hypotheses: treatment('hypotheses') === 'removed' ? [] : source.hypotheses.map((one) => releasedHypothesis(desk, one)),
     finding: finding && {
       version: finding.version,

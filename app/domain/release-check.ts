@@ -1,7 +1,7 @@
 import type { CaseBeforeRedaction } from './case-before-redaction.ts';
 import { foldText } from './folded-text.ts';
 import { wholeNamePattern } from './held-names.ts';
-import type { Audience } from './redaction.ts';
+import type { Audience } from './release-policy.ts';
 import { heldWords } from './redaction.ts';
 import type { HeldWords, Hit, Searcher } from './redact-text.ts';
 import { findHits, searcherFor } from './redact-text.ts';

@@ -1,7 +1,7 @@
 import { z } from 'zod';
 import { plainText } from './incident.ts';
 import { fromLocalInput, localDay } from './local-time.ts';
-import { audiences } from './redaction.ts';
+import { audiences } from './release-policy.ts';
 import type { Decisions, LineDecision } from './redaction.ts';
 
 const dayMs = 86_400_000;

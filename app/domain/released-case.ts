@@ -7,7 +7,7 @@ import { releasedResultSchema } from './released-result.ts';
 
 export const withheldClasses = ['personal', 'health', 'child', 'legal', 'exact-place', 'commercial', 'free-text', 'photo'] as const;
 export type WithheldClass = (typeof withheldClasses)[number];
-export const withheldLabels: Record<WithheldClass, string> = {
+export const withheldLabels = {
   personal: 'personal',
   health: 'health',
   child: 'child',
@@ -16,7 +16,7 @@ export const withheldLabels: Record<WithheldClass, string> = {
   commercial: 'commercial',
   'free-text': 'text held back',
   photo: 'photos held back',
-};
+} as const satisfies Record<WithheldClass, string>;
 export type WithheldCounts = Readonly<Record<WithheldClass, number>>;
 
 const redactedText = z.array(z.union([z.object({ text: z.string() }), z.object({ withheld: z.enum(withheldClasses) })]));

@@ -105,7 +105,8 @@ export function readSceneForm(typed: Typed, frames: BearingFrames): SceneReading
   const scene = { optic: raw['optic'], opening, mark: raw['mark'], target: raw['target'], skyline: readSkyline(typed, number, refuse), air: readAir(typed, number, refuse) };
   const parsed = sceneSchema.safeParse(scene);
   if (!parsed.success) {
-    for (const issue of parsed.error.issues) refuse(issueField(issue.path), issueSentence(issue));
+    // A field that was already refused above says more than the schema could.
+    for (const issue of parsed.error.issues.filter((one) => !(issueField(one.path) in fieldErrors))) refuse(issueField(issue.path), issueSentence(issue));
   }
   if (Object.keys(fieldErrors).length > 0 || !parsed.success) return { ok: false, fieldErrors };
   return { ok: true, scene: parsed.data, bearingNotes };

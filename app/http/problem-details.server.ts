@@ -5,7 +5,7 @@ import type { Actor } from '#app/domain/roles.ts';
 import { canInOrganisation } from '#app/domain/permissions.ts';
 import type { InputProblem } from '#app/domain/reconstruction-schema.ts';
 import { log } from '#app/log.server.ts';
-import { limitRate } from './rate-limit.server.ts';
+import { limitRate } from '#app/auth/rate-limit.server.ts';
 
 /** Answers of the programming interface: JSON, or problem details after RFC 9457. */
 

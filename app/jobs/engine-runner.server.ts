@@ -1,4 +1,5 @@
 import { existsSync } from 'node:fs';
+import { fileURLToPath } from 'node:url';
 import { Worker } from 'node:worker_threads';
 import { DomainError } from '#app/domain/errors.ts';
 import type { RecurrenceAnswer, RecurrenceRequest } from '#app/domain/recurrence-request.ts';
@@ -27,20 +28,42 @@ export class EngineTimeoutError extends Error {
   }
 }
 
-/** In development the thread runs from its source; a build bundles it beside the worker, at most two folders above. */
-function threadLocation(): { url: URL; execArgv: string[] } {
-  if (import.meta.url.endsWith('.ts')) return { url: new URL('./engine.thread.ts', import.meta.url), execArgv: ['--import', 'tsx'] };
+/** A build has the thread beside the worker, at most two folders above this file. */
+function builtThread(): URL | null {
   for (const above of ['./', '../', '../../']) {
     const url = new URL(`${above}engine.thread.mjs`, import.meta.url);
-    if (existsSync(url)) return { url, execArgv: [] };
+    if (existsSync(url)) return url;
   }
-  throw new Error('engine.thread.mjs is missing from the build.');
+  return null;
 }
 
-function inThread<Result>(task: EngineTask, options: EngineOptions): Promise<Result> {
-  const { url, execArgv } = threadLocation();
+/** In development and in tests the thread is bundled anew each time: quicker than loading every module in it. */
+async function threadFromSource(): Promise<string> {
+  const { build } = await import('esbuild');
+  const { outputFiles } = await build({
+    entryPoints: [fileURLToPath(new URL('./engine.thread.ts', import.meta.url))],
+    bundle: true,
+    write: false,
+    platform: 'node',
+    format: 'cjs',
+    target: 'node20',
+    logLevel: 'silent',
+  });
+  const [bundle] = outputFiles;
+  if (!bundle) throw new Error('engine.thread.ts could not be bundled.');
+  return bundle.text;
+}
+
+async function startThread(task: EngineTask): Promise<Worker> {
+  if (import.meta.url.endsWith('.ts')) return new Worker(await threadFromSource(), { eval: true, workerData: task, execArgv: [] });
+  const url = builtThread();
+  if (!url) throw new Error('engine.thread.mjs is missing from the build.');
+  return new Worker(url, { workerData: task, execArgv: [] });
+}
+
+async function inThread<Result>(task: EngineTask, options: EngineOptions): Promise<Result> {
+  const thread = await startThread(task);
   return new Promise((resolve, reject) => {
-    const thread = new Worker(url, { workerData: task, execArgv });
     const timer = setTimeout(() => {
       void thread.terminate();
       reject(new EngineTimeoutError(options.timeoutMs));

@@ -1,9 +1,10 @@
-import { and, asc, desc, eq, inArray, max, ne, or, sql } from 'drizzle-orm';
+import { and, asc, countDistinct, desc, eq, inArray, max, ne, or, sql } from 'drizzle-orm';
 import type { SQL } from 'drizzle-orm';
 import type { DbOrTx, Transaction } from '#db/client.server.ts';
 import { cases, grants, organisations, releaseOpenings, releases, users } from '#db/schema/all.ts';
 import { caseRules } from '#app/domain/permissions.ts';
-import type { Audience, Decisions } from '#app/domain/redaction.ts';
+import type { Decisions } from '#app/domain/redaction.ts';
+import type { Audience } from '#app/domain/release-policy.ts';
 import type { ReleasedCase, WithheldCounts } from '#app/domain/released-case.ts';
 import type { Actor, Role } from '#app/domain/roles.ts';
 import type { ReleaseFile } from '#db/schema/releases.ts';
@@ -80,11 +81,13 @@ export async function findKeptReleaseById(db: DbOrTx, params: { readonly actor: 
 
 /** Organisations that a release of this organisation can be addressed to, with how many of their people can read it. */
 export function listRecipientOrganisations(db: DbOrTx, params: { readonly organisationId: string; readonly audience: Audience }) {
-  const readers = sql<number>`(select count(distinct ${users.id})::int from ${users} join ${grants} on ${grants.userId} = ${users.id} where ${users.organisationId} = ${organisations.id} and not ${users.disabled} and ${grants.role} = 'insurer')`;
   return db
-    .select({ id: organisations.id, name: organisations.name, readers })
+    .select({ id: organisations.id, name: organisations.name, readers: countDistinct(grants.userId) })
     .from(organisations)
+    .leftJoin(users, and(eq(users.organisationId, organisations.id), eq(users.disabled, false)))
+    .leftJoin(grants, and(eq(grants.userId, users.id), eq(grants.role, 'insurer')))
     .where(and(ne(organisations.id, params.organisationId), params.audience === 'insurer' ? eq(organisations.kind, 'insurer') : undefined))
+    .groupBy(organisations.id, organisations.name)
     .orderBy(asc(organisations.name));
 }
 

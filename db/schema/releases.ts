@@ -1,6 +1,6 @@
 import { sql } from 'drizzle-orm';
 import { check, index, integer, jsonb, pgTable, text, uniqueIndex, uuid } from 'drizzle-orm/pg-core';
-import { audiences } from '#app/domain/redaction.ts';
+import { audiences } from '#app/domain/release-policy.ts';
 import type { LineDecision } from '#app/domain/redaction.ts';
 import type { ReleasedCase, WithheldCounts } from '#app/domain/released-case.ts';
 import { createdAt, id, instant } from './_columns.ts';

@@ -5,7 +5,7 @@ import { getActor } from '#db/queries/actors.server.ts';
 import { readCaseBeforeRedaction } from '#db/queries/case-before-redaction.server.ts';
 import { listCaseReleases, listRecipientOrganisations } from '#db/queries/releases.server.ts';
 import { getAccountByEmail } from '#db/queries/users.server.ts';
-import { linesToDecide, photoKey } from '#app/domain/redaction.ts';
+import { linesToDecide, photoKey } from '#app/domain/lines-to-decide.ts';
 import type { Decisions } from '#app/domain/redaction.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import { releaseCaseFile } from '#app/services/releases/approve-release.server.ts';

@@ -105,7 +105,7 @@ export function PhotoRelease({ card, problem }: EditorProps) {
           <Button look="quiet" className="min-h-8">Remove<span className="sr-only"> box {index + 1} of photo {card.label}</span></Button>
         </Form>
       ))}
-      <Form method="post" className="space-y-2">
+      <Form key={card.masks.length} method="post" className="space-y-2">
         <Hidden card={card} intent="add-mask" />
         <p className="font-semibold">Add a box to hide</p>
         <p className="text-small text-second">Edges in per cent, from the upper left corner. The original is never changed.</p>

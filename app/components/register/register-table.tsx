@@ -19,6 +19,8 @@ export interface RegisterTableProps {
 }
 
 const columns = 8;
+/** The roles that these elements have by themselves, until a phone's layout takes them away. */
+const as = { table: { role: 'table' }, rowgroup: { role: 'rowgroup' }, row: { role: 'row' }, cell: { role: 'cell' }, rowheader: { role: 'rowheader' }, columnheader: { role: 'columnheader' } } as const;
 const groupNotes: Record<RegisterGroup, string> = { 'before-fix': ', soonest first', new: ', oldest first', settled: '' };
 
 /**
@@ -28,9 +30,9 @@ const groupNotes: Record<RegisterGroup, string> = { 'before-fix': ', soonest fir
 export function RegisterTable({ rows, groupCounts, span, grouped }: RegisterTableProps) {
   const groups = grouped ? registerGroups.map((group) => ({ group, rows: rows.filter((row) => row.group === group) })).filter((one) => one.rows.length > 0) : [{ group: null, rows }];
   return (
-    <table role="table" className="w-full border-collapse text-left max-tablet:block" aria-label="Cases">
-      <thead role="rowgroup" className="border-b-[1.5px] border-ink align-bottom text-axis font-semibold text-second max-tablet:sr-only">
-        <tr role="row">
+    <table {...as.table} className="w-full border-collapse text-left max-tablet:block" aria-label="Cases">
+      <thead {...as.rowgroup} className="border-b-[1.5px] border-ink align-bottom text-axis font-semibold text-second max-tablet:sr-only">
+        <tr {...as.row}>
           <Head>No.</Head>
           <Head>Optic</Head>
           <Head>Mark and place</Head>
@@ -41,7 +43,7 @@ export function RegisterTable({ rows, groupCounts, span, grouped }: RegisterTabl
           <Head className="max-desk:hidden">What it waits for</Head>
         </tr>
       </thead>
-      <tbody role="rowgroup" className="max-tablet:block">
+      <tbody {...as.rowgroup} className="max-tablet:block">
         {groups.map(({ group, rows: inGroup }) => (
           <Fragment key={group ?? 'all'}>
             {group ? <GroupLine group={group} count={groupCounts[group]} /> : null}
@@ -54,13 +56,13 @@ export function RegisterTable({ rows, groupCounts, span, grouped }: RegisterTabl
 }
 
 function Head({ children, className = '' }: { readonly children: ReactNode; readonly className?: string }) {
-  return <th scope="col" role="columnheader" className={`py-1.5 pr-3 font-semibold last:pr-0 ${className}`}>{children}</th>;
+  return <th scope="col" {...as.columnheader} className={`py-1.5 pr-3 font-semibold last:pr-0 ${className}`}>{children}</th>;
 }
 
 function GroupLine({ group, count }: { readonly group: RegisterGroup; readonly count: number }) {
   return (
-    <tr role="row" className="border-b-[1.5px] border-ink max-tablet:block">
-      <th role="rowheader" colSpan={columns} scope="rowgroup" className="pt-4 pb-1 font-serif text-account font-normal max-tablet:block tablet:text-group">
+    <tr {...as.row} className="border-b-[1.5px] border-ink max-tablet:block">
+      <th {...as.rowheader} colSpan={columns} scope="rowgroup" className="pt-4 pb-1 font-serif text-account font-normal max-tablet:block tablet:text-group">
         {registerGroupLabels[group]}
         <span className="ml-2.5 font-sans text-small text-second max-tablet:ml-0 max-tablet:block">{count} {count === 1 ? 'case' : 'cases'}{groupNotes[group]}</span>
       </th>
@@ -73,22 +75,22 @@ const cell = 'pr-3 pt-[5px] pb-1 last:pr-0 max-tablet:p-0';
 function RegisterRow({ row }: { readonly row: RegisterRowView }) {
   const to = href('/cases/:caseNumber', { caseNumber: String(row.number) });
   return (
-    <tr role="row" className="border-b border-hair align-top focus-within:bg-wash max-tablet:grid max-tablet:grid-cols-[2.5rem_minmax(0,1fr)_4rem] max-tablet:gap-x-3 max-tablet:gap-y-1.5 max-tablet:py-3">
-      <td role="cell" className={`${cell} font-serif text-group leading-6 text-second`}>{row.number}</td>
-      <td role="cell" className={`${cell} max-tablet:col-start-3 max-tablet:row-start-1 max-tablet:justify-self-end`}>
+    <tr {...as.row} className="border-b border-hair align-top focus-within:bg-wash max-tablet:grid max-tablet:grid-cols-[2.5rem_minmax(0,1fr)_4rem] max-tablet:gap-x-3 max-tablet:gap-y-1.5 max-tablet:py-3">
+      <td {...as.cell} className={`${cell} font-serif text-group leading-6 text-second`}>{row.number}</td>
+      <td {...as.cell} className={`${cell} max-tablet:col-start-3 max-tablet:row-start-1 max-tablet:justify-self-end`}>
         <OpticDrawing kind={opticDrawingOf(row.opticKind)} width={44} named />
       </td>
-      <th role="rowheader" scope="row" className={`${cell} text-left font-normal max-tablet:col-start-2 max-tablet:row-start-1`}>
+      <th {...as.rowheader} scope="row" className={`${cell} text-left font-normal max-tablet:col-start-2 max-tablet:row-start-1`}>
         <AppLink href={to} data-row-link className="block font-semibold no-underline hover:underline max-tablet:min-h-6">{row.title}</AppLink>
         <span className="block text-axis text-second">{row.place}</span>
       </th>
-      <td role="cell" className={`${cell} text-axis whitespace-nowrap max-desk:hidden`}>
+      <td {...as.cell} className={`${cell} text-axis whitespace-nowrap max-desk:hidden`}>
         {row.windowDay}
         <span className="block text-second">{row.windowHours}</span>
       </td>
-      <td role="cell" className={`${cell} max-tablet:col-span-3`}><BurnCard model={row.card} size="S" label={`Case ${row.number}`} /></td>
-      <td role="cell" className={`${cell} max-tablet:col-span-2 max-[359px]:col-span-3`}><StateMark state={row.state} note={row.stateNote} below /></td>
-      <td role="cell" className={`${cell} max-tablet:col-start-3 max-tablet:-ml-20 max-tablet:text-right max-[359px]:col-span-3 max-[359px]:col-start-1 max-[359px]:ml-0 max-[359px]:text-left`}>
+      <td {...as.cell} className={`${cell} max-tablet:col-span-3`}><BurnCard model={row.card} size="S" label={`Case ${row.number}`} /></td>
+      <td {...as.cell} className={`${cell} max-tablet:col-span-2 max-[359px]:col-span-3`}><StateMark state={row.state} note={row.stateNote} below /></td>
+      <td {...as.cell} className={`${cell} max-tablet:col-start-3 max-tablet:-ml-20 max-tablet:text-right max-[359px]:col-span-3 max-[359px]:col-start-1 max-[359px]:ml-0 max-[359px]:text-left`}>
         {row.nextReturn ? (
           <>
             <time dateTime={row.nextReturn.atUtc} className="font-medium">{row.nextReturn.words}</time>
@@ -96,7 +98,7 @@ function RegisterRow({ row }: { readonly row: RegisterRowView }) {
           </>
         ) : <span className="text-second">{row.returnWords}</span>}
       </td>
-      <td role="cell" className={`${cell} text-axis text-second max-desk:hidden`}>{row.waitsFor}</td>
+      <td {...as.cell} className={`${cell} text-axis text-second max-desk:hidden`}>{row.waitsFor}</td>
     </tr>
   );
 }

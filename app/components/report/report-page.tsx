@@ -63,6 +63,12 @@ export function ReportPage({ view, problem }: { readonly view: ReportView; reado
     });
   };
 
+  const startAnew = () => {
+    if (!window.confirm('Throw away what you typed? Nothing of it has been sent.')) return;
+    draft.discard();
+    window.location.assign(guestCode ? `/report?at=${encodeURIComponent(guestCode)}` : '/report');
+  };
+
   const Heading = atForm ? 'h1' : 'h2';
   return (
     <>
@@ -87,6 +93,7 @@ export function ReportPage({ view, problem }: { readonly view: ReportView; reado
             sending={sending}
             uploads={uploads}
           />
+          {hydrated ? <p className="pt-4 pb-8"><Button type="button" look="quiet" className="min-h-11" onClick={startAnew}>Throw this draft away and start anew</Button></p> : null}
         </div>
       </Page>
     </>

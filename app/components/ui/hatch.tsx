@@ -1,6 +1,6 @@
 import type { ReactNode } from 'react';
 
-export type WithheldClass = 'personal' | 'health' | 'child' | 'legal' | 'exact place';
+export type WithheldClass = 'personal' | 'health' | 'child' | 'legal' | 'exact place' | 'commercial' | 'text held back' | 'photos held back';
 
 /* One width a class, so that the block never gives away how much was removed. */
 const widths: Record<WithheldClass, string> = {
@@ -9,6 +9,9 @@ const widths: Record<WithheldClass, string> = {
   child: 'w-[8.5rem]',
   legal: 'w-[8rem]',
   'exact place': 'w-[11rem]',
+  commercial: 'w-[11rem]',
+  'text held back': 'w-[12.5rem]',
+  'photos held back': 'w-[13.5rem]',
 };
 
 export interface HatchProps {

@@ -5,7 +5,7 @@ import type { Sampling } from '#app/physics/uncertainty.ts';
 import { roundSignificant, roundTo } from '#app/physics/units.ts';
 import type { FocusOutcome } from './focus-result.ts';
 import type { Setting } from './setting.ts';
-import type { JudgedMinute } from './window.ts';
+import { lightReaches, type JudgedMinute } from './window.ts';
 
 export interface Findings {
   readonly checks: readonly Check[];
@@ -80,6 +80,9 @@ function energy(setting: Setting, findings: Findings): TestSummary {
   };
   const contradiction = failed(findings, test);
   if (contradiction !== null) return { test, result: 'contradicts', sentence: contradiction.sentence, margin };
+  if (findings.best === null || !lightReaches(findings.best)) {
+    return { test, result: 'inconclusive', sentence: 'Light does not reach the optic in this window; the figures hold for an unobstructed sun.', margin };
+  }
   const reached = heating?.outcomes.find((outcome) => outcome.answer === 'reached');
   if (reached !== undefined) return { test, result: 'supports', sentence: reached.sentence, margin };
   const why = material === null ? 'The target material is unknown.' : 'No effect is surely reached within the time that the spot rests on one point.';

@@ -1,7 +1,7 @@
 import type { DirectBeam } from '#app/physics/sky/direct-beam.ts';
 import { lowestClearSkyDeg } from '#app/physics/sky/clear-sky.ts';
 import type { Setting } from './setting.ts';
-import type { JudgedMinute } from './window.ts';
+import { lightReaches, type JudgedMinute } from './window.ts';
 
 /** What a reader must know before using the numbers. */
 export function warningsOf(
@@ -11,6 +11,9 @@ export function warningsOf(
   const { model, mark, reach, input } = setting;
   if (judged.length > 14 * 1440) list.push('The window is longer than 14 days; narrow it if anything allows.');
   if (best === null) list.push('The sun does not rise in this window.');
+  if (best !== null && model !== null && !lightReaches(best)) {
+    list.push('Light does not reach the optic in this window: focus and heating are computed for an unobstructed sun.');
+  }
   if (best !== null && best.sun.apparentElevationDeg < lowestClearSkyDeg) {
     list.push('Below 3° no clear-sky figure holds: flux is not stated and nothing is refuted on it.');
   }

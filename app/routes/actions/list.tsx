@@ -17,9 +17,10 @@ import { EmptyState } from '#app/components/ui/notice.tsx';
 import { PageTitle } from '#app/components/ui/page-title.tsx';
 import { actionsCsv } from '#app/domain/action-export.ts';
 import { actionFilterHref, chosenValue, passesFilter, readActionFilter, readChosen } from '#app/domain/action-filter.ts';
-import { reassignSchema, reDateSchema, sentencesByField } from '#app/domain/action-form.ts';
+import { reassignSchema, reDateSchema } from '#app/domain/action-form.ts';
 import { actionsHeading, actionViews, dueDayMeaning, inView, isUnfinished } from '#app/domain/action-list.ts';
 import { formatIsoDay } from '#app/domain/local-time.ts';
+import { fieldErrorsOf } from '#app/http/field-errors.ts';
 import { formProblem, problemFromError } from '#app/http/form-result.server.ts';
 import { respond } from '#app/http/to-response.server.ts';
 import { reassignActions } from '#app/services/corrective-actions/reassign-actions.server.ts';
@@ -106,11 +107,11 @@ export async function action({ request, context }: Route.ActionArgs) {
   try {
     if (intent === 're-date') {
       const typed = reDateSchema.safeParse(fields);
-      if (!typed.success) return formProblem(intent, form, { fieldErrors: sentencesByField(typed.error) });
+      if (!typed.success) return formProblem(intent, form, { fieldErrors: fieldErrorsOf(typed.error) });
       await reDateActions({ actor, actions, ...typed.data });
     } else if (intent === 'reassign') {
       const typed = reassignSchema.safeParse(fields);
-      if (!typed.success) return formProblem(intent, form, { fieldErrors: sentencesByField(typed.error) });
+      if (!typed.success) return formProblem(intent, form, { fieldErrors: fieldErrorsOf(typed.error) });
       await reassignActions({ actor, actions, ...typed.data });
     } else {
       await remindOwners({ actor, actions });

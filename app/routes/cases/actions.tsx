@@ -9,10 +9,11 @@ import { ActionForm } from '#app/components/corrective-actions/action-form.tsx';
 import { YearRibbonKey } from '#app/components/burn-card/year-ribbon.tsx';
 import { ButtonLink } from '#app/components/ui/button.tsx';
 import { EmptyState } from '#app/components/ui/notice.tsx';
-import { actionFormSchema, effectSchema, noteSchema, reassignSchema, reDateSchema, sentencesByField, verifySchema, withdrawSchema } from '#app/domain/action-form.ts';
+import { actionFormSchema, effectSchema, noteSchema, reassignSchema, reDateSchema, verifySchema, withdrawSchema } from '#app/domain/action-form.ts';
 import { readCaseNumber } from '#app/domain/case-number.ts';
 import { DomainError, notFound } from '#app/domain/errors.ts';
 import type { Actor } from '#app/domain/roles.ts';
+import { fieldErrorsOf } from '#app/http/field-errors.ts';
 import { formProblem, problemFromError } from '#app/http/form-result.server.ts';
 import { respond } from '#app/http/to-response.server.ts';
 import { addAction } from '#app/services/corrective-actions/add-action.server.ts';
@@ -54,7 +55,7 @@ export async function action({ request, context, params }: Route.ActionArgs) {
 
 async function give(actor: Actor, caseNumber: number, form: FormData) {
   const draft = actionFormSchema.safeParse(Object.fromEntries(form));
-  if (!draft.success) return formProblem('add', form, { fieldErrors: sentencesByField(draft.error) });
+  if (!draft.success) return formProblem('add', form, { fieldErrors: fieldErrorsOf(draft.error) });
   const { number } = await addAction({ actor, caseNumber, draft: draft.data });
   return `#action-${number}`;
 }
@@ -68,7 +69,7 @@ async function step(intent: Exclude<z.infer<typeof intents>, 'add'>, actor: Acto
   const files = form.getAll('files').filter((entry) => entry instanceof File);
   const read = async <Out extends object>(schema: z.ZodType<Out>, run: (typed: Out) => Promise<unknown>) => {
     const typed = schema.safeParse(fields);
-    if (!typed.success) return formProblem(intent, form, { fieldErrors: sentencesByField(typed.error) });
+    if (!typed.success) return formProblem(intent, form, { fieldErrors: fieldErrorsOf(typed.error) });
     await run(typed.data);
     return '';
   };

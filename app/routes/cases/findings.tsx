@@ -20,6 +20,7 @@ import { DomainError, notFound } from '#app/domain/errors.ts';
 import { findingFormSchema, reviewCommentSchema } from '#app/domain/finding-form.ts';
 import { plainText } from '#app/domain/incident.ts';
 import type { Actor } from '#app/domain/roles.ts';
+import { fieldErrorsOf } from '#app/http/field-errors.ts';
 import { formProblem, problemFromError } from '#app/http/form-result.server.ts';
 import { respond } from '#app/http/to-response.server.ts';
 import { moveCase } from '#app/services/cases/move-case.server.ts';
@@ -79,7 +80,7 @@ async function act(intent: Intent, call: Call) {
       return null;
     case 'add-comment': {
       const comment = reviewCommentSchema.safeParse(fields);
-      if (!comment.success) return formProblem(intent, form, z.flattenError(comment.error));
+      if (!comment.success) return formProblem(intent, form, { fieldErrors: fieldErrorsOf(comment.error) });
       await addReviewComment({ actor, caseNumber, ...comment.data });
       return null;
     }
@@ -99,7 +100,7 @@ async function keepDraft(intent: 'save-draft' | 'send', { actor, caseNumber, for
   const fields = Object.fromEntries(form);
   const draft = findingFormSchema.safeParse(fields);
   const opened = z.union([z.literal('').transform(() => null), z.iso.datetime().transform((text) => new Date(text))]).safeParse(form.get('openedAt'));
-  if (!draft.success) return formProblem(intent, form, z.flattenError(draft.error));
+  if (!draft.success) return formProblem(intent, form, { fieldErrors: fieldErrorsOf(draft.error) });
   if (!opened.success) return formProblem(intent, form, { formErrors: ['The form is damaged. Open the page anew; what you typed can be copied from here.'] });
   await saveFinding({ actor, caseNumber, openedAt: opened.data, draft: draft.data });
   if (intent === 'send') {

@@ -23,6 +23,7 @@ import { hypothesesHeading, hypothesisCard, hypothesisFields } from '#app/domain
 import { noTests, testLabels } from '#app/domain/hypothesis.ts';
 import { canOnCase, whoCan } from '#app/domain/permissions.ts';
 import type { Actor } from '#app/domain/roles.ts';
+import { fieldErrorsOf } from '#app/http/field-errors.ts';
 import { formProblem, problemFromError } from '#app/http/form-result.server.ts';
 import { respond } from '#app/http/to-response.server.ts';
 import { saveHypothesis } from '#app/services/findings/save-hypothesis.server.ts';
@@ -97,7 +98,7 @@ export async function action({ request, context, params }: Route.ActionArgs) {
   const target = targetSchema.safeParse(typed);
   const parsed = hypothesisFormSchema.safeParse(typed);
   if (!target.success) return formProblem('save-hypothesis', form, { formErrors: ['The form is damaged. Open the page anew; what you typed can be copied from here.'] });
-  if (!parsed.success) return formProblem('save-hypothesis', form, z.flattenError(parsed.error));
+  if (!parsed.success) return formProblem('save-hypothesis', form, { fieldErrors: fieldErrorsOf(parsed.error) });
   try {
     const { hypothesisId } = await saveHypothesis({ actor, caseNumber: readCaseNumber(params.caseNumber), ...target.data, draft: parsed.data });
     return redirect(`${href('/cases/:caseNumber/hypotheses', { caseNumber: params.caseNumber })}#hypothesis-${hypothesisId}`, 303);

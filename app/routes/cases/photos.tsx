@@ -1,4 +1,5 @@
 import { data, Form, href, redirect } from 'react-router';
+import type { ShouldRevalidateFunctionArgs } from 'react-router';
 import { z } from 'zod';
 import type { Route } from './+types/photos';
 import { requireActor } from '#app/auth/middleware.server.ts';
@@ -94,6 +95,9 @@ function problem(intent: string, form: FormData, fieldErrors: Readonly<Record<st
   return data({ ok: false as const, intent, formErrors: [], fieldErrors: sentences, typed: typedValues(form) }, { status: 400 });
 }
 
+/** Also after a refusal: the photos that were taken are on the sheet then. */
+export const shouldRevalidate = ({ actionStatus, defaultShouldRevalidate }: ShouldRevalidateFunctionArgs): boolean => actionStatus !== undefined || defaultShouldRevalidate;
+
 export const meta: Route.MetaFunction = ({ params }) => [{ title: `Photos · Case ${params.caseNumber} · Scorchline` }];
 
 export default function CasePhotos({ loaderData, actionData }: Route.ComponentProps) {
@@ -116,7 +120,7 @@ export default function CasePhotos({ loaderData, actionData }: Route.ComponentPr
       <ul className="grid gap-x-8 gap-y-10 tablet:grid-cols-2 desk:grid-cols-3">
         {cards.map((card) => <SheetItem key={card.id} card={card} rights={loaderData} problem={problemOf(card, actionData)} />)}
       </ul>
-      {mayAdd ? <AddPhotos caseNumber={caseNumber} problem={actionData?.intent === 'add-photos' ? actionData : null} /> : null}
+      {mayAdd ? <AddPhotos key={cards.length} caseNumber={caseNumber} problem={actionData?.intent === 'add-photos' ? actionData : null} /> : null}
     </div>
   );
 }

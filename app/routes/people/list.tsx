@@ -9,7 +9,6 @@ import { PersonRow } from '#app/components/people/person-row.tsx';
 import { RoleTable } from '#app/components/people/role-table.tsx';
 import { Leavers } from '#app/components/people/leavers.tsx';
 import { Columns, Page } from '#app/components/layout/page.tsx';
-import { AppLink } from '#app/components/ui/app-link.tsx';
 import { ButtonLink } from '#app/components/ui/button.tsx';
 import { Notice } from '#app/components/ui/notice.tsx';
 import { PageTitle, SectionHeading } from '#app/components/ui/page-title.tsx';

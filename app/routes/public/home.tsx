@@ -18,6 +18,8 @@ export async function loader({ context }: Route.LoaderArgs) {
   return { samples: await sampleCards() };
 }
 
+type Sample = Route.ComponentProps['loaderData']['samples'][number];
+
 export const meta: Route.MetaFunction = () => [
   { title: 'Scorchline: could the sun have done it?' },
   { name: 'description', content: 'A register for burns, melts and near misses from focused sunlight.' },
@@ -48,13 +50,13 @@ export default function Home({ loaderData }: Route.ComponentProps) {
           <SignInForm next={null} />
         </section>
         <section aria-labelledby="samples-heading" className="desk:col-span-2 desk:col-start-2 desk:row-start-3">
-          <h2 id="samples-heading" className="pb-2 text-[1.125rem]/6 font-semibold">Three cases to read, all invented</h2>
+          <h2 id="samples-heading" className="pb-2 text-[1.125rem]/6 font-semibold">Three cases, all invented</h2>
           <ul className="border-t border-hair">
             {samples.map((sample) => (
               <li key={sample.key} className="grid items-center gap-x-8 gap-y-2 border-b border-hair py-3 tablet:grid-cols-[minmax(0,1fr)_300px]">
                 <div>
                   <p className="font-semibold">{sample.title}</p>
-                  <p className="text-small text-second">{sample.found}</p>
+                  <p className="text-small text-second">{sample.found}; {minutesInWords(sample.small.runs)}</p>
                 </div>
                 <BurnCard model={sample.small} size="S" label={sample.title} />
               </li>
@@ -67,12 +69,29 @@ export default function Home({ loaderData }: Route.ComponentProps) {
   );
 }
 
+const afterMs = 8_400_000;
+
+/** The window from its first minute, and daylight after it that nobody examined. */
+function withTimeAfter(card: Sample['large']): Sample['large'] {
+  return { ...card, toUtc: new Date(Date.parse(card.toUtc) + afterMs).toISOString() };
+}
+
+/** What the engine found for the minutes examined. */
+function minutesInWords(runs: Sample['small']['runs']): string {
+  const minutes = (verdict: Sample['small']['runs'][number]['verdict']) =>
+    Math.round(runs.filter((run) => run.verdict === verdict).reduce((sum, run) => sum + Date.parse(run.toUtc) - Date.parse(run.fromUtc), 0) / 60_000);
+  const [sunlit, open] = [minutes('sunlit'), minutes('cannot-tell')];
+  const total = sunlit + open + minutes('not-sunlit');
+  if (sunlit > 0) return `${sunlit} of ${total} minutes sunlit`;
+  return open > 0 ? `${open} of ${total} minutes cannot be told` : `none of ${total} minutes sunlit`;
+}
+
 /** The first sample, edge to edge; its facts are computed, its place is invented. */
-function LargeSample({ sample }: { readonly sample: Route.ComponentProps['loaderData']['samples'][number] }) {
+function LargeSample({ sample }: { readonly sample: Sample }) {
   return (
     <figure className="desk:col-span-3 desk:row-start-2">
       <div className="mx-[calc(-1*var(--page-margin))]">
-        <BurnCard model={sample.large} size="hero" label={`Invented sample: ${sample.title}`} />
+        <BurnCard model={withTimeAfter(sample.large)} size="hero" label={`Invented sample: ${sample.title}`} />
       </div>
       <figcaption className="pt-3 text-small text-second">
         Invented place, computed sun: {sample.title}, {formatIsoDay(sample.day)}, {sample.large.zone}. Dark: the time examined. Cut through: sunlight on the mark was possible,{' '}

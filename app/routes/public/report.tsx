@@ -1,10 +1,13 @@
 import { randomUUID } from 'node:crypto';
-import { data, redirect } from 'react-router';
+import { data, isRouteErrorResponse, redirect, useLocation } from 'react-router';
 import type { RouterContextProvider } from 'react-router';
 import type { Route } from './+types/report';
 import { actorContext } from '#app/auth/actor-context.ts';
 import { requireActor } from '#app/auth/middleware.server.ts';
+import { TaskHeader } from '#app/components/layout/app-header.tsx';
+import { Page } from '#app/components/layout/page.tsx';
 import { ReportPage, reportAddress } from '#app/components/report/report-page.tsx';
+import { AppLink } from '#app/components/ui/app-link.tsx';
 import type { ReportFormState } from '#app/components/report/report-fields.ts';
 import { DomainError } from '#app/domain/errors.ts';
 import type { ReportHolder } from '#app/domain/report.ts';
@@ -111,4 +114,20 @@ export default function ReportRoute({ loaderData, actionData }: Route.ComponentP
   // After a post without a script the photos of the answer are newer than those of the loader.
   const view = actionData?.view ?? loaderData;
   return <ReportPage key={view.clientId} view={view} problem={actionData?.state ?? null} />;
+}
+
+/** A refusal says why; anything else is most often a connection that broke, and the draft is still on the device. */
+export function ErrorBoundary({ error }: Route.ErrorBoundaryProps) {
+  const { pathname, search } = useLocation();
+  const refusal = isRouteErrorResponse(error) && typeof error.data === 'object' && error.data !== null && 'message' in error.data ? String(error.data.message) : null;
+  return (
+    <>
+      <TaskHeader title="Report a mark" closeHref="/" />
+      <Page width="task">
+        <h1 className="pt-6 pb-2 font-serif text-title">{refusal ? 'This report cannot be opened' : 'Not sent yet'}</h1>
+        <p className="pb-4">{refusal ?? 'The connection broke off, or something failed on our side. What you typed is kept on this device. Open the report again and send it: it is never filed twice.'}</p>
+        {refusal ? <AppLink href="/progress">Look up a report by its receipt</AppLink> : <AppLink href={`${pathname}${search}`} reload>Open the report again</AppLink>}
+      </Page>
+    </>
+  );
 }

@@ -9,9 +9,12 @@ import { insertRelease, listRecipientOrganisations } from '#db/queries/releases.
 import type { ReleaseFile } from '#db/queries/releases.server.ts';
 import type { CaseBeforeRedaction } from '#app/domain/case-before-redaction.ts';
 import { DomainError, notFound } from '#app/domain/errors.ts';
-import { audienceLabels, heldWords, linesToDecide, redactCase } from '#app/domain/redaction.ts';
+import { heldWords, redactCase } from '#app/domain/redaction.ts';
+import { linesToDecide } from '#app/domain/lines-to-decide.ts';
+import { audienceLabels } from '#app/domain/release-policy.ts';
+import type { Audience } from '#app/domain/release-policy.ts';
 import { findHits, searcherFor } from '#app/domain/redact-text.ts';
-import type { Audience, Decisions, Redaction } from '#app/domain/redaction.ts';
+import type { Decisions, Redaction } from '#app/domain/redaction.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import { authorize } from '#app/services/authorize.ts';
 import { deleteObject, putObject } from '#app/storage/objects.server.ts';

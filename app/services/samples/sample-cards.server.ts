@@ -1,5 +1,6 @@
 import { cardDay, dayCard, wholeCard } from '#app/domain/case-card.ts';
 import type { CardCase, CardResult, CardView } from '#app/domain/case-card.ts';
+import { formatClock } from '#app/domain/local-time.ts';
 import { sampleCases } from '#app/domain/sample-cases.ts';
 import type { SampleCase } from '#app/domain/sample-cases.ts';
 import { runEngine } from '#app/jobs/engine-runner.server.ts';
@@ -49,7 +50,7 @@ async function cardOf(sample: SampleCase): Promise<SampleCard> {
     found: sample.found,
     sunlitMinutes: result.totals.sunlit,
     small: dayCard(facts, shown, { fromHour: 4, toHour: 22 }),
-    large: wholeCard(facts, shown, { start: [], end: ['found here'] }),
+    large: wholeCard(facts, shown, { start: [], end: [`${formatClock(facts.foundAt ?? facts.reportedAt, facts.zone)}, the mark was found`, 'daylight after this was not examined'] }),
     day: cardDay(facts, shown),
   };
 }

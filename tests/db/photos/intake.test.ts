@@ -1,4 +1,5 @@
 import { randomUUID } from 'node:crypto';
+import { readFile } from 'node:fs/promises';
 import { eq } from 'drizzle-orm';
 import sharp from 'sharp';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
@@ -42,6 +43,35 @@ describe('a bad file gets a sentence that names it', () => {
     expect(outcome.ok).toBe(false);
     expect(outcome.ok ? '' : outcome.sentence).toMatch(sentence);
     expect(await rowsOf(clientId)).toEqual([]);
+  });
+});
+
+describe('the files of fixtures/photos', () => {
+  const stored = async (name: string) => {
+    const clientId = randomUUID();
+    const outcome = await store(name, await readFile(new URL(`../../../fixtures/photos/${name}`, import.meta.url)), clientId);
+    return { outcome, row: (await rowsOf(clientId))[0] };
+  };
+
+  test.each(['zero-byte.jpg', 'text-renamed.jpg', 'html-renamed.jpg', 'truncated.jpg', 'huge-dimensions.png'])('%s is refused by name', async (name) => {
+    const { outcome, row } = await stored(name);
+    expect(outcome.ok ? '' : outcome.sentence).toContain(`“${name}”`);
+    expect(row).toBeUndefined();
+  });
+
+  test.each([
+    ['with-gps-exif.jpg', 'image/jpeg'],
+    ['rotated-exif6.jpg', 'image/jpeg'],
+    ['no-exif.png', 'image/png'],
+    ['webp.webp', 'image/webp'],
+  ])('%s is taken as %s', async (name, mime) => {
+    const { outcome, row } = await stored(name);
+    expect([outcome.ok, row?.mime]).toEqual([true, mime]);
+  });
+
+  test('the one with a place offers it, the one without offers nothing', async () => {
+    expect((await stored('with-gps-exif.jpg')).row?.exif).toMatchObject({ takenAtLocal: expect.any(String), latitudeDeg: expect.any(Number), longitudeDeg: expect.any(Number) });
+    expect((await stored('no-exif.png')).row?.exif).toMatchObject({ takenAtLocal: null, latitudeDeg: null, longitudeDeg: null, camera: null });
   });
 });
 

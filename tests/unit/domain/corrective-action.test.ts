@@ -1,11 +1,12 @@
 import { describe, expect, test } from 'vitest';
 import { actionFilterHref, passesFilter, readActionFilter, readChosen } from '#app/domain/action-filter.ts';
-import { actionFormSchema, addDays, daysFrom, defaultDueOn, effectSchema, reasonSchema, returnStillToCome, sentencesByField } from '#app/domain/action-form.ts';
+import { actionFormSchema, addDays, daysFrom, defaultDueOn, effectSchema, reasonSchema, returnStillToCome } from '#app/domain/action-form.ts';
 import { actionsHeading, compareActions, dueDayMeaning, groupOf, inView, isCheckDue } from '#app/domain/action-list.ts';
 import type { ListedAction } from '#app/domain/action-list.ts';
 import { actionLine, actionRights, returnSpans } from '#app/domain/action-view.ts';
 import type { ActionSource } from '#app/domain/action-view.ts';
 import { actionStates, actionSteps, effectivenessCheckOn, stepAllowed } from '#app/domain/corrective-action.ts';
+import { fieldErrorsOf } from '#app/http/field-errors.ts';
 import type { Actor } from '#app/domain/roles.ts';
 
 const listed = (values: Partial<ListedAction> = {}): ListedAction => ({ state: 'open', dueOn: '2026-07-24', risk: 'medium', ownerId: 'owner', verifierId: 'verifier', effectCheckOn: null, today: '2026-07-15', nextReturnOn: '2026-08-03', ...values });
@@ -81,7 +82,7 @@ describe('the forms', () => {
     [{ ownerId: '' }, 'ownerId', 'Choose a person'],
   ])('%o is refused beside %s', (change, field, sentence) => {
     const refused = actionFormSchema.safeParse({ ...fields, ...change });
-    expect(refused.error ? sentencesByField(refused.error)[field]?.join(' ') : '').toContain(sentence);
+    expect(refused.error ? fieldErrorsOf(refused.error)[field]?.join(' ') : '').toContain(sentence);
   });
 
   test('a reason is more than a mark', () => {

@@ -1,0 +1,149 @@
+import { fileURLToPath } from 'node:url';
+import AxeBuilder from '@axe-core/playwright';
+import postgres from 'postgres';
+import type { Page } from 'playwright-core';
+import { afterAll, beforeAll, expect, test } from 'vitest';
+import { receiptPattern } from '#app/domain/incident.ts';
+import { openStage } from './support/stage.ts';
+import type { Stage } from './support/stage.ts';
+
+/** The account-free link of a demonstration site. */
+const guestReport = '/report?at=kestwick-roof-7q4m';
+const photoFile = (name: string) => fileURLToPath(new URL(`../../fixtures/photos/${name}`, import.meta.url));
+
+let stage: Stage;
+let sql: postgres.Sql;
+beforeAll(async () => {
+  stage = await openStage();
+  sql = postgres(stage.databaseUrl, { max: 1 });
+});
+afterAll(async () => {
+  await sql.end();
+  await stage.close();
+});
+
+async function expectNoViolations(page: Page): Promise<void> {
+  const { violations } = await new AxeBuilder({ page }).analyze();
+  expect(violations.map(({ id, nodes }) => `${id}: ${nodes.map((node) => node.target.join(' ')).join(', ')}`)).toEqual([]);
+}
+
+async function goOn(page: Page): Promise<void> {
+  await page.getByRole('button', { name: 'It is covered, or gone. Go on' }).click();
+}
+
+async function answerFour(page: Page): Promise<void> {
+  await page.getByLabel('The spot, in words').fill('roof, south edge by hatch 2');
+  await page.locator('[name=foundWhen][value=just-now]').check();
+  await page.locator('[name=sighting][value=mark]').check();
+  await page.locator('[name=anyoneHurt][value=no]').check();
+}
+
+const send = (page: Page) => page.locator('button[value=send]').last().click();
+const clientIdOf = (page: Page) => new URL(page.url()).searchParams.get('report') ?? '';
+async function receiptOn(page: Page): Promise<string> {
+  await page.waitForURL(/\/received\//u);
+  return new URL(page.url()).pathname.split('/').at(-1) ?? '';
+}
+
+test('make safe comes first, with one tap to the emergency number and one button on', async () => {
+  const page = await stage.visit({ size: 'phone' });
+  await page.goto(guestReport);
+  await expect.poll(() => page.getByRole('heading', { level: 1 }).textContent()).toBe('Smoking or burning?');
+  expect(await page.getByRole('link', { name: /Call the emergency number/u }).getAttribute('href')).toMatch(/^tel:\+?\d+$/u);
+  await page.getByRole('button', { name: 'It is covered, or gone. Go on' }).waitFor();
+  expect(await page.locator('#report').isVisible()).toBe(false);
+  await expectNoViolations(page);
+});
+
+test('a guest reports with a photo from a phone, gets a receipt, and follows it', async () => {
+  const page = await stage.visit({ size: 'phone' });
+  await page.goto(guestReport);
+  await goOn(page);
+  await page.locator('input[type=file]').setInputFiles([photoFile('with-gps-exif.jpg'), photoFile('text-renamed.jpg')]);
+  await page.getByText('with the team').waitFor();
+  await page.getByText(/“text-renamed\.jpg” is not a JPEG/u).waitFor();
+  await answerFour(page);
+  await expectNoViolations(page);
+  await send(page);
+  const receipt = await receiptOn(page);
+  expect(receipt).toMatch(receiptPattern);
+  await expectNoViolations(page);
+  await expect.poll(() => page.evaluate(() => Object.keys(localStorage).filter((key) => key.startsWith('scorchline.report')))).toEqual([]);
+  await page.getByRole('link', { name: 'Follow this report' }).click();
+  await page.getByRole('heading', { name: 'Your report is in. The first look is still to come' }).waitFor();
+  await expectNoViolations(page);
+  const [row] = await sql<{ state: string; photos: number }[]>`select state, (select count(*)::int from photos where case_id = cases.id) as photos from cases where receipt = ${receipt}`;
+  expect(row).toEqual({ state: 'reported', photos: 1 });
+});
+
+test('what was typed, and the photos, are there again after a reload', async () => {
+  const page = await stage.visit({ size: 'phone' });
+  await page.goto(guestReport);
+  await goOn(page);
+  await page.locator('input[type=file]').setInputFiles(photoFile('no-exif.png'));
+  await page.getByText('with the team').waitFor();
+  await page.getByLabel('In your words').fill('Brown band, about two metres');
+  await page.locator('[name=opticKind][value=bottle]').check();
+  await page.getByText(/Saved on this (phone|device)/u).waitFor();
+  const clientId = clientIdOf(page);
+  // The bare link, as scanned again at the door, finds the same report.
+  await page.goto(guestReport);
+  await page.waitForURL((url) => url.searchParams.get('report') === clientId);
+  await expect.poll(() => page.getByLabel('In your words').inputValue()).toBe('Brown band, about two metres');
+  expect(await page.locator('[name=opticKind][value=bottle]').isChecked()).toBe(true);
+  await page.getByRole('button', { name: 'Take off no-exif.png' }).waitFor();
+});
+
+test('only the sizes of the chosen optic are asked', async () => {
+  const page = await stage.visit({ size: 'phone' });
+  await page.goto(guestReport);
+  await goOn(page);
+  const shown = async () => page.locator('fieldset:has(> legend)').filter({ has: page.locator('[name^="optic-"]') }).evaluateAll((all) => all.filter((one) => one.checkVisibility()).map((one) => one.querySelector('legend')?.textContent));
+  expect(await shown()).toEqual([]);
+  await page.locator('[name=opticKind][value=window-pane]').check();
+  expect((await shown()).filter((text) => !text?.includes('How was it got'))).toEqual(['How wide is it?', 'How high is it?', 'How far does the middle bow in or out?']);
+});
+
+test('without signal the report waits, goes by itself when it returns, and is filed once', async () => {
+  const page = await stage.visit({ size: 'phone' });
+  await page.goto(guestReport);
+  await goOn(page);
+  await answerFour(page);
+  const clientId = clientIdOf(page);
+  await page.context().setOffline(true);
+  await send(page);
+  await page.getByText(/It goes by itself, once only/u).waitFor();
+  await page.context().setOffline(false);
+  await receiptOn(page);
+  expect(await sql`select 1 from cases where client_id = ${clientId}`).toHaveLength(1);
+});
+
+test('without a script the same page reports, photos and all, and keeps what was typed when something is missing', async () => {
+  const page = await stage.visit({ size: 'smallPhone', javaScriptEnabled: false });
+  await page.goto(guestReport);
+  await page.locator('#photo-files').setInputFiles(photoFile('rotated-exif6.jpg'));
+  await page.getByLabel('In your words').fill('Brown band');
+  await page.locator('[name=foundWhen][value=dont-know]').check();
+  await page.locator('[name=sighting][value=dont-know]').check();
+  await send(page);
+  await page.getByRole('alert').waitFor();
+  expect(await page.getByLabel('In your words').inputValue()).toBe('Brown band');
+  await page.getByRole('button', { name: 'Take off rotated-exif6.jpg' }).waitFor();
+  await page.locator('[name=anyoneHurt][value=dont-know]').check();
+  await send(page);
+  expect(await receiptOn(page)).toMatch(receiptPattern);
+});
+
+test('nothing scrolls sideways at 320 px', async () => {
+  const page = await stage.visit({ size: 'smallPhone' });
+  const width = () => page.evaluate(() => document.documentElement.scrollWidth);
+  await page.goto(guestReport);
+  await page.getByRole('button', { name: 'It is covered, or gone. Go on' }).waitFor();
+  expect(await width()).toBe(320);
+  await goOn(page);
+  await page.locator('[name=opticKind][value=metal-trim]').check();
+  await page.locator('[name=foundWhen][value=range]').check();
+  expect(await width()).toBe(320);
+  await page.goto('/progress');
+  expect(await width()).toBe(320);
+});

@@ -1,0 +1,27 @@
+import path from 'node:path';
+import type { Page } from 'playwright-core';
+import { projectRoot } from './app-process.ts';
+
+export const demoPhotoPath = (key: string): string => path.join(projectRoot, 'fixtures', 'photos', 'demo', `${key}.jpg`);
+
+/** Chooses one chip of a group by its words. */
+export async function choose(page: Page, group: string, option: string): Promise<void> {
+  await page.getByRole('group', { name: group }).getByText(option, { exact: true }).click();
+}
+
+/** The four answers of the rooftop scorch, at a phone, with the form open. */
+export async function fillRooftopReport(page: Page, words: string): Promise<void> {
+  await page.getByLabel('Site').selectOption({ label: 'Kestwick Court Block C' });
+  await page.getByLabel('The spot, in words').fill('roof, south edge by hatch 2');
+  await choose(page, 'When was it found?', 'Just now');
+  await choose(page, 'What do you see?', 'Mark or scorch');
+  await page.getByLabel('In your words').fill(words);
+  await choose(page, 'Was anyone hurt?', 'No');
+}
+
+/** Opens the report page and goes past the make-safe card. */
+export async function openReport(page: Page): Promise<void> {
+  await page.goto('/report');
+  await page.getByRole('button', { name: 'It is covered, or gone. Go on' }).click();
+  await page.getByRole('heading', { name: 'What did you find?' }).waitFor();
+}
