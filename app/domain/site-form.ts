@@ -18,8 +18,8 @@ const facts = {
   elevationM: z.string().trim().regex(/^-?\d{1,4}(?:\.\d+)?$/u, 'Write the height above sea level in metres.').transform(Number).pipe(z.number().min(-430, 'No site lies that low.').max(6000, 'No site lies that high.')),
   /** Left empty: taken from the coordinates. */
   zone: z.string().trim().refine((zone) => zone === '' || isZone(zone), 'Write an IANA zone name, like Europe/London, or leave it empty.'),
-  use: z.enum(siteUses),
-  jurisdiction: z.enum(['GB', 'US', 'EU', 'other']),
+  use: z.enum(siteUses, 'Choose what the site is used for.'),
+  jurisdiction: z.enum(['GB', 'US', 'EU', 'other'], 'Choose a jurisdiction.'),
 };
 
 export const siteFormSchema = z.discriminatedUnion('intent', [

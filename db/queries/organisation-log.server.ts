@@ -1,4 +1,4 @@
-import { and, desc, eq, ilike, lt } from 'drizzle-orm';
+import { and, desc, eq, ilike, sql } from 'drizzle-orm';
 import type { DbOrTx } from '#db/client.server.ts';
 import { cases, logEntries } from '#db/schema/all.ts';
 
@@ -7,6 +7,7 @@ export interface OrganisationLogQuery {
   readonly event?: string | undefined;
   readonly person?: string | undefined;
   readonly caseNumber?: number | undefined;
+  /** Number of the line after which to go on. */
   readonly before?: number | undefined;
   readonly limit: number;
 }
@@ -25,10 +26,11 @@ export async function listOrganisationLog(db: DbOrTx, query: OrganisationLogQuer
         query.event ? ilike(logEntries.event, containing(query.event)) : undefined,
         query.person ? ilike(logEntries.actorName, containing(query.person)) : undefined,
         query.caseNumber ? eq(cases.number, query.caseNumber) : undefined,
-        query.before ? lt(logEntries.sequence, query.before) : undefined,
+        // Imported lines can be older than lines written before them, so time comes first and the number breaks ties.
+        query.before ? sql`(${logEntries.at}, ${logEntries.sequence}) < (select at, sequence from log_entries where sequence = ${query.before})` : undefined,
       ),
     )
-    .orderBy(desc(logEntries.sequence))
+    .orderBy(desc(logEntries.at), desc(logEntries.sequence))
     .limit(query.limit);
   return rows.map((row) => (query.withContent || row.caseNumber === null ? row : { ...row, summary: '', reason: '' }));
 }

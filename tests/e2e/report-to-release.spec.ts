@@ -45,7 +45,7 @@ describe('a rooftop scorch', () => {
     await page.waitForURL(/\/cases\/\d+/u);
     caseNumber = Number(/\/cases\/(\d+)/u.exec(page.url())?.[1]);
     expect(caseNumber).toBeGreaterThan(200);
-    await expect.poll(() => stage.mail.messages.some((message) => message.to.some((address) => address.startsWith("tomas@"))), { timeout: 20_000 }).toBe(true);
+    await expect.poll(() => stage.mail.messages.some((message) => message.to.some((address) => address.startsWith('tomas@'))), { timeout: 20_000 }).toBe(true);
   });
 
   it('gets a first look, its facts and an investigator', async () => {
@@ -130,6 +130,7 @@ describe('a rooftop scorch', () => {
     expect(await page.getByText('Sunlight gathered by the curved steel edge is a possible cause').count()).toBe(0);
     await page.getByRole('button', { name: /Show the opinion/u }).click();
     await page.getByText('Sunlight gathered by the curved steel edge is a possible cause').waitFor();
+    for (const box of await page.getByRole('checkbox', { name: /^read:/u }).all()) await box.check();
     await page.getByRole('button', { name: 'Sign and pass to action' }).click();
     await expect.poll(() => page.getByText('Corrective action', { exact: true }).count()).toBeGreaterThan(0);
   });
@@ -157,7 +158,7 @@ describe('a rooftop scorch', () => {
     await verifier.getByRole('button', { name: 'Verify', exact: true }).click();
     await expect.poll(() => verifier.getByText(/effect not shown/iu).count()).toBeGreaterThan(0);
     await openFold(verifier, 'Record it');
-    await choose(verifier, 'Does it work?', 'Yes');
+    await choose(verifier, 'Does it work?', 'It works');
     await verifier.getByLabel('What you saw, and when').fill('At noon in full sun: no bright strip on the membrane.');
     await verifier.getByLabel('Why it can be told before the sun is back').fill('The sun stood on the edge, and no return is on file.');
     await verifier.getByRole('button', { name: 'Record it' }).click();

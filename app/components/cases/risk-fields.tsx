@@ -1,5 +1,6 @@
 import { ChoiceChips } from '#app/components/forms/choice-chips.tsx';
 import { Select, TextArea } from '#app/components/forms/text-field.tsx';
+import { DataTable } from '#app/components/ui/data-table.tsx';
 import { SectionHeading } from '#app/components/ui/page-title.tsx';
 import type { SimilarCaseView } from '#app/domain/case-view.ts';
 import { consequences, likelihoods, riskLabels, risks } from '#app/domain/incident.ts';
@@ -38,28 +39,25 @@ function RiskGrid({ facts, similar, caseNumber }: Pick<RiskFieldsProps, 'facts' 
   const here = (consequence: string, likelihood: string) => facts['potentialConsequence'] === consequence && facts['likelihood'] === likelihood;
   const others = (consequence: string, likelihood: string) => similar.filter((one) => one.consequence === consequence && one.likelihood === likelihood).map((one) => one.row.number);
   return (
-    <div className="overflow-x-auto" tabIndex={0} role="region" aria-label="Consequence and likelihood">
-      <table className="w-full min-w-[21rem] table-fixed border-collapse text-axis">
-        <caption className="sr-only">Where this case and similar ones were placed</caption>
-        <tbody>
-          {[...consequences].reverse().map((consequence) => (
-            <tr key={consequence}>
-              <th scope="row" className={`w-[4.75rem] pr-2 text-right font-normal ${facts['potentialConsequence'] === consequence ? 'font-semibold' : 'text-second'}`}>{consequence}</th>
-              {likelihoods.map((likelihood) => (
-                <td key={likelihood} className="h-10 border border-hair text-center align-middle">
-                  {here(consequence, likelihood) ? <span className="font-semibold"><Diamond /> {caseNumber}</span> : null}
-                  <span className="text-second"> {others(consequence, likelihood).join(' ')}</span>
-                </td>
-              ))}
-            </tr>
-          ))}
-          <tr>
-            <td />
-            {likelihoods.map((likelihood) => <th key={likelihood} scope="col" className={`pt-1 align-top font-normal ${facts['likelihood'] === likelihood ? 'font-semibold' : 'text-second'}`}>{words(likelihood)}</th>)}
+    <DataTable caption="Consequence and likelihood of this case and of similar ones" className="min-w-[21rem] table-fixed text-axis">
+      <tbody>
+        {[...consequences].reverse().map((consequence) => (
+          <tr key={consequence}>
+            <th scope="row" className={`w-[4.75rem] pr-2 text-right font-normal ${facts['potentialConsequence'] === consequence ? 'font-semibold' : 'text-second'}`}>{consequence}</th>
+            {likelihoods.map((likelihood) => (
+              <td key={likelihood} className="h-10 border border-hair text-center align-middle">
+                {here(consequence, likelihood) ? <span className="font-semibold"><Diamond /> {caseNumber}</span> : null}
+                <span className="text-second"> {others(consequence, likelihood).join(' ')}</span>
+              </td>
+            ))}
           </tr>
-        </tbody>
-      </table>
-    </div>
+        ))}
+        <tr>
+          <td />
+          {likelihoods.map((likelihood) => <th key={likelihood} scope="col" className={`pt-1 align-top font-normal ${facts['likelihood'] === likelihood ? 'font-semibold' : 'text-second'}`}>{words(likelihood)}</th>)}
+        </tr>
+      </tbody>
+    </DataTable>
   );
 }
 

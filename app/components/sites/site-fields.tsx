@@ -8,15 +8,15 @@ export type SiteFieldOf = (name: string) => FieldLike;
 export function SiteFields({ field, withCode }: { readonly field: SiteFieldOf; readonly withCode: boolean }) {
   return (
     <div className="grid gap-4 tablet:grid-cols-2">
-      {withCode ? <TextInput field={field('code')} label="Short code" help="In addresses and on the report link; it stays." /> : null}
+      {withCode ? <TextInput field={field('code')} label="Short code" help="Stands in addresses and report links, and stays." /> : null}
       <TextInput field={field('name')} label="Name" />
       <TextInput field={field('address')} label="Address" />
       <TextInput field={field('latitudeDeg')} label="Latitude, degrees" inputMode="decimal" help="North positive, like 53.50" />
       <TextInput field={field('longitudeDeg')} label="Longitude, degrees" inputMode="decimal" help="East positive, like -1.60" />
       <TextInput field={field('elevationM')} label="Height above sea level, m" inputMode="decimal" />
       <TextInput field={field('zone')} label="Time zone" help="Leave empty to take it from the coordinates." />
-      <Select field={field('use')} label="Use" options={Object.entries(siteUseLabels).map(([value, label]) => ({ value, label }))} />
-      <Select field={field('jurisdiction')} label="Jurisdiction" options={[{ value: 'GB', label: 'Great Britain' }, { value: 'EU', label: 'European Union' }, { value: 'US', label: 'United States' }, { value: 'other', label: 'Other' }]} />
+      <Select field={field('use')} label="Use" {...(withCode ? { emptyLabel: 'Choose one' } : {})} options={Object.entries(siteUseLabels).map(([value, label]) => ({ value, label }))} />
+      <Select field={field('jurisdiction')} label="Jurisdiction" {...(withCode ? { emptyLabel: 'Choose one' } : {})} options={[{ value: 'GB', label: 'Great Britain' }, { value: 'EU', label: 'European Union' }, { value: 'US', label: 'United States' }, { value: 'other', label: 'Other' }]} />
     </div>
   );
 }
@@ -29,4 +29,6 @@ export const siteFieldLabels: readonly { readonly name: string; readonly label: 
   { name: 'longitudeDeg', label: 'Longitude' },
   { name: 'elevationM', label: 'Height above sea level' },
   { name: 'zone', label: 'Time zone' },
+  { name: 'use', label: 'Use' },
+  { name: 'jurisdiction', label: 'Jurisdiction' },
 ];

@@ -21,6 +21,8 @@ export interface SiteSideProps {
     readonly use: SiteUse;
     readonly skylinePoints: number;
     readonly mayManage: boolean;
+    /** Which cases the reader sees here. */
+    readonly sees: 'all' | 'own' | 'none';
     readonly guest: { readonly code: string; readonly link: string } | null;
     readonly people: readonly SitePerson[];
     readonly cases: readonly (SiteCase & { readonly nextReturnMs: number | null })[];
@@ -34,7 +36,7 @@ export function SiteSide({ site }: SiteSideProps) {
   const digits = site.isExact ? 4 : 2;
   return (
     <div className="space-y-8">
-      <NextSun cases={site.cases} />
+      {site.sees === 'none' ? null : <NextSun cases={site.cases} />}
       <section aria-labelledby="place-heading">
         <SectionHeading id="place-heading">The place</SectionHeading>
         <FactList

@@ -11,9 +11,10 @@ export interface DataTableProps {
 /** A table with hairlines only. Wide ones scroll inside their own frame, which then takes the keyboard. */
 export function DataTable({ caption, captionShown = false, children, className = '' }: DataTableProps) {
   return (
-    // A frame that scrolls must take the keyboard, or its far columns are out of reach without a mouse.
+    // A frame that scrolls must take the keyboard, or its far columns are out of reach without a mouse. It is positioned,
+    // so that words hidden for the eye scroll with it and do not widen the page.
     // eslint-disable-next-line jsx-a11y/no-noninteractive-tabindex
-    <div className="overflow-x-auto" role="region" aria-label={caption} tabIndex={0}>
+    <div className="relative overflow-x-auto" role="region" aria-label={caption} tabIndex={0}>
       <table className={`w-full border-collapse text-left ${className}`}>
         <caption className={captionShown ? 'pb-2 text-left text-small text-second' : 'sr-only'}>{caption}</caption>
         {children}

@@ -51,7 +51,7 @@ export default function Account({ loaderData, actionData }: Route.ComponentProps
       {actionData?.ok ? <Notice role="status">{actionData.said}</Notice> : null}
       <section aria-labelledby="units-heading" className="pt-6">
         <SectionHeading id="units-heading">Units</SectionHeading>
-        <Form method="post" className="flex flex-wrap items-end gap-4 pt-3">
+        <Form method="post" className="flex flex-wrap items-center gap-4 pt-3">
           <input type="hidden" name="intent" value="change-units" />
           <fieldset>
             <legend className="sr-only">Units on screen</legend>

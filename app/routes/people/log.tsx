@@ -1,13 +1,13 @@
-import { Form, href } from 'react-router';
+import { Form } from 'react-router';
 import type { Route } from './+types/log';
 import { db } from '#db/client.server.ts';
 import { listOrganisationLog } from '#db/queries/organisation-log.server.ts';
 import { requireActorWho } from '#app/auth/middleware.server.ts';
 import { TextInput } from '#app/components/forms/text-field.tsx';
 import { Page } from '#app/components/layout/page.tsx';
+import { LogLines } from '#app/components/people/log-lines.tsx';
 import { AppLink } from '#app/components/ui/app-link.tsx';
 import { Button } from '#app/components/ui/button.tsx';
-import { Cell, DataTable, HeadCell, Row, TableHead } from '#app/components/ui/data-table.tsx';
 import { PageTitle } from '#app/components/ui/page-title.tsx';
 import { holdsRole } from '#app/domain/roles.ts';
 import { respond } from '#app/http/to-response.server.ts';
@@ -48,35 +48,14 @@ export default function OrganisationLog({ loaderData }: Route.ComponentProps) {
   const older = new URLSearchParams({ event: filter.event, person: filter.person, case: filter.caseNumber, before: String(olderThan ?? '') });
   return (
     <Page>
-      <PageTitle below={withContent ? 'Lines are only ever added.' : 'Lines are only ever added. What was done in a case is not shown to administrators.'}>Who did what, and when</PageTitle>
-      <Form method="get" className="flex flex-wrap items-end gap-4 pb-5">
-        <div className="w-52"><TextInput field={{ name: 'event', defaultValue: filter.event }} label="Event" /></div>
-        <div className="w-52"><TextInput field={{ name: 'person', defaultValue: filter.person }} label="Person" /></div>
+      <PageTitle below={`Lines are only ever added. Times in UTC.${withContent ? '' : ' What was done in a case is not shown to administrators.'}`}>Who did what, and when</PageTitle>
+      <Form method="get" role="search" aria-label="Narrow the log" className="flex flex-wrap items-end gap-4 pb-5">
+        <div className="w-52 max-tablet:w-full"><TextInput field={{ name: 'event', defaultValue: filter.event }} label="Event" /></div>
+        <div className="w-52 max-tablet:w-full"><TextInput field={{ name: 'person', defaultValue: filter.person }} label="Person" /></div>
         <div className="w-32"><TextInput field={{ name: 'case', defaultValue: filter.caseNumber }} label="Case number" inputMode="numeric" /></div>
         <Button look="outlined">Show</Button>
       </Form>
-      <DataTable caption="Log, newest first">
-        <TableHead>
-          <HeadCell>When, UTC</HeadCell>
-          <HeadCell>Who</HeadCell>
-          <HeadCell>Case</HeadCell>
-          <HeadCell>Event</HeadCell>
-          <HeadCell>What and why</HeadCell>
-        </TableHead>
-        <tbody>
-          {lines.map((line) => (
-            <Row key={line.sequence} tight>
-              <Cell>{line.at}</Cell>
-              <Cell>{line.actorName}</Cell>
-              <Cell>{line.caseNumber === null ? '' : withContent ? <AppLink href={href('/cases/:caseNumber', { caseNumber: String(line.caseNumber) })}>{line.caseNumber}</AppLink> : line.caseNumber}</Cell>
-              <Cell>
-                <code className="font-mono text-axis">{line.event}</code>
-              </Cell>
-              <Cell note={line.reason || undefined}>{line.summary}</Cell>
-            </Row>
-          ))}
-        </tbody>
-      </DataTable>
+      <LogLines lines={lines} withContent={withContent} />
       {lines.length === 0 ? <p className="py-4 font-serif text-account">No line fits.</p> : null}
       {olderThan === null ? null : (
         <p className="pt-4">

@@ -5,12 +5,12 @@ import { listSites } from '#db/queries/sites.server.ts';
 import { requireActorWho } from '#app/auth/middleware.server.ts';
 import { ErrorSummary } from '#app/components/forms/error-summary.tsx';
 import { Page } from '#app/components/layout/page.tsx';
+import { SiteList } from '#app/components/sites/site-list.tsx';
 import { SiteFields, siteFieldLabels } from '#app/components/sites/site-fields.tsx';
-import { AppLink } from '#app/components/ui/app-link.tsx';
 import { Button } from '#app/components/ui/button.tsx';
-import { Cell, DataTable, HeadCell, Row, TableHead } from '#app/components/ui/data-table.tsx';
 import { PageTitle, SectionHeading } from '#app/components/ui/page-title.tsx';
 import { formatDayClock } from '#app/domain/local-time.ts';
+import { canInOrganisation } from '#app/domain/permissions.ts';
 import { holdsRole } from '#app/domain/roles.ts';
 import { siteFormSchema, siteUseLabels } from '#app/domain/site-form.ts';
 import { fieldErrorsOf } from '#app/http/field-errors.ts';
@@ -24,16 +24,20 @@ export function loader({ context, request }: Route.LoaderArgs) {
     const rows = await listSites(db, { actor, now: new Date() });
     return {
       mayAdd: holdsRole(actor, ['administrator', 'manager'], null),
-      sites: rows.map((row) => ({
-        code: row.code,
-        name: row.name,
-        use: siteUseLabels[row.use],
-        zone: row.zone,
-        cases: row.caseCount ?? 0,
-        open: row.openCount ?? 0,
-        nextReturn: row.nextReturnAt ? formatDayClock(new Date(row.nextReturnAt), row.zone) : null,
-        nextReturnMs: row.nextReturnAt ? new Date(row.nextReturnAt).getTime() : null,
-      })),
+      seesCases: canInOrganisation(actor, 'register:read'),
+      sites: rows
+        .map((row) => ({
+          code: row.code,
+          name: row.name,
+          use: siteUseLabels[row.use],
+          zone: row.zone,
+          cases: row.caseCount ?? 0,
+          open: row.openCount ?? 0,
+          nextReturn: row.nextReturnAt ? formatDayClock(new Date(row.nextReturnAt), row.zone) : null,
+          nextReturnMs: row.nextReturnAt ? new Date(row.nextReturnAt).getTime() : Infinity,
+        }))
+        .sort((a, b) => a.nextReturnMs - b.nextReturnMs || a.name.localeCompare(b.name, 'en'))
+        .map(({ nextReturnMs: _, ...site }) => site),
     };
   });
 }
@@ -58,36 +62,18 @@ export function action({ context, request }: Route.ActionArgs) {
 export const meta: Route.MetaFunction = () => [{ title: 'Sites · Scorchline' }];
 
 export default function Sites({ loaderData, actionData }: Route.ComponentProps) {
-  const { sites, mayAdd } = loaderData;
-  const soonest = sites.filter((site) => site.nextReturnMs !== null).sort((a, b) => (a.nextReturnMs ?? 0) - (b.nextReturnMs ?? 0))[0];
-  const field = (name: string) => ({ name, id: `site-${name}`, defaultValue: actionData?.typed[name] ?? (name === 'use' ? 'office' : name === 'jurisdiction' ? 'GB' : name === 'elevationM' ? '0' : ''), errors: actionData?.fieldErrors[name] ?? [] });
+  const { sites, mayAdd, seesCases } = loaderData;
+  const soonest = sites.find((site) => site.nextReturn !== null);
+  const count = sites.length === 1 ? 'One site' : `${sites.length} sites`;
+  const open = sites.reduce((sum, site) => sum + site.open, 0);
+  const openWords = open === 0 ? 'no open case that you may see' : open === 1 ? 'one open case that you may see' : `${open} open cases that you may see`;
+  const field = (name: string) => ({ name, id: `site-${name}`, defaultValue: actionData?.typed[name] ?? '', errors: actionData?.fieldErrors[name] ?? [] });
   return (
     <Page>
-      <PageTitle below={soonest ? `The sun comes back first at ${soonest.name}: ${soonest.nextReturn}.` : 'No mark is expected to be lit again on file.'}>
-        {sites.length === 1 ? 'One site' : `${sites.length} sites`}
+      <PageTitle below={seesCases ? `${count}, ${openWords}. Soonest return of the sun first.` : 'By name. What was found there is not shown to administrators.'}>
+        {soonest ? `The sun comes back first at ${soonest.name}: ${soonest.nextReturn}` : count}
       </PageTitle>
-      <DataTable caption="Sites, by name">
-        <TableHead>
-          <HeadCell>Site</HeadCell>
-          <HeadCell>Use</HeadCell>
-          <HeadCell numeric>Cases you may see</HeadCell>
-          <HeadCell numeric>Open</HeadCell>
-          <HeadCell>Sun returns next, local time</HeadCell>
-        </TableHead>
-        <tbody>
-          {sites.map((site) => (
-            <Row key={site.code}>
-              <Cell heading note={site.zone}>
-                <AppLink href={href('/sites/:siteCode', { siteCode: site.code })}>{site.name}</AppLink>
-              </Cell>
-              <Cell>{site.use}</Cell>
-              <Cell numeric>{site.cases}</Cell>
-              <Cell numeric>{site.open}</Cell>
-              <Cell>{site.nextReturn ?? 'no return on file'}</Cell>
-            </Row>
-          ))}
-        </tbody>
-      </DataTable>
+      <SiteList sites={sites} seesCases={seesCases} />
       {mayAdd ? (
         <section aria-labelledby="add-heading" className="max-w-[720px] pt-10">
           <SectionHeading id="add-heading">Add a site</SectionHeading>

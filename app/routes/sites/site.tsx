@@ -14,8 +14,9 @@ import { Button } from '#app/components/ui/button.tsx';
 import { PageTitle, SectionHeading } from '#app/components/ui/page-title.tsx';
 import { notFound } from '#app/domain/errors.ts';
 import { formatDay, formatDayClock } from '#app/domain/local-time.ts';
+import { canInOrganisation, caseRules } from '#app/domain/permissions.ts';
 import { holdsRole } from '#app/domain/roles.ts';
-import type { Actor } from '#app/domain/roles.ts';
+import type { Actor, Role } from '#app/domain/roles.ts';
 import { siteFormSchema, siteUseLabels } from '#app/domain/site-form.ts';
 import { env } from '#app/env.server.ts';
 import { fieldErrorsOf } from '#app/http/field-errors.ts';
@@ -41,6 +42,7 @@ export function loader({ context, request, params }: Route.LoaderArgs) {
       jurisdiction: site.jurisdiction,
       skylinePoints: site.skyline?.points.length ?? 0,
       mayManage,
+      sees: holdsRole(actor, caseReaders, site.id) ? ('all' as const) : canInOrganisation(actor, 'register:read') ? ('own' as const) : ('none' as const),
       guest: mayManage && site.guestCode ? { code: site.guestCode, link: `${env.PUBLIC_URL}/report?at=${encodeURIComponent(site.guestCode)}` } : null,
       people: people.map((person) => ({ role: person.role, name: person.displayName, onlyHere: person.siteId !== null })),
       cases: rows.map((row) => ({
@@ -55,9 +57,11 @@ export function loader({ context, request, params }: Route.LoaderArgs) {
   });
 }
 
+const caseReaders: readonly Role[] = caseRules['case:read'].roles;
+
 /** The exact place is for those who work on cases there or look after the site; others get two decimals, some 1 km. */
 function placeFor(actor: Actor, site: { readonly id: string; readonly address: string; readonly latitudeDeg: number; readonly longitudeDeg: number }) {
-  const isExact = holdsRole(actor, ['investigator', 'reviewer', 'manager', 'privacy-lead', 'administrator'], site.id);
+  const isExact = holdsRole(actor, [...caseReaders, 'administrator'], site.id);
   const shown = (deg: number) => (isExact ? deg : Math.round(deg * 100) / 100);
   return { isExact, address: isExact ? site.address : '', latitudeDeg: shown(site.latitudeDeg), longitudeDeg: shown(site.longitudeDeg) };
 }
@@ -85,17 +89,29 @@ export function action({ context, request, params }: Route.ActionArgs) {
 
 export const meta: Route.MetaFunction = ({ loaderData }) => [{ title: `${loaderData?.name ?? 'Site'} · Scorchline` }];
 
+const nothingHere = {
+  all: 'No mark has been recorded at this site.',
+  own: 'No mark of yours has been recorded at this site.',
+  none: 'What was found here is not shown to administrators.',
+} as const;
+
+/** Heading of the page: how much is open here, as far as the reader sees cases at all. */
+function finding({ sees, name, cases }: Route.ComponentProps['loaderData']): string {
+  const open = cases.filter((row) => row.state !== 'closed' && row.state !== 'duplicate').length;
+  if (sees === 'none') return name;
+  const whose = sees === 'own' ? ' of yours' : '';
+  if (open === 0) return `Nothing${whose} is open at ${name}`;
+  return open === 1 ? `One case${whose} is open at ${name}` : `${open} cases${whose} are open at ${name}`;
+}
+
 export default function Site({ loaderData, actionData }: Route.ComponentProps) {
   const site = loaderData;
-  const open = site.cases.filter((row) => row.state !== 'closed' && row.state !== 'duplicate');
   return (
     <Page>
-      <PageTitle below={`${siteUseLabels[site.use]}, ${site.zone}`}>
-        {open.length === 0 ? `Nothing is open at ${site.name}` : open.length === 1 ? `One case is open at ${site.name}` : `${open.length} cases are open at ${site.name}`}
-      </PageTitle>
+      <PageTitle below={`${siteUseLabels[site.use]}, ${site.zone}`}>{finding(site)}</PageTitle>
       <Columns sideLabel="About the site" side={<SiteSide site={site} />}>
-        <SectionHeading note="newest first">Cases here</SectionHeading>
-        {site.cases.length === 0 ? <p className="py-4 font-serif text-account">No marks recorded at this site that you may see.</p> : <SiteCases cases={site.cases} />}
+        <SectionHeading note={site.sees === 'own' ? 'yours, newest first' : 'newest first'}>Cases here</SectionHeading>
+        {site.cases.length === 0 ? <p className="py-4 font-serif text-account">{nothingHere[site.sees]}</p> : <SiteCases cases={site.cases} />}
         {site.mayManage ? <SitePeople people={site.people} /> : null}
         {site.mayManage ? <ChangeSite site={site} problem={actionData ?? null} /> : null}
       </Columns>
