@@ -130,7 +130,7 @@ export const methodParts: readonly MethodPart[] = [
       'It states no cause and gives no score. Causes are stated, reviewed and signed by people.',
     ],
     holds: 'Focused sunlight only. Other sources of heat are for people to examine.',
-    tested: [{ words: 'Runs of the demonstration reach the grade that their geometry asks for, ruled-out ones included.', test: 'tests/unit/physics/reconstruct.test.ts' }],
+    tested: [{ words: 'Eight invented incidents, worked by hand with a separate algorithm, give the same trails, dates and refusals; only the four grade words occur.', test: 'tests/unit/physics/reconstruct.test.ts' }],
     sources: ['Own words'],
     limits: ['Ruling out everything else does not prove focused sunlight.'],
   },

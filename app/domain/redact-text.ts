@@ -189,5 +189,24 @@ export function redactSentences(text: string, searcher: Searcher, sentences: rea
   return pieces;
 }
 
+/** A text in parts: what would be taken out names its class, and the words stay for those who may read them. */
+export interface MarkedPiece {
+  readonly text: string;
+  readonly withheld: WithheldClass | null;
+}
+
+/** The text as written with what would be taken out of it marked, for the page on which a release is prepared. */
+export function markText(text: string, searcher: Searcher): readonly MarkedPiece[] {
+  const pieces: MarkedPiece[] = [];
+  let at = 0;
+  for (const hit of findHits(text, searcher)) {
+    if (hit.start > at) pieces.push({ text: text.slice(at, hit.start), withheld: null });
+    pieces.push({ text: text.slice(hit.start, hit.end), withheld: hit.withheld });
+    at = hit.end;
+  }
+  if (at < text.length) pieces.push({ text: text.slice(at), withheld: null });
+  return pieces;
+}
+
 /** The same as plain words, for attributes and files that hold no blocks. */
 export const redactedWords = (text: RedactedText): string => text.map((piece) => ('text' in piece ? piece.text : '(withheld)')).join('');

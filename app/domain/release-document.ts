@@ -109,7 +109,7 @@ function factsOf(released: ReleasedCase): ReleaseDocument['facts'] {
   const clock = released.foundClockErrorS === 0 ? '' : `, clock error of ${Math.round(Math.abs(released.foundClockErrorS) / 6) / 10} min taken off`;
   const found = released.foundAt && released.foundPrecision === 'date-only' ? formatDay(new Date(released.foundAt), zone) : moment(released.foundAt);
   const basis = released.onsetBasis ? `, ${onsetBasisLabels[released.onsetBasis].toLowerCase()}` : '';
-  const window = released.onsetEarliestAt && released.onsetLatestAt ? `${moment(released.onsetEarliestAt)} to ${moment(released.onsetLatestAt)}${basis}` : 'not stated';
+  const window = released.onsetEarliestAt && released.onsetLatestAt ? `${stretchWords(released.onsetEarliestAt, released.onsetLatestAt, zone)}${basis}` : 'not stated';
   const use = released.siteUse.replaceAll('-', ' ');
   const all: { term: string; value: string | null }[] = [
     { term: 'What it is', value: releasedEventLabels[released.eventType] },
@@ -123,6 +123,12 @@ function factsOf(released: ReleasedCase): ReleaseDocument['facts'] {
     { term: 'Loss, estimated', value: released.loss ? `${released.loss.amount.toLocaleString('en-GB')} ${released.loss.currency}` : null },
   ];
   return all.flatMap(({ term, value }) => (value === null ? [] : [{ term, value }]));
+}
+
+function stretchWords(from: string, to: string, zone: string): string {
+  const [start, end] = [new Date(from), new Date(to)];
+  const sameDay = formatDay(start, zone) === formatDay(end, zone);
+  return `${formatDayClock(start, zone)} to ${sameDay ? formatClock(end, zone) : formatDayClock(end, zone)}`;
 }
 
 function grouped(rows: ReleasedCase['measurements']): ReleaseDocument['measurements'] {
@@ -198,7 +204,7 @@ function numbersOf(result: ReleasedResult, zone: string): SunPart['numbers'] {
   }
   if (focus) {
     lines.push({ term: 'Focal length', value: focus.focalLengthM < 2 ? `${round(focus.focalLengthM * 1000)} mm` : `${round(focus.focalLengthM)} m`, note: focus.method === 'ray-trace' ? 'by tracing rays' : 'closed form' });
-    for (const disc of focus.discs) lines.push({ term: `Flux on a disc of ${disc.disc === 'sun-image' ? `${round(disc.diameterMm)} mm, the image of the sun` : disc.disc}`, value: `${band(disc.fluxKwm2.low, disc.fluxKwm2.high)} kW/m²`, note: `middle ${round(disc.fluxKwm2.mid)}, centred on the ${disc.centre}` });
+    for (const disc of focus.discs) lines.push({ term: `Flux on ${disc.disc === 'sun-image' ? `${round(disc.diameterMm)} mm, the image of the sun` : disc.disc}, centred on the ${disc.centre}`, value: `${band(disc.fluxKwm2.low, disc.fluxKwm2.high)} kW/m²`, note: `middle ${round(disc.fluxKwm2.mid)}` });
     if (focus.trailSpeedMmPerH !== null) lines.push({ term: 'Speed of the spot', value: `${round(focus.trailSpeedMmPerH)} mm/h`, note: focus.trailMinutesAtLeast === null ? 'a line focus carries no time' : `the trail needs at least ${round(focus.trailMinutesAtLeast)} min` });
   }
   return lines;

@@ -104,7 +104,16 @@ function openingGroup({ opening }: ReconstructionInput): InputGroup[] {
   }];
 }
 
-function markGroup({ mark, target }: ReconstructionInput): InputGroup {
+function coordinateFacts({ eastM, northM, upM, sigmaM, lengthMm, widthMm, trailHeadingDeg }: NonNullable<ReconstructionInput['markCoordinates']>): Fact[] {
+  return [
+    fact('East, north, up', `${round(eastM * 1000)}, ${round(northM * 1000)}, ${round(upM * 1000)} mm ±${round(sigmaM * 1000)}`, 'from the optic'),
+    ...some(lengthMm, (value) => fact('Length', `${round(value)} mm`)),
+    ...some(widthMm, (value) => fact('Width', `${round(value)} mm`)),
+    ...some(trailHeadingDeg, (value) => fact('Trail runs to', `${round(value)}° true`)),
+  ];
+}
+
+function markGroup({ mark, markCoordinates, target }: ReconstructionInput): InputGroup {
   const place = mark
     ? [
         fact('Bearing to mark', `${round(mark.bearingDeg)}° true ±${round(mark.bearingSigmaDeg)}`),
@@ -115,7 +124,7 @@ function markGroup({ mark, target }: ReconstructionInput): InputGroup {
         ...some(mark.trailHeadingDeg, (value) => fact('Trail runs to', `${round(value)}° true`)),
         ...some(mark.normalAzimuthDeg, (value) => fact('Surface faces', `${round(value)}° true`, mark.normalElevationDeg === undefined ? '' : `${round(mark.normalElevationDeg)}° above level`)),
       ]
-    : [fact('Place of the mark', 'not known')];
+    : markCoordinates ? coordinateFacts(markCoordinates) : [fact('Place of the mark', 'not known')];
   const known = targetMaterials.find((material) => material === target?.materialId);
   const material = target ? [fact('Target', known ? targetMaterialLabels[known] : target.materialId, target.thicknessM === undefined ? undefined : `${mm(target.thicknessM)} thick`)] : [fact('Target', 'not known')];
   return { heading: 'Mark', facts: [...place, ...material] };

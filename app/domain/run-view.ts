@@ -165,9 +165,14 @@ export function runView(input: ReconstructionInput, result: ReconstructionResult
     assumptions: result.assumptions.map((one) => ({ label: assumptionLabel(one.field), value: one.value, source: one.source.text, verified: one.source.verified })),
     returns: returnBands(input, result, context.now),
     plate: yearPlate(input, result, context.now),
-    markDistanceM: input.mark?.distanceM ?? null,
+    markDistanceM: markDistanceM(input),
     result: { ...rest, focus: focus ? { ...focus, traced: traced ? withoutMap(traced) : null } : null },
   };
+}
+
+function markDistanceM({ mark, markCoordinates }: ReconstructionInput): number | null {
+  if (mark) return mark.distanceM;
+  return markCoordinates ? Math.hypot(markCoordinates.eastM, markCoordinates.northM, markCoordinates.upM) : null;
 }
 
 /** A building surveyed at several corners is named at the first of them. */

@@ -186,7 +186,7 @@ function hypothesesOf(db: DbOrTx, caseId: string) {
     })
     .from(hypotheses)
     .where(eq(hypotheses.caseId, caseId))
-    .orderBy(asc(hypotheses.createdAt), asc(hypotheses.id));
+    .orderBy(sql`${hypotheses.kind} <> 'focused-sunlight'`, asc(hypotheses.createdAt), asc(hypotheses.id));
 }
 
 async function actionsOf(db: DbOrTx, caseId: string): Promise<ActionBeforeRedaction[]> {

@@ -30,13 +30,13 @@ function MeasuredRow({ of, field }: { readonly of: SceneField; readonly field: M
   return (
     <fieldset id={`${id}-row`} className={`border-b border-hair py-2 ${hasErrors(value) ? 'border-l-5 border-l-ink pl-3' : ''}`}>
       <legend className="sr-only">{of.label}</legend>
-      <div className="grid grid-cols-[minmax(0,1fr)_2.5rem_minmax(0,1fr)] items-center gap-x-2 gap-y-1 tablet:grid-cols-[minmax(0,1fr)_6rem_3rem_5rem_8rem_10.5rem]">
+      <div className="grid grid-cols-[minmax(0,1fr)_3.25rem_minmax(0,1fr)] items-center gap-x-2 gap-y-1 tablet:grid-cols-[minmax(0,1fr)_6rem_3rem_5rem_8rem_10.5rem]">
         <div className="max-tablet:col-span-3">
           <label htmlFor={id} className="font-medium">{of.label}</label>
           {of.help ? <span className="block text-axis text-second" id={fieldIds(value).helpId}>{of.help}</span> : null}
         </div>
         <Box label={`${of.label}, value`} field={value} describedBy={describedBy(value, Boolean(of.help))} invalid={hasErrors(value)} id={id} />
-        <span className="text-second">{of.unit} <span aria-hidden="true">±</span></span>
+        <span className="whitespace-nowrap text-second">{of.unit} <span aria-hidden="true">±</span></span>
         <Box label={`${of.label}, plus or minus`} field={field(`${name}.plusMinus`)} />
         {of.bearing ? <Pick label={`${of.label}, which north`} field={field(`${name}.north`)} options={norths} /> : <span className="max-tablet:hidden" />}
         <Pick label={`${of.label}, method`} field={field(`${name}.method`)} options={methods} />

@@ -22,7 +22,7 @@ export interface MovesPanelProps {
 }
 
 type OpenMove = CaseMovesView['open'][number];
-const linkWords = { triage: 'On the first-look page', findings: 'On the findings page', here: '' } as const;
+const linkWords = { triage: ', on the first-look page', findings: ', on the findings page', here: '' } as const;
 
 /** Moves open to this person, each with what it needs, and the others with who can make them. */
 export function MovesPanel(props: MovesPanelProps) {
@@ -61,9 +61,8 @@ function OneMove({ move, first, here, casePath, version, problem, proposedDay, m
   if (isElsewhere(move, here)) {
     return (
       <div className="border-b border-hair py-2">
-        <p className="font-medium">{move.label}</p>
+        <AppLink href={`${casePath}/${move.place === 'findings' ? 'findings' : 'triage'}`} className="inline-flex min-h-8 items-center font-medium">{move.label}<span className="sr-only">{linkWords[move.place]}</span></AppLink>
         {needs}
-        <AppLink href={`${casePath}/${move.place === 'findings' ? 'findings' : 'triage'}`} className="inline-flex min-h-8 items-center text-small">{linkWords[move.place]}</AppLink>
       </div>
     );
   }

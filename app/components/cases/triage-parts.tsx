@@ -45,11 +45,12 @@ export function SunOnIt({ sun, workedOut, workOutHref }: SunOnItProps) {
 
 function todayWords(model: BurnCardModel): string {
   const now = model.cursorUtc ?? '';
-  const runs = model.runs.filter((run) => run.verdict === 'sunlit');
-  if (runs.some((run) => run.fromUtc <= now && now < run.toUtc)) return 'On it now, if the sky is clear.';
-  if (runs.some((run) => run.fromUtc > now)) return 'Not on it now; it comes later today, if the sky is clear.';
-  if (runs.length > 0) return 'Not on it any more today.';
-  return model.runs.some((run) => run.verdict === 'cannot-tell') ? 'Cannot be told for some minutes of today.' : 'Not on it at any minute today.';
+  const atNow = model.runs.find((run) => run.fromUtc <= now && now < run.toUtc);
+  if (atNow?.verdict === 'sunlit') return 'On it now, if the sky is clear.';
+  const present = atNow?.verdict === 'cannot-tell' ? 'It cannot be told whether it is on it now.' : 'Not on it now.';
+  const later = model.runs.filter((run) => run.fromUtc > now);
+  if (later.some((run) => run.verdict === 'sunlit')) return `${present} It comes later today, if the sky is clear.`;
+  return later.some((run) => run.verdict === 'cannot-tell') ? `${present} For some minutes later today it cannot be told.` : `${present} It does not come any more today.`;
 }
 
 export function SimilarCases({ similar }: { readonly similar: readonly SimilarCaseView[] }) {

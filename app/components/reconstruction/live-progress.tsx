@@ -10,12 +10,22 @@ export interface LiveProgressProps {
 
 /** While a run is under way the page asks again: by itself with a script, by reloading without one. */
 export function LiveProgress({ pending }: LiveProgressProps) {
-  const { revalidate, state } = useRevalidator();
+  const { revalidate } = useRevalidator();
   useEffect(() => {
-    if (!pending || state !== 'idle') return undefined;
-    const timer = setTimeout(() => void revalidate(), askAgainMs);
-    return () => clearTimeout(timer);
-  }, [pending, revalidate, state]);
+    if (!pending) return undefined;
+    let timer: ReturnType<typeof setTimeout> | undefined;
+    let left = false;
+    // The next question waits for the answer to the last, or a slow answer would never arrive.
+    const askAgain = async () => {
+      await revalidate();
+      if (!left) timer = setTimeout(() => void askAgain(), askAgainMs);
+    };
+    timer = setTimeout(() => void askAgain(), askAgainMs);
+    return () => {
+      left = true;
+      clearTimeout(timer);
+    };
+  }, [pending, revalidate]);
   if (!pending) return null;
   return (
     <noscript>

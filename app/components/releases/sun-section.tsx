@@ -65,7 +65,7 @@ function Returns({ sun }: { readonly sun: SunPart }) {
     <>
       <PartHeading>When the same alignment comes back</PartHeading>
       <DataTable caption="Days on which the alignment comes back">
-        <TableHead><HeadCell>Days</HeadCell><HeadCell>Closest</HeadCell><HeadCell numeric>Minutes</HeadCell></TableHead>
+        <TableHead><HeadCell>Days</HeadCell><HeadCell>Closest</HeadCell><HeadCell numeric>Minutes in all</HeadCell></TableHead>
         <tbody>
           {sun.returns.map((one) => (
             <Row key={one.days} tight>

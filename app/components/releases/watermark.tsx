@@ -5,7 +5,7 @@ export function Watermark({ line }: { readonly line: string }) {
   const id = useId();
   const width = Math.max(360, line.length * 7.6 + 60);
   return (
-    <svg aria-hidden="true" focusable="false" className="pointer-events-none absolute inset-0 h-full w-full overflow-hidden text-ink opacity-8 select-none">
+    <svg aria-hidden="true" focusable="false" className="pointer-events-none absolute inset-0 h-full w-full overflow-hidden text-ink opacity-6 select-none">
       <defs>
         <pattern id={id} width={width} height="190" patternUnits="userSpaceOnUse" patternTransform="rotate(-24)">
           <text x="20" y="60" fontSize="14" fill="currentColor">{line}</text>

@@ -27,10 +27,12 @@ export function loader({ request, context }: Route.LoaderArgs) {
 
 export const meta: Route.MetaFunction = () => [{ title: 'Case files · Scorchline' }];
 
+const inWords = (count: number): string => ['No', 'One', 'Two', 'Three', 'Four', 'Five', 'Six', 'Seven', 'Eight', 'Nine'][count] ?? String(count);
+
 function heading(readers: readonly unknown[] | null, kept: readonly { readonly status: string }[] | null): string {
-  if (readers) return readers.length === 0 ? 'No case file is open to you' : readers.length === 1 ? 'One case file is open to you' : `${readers.length} case files are open to you`;
+  if (readers) return readers.length === 0 ? 'No case file is open to you' : readers.length === 1 ? 'One case file is open to you' : `${inWords(readers.length)} case files are open to you`;
   const waiting = (kept ?? []).filter((release) => release.status.startsWith('Waits')).length;
-  if (waiting > 0) return `${waiting === 1 ? 'One release waits' : `${waiting} releases wait`} for a second person`;
+  if (waiting > 0) return `${waiting === 1 ? 'One release waits' : `${inWords(waiting)} releases wait`} for a second person`;
   return (kept ?? []).length === 0 ? 'Nothing has left the house' : 'No release waits for a second person';
 }
 

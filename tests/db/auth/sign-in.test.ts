@@ -6,7 +6,8 @@ import { action, loader } from '#app/routes/auth/sign-in.tsx';
 import { signIn } from '#app/services/people/sign-in.server.ts';
 import { db } from '#db/client.server.ts';
 import { countHit } from '#db/queries/rate-limits.server.ts';
-import { rateLimits, sessions, users } from '#db/schema/all.ts';
+import { rateLimits, sessions } from '#db/schema/all.ts';
+import type { users } from '#db/schema/all.ts';
 import { actorOf, createOrganisation, createUser } from '#tests/support/factories.ts';
 import { contextFor, goodHash, goodPassword, holderOf, otherPassword, posted, refusal, settled } from './stage.ts';
 

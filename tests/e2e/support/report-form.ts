@@ -11,7 +11,7 @@ export async function choose(page: Page, group: string, option: string): Promise
 
 /** The four answers of the rooftop scorch, at a phone, with the form open. */
 export async function fillRooftopReport(page: Page, words: string): Promise<void> {
-  await page.getByLabel('Site').selectOption({ label: 'Kestwick Court Block C' });
+  await page.getByLabel('Site').selectOption({ label: 'Kestwick Court Block C (KESTWICK-C)' });
   await page.getByLabel('The spot, in words').fill('roof, south edge by hatch 2');
   await choose(page, 'When was it found?', 'Just now');
   await choose(page, 'What do you see?', 'Mark or scorch');
