@@ -115,19 +115,19 @@ const genericPlaceWords = new Set(
     'great little gap hill station estate estates garden gardens terrace yard wing college university library market house').split(' '),
 );
 
-/** Patterns for the name of a site or an organisation: whole, two words of it together, and words that no other place has. */
-export function placePattern(names: readonly string[]): RegExp | null {
-  const forms = new Set<string>();
+/** Patterns for the names of sites and organisations: whole, two words of one together, and words that no other place has. */
+export function placePatterns(names: readonly string[]): readonly RegExp[] {
+  const forms: Forms = { whole: new Set(), parts: new Set(), capitalised: new Set() };
   for (const name of names) {
     const words = wordsOf(name).map(foldWord).filter(Boolean);
     for (const [index, word] of words.entries()) {
       const next = words[index + 1];
-      if (next !== undefined) forms.add(`${before}${escapeSigns(word)}[\\s,.-]{1,3}${escapeSigns(next)}${ending}${after}`);
-      if (word.length >= 4 && !genericPlaceWords.has(word) && !/^\d+$/u.test(word)) forms.add(`${before}${escapeSigns(word)}${ending}${after}`);
+      if (next !== undefined) forms.parts.add(`${before}${escapeSigns(word)}[\\s,.-]{1,3}${escapeSigns(next)}${ending}${after}`);
+      if (word.length >= 4 && !genericPlaceWords.has(word) && !/^\d+$/u.test(word)) forms.parts.add(`${before}${escapeSigns(word)}${ending}${after}`);
     }
-    if (words.length > 0 && words.join('').length >= 4) forms.add(words.map(escapeSigns).join('[^\\p{L}\\p{N}]{0,3}'));
+    if (words.length > 0 && words.join('').length >= 4) forms.whole.add(words.map(escapeSigns).join('[^\\p{L}\\p{N}]{0,3}'));
   }
-  return joined(forms);
+  return [joined(forms.whole), joined(forms.parts)].filter((pattern) => pattern !== null);
 }
 
 /** A postal address as written, its lines on their own, and house number with street. */

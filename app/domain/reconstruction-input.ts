@@ -69,7 +69,7 @@ const wholeMinute = (at: Date): string => new Date(Math.floor(at.getTime() / 60_
 
 function note(origins: InputOrigin[], field: string, measured: Measured, unit: string): void {
   const origin = measured.method === 'assumed' ? 'assumed' : measured.method === 'reported' || measured.method === 'estimated' ? 'reported' : 'measured';
-  origins.push({ field, value: `${measured.value}${measured.plusMinus === undefined ? '' : ` ±${measured.plusMinus}`} ${unit}`, origin, note: measureMethodLabels[measured.method].toLowerCase(), verified: true });
+  origins.push({ field, value: `${measured.value}${measured.plusMinus === undefined ? '' : ` ±${measured.plusMinus}`}${unit.startsWith('°') ? '' : ' '}${unit}`, origin, note: measureMethodLabels[measured.method].toLowerCase(), verified: true });
 }
 
 /** Uncertainty where none was written down: what the method is worth. */

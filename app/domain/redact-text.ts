@@ -1,6 +1,6 @@
 import { foldText } from './folded-text.ts';
 import type { FoldedText } from './folded-text.ts';
-import { addressPattern, namePatterns, placePattern } from './held-names.ts';
+import { addressPattern, namePatterns, placePatterns } from './held-names.ts';
 import type { NamePatterns } from './held-names.ts';
 import type { RedactedText, WithheldClass } from './released-case.ts';
 import { tellingPatterns } from './telling-patterns.ts';
@@ -18,12 +18,12 @@ export interface HeldWords {
 
 export const nothingHeld: HeldWords = { names: [], emails: [], phones: [], coordinates: [], addresses: [], places: [] };
 
-/** Where something that may not leave stands in a text; `of` says what was recognised. */
+/** Where something that may not leave stands in a text; `of` says what was recognised there, one thing or several. */
 export interface Hit {
   readonly start: number;
   readonly end: number;
   readonly withheld: WithheldClass;
-  readonly of: string;
+  readonly of: readonly string[];
 }
 
 /** The searches for the words of one case, built once and used on each of its lines. */
@@ -32,7 +32,7 @@ export interface Searcher {
   readonly held: HeldWords;
   readonly contacts: RegExp | null;
   readonly addresses: RegExp | null;
-  readonly places: RegExp | null;
+  readonly places: readonly RegExp[];
 }
 
 export function searcherFor(held: HeldWords): Searcher {
@@ -42,7 +42,7 @@ export function searcherFor(held: HeldWords): Searcher {
     names: namePatterns(held.names),
     contacts: contacts.length > 0 ? new RegExp(contacts.join('|'), 'gu') : null,
     addresses: addressPattern(held.addresses),
-    places: placePattern(held.places),
+    places: placePatterns(held.places),
   };
 }
 
@@ -64,7 +64,7 @@ export function findHits(text: string, searcher: Searcher): readonly Hit[] {
     ...collect(folded, searcher.contacts, 'personal', 'contact'),
     ...namesIn(folded, searcher.names),
     ...collect(folded, searcher.addresses, 'exact-place', 'address'),
-    ...collect(folded, searcher.places, 'exact-place', 'place'),
+    ...searcher.places.flatMap((pattern) => collect(folded, pattern, 'exact-place', 'place')),
     ...nearHeldCoordinates(folded, searcher.held.coordinates),
   ];
   return joinOverlaps(text, hits);
@@ -102,7 +102,7 @@ function hitAt({ folded, from, original }: FoldedText, start: number, end: numbe
   let last = end;
   while (first < last && /\s/u.test(folded[first] ?? '')) first += 1;
   while (last > first && /\s/u.test(folded[last - 1] ?? '')) last -= 1;
-  return { start: from[first] ?? 0, end: from[last] ?? original.length, withheld, of };
+  return { start: from[first] ?? 0, end: from[last] ?? original.length, withheld, of: [of] };
 }
 
 /** From the end of the sentence before to the end of this one. A full stop counts when a blank or the end follows. */
@@ -127,7 +127,7 @@ function nearHeldCoordinates(folded: FoldedText, held: HeldWords['coordinates'])
     return held.flatMap(({ latitudeDeg, longitudeDeg }) => {
       const alone = number.decimals >= 3 && (isNear(number.size, latitudeDeg, number.decimals) || isNear(number.size, longitudeDeg, number.decimals));
       if (alone) return [hitAt(folded, number.start, number.end, 'exact-place', 'held-coordinates')];
-      const close = next !== undefined && next.start - number.end <= 24;
+      const close = next !== undefined && /^[\s,;/|°nsew()-]*(?:and\s*)?$/u.test(folded.folded.slice(number.end, next.start));
       const pair =
         close &&
         ((isNear(number.size, latitudeDeg, number.decimals) && isNear(next.size, longitudeDeg, next.decimals)) ||
@@ -143,7 +143,7 @@ function joinOverlaps(text: string, hits: readonly Hit[]): readonly Hit[] {
   for (const hit of [...hits].sort((a, b) => a.start - b.start || b.end - a.end)) {
     const last = joined.at(-1);
     const beside = last !== undefined && (hit.start < last.end || (hit.withheld === last.withheld && /^[\s.'’-]*$/u.test(text.slice(last.end, hit.start))));
-    if (last && beside) joined[joined.length - 1] = { ...last, end: Math.max(last.end, hit.end) };
+    if (last && beside) joined[joined.length - 1] = { ...last, end: Math.max(last.end, hit.end), of: [...new Set([...last.of, ...hit.of])] };
     else joined.push(hit);
   }
   return joined;

@@ -50,7 +50,7 @@ export function checkReleasedText(params: { readonly source: CaseBeforeRedaction
   const material = gather(data, texts, [{ where: 'change note', text: changeNote }]);
   const typedHits = hitsIn(material.typed, searcher);
   const heldHits = hitsIn(material.strings, searcher);
-  const found = (hits: ReturnType<typeof hitsIn>, ...kinds: readonly string[]) => [...new Set(hits.filter((hit) => kinds.includes(hit.of)).map((hit) => hit.where))];
+  const found = (hits: ReturnType<typeof hitsIn>, ...kinds: readonly string[]) => [...new Set(hits.filter((hit) => hit.of.some((kind) => kinds.includes(kind))).map((hit) => hit.where))];
   const wholeNames = wholeNamePattern(held.names);
   const inFiles = material.files.filter(({ text }) => wholeNames !== null && foldText(text).folded.search(wholeNames) >= 0).map(({ where }) => where);
   const lines = `${material.typed.length} pieces of text, ${material.files.length} files`;

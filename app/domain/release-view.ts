@@ -140,8 +140,8 @@ export function keptRelease(release: KeptReleaseFacts, now: Date): KeptReleaseVi
 
 function statusNote({ zone, ...release }: KeptReleaseFacts): string {
   if (release.withdrawnAt) return `${formatDay(release.withdrawnAt, zone)}: ${release.withdrawnReason ?? ''}`;
-  if (release.approvedAt) return `prepared by ${release.preparedBy}, approved by ${release.approvedBy ?? 'a person who left'} ${formatDay(release.approvedAt, zone)}`;
-  return `prepared by ${release.preparedBy} ${formatDay(release.createdAt, zone)}`;
+  if (release.approvedAt) return `Prepared by ${release.preparedBy}, approved by ${release.approvedBy ?? 'a person who left'} ${formatDay(release.approvedAt, zone)}`;
+  return `Prepared by ${release.preparedBy} ${formatDay(release.createdAt, zone)}`;
 }
 
 /** `7be1 90c4 d2a8 3f06`, the first eight bytes. */

@@ -24,6 +24,19 @@ const best = z.object({
   toleranceAxialMm: maybe,
 });
 
+const traced = z.object({
+  rays: number,
+  transmittedFraction: number,
+  r50Mm: number,
+  r80Mm: number,
+  hotSpotOffsetMm: maybe,
+  stdError: number,
+  closedForm: number,
+  backTraced: z.object({ centre: z.enum(['hot spot', 'mark']), concentration: number, stdError: number, forward: number, agrees: z.boolean() }).nullable(),
+  bestPlanes: z.array(z.object({ disc: text, distanceM: number, concentration: number })),
+  map: z.object({ cells: number, sizeMm: number, suns: z.array(number) }).nullable(),
+});
+
 const focus = z.object({
   method: z.enum(['closed-form', 'ray-trace']),
   focusKind: z.enum(['point', 'line']),
@@ -37,6 +50,7 @@ const focus = z.object({
   trailHeadingDeg: maybe,
   trailMinutesAtLeast: maybe,
   dwellS: z.array(z.object({ thresholdKwm2: number, seconds: band })),
+  traced: traced.nullish().transform((figures) => figures ?? null),
 });
 
 const heating = z.object({

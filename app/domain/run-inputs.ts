@@ -147,3 +147,14 @@ function skyGroup({ sky, skyline }: ReconstructionInput): InputGroup {
 export function inputGroups(input: ReconstructionInput): InputGroup[] {
   return [placeGroup(input), timeGroup(input), opticGroup(input), ...openingGroup(input), markGroup(input), skyGroup(input)];
 }
+
+/** What differs between the inputs of two runs, as "before to after". */
+export function inputChanges(before: ReconstructionInput, after: ReconstructionInput): { readonly term: string; readonly value: string }[] {
+  const listed = (input: ReconstructionInput) => new Map(inputGroups(input).flatMap((group) => group.facts.map((one): [string, { term: string; value: string }] => [`${group.heading}/${one.term}`, one])));
+  const [earlier, later] = [listed(before), listed(after)];
+  return [...new Set([...earlier.keys(), ...later.keys()])].flatMap((key) => {
+    const [from, to] = [earlier.get(key), later.get(key)];
+    if (from?.value === to?.value) return [];
+    return [{ term: (to ?? from)?.term ?? key, value: `${from?.value ?? 'not given'} to ${to?.value ?? 'not given'}` }];
+  });
+}

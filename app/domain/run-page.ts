@@ -48,6 +48,8 @@ export interface RunPageView {
   readonly resultHash: string | null;
   readonly finishedWords: string | null;
   readonly runCount: number;
+  /** What differs from the run before; null for the first. */
+  readonly changes: { readonly since: number; readonly inputs: readonly { readonly term: string; readonly value: string }[]; readonly sunlit: string | null } | null;
   readonly refusal: string | null;
   readonly attachRefusal: string | null;
   readonly view: RunView | null;

@@ -117,7 +117,7 @@ function irradianceOf(input: ReconstructionInput, result: ReconstructionResult, 
 
 const instant = (text: string): string => new Date(text).toISOString();
 
-/** Radius of a circle as large as the area over each flux, from the traced map. */
+/** From the traced map: radius of a circle as large as the area over each flux; for a line, half its mean width. */
 function ringsOf(result: ReconstructionResult): RunView['rings'] {
   const map = result.focus?.traced?.map;
   const dniWm2 = result.best?.dni.atOpticLikelyWm2;
@@ -125,9 +125,10 @@ function ringsOf(result: ReconstructionResult): RunView['rings'] {
   const cellMm2 = (map.sizeMm / map.cells) ** 2;
   return ringsKwm2.flatMap((fluxKwm2) => {
     const cells = map.suns.filter((suns) => (suns * dniWm2) / 1000 >= fluxKwm2).length;
-    const radiusMm = Math.sqrt((cells * cellMm2) / Math.PI);
+    const areaMm2 = cells * cellMm2;
+    const radiusMm = result.focus?.focusKind === 'line' ? areaMm2 / (2 * map.sizeMm) : Math.sqrt(areaMm2 / Math.PI);
     // A contour of one or two cells, or one that runs out of the map, has no radius to speak of.
-    return cells < 3 || radiusMm > map.sizeMm / 2 ? [] : [{ fluxKwm2, radiusMm: Number(radiusMm.toPrecision(3)) }];
+    return cells < 3 || radiusMm >= map.sizeMm / 2 ? [] : [{ fluxKwm2, radiusMm: Number(radiusMm.toPrecision(3)) }];
   });
 }
 

@@ -52,7 +52,7 @@ class Reader {
 
   note(field: string, measured: Measured, unit: string): void {
     const origin = measured.method === 'assumed' ? 'assumed' : measured.method === 'reported' || measured.method === 'estimated' ? 'reported' : 'measured';
-    this.origins.push({ field, value: `${measured.value}${measured.plusMinus === undefined ? '' : ` ±${measured.plusMinus}`} ${unit}`.trim(), origin, note: measureMethodLabels[measured.method].toLowerCase(), verified: true });
+    this.origins.push({ field, value: `${measured.value}${measured.plusMinus === undefined ? '' : ` ±${measured.plusMinus}`}${unit.startsWith('°') ? '' : ' '}${unit}`.trim(), origin, note: measureMethodLabels[measured.method].toLowerCase(), verified: true });
   }
 
   assume(field: string, value: string, note: string): void {

@@ -4,6 +4,7 @@ import { formatClock, formatDay, formatDayClock, localDay } from '#app/domain/lo
 import { canOnCase, whoCan } from '#app/domain/permissions.ts';
 import { draftInput } from '#app/domain/reconstruction-draft.ts';
 import type { Actor } from '#app/domain/roles.ts';
+import { inputChanges } from '#app/domain/run-inputs.ts';
 import { runRefusal, runsHeading } from '#app/domain/run-page.ts';
 import type { RunLineView, RunPageView, RunsPageView } from '#app/domain/run-page.ts';
 import { runView } from '#app/domain/run-view.ts';
@@ -11,7 +12,7 @@ import type { ReconstructionInput, ReconstructionResult } from '#app/physics/mod
 import type { CaseRow } from './case-subject.server.ts';
 import { findCase } from './case-subject.server.ts';
 import { getReconstruction, getReconstructionSource, listReconstructions } from './reconstructions.server.ts';
-import type { ReconstructionLine } from './reconstructions.server.ts';
+import type { ReconstructionLine, ReconstructionWhole } from './reconstructions.server.ts';
 
 /** The case, if this person may read its runs; null when the case is not theirs to see. @throws DomainError `forbidden` */
 async function readableCase(db: DbOrTx, actor: Actor, caseNumber: number) {
@@ -70,6 +71,15 @@ function foundAt(row: CaseRow): Date | null {
   return new Date(row.foundAt.getTime() - row.foundClockErrorS * 1000);
 }
 
+/** What differs from the run before it; the engine's version is named where that changed. */
+async function changesSince(db: DbOrTx, params: { actor: Actor; caseNumber: number; number: number }, run: ReconstructionWhole): Promise<RunPageView['changes']> {
+  const before = params.number > 1 ? await getReconstruction(db, { ...params, number: params.number - 1 }) : null;
+  if (!before) return null;
+  const engine = before.engineVersion === run.engineVersion ? [] : [{ term: 'Engine', value: `${before.engineVersion} to ${run.engineVersion}` }];
+  const [earlier, later] = [before.result?.totals.sunlit, run.result?.totals.sunlit];
+  return { since: before.number, inputs: [...engine, ...inputChanges(before.input, run.input)], sunlit: earlier === undefined || later === undefined || earlier === later ? null : `${earlier} to ${later} min` };
+}
+
 /** One run with all that its page draws; null when it is not there or not theirs to see. */
 export async function getRunPage(db: DbOrTx, params: { actor: Actor; caseNumber: number; number: number; now: Date }): Promise<RunPageView | null> {
   const found = await readableCase(db, params.actor, params.caseNumber);
@@ -84,6 +94,7 @@ export async function getRunPage(db: DbOrTx, params: { actor: Actor; caseNumber:
     resultHash: run.resultHash,
     finishedWords: run.finishedAt ? formatDayClock(run.finishedAt, zone) : null,
     runCount: run.runCount,
+    changes: await changesSince(db, params, run),
     refusal: runRefusal(params.actor, 'reconstruction:run', found.subject),
     attachRefusal: runRefusal(params.actor, 'reconstruction:attach', found.subject),
     view: run.state === 'done' && run.result ? runView(run.input, run.result, { foundAt: foundAt(found.row), now: params.now }) : null,

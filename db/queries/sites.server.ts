@@ -1,4 +1,4 @@
-import { and, asc, count, eq, gt, min, sql } from 'drizzle-orm';
+import { and, asc, count, eq, gt, min, notInArray, sql } from 'drizzle-orm';
 import type { DbOrTx, Transaction } from '#db/client.server.ts';
 import { cases, sites, sunReturns } from '#db/schema/all.ts';
 import type { Actor } from '#app/domain/roles.ts';
@@ -28,7 +28,7 @@ export function listSiteChoices(db: DbOrTx, organisationId: string): Promise<{ i
   return db.select({ id: sites.id, code: sites.code, name: sites.name }).from(sites).where(eq(sites.organisationId, organisationId)).orderBy(asc(sites.name));
 }
 
-/** Sites with the cases that the actor may see there, and the next day on which one of them is lit again. */
+/** Sites with the cases that the actor may see there, and when the mark of an open one is next lit again. */
 export async function listSites(db: DbOrTx, params: { actor: Actor; now: Date }) {
   const seen = db
     .select({ siteId: cases.siteId, caseCount: count().as('case_count'), openCount: sql<number>`count(*) filter (where ${cases.state} not in ('closed', 'duplicate'))`.mapWith(Number).as('open_count') })
@@ -40,7 +40,7 @@ export async function listSites(db: DbOrTx, params: { actor: Actor; now: Date })
     .select({ siteId: cases.siteId, nextReturnAt: min(sunReturns.bestAt).as('next_return_at') })
     .from(sunReturns)
     .innerJoin(cases, eq(cases.id, sunReturns.caseId))
-    .where(and(visibleTo(params.actor), gt(sunReturns.bestAt, params.now)))
+    .where(and(visibleTo(params.actor), notInArray(cases.state, ['closed', 'duplicate']), gt(sunReturns.bestAt, params.now)))
     .groupBy(cases.siteId)
     .as('returning');
   return db

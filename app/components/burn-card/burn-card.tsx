@@ -16,10 +16,10 @@ export interface BurnCardProps {
 }
 
 /* Widths for which a large card is drawn; the frame shows the widest that fits. */
-const largeWidths = [328, 640, 1000, 1280] as const;
+const largeWidths = [288, 328, 640, 1000, 1280] as const;
 const smallWidths = { S: 336, M: 358 } as const;
 
-/** A burn card that fills its column. Large cards are drawn for four widths, from phone to wide desk. */
+/** A burn card that fills its column. Large cards are drawn for five widths, from small phone to wide desk. */
 export function BurnCard({ model, size, label, width }: BurnCardProps) {
   const sentence = burnCardSentence(model, label);
   if (width !== undefined) return <div style={{ width, maxWidth: '100%' }}><BurnCardDrawing layout={layoutBurnCard(model, width, size)} sentence={sentence} /></div>;
@@ -27,7 +27,7 @@ export function BurnCard({ model, size, label, width }: BurnCardProps) {
   return (
     <div className="card-frame">
       {largeWidths.map((drawn) => (
-        <div key={drawn} data-from={drawn === 328 ? 0 : drawn}>
+        <div key={drawn} data-from={drawn === largeWidths[0] ? 0 : drawn}>
           <BurnCardDrawing layout={layoutBurnCard(model, drawn, size)} sentence={sentence} />
         </div>
       ))}

@@ -1,4 +1,3 @@
-import { AppLink } from '#app/components/ui/app-link.tsx';
 import { SectionHeading } from '#app/components/ui/page-title.tsx';
 
 export interface LeaversProps {
@@ -25,13 +24,6 @@ export function Leavers({ leavers }: LeaversProps) {
       <div className="pt-8">
         <SectionHeading>One person, many roles</SectionHeading>
         <p>Nobody reviews a finding or verifies an action of their own, whatever roles they hold.</p>
-      </div>
-      <div className="pt-8">
-        <SectionHeading>Elsewhere</SectionHeading>
-        <ul>
-          <li><AppLink href="/sites" className="inline-flex min-h-11 items-center tablet:min-h-7">Sites</AppLink></li>
-          <li><AppLink href="/log" className="inline-flex min-h-11 items-center tablet:min-h-7">Whole log</AppLink></li>
-        </ul>
       </div>
     </>
   );

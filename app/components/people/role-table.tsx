@@ -5,19 +5,28 @@ import type { Role } from '#app/domain/roles.ts';
 import { roleTable } from '#app/domain/role-table.ts';
 import type { Right } from '#app/domain/role-table.ts';
 
-const ground = (isChosen: boolean) => (isChosen ? 'bg-wash' : '');
+const ground = (isChosen: boolean) => (isChosen ? 'tablet:bg-wash' : 'max-tablet:hidden');
+const roleHref = (role: Role) => `/people?role=${role}#rights-heading`;
 
-/** The permission table as the server applies it; the head of a column chooses a role and shows what it means. */
+/**
+ * The permission table as the server applies it. The head of a column chooses a role and shows what it means; on a phone
+ * only the chosen role has a column, and the choice stands above the table.
+ */
 export function RoleTable({ chosen }: { readonly chosen: Role }) {
   return (
     <div className="gap-x-10 pt-1 desk:grid desk:grid-cols-[minmax(0,1fr)_260px]">
+      <div className="min-w-0 max-desk:pb-5 desk:order-2 desk:border-l desk:border-hair desk:pl-6">
+        <RoleChoice chosen={chosen} />
+        <h3 className="pt-2 text-group font-semibold desk:border-t-[1.5px] desk:border-ink">{roleLabels[chosen]}</h3>
+        <p className="pt-1">{roleMeanings[chosen]}</p>
+      </div>
       <div className="min-w-0">
         <DataTable caption="What each role may do; a role for one site covers that site only">
           <TableHead>
             <HeadCell>Action</HeadCell>
             {roles.map((role) => (
               <HeadCell key={role} className={`min-w-[88px] !pl-1.5 ${ground(role === chosen)}`}>
-                <AppLink href={`/people?role=${role}#rights-heading`} className="inline-flex min-h-6 items-end" {...(role === chosen ? { 'aria-current': 'true' as const } : {})}>
+                <AppLink href={roleHref(role)} className="inline-flex min-h-6 items-end" {...(role === chosen ? { 'aria-current': 'true' as const } : {})}>
                   {roleLabels[role]}
                 </AppLink>
               </HeadCell>
@@ -41,11 +50,23 @@ export function RoleTable({ chosen }: { readonly chosen: Role }) {
         </DataTable>
         <Key />
       </div>
-      <div className="max-desk:pt-6 desk:border-l desk:border-hair desk:pl-6">
-        <h3 className="border-t-[1.5px] border-ink pt-2 text-group font-semibold">{roleLabels[chosen]}</h3>
-        <p className="pt-1.5">{roleMeanings[chosen]}</p>
-      </div>
     </div>
+  );
+}
+
+function RoleChoice({ chosen }: { readonly chosen: Role }) {
+  return (
+    <nav aria-label="Choose a role" className="tablet:hidden">
+      <ul className="flex flex-wrap gap-x-5">
+        {roles.map((role) => (
+          <li key={role}>
+            <AppLink href={roleHref(role)} className={`inline-flex min-h-11 items-center ${role === chosen ? 'font-semibold' : ''}`} {...(role === chosen ? { 'aria-current': 'true' as const } : {})}>
+              {roleLabels[role]}
+            </AppLink>
+          </li>
+        ))}
+      </ul>
+    </nav>
   );
 }
 

@@ -41,19 +41,19 @@ export function FocusSection({ focus, rings, clock }: FocusSectionProps) {
   return (
     <div className="grid gap-x-8 gap-y-6 [&>*]:min-w-0 tablet:grid-cols-2">
       <div className="space-y-6">
-      <FluxDiscsFigure
-        figure="Fig. 3"
-        title={`Flux at ${clock}, kW/m²`}
-        discs={focus.discs.filter((disc) => disc.centre === 'hot spot')}
-        rings={rings}
-        focusKind={focus.focusKind}
-        note={`Plane: ${focus.plane}. Picture centred on the hot spot. ${method}. ${rings.length > 0 ? 'Rings: circles as large as the area over 1, 3, 10, 30, 100 and 300 kW/m², as far as the map holds them.' : ''}`}
-      />
-      <section aria-label="Time on one point" className="border-t-[1.5px] border-ink pt-1.5">
-        <h3 className="pb-2 text-body font-semibold">Time on one point</h3>
-        {focus.dwellS.length > 0 ? <DwellTable focus={focus} /> : <p className="text-second">The motion of the spot over the mark could not be worked out.</p>}
-        {line ? <p className="pt-2 font-semibold">A line focus makes a long mark at once: the length of the mark carries no time.</p> : null}
-      </section>
+        <FluxDiscsFigure
+          figure="Fig. 3"
+          title={`Flux at ${clock}, kW/m²`}
+          discs={focus.discs.filter((disc) => disc.centre === 'hot spot')}
+          rings={rings}
+          focusKind={focus.focusKind}
+          note={`Plane: ${focus.plane}. Picture centred on the hot spot. ${method}. ${rings.length > 0 ? `${line ? 'Bands: as wide as the mean' : 'Rings: circles as large as the area'} over 1, 3, 10, 30, 100 and 300 kW/m², as far as the map holds them.` : ''}`}
+        />
+        <section aria-label="Time on one point" className="border-t-[1.5px] border-ink pt-1.5">
+          <h3 className="pb-2 text-body font-semibold">Time on one point</h3>
+          {focus.dwellS.length > 0 ? <DwellTable focus={focus} /> : <p className="text-second">The motion of the spot over the mark could not be worked out.</p>}
+          {line ? <p className="pt-2 font-semibold">A line focus makes a long mark at once: the length of the mark carries no time.</p> : null}
+        </section>
       </div>
       <section aria-label="Focus in numbers" className="border-t-[1.5px] border-ink pt-1.5">
         <h3 className="pb-2 text-body font-semibold">Focus in numbers</h3>

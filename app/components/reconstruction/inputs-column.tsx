@@ -1,16 +1,18 @@
 import { TornadoFigure } from '#app/components/charts/tornado.tsx';
 import { plainNumber } from '#app/components/charts/number-table.tsx';
 import { FactList } from '#app/components/ui/fact-list.tsx';
+import type { RunPageView } from '#app/domain/run-page.ts';
 import type { RunView } from '#app/domain/run-view.ts';
 import type { SamplingResult } from '#app/physics/model.ts';
 
 export interface InputsColumnProps {
   readonly view: RunView;
   readonly sceneVersion: number | null;
+  readonly changes: RunPageView['changes'];
 }
 
 /** What went into the run, what was assumed, and what moves the answer most. */
-export function InputsColumn({ view, sceneVersion }: InputsColumnProps) {
+export function InputsColumn({ view, sceneVersion, changes }: InputsColumnProps) {
   return (
     <div>
       <div className="flex items-baseline justify-between border-t-2 border-ink pt-2 pb-1">
@@ -30,8 +32,19 @@ export function InputsColumn({ view, sceneVersion }: InputsColumnProps) {
           <FactList layout="columns" facts={view.assumptions.map((one) => ({ term: one.label, value: one.value, note: `${one.source}${one.verified ? '' : '; unverified'}` }))} />
         </section>
       </div>
+      {changes ? <Changes changes={changes} /> : null}
       {view.result.sampling ? <Sampling sampling={view.result.sampling} /> : null}
     </div>
+  );
+}
+
+function Changes({ changes }: { readonly changes: NonNullable<RunPageView['changes']> }) {
+  const facts = [...changes.inputs, ...(changes.sunlit ? [{ term: 'Sunlit', value: changes.sunlit }] : [])];
+  return (
+    <section className="pb-3">
+      <h3 className="border-b-[1.5px] border-ink pb-0.5 font-serif text-group">Changed since run {changes.since}</h3>
+      {facts.length === 0 ? <p className="py-2 text-small text-second">Nothing in the inputs.</p> : <FactList layout="columns" facts={facts} />}
+    </section>
   );
 }
 

@@ -38,7 +38,7 @@ export function RunBody({ page, view, label, words }: RunBodyProps) {
           // A frame that scrolls must take the keyboard, or its lower part is out of reach without a mouse.
           // eslint-disable-next-line jsx-a11y/no-noninteractive-tabindex
           <div role="region" aria-label="Inputs and assumptions" tabIndex={0} className="desk:sticky desk:top-3 desk:max-h-[calc(100vh-1.5rem)] desk:overflow-y-auto desk:pr-2">
-            <InputsColumn view={view} sceneVersion={page.line.sceneVersion} />
+            <InputsColumn view={view} sceneVersion={page.line.sceneVersion} changes={page.changes} />
           </div>
         }
       >

@@ -1,5 +1,5 @@
 import type { ReactNode } from 'react';
-import { BurnCard, CaptionedBurnCard } from '#app/components/burn-card/burn-card.tsx';
+import { CaptionedBurnCard } from '#app/components/burn-card/burn-card.tsx';
 import { DayCards } from '#app/components/burn-card/day-cards.tsx';
 import { MinuteTable } from '#app/components/burn-card/minute-table.tsx';
 import { headerSpan } from '#app/components/burn-card/model.ts';
@@ -41,10 +41,4 @@ function Table({ model, card }: { readonly model: BurnCardModel; readonly card: 
       </details>
     </div>
   );
-}
-
-/** The card once more, low, for the bar that stays in sight. */
-export function LowCard({ view, label, cursorUtc }: { readonly view: RunView; readonly label: string; readonly cursorUtc: string | null }) {
-  const span = view.card.window ? headerSpan(view.card.window) : { fromUtc: view.card.fromUtc, toUtc: view.card.toUtc };
-  return <BurnCard model={{ ...view.card, ...span, cursorUtc, startWords: [], endWords: [] }} size="S" label={label} />;
 }

@@ -34,7 +34,7 @@ export function SiteList({ sites, seesCases }: SiteListProps) {
               <>
                 <HeadCell numeric className="!pr-8">Cases</HeadCell>
                 <HeadCell numeric className="!pr-8">Open</HeadCell>
-                <HeadCell>Sun returns next, local time</HeadCell>
+                <HeadCell>Sun returns to an open case, local time</HeadCell>
               </>
             ) : null}
           </TableHead>

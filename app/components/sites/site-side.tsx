@@ -29,11 +29,11 @@ export interface SiteSideProps {
   };
 }
 
-const compass = (deg: number, positive: string, negative: string, digits: number) => `${Math.abs(deg).toFixed(digits)}° ${deg < 0 ? negative : positive}`;
+/** No more digits than were given: trailing noughts would read as accuracy. */
+const compass = (deg: number, positive: string, negative: string) => `${Math.abs(Number(deg.toFixed(5)))}° ${deg < 0 ? negative : positive}`;
 
 /** The side of a site's page: when the sun is back, the place, what is still missing, and the link for guests. */
 export function SiteSide({ site }: SiteSideProps) {
-  const digits = site.isExact ? 4 : 2;
   return (
     <div className="space-y-8">
       {site.sees === 'none' ? null : <NextSun cases={site.cases} />}
@@ -44,7 +44,7 @@ export function SiteSide({ site }: SiteSideProps) {
             { term: 'Code', value: site.code },
             { term: 'Use', value: siteUseLabels[site.use] },
             ...(site.isExact ? [{ term: 'Address', value: site.address || 'not recorded' }] : []),
-            { term: 'Position', value: `${compass(site.latitudeDeg, 'N', 'S', digits)}, ${compass(site.longitudeDeg, 'E', 'W', digits)}`, ...(site.isExact ? {} : { note: 'rounded' }) },
+            { term: 'Position', value: `${compass(site.latitudeDeg, 'N', 'S')}, ${compass(site.longitudeDeg, 'E', 'W')}`, ...(site.isExact ? {} : { note: 'rounded' }) },
             { term: 'Height above sea level', value: `${site.elevationM} m` },
             { term: 'Time zone', value: site.zone },
             { term: 'Skyline', value: site.skylinePoints > 0 ? `${site.skylinePoints} points` : 'not measured' },
@@ -59,11 +59,11 @@ export function SiteSide({ site }: SiteSideProps) {
 
 /** Open marks that are lit again, soonest first. */
 function NextSun({ cases }: Pick<SiteSideProps['site'], 'cases'>) {
-  const returning = cases.filter((row) => row.nextReturnMs !== null && row.state !== 'duplicate').sort((a, b) => (a.nextReturnMs ?? 0) - (b.nextReturnMs ?? 0));
+  const returning = cases.filter((row) => row.nextReturnMs !== null && row.state !== 'closed' && row.state !== 'duplicate').sort((a, b) => (a.nextReturnMs ?? 0) - (b.nextReturnMs ?? 0));
   return (
     <section aria-labelledby="next-sun-heading">
       <SectionHeading id="next-sun-heading" note="local time">Next sun on this site</SectionHeading>
-      {returning.length === 0 ? <p>No mark here is expected to be lit again on file.</p> : null}
+      {returning.length === 0 ? <p>No open case here has a return on file.</p> : null}
       <ul>
         {returning.map((row) => (
           <li key={row.number} className="border-b border-hair py-2">

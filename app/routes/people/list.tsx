@@ -81,7 +81,7 @@ export default function People({ loaderData, actionData }: Route.ComponentProps)
       {trouble && trouble.intent !== 'invite' && !isNamed ? (
         <Notice role="alert" title="Nothing was changed.">{[...trouble.formErrors, ...Object.values(trouble.fieldErrors).flat()].join(' ')}</Notice>
       ) : null}
-      <Columns sideLabel="Leavers and other places" side={<Leavers leavers={leavers} />}>
+      <Columns sideLabel="Leavers" side={<Leavers leavers={leavers} />}>
         <section aria-labelledby="people-heading">
           <SectionHeading id="people-heading" note="by name">People and their roles</SectionHeading>
           <ul className="border-t border-hair">

@@ -70,7 +70,7 @@ export default function Sites({ loaderData, actionData }: Route.ComponentProps) 
   const field = (name: string) => ({ name, id: `site-${name}`, defaultValue: actionData?.typed[name] ?? '', errors: actionData?.fieldErrors[name] ?? [] });
   return (
     <Page>
-      <PageTitle below={seesCases ? `${count}, ${openWords}. Soonest return of the sun first.` : 'By name. What was found there is not shown to administrators.'}>
+      <PageTitle below={seesCases ? `${count}, ${openWords}. Soonest return of the sun to an open one first.` : 'By name. What was found there is not shown to administrators.'}>
         {soonest ? `The sun comes back first at ${soonest.name}: ${soonest.nextReturn}` : count}
       </PageTitle>
       <SiteList sites={sites} seesCases={seesCases} />

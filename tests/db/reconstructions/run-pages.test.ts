@@ -88,6 +88,15 @@ describe('one run', () => {
     expect(page?.view?.card.runs.map((run) => run.reasonWords)).toContain('behind =HYPERLINK("Grain House")');
   });
 
+  test('tells what differs from the run before, in inputs and in sunlit minutes', async () => {
+    const { house, caseId, caseNumber, result } = await finishedRun();
+    const input = { ...plainInput, place: { ...plainInput.place, elevationM: 90 } };
+    await createReconstruction({ caseId, number: 2, input, state: 'done', result: { ...result, totals: { sunlit: 4, notSunlit: 0, cannotTell: 6 } } });
+    const page = await getRunPage(db, { actor: house.investigator, caseNumber, number: 2, now });
+    expect(page?.changes).toEqual({ since: 1, inputs: [{ term: 'Height', value: '60 m to 90 m' }], sunlit: '0 to 4 min' });
+    expect((await getRunPage(db, { actor: house.investigator, caseNumber, number: 1, now }))?.changes).toBeNull();
+  });
+
   test('that does not exist is not found', async () => {
     const { house, caseNumber } = await finishedRun();
     expect(await getRunPage(db, { actor: house.investigator, caseNumber, number: 2, now })).toBeNull();

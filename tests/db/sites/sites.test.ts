@@ -175,12 +175,15 @@ describe('the pages of sites', () => {
       await createSunReturn({ caseId: row.id, reconstructionId: run.id, onDay });
       await createSunReturn({ caseId: row.id, reconstructionId: run.id, onDay: '2001-01-01' });
     }
-    await createSite({ organisationId: house.organisation.id, name: 'A place without returns' });
+    const settledSite = await createSite({ organisationId: house.organisation.id, name: 'A place with nothing open' });
+    const closed = await createCase('closed', { site: settledSite });
+    const run = await createReconstruction({ caseId: closed.id, input: Object({}) });
+    await createSunReturn({ caseId: closed.id, reconstructionId: run.id, onDay: '2098-01-01' });
     // Noon UTC is 22:00 in Sydney in June (UTC+10) and 13:00 in London in August (UTC+1).
     expect((await visitList(house.manager)).body.sites).toMatchObject([
       { name: 'Another', nextReturn: '1 Jun 2099, 22:00' },
       { name: house.site.name, nextReturn: '3 Aug 2099, 13:00' },
-      { name: 'A place without returns', nextReturn: null },
+      { name: 'A place with nothing open', nextReturn: null },
     ]);
   });
 

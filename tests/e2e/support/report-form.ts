@@ -6,7 +6,7 @@ export const demoPhotoPath = (key: string): string => path.join(projectRoot, 'fi
 
 /** Chooses one chip of a group by its words. */
 export async function choose(page: Page, group: string, option: string): Promise<void> {
-  await page.getByRole('group', { name: group }).getByText(option, { exact: true }).click();
+  await page.getByRole('group', { name: group }).getByRole('radio', { name: option, exact: true }).check();
 }
 
 /** The four answers of the rooftop scorch, at a phone, with the form open. */

@@ -1,0 +1,78 @@
+import exifr from 'exifr';
+import sharp from 'sharp';
+import { beforeAll, describe, expect, it } from 'vitest';
+import { foreignJpegSegments } from '#app/domain/jpeg-segments.ts';
+import { masksAreSolid } from '#app/services/releases/release-photo.server.ts';
+import { sha256Hex } from '#app/storage/sha256.server.ts';
+import { bytesOf, mask, phonePhoto, prepareAll, releaseStage } from './stage.ts';
+import type { ReleaseStage } from './stage.ts';
+
+let stage: ReleaseStage;
+let bytes: Awaited<ReturnType<typeof bytesOf>>;
+beforeAll(async () => {
+  stage = await releaseStage();
+  bytes = await bytesOf(stage, await prepareAll(stage));
+});
+
+describe('every byte of a release', () => {
+  it('is listed in the manifest with its size and hash', () => {
+    expect([...bytes.files.keys()].sort()).toEqual(['data.json', 'measurements.csv', 'photo-01.jpg', 'runs.csv']);
+    for (const file of bytes.row.files) {
+      expect(sha256Hex(bytes.files.get(file.name) ?? '')).toBe(file.sha256);
+      expect(bytes.files.get(file.name)?.byteLength).toBe(file.bytes);
+    }
+    expect(bytes.row.files.find((file) => file.name === 'data.json')?.sha256).toBe(bytes.row.releasedHash);
+  });
+
+  it.each(['Hollis', 'Branwen', 'Ottilie', 'Vantongeren', '900412', 'flats.example', 'Quarrel', 'SK9', '53.5123', '1.6123', 'right hand', 'INVENTED', 'kitchen'])('holds nothing of "%s"', (secret) => {
+    expect(bytes.text.toLowerCase()).not.toContain(secret.toLowerCase());
+  });
+
+  it('holds no name of a person of the house', () => {
+    for (const { displayName } of [stage.house.reporter, stage.house.investigator, stage.house.reviewer, stage.house.manager]) expect(bytes.text).not.toMatch(new RegExp(`${displayName}(?!\\d)`, 'u'));
+  });
+
+  it('holds what was shared', () => {
+    expect(bytes.text).toContain('The curtain had a brown line.');
+    expect(bytes.text).toContain('Focused sunlight is probable.');
+    expect(bytes.row.released).toMatchObject({ siteName: stage.house.site.name, injury: 'yes, first aid', loss: { amount: 1850, currency: 'GBP' } });
+  });
+});
+
+describe('photos of a release', () => {
+  const photo = () => bytes.files.get('photo-01.jpg') ?? Buffer.alloc(0);
+
+  it('hold no camera, time or place, although the original does', async () => {
+    const original = await exifr.parse(await phonePhoto(), { gps: true });
+    expect(original).toMatchObject({ Make: 'INVENTED-MAKER' });
+    expect(foreignJpegSegments(await phonePhoto())).toContain('APP1');
+    expect(await exifr.parse(photo(), true)).toBeUndefined();
+    expect(await exifr.gps(photo())).toBeUndefined();
+    const { exif, icc, iptc, xmp } = await sharp(photo()).metadata();
+    expect({ exif, icc, iptc, xmp }).toEqual({ exif: undefined, icc: undefined, iptc: undefined, xmp: undefined });
+    expect(foreignJpegSegments(photo())).toEqual([]);
+  });
+
+  it('are one solid colour where they are masked, and the picture elsewhere', async () => {
+    const { data, info } = await sharp(photo()).raw().toBuffer({ resolveWithObject: true });
+    const at = (x: number, y: number) => [...data.subarray((y * info.width + x) * info.channels, (y * info.width + x) * info.channels + 3)];
+    const inside = [];
+    for (let y = 0.27; y < 0.73; y += 0.01) for (let x = 0.28; x < 0.47; x += 0.01) inside.push(at(Math.round(x * info.width), Math.round(y * info.height)));
+    const [red, green, blue] = [0, 1, 2].map((channel) => inside.map((pixel) => pixel[channel] ?? 0));
+    for (const values of [red, green, blue]) expect(Math.max(...(values ?? [])) - Math.min(...(values ?? []))).toBeLessThanOrEqual(6);
+    // The stripes beside the box are pink and green.
+    const outside = [at(40, 40), at(44, 40), at(48, 40), at(52, 40)];
+    expect(outside.some(([r = 0, g = 0]) => r - g > 120)).toBe(true);
+    expect(outside.some(([r = 0, g = 0]) => g - r > 120)).toBe(true);
+  });
+
+  it('whose box was drawn after the copy was made do not pass as masked', async () => {
+    expect(await masksAreSolid(photo(), [mask])).toBe(true);
+    expect(await masksAreSolid(photo(), [mask, { ...mask, leftShare: 0.6 }])).toBe(false);
+    expect(await masksAreSolid(await phonePhoto(), [mask])).toBe(false);
+  });
+});
+
+it('names of files say nothing of the names that the files came with', () => {
+  expect(bytes.row.files.every((file) => /^(?:data\.json|runs\.csv|measurements\.csv|photo-\d+\.jpg)$/u.test(file.name))).toBe(true);
+});
