@@ -190,7 +190,7 @@ describe('a rooftop scorch', () => {
     const reader = await as('lena', '/case-files');
     await reader.getByRole('link', { name: new RegExp(String(caseNumber), 'u') }).first().click();
     await reader.waitForURL(/case-files\/[0-9a-f-]+/u);
-    await reader.waitForLoadState('networkidle');
+    await reader.getByText('possible cause of the band').first().waitFor();
     const text = (await reader.locator('body').textContent()) ?? '';
     expect(text).toContain('possible cause of the band');
     expect(text).not.toMatch(/Weir|Kvist|Farrant|Penhallow|Whitlock/u);
