@@ -55,7 +55,7 @@ export function PersonRow({ person, sites, isSelf, trouble }: PersonRowProps) {
         {trouble && said.length > 0 ? <Notice role="alert" title={unchanged}>{said.join(' ')}</Notice> : null}
         <details open={trouble !== null && trouble.intent !== 'remove-role'}>
           <summary className="min-h-11 content-center underline decoration-ember decoration-2 underline-offset-4 tablet:min-h-6">Change<span className="sr-only"> the access of {person.displayName}</span></summary>
-          <Changes person={person} sites={sites} isSelf={isSelf} trouble={trouble} />
+          <Changes key={person.grants.length} person={person} sites={sites} isSelf={isSelf} trouble={trouble} />
         </details>
       </div>
     </li>

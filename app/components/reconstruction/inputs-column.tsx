@@ -33,7 +33,7 @@ export function InputsColumn({ view, sceneVersion, changes }: InputsColumnProps)
         </section>
       </div>
       {changes ? <Changes changes={changes} /> : null}
-      {view.result.sampling ? <Sampling sampling={view.result.sampling} /> : null}
+      {view.result.sampling ? <Sampling sampling={view.result.sampling} baseKwm2={asEntered(view)} /> : null}
     </div>
   );
 }
@@ -51,7 +51,12 @@ function Changes({ changes }: { readonly changes: NonNullable<RunPageView['chang
 // Counts, not percentages: a share of samples must not be read as the likelihood of a cause.
 const countWords = (share: number, samples: number): string => `${Math.round(share * samples).toLocaleString('en-GB')} of ${samples.toLocaleString('en-GB')}`;
 
-function Sampling({ sampling }: { readonly sampling: SamplingResult }) {
+/** Flux on 5 mm at the mark with every input as entered, about which the inputs are moved. */
+function asEntered({ result }: RunView): number | null {
+  return result.focus?.discs.find((disc) => disc.disc === '5 mm' && disc.centre === 'mark')?.fluxKwm2.mid ?? null;
+}
+
+function Sampling({ sampling, baseKwm2 }: { readonly sampling: SamplingResult; readonly baseKwm2: number | null }) {
   const over = sampling.fluxOver.filter((row) => row.share > 0);
   return (
     <div className="space-y-3 pb-3">
@@ -59,7 +64,7 @@ function Sampling({ sampling }: { readonly sampling: SamplingResult }) {
         <TornadoFigure
           title="What moves the answer most"
           rows={sampling.tornado.map((bar) => ({ name: bar.input, low: bar.lowKwm2, high: bar.highKwm2 }))}
-          base={sampling.fluxKwm2.mid}
+          base={baseKwm2 ?? sampling.fluxKwm2.mid}
           unit="kW/m²"
           note="Flux on a 5 mm disc at the mark when one input moves by one sigma and the rest stay."
         />

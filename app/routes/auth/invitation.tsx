@@ -30,7 +30,8 @@ export async function action({ params, request }: Route.ActionArgs) {
   }
 }
 
-export const meta: Route.MetaFunction = () => [{ title: 'Choose a password and you are in · Scorchline' }, { name: 'referrer', content: 'no-referrer' }];
+/** The address holds the link's word, so other hosts never see it. Stricter, `no-referrer` would empty the origin of the post. */
+export const meta: Route.MetaFunction = () => [{ title: 'Choose a password and you are in · Scorchline' }, { name: 'referrer', content: 'same-origin' }];
 
 export default function Invitation({ loaderData, actionData }: Route.ComponentProps) {
   const { person } = loaderData;

@@ -92,7 +92,8 @@ export default function People({ loaderData, actionData }: Route.ComponentProps)
         </section>
         <section aria-labelledby="invite-heading" className="max-w-[720px] pt-10">
           <SectionHeading id="invite-heading">Invite a person</SectionHeading>
-          <InviteForm sites={sites} problem={trouble?.intent === 'invite' ? trouble : null} />
+          {/* A new list means that the last invitation went out: the form starts afresh. */}
+          <InviteForm key={people.length} sites={sites} problem={trouble?.intent === 'invite' ? trouble : null} />
         </section>
       </Columns>
       <section aria-labelledby="rights-heading" className="pt-10">

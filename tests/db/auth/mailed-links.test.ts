@@ -3,7 +3,8 @@ import { eq } from 'drizzle-orm';
 import { beforeAll, describe, expect, test } from 'vitest';
 import { sha256Hex } from '#app/storage/sha256.server.ts';
 import { action as askForLink } from '#app/routes/auth/forgotten-password.tsx';
-import { action as takeUp, loader as look } from '#app/routes/auth/invitation.tsx';
+import { action as takeUp, loader as look, meta as invitationMeta } from '#app/routes/auth/invitation.tsx';
+import { meta as newPasswordMeta } from '#app/routes/auth/new-password.tsx';
 import { requestPasswordReset, setPasswordByLink } from '#app/services/people/password-links.server.ts';
 import { invitePerson } from '#app/services/people/invite-person.server.ts';
 import { signIn } from '#app/services/people/sign-in.server.ts';
@@ -163,6 +164,13 @@ describe('the page for a forgotten password', () => {
     for (let tries = 0; tries < 6; tries += 1) statuses.push((await post(user.email)).status);
     expect(statuses).toEqual([200, 200, 200, 200, 200, 429]);
     expect(await lettersTo(user.email)).toHaveLength(5);
+  });
+});
+
+describe('the pages that a mailed link opens', () => {
+  // Referrer Policy, W3C: under `no-referrer` a browser also sends "Origin: null" with a post, which the framework refuses.
+  test.each([['invitation', invitationMeta], ['new password', newPasswordMeta]])('%s: the address goes to no other host, and the form can be sent', (_which, meta) => {
+    expect(meta(Object({}))).toContainEqual({ name: 'referrer', content: 'same-origin' });
   });
 });
 
