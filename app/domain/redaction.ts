@@ -98,7 +98,7 @@ export function redactCase(source: CaseBeforeRedaction, audience: Audience, deci
       maskCount: photo.masks.length,
     })),
   });
-  return { released, withheld: countWithheld(desk, released, shared.length), photos };
+  return { released, withheld: countWithheld(desk, released, shared), photos };
 }
 
 /** Numbers and words from our own lists. */
@@ -183,13 +183,12 @@ function releasedHypothesis({ line }: Desk, one: CaseBeforeRedaction['hypotheses
 }
 
 /** Blocks that the reader sees, and whole fields that are not there at all. */
-function countWithheld({ source, treatment }: Desk, released: ReleasedCase, sharedPhotos: number): WithheldCounts {
+function countWithheld({ source, treatment }: Desk, released: ReleasedCase, shared: CaseBeforeRedaction['photos']): WithheldCounts {
   const counts: Record<WithheldClass, number> = { personal: 0, health: 0, child: 0, legal: 0, 'exact-place': 0, commercial: 0, 'free-text': 0, photo: 0 };
   countBlocks(released, counts);
   const add = (withheld: WithheldClass, howMany: number) => {
     counts[withheld] += howMany;
   };
-  const shownPhotos = source.photos.filter((photo) => released.photos.some(({ fileName }) => fileName === `photo-${String(photo.label).padStart(2, '0')}.jpg`));
   const stated = (values: readonly (string | null)[]) => values.filter((value) => value !== null && value.trim() !== '').length;
   for (const person of source.people) {
     add('personal', stated([person.name, person.email, person.phone]));
@@ -197,9 +196,9 @@ function countWithheld({ source, treatment }: Desk, released: ReleasedCase, shar
   }
   add('exact-place', (source.position ? 1 : 0) + stated([source.site.address]) + (treatment('siteName') === 'removed' ? 1 : 0));
   add('exact-place', source.reconstruction && treatment('reconstruction') === 'reduced' ? 1 : 0);
-  add('exact-place', shownPhotos.filter((photo) => photo.exifPlace !== null).length);
-  for (const mask of shownPhotos.flatMap((photo) => photo.masks)) add(mask.class, 1);
-  add('photo', source.photos.length - sharedPhotos);
+  add('exact-place', shared.filter((photo) => photo.exifPlace !== null).length);
+  for (const mask of shared.flatMap((photo) => photo.masks)) add(mask.class, 1);
+  add('photo', source.photos.length - shared.length);
   add('health', treatment('injury') === 'removed' ? 1 : source.injuries.length);
   add('legal', stated([source.privilegedNote, source.legalHoldReason]) + (source.hasDraftFinding ? 1 : 0));
   add('commercial', (source.loss && treatment('loss') !== 'shown' ? 1 : 0) + source.actions.filter((action) => action.hasCost).length);

@@ -45,7 +45,7 @@ async function prepareDemo(actor: Actor, caseNumber: number): Promise<number | n
     audience: 'insurer',
     recipientOrganisationId: recipient.id,
     changeNote: 'First release',
-    expiresAt: new Date(Date.now() + yearMs),
+    expires: { at: new Date(Date.now() + yearMs) },
     decisions,
     basis: null,
   });

@@ -5,7 +5,7 @@ import { PrepareForm } from '#app/components/releases/prepare-form.tsx';
 import { KeptReleases } from '#app/components/releases/release-tables.tsx';
 import { readCaseNumber } from '#app/domain/case-number.ts';
 import { DomainError } from '#app/domain/errors.ts';
-import { prepareSchema, readDecisions, readExpiry } from '#app/domain/release-form.ts';
+import { prepareSchema, readDecisions } from '#app/domain/release-form.ts';
 import { audiences } from '#app/domain/release-policy.ts';
 import { fieldErrorsOf } from '#app/http/field-errors.ts';
 import { formProblem, problemFromError } from '#app/http/form-result.server.ts';
@@ -30,11 +30,8 @@ export function action({ request, context, params }: Route.ActionArgs) {
     const read = prepareSchema.safeParse(Object.fromEntries(form));
     if (!read.success) return formProblem('prepare', form, damagedOr(fieldErrorsOf(read.error)));
     const { expiresOn, ...rest } = read.data;
-    const desk = await getReleaseDesk({ actor, caseNumber, audience: rest.audience, now: new Date() });
-    const expiry = readExpiry(expiresOn, new Date(), desk.zone);
-    if (!expiry.ok) return formProblem('prepare', form, { fieldErrors: { expiresOn: [expiry.sentence] } });
     try {
-      const number = await prepareRelease({ actor, caseNumber, ...rest, expiresAt: expiry.expiresAt, decisions: readDecisions(form) });
+      const number = await prepareRelease({ actor, caseNumber, ...rest, expires: { on: expiresOn }, decisions: readDecisions(form) });
       return redirect(href('/cases/:caseNumber/releases/:number', { caseNumber: String(caseNumber), number: String(number) }), 303);
     } catch (error) {
       if (error instanceof DomainError && error.code === 'not-found') throw error;

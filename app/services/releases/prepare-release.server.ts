@@ -11,6 +11,7 @@ import type { CaseBeforeRedaction } from '#app/domain/case-before-redaction.ts';
 import { DomainError, notFound } from '#app/domain/errors.ts';
 import { heldWords, redactCase } from '#app/domain/redaction.ts';
 import { linesToDecide } from '#app/domain/lines-to-decide.ts';
+import { readExpiry } from '#app/domain/release-form.ts';
 import { audienceLabels } from '#app/domain/release-policy.ts';
 import type { Audience } from '#app/domain/release-policy.ts';
 import { findHits, searcherFor } from '#app/domain/redact-text.ts';
@@ -36,7 +37,8 @@ export interface PrepareRequest {
   readonly audience: Audience;
   readonly recipientOrganisationId: string;
   readonly changeNote: string;
-  readonly expiresAt: Date;
+  /** The last day, on the clock of the place, or the instant itself. */
+  readonly expires: { readonly on: string } | { readonly at: Date };
   readonly decisions: Decisions;
   /** `basisOf` what was shown; null where nobody looked at a page, as when the demonstration is seeded. */
   readonly basis: string | null;
@@ -47,7 +49,7 @@ export interface PrepareRequest {
  * the house until another person releases it.
  *
  * @returns The number of the release.
- * @throws DomainError `not-found`, `forbidden`, `invalid-input` for a recipient that is none, or `conflict` when the case
+ * @throws DomainError `not-found`, `forbidden`, `invalid-input` for a recipient that is none, a day that cannot be, or a note that tells something, or `conflict` when the case
  *   changed since it was shown or while the copy was made.
  */
 export async function prepareRelease(request: PrepareRequest): Promise<number> {
@@ -59,11 +61,12 @@ export async function prepareRelease(request: PrepareRequest): Promise<number> {
     throw new DomainError('conflict', 'The case changed while this page was open. Your decisions are still here: read the lines and photos again, then prepare.');
   }
   refuseTellingNote(request.changeNote, before.source, audience);
+  const expiresAt = expiryOf(request.expires, before.source.zone);
   const redaction = redactCase(before.source, audience, decisions);
   const id = randomUUID();
   const files = await storeFiles(id, await makeReleaseFiles(redaction, before.source));
   try {
-    return await inTransaction((tx) => store(tx, { request, before, redaction, id, files }));
+    return await inTransaction((tx) => store(tx, { request, before, redaction, id, files, expiresAt }));
   } catch (error) {
     // Nothing refers to these objects; what cannot be removed now only takes room.
     await Promise.allSettled(files.map((file) => deleteObject(file.objectKey)));
@@ -76,6 +79,13 @@ function refuseTellingNote(changeNote: string, source: CaseBeforeRedaction, audi
   if (findHits(changeNote, searcherFor(heldWords(source, audience))).length === 0) return;
   const sentence = 'The change note goes out as it stands: leave out names, contacts, places, health and legal matters.';
   throw new DomainError('invalid-input', sentence, { fieldErrors: { changeNote: [sentence] } });
+}
+
+function expiryOf(expires: PrepareRequest['expires'], zone: string): Date {
+  if ('at' in expires) return expires.at;
+  const reading = readExpiry(expires.on, new Date(), zone);
+  if (!reading.ok) throw new DomainError('invalid-input', reading.sentence, { fieldErrors: { expiresOn: [reading.sentence] } });
+  return reading.expiresAt;
 }
 
 async function storeFiles(releaseId: string, made: readonly MadeFile[]): Promise<ReleaseFile[]> {
@@ -94,9 +104,10 @@ interface Prepared {
   readonly redaction: Redaction;
   readonly id: string;
   readonly files: readonly ReleaseFile[];
+  readonly expiresAt: Date;
 }
 
-async function store(tx: Transaction, { request, before, redaction, id, files }: Prepared): Promise<number> {
+async function store(tx: Transaction, { request, before, redaction, id, files, expiresAt }: Prepared): Promise<number> {
   const { actor, caseNumber, audience, decisions, recipientOrganisationId } = request;
   const locked = await lockCase(tx, actor, caseNumber);
   if (!locked) throw notFound('The case');
@@ -120,7 +131,7 @@ async function store(tx: Transaction, { request, before, redaction, id, files }:
     releasedHash,
     decisions,
     preparedById: actor.userId,
-    expiresAt: request.expiresAt,
+    expiresAt,
   });
   await insertLogEntry(tx, {
     actorId: actor.userId,
@@ -131,7 +142,7 @@ async function store(tx: Transaction, { request, before, redaction, id, files }:
     subject: 'releases',
     subjectId: id,
     summary: `Release ${number} prepared for ${recipient.name} (${audienceLabels[audience].toLowerCase()}).`,
-    after: { number, audience, recipientOrganisationId, releasedHash, expiresAt: request.expiresAt.toISOString() },
+    after: { number, audience, recipientOrganisationId, releasedHash, expiresAt: expiresAt.toISOString() },
   });
   return number;
 }

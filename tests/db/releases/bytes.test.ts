@@ -56,7 +56,7 @@ describe('photos of a release', () => {
   it('are one solid colour where they are masked, and the picture elsewhere', async () => {
     const { data, info } = await sharp(photo()).raw().toBuffer({ resolveWithObject: true });
     const at = (x: number, y: number) => [...data.subarray((y * info.width + x) * info.channels, (y * info.width + x) * info.channels + 3)];
-    const inside = [];
+    const inside: number[][] = [];
     for (let y = 0.27; y < 0.73; y += 0.01) for (let x = 0.28; x < 0.47; x += 0.01) inside.push(at(Math.round(x * info.width), Math.round(y * info.height)));
     const [red, green, blue] = [0, 1, 2].map((channel) => inside.map((pixel) => pixel[channel] ?? 0));
     for (const values of [red, green, blue]) expect(Math.max(...(values ?? [])) - Math.min(...(values ?? []))).toBeLessThanOrEqual(6);

@@ -110,7 +110,7 @@ describe('text in every column', () => {
     }
     expect(withheld.length).toBeGreaterThan(25);
     expect(leaving.length).toBeGreaterThan(8);
-    const number = await prepareRelease({ actor: stage.house.investigator, caseNumber: stage.caseNumber, audience: 'insurer', recipientOrganisationId: stage.insurer.id, changeNote: 'First release', expiresAt: inADay(), decisions: await shareAll(stage), basis: null });
+    const number = await prepareRelease({ actor: stage.house.investigator, caseNumber: stage.caseNumber, audience: 'insurer', recipientOrganisationId: stage.insurer.id, changeNote: 'First release', expires: { at: inADay() }, decisions: await shareAll(stage), basis: null });
     const { text } = await bytesOf(stage, number);
     const tail = (marker: string) => marker.split(' ').at(-1) ?? marker;
     expect(withheld.filter((marker) => text.includes(tail(marker)))).toEqual([]);

@@ -27,7 +27,7 @@ const request = async (values: Partial<Parameters<typeof prepareRelease>[0]> = {
   audience: 'insurer' as const,
   recipientOrganisationId: stage.insurer.id,
   changeNote: 'First release',
-  expiresAt: inADay(),
+  expires: { at: inADay() },
   decisions: await shareAll(stage),
   basis: null,
   ...values,
@@ -62,6 +62,21 @@ describe('preparing', () => {
   it('is refused for an organisation that is no insurer, and for the house itself', async () => {
     const operator = await createOrganisation();
     for (const recipientOrganisationId of [operator.id, stage.house.organisation.id]) await expect(prepareRelease(await request({ recipientOrganisationId }))).rejects.toMatchObject({ code: 'invalid-input' });
+  });
+
+  it.each([
+    ['yesterday', -1, 'readers need time'],
+    ['in three years', 1_100, 'two years at most'],
+  ])('is refused with an end %s', async (_when, days, sentence) => {
+    const on = new Date(Date.now() + days * 86_400_000).toISOString().slice(0, 10);
+    await expect(prepareRelease(await request({ expires: { on } }))).rejects.toMatchObject({ code: 'invalid-input', fieldErrors: { expiresOn: [expect.stringContaining(sentence)] } });
+  });
+
+  it('ends with the last minute of the day on the clock of the place', async () => {
+    const day = new Date(Date.now() + 30 * 86_400_000).toISOString().slice(0, 10);
+    await prepareRelease(await request({ expires: { on: day } }));
+    const { expiresAt } = await rowOf(stage, 1);
+    expect(new Intl.DateTimeFormat('sv-SE', { timeZone: 'Europe/London', dateStyle: 'short', timeStyle: 'short' }).format(expiresAt)).toBe(`${day} 23:59`);
   });
 
   it('is refused with a change note that names somebody', async () => {

@@ -41,7 +41,7 @@ it('releases of the demonstration are made once, and finished when the seed was 
   const investigator = await getActor(db, maren.id);
   if (!cut || !investigator) throw new Error('The demonstration has no released case.');
   await createCase('closed', { site, number: cut.number });
-  await prepareRelease({ actor: investigator, caseNumber: cut.number, audience: 'insurer', recipientOrganisationId: insurer.id, changeNote: 'First release', expiresAt: new Date('2099-01-01T00:00:00Z'), decisions: {}, basis: null });
+  await prepareRelease({ actor: investigator, caseNumber: cut.number, audience: 'insurer', recipientOrganisationId: insurer.id, changeNote: 'First release', expires: { at: new Date('2099-01-01T00:00:00Z') }, decisions: {}, basis: null });
   await seedReleases([cut]);
   expect(await states(), 'one that was only prepared is released').toEqual([...demo, cut].map(() => 'released'));
 

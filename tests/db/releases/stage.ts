@@ -137,7 +137,7 @@ export async function prepareAll(stage: ReleaseStage, audience: Audience = 'insu
     audience,
     recipientOrganisationId: stage.insurer.id,
     changeNote: 'First release',
-    expiresAt: inADay(),
+    expires: { at: inADay() },
     decisions: await shareAll(stage, audience),
     basis: null,
   });
