@@ -18,7 +18,7 @@ export default defineConfig(({ mode }) => ({
     passWithNoTests: false,
     projects: [
       { extends: true, test: { name: 'architecture', include: ['tests/architecture.test.ts'] } },
-      { extends: true, test: { name: 'unit', include: ['tests/unit/**/*.test.{ts,tsx}'], setupFiles: quiet } },
+      { extends: true, test: { name: 'unit', include: ['tests/unit/**/*.test.{ts,tsx}'], setupFiles: quiet, testTimeout: 60_000 } },
       { extends: true, test: { name: 'handbook', include: ['tests/handbook/**/*.test.ts'], setupFiles: quiet, testTimeout: 60_000 } },
       {
         extends: true,
@@ -28,8 +28,8 @@ export default defineConfig(({ mode }) => ({
           setupFiles: ['./tests/support/test-env.ts', ...quiet],
           globalSetup: ['./tests/support/template-database.ts'],
           pool: 'forks',
-          testTimeout: 30_000,
-          hookTimeout: 60_000,
+          testTimeout: 90_000,
+          hookTimeout: 120_000,
         },
       },
       {
@@ -40,8 +40,10 @@ export default defineConfig(({ mode }) => ({
           globalSetup: ['./tests/e2e/support/seeded-template.ts'],
           pool: 'forks',
           fileParallelism: false,
-          testTimeout: 120_000,
-          hookTimeout: 120_000,
+          testTimeout: 240_000,
+          hookTimeout: 240_000,
+          // A page on a busy machine takes its time.
+          expect: { poll: { timeout: 30_000, interval: 200 } },
         },
       },
     ],

@@ -3,6 +3,7 @@ import type { z } from 'zod';
 import type { Transaction } from '#db/client.server.ts';
 import { executeInTransaction } from '#db/raw-sql.server.ts';
 import { env } from '#app/env.server.ts';
+import { log } from '#app/log.server.ts';
 import type { JobDefinition } from './define-job.ts';
 import { preparePhotoJob } from './definitions/prepare-photo.ts';
 import { runReconstructionJob } from './definitions/run-reconstruction.ts';
@@ -20,7 +21,7 @@ export function queue(): Promise<PgBoss> {
 
 async function startQueue(): Promise<PgBoss> {
   const boss = new PgBoss({ connectionString: env.DATABASE_URL, max: 4 });
-  boss.on('error', (error) => console.error('queue', error));
+  boss.on('error', (error) => log.error({ err: error }, 'the queue reports an error'));
   await boss.start();
   for (const definition of definitions) await boss.createQueue(definition.name);
   return boss;

@@ -1,4 +1,5 @@
 import { AxeBuilder } from '@axe-core/playwright';
+import type { Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { signedIn } from './support/sign-in.ts';
 import { openStage } from './support/stage.ts';
@@ -28,7 +29,7 @@ const open = ['/', '/sign-in', '/forgotten-password', '/progress', '/how-we-comp
 
 const tags = ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'];
 
-async function violations(page: import('playwright-core').Page, path: string): Promise<string[]> {
+async function violations(page: Page, path: string): Promise<string[]> {
   await page.goto(path);
   await page.waitForLoadState('networkidle');
   const { violations: found } = await new AxeBuilder({ page }).withTags(tags).analyze();

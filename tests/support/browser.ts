@@ -44,7 +44,7 @@ export async function openPage(
     serviceWorkers: 'block',
     ...options,
   });
-  context.setDefaultTimeout(15_000);
+  context.setDefaultTimeout(45_000);
   const faults: string[] = [];
   await context.route(
     (url) => !isOwn(url),

@@ -13,7 +13,8 @@ import { getObject, putObject } from '#app/storage/objects.server.ts';
 import { sha256Hex } from '#app/storage/sha256.server.ts';
 import { db } from '#db/client.server.ts';
 import { readCaseBeforeRedaction } from '#db/queries/case-before-redaction.server.ts';
-import { organisations, releases, sites } from '#db/schema/all.ts';
+import { releases, sites } from '#db/schema/all.ts';
+import type { organisations } from '#db/schema/all.ts';
 
 /** Where the phone says that the photo was taken. [°] */
 export const photoPlace = { latitudeDeg: 53.512345, longitudeDeg: -1.612345 };
