@@ -8,7 +8,7 @@ import { AppHeader, PublicHeader } from '#app/components/layout/app-header.tsx';
 import { Page } from '#app/components/layout/page.tsx';
 import { PageTitle } from '#app/components/ui/page-title.tsx';
 import { AppLink } from '#app/components/ui/app-link.tsx';
-import { homeFor, initialsOf, navigationFor, rolesInWords } from '#app/domain/navigation.ts';
+import { homeFor, initialsOf, navigationFor, personLinksFor, rolesInWords } from '#app/domain/navigation.ts';
 
 export const middleware: Route.MiddlewareFunction[] = [sessionMiddleware];
 
@@ -22,6 +22,7 @@ export function loader({ context }: Route.LoaderArgs) {
       roles: rolesInWords(actor),
       home: homeFor(actor),
       navigation: navigationFor(actor),
+      ownLinks: personLinksFor(actor),
       searches: navigationFor(actor).some((entry) => entry.href === '/cases'),
     },
   };
@@ -66,7 +67,7 @@ function Head() {
       nav={person.navigation.map((entry) => ({ ...entry, current: current(entry.href) }))}
       {...(person.searches ? { search: { action: '/cases' } } : {})}
       person={{ initials: person.initials, name: person.name, detail: person.roles }}
-      personLinks={[{ href: '/account', label: 'Your account' }, { href: '/how-we-compute', label: 'How we compute' }]}
+      personLinks={person.ownLinks}
       signOutAction="/sign-out"
     />
   );

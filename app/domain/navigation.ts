@@ -19,6 +19,15 @@ export function navigationFor(actor: Actor): readonly NavigationEntry[] {
   return entries;
 }
 
+/** Links in the person's own menu. */
+export function personLinksFor(actor: Actor): readonly NavigationEntry[] {
+  return [
+    { href: '/account', label: 'Your account' },
+    ...(canInOrganisation(actor, 'log:read-all') ? [{ href: '/log', label: 'Whole log' }] : []),
+    { href: '/how-we-compute', label: 'How we compute' },
+  ];
+}
+
 /** The page a person lands on after signing in. */
 export function homeFor(actor: Actor): string {
   if (canInOrganisation(actor, 'register:read')) return '/cases';

@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest';
-import { homeFor, initialsOf, navigationFor, rolesInWords } from '#app/domain/navigation.ts';
+import { homeFor, initialsOf, navigationFor, personLinksFor, rolesInWords } from '#app/domain/navigation.ts';
 import type { Actor, Role } from '#app/domain/roles.ts';
 
 function actor(...roles: readonly Role[]): Actor {
@@ -28,6 +28,12 @@ describe('the words of the navigation', () => {
   test('without a role there are none', () => {
     expect(words()).toEqual([]);
   });
+});
+
+test('the whole log is found in the menu of those who may read it', () => {
+  const finds = (role: Role) => personLinksFor(actor(role)).some((link) => link.href === '/log');
+  expect((['reviewer', 'privacy-lead', 'administrator'] as const).every(finds)).toBe(true);
+  expect((['reporter', 'investigator', 'manager', 'insurer'] as const).some(finds)).toBe(false);
 });
 
 describe('the page after signing in', () => {
