@@ -1,3 +1,4 @@
+import { canonicalJson } from './canonical-json.ts';
 import type { CaseBeforeRedaction } from './case-before-redaction.ts';
 import type { Audience, PolicyField } from './release-policy.ts';
 import { fieldPolicies } from './release-policy.ts';
@@ -12,7 +13,7 @@ export interface LineToDecide {
   readonly text: string;
 }
 
-/** Eight hexadecimal digits that tell texts apart: FNV-1a, 32 bits (Fowler, Noll and Vo; RFC 9923). Not for secrets. */
+/** Eight hexadecimal digits that tell texts apart: FNV-1a, 32 bits (Fowler, Noll and Vo). Not for secrets. */
 function fingerprint(text: string): string {
   let hash = 0x811c9dc5;
   for (const unit of new TextEncoder().encode(text)) hash = Math.imul(hash ^ unit, 0x01000193) >>> 0;
@@ -20,7 +21,8 @@ function fingerprint(text: string): string {
 }
 
 export const lineKey = (group: string, text: string): string => `${group}#${fingerprint(text.trim())}`;
-export const photoKey = (photoId: string): string => `photo:${photoId}`;
+/** Names a photo and its boxes: a decision about other boxes never applies to these. */
+export const photoKey = ({ photoId, masks }: Pick<CaseBeforeRedaction['photos'][number], 'photoId' | 'masks'>): string => `photo:${photoId}#${fingerprint(canonicalJson(masks))}`;
 
 /**
  * Where the sentences of a text begin and end; blanks after a sentence belong to it. A full stop after one or two letters

@@ -84,7 +84,7 @@ function deskFor(source: CaseBeforeRedaction, audience: Audience, decisions: Dec
  */
 export function redactCase(source: CaseBeforeRedaction, audience: Audience, decisions: Decisions): Redaction {
   const desk = deskFor(source, audience, decisions);
-  const shared = source.photos.filter((photo) => photo.releasable === 'yes' && decisions[photoKey(photo.photoId)] === 'share');
+  const shared = source.photos.filter((photo) => photo.releasable === 'yes' && decisions[photoKey(photo)] === 'share');
   const photos = shared.map((photo) => ({ photoId: photo.photoId, fileName: `photo-${String(photo.label).padStart(2, '0')}.jpg` }));
   // Parsing drops every key that the released shape does not name.
   const released = releasedCaseSchema.parse({

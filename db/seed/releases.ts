@@ -37,7 +37,7 @@ async function prepareDemo(actor: Actor, caseNumber: number): Promise<number | n
   const insurers = await listRecipientOrganisations(db, { organisationId: found.organisationId, audience: 'insurer' });
   const recipient = insurers.find((organisation) => organisation.name === insurerName);
   if (!recipient) return null;
-  const keys = [...linesToDecide(found.source, 'insurer').map((line) => line.key), ...found.source.photos.map((photo) => photoKey(photo.photoId))];
+  const keys = [...linesToDecide(found.source, 'insurer').map((line) => line.key), ...found.source.photos.map((photo) => photoKey(photo))];
   const decisions: Decisions = Object.fromEntries(keys.map((key) => [key, 'share' as const]));
   return prepareRelease({
     actor,

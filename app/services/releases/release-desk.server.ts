@@ -91,7 +91,7 @@ const deskLine = ({ key, label, text }: LineToDecide, searcher: Searcher, decisi
 function deskPhotos(source: CaseBeforeRedaction, decisions: Decisions): DeskPhoto[] {
   return source.photos.map((photo) => {
     const viewWords = photo.view ? photoViewLabels[photo.view] : 'View not stated';
-    const key = photoKey(photo.photoId);
+    const key = photoKey(photo);
     return {
       key,
       photoId: photo.photoId,

@@ -125,7 +125,7 @@ export async function releaseStage(): Promise<ReleaseStage> {
 export async function shareAll(stage: ReleaseStage, audience: Audience = 'insurer'): Promise<Decisions> {
   const found = await readCaseBeforeRedaction(db, { actor: stage.house.investigator, caseNumber: stage.caseNumber });
   if (!found) throw new Error('The case of the stage is missing.');
-  const keys = [...linesToDecide(found.source, audience).map((line) => line.key), ...found.source.photos.map((photo) => photoKey(photo.photoId))];
+  const keys = [...linesToDecide(found.source, audience).map((line) => line.key), ...found.source.photos.map((photo) => photoKey(photo))];
   return Object.fromEntries(keys.map((key) => [key, 'share' as const]));
 }
 

@@ -4,7 +4,7 @@ import { exampleInput } from '#app/cli/example-input.ts';
 import { sha256Hex } from '#app/storage/sha256.server.ts';
 import { canonicalJson } from '#app/domain/canonical-json.ts';
 import { csvCell } from '#app/domain/csv.ts';
-import { linesToDecide, photoKey } from '#app/domain/lines-to-decide.ts';
+import { lineKey, linesToDecide, photoKey } from '#app/domain/lines-to-decide.ts';
 import { redactCase } from '#app/domain/redaction.ts';
 import { checkReleasedText } from '#app/domain/release-check.ts';
 import { releasedResultSchema, resultKeysKept } from '#app/domain/released-result.ts';
@@ -42,9 +42,16 @@ describe('what nobody decided', () => {
   });
 
   it('a photo that the photo sheet keeps in the house stays there in spite of a decision', () => {
-    const source = sourceOf({ photos: [{ ...photo, releasable: 'undecided' }, { ...photo, photoId: '00000000-0000-4000-8000-000000000002', label: 4, releasable: 'no' }] });
-    const decisions = { [photoKey(photo.photoId)]: 'share', [photoKey('00000000-0000-4000-8000-000000000002')]: 'share' } as const;
-    expect(redactCase(source, 'insurer', decisions).photos).toEqual([]);
+    const kept = { ...photo, photoId: '00000000-0000-4000-8000-000000000002', label: 4, releasable: 'no' as const };
+    const source = sourceOf({ photos: [{ ...photo, releasable: 'undecided' }, kept] });
+    expect(redactCase(source, 'insurer', { [photoKey(photo)]: 'share', [photoKey(kept)]: 'share' }).photos).toEqual([]);
+  });
+
+  it('a photo is not shared by a decision about other boxes on it', () => {
+    const mask = { leftShare: 0.1, topShare: 0.1, widthShare: 0.2, heightShare: 0.2, class: 'personal' as const };
+    const decisions = { [photoKey({ ...photo, masks: [mask] })]: 'share' } as const;
+    expect(redactCase(sourceOf({ photos: [{ ...photo, masks: [mask] }] }), 'insurer', decisions).photos).toHaveLength(1);
+    expect(redactCase(sourceOf({ photos: [photo] }), 'insurer', decisions).photos).toEqual([]);
   });
 });
 
@@ -255,6 +262,13 @@ describe('lines to decide', () => {
   it('have keys that name their words, so that equal words share one', () => {
     const keys = linesToDecide(sourceOf({ account: 'It smoked. It smoked. It was dark.' }), 'insurer').filter((line) => line.group === 'account').map((line) => line.text);
     expect(keys).toEqual(['It smoked.', 'It was dark.']);
+  });
+
+  it.each([
+    ['a', 'e40c292c'],
+    ['foobar', 'bf9cf968'],
+  ])('are told apart by FNV-1a: "%s" gives the value of its authors\' test vectors', (text, expected) => {
+    expect(lineKey('x', text)).toBe(`x#${expected}`);
   });
 
   it('leave out what this reader never gets', () => {

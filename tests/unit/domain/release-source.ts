@@ -63,6 +63,6 @@ export const hypothesis = (values: Partial<CaseBeforeRedaction['hypotheses'][num
 
 /** Decisions that share everything that can be shared. */
 export function allShared(source: CaseBeforeRedaction, audience: Audience): Decisions {
-  const keys = [...linesToDecide(source, audience).map((line) => line.key), ...source.photos.map((photo) => photoKey(photo.photoId))];
+  const keys = [...linesToDecide(source, audience).map((line) => line.key), ...source.photos.map((photo) => photoKey(photo))];
   return Object.fromEntries(keys.map((key) => [key, 'share' as const]));
 }
