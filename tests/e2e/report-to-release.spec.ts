@@ -190,7 +190,7 @@ describe('a rooftop scorch', () => {
     const page = await stage.visit({ size: 'phone' });
     await page.goto(`/progress?code=${receipt}`);
     const text = (await page.locator('main').textContent()) ?? '';
-    expect(text).toMatch(/Corrective action/iu);
+    expect(text).toMatch(/closed/iu);
     expect(text).not.toMatch(/Kvist|Farrant|Penhallow|Weir/u);
   });
 });
