@@ -8,7 +8,7 @@ const releaseHref = (release: KeptReleaseView): string => href('/cases/:caseNumb
 /** Releases as the team keeps them, of one case or of all. */
 export function KeptReleases({ releases, withCase }: { readonly releases: readonly KeptReleaseView[]; readonly withCase: boolean }) {
   return (
-    <DataTable caption={withCase ? 'Releases of all cases' : 'Releases of this case'}>
+    <DataTable caption={withCase ? 'Releases of all cases' : 'Releases of this case'} className="max-tablet:min-w-[46rem]">
       <TableHead>
         {withCase ? <HeadCell>Case</HeadCell> : null}
         <HeadCell>Release</HeadCell>
