@@ -117,7 +117,7 @@ function MakeSafe({ headingId }: { readonly headingId: string }) {
       </p>
       <form method="get" action="/report" className="flex flex-wrap items-end gap-x-3 gap-y-2 pt-4">
         <div className="min-w-0 flex-1 basis-44">
-          <TextInput field={{ name: 'at', id: `${headingId}-code`, required: true }} label="No account? Code at your site" autoComplete="off" autoCapitalize="none" spellCheck={false} />
+          <TextInput field={{ name: 'at', id: `${headingId}-code`, required: true }} label="No account? Site code" autoComplete="off" autoCapitalize="none" spellCheck={false} />
         </div>
         <Button look="outlined">Report with the code</Button>
       </form>
