@@ -5,7 +5,7 @@ import { signedIn } from './support/sign-in.ts';
 import { openStage } from './support/stage.ts';
 import type { Stage } from './support/stage.ts';
 
-/** The rooftop scorch from a phone report to a verified action and a redacted file, by role and label. */
+/** The rooftop scorch from a phone report to a closed case and a redacted file, by role and label. */
 const words = 'Brown band along the membrane under the curved steel edge, about two metres. Tomas Weir saw it first.';
 
 let stage: Stage;
@@ -158,6 +158,26 @@ describe('a rooftop scorch', () => {
     await expect.poll(() => verifier.getByText(/effect not shown/iu).count()).toBeGreaterThan(0);
   });
 
+  it('has its action shown effective, by a person who looked when the sun was back', async () => {
+    const verifier = await as('joss', casePath('/actions'));
+    await openFold(verifier, 'Record it');
+    await choose(verifier, 'Does it work?', 'It works');
+    await verifier.getByLabel('What you saw, and when').fill('At noon in full sun: no bright strip on the membrane.');
+    await send(verifier, verifier.getByRole('button', { name: 'Record it' }));
+    await expect.poll(() => verifier.getByText(/shown effective/iu).count()).toBeGreaterThan(0);
+  });
+
+  it('is closed by the site manager, with a lesson and the outside reports checked', async () => {
+    const manager = await as('joss', casePath());
+    const closing = manager.locator('#move-close');
+    await closing.evaluate((element) => element.setAttribute('open', ''));
+    await closing.getByLabel('Lesson for other sites').fill('Bright curved edges beside dark membranes want a matt finish.');
+    await closing.getByLabel('Reports to outside bodies').selectOption({ label: 'Checked: not needed' });
+    await closing.getByLabel('A word for the log, if needed').fill('Fix shown to work.');
+    await send(manager, closing.getByRole('button', { name: 'Close the case' }));
+    await expect.poll(() => manager.getByText('Closed', { exact: true }).count()).toBeGreaterThan(0);
+  });
+
   it('leaves as a numbered release that one person prepares and another approves', async () => {
     const preparer = await as('maren', casePath('/releases'));
     await preparer.getByLabel('For', { exact: true }).selectOption({ label: 'Harrowmere Mutual, 1 reader' });
@@ -190,7 +210,8 @@ describe('a rooftop scorch', () => {
     const page = await stage.visit({ size: 'phone' });
     await page.goto(`/progress?code=${receipt}`);
     const text = (await page.locator('main').textContent()) ?? '';
-    expect(text).toMatch(/closed/iu);
+    expect(text).toMatch(/focused sunlight: a possible cause/iu);
+    expect(text).not.toMatch(/being put right/iu);
     expect(text).not.toMatch(/Kvist|Farrant|Penhallow|Weir/u);
   });
 });

@@ -3,7 +3,7 @@ import { demoEmail, demoPassword, demoPeople } from '#fixtures/demo/people.ts';
 import type { Stage } from './stage.ts';
 
 /** Signs a person of the demonstration in through the form, in a browser of their own. */
-export async function signedIn(stage: Stage, key: string, size: 'phone' | 'desk' = 'desk'): Promise<Page> {
+export async function signedIn(stage: Stage, key: string, size: 'phone' | 'desk' | 'smallPhone' = 'desk'): Promise<Page> {
   const person = demoPeople.find((one) => one.key === key);
   if (!person) throw new Error(`Nobody in the demonstration is called ${key}.`);
   const page = await stage.visit({ size });
