@@ -27,7 +27,11 @@ const environmentSchema = z.object({
   PHOTO_MAX_BYTES: z.coerce.number().int().positive().default(25 * 1024 * 1024),
   PHOTO_MAX_PIXELS: z.coerce.number().int().positive().default(60_000_000),
   WORKER_CONCURRENCY: z.coerce.number().int().min(1).max(32).default(1),
+  WEATHER_API_URL: z.url().optional(),
+  WEATHER_API_LICENCE: z.string().max(300).default(''),
   EMERGENCY_NUMBER: z.string().default('112'),
+  MAP_TILE_URL: z.url().refine((url) => ['{z}', '{x}', '{y}'].every((part) => decodeURIComponent(url).includes(part)), 'write {z}, {x} and {y} where the numbers of a tile belong').optional(),
+  MAP_TILE_ATTRIBUTION: z.string().default(''),
 });
 
 export type Environment = Readonly<z.infer<typeof environmentSchema>>;

@@ -1,3 +1,4 @@
+import { useEffect } from 'react';
 import type { ReactNode } from 'react';
 import { isRouteErrorResponse, Links, Meta, Outlet, Scripts, ScrollRestoration, useLocation, useRouteError, useRouteLoaderData } from 'react-router';
 import './app.css';
@@ -6,16 +7,21 @@ import { actorContext } from '#app/auth/actor-context.ts';
 import { sessionMiddleware } from '#app/auth/middleware.server.ts';
 import { AppHeader, PublicHeader } from '#app/components/layout/app-header.tsx';
 import { Page } from '#app/components/layout/page.tsx';
+import { forgetPerson } from '#app/components/report/forget-person.ts';
+import { MapTilesContext } from '#app/components/scene/map-tiles.ts';
 import { PageTitle } from '#app/components/ui/page-title.tsx';
 import { AppLink } from '#app/components/ui/app-link.tsx';
 import { homeFor, initialsOf, navigationFor, personLinksFor, rolesInWords } from '#app/domain/navigation.ts';
+import { env } from '#app/env.server.ts';
 
 export const middleware: Route.MiddlewareFunction[] = [sessionMiddleware];
 
 export function loader({ context }: Route.LoaderArgs) {
   const actor = context.get(actorContext);
-  if (!actor) return { person: null };
+  const tiles = env.MAP_TILE_URL ? { url: env.MAP_TILE_URL, attribution: env.MAP_TILE_ATTRIBUTION } : null;
+  if (!actor) return { person: null, tiles };
   return {
+    tiles,
     person: {
       name: actor.displayName,
       initials: initialsOf(actor.displayName),
@@ -28,7 +34,11 @@ export function loader({ context }: Route.LoaderArgs) {
   };
 }
 
-export const links: Route.LinksFunction = () => [{ rel: 'icon', href: '/favicon.svg', type: 'image/svg+xml' }];
+export const links: Route.LinksFunction = () => [
+  { rel: 'icon', href: '/favicon.svg', type: 'image/svg+xml' },
+  { rel: 'apple-touch-icon', href: '/icon-180.png' },
+  { rel: 'manifest', href: '/manifest.webmanifest' },
+];
 
 export const meta: Route.MetaFunction = () => [{ title: 'Scorchline' }];
 
@@ -39,6 +49,8 @@ export function Layout({ children }: { readonly children: ReactNode }) {
         <meta charSet="utf-8" />
         <meta name="viewport" content="width=device-width, initial-scale=1" />
         <meta name="color-scheme" content="light dark" />
+        <meta name="theme-color" content="#f6f1e7" media="(prefers-color-scheme: light)" />
+        <meta name="theme-color" content="#12181c" media="(prefers-color-scheme: dark)" />
         <Meta />
         <Links />
       </head>
@@ -57,7 +69,13 @@ const ownHead = /^\/(?:report|received)(?:\/|$)/u;
 function Head() {
   const data = useRouteLoaderData<typeof loader>('root');
   const { pathname } = useLocation();
-  if (ownHead.test(pathname)) return null;
+  const own = ownHead.test(pathname);
+  const signedOut = data?.person === null && !own;
+  useEffect(() => {
+    // Where storage is switched off, nothing is kept.
+    if (signedOut) forgetPerson().catch(() => undefined);
+  }, [signedOut]);
+  if (own) return null;
   const person = data?.person;
   if (!person) return <PublicHeader links={[{ href: '/report', label: 'Report' }, { href: '/how-we-compute', label: 'How we compute' }, { href: '/sign-in', label: 'Sign in' }]} />;
   const current = (href: string) => pathname === href || pathname.startsWith(`${href}/`);
@@ -73,12 +91,12 @@ function Head() {
   );
 }
 
-export default function Root() {
+export default function Root({ loaderData }: Route.ComponentProps) {
   return (
-    <>
+    <MapTilesContext value={loaderData.tiles}>
       <Head />
       <Outlet />
-    </>
+    </MapTilesContext>
   );
 }
 

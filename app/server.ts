@@ -23,6 +23,7 @@ function createApp(): Express {
   web.use(
     securityHeaders({
       photoOrigin: new URL(env.S3_ENDPOINT).origin,
+      tileUrl: env.MAP_TILE_URL ?? null,
       https: env.PUBLIC_URL.startsWith('https:'),
       development: import.meta.env.DEV,
     }),

@@ -1,10 +1,12 @@
 import { closeDatabase } from '#db/client.server.ts';
 import { preparePhotoJob } from '#app/jobs/definitions/prepare-photo.ts';
+import { runComputationJob } from '#app/jobs/definitions/run-computation.ts';
 import { runReconstructionJob } from '#app/jobs/definitions/run-reconstruction.ts';
 import { sendMailJob } from '#app/jobs/definitions/send-mail.ts';
 import { sendDueReminders } from '#app/jobs/handlers/due-reminders.server.ts';
 import { forgetExpired } from '#app/jobs/handlers/forget-expired.server.ts';
 import { preparePhoto } from '#app/jobs/handlers/prepare-photo.server.ts';
+import { runComputation } from '#app/jobs/handlers/run-computation.server.ts';
 import { runReconstruction } from '#app/jobs/handlers/run-reconstruction.server.ts';
 import { sendDueMail } from '#app/jobs/handlers/send-mail.server.ts';
 import { handle, stopQueue } from '#app/jobs/queue.server.ts';
@@ -34,6 +36,7 @@ function every(intervalMs: number, name: string, work: () => Promise<unknown>): 
 }
 
 await handle(runReconstructionJob, runReconstruction);
+await handle(runComputationJob, runComputation);
 await handle(preparePhotoJob, preparePhoto);
 await handle(sendMailJob, async () => {
   await sendDueMail();

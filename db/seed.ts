@@ -10,6 +10,7 @@ import { cases, organisations } from './schema/all.ts';
 import { seedCase } from './seed/cases.ts';
 import { seedPeopleAndSites } from './seed/people-and-sites.ts';
 import { seedReleases } from './seed/releases.ts';
+import { seedSitePlans } from './seed/site-plans.ts';
 
 /** Numbers of real cases start above those of the demonstration. */
 const firstFreeNumber = 201;
@@ -27,6 +28,7 @@ async function seed(): Promise<void> {
   const now = new Date();
   await inTransaction(async (tx) => {
     const places = await seedPeopleAndSites(tx);
+    await seedSitePlans(tx, places);
     const ids = new Map<number, string>();
     for (const [index, demo] of demoCases.entries()) {
       ids.set(demo.number, await seedCase(tx, demo, places, ids, now));

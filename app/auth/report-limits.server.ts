@@ -5,6 +5,8 @@ import { limitRate } from './rate-limit.server.ts';
 const limits = {
   look: { hits: 120, windowS: 600 },
   send: { hits: 60, windowS: 3_600 },
+  /** Asked while somebody types, after a pause. */
+  sun: { hits: 400, windowS: 600 },
   photo: { hits: 240, windowS: 3_600 },
 } as const;
 

@@ -34,6 +34,30 @@ export const exampleInput: ReconstructionInput = {
     transmittance: 0.837,
     transmittanceSource: 'clear 3 mm pane, normal incidence (row ep-ts-clear-3mm)',
   },
+  occluders: [
+    {
+      kind: 'opening',
+      name: 'window, 1.2 × 1.4 m, 0.3 m in front of the ball',
+      revealDepthM: 0.12,
+      corners: [
+        { eastM: -0.6706, northM: -0.0183, upM: -0.2 },
+        { eastM: 0.4171, northM: -0.5255, upM: -0.2 },
+        { eastM: 0.4171, northM: -0.5255, upM: 1.2 },
+        { eastM: -0.6706, northM: -0.0183, upM: 1.2 },
+      ],
+    },
+    {
+      kind: 'block',
+      name: 'transom, 60 mm',
+      corners: [
+        { eastM: -0.6706, northM: -0.0183, upM: 0.5 },
+        { eastM: 0.4171, northM: -0.5255, upM: 0.5 },
+        { eastM: 0.4171, northM: -0.5255, upM: 0.56 },
+        { eastM: -0.6706, northM: -0.0183, upM: 0.56 },
+      ],
+    },
+  ],
+  occluderSigmaM: 0.005,
   skyline: {
     points: [
       { azimuthDeg: 120, elevationDeg: 8, name: 'terrace roofs' },

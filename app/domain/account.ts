@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { makeTokenSchema, revokeTokenSchema } from './api-token.ts';
 import { roles } from './roles.ts';
 
 /** NIST SP 800-63B, 5.1.1.2, asks for eight or more and no rules of composition; we ask for twelve. */
@@ -30,6 +31,8 @@ export const accountSchema = z.discriminatedUnion('intent', [
   z.object({ intent: z.literal('change-password'), currentPassword: z.string().min(1, 'Type the password you use now.'), password: newPasswordField }),
   z.object({ intent: z.literal('change-units'), units: z.enum(['metric', 'us']) }),
   z.object({ intent: z.literal('sign-out-everywhere') }),
+  makeTokenSchema,
+  revokeTokenSchema,
 ]);
 
 /** A role and where it holds; an empty site stands for every site of the organisation. */

@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { climateClasses } from '#app/physics/model.ts';
-import type { Assumption } from '#app/physics/model.ts';
+import type { Assumption, ReconstructionResult } from '#app/physics/model.ts';
 import { settleSite } from '#app/physics/site.ts';
 import { absoluteAirMass, kastenYoungAirMass } from '#app/physics/sky/air-mass.ts';
 import { clearSkyAt, lowestClearSkyDeg } from '#app/physics/sky/clear-sky.ts';
@@ -10,6 +10,7 @@ import { angularDiameterDeg } from '#app/physics/sun/sun-disc.ts';
 import { roundTo } from '#app/physics/units.ts';
 import { reconstructionSchema } from './reconstruction-schema.ts';
 import type { InputProblem } from './reconstruction-schema.ts';
+import { reconstructionResultSchema } from './reconstruction-result-schema.ts';
 import { assumptionSchema } from './recurrence-request.ts';
 
 /**
@@ -121,6 +122,21 @@ function instantOf(utc: string): number {
   if (year < 1900 || year > 2100) throw new RangeError(`utc lies in the year ${year}; it must lie in 1900…2100.`);
   return Date.parse(utc);
 }
+
+/** Answer to a long run: where its result will be. */
+export const queuedAnswerSchema = z.object({ id: z.uuid(), state: z.literal('queued'), href: z.string().describe('Address of the run, as in `Location`') });
+
+export const computationAnswerSchema = z.object({
+  id: z.uuid(),
+  state: z.enum(['queued', 'running', 'done', 'failed']),
+  engineVersion: z.string(),
+  requestedUtc: z.string(),
+  finishedUtc: z.string().nullable(),
+  progress: z.object({ done: z.int(), total: z.int() }).describe('Steps; total is 0 until the run begins'),
+  failure: z.string().nullable().describe('What to mend, where the run failed'),
+  result: reconstructionResultSchema.nullable(),
+});
+export type ComputationAnswer = Omit<z.infer<typeof computationAnswerSchema>, 'result'> & { readonly result: ReconstructionResult | null };
 
 /** Query fields as a body would have them: what reads as a number becomes one; a field given twice is an array, and refused. */
 export function fromQuery(params: URLSearchParams): Record<string, string | number | readonly string[]> {

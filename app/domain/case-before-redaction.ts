@@ -1,5 +1,6 @@
 import type { CaseState } from './case-state.ts';
 import type { ActionState, ControlLevel } from './corrective-action.ts';
+import type { EvidenceKind, ExamKind, HolderRole } from './evidence.ts';
 import type { Certainty, Classification } from './finding.ts';
 import type { FourTests, HypothesisKind, HypothesisResult } from './hypothesis.ts';
 import type { EventType, Extent, FoundPrecision, OnsetBasis, PhotoView, siteUses, WeatherSeen, YesNoUnknown } from './incident.ts';
@@ -52,6 +53,15 @@ export interface CaseBeforeRedaction {
   /** Accounts of the organisation and whoever else the case names, whose names may stand in free text. */
   readonly staff: readonly { readonly name: string; readonly email: string | null }[];
   readonly injuries: readonly { readonly treatment: string }[];
+  readonly items: readonly ItemBeforeRedaction[];
+}
+
+/** An item of evidence: who held it by part in the matter; no name and no typed word of it is read here at all. */
+export interface ItemBeforeRedaction {
+  readonly label: number;
+  readonly kind: EvidenceKind;
+  readonly custody: readonly { readonly role: HolderRole; readonly from: string; readonly to: string | null }[];
+  readonly exams: readonly { readonly kind: ExamKind; readonly at: string; readonly noticeGiven: boolean }[];
 }
 
 export interface PhotoBeforeRedaction {

@@ -20,7 +20,7 @@ export interface MoveExtra {
 export type FieldSentences = Readonly<Record<string, readonly string[]>>;
 
 /** Moves that nobody may make without saying why. */
-const reasonNeeded: readonly string[] = ['mark-duplicate', 'straight-to-action', 'close-at-triage', 'back-to-investigation', 'reopen-investigation', 'reopen-action'];
+const reasonNeeded: readonly string[] = ['mark-duplicate', 'straight-to-action', 'close-at-triage', 'sign-no-action', 'close-no-action', 'pass-to-action', 'back-to-investigation', 'reopen-investigation', 'reopen-action'];
 
 /** Days within which a duplicate is undone without a reason. */
 export const duplicateUndoDays = 30;
@@ -90,6 +90,9 @@ const moveEvents: Readonly<Record<string, string>> = {
   'send-findings': 'case.findings-sent',
   'send-back': 'case.findings-sent-back',
   sign: 'case.findings-signed',
+  'sign-no-action': 'case.findings-signed-no-action',
+  'close-no-action': 'case.closed-no-action',
+  'pass-to-action': 'case.passed-to-action',
   close: 'case.closed',
   'back-to-investigation': 'case.investigation-resumed',
   'reopen-investigation': 'case.reopened',

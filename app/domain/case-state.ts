@@ -48,6 +48,8 @@ export interface MoveFacts {
   readonly actionsUnproven: number;
   readonly actionsNotEffective: number;
   readonly effectivenessWaiver: string | null;
+  /** Why the reviewer who signed sees nothing to be done; null where that was not said. */
+  readonly noActionReason: string | null;
   readonly lesson: string | null;
   readonly externalReports: string | null;
   readonly closedAt: Date | null;
@@ -126,6 +128,24 @@ function closeNeeds(facts: MoveFacts): string[] {
   ];
 }
 
+const signedNeeds = (facts: MoveFacts) => need(facts.finding?.state !== 'signed', 'A reviewer who is not the author signs the finding first.');
+const unsignedNeeds = (facts: MoveFacts) => need(facts.finding?.state === 'signed', 'The finding is signed already; close the case, pass it to action, or reopen it later.');
+
+function signNeeds(facts: MoveFacts): string[] {
+  return [...unsignedNeeds(facts), ...need(facts.openReviewComments > 0, 'Settle every open review comment, or send back.')];
+}
+
+/** The reviewer has said with the signature that nothing is to be done; the site manager, another person, agrees. */
+function noActionNeeds(facts: MoveFacts): string[] {
+  return [
+    ...signedNeeds(facts),
+    ...need(facts.noActionReason === null, 'The reviewer says with the signature that no action is needed, and why.'),
+    ...need(facts.openReviewComments > 0, 'Settle every open review comment.'),
+    ...need(facts.actionsOpen > 0, `No action may be open; ${facts.actionsOpen} still open.`),
+    ...need(facts.hazardStillPresent === 'yes', 'The hazard is still there: it needs an action, or a record that it is gone.'),
+  ];
+}
+
 /** Every move between states: who decides is in `permissions.ts`, what it needs is here. */
 export const moves: readonly Move[] = [
   { id: 'open-triage', from: 'reported', to: 'triage', label: 'Take a first look', action: 'case:triage', needs: nothing },
@@ -153,9 +173,12 @@ export const moves: readonly Move[] = [
     to: 'investigation',
     label: 'Send back with comments',
     action: 'finding:review',
-    needs: (facts) => need(facts.openReviewComments === 0, 'Write at least one comment on a field.'),
+    needs: (facts) => [...unsignedNeeds(facts), ...need(facts.openReviewComments === 0, 'Write at least one comment on a field.')],
   },
-  { id: 'sign', from: 'findings', to: 'corrective-action', label: 'Sign and pass to action', action: 'finding:review', needs: (facts) => need(facts.openReviewComments > 0, 'Settle every open review comment, or send back.') },
+  { id: 'sign', from: 'findings', to: 'corrective-action', label: 'Sign and pass to action', action: 'finding:review', needs: signNeeds },
+  { id: 'sign-no-action', from: 'findings', to: 'findings', label: 'Sign: no action needed', action: 'finding:review', needs: signNeeds },
+  { id: 'close-no-action', from: 'findings', to: 'closed', label: 'Close: no action needed', action: 'case:close-no-action', needs: noActionNeeds },
+  { id: 'pass-to-action', from: 'findings', to: 'corrective-action', label: 'Pass to action after all', action: 'case:pass-to-action', needs: signedNeeds },
   { id: 'close', from: 'corrective-action', to: 'closed', label: 'Close the case', action: 'case:close', needs: (facts) => [...correctiveNeeds(facts), ...closeNeeds(facts)] },
   { id: 'back-to-investigation', from: 'corrective-action', to: 'investigation', label: 'Back to investigation', action: 'case:reinvestigate', needs: nothing },
   { id: 'reopen-investigation', from: 'closed', to: 'investigation', label: 'Reopen the investigation', action: 'case:reopen', needs: nothing },

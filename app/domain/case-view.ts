@@ -1,3 +1,4 @@
+import type { FirstLookView } from './first-look.ts';
 import type { CardView } from './case-card.ts';
 import type { CaseState } from './case-state.ts';
 import type { SceneOpticKind } from './scene.ts';
@@ -37,6 +38,8 @@ export interface RegisterRowView {
   /** In place of a return: "not known yet", "see 123". */
   readonly returnWords: string;
   readonly waitsFor: string;
+  /** Clock of the first look, while nobody has looked. */
+  readonly firstLook: FirstLookView | null;
   readonly position: { readonly latitudeDeg: number; readonly longitudeDeg: number };
   /** Where the sun stood in the middle of the longest sunlit stretch, from true north clockwise; null without a run. */
   readonly sunAzimuthDeg: number | null;
@@ -47,7 +50,7 @@ export interface RegisterView {
   readonly rows: readonly RegisterRowView[];
   readonly total: number;
   readonly groupCounts: Readonly<Record<RegisterGroup, number>>;
-  readonly counts: { readonly all: number; readonly open: number; readonly late: number | null; readonly injury: number | null; readonly mine: number };
+  readonly counts: { readonly all: number; readonly open: number; readonly 'first-look': number; readonly late: number | null; readonly injury: number | null; readonly mine: number };
   readonly span: { readonly fromHour: number; readonly toHour: number };
 }
 
@@ -198,8 +201,10 @@ export interface CaseAccountView {
 
 export interface SimilarCaseView {
   readonly row: RegisterRowView;
-  /** "same site", "same kind of optic", "same time of year". */
+  /** "same site, 60 m off", "same kind of optic", "bearing to the mark alike, 187° and 190°". */
   readonly reasons: readonly string[];
+  /** From the place of this case, where both are at one site and were recorded apart. */
+  readonly offM: { readonly eastM: number; readonly northM: number } | null;
   readonly consequence: string | null;
   readonly likelihood: string | null;
 }
@@ -210,6 +215,8 @@ export interface WaitingCaseView {
   readonly place: string;
   readonly state: CaseState;
   readonly clockWords: string;
+  /** Null once somebody has looked. */
+  readonly firstLook: FirstLookView | null;
   readonly group: 'hazard' | 'first-look' | 'reporter';
 }
 
@@ -224,7 +231,18 @@ export interface SunOnItView {
   readonly mayWorkOut: boolean;
 }
 
+/** What the small plan of the first look is drawn from. */
+export interface WhereView {
+  /** Two decimals: enough for the reader, and not a door. */
+  readonly placeWords: string;
+  readonly accuracyM: number | null;
+  readonly sun: { readonly azimuthDeg: number; readonly elevationDeg: number };
+  readonly markBearingDeg: number | null;
+}
+
 export interface TriageView {
+  readonly where: WhereView;
+  readonly nowUtc: string;
   readonly version: number;
   readonly state: CaseState;
   readonly hazard: { readonly answer: string; readonly words: string };
@@ -243,4 +261,11 @@ export interface TriageView {
   readonly moves: CaseMovesView;
   readonly proposedAnswerDay: string;
   readonly hurtWords: string | null;
+}
+
+/** Heading of the reports that wait for a first look. */
+export function firstLookHeading(waiting: number, late: number): string {
+  if (waiting === 0) return 'Nothing waits for a first look';
+  const reports = `${countInWords(waiting)} ${waiting === 1 ? 'report waits' : 'reports wait'}`;
+  return late === 0 ? `${reports}, none late for a first look` : `${reports}, ${late === 1 ? 'one is' : `${countInWords(late).toLowerCase()} are`} late for a first look`;
 }

@@ -23,6 +23,8 @@ export interface WaitingFacts {
   readonly attachedRun: boolean;
   readonly answerDueAt: Date | null;
   readonly openComments: number;
+  /** The reviewer signed and said that no action is needed. */
+  readonly noActionSaid: boolean;
   readonly draftExists: boolean;
   readonly duplicateOfNumber: number | null;
   readonly closeReason: (typeof triageCloseReasons)[number] | null;
@@ -43,6 +45,7 @@ export function waitsFor(facts: WaitingFacts): string {
       if (!facts.attachedRun) return missingWords(facts) || 'A reconstruction';
       return facts.draftExists ? 'The finding, in draft' : 'A finding';
     case 'findings':
+      if (facts.noActionSaid) return 'The site manager: no action needed';
       return facts.openComments > 0 ? `Technical review, ${facts.openComments} open` : 'Technical review';
     case 'corrective-action':
       return actionWords(facts);

@@ -37,7 +37,7 @@ export const methodParts: readonly MethodPart[] = [
       'A measured series goes first, then one derived from measured global irradiance, then an hourly archive value. Where there is none, a clear sky is taken, with the median air of a climate class, after two models whose difference is shown.',
       'Beside the likely value stands the clean-air bound: no haze, little water, 5 % on top. Only the bound may refute; the likely value never does.',
     ],
-    holds: 'Sun 3° up or higher; below 6° the lower of the two models is taken as likely. No figure is given below 3°.',
+    holds: 'Sun 3° up or higher. From 10° down to 6°, where the models part, the likely value goes over without a step to the lower of the two. No figure is given below 3°.',
     tested: [
       { words: 'Both models agree with the printed and library values of their authors and users: Bird within 0.1 %, Ineichen and Perez within 0.01 %.', test: 'tests/handbook/sky.test.ts' },
       { words: 'The bound lies above every good minute of a measured cloudless day at 2317 m, and above two thirds of it is reached with the sun over 15°.', test: 'tests/handbook/sky.test.ts' },
@@ -55,11 +55,14 @@ export const methodParts: readonly MethodPart[] = [
     title: 'Where the focus fell, and how bright',
     model: [
       'The optic is traced with rays: refraction and reflection with polarisation, absorption by spectral band, surface error, a limb-darkened sun of finite size. Balls, bottles, bowls, lenses, mirrors, dishes, curved faces and panes, flat grooved lenses and water on domes are of one tracer. A closed form of each kind stands beside it as a quick estimate and as a check.',
+      'Openings, reveals, mullions and bars are given by their corners and stop rays one by one. The page says apart when any part of the optic lights the mark and when that light is focused there.',
       'Every flux names its disc (sun’s image, 1 mm, 5 mm), its centre (hot spot or surveyed mark) and its plane. A second answer is traced backwards from the target; where the two differ by more than their errors, that is said.',
     ],
     holds: 'The kinds of optic listed; shapes as measured. A run stops if energy or the limit of concentration is not kept.',
     tested: [
       { words: 'Spheres, lenses, mirrors, panes, bottles and bowls agree with rows of two independent ray tracers, within the tolerance of each row.', test: 'tests/handbook/trace-*.test.ts' },
+      { words: 'The share that a bar or a reveal stops is the area that geometry gives by hand, within 0.5 %.', test: 'tests/unit/physics/occluders.test.ts' },
+      { words: 'A flat pane 1 m wide lights a mark 6 m away for 38 minutes, as its width and the turn of the earth say.', test: 'tests/unit/physics/light-on-mark.test.ts' },
       { words: 'Closed forms against the same rows: within 5 % on axis for sphere, lens and mirror, 10 to 25 % off axis, 15 % for a bowed pane.', test: 'tests/handbook/optics-closed-form.test.ts' },
       { words: 'Limits of concentration, disc and image size, refractive indices and interface reflection against published figures.', test: 'tests/handbook/disc.test.ts, refractive-index.test.ts, fresnel.test.ts' },
     ],
@@ -111,12 +114,14 @@ export const methodParts: readonly MethodPart[] = [
     id: 'uncertainty',
     title: 'How sure the numbers are',
     model: [
-      'Bearing, elevation, distance, clock, focal length, air and glass are varied together by their ±, 4,096 times from a stated seed. Given are the 5th, 50th and 95th of a hundred, what moves the answer most, and how far the median still moves between the halves.',
+      'Bearing, elevation, distance, clock, focal length, surface, air, glass and target are varied together by their ±, 4,096 times from a stated seed. Every sample reads a table of traces made beforehand, over the place in the track (and with it the incidence), focal length, distance, and place in the target’s plane.',
+      'Given are the 5th, 50th and 95th of a hundred, the shares that align, pass a flux, or would ignite while the spot rests, what moves the answer most, and how far the median still moves from half of the samples to all.',
       'Equal input, seed and version give equal bytes. Input and result are kept with their hashes and never changed.',
     ],
     holds: 'The spread of what was entered. It knows nothing of what was entered wrongly.',
     tested: [
-      { words: 'Quantiles, seeds and repeats.', test: 'tests/unit/physics/uncertainty.test.ts, random.test.ts' },
+      { words: 'The table differs by less than 5 % from traces made at places between its nodes.', test: 'tests/unit/physics/trace-table.test.ts' },
+      { words: 'Quantiles, seeds and repeats.', test: 'tests/unit/physics/uncertainty.test.ts, sobol.test.ts, normal-quantile.test.ts' },
       { words: 'The worker’s thread gives the same hash as the engine called directly.', test: 'tests/db/reconstructions/life-of-a-run.test.ts' },
     ],
     sources: ['S. Joe and F. Y. Kuo, SIAM J. Sci. Comput. 30, 2008', 'J. Matoušek, J. Complexity 14, 1998'],

@@ -20,6 +20,11 @@ const investigationItems: readonly Item[] = [
   item((facts) => named('Risk if nothing is done', isRisk(facts.risk) ? riskLabels[facts.risk].toLowerCase() : null), (facts) => facts.risk !== null),
 ];
 
+const signedItem = item('The finding signed by a reviewer', (facts) => facts.finding?.state === 'signed');
+const unsignedItem = item('The finding not signed yet', (facts) => facts.finding?.state !== 'signed');
+const commentsItem = item((facts) => `Comments settled${facts.openReviewComments > 0 ? `, ${facts.openReviewComments} open` : ''}`, (facts) => facts.openReviewComments === 0);
+const signItems: readonly Item[] = [unsignedItem, commentsItem];
+
 const items: Readonly<Record<string, readonly Item[]>> = {
   accept: investigationItems,
   'reopen-investigation': investigationItems,
@@ -39,8 +44,17 @@ const items: Readonly<Record<string, readonly Item[]>> = {
     item('The opinion, in draft', (facts) => facts.finding !== null && facts.finding.state === 'draft' && facts.finding.opinion.trim() !== ''),
     item('The limits of the finding', (facts) => facts.finding === null || facts.finding.limits.trim() !== ''),
   ],
-  'send-back': [item('At least one comment on a field', (facts) => facts.openReviewComments > 0)],
-  sign: [item((facts) => `Comments settled${facts.openReviewComments > 0 ? `, ${facts.openReviewComments} open` : ''}`, (facts) => facts.openReviewComments === 0)],
+  'send-back': [unsignedItem, item('At least one comment on a field', (facts) => facts.openReviewComments > 0)],
+  sign: signItems,
+  'sign-no-action': signItems,
+  'close-no-action': [
+    signedItem,
+    item('The reviewer says that no action is needed, and why', (facts) => facts.noActionReason !== null),
+    commentsItem,
+    item((facts) => `No action open${facts.actionsOpen > 0 ? `, ${facts.actionsOpen} still` : ''}`, (facts) => facts.actionsOpen === 0),
+    item('The hazard gone, or not known to be there', (facts) => facts.hazardStillPresent !== 'yes'),
+  ],
+  'pass-to-action': [signedItem],
   close: [
     item('The finding signed', (facts) => facts.finding === null || facts.finding.state === 'signed'),
     item('Comments settled', (facts) => facts.openReviewComments === 0),

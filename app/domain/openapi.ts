@@ -1,6 +1,8 @@
 import { z } from 'zod';
 import { engineVersion } from '#app/physics/model.ts';
-import { clearSkyAnswerSchema, clearSkyQuerySchema, problemSchema, sunAnswerSchema, sunQuerySchema } from './api-contract.ts';
+import {
+  clearSkyAnswerSchema, clearSkyQuerySchema, computationAnswerSchema, problemSchema, queuedAnswerSchema, sunAnswerSchema, sunQuerySchema,
+} from './api-contract.ts';
 import { reconstructionResultSchema } from './reconstruction-result-schema.ts';
 import { reconstructionSchema } from './reconstruction-schema.ts';
 import { recurrenceAnswerSchema, recurrenceSchema } from './recurrence-request.ts';
@@ -14,6 +16,8 @@ interface Endpoint {
   readonly query?: z.ZodObject;
   readonly body?: z.ZodType;
   readonly answer: z.ZodType;
+  /** Answer of a long run, with `Location` naming its address. */
+  readonly later?: z.ZodType;
 }
 
 const endpoints: readonly Endpoint[] = [
@@ -34,9 +38,16 @@ const endpoints: readonly Endpoint[] = [
   {
     path: '/api/v1/reconstructions',
     summary: 'Reconstruct one incident',
-    description: 'The same input as `npm run reconstruct`. Computed at once, in 20 seconds at most; nothing is stored. Estimates from the values entered: not a certificate, legal cause, or proof that a place is safe.',
+    description: 'The same input as `npm run reconstruct`. A short run is computed at once and not stored. A long one, or one sent with `Prefer: respond-async`, is answered by 202 with the address of its result in `Location`; the same request sent again finds the same run. Estimates from the values entered: not a certificate, legal cause, or proof that a place is safe.',
     body: reconstructionSchema,
     answer: reconstructionResultSchema,
+    later: queuedAnswerSchema,
+  },
+  {
+    path: '/api/v1/reconstructions/{computationId}',
+    summary: 'State, progress and result of a long run',
+    description: 'Open to whoever asked for the run, for a week. `Retry-After` says when to ask again.',
+    answer: computationAnswerSchema,
   },
   {
     path: '/api/v1/recurrence',
@@ -48,8 +59,8 @@ const endpoints: readonly Endpoint[] = [
 ];
 
 const refusals = {
-  '401': 'Not signed in',
-  '403': 'Not open to the roles of this person',
+  '401': 'Not signed in, or the key has ended',
+  '403': 'Not open to the roles of this person, or to this key',
   '405': 'Another method is asked for',
   '413': 'The body is too long',
   '415': 'The body is not application/json',
@@ -72,14 +83,26 @@ function parametersOf(query: z.ZodObject) {
 }
 
 function operationOf(endpoint: Endpoint) {
+  const names = [...endpoint.path.matchAll(/\{(\w+)\}/gu)].map((match) => match[1]);
   const problem = (description: string) => ({ description, content: { 'application/problem+json': { schema: { $ref: '#/components/schemas/Problem' } } } });
   return {
     summary: endpoint.summary,
     description: endpoint.description,
     ...(endpoint.query ? { parameters: parametersOf(endpoint.query) } : {}),
+    ...(names.length > 0 ? { parameters: names.map((name) => ({ name, in: 'path', required: true, schema: { type: 'string', format: 'uuid' } })) } : {}),
     ...(endpoint.body ? { requestBody: { required: true, content: { 'application/json': { schema: schemaOf(endpoint.body, 'input') } } } } : {}),
     responses: {
       '200': { description: 'Computed', content: { 'application/json': { schema: schemaOf(endpoint.answer, 'output') } } },
+      ...(endpoint.later
+        ? {
+            '202': {
+              description: 'Queued; the result will be at `Location`',
+              headers: { Location: { schema: { type: 'string', format: 'uri-reference' } }, 'Retry-After': { description: 'Seconds', schema: { type: 'integer' } } },
+              content: { 'application/json': { schema: schemaOf(endpoint.later, 'output') } },
+            },
+          }
+        : {}),
+      ...(names.length > 0 ? { '404': problem('No such run of this person') } : {}),
       ...Object.fromEntries(Object.entries(refusals).map(([status, description]) => [status, problem(description)])),
     },
   };
@@ -94,10 +117,10 @@ export function openApiDocument() {
       version: engineVersion,
       description: 'Sun, sky and focused sunlight. Azimuths clockwise from true north, instants in UTC, names with their unit. Errors are problem details after RFC 9457.',
     },
-    security: [{ session: [] }],
+    security: [{ session: [] }, { key: [] }],
     paths: Object.fromEntries(endpoints.map((endpoint) => [endpoint.path, { [endpoint.body ? 'post' : 'get']: operationOf(endpoint) }])),
     components: {
-      securitySchemes: { session: { type: 'apiKey', in: 'cookie', name: 'scorchline_session', description: 'Set by signing in.' } },
+      securitySchemes: { session: { type: 'apiKey', in: 'cookie', name: 'scorchline_session', description: 'Set by signing in.' }, key: { type: 'http', scheme: 'bearer', description: 'A key made on the page “Your account”, to look up or to compute.' } },
       schemas: { Problem: schemaOf(problemSchema, 'output') },
     },
   };

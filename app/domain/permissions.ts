@@ -27,6 +27,9 @@ interface Rule {
 const beforeClose = ['reported', 'triage', 'returned', 'investigation', 'findings', 'corrective-action'] as const;
 const atWork = ['triage', 'investigation', 'findings', 'corrective-action'] as const;
 
+/** Items change hands and documents arrive after a case is closed too. */
+const workAndAfter = [...atWork, 'closed'] as const;
+
 export const caseRules = {
   'case:read': { roles: ['investigator', 'reviewer', 'manager', 'privacy-lead'], states: 'any', relations: ['reporter-of-case', 'owner-of-action', 'verifier-of-action'] },
   'case:read-personal': { roles: ['investigator', 'reviewer', 'manager', 'privacy-lead'], states: 'any', relations: ['reporter-of-case'] },
@@ -41,9 +44,19 @@ export const caseRules = {
   'case:edit-facts': { roles: ['investigator'], states: ['triage', 'investigation', 'corrective-action'] },
   'case:assign': { roles: ['investigator', 'manager'], states: atWork },
   'case:close': { roles: ['manager'], states: ['corrective-action'] },
+  'case:close-no-action': { roles: ['manager'], states: ['findings'], never: ['author-of-finding'] },
+  'case:pass-to-action': { roles: ['manager', 'reviewer'], states: ['findings'], never: ['author-of-finding'] },
   'case:reinvestigate': { roles: ['investigator', 'reviewer'], states: ['corrective-action'] },
   'case:reopen': { roles: ['reviewer', 'manager'], states: ['closed'] },
   'case:hold': { roles: ['privacy-lead', 'administrator'], states: 'any' },
+  'evidence:read': { roles: ['investigator', 'reviewer', 'manager', 'privacy-lead'], states: 'any' },
+  'evidence:write': { roles: ['investigator'], states: workAndAfter },
+  'attachment:read': { roles: ['investigator', 'reviewer', 'manager', 'privacy-lead'], states: 'any' },
+  'attachment:add': { roles: ['investigator', 'privacy-lead'], states: workAndAfter },
+  'witness:read': { roles: ['investigator', 'reviewer', 'manager', 'privacy-lead'], states: 'any' },
+  'witness:write': { roles: ['investigator'], states: atWork },
+  'timeline:read': { roles: ['investigator', 'reviewer', 'manager', 'privacy-lead'], states: 'any' },
+  'timeline:write': { roles: ['investigator'], states: atWork },
   'reconstruction:read': { roles: ['investigator', 'reviewer', 'manager', 'privacy-lead'], states: 'any' },
   'reconstruction:run': { roles: ['investigator', 'reviewer'], states: atWork },
   'reconstruction:attach': { roles: ['investigator'], states: ['triage', 'investigation', 'corrective-action'] },

@@ -1,6 +1,7 @@
 import type { PhotoView } from './incident.ts';
 import { photoViewLabels } from './incident.ts';
 import { formatDayClock, formatOffset } from './local-time.ts';
+import type { PhotoMark } from './photo-marks.ts';
 import type { PhotoExif, PhotoExifAnswer, PhotoMask } from './photo.ts';
 import { exifInstant, minutesFromFinding } from './photo.ts';
 
@@ -20,7 +21,10 @@ export interface PhotoFacts {
   readonly clockErrorS: number;
   readonly exif: PhotoExif;
   readonly exifAnswer: PhotoExifAnswer;
+  /** Made smaller on the device that sent it: not the camera's own file. */
+  readonly madeSmaller: boolean;
   readonly masks: readonly PhotoMask[];
+  readonly marks: readonly PhotoMark[];
   readonly releasable: 'undecided' | 'yes' | 'no';
   readonly hashCheck: 'same' | 'differs' | 'missing' | null;
   readonly hashCheckedAt: Date | null;
@@ -60,7 +64,10 @@ export interface PhotoCard {
   readonly hashCheck: PhotoFacts['hashCheck'];
   readonly hashWords: string;
   readonly sizeWords: string;
+  readonly widthPx: number;
+  readonly heightPx: number;
   readonly masks: readonly PhotoMask[];
+  readonly marks: readonly PhotoMark[];
   readonly releasable: PhotoFacts['releasable'];
 }
 
@@ -84,8 +91,11 @@ export function photoCard(photo: PhotoFacts, about: PhotoCaseFacts): PhotoCard {
     sha256: photo.sha256,
     hashCheck: photo.hashCheck,
     hashWords: hashWords(photo, about.zone),
-    sizeWords: `${photo.widthPx} by ${photo.heightPx} px, ${photo.bytes < 1_000_000 ? `${Math.ceil(photo.bytes / 1000)} kB` : `${(photo.bytes / 1_000_000).toFixed(1)} MB`}`,
+    sizeWords: `${photo.widthPx} by ${photo.heightPx} px, ${photo.bytes < 1_000_000 ? `${Math.ceil(photo.bytes / 1000)} kB` : `${(photo.bytes / 1_000_000).toFixed(1)} MB`}${photo.madeSmaller ? ', made smaller on the phone before it was sent' : ''}`,
     masks: photo.masks,
+    marks: photo.marks,
+    widthPx: photo.widthPx,
+    heightPx: photo.heightPx,
     releasable: photo.releasable,
   };
 }
@@ -109,7 +119,8 @@ function spanWords(seconds: number): string {
   return `${Math.round(seconds / 86_400)} days`;
 }
 
-function offersOf(photo: PhotoFacts, zone: string): PhotoOffer[] {
+/** What a file offers, in words; its own clock reading is repeated as it stands. */
+export function offersOf(photo: Pick<PhotoFacts, 'exif' | 'exifAnswer'>, zone: string): PhotoOffer[] {
   const offers: PhotoOffer[] = [];
   const instant = exifInstant(photo.exif, zone);
   if (instant && photo.exif.takenAtLocal) {
@@ -132,7 +143,7 @@ function placeWords(exif: PhotoExif): string | null {
   return [position, direction].filter(Boolean).join('; ') || null;
 }
 
-function differenceWords(photo: PhotoFacts, about: PhotoCaseFacts): string | null {
+export function differenceWords(photo: Pick<PhotoFacts, 'takenAt' | 'clockErrorS'>, about: PhotoCaseFacts): string | null {
   const minutes = minutesFromFinding(photo, about);
   if (minutes === null || !about.foundAt) return null;
   return `Taken ${spanWords(Math.abs(minutes) * 60)} ${minutes > 0 ? 'after' : 'before'} the stated finding, ${formatDayClock(about.foundAt, about.zone)}. Check the camera's clock, or the finding.`;

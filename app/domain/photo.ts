@@ -3,9 +3,12 @@ import { photoViews, plainText } from './incident.ts';
 import { fromLocalInput } from './local-time.ts';
 
 /** Picture formats that are read here. Everything else is refused with a sentence. */
-export const photoMimes = ['image/jpeg', 'image/png', 'image/webp'] as const;
+export const photoMimes = ['image/jpeg', 'image/png', 'image/webp', 'image/heic'] as const;
 export type PhotoMime = (typeof photoMimes)[number];
-export const photoExtension: Record<PhotoMime, string> = { 'image/jpeg': 'jpg', 'image/png': 'png', 'image/webp': 'webp' };
+export const photoExtension: Record<PhotoMime, string> = { 'image/jpeg': 'jpg', 'image/png': 'png', 'image/webp': 'webp', 'image/heic': 'heic' };
+export const isPhotoMime = (text: string | null): text is PhotoMime => photoMimes.some((mime) => mime === text);
+/** For file fields: some systems know HEIC by its ending only. */
+export const photoFileTypes = [...photoMimes, 'image/heif', '.heic', '.heif'].join(',');
 
 /** Photographs one report may hold. Our own bound, far above what a report needs. */
 export const photosPerReport = 40;
@@ -20,6 +23,8 @@ export interface PhotoExif {
   readonly directionDeg: number | null;
   readonly directionReference: 'true' | 'magnetic' | null;
   readonly camera: string | null;
+  /** What the device gave as the error of its place. [m] Missing in rows from before it was read. */
+  readonly accuracyM?: number | null;
 }
 
 /** Which offers the person took. */
@@ -39,7 +44,7 @@ export interface PhotoMask {
   readonly class: 'personal' | 'exact-place';
 }
 
-type KnownContent = PhotoMime | 'heic' | 'avif' | 'gif' | 'tiff' | 'bmp' | 'pdf' | 'video';
+type KnownContent = PhotoMime | 'avif' | 'gif' | 'tiff' | 'bmp' | 'pdf' | 'video';
 
 const startsWith = (bytes: Uint8Array, wanted: readonly number[], at = 0) => wanted.every((byte, index) => bytes[at + index] === byte);
 const letters = (bytes: Uint8Array, at: number, length: number) => String.fromCharCode(...bytes.subarray(at, at + length));
@@ -54,15 +59,22 @@ export function contentOf(bytes: Uint8Array): KnownContent | null {
   if (startsWith(bytes, [0x89, 0x50, 0x4e, 0x47, 0x0d, 0x0a, 0x1a, 0x0a])) return 'image/png';
   if (letters(bytes, 0, 4) === 'RIFF' && letters(bytes, 8, 4) === 'WEBP') return 'image/webp';
   if (letters(bytes, 4, 4) === 'ftyp') {
-    const brand = letters(bytes, 8, 4);
-    if (['heic', 'heix', 'hevc', 'hevx', 'heim', 'heis', 'mif1', 'msf1'].includes(brand)) return 'heic';
-    return brand === 'avif' || brand === 'avis' ? 'avif' : 'video';
+    return contentOfBrands(bytes);
   }
   if (letters(bytes, 0, 4) === 'GIF8') return 'gif';
   if (letters(bytes, 0, 4) === 'II*\0' || letters(bytes, 0, 4) === 'MM\0*') return 'tiff';
   if (letters(bytes, 0, 2) === 'BM') return 'bmp';
   if (letters(bytes, 0, 5) === '%PDF-') return 'pdf';
   return null;
+}
+
+/** Main brand and the brands it goes with: a picture of the general brand `mif1` says there what it is coded in. */
+function contentOfBrands(bytes: Uint8Array): KnownContent {
+  const brand = letters(bytes, 8, 4);
+  const boxEnd = Math.min(new DataView(bytes.buffer, bytes.byteOffset, bytes.byteLength).getUint32(0), bytes.byteLength, 256);
+  const others = letters(bytes, 16, Math.max(0, boxEnd - 16));
+  if (['avif', 'avis'].includes(brand) || (brand === 'mif1' && /avif|avis/u.test(others))) return 'avif';
+  return ['heic', 'heix', 'hevc', 'hevx', 'heim', 'heis', 'mif1', 'msf1'].includes(brand) ? 'image/heic' : 'video';
 }
 
 const nameLength = 80;
@@ -91,11 +103,9 @@ export const photoRefusal = {
   tooMany: (name: string) => `“${name}” was not taken: a report holds at most ${photosPerReport} photos.`,
   notStored: (name: string) => `“${name}” could not be stored. Nothing is wrong with the photo: try it again in a minute.`,
   otherKind: (name: string, content: Exclude<KnownContent, PhotoMime> | null) => {
-    if (content === 'heic' || content === 'avif') {
-      return `“${name}” is in the ${content.toUpperCase()} format, which is not read here. Set the camera to “most compatible” (JPEG), or share the photo as JPEG.`;
-    }
-    if (content === 'video') return `“${name}” is a film. Send single pictures as JPEG, PNG or WebP.`;
-    return `“${name}” is not a JPEG, PNG or WebP picture, whatever its name says. Choose another file.`;
+    if (content === 'avif') return `“${name}” is in the AVIF format, which is not read here. Share the photo as JPEG.`;
+    if (content === 'video') return `“${name}” is a film. Send single pictures as JPEG, PNG, WebP or HEIC.`;
+    return `“${name}” is not a JPEG, PNG, WebP or HEIC picture, whatever its name says. Choose another file.`;
   },
 } as const;
 
@@ -118,6 +128,9 @@ export function exifInstant(exif: ExifTime, zone: string): Date | null {
   const reading = fromLocalInput(exif.takenAtLocal, zone);
   return reading.kind === 'instant' ? reading.instant : null;
 }
+
+/** The time of the file, where the person took it; null otherwise. */
+export const acceptedTime = (photo: { readonly exif: ExifTime; readonly exifAnswer: Pick<PhotoExifAnswer, 'time'> }, zone: string): Date | null => (photo.exifAnswer.time === 'accepted' ? exifInstant(photo.exif, zone) : null);
 
 /** Photo and stated finding further apart than this are pointed out to the reader. Our own bound. */
 export const timeDifferenceToSayMs = 30 * 60_000;
@@ -152,6 +165,13 @@ export const maskSchema = z
 const photoId = z.uuid('Choose a photo of this case.');
 const dayS = 86_400;
 
+/** How far a camera's clock was ahead of true time; negative: behind. [s] */
+export const clockErrorSchema = z.coerce
+  .number('Write whole seconds, such as 42 or -15.')
+  .int('Write whole seconds.')
+  .min(-366 * dayS, 'More than a year cannot be a clock error.')
+  .max(366 * dayS, 'More than a year cannot be a clock error.');
+
 /** What may be done to one photo on the photo sheet. */
 export const photoFormSchema = z.discriminatedUnion('intent', [
   z.object({
@@ -160,7 +180,7 @@ export const photoFormSchema = z.discriminatedUnion('intent', [
     view: z.union([z.enum(photoViews), z.literal('').transform(() => null)]),
     caption: plainText(300),
     altText: plainText(500),
-    clockErrorS: z.coerce.number('Write whole seconds, such as 42 or -15.').int('Write whole seconds.').min(-366 * dayS, 'More than a year cannot be a clock error.').max(366 * dayS, 'More than a year cannot be a clock error.'),
+    clockErrorS: clockErrorSchema,
   }),
   z.object({ intent: z.literal('answer-offer'), photoId, offer: z.enum(['time', 'place']), answer: z.enum(['accepted', 'declined']) }),
   z.object({ intent: z.literal('add-mask'), photoId }),

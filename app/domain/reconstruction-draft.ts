@@ -2,6 +2,7 @@ import { reconstructionInput } from './reconstruction-input.ts';
 import type { SceneSite, SceneTimes } from './reconstruction-input.ts';
 import { sceneSchema } from './scene.ts';
 import type { Scene } from './scene.ts';
+import type { WeatherSeries } from './weather.ts';
 
 /** What is recorded of a case, as far as a reconstruction needs it. */
 export interface DraftSource {
@@ -9,6 +10,7 @@ export interface DraftSource {
   readonly scene: Scene | null;
   readonly site: SceneSite;
   readonly times: SceneTimes;
+  readonly weather?: readonly WeatherSeries[];
 }
 
 /** The calendar of return runs from the onset to thirteen months from now, and is cut at five years. */
@@ -24,6 +26,7 @@ export function draftInput(source: DraftSource, now: Date) {
     scene: source.scene ?? sceneSchema.parse({}),
     site: source.site,
     times: source.times,
+    weather: source.weather,
     seed: source.caseNumber,
     // Whole days, so that two requests on one day ask for the same and hash alike.
     recurrenceToUtc: new Date(Math.floor(to / dayMs) * dayMs).toISOString(),

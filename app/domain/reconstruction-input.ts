@@ -3,8 +3,12 @@ import { openingTransmittance } from './optic-class-values.ts';
 import { formatDayClock } from './local-time.ts';
 import { measureMethodLabels, targetMaterialLabels } from './scene.ts';
 import type { Measured, Scene, SceneSkyline } from './scene.ts';
+import { withRadius } from './sagitta.ts';
+import { sceneOccluders } from './scene-occluders.ts';
 import { readOptic } from './scene-optic.ts';
 import type { InputOrigin } from './scene-optic.ts';
+import { chooseWeather } from './weather-choice.ts';
+import type { WeatherSeries } from './weather.ts';
 
 export interface SceneSite {
   readonly latitudeDeg: number;
@@ -62,6 +66,19 @@ function windowOf(times: SceneTimes, zone: string, origins: InputOrigin[], missi
   return { startUtc: wholeMinute(start), endUtc: wholeMinute(end), clockSigmaS: clockSigmaS[times.foundPrecision] ?? 3600 };
 }
 
+/** The window of a run by these times; null while they name none. */
+export const reconstructionWindow = (times: SceneTimes, zone: string) => windowOf(times, zone, [], []);
+
+export interface InputSource {
+  readonly scene: Scene;
+  readonly site: SceneSite;
+  readonly times: SceneTimes;
+  /** Weather records that stand; left out where none are kept. */
+  readonly weather?: readonly WeatherSeries[] | undefined;
+  readonly seed: number;
+  readonly recurrenceToUtc: string;
+}
+
 const movedWords = { yes: 'yes', no: 'no', 'dont-know': 'not known' } as const;
 const movedNotes = { yes: 'the pose is that of the day it was measured', no: '', 'dont-know': 'taken as not moved' } as const;
 
@@ -87,6 +104,11 @@ function markOf(scene: Scene, origins: InputOrigin[], missing: string[]): MarkIn
   note(origins, 'Mark, bearing', mark.bearingDeg, '° true');
   note(origins, 'Mark, elevation', mark.elevationDeg, '°');
   note(origins, 'Mark, distance', mark.distanceMm, 'mm');
+  if (mark.lengthMm) note(origins, 'Mark, length', mark.lengthMm, 'mm');
+  if (mark.widthMm) note(origins, 'Mark, width', mark.widthMm, 'mm');
+  if (mark.trailHeadingDeg) note(origins, 'Trail runs to', mark.trailHeadingDeg, '° true');
+  if (mark.surfaceAzimuthDeg) note(origins, 'Surface of the target faces', mark.surfaceAzimuthDeg, '° true');
+  if (mark.surfaceElevationDeg) note(origins, 'Surface of the target, above level', mark.surfaceElevationDeg, '°');
   return {
     bearingDeg: mark.bearingDeg.value % 360,
     bearingSigmaDeg: sigma(mark.bearingDeg, { measured: 1, rough: 8 }),
@@ -119,6 +141,12 @@ function openingOf(scene: Scene, origins: InputOrigin[]): OpeningInput | undefin
   };
 }
 
+function occludersOf(scene: Scene, origins: InputOrigin[]): ReturnType<typeof sceneOccluders> {
+  const occluders = sceneOccluders(scene);
+  for (const one of occluders) origins.push({ field: one.kind === 'opening' ? 'Outline of the opening' : `Wall, ${one.name ?? ''}`, value: `${one.corners.length} corners`, origin: 'measured', note: 'light is tested against it ray by ray', verified: true });
+  return occluders;
+}
+
 function skylineOf(scene: Scene, site: SceneSite, origins: InputOrigin[], missing: string[]): SkylineInput | undefined {
   const skyline = scene.skyline ?? site.skyline;
   if (!skyline || skyline.points.length === 0) {
@@ -132,15 +160,29 @@ function skylineOf(scene: Scene, site: SceneSite, origins: InputOrigin[], missin
   };
 }
 
-function skyOf(scene: Scene, origins: InputOrigin[]): SkyInput {
-  const { air } = scene;
+type DniSeries = NonNullable<SkyInput['dniSeries']>;
+const dniRank: Record<DniSeries['basis'], number> = { measured: 1, derived: 2, 'hourly-archive': 3 };
+
+/** The irradiance a run goes by: the best weather record, unless the scene itself holds a series of a better kind. */
+function dniOf({ scene, site, weather }: InputSource, window: ReconstructionInput['window'] | null): { readonly series: DniSeries; readonly note: string; readonly origin: 'measured' | 'file' } | null {
+  const chosen = window && weather ? chooseWeather(weather, window, site) : null;
+  const { dni } = scene.air;
+  if (dni && (!chosen || dniRank[dni.basis] < dniRank[chosen.series.basis])) {
+    return { series: { basis: dni.basis, source: dni.source, values: dni.values, ...(dni.stationDistanceKm === undefined ? {} : { stationDistanceKm: dni.stationDistanceKm }) }, note: dni.source, origin: 'measured' };
+  }
+  return chosen ? { series: chosen.series, note: [`weather record ${chosen.number}: ${chosen.series.source}`, chosen.caution].filter(Boolean).join('. '), origin: weather?.find((record) => record.number === chosen.number)?.kind === 'hand' ? 'measured' : 'file' } : null;
+}
+
+function skyOf(source: InputSource, window: ReconstructionInput['window'] | null, origins: InputOrigin[]): SkyInput {
+  const { air } = source.scene;
+  const dni = dniOf(source, window);
   origins.push({ field: 'Air class', value: air.climateClass.replaceAll('-', ' '), origin: 'assumed', note: 'median of a climate class, not of the day', verified: true });
-  if (air.dni) origins.push({ field: 'Direct irradiance', value: `${air.dni.values.length} values`, origin: 'measured', note: air.dni.source, verified: true });
+  if (dni) origins.push({ field: 'Direct irradiance', value: `${dni.series.values.length} values`, origin: dni.origin, note: dni.note, verified: true });
   return {
     climateClass: air.climateClass,
     ...(air.pressureHpa === undefined ? {} : { pressureHpa: air.pressureHpa }),
     ...(air.temperatureC === undefined ? {} : { temperatureC: air.temperatureC }),
-    ...(air.dni ? { dniSeries: { basis: air.dni.basis, source: air.dni.source, values: air.dni.values, ...(air.dni.stationDistanceKm === undefined ? {} : { stationDistanceKm: air.dni.stationDistanceKm }) } } : {}),
+    ...(dni ? { dniSeries: dni.series } : {}),
   };
 }
 
@@ -160,18 +202,21 @@ function targetOf(scene: Scene, origins: InputOrigin[], missing: string[]): Targ
  * @returns An input even without optic or mark: sun, sky and daylight are still computed. `input` is null only when no
  *   time at all is known.
  */
-export function reconstructionInput(source: { scene: Scene; site: SceneSite; times: SceneTimes; seed: number; recurrenceToUtc: string }): ReconstructionRequest | { input: null; origins: readonly InputOrigin[]; missing: readonly string[] } {
+export function reconstructionInput(source: InputSource): ReconstructionRequest | { input: null; origins: readonly InputOrigin[]; missing: readonly string[] } {
   const { scene, site, times } = source;
   const origins: InputOrigin[] = [];
   const missing: string[] = [];
+  // Two decimals: enough for the reader, and not a door.
+  origins.push({ field: 'Place', value: `${site.latitudeDeg.toFixed(2)}, ${site.longitudeDeg.toFixed(2)}, ${Math.round(site.elevationM)} m above sea`, origin: 'reported', note: `pin of the report, or the site where it has none; clock of ${site.zone.replaceAll('_', ' ')}`, verified: true });
   const window = windowOf(times, site.zone, origins, missing);
-  const reading = readOptic(scene.optic);
+  const reading = readOptic(withRadius(scene.optic));
   missing.push(...reading.missing);
   const mark = markOf(scene, origins, missing);
   const opening = openingOf(scene, origins);
+  const occluders = occludersOf(scene, origins);
   const skyline = skylineOf(scene, site, origins, missing);
   const target = targetOf(scene, origins, missing);
-  const sky = skyOf(scene, origins);
+  const sky = skyOf(source, window, origins);
   const height = scene.optic.heightAboveGroundM;
   if (height) note(origins, 'Height above the ground', height, 'm');
   if (scene.optic.kind !== 'dont-know') origins.push({ field: 'Moved since', value: movedWords[scene.optic.movedSince], origin: 'reported', note: movedNotes[scene.optic.movedSince], verified: true });
@@ -187,6 +232,7 @@ export function reconstructionInput(source: { scene: Scene; site: SceneSite; tim
       recurrenceFromUtc: window.startUtc,
       recurrenceToUtc: source.recurrenceToUtc,
       ...(opening ? { opening } : {}),
+      ...(occluders.length > 0 ? { occluders } : {}),
       ...(skyline ? { skyline } : {}),
       ...(reading.optic ? { optic: reading.optic, opticSigmaRel: reading.sigmaRel } : {}),
       ...(mark ? { mark } : {}),

@@ -33,7 +33,7 @@ const best = z.object({
 
 const centre = z.enum(['hot spot', 'mark']);
 const traced = z.object({
-  rays: z.int(), transmittedFraction: z.number(), r50Mm: z.number(), r80Mm: z.number(), hotSpotOffsetMm: number, stdError: z.number(), closedForm: z.number(),
+  rays: z.int(), blockedFraction: z.number().optional(), transmittedFraction: z.number(), r50Mm: z.number(), r80Mm: z.number(), hotSpotOffsetMm: number, stdError: z.number(), closedForm: z.number(),
   backTraced: z.object({ centre, concentration: z.number(), stdError: z.number(), forward: z.number(), agrees: z.boolean() }).nullable(),
   bestPlanes: z.array(z.object({ disc: z.string(), distanceM: z.number(), concentration: z.number() })),
   map: z.object({ cells: z.int(), sizeMm: z.number(), suns: z.array(z.number()) }).nullable(),
@@ -66,9 +66,17 @@ const margin = z.object({ value: z.number(), low: z.number(), high: z.number(), 
 const sampling = z.object({
   samples: z.int(), alignedShare: z.number(), missLateralMm: band, fluxKwm2: band,
   fluxOver: z.array(z.object({ thresholdKwm2: z.number(), share: z.number() })),
+  ignitedWithinDwellShare: number.optional(),
   convergenceKwm2: z.number(),
+  halfSampleMedianKwm2: z.number().optional(),
+  table: z
+    .object({ traces: z.int(), raysEach: z.int(), axes: z.array(z.object({ axis: z.string(), unit: z.string(), nodes: z.array(z.number()) })) })
+    .nullable()
+    .optional(),
   tornado: z.array(z.object({ input: z.string(), lowKwm2: z.number(), highKwm2: z.number() })),
 });
+
+const interval = z.object({ fromUtc: z.string(), toUtc: z.string(), minutes: z.int(), greatestSuns: z.number() });
 
 export const reconstructionResultSchema = z.object({
   engineVersion: z.string(),
@@ -78,6 +86,7 @@ export const reconstructionResultSchema = z.object({
   minutes: z.array(minute),
   runs: z.array(run),
   totals: z.object({ sunlit: z.int(), notSunlit: z.int(), cannotTell: z.int() }),
+  light: z.object({ lit: z.array(interval), focused: z.array(interval), litFromSuns: z.number(), focusedFromSuns: z.number() }).nullable().optional(),
   best: best.nullable(),
   focus: focus.nullable(),
   heating: heating.nullable(),

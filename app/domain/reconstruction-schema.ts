@@ -1,6 +1,8 @@
 import { z } from 'zod';
 import { targetMaterials } from '#app/physics/heating/target-materials.data.ts';
+import { inputRanges as ranges } from '#app/physics/input-ranges.ts';
 import { climateClasses, type ReconstructionInput } from '#app/physics/model.ts';
+import { numberIn } from './ranged-number.ts';
 import { opticSchema } from './optic-schema.ts';
 
 /**
@@ -10,93 +12,101 @@ import { opticSchema } from './optic-schema.ts';
  */
 
 const instant = z.iso.datetime({ offset: true });
-const azimuth = z.number().min(0).max(360);
-const elevation = z.number().min(-90).max(90);
-const sigmaDeg = z.number().min(0).max(90);
 
 const placeSchema = z.strictObject({
-  latitudeDeg: z.number().min(-90).max(90),
-  longitudeDeg: z.number().min(-180).max(180),
-  elevationM: z.number().min(-500).max(9000),
-  heightAboveGroundM: z.number().min(0).max(1000),
+  latitudeDeg: numberIn(ranges.place.latitudeDeg),
+  longitudeDeg: numberIn(ranges.place.longitudeDeg),
+  elevationM: numberIn(ranges.place.elevationM),
+  heightAboveGroundM: numberIn(ranges.place.heightAboveGroundM),
   zone: z.string().min(1).max(80),
 });
 
 const windowSchema = z.strictObject({
   startUtc: instant,
   endUtc: instant,
-  clockSigmaS: z.number().min(0).max(86_400),
+  clockSigmaS: numberIn(ranges.window.clockSigmaS),
 });
 
 const dniSeriesSchema = z.strictObject({
   basis: z.enum(['measured', 'derived', 'hourly-archive']),
   source: z.string().min(1).max(400),
-  stationDistanceKm: z.number().min(0).max(20_000).optional(),
+  stationDistanceKm: numberIn(ranges.dniSeries.stationDistanceKm).optional(),
   values: z
-    .array(z.strictObject({ startUtc: instant, endUtc: instant, dniWm2: z.number().min(0).max(1500) }))
+    .array(z.strictObject({ startUtc: instant, endUtc: instant, dniWm2: numberIn(ranges.dniValue.dniWm2) }))
     .max(50_000),
 });
 
 const skySchema = z.strictObject({
   climateClass: z.enum(climateClasses),
-  pressureHpa: z.number().min(300).max(1100).optional(),
-  temperatureC: z.number().min(-90).max(60).optional(),
-  ozoneCm: z.number().min(0).max(1).optional(),
-  waterCm: z.number().min(0).max(10).optional(),
-  aod500: z.number().min(0).max(5).optional(),
-  aod380: z.number().min(0).max(5).optional(),
-  solarConstantWm2: z.number().min(1300).max(1400).optional(),
-  circumsolarRatio: z.number().min(0).max(0.5).optional(),
+  pressureHpa: numberIn(ranges.sky.pressureHpa).optional(),
+  temperatureC: numberIn(ranges.sky.temperatureC).optional(),
+  ozoneCm: numberIn(ranges.sky.ozoneCm).optional(),
+  waterCm: numberIn(ranges.sky.waterCm).optional(),
+  aod500: numberIn(ranges.sky.aod500).optional(),
+  aod380: numberIn(ranges.sky.aod380).optional(),
+  solarConstantWm2: numberIn(ranges.sky.solarConstantWm2).optional(),
+  circumsolarRatio: numberIn(ranges.sky.circumsolarRatio).optional(),
   dniSeries: dniSeriesSchema.optional(),
 });
 
 const openingSchema = z.strictObject({
-  azimuthDeg: azimuth,
-  azimuthSigmaDeg: sigmaDeg,
-  halfWidthDeg: z.number().min(0).max(90),
-  lowestElevationDeg: elevation.optional(),
-  highestElevationDeg: elevation.optional(),
-  transmittance: z.number().min(0).max(1),
+  azimuthDeg: numberIn(ranges.opening.azimuthDeg),
+  azimuthSigmaDeg: numberIn(ranges.opening.azimuthSigmaDeg),
+  halfWidthDeg: numberIn(ranges.opening.halfWidthDeg),
+  lowestElevationDeg: numberIn(ranges.opening.lowestElevationDeg).optional(),
+  highestElevationDeg: numberIn(ranges.opening.highestElevationDeg).optional(),
+  transmittance: numberIn(ranges.opening.transmittance),
   transmittanceSource: z.string().max(400),
+});
+
+const occluderSchema = z.strictObject({
+  kind: z.enum(['block', 'opening']).describe('A block stops the rays that meet it; an opening stops the rays that miss every opening of its plane'),
+  name: z.string().max(120).optional(),
+  corners: z
+    .array(z.strictObject({ eastM: numberIn(ranges.corner.eastM), northM: numberIn(ranges.corner.northM), upM: numberIn(ranges.corner.upM) }))
+    .min(3)
+    .max(64)
+    .describe('In order, in one plane within 1 mm, from the optic’s origin'),
+  revealDepthM: numberIn(ranges.occluder.revealDepthM).optional().describe('Openings only: depth of the reveal outward of the outline'),
 });
 
 const skylineSchema = z.strictObject({
   points: z
-    .array(z.strictObject({ azimuthDeg: azimuth, elevationDeg: z.number().min(-30).max(90), name: z.string().max(120).optional() }))
+    .array(z.strictObject({ azimuthDeg: numberIn(ranges.skylinePoint.azimuthDeg), elevationDeg: numberIn(ranges.skylinePoint.elevationDeg), name: z.string().max(120).optional() }))
     .max(2000),
-  sigmaDeg,
+  sigmaDeg: numberIn(ranges.skyline.sigmaDeg),
 });
 
 const markSchema = z.strictObject({
-  bearingDeg: azimuth,
-  bearingSigmaDeg: sigmaDeg,
-  elevationDeg: elevation,
-  elevationSigmaDeg: sigmaDeg,
-  distanceM: z.number().min(0.001).max(1000),
-  distanceSigmaM: z.number().min(0).max(1000),
-  lengthMm: z.number().min(0).max(1_000_000).optional(),
-  widthMm: z.number().min(0).max(1_000_000).optional(),
-  trailHeadingDeg: azimuth.optional(),
-  normalAzimuthDeg: azimuth.optional(),
-  normalElevationDeg: elevation.optional(),
+  bearingDeg: numberIn(ranges.mark.bearingDeg),
+  bearingSigmaDeg: numberIn(ranges.mark.bearingSigmaDeg),
+  elevationDeg: numberIn(ranges.mark.elevationDeg),
+  elevationSigmaDeg: numberIn(ranges.mark.elevationSigmaDeg),
+  distanceM: numberIn(ranges.mark.distanceM),
+  distanceSigmaM: numberIn(ranges.mark.distanceSigmaM),
+  lengthMm: numberIn(ranges.mark.lengthMm).optional(),
+  widthMm: numberIn(ranges.mark.widthMm).optional(),
+  trailHeadingDeg: numberIn(ranges.mark.trailHeadingDeg).optional(),
+  normalAzimuthDeg: numberIn(ranges.mark.normalAzimuthDeg).optional(),
+  normalElevationDeg: numberIn(ranges.mark.normalElevationDeg).optional(),
 });
 
 const markCoordinatesSchema = z.strictObject({
-  eastM: z.number().min(-1000).max(1000),
-  northM: z.number().min(-1000).max(1000),
-  upM: z.number().min(-1000).max(1000),
-  sigmaM: z.number().min(0).max(1000),
-  lengthMm: z.number().min(0).max(1_000_000).optional(),
-  widthMm: z.number().min(0).max(1_000_000).optional(),
-  trailHeadingDeg: azimuth.optional(),
-  normalAzimuthDeg: azimuth.optional(),
-  normalElevationDeg: elevation.optional(),
+  eastM: numberIn(ranges.markCoordinates.eastM),
+  northM: numberIn(ranges.markCoordinates.northM),
+  upM: numberIn(ranges.markCoordinates.upM),
+  sigmaM: numberIn(ranges.markCoordinates.sigmaM),
+  lengthMm: numberIn(ranges.markCoordinates.lengthMm).optional(),
+  widthMm: numberIn(ranges.markCoordinates.widthMm).optional(),
+  trailHeadingDeg: numberIn(ranges.markCoordinates.trailHeadingDeg).optional(),
+  normalAzimuthDeg: numberIn(ranges.markCoordinates.normalAzimuthDeg).optional(),
+  normalElevationDeg: numberIn(ranges.markCoordinates.normalElevationDeg).optional(),
 });
 
 const targetSchema = z.strictObject({
   materialId: z.enum([...targetMaterials.keys()]),
-  solarAbsorptance: z.number().min(0).max(1).optional(),
-  thicknessM: z.number().min(0.00001).max(10).optional(),
+  solarAbsorptance: numberIn(ranges.target.solarAbsorptance).optional(),
+  thicknessM: numberIn(ranges.target.thicknessM).optional(),
 });
 
 export const reconstructionSchema = z.strictObject({
@@ -104,17 +114,19 @@ export const reconstructionSchema = z.strictObject({
   window: windowSchema,
   sky: skySchema,
   opening: openingSchema.optional(),
+  occluders: z.array(occluderSchema).max(60).optional(),
+  occluderSigmaM: numberIn(ranges.root.occluderSigmaM).optional().describe('One sigma of the occluders’ corners; left out: 0.01'),
   skyline: skylineSchema.optional(),
   optic: opticSchema.optional(),
-  opticSigmaRel: z.number().min(0).max(1).optional(),
+  opticSigmaRel: numberIn(ranges.root.opticSigmaRel).optional(),
   mark: markSchema.optional(),
   markCoordinates: markCoordinatesSchema.optional(),
   target: targetSchema.optional(),
   recurrenceFromUtc: instant.optional(),
   recurrenceToUtc: instant.optional(),
-  rays: z.int().min(1000).max(5_000_000).optional(),
-  samples: z.int().min(64).max(65_536).optional(),
-  seed: z.int().min(0).max(4_294_967_295),
+  rays: numberIn(ranges.root.rays).optional(),
+  samples: numberIn(ranges.root.samples).optional(),
+  seed: numberIn(ranges.root.seed),
 });
 
 /** What is wrong with an input: the field in dotted form and what to do about it. */

@@ -8,7 +8,7 @@ import type { Audience, PolicyField, Treatment } from './release-policy.ts';
 import { releasedCaseSchema, withheldClasses } from './released-case.ts';
 import type { RedactedText, ReleasedCase, WithheldClass, WithheldCounts } from './released-case.ts';
 import { releasedMeasurements } from './released-measurements.ts';
-import { authorNames, chronologyOf, correctedFound, injuryWords, releasedEvent, releasedResult } from './released-parts.ts';
+import { authorNames, chronologyOf, correctedFound, injuryWords, releasedEvent, releasedEvidence, releasedResult } from './released-parts.ts';
 
 /** Lines of free text, and photos, that the preparer decides one by one; what is undecided is held back. */
 export type LineDecision = 'share' | 'hold-back';
@@ -127,6 +127,7 @@ function plainPart({ source, searcher, treatment }: Desk) {
       ? { number: run.number, engineVersion: run.engineVersion, inputHash: place === 'shown' ? run.inputHash : null, resultHash: run.resultHash, result: releasedResult(run.result, searcher, place) }
       : null,
     returnDays: source.returnDays,
+    evidence: releasedEvidence(source, treatment('custody')),
     chronology: chronologyOf(source),
   };
 }
@@ -194,6 +195,8 @@ function countWithheld({ source, treatment }: Desk, released: ReleasedCase, shar
     add('personal', stated([person.name, person.email, person.phone]));
     add('child', (person.isChild ? 1 : 0) + stated([person.guardianContact]));
   }
+  // One holder a record, named in the house.
+  add('personal', source.items.reduce((total, item) => total + item.custody.length, 0));
   add('exact-place', (source.position ? 1 : 0) + stated([source.site.address]) + (treatment('siteName') === 'removed' ? 1 : 0));
   add('exact-place', source.reconstruction && treatment('reconstruction') === 'reduced' ? 1 : 0);
   add('exact-place', shared.filter((photo) => photo.exifPlace !== null).length);

@@ -3,7 +3,7 @@ import { caseStates } from './case-state.ts';
 import { certainties } from './finding.ts';
 import { sceneOpticKinds } from './scene.ts';
 
-export const registerViews = ['all', 'open', 'late', 'injury', 'mine'] as const;
+export const registerViews = ['all', 'open', 'first-look', 'late', 'injury', 'mine'] as const;
 export type RegisterView = (typeof registerViews)[number];
 export const registerResults = [...certainties, 'ruled-out', 'none'] as const;
 export type RegisterResult = (typeof registerResults)[number];

@@ -1,5 +1,6 @@
 import type { CardView } from './case-card.ts';
 import { actionStateLabels, controlLevelLabels } from './corrective-action.ts';
+import { evidenceKindLabels, examKindLabels, holderRoleLabels } from './evidence.ts';
 import { certaintyLabels, classificationLabels } from './finding.ts';
 import type { FourTests } from './hypothesis.ts';
 import { hypothesisKindLabels, hypothesisResultLabels, testLabels, testNames } from './hypothesis.ts';
@@ -23,12 +24,21 @@ export interface ReleaseDocument {
   readonly interimControl: RedactedText;
   readonly notes: readonly { readonly meta: string; readonly text: RedactedText }[];
   readonly chronology: readonly { readonly day: string; readonly clock: string; readonly atUtc: string; readonly what: string }[];
+  readonly evidence: readonly ReleasedItemView[];
   readonly measurements: readonly { readonly group: string; readonly rows: ReleasedCase['measurements'] }[];
   readonly sun: SunPart | null;
   readonly hypotheses: readonly HypothesisPart[];
   readonly finding: FindingPart | null;
   readonly actions: readonly { readonly number: number; readonly title: RedactedText; readonly meta: string; readonly effect: RedactedText }[];
   readonly photos: readonly { readonly fileName: string; readonly viewWords: string; readonly caption: RedactedText; readonly alternative: string; readonly maskWords: string }[];
+}
+
+/** An item as a reader outside is told of it: holders by part, never by name. */
+export interface ReleasedItemView {
+  readonly code: string;
+  readonly kind: string;
+  readonly custody: readonly { readonly holder: string; readonly from: string; readonly to: string }[];
+  readonly exams: readonly { readonly kind: string; readonly when: string; readonly notice: string }[];
 }
 
 export interface SunPart {
@@ -83,6 +93,7 @@ export function releaseDocument(released: ReleasedCase): ReleaseDocument {
     interimControl: released.interimControl,
     notes: released.notes.map((note) => ({ meta: `${note.by}, ${formatDayClock(at(note.at), zone)}`, text: note.text })),
     chronology: released.chronology.map((line) => ({ day: formatWeekday(at(line.at), zone), clock: line.what === 'Found on this day' ? '' : formatClock(at(line.at), zone), atUtc: line.at, what: line.what })),
+    evidence: releasedItems(released),
     measurements: grouped(released.measurements),
     sun: sunPart(released),
     hypotheses: released.hypotheses.map(hypothesisPart),
@@ -208,6 +219,17 @@ function numbersOf(result: ReleasedResult, zone: string): SunPart['numbers'] {
     if (focus.trailSpeedMmPerH !== null) lines.push({ term: 'Speed of the spot', value: `${round(focus.trailSpeedMmPerH)} mm/h`, note: focus.trailMinutesAtLeast === null ? 'a line focus carries no time' : `the trail needs at least ${round(focus.trailMinutesAtLeast)} min` });
   }
   return lines;
+}
+
+/** Releases made before custody was part of them hold none. */
+export function releasedItems({ evidence, zone }: Pick<ReleasedCase, 'zone'> & { readonly evidence?: ReleasedCase['evidence'] }): ReleasedItemView[] {
+  const at = (utc: string) => formatDayClock(new Date(utc), zone);
+  return (evidence ?? []).map((item) => ({
+    code: item.code,
+    kind: evidenceKindLabels[item.kind],
+    custody: item.custody.map((record) => ({ holder: holderRoleLabels[record.role], from: at(record.from), to: record.to ? at(record.to) : 'holds it now' })),
+    exams: item.exams.map((exam) => ({ kind: examKindLabels[exam.kind], when: at(exam.at), notice: exam.noticeGiven ? 'others were told beforehand' : 'no notice recorded' })),
+  }));
 }
 
 function hypothesisPart(one: ReleasedCase['hypotheses'][number]): HypothesisPart {

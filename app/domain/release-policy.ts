@@ -39,6 +39,7 @@ export const fieldPolicies = {
   draftFinding: { class: 'legal', insurer: 'removed', 'other-party': 'removed' },
   signedFinding: { class: 'free-text', insurer: 'shown', 'other-party': 'reduced' },
   privileged: { class: 'legal', insurer: 'removed', 'other-party': 'removed' },
+  custody: { class: 'personal', insurer: 'shown', 'other-party': 'reduced' },
   loss: { class: 'commercial', insurer: 'shown', 'other-party': 'removed' },
   actions: { class: 'free-text', insurer: 'shown', 'other-party': 'reduced' },
   actionCost: { class: 'commercial', insurer: 'removed', 'other-party': 'removed' },

@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { actionStates, controlLevels } from './corrective-action.ts';
+import { evidenceKinds, examKinds, holderRoles } from './evidence.ts';
 import { certainties, classifications } from './finding.ts';
 import { hypothesisKinds, hypothesisResults, testResults } from './hypothesis.ts';
 import { extents, foundPrecisions, onsetBases, photoViews, siteUses, weatherSeen } from './incident.ts';
@@ -103,6 +104,17 @@ export const releasedCaseSchema = z.object({
     z.object({ number: z.number().int(), title: redactedText, controlLevel: z.enum(controlLevels), interim: z.boolean(), dueOn: z.string(), state: z.enum(actionStates), effect: redactedText }),
   ),
   returnDays: z.array(z.object({ on: z.string(), bestAt: instant, minutes: z.number() })),
+  /** Items by kind, with who held them by part in the matter. Records are left out where the reader gets less. */
+  evidence: z
+    .array(
+      z.object({
+        code: z.string(),
+        kind: z.enum(evidenceKinds),
+        custody: z.array(z.object({ role: z.enum(holderRoles), from: instant, to: instant.nullable() })),
+        exams: z.array(z.object({ kind: z.enum(examKinds), at: instant, noticeGiven: z.boolean() })),
+      }),
+    )
+    .default([]),
   chronology: z.array(z.object({ at: instant, what: z.string() })),
 });
 export type ReleasedCase = z.infer<typeof releasedCaseSchema>;

@@ -1,6 +1,7 @@
 import type { CaseBeforeRedaction } from './case-before-redaction.ts';
 import type { CaseState } from './case-state.ts';
 import { actionStateLabels } from './corrective-action.ts';
+import { itemCode } from './evidence.ts';
 import { onsetBasisLabels } from './incident.ts';
 import type { Searcher } from './redact-text.ts';
 import { redactedWords, redactText } from './redact-text.ts';
@@ -50,6 +51,17 @@ export function chronologyOf(source: CaseBeforeRedaction): ReleasedCase['chronol
     ]),
   ];
   return lines.flatMap(({ at, what }) => (at ? [{ at, what }] : [])).sort((a, b) => (a.at < b.at ? -1 : a.at > b.at ? 1 : 0));
+}
+
+/** Items with their chain in our own words: parts in the matter and times. A reader who gets less is told kinds and examinations. */
+export function releasedEvidence(source: Pick<CaseBeforeRedaction, 'items' | 'caseNumber'>, how: 'shown' | 'reduced' | 'removed'): ReleasedCase['evidence'] {
+  if (how === 'removed') return [];
+  return source.items.map(({ label, kind, custody, exams }) => ({
+    code: itemCode(source.caseNumber, label),
+    kind,
+    custody: how === 'shown' ? custody.map(({ role, from, to }) => ({ role, from, to })) : [],
+    exams: exams.map(({ kind: exam, at, noticeGiven }) => ({ kind: exam, at, noticeGiven })),
+  }));
 }
 
 const treatmentWords: Readonly<Record<string, string>> = {

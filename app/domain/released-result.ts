@@ -26,6 +26,7 @@ const best = z.object({
 
 const traced = z.object({
   rays: number,
+  blockedFraction: number.optional(),
   transmittedFraction: number,
   r50Mm: number,
   r80Mm: number,
@@ -77,6 +78,8 @@ const recurrence = z.object({
   minutes: number,
 });
 
+const lightInterval = z.object({ fromUtc: text, toUtc: text, minutes: number, greatestSuns: number });
+
 const margin = z.object({ value: number, low: number, high: number, unit: text, agreeFrom: maybe, agreeTo: maybe });
 
 export const releasedResultSchema = z.object({
@@ -86,6 +89,7 @@ export const releasedResultSchema = z.object({
   minutes: z.array(z.object({ atUtc: text, azimuthDeg: number, apparentElevationDeg: number, verdict, reason, missLateralMm: maybe, missAxialMm: maybe, fluxKwm2: maybe })),
   runs: z.array(z.object({ fromUtc: text, toUtc: text, minutes: number, verdict, reason })),
   totals: z.object({ sunlit: number, notSunlit: number, cannotTell: number }),
+  light: z.object({ lit: z.array(lightInterval), focused: z.array(lightInterval), litFromSuns: number, focusedFromSuns: number }).nullish().transform((light) => light ?? null),
   best: best.nullable(),
   focus: focus.nullable(),
   heating: heating.nullable(),
@@ -101,7 +105,10 @@ export const releasedResultSchema = z.object({
       missLateralMm: band,
       fluxKwm2: band,
       fluxOver: z.array(z.object({ thresholdKwm2: number, share: number })),
+      ignitedWithinDwellShare: maybe.optional(),
       convergenceKwm2: number,
+      halfSampleMedianKwm2: number.optional(),
+      table: z.object({ traces: number, raysEach: number, axes: z.array(z.object({ axis: text, unit: text, nodes: z.array(number) })) }).nullable().optional(),
       tornado: z.array(z.object({ input: text, lowKwm2: number, highKwm2: number })),
     })
     .nullish()

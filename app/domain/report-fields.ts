@@ -1,3 +1,5 @@
+import { wallFields, wallIndexes } from './report-place.ts';
+
 /** Names and words that the report form and its reading share. */
 
 /** How a reporter may answer "When was it found?" */
@@ -37,7 +39,13 @@ export const reportFieldLabels: readonly { readonly name: string; readonly label
   { name: 'photos', label: 'Photos' },
   { name: 'siteId', label: 'Where is it?' },
   { name: 'placeDetail', label: 'The spot, in words' },
-  { name: 'latitudeDeg', label: 'Position' },
+  { name: 'latitudeDeg', label: 'Latitude' },
+  { name: 'longitudeDeg', label: 'Longitude' },
+  { name: 'opticPlace', label: 'Where the thing stands that bent the light' },
+  ...wallIndexes.flatMap((index) => [
+    { name: wallFields(index).from, label: `Wall ${index}, first end` },
+    { name: wallFields(index).to, label: `Wall ${index}, other end` },
+  ]),
   { name: 'foundWhen', label: 'When was it found?' },
   { name: 'foundLocal', label: 'Found at' },
   { name: 'foundFromLocal', label: 'Last seen sound' },
@@ -46,7 +54,11 @@ export const reportFieldLabels: readonly { readonly name: string; readonly label
   { name: 'sighting', label: 'What do you see?' },
   { name: 'narrative', label: 'In your words' },
   { name: 'anyoneHurt', label: 'Was anyone hurt?' },
+  { name: 'injuryPart', label: 'Part of the body' },
   { name: 'interimControl', label: 'What covers or shades it' },
+  { name: 'opticPrinted', label: 'What is printed on it' },
+  { name: 'opticFacesDeg', label: 'Which way it faces' },
+  { name: 'contactName', label: 'Name' },
   { name: 'contactEmail', label: 'E-mail' },
   { name: 'contactPhone', label: 'Phone' },
 ];

@@ -1,68 +1,11 @@
-import type { SceneOptic, SceneOpticKind } from './scene.ts';
+import type { UnitSystem } from './lengths.ts';
+import { lengthUnits, unitMm } from './lengths.ts';
+import type { DimensionQuantity, ReportDimension } from './report-optic-sizes.ts';
+import { dimensionFields, dimensionsOf, dimensionTexts, kindsByFacing, kindsThatLie, kindsWithCoating, kindsWithFaces, kindsWithMaterial, kindsWithPrint } from './report-optic-sizes.ts';
+import { lineOnGround } from './ground.ts';
+import { plainText } from './incident.ts';
+import type { Measured, SceneOnMap, SceneOptic, SceneOpticKind } from './scene.ts';
 import { opticMaterials, opticSchema, sceneOpticKinds } from './scene.ts';
-
-/**
- * What a reporter can be asked about an optic without tools beyond a tape: only the sizes that matter for its kind. The
- * answers become the first version of the measured scene.
- */
-export const reportDimensions = ['diameterMm', 'widthMm', 'heightMm', 'radiusOfCurvatureM', 'focalLengthMm', 'centreBowMm', 'liquidDepthMm'] as const;
-export type ReportDimension = (typeof reportDimensions)[number];
-
-interface DimensionText {
-  readonly question: string;
-  readonly help: string;
-  readonly unit: LengthUnit;
-  /** Smallest and largest value that the scene takes, in mm. */
-  readonly minMm: number;
-  readonly maxMm: number;
-}
-
-export const lengthUnits = ['mm', 'cm', 'm', 'in', 'ft'] as const;
-export type LengthUnit = (typeof lengthUnits)[number];
-/** Exact by definition (international yard and pound agreement, 1959). [mm] */
-const unitMm: Record<LengthUnit, number> = { mm: 1, cm: 10, m: 1000, in: 25.4, ft: 304.8 };
-
-export const dimensionTexts: Record<ReportDimension, DimensionText> = {
-  diameterMm: { question: 'How wide across is it?', help: 'Straight across the round part.', unit: 'mm', minMm: 1, maxMm: 10_000 },
-  widthMm: { question: 'How wide is it?', help: 'From side to side.', unit: 'mm', minMm: 1, maxMm: 100_000 },
-  heightMm: { question: 'How high is it?', help: 'From its lower to its upper edge.', unit: 'mm', minMm: 1, maxMm: 100_000 },
-  radiusOfCurvatureM: { question: 'Radius of the curve', help: 'From a drawing, or leave it to the investigator.', unit: 'm', minMm: 1, maxMm: 500_000 },
-  focalLengthMm: { question: 'Focal length, if it is written on it', help: 'Do not try it out with the sun.', unit: 'mm', minMm: 1, maxMm: 500_000 },
-  centreBowMm: { question: 'How far does the middle bow in or out?', help: 'Against a straight edge laid across it.', unit: 'mm', minMm: 0.1, maxMm: 200 },
-  liquidDepthMm: { question: 'How deep is the water in it?', help: 'From the bottom to the surface.', unit: 'mm', minMm: 1, maxMm: 5_000 },
-};
-
-export const dimensionsOfKind: Record<SceneOpticKind, readonly ReportDimension[]> = {
-  'curved-mirror': ['diameterMm', 'focalLengthMm'],
-  'glass-ball': ['diameterMm'],
-  'bowl-or-vase': ['diameterMm', 'liquidDepthMm'],
-  bottle: ['diameterMm', 'liquidDepthMm'],
-  'window-pane': ['widthMm', 'heightMm', 'centreBowMm'],
-  'curved-building-face': ['widthMm', 'radiusOfCurvatureM'],
-  'metal-trim': ['widthMm', 'heightMm', 'radiusOfCurvatureM'],
-  dish: ['diameterMm', 'focalLengthMm'],
-  magnifier: ['diameterMm', 'focalLengthMm'],
-  'flat-plastic-lens': ['widthMm', 'heightMm', 'focalLengthMm'],
-  telescope: ['diameterMm', 'focalLengthMm'],
-  'water-on-dome': ['diameterMm', 'liquidDepthMm'],
-  'dont-know': [],
-};
-
-/** Kinds whose material the reporter can tell apart by looking. */
-export const kindsWithMaterial: readonly SceneOpticKind[] = ['glass-ball', 'bowl-or-vase', 'magnifier', 'flat-plastic-lens'];
-export const reportMaterials = [
-  { value: 'crown-glass', label: 'Glass' },
-  { value: 'acrylic', label: 'Clear plastic' },
-  { value: 'unknown', label: "Don't know" },
-] as const;
-
-/** Names of the form fields of one dimension. */
-export const dimensionFields = (dimension: ReportDimension) => ({
-  value: `optic-${dimension}`,
-  plusMinus: `optic-${dimension}-plus-minus`,
-  unit: `optic-${dimension}-unit`,
-  method: `optic-${dimension}-method`,
-});
 
 /** Digits with one decimal sign, point or comma; null when it is something else, or could be a thousands sign. */
 export function readNumber(text: string): number | null {
@@ -71,47 +14,143 @@ export function readNumber(text: string): number | null {
   return Number(plain.replace(',', '.'));
 }
 
+/** Units that a value may be typed in, and how each becomes the stored one: value × times + plus. */
+interface Conversion {
+  readonly times: number;
+  readonly plus: number;
+}
+const lengthConversions: Record<string, Conversion> = Object.fromEntries(lengthUnits.map((unit) => [unit, { times: unitMm[unit], plus: 0 }]));
+const conversions = {
+  length: lengthConversions,
+  temperature: { '°C': { times: 1, plus: 0 }, '°F': { times: 5 / 9, plus: -160 / 9 } },
+  // Conventional inch of mercury, 3 386.389 Pa (NIST Special Publication 811, 2008, appendix B.8).
+  pressure: { hPa: { times: 1, plus: 0 }, inHg: { times: 33.863_89, plus: 0 } },
+} as const satisfies Record<DimensionQuantity, Record<string, Conversion>>;
+
+export const unitsOf = (quantity: DimensionQuantity): readonly string[] => Object.keys(conversions[quantity]);
+
+const usUnit: Record<string, string> = { mm: 'in', cm: 'in', m: 'ft', '°C': '°F', hPa: 'inHg' };
+/** The unit that a box starts with. */
+export const firstUnit = (dimension: ReportDimension, units: UnitSystem): string => {
+  const { unit } = dimensionTexts[dimension];
+  return units === 'us' ? (usUnit[unit] ?? unit) : unit;
+};
+
 type Errors = Record<string, string[]>;
 type Typed = Readonly<Record<string, string>>;
 
-function readDimension(dimension: ReportDimension, typed: Typed, errors: Errors) {
-  const names = dimensionFields(dimension);
+const shown = (value: number) => String(Number(value.toPrecision(3)));
+
+function readDimension(kind: SceneOpticKind, dimension: ReportDimension, typed: Typed, errors: Errors): Measured | undefined {
+  const names = dimensionFields(kind, dimension);
   const text = dimensionTexts[dimension];
   const method = typed[names.method] ?? '';
   const value = (typed[names.value] ?? '').trim();
   if (method === 'dont-know' || value === '') return undefined;
-  const unit = lengthUnits.find((known) => known === typed[names.unit]) ?? text.unit;
+  const known: Record<string, Conversion> = conversions[text.quantity];
+  const unit = typed[names.unit] ?? '';
+  const conversion = known[unit] ?? known[text.unit] ?? { times: 1, plus: 0 };
+  const unitShown = known[unit] ? unit : text.unit;
   const number = readNumber(value);
-  const valueMm = number === null ? null : number * unitMm[unit];
-  if (valueMm === null) {
+  if (number === null) {
     errors[names.value] = ['Write one number, such as 150 or 12.5, without a sign for thousands, or choose Don\'t know.'];
     return undefined;
   }
-  if (valueMm < text.minMm || valueMm > text.maxMm) {
-    const perUnit = unitMm[unit];
-    errors[names.value] = [`This must lie between ${text.minMm / perUnit} and ${text.maxMm / perUnit} ${unit}. Check the unit.`];
+  const stored = number * conversion.times + conversion.plus;
+  if (stored < text.min || stored > text.max) {
+    const inUnit = (limit: number) => shown((limit - conversion.plus) / conversion.times);
+    errors[names.value] = [`This must lie between ${inUnit(text.min)} and ${inUnit(text.max)} ${unitShown}. Check the unit.`];
     return undefined;
   }
   const plusMinusText = (typed[names.plusMinus] ?? '').trim();
   const plusMinus = plusMinusText === '' ? null : readNumber(plusMinusText);
-  if (plusMinusText !== '' && (plusMinus === null || plusMinus < 0 || plusMinus * unitMm[unit] > text.maxMm)) {
+  if (plusMinusText !== '' && (plusMinus === null || plusMinus < 0 || plusMinus * conversion.times > text.max)) {
     errors[names.plusMinus] = ['Write how far off it may be as one number in the same unit, such as 5, or leave it empty.'];
     return undefined;
   }
   const inScene = dimension === 'radiusOfCurvatureM' ? 1000 : 1;
+  const tidy = (quantity: number) => Number((quantity / inScene).toPrecision(10));
   return {
-    value: valueMm / inScene,
-    ...(plusMinus === null ? {} : { plusMinus: (plusMinus * unitMm[unit]) / inScene }),
-    method: method === 'measured' || method === 'estimated' ? method : ('reported' as const),
+    value: tidy(stored),
+    ...(plusMinus === null ? {} : { plusMinus: tidy(plusMinus * conversion.times) }),
+    method: method === 'measured' || method === 'estimated' || method === 'photo' ? method : 'reported',
   };
 }
 
 /** The optic as reported. Sizes that do not belong to the chosen kind are ignored, even when they were filled in before. */
-export function readReportedOptic(typed: Typed): { optic: SceneOptic; errors: Errors } {
+export function readReportedOptic(typed: Typed, walls: SceneOnMap['walls'] = []): { optic: SceneOptic; errors: Errors } {
   const errors: Errors = {};
   const kind = sceneOpticKinds.find((known) => known === typed['opticKind']) ?? 'dont-know';
-  const sizes = Object.fromEntries(dimensionsOfKind[kind].map((dimension) => [dimension, readDimension(dimension, typed, errors)]));
-  const material = kindsWithMaterial.includes(kind) ? opticMaterials.find((known) => known === typed['opticMaterial']) : undefined;
+  const dimensions = dimensionsOf(kind);
+  const sizes: Partial<Record<ReportDimension, Measured | undefined>> = Object.fromEntries(dimensions.map((dimension) => [dimension, readDimension(kind, dimension, typed, errors)]));
+  const shownInPhotos = dimensions.filter((dimension) => typed[dimensionFields(kind, dimension).method] === 'photo');
   const movedSince = typed['opticMoved'] === 'yes' || typed['opticMoved'] === 'no' ? typed['opticMoved'] : 'dont-know';
-  return { optic: opticSchema.parse({ kind, ...sizes, material, movedSince }), errors };
+  const optic = opticSchema.parse({
+    kind,
+    ...sizes,
+    ...workedOut(kind, sizes),
+    ...readFacing(kind, typed, walls, errors),
+    ...readLook(kind, typed, errors),
+    ...(shownInPhotos.length > 0 ? { shownInPhotos } : {}),
+    movedSince,
+  });
+  return { optic, errors };
+}
+
+/** Material, coating, face to the sun and print, each only for kinds whose model uses it. */
+function readLook(kind: SceneOpticKind, typed: Typed, errors: Errors): Partial<SceneOptic> {
+  const material = kindsWithMaterial.includes(kind) ? opticMaterials.find((known) => known === typed['opticMaterial']) : undefined;
+  const coating = kindsWithCoating.includes(kind) ? ([1, 2, 3, 4] as const).find((known) => String(known) === typed['opticCoating']) : undefined;
+  const face = kindsWithFaces.includes(kind) ? (['curved', 'flat'] as const).find((known) => known === typed['opticFace']) : undefined;
+  const printed = kindsWithPrint.includes(kind) ? plainText(80).safeParse(typed['opticPrinted'] ?? '') : null;
+  if (printed && !printed.success) errors['opticPrinted'] = ['Keep this under 80 characters.'];
+  return {
+    ...(material ? { material } : {}),
+    ...(coating ? { coatingSurface: coating } : {}),
+    ...(face ? { faceToSun: face } : {}),
+    ...(printed?.success && printed.data !== '' ? { printed: printed.data } : {}),
+  };
+}
+
+/**
+ * A straight edge laid rim to rim goes across the whole optic, so its length is the width that was asked for; a pond's
+ * depth is the gap under its surface. A dish is a paraboloid: focal length = diameter² ÷ (16 × depth), by the geometry
+ * of the parabola.
+ */
+function workedOut(kind: SceneOpticKind, sizes: Partial<Record<ReportDimension, Measured | undefined>>): Partial<SceneOptic> {
+  const { sagittaMm, diameterMm, widthMm } = sizes;
+  const over = kind === 'metal-trim' || kind === 'curved-building-face' ? widthMm : diameterMm;
+  if (!sagittaMm || !over) return {};
+  const straightedge = { sagittaOverMm: over };
+  if (kind !== 'dish' || sizes.focalLengthMm) return straightedge;
+  const focalMm = Number((over.value ** 2 / (16 * sagittaMm.value)).toPrecision(4));
+  const rough = sagittaMm.method === 'measured' && over.method === 'measured' ? 'measured' : 'estimated';
+  return focalMm >= 1 && focalMm <= 500_000 ? { ...straightedge, focalLengthMm: { value: focalMm, method: rough } } : straightedge;
+}
+
+/** Directions that a wall may face: square to its line, on either side. [°] */
+export const facingsOfWall = (wall: SceneOnMap['walls'][number]): readonly [number, number] => {
+  const { bearingDeg } = lineOnGround(wall.from, wall.to);
+  const one = Math.round((bearingDeg + 90) % 360) % 360;
+  return [one, (one + 180) % 360];
+};
+
+/** How far a bearing by a wall line is trusted, and one by eye. [°, one sigma] Our own bounds, common practice in surveying by map. */
+const byLineDeg = 3;
+const byEyeDeg = 20;
+
+function readFacing(kind: SceneOpticKind, typed: Typed, walls: SceneOnMap['walls'], errors: Errors): Partial<SceneOptic> {
+  const text = (typed['opticFacesDeg'] ?? '').trim();
+  const tilts: Record<string, Measured> = { upright: { value: 0, plusMinus: 5, method: 'estimated' }, 'facing-up': { value: 90, plusMinus: 10, method: 'estimated' } };
+  const lies: Record<string, Measured> = { upright: { value: 90, plusMinus: 5, method: 'estimated' }, lying: { value: 0, plusMinus: 5, method: 'estimated' } };
+  const tilt = kindsByFacing.includes(kind) ? tilts[typed['opticTilt'] ?? ''] : kindsThatLie.includes(kind) ? lies[typed['opticLies'] ?? ''] : undefined;
+  const tilted = tilt ? { faceTiltDeg: tilt } : {};
+  if (!kindsByFacing.includes(kind) || text === '') return tilted;
+  const valueDeg = readNumber(text);
+  if (valueDeg === null || valueDeg < 0 || valueDeg > 360) {
+    errors['opticFacesDeg'] = ['Write the direction in degrees from 0 to 360: north is 0, east 90, south 180, west 270. Or leave it empty.'];
+    return tilted;
+  }
+  const byLine = walls.some((wall) => facingsOfWall(wall).some((facing) => Math.abs(facing - (valueDeg % 360)) <= 1));
+  return { ...tilted, faceAzimuthDeg: byLine ? { value: valueDeg % 360, plusMinus: byLineDeg, method: 'drawing' } : { value: valueDeg % 360, plusMinus: byEyeDeg, method: 'estimated' } };
 }

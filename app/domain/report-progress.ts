@@ -52,6 +52,8 @@ export function progressHeading(facts: ProgressFacts): string {
 
 export interface ProgressStep {
   readonly state: CaseState;
+  /** What the step is called on a page for everybody. */
+  readonly name: string;
   readonly words: string;
   /** When it was reached; null when that is not known, or still to come. */
   readonly at: Date | null;
@@ -59,9 +61,20 @@ export interface ProgressStep {
   readonly now: boolean;
 }
 
+const names: Record<CaseState, string> = {
+  reported: 'Received',
+  triage: 'First look',
+  returned: 'One question',
+  investigation: 'Measured and tested',
+  findings: 'Result checked',
+  'corrective-action': 'Being put right',
+  closed: 'Closed',
+  duplicate: 'Joined with an earlier report',
+};
+
 const path: readonly { readonly state: CaseState; readonly words: string }[] = [
   { state: 'reported', words: 'The report and its photos are stored.' },
-  { state: 'triage', words: 'Somebody looks at it, and makes sure the place is safe.' },
+  { state: 'triage', words: 'Somebody looks at it, and has the place covered or closed off if it needs that.' },
   { state: 'investigation', words: 'The place is measured, and several explanations are tested.' },
   { state: 'findings', words: 'A second person checks the result.' },
   { state: 'corrective-action', words: 'What can be changed is changed, and checked when the sun is back.' },
@@ -82,11 +95,11 @@ export function progressSteps(facts: ProgressFacts, times: { readonly reportedAt
     const at = timeOf(state);
     const reached = index <= present;
     const jumped = index < present && at === null && state !== 'reported';
-    return jumped || (state === 'closed' && facts.state === 'duplicate') ? [] : [{ state, words, at: reached ? at : null, reached, now: state === facts.state }];
+    return jumped || (state === 'closed' && facts.state === 'duplicate') ? [] : [{ state, name: names[state], words, at: reached ? at : null, reached, now: state === facts.state }];
   });
   const side = sideWords[facts.state];
   if (!side) return steps;
-  const aside: ProgressStep = { state: facts.state, words: side, at: timeOf(facts.state), reached: true, now: true };
+  const aside: ProgressStep = { state: facts.state, name: names[facts.state], words: side, at: timeOf(facts.state), reached: true, now: true };
   const afterTriage = steps.findIndex(({ state }) => state === 'triage') + 1;
   return [...steps.slice(0, afterTriage), aside, ...(facts.state === 'duplicate' ? [] : steps.slice(afterTriage))];
 }

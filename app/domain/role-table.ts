@@ -81,6 +81,10 @@ export function roleTable(): readonly RoleTableGroup[] {
       rows: [
         ofCase('case:triage', 'First look, return, duplicate'),
         ofCase('case:edit-facts', 'Change facts and measurements'),
+        ofCase('evidence:write', 'Collect evidence, record hand-overs'),
+        ofCase('attachment:add', 'Add documents'),
+        ofCase('witness:write', 'Take accounts of witnesses'),
+        ofCase('timeline:write', 'Enter events in the timeline'),
         ofCase('reconstruction:run', 'Run a reconstruction'),
         ofCase('reconstruction:attach', 'Attach a reconstruction'),
         ofCase('finding:write', 'Write hypotheses and findings'),

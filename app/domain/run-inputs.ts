@@ -1,5 +1,5 @@
 import type { ReconstructionInput } from '#app/physics/model.ts';
-import type { Optic } from '#app/physics/optics/optic.ts';
+import type { OpticInput } from '#app/physics/optics/optic.ts';
 import { formatDayClock } from './local-time.ts';
 import { opticKindLabels, refractiveMaterialLabels } from './run-words.ts';
 import { targetMaterialLabels, targetMaterials } from './scene.ts';
@@ -39,11 +39,11 @@ function timeGroup({ window, place }: ReconstructionInput): InputGroup {
   };
 }
 
-function poseFacts(optic: Optic): Fact[] {
+function poseFacts(optic: OpticInput): Fact[] {
   return 'axisAzimuthDeg' in optic ? [fact(optic.kind === 'cylinder' ? 'Axis points to' : 'Faces', `${round(optic.axisAzimuthDeg)}° true`, `${round(optic.axisElevationDeg)}° above level`)] : [];
 }
 
-function shapeFacts(optic: Optic): Fact[] {
+function shapeFacts(optic: OpticInput): Fact[] {
   switch (optic.kind) {
     case 'lens':
       return [fact('Diameter', mm(optic.diameterM)), fact('Focal length', length(optic.focalLengthM)), fact('Shape', optic.shape, `${optic.faceToSun} face to the sun`)];
@@ -65,7 +65,7 @@ function shapeFacts(optic: Optic): Fact[] {
         ...some(optic.paneWidthM, (value) => fact('Pane width', length(value))), fact('Reflectance', round(optic.reflectance)),
       ];
     case 'bowed-pane':
-      return [fact('Size', `${round(optic.widthM)} × ${round(optic.heightM)} m`), fact('Bow at the centre', mm(optic.centreBowM)), fact('Reflectance', round(optic.reflectance)), ...some(optic.coatingSurface, (value) => fact('Coated surface', String(value), 'counted from outside'))];
+      return [fact('Size', `${round(optic.widthM)} × ${round(optic.heightM)} m`), ...some(optic.centreBowM, (value) => fact('Bow at the centre', mm(value))), ...some(optic.sealedUnit, (unit) => fact('Sealed unit', `${mm(unit.outerThicknessM)}, gap ${mm(unit.gapM)}, ${mm(unit.innerThicknessM)}`, `sealed at ${round(unit.sealPressureHpa)} hPa and ${round(unit.sealTemperatureC)} °C, cavity at ${round(unit.cavityTemperatureC)} °C`)), fact('Reflectance', round(optic.reflectance)), ...some(optic.coatingSurface, (value) => fact('Coated surface', String(value), 'counted from outside'))];
     case 'fresnel':
       return [fact('Size', `${round(optic.widthM)} × ${round(optic.heightM)} m`), fact('Focal length', length(optic.focalLengthM)), fact('Transmittance', round(optic.transmittance))];
     case 'ponded-dome':
@@ -75,7 +75,7 @@ function shapeFacts(optic: Optic): Fact[] {
   }
 }
 
-function materialFacts(optic: Optic): Fact[] {
+function materialFacts(optic: OpticInput): Fact[] {
   if (!('material' in optic)) return [];
   const { material } = optic;
   return [material.name === 'explicit' ? fact('Index', round(material.refractiveIndex), `absorption ${round(material.absorptionPerM)} per m`) : fact('Material', refractiveMaterialLabels[material.name])];
@@ -100,6 +100,17 @@ function openingGroup({ opening }: ReconstructionInput): InputGroup[] {
     facts: [
       fact('Faces', `${round(opening.azimuthDeg)}° true ±${round(opening.azimuthSigmaDeg)}`, `lets the sun in up to ${round(opening.halfWidthDeg)}° either side`),
       fact('Glass', round(opening.transmittance), opening.transmittanceSource),
+    ],
+  }];
+}
+
+function occluderGroup({ occluders, occluderSigmaM }: ReconstructionInput): InputGroup[] {
+  if (!occluders?.length) return [];
+  return [{
+    heading: 'Frame and bars',
+    facts: [
+      ...occluders.map((one, index) => fact(one.name ?? `${one.kind === 'opening' ? 'Opening' : 'Bar'} ${index + 1}`, `${one.corners.length} corners`, one.revealDepthM ? `${one.kind}, reveal ${mm(one.revealDepthM)} deep` : one.kind)),
+      ...some(occluderSigmaM, (value) => fact('Spread of the corners', `±${mm(value)}`)),
     ],
   }];
 }
@@ -145,7 +156,7 @@ function skyGroup({ sky, skyline }: ReconstructionInput): InputGroup {
 
 /** The groups of a frozen input, in the order of the light. */
 export function inputGroups(input: ReconstructionInput): InputGroup[] {
-  return [placeGroup(input), timeGroup(input), opticGroup(input), ...openingGroup(input), markGroup(input), skyGroup(input)];
+  return [placeGroup(input), timeGroup(input), opticGroup(input), ...openingGroup(input), ...occluderGroup(input), markGroup(input), skyGroup(input)];
 }
 
 /** What differs between the inputs of two runs, as "before to after". */

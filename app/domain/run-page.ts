@@ -3,6 +3,7 @@ import type { Grade } from '#app/physics/model.ts';
 import type { CaseState } from './case-state.ts';
 import { caseStateLabels } from './case-state.ts';
 import { canOnCase, caseRules, whoCan } from './permissions.ts';
+import type { ScaledPhoto } from './photo-trail.ts';
 import type { CaseSubject } from './permissions.ts';
 import type { Actor } from './roles.ts';
 import { holdsRole } from './roles.ts';
@@ -53,6 +54,8 @@ export interface RunPageView {
   readonly refusal: string | null;
   readonly attachRefusal: string | null;
   readonly view: RunView | null;
+  /** Photo with a known scale, over which the way of the spot can be drawn. */
+  readonly photo: ScaledPhoto | null;
 }
 
 /** Why a run cannot be asked for, or attached, in one sentence; null when it can. */

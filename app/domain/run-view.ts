@@ -5,13 +5,17 @@ import { localDay, nextDay, startOfLocalDay } from '#app/physics/sun/zone-days.t
 import { wholeCard } from './case-card.ts';
 import type { CardView } from './case-card.ts';
 import { formatIsoDay } from './local-time.ts';
+import { beamView } from './run-beam.ts';
+import type { BeamView } from './run-beam.ts';
 import { clearSkyCurve, pathOfDay, referencePaths } from './run-day.ts';
 import type { IrradianceSample, SkyDirection } from './run-day.ts';
 import { inputGroups } from './run-inputs.ts';
 import type { InputGroup } from './run-inputs.ts';
+import { reasonReader } from './run-reasons.ts';
+import type { ReasonedMinute } from './run-reasons.ts';
 import { returnBands, yearPlate } from './run-returns.ts';
 import type { ReturnBandView, YearPlateView } from './run-returns.ts';
-import { assumptionLabel, minuteVerdictWords, reasonAt } from './run-words.ts';
+import { assumptionLabel, minuteReasonWords } from './run-words.ts';
 
 /** One run of the engine as its page shows it. Result parts keep the engine's own numbers. */
 export interface RunMinuteView {
@@ -19,6 +23,7 @@ export interface RunMinuteView {
   readonly azimuthDeg: number;
   readonly apparentElevationDeg: number;
   readonly verdict: MinuteResult['verdict'];
+  readonly reasonWords: string;
 }
 export interface RunView {
   readonly card: CardView;
@@ -40,6 +45,8 @@ export interface RunView {
     readonly measuredName: string | null;
     readonly sunlit: readonly { readonly fromUtc: string; readonly toUtc: string }[];
   };
+  /** Plan, section and trail; null without an optic. */
+  readonly beam: BeamView | null;
   readonly rings: readonly { readonly fluxKwm2: number; readonly radiusMm: number }[];
   readonly inputs: readonly InputGroup[];
   readonly assumptions: readonly { readonly label: string; readonly value: string; readonly source: string; readonly verified: boolean }[];
@@ -60,7 +67,7 @@ function bestDay(input: ReconstructionInput, result: ReconstructionResult): stri
 }
 
 /** Minutes of night are kept as runs only; for moving along the window they are put back, with their sun. */
-function everyMinute(input: ReconstructionInput, result: ReconstructionResult): RunMinuteView[] {
+function everyMinute(input: ReconstructionInput, result: ReconstructionResult, why: (minute: ReasonedMinute) => string): RunMinuteView[] {
   const { observer } = settleSite(input);
   const known = new Map(result.minutes.map((minute) => [minute.atUtc, minute]));
   return result.runs.flatMap((run) =>
@@ -69,7 +76,7 @@ function everyMinute(input: ReconstructionInput, result: ReconstructionResult): 
       const atUtc = new Date(utcMs).toISOString();
       const minute = known.get(atUtc);
       const sun = minute ?? solarPosition(utcMs, observer);
-      return { atUtc, azimuthDeg: to2(sun.azimuthDeg), apparentElevationDeg: to2(sun.apparentElevationDeg), verdict: run.verdict };
+      return { atUtc, azimuthDeg: to2(sun.azimuthDeg), apparentElevationDeg: to2(sun.apparentElevationDeg), verdict: run.verdict, reasonWords: minute ? why(minute) : minuteReasonWords[run.reason] };
     }),
   );
 }
@@ -77,11 +84,12 @@ function everyMinute(input: ReconstructionInput, result: ReconstructionResult): 
 const to2 = (value: number): number => Math.round(value * 100) / 100;
 
 function shownMinutes(input: ReconstructionInput, result: ReconstructionResult, day: string): { minutes: RunMinuteView[]; scrubs: boolean } {
-  if (Date.parse(result.window.endUtc) - Date.parse(result.window.startUtc) <= dayMs) return { minutes: everyMinute(input, result), scrubs: true };
+  const why = reasonReader(input);
+  if (Date.parse(result.window.endUtc) - Date.parse(result.window.startUtc) <= dayMs) return { minutes: everyMinute(input, result, why), scrubs: true };
   const { zone } = input.place;
   const minutes = result.minutes
     .filter((minute) => localDay(Date.parse(minute.atUtc), zone) === day)
-    .map(({ atUtc, azimuthDeg, apparentElevationDeg, verdict }) => ({ atUtc, azimuthDeg, apparentElevationDeg, verdict }));
+    .map((minute) => ({ atUtc: minute.atUtc, azimuthDeg: minute.azimuthDeg, apparentElevationDeg: minute.apparentElevationDeg, verdict: minute.verdict, reasonWords: why(minute) }));
   return { minutes, scrubs: false };
 }
 
@@ -132,7 +140,8 @@ function ringsOf(result: ReconstructionResult): RunView['rings'] {
   });
 }
 
-function cardOf(input: ReconstructionInput, result: ReconstructionResult, foundAt: Date | null): CardView {
+/** The card of a run. */
+export function runCardView(input: ReconstructionInput, result: ReconstructionResult, foundAt: Date | null): CardView {
   const flux = result.minutes.flatMap((minute) => (minute.verdict === 'sunlit' && minute.fluxKwm2 !== null ? [{ atUtc: minute.atUtc, kwm2: minute.fluxKwm2 }] : []));
   const { place } = input;
   const card = wholeCard(
@@ -140,20 +149,27 @@ function cardOf(input: ReconstructionInput, result: ReconstructionResult, foundA
     { window: result.window, runs: result.runs, flux: flux.length > 400 ? flux.filter((_one, index) => index % Math.ceil(flux.length / 400) === 0) : flux },
     { start: [], end: [] },
   );
-  const azimuths = new Map(result.minutes.map((minute) => [minute.atUtc, minute.azimuthDeg]));
+  const why = reasonReader(input);
+  const known = new Map(result.minutes.map((minute) => [minute.atUtc, minute]));
   const middle = (run: (typeof result.runs)[number]) => new Date(Date.parse(run.fromUtc) + Math.floor(run.minutes / 2) * 60_000).toISOString();
-  return { ...card, runs: result.runs.map((run) => ({ fromUtc: run.fromUtc, toUtc: run.toUtc, verdict: run.verdict, reasonWords: reasonAt(run.reason, azimuths.get(middle(run)) ?? null, input.skyline) })) };
+  const words = (run: (typeof result.runs)[number]) => {
+    const minute = known.get(middle(run));
+    return minute ? why(minute) : minuteReasonWords[run.reason];
+  };
+  return { ...card, runs: result.runs.map((run) => ({ fromUtc: run.fromUtc, toUtc: run.toUtc, verdict: run.verdict, reasonWords: words(run) })) };
 }
 
 /** Everything that the page of a finished run shows. @param foundAt True time at which the mark was found. */
 export function runView(input: ReconstructionInput, result: ReconstructionResult, context: { readonly foundAt: Date | null; readonly now: Date }): RunView {
   const day = bestDay(input, result);
-  const card = cardOf(input, result, context.foundAt);
+  const card = runCardView(input, result, context.foundAt);
   const { minutes: _minutes, recurrence: _recurrence, runs: _runs, focus, ...rest } = result;
   const traced = focus?.traced;
+  const shown = shownMinutes(input, result, day);
   return {
     card,
-    ...shownMinutes(input, result, day),
+    ...shown,
+    beam: beamView(input, shown.minutes.map((minute) => minute.atUtc)),
     dayLabel: formatIsoDay(day).replace(/ \d{4}$/u, ''),
     dayPath: pathOfDay(input, day),
     references: referencePaths(input),
@@ -188,22 +204,4 @@ function namedOnce(points: RunView['skyline']): RunView['skyline'] {
 
 function withoutMap({ map: _map, ...figures }: NonNullable<FocusResult['traced']>): TracedView {
   return figures;
-}
-
-export const minutesCsvHead = ['at_utc', 'clock', 'zone', 'azimuth_deg', 'apparent_elevation_deg', 'verdict', 'reason', 'miss_lateral_mm', 'miss_axial_mm', 'flux_kw_m2'] as const;
-
-/** Every minute of the window, night included, as rows for a table that leaves. */
-export function minuteRows(input: ReconstructionInput, result: ReconstructionResult, clock: (at: Date) => string): (string | number | null)[][] {
-  const known = new Map(result.minutes.map((minute) => [minute.atUtc, minute]));
-  return result.runs.flatMap((run) =>
-    Array.from({ length: run.minutes }, (_unused, index) => {
-      const at = new Date(Date.parse(run.fromUtc) + index * 60_000);
-      const minute = known.get(at.toISOString());
-      return [
-        at.toISOString(), clock(at), input.place.zone, minute?.azimuthDeg ?? null, minute?.apparentElevationDeg ?? null,
-        minuteVerdictWords[run.verdict], reasonAt(run.reason, minute?.azimuthDeg ?? null, input.skyline),
-        minute?.missLateralMm ?? null, minute?.missAxialMm ?? null, minute?.fluxKwm2 ?? null,
-      ];
-    }),
-  );
 }

@@ -7,7 +7,7 @@ export interface SceneField {
   readonly key: string;
   readonly label: string;
   /** Unit of the stored number; empty for a ratio. */
-  readonly unit: 'mm' | 'm' | '°' | '';
+  readonly unit: 'mm' | 'm' | '°' | '°C' | 'hPa' | '';
   readonly min: number;
   readonly max: number;
   /** A direction along the ground: which north it was taken from has to be said. */
@@ -26,9 +26,13 @@ export const opticFields: readonly SceneField[] = [
   optic('widthMm', 'Width', 'mm', 1, 100_000, { help: 'Chord of a curved edge or face.' }),
   optic('heightMm', 'Height', 'mm', 1, 100_000),
   optic('thicknessMm', 'Thickness', 'mm', 0.1, 1_000),
-  optic('radiusOfCurvatureM', 'Radius of curvature', 'm', 0.001, 500, { help: 'From sagitta s over width w: w² ÷ 8s.' }),
+  optic('sagittaOverMm', 'Straightedge across the curve, end to end', 'mm', 1, 100_000),
+  optic('sagittaMm', 'Gap under the straightedge, at its middle', 'mm', 0.01, 5_000, { help: 'With the length above it gives the radius: w² ÷ 8s + s ÷ 2.' }),
+  optic('radiusOfCurvatureM', 'Radius of curvature', 'm', 0.001, 500, { help: 'Left empty, it is worked out from the straightedge.' }),
   optic('focalLengthMm', 'Focal length', 'mm', 1, 500_000, { help: 'Half the radius for a mirror. Never found by burning.' }),
   optic('centreBowMm', 'Bow at the centre of the pane', 'mm', 0.1, 200, { help: 'Straightedge across the face; note the air temperature and pressure then.' }),
+  optic('bowAirTemperatureC', 'Air temperature then', '°C', -60, 60, { help: 'The bow of a pane changes with temperature, pressure and height.' }),
+  optic('bowAirPressureHpa', 'Air pressure then', 'hPa', 300, 1_100),
   optic('paneWidthMm', 'Width of one pane', 'mm', 1, 20_000),
   optic('liquidDepthMm', 'Depth of the liquid', 'mm', 1, 5_000),
   optic('reflectance', 'Reflectance', '', 0, 1, { help: 'As a share, 0 to 1.' }),
@@ -39,6 +43,12 @@ export const opticFields: readonly SceneField[] = [
 
 export const openingFields: readonly SceneField[] = [
   { part: 'opening', key: 'azimuthDeg', label: 'Looks outward to', unit: '°', min: 0, max: 360, bearing: true, help: 'Leave empty when the light meets no window.' },
+  { part: 'opening', key: 'distanceMm', label: 'Optic to the glass', unit: 'mm', min: 1, max: 100_000, help: 'Level, square to the glass.' },
+  { part: 'opening', key: 'offsetMm', label: 'Middle of the opening, to the right', unit: 'mm', min: -100_000, max: 100_000, help: 'Of the optic, looking out; to the left is negative.' },
+  { part: 'opening', key: 'widthMm', label: 'Width of the opening', unit: 'mm', min: 1, max: 100_000 },
+  { part: 'opening', key: 'heightMm', label: 'Height of the opening', unit: 'mm', min: 1, max: 100_000 },
+  { part: 'opening', key: 'sillMm', label: 'Lower edge above the optic', unit: 'mm', min: -100_000, max: 100_000, help: 'Below the centre of the optic is negative.' },
+  { part: 'opening', key: 'revealMm', label: 'Depth of the reveal', unit: 'mm', min: 0, max: 5_000 },
 ];
 
 export const markFields: readonly SceneField[] = [
@@ -47,6 +57,7 @@ export const markFields: readonly SceneField[] = [
   mark('distanceMm', 'Slant distance', 'mm', 1, 500_000, { help: 'Centre of the optic to centre of the mark.' }),
   mark('lengthMm', 'Length of the mark', 'mm', 0.1, 100_000),
   mark('widthMm', 'Width of the mark', 'mm', 0.1, 100_000),
+  mark('depthMm', 'Depth of the mark', 'mm', 0.01, 1_000),
   mark('trailHeadingDeg', 'The trail runs to', '°', 0, 360, { bearing: true }),
   mark('surfaceAzimuthDeg', 'Marked surface faces', '°', 0, 360, { bearing: true }),
   mark('surfaceElevationDeg', 'Marked surface looks up by', '°', -90, 90, { help: '90 for a level roof or table, 0 for a wall.' }),
@@ -58,13 +69,13 @@ export const allSceneFields: readonly SceneField[] = [...opticFields, ...opening
 
 /** Sizes that decide the focus of each kind; the others stand folded below them. */
 const keysOfKind: Record<SceneOpticKind, readonly string[]> = {
-  'curved-mirror': ['diameterMm', 'radiusOfCurvatureM', 'focalLengthMm', 'faceAzimuthDeg', 'faceTiltDeg'],
+  'curved-mirror': ['diameterMm', 'sagittaOverMm', 'sagittaMm', 'radiusOfCurvatureM', 'focalLengthMm', 'faceAzimuthDeg', 'faceTiltDeg'],
   'glass-ball': ['diameterMm'],
   'bowl-or-vase': ['diameterMm', 'heightMm', 'liquidDepthMm'],
   bottle: ['diameterMm', 'heightMm', 'liquidDepthMm', 'faceAzimuthDeg', 'faceTiltDeg'],
-  'window-pane': ['widthMm', 'heightMm', 'centreBowMm', 'faceAzimuthDeg', 'faceTiltDeg'],
-  'curved-building-face': ['widthMm', 'heightMm', 'radiusOfCurvatureM', 'paneWidthMm', 'faceAzimuthDeg', 'faceTiltDeg'],
-  'metal-trim': ['widthMm', 'heightMm', 'radiusOfCurvatureM', 'reflectance', 'faceAzimuthDeg', 'faceTiltDeg'],
+  'window-pane': ['widthMm', 'heightMm', 'centreBowMm', 'bowAirTemperatureC', 'bowAirPressureHpa', 'faceAzimuthDeg', 'faceTiltDeg'],
+  'curved-building-face': ['widthMm', 'heightMm', 'sagittaOverMm', 'sagittaMm', 'radiusOfCurvatureM', 'paneWidthMm', 'faceAzimuthDeg', 'faceTiltDeg'],
+  'metal-trim': ['widthMm', 'heightMm', 'sagittaOverMm', 'sagittaMm', 'radiusOfCurvatureM', 'reflectance', 'faceAzimuthDeg', 'faceTiltDeg'],
   dish: ['diameterMm', 'focalLengthMm', 'faceAzimuthDeg', 'faceTiltDeg'],
   magnifier: ['diameterMm', 'focalLengthMm', 'thicknessMm', 'faceAzimuthDeg', 'faceTiltDeg'],
   'flat-plastic-lens': ['widthMm', 'heightMm', 'focalLengthMm', 'faceAzimuthDeg', 'faceTiltDeg'],

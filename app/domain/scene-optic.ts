@@ -10,7 +10,7 @@ import type { Measured, SceneOptic } from './scene.ts';
 export interface InputOrigin {
   readonly field: string;
   readonly value: string;
-  readonly origin: 'reported' | 'measured' | 'assumed';
+  readonly origin: 'reported' | 'measured' | 'file' | 'assumed';
   readonly note: string;
   /** False for values from memory. */
   readonly verified: boolean;

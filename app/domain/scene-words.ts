@@ -2,7 +2,8 @@ import type { FactView } from './case-view.ts';
 import type { Scene } from './scene.ts';
 import { measureMethodLabels, measureMethods, sceneOpticLabels, targetMaterialLabels } from './scene.ts';
 import { allSceneFields, fieldName } from './scene-fields.ts';
-import { sceneToFields } from './scene-form.ts';
+import { reporterFacts } from './reporter-facts.ts';
+import { sceneToFields } from './scene-form-fields.ts';
 
 /** What is recorded of a scene, one line a fact, unknowns left out; bearings from true north. */
 export function sceneFacts(scene: Scene): FactView[] {
@@ -24,5 +25,6 @@ export function sceneFacts(scene: Scene): FactView[] {
     { term: 'Target', value: scene.target.material === 'dont-know' ? 'not known' : targetMaterialLabels[scene.target.material], note: scene.target.colour ?? null },
     { term: 'Skyline', value: skyline, note: scene.skyline?.source ?? null },
     { term: 'Sun strength', value: dni ? `${dni.values.length} values` : 'not measured', note: dni?.source ?? null },
+    ...reporterFacts(scene),
   ];
 }

@@ -1,20 +1,22 @@
 import { z } from 'zod';
+import type { Axis } from './coordinate-text.ts';
+import { readCoordinate } from './coordinate-text.ts';
 import { siteUses } from './incident.ts';
 import { isZone } from './local-time.ts';
 
-const degrees = (limit: number, which: string) =>
-  z
-    .string()
-    .trim()
-    .regex(/^-?\d{1,3}(?:\.\d+)?$/u, `Write the ${which} in decimal degrees, like ${limit === 90 ? '53.50' : '-1.60'}.`)
-    .transform(Number)
-    .pipe(z.number().min(-limit, `The ${which} lies between -${limit} and ${limit}.`).max(limit, `The ${which} lies between -${limit} and ${limit}.`));
+const degrees = (axis: Axis) =>
+  z.string().transform((text, context) => {
+    const reading = readCoordinate(text, axis);
+    if (reading.ok) return reading.valueDeg;
+    context.addIssue({ code: 'custom', message: reading.sentence });
+    return z.NEVER;
+  });
 
 const facts = {
   name: z.string().trim().min(2, 'Write the name of the site.').max(120, 'Use at most 120 characters.'),
   address: z.string().trim().max(300, 'Use at most 300 characters.').default(''),
-  latitudeDeg: degrees(90, 'latitude'),
-  longitudeDeg: degrees(180, 'longitude'),
+  latitudeDeg: degrees('latitude'),
+  longitudeDeg: degrees('longitude'),
   elevationM: z.string().trim().regex(/^-?\d{1,4}(?:\.\d+)?$/u, 'Write the height above sea level in metres.').transform(Number).pipe(z.number().min(-430, 'No site lies that low.').max(6000, 'No site lies that high.')),
   /** Left empty: taken from the coordinates. */
   zone: z.string().trim().refine((zone) => zone === '' || isZone(zone), 'Write an IANA zone name, like Europe/London, or leave it empty.'),

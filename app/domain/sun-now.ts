@@ -10,7 +10,7 @@ export interface Place {
 }
 
 /** Standard atmosphere at sea level, ISO 2533:1975: pressure and temperature that the refraction starts from. */
-const standardAir = { pressureHpa: 1_013.25, temperatureC: 15 } as const;
+export const standardAir = { pressureHpa: 1_013.25, temperatureC: 15 } as const;
 
 const positionAt = (at: Date, place: Omit<Place, 'zone'>) => solarPosition(at.getTime(), { ...standardAir, latitudeDeg: place.latitudeDeg, longitudeDeg: place.longitudeDeg, elevationM: place.elevationM });
 

@@ -1,10 +1,15 @@
+import type { RouterContextProvider } from 'react-router';
 import type { Problem } from '#app/domain/api-contract.ts';
 import { DomainError } from '#app/domain/errors.ts';
 import type { DomainErrorCode } from '#app/domain/errors.ts';
 import type { Actor } from '#app/domain/roles.ts';
+import type { TokenScope } from '#app/domain/api-token.ts';
+import { scopeAllows } from '#app/domain/api-token.ts';
 import { canInOrganisation } from '#app/domain/permissions.ts';
 import type { InputProblem } from '#app/domain/reconstruction-schema.ts';
 import { log } from '#app/log.server.ts';
+import { actorContext } from '#app/auth/actor-context.ts';
+import { actorByToken, bearerOf } from '#app/auth/api-token.server.ts';
 import { limitRate } from '#app/auth/rate-limit.server.ts';
 
 /** Answers of the programming interface: JSON, or problem details after RFC 9457. */
@@ -59,18 +64,57 @@ function asProblem(error: unknown): ProblemError {
   return new ProblemError(500, 'Something failed on our side. Nothing was stored; ask again.');
 }
 
+/** An answer other than 200, with what its headers say. */
+export class JsonAnswer {
+  readonly body: unknown;
+  readonly status: number;
+  readonly headers: Readonly<Record<string, string>>;
+
+  constructor(body: unknown, status: number, headers: Readonly<Record<string, string>> = {}) {
+    this.body = body;
+    this.status = status;
+    this.headers = headers;
+  }
+}
+
 /** Runs the body of a resource route: its value as JSON, or the problem. */
 export async function answerJson(work: () => Promise<unknown>): Promise<Response> {
   try {
-    return Response.json(await work(), { headers: { 'Cache-Control': 'no-store' } });
+    const value = await work();
+    const { body, status, headers } = value instanceof JsonAnswer ? value : new JsonAnswer(value, 200);
+    return Response.json(body, { status, headers: { 'Cache-Control': 'no-store', ...headers } });
   } catch (error) {
     return problemResponse(asProblem(error));
   }
 }
 
+/** What came with a request to the programming interface. */
+interface ApiRequest {
+  readonly request: Request;
+  readonly context: Readonly<RouterContextProvider>;
+}
+
+/** Whoever asks: by the key in `Authorization`, else by the session. @throws ProblemError 401 or 403 */
+async function identify({ request, context }: ApiRequest, kind: TokenScope): Promise<Actor> {
+  if (!request.headers.has('Authorization')) {
+    const actor = context.get(actorContext);
+    if (actor) return actor;
+    throw new ProblemError(401, 'Sign in first, or send a key as “Authorization: Bearer …”. Keys are made on the page “Your account”.', { headers: { 'WWW-Authenticate': 'Bearer realm="Scorchline"' } });
+  }
+  const token = bearerOf(request);
+  const known = token ? await actorByToken(token) : null;
+  if (!known) {
+    throw new ProblemError(401, 'This key is not known, or it has ended. Make a new one on the page “Your account”.', { headers: { 'WWW-Authenticate': 'Bearer realm="Scorchline", error="invalid_token"' } });
+  }
+  if (!scopeAllows(known.scope, kind)) {
+    throw new ProblemError(403, 'This key may look up sun and sky, but not compute. Make one that may.', { headers: { 'WWW-Authenticate': `Bearer realm="Scorchline", error="insufficient_scope", scope="${kind}"` } });
+  }
+  return known.actor;
+}
+
 /** A person of an operator whose requests are within the limit. Computing is dearer than reading a position. */
-export async function requireApiActor(actor: Actor | null, kind: 'read' | 'compute'): Promise<Actor> {
-  if (!actor) throw new ProblemError(401, 'Sign in first; the session cookie goes with every request.', { headers: { 'WWW-Authenticate': 'Session realm="Scorchline"' } });
+export async function requireApiActor(asked: ApiRequest, kind: TokenScope): Promise<Actor> {
+  const actor = await identify(asked, kind);
   if (!canInOrganisation(actor, 'register:read')) throw new ProblemError(403, 'Your roles do not include the programming interface. An administrator of your organisation can change that.');
   await limitRate(`api:${kind}:${actor.userId}`, kind === 'read' ? 300 : 30, rateWindowS);
   return actor;

@@ -5,6 +5,8 @@ import helmet from 'helmet';
 export interface SecurityHeaderOptions {
   /** Address of the object store, from which the browser loads photographs by signed links. */
   readonly photoOrigin: string;
+  /** Address of map tiles as in `MAP_TILE_URL`, or null: then no picture comes from there. */
+  readonly tileUrl: string | null;
   /** True when people reach the site over https: then plain http is refused for a year. */
   readonly https: boolean;
   /** Development only: allows the module reloader's socket and its style elements. */
@@ -20,9 +22,9 @@ export function nonceOf(response: Response): string {
 
 /**
  * Headers of every response: only our own scripts, styles, fonts and connections, pictures from ourselves and the object
- * store, no framing, nothing from outside.
+ * store, and from a tile server where one is configured; no framing, nothing else from outside.
  */
-export function securityHeaders({ photoOrigin, https, development }: SecurityHeaderOptions): RequestHandler[] {
+export function securityHeaders({ photoOrigin, tileUrl, https, development }: SecurityHeaderOptions): RequestHandler[] {
   const protect = helmet({
     contentSecurityPolicy: {
       useDefaults: false,
@@ -32,7 +34,7 @@ export function securityHeaders({ photoOrigin, https, development }: SecurityHea
         'style-src': development ? ["'self'", "'unsafe-inline'"] : ["'self'"],
         // Drawings rendered on the server carry computed positions in style attributes.
         'style-src-attr': ["'unsafe-inline'"],
-        'img-src': ["'self'", 'data:', 'blob:', photoOrigin],
+        'img-src': ["'self'", 'data:', 'blob:', photoOrigin, ...(tileUrl === null ? [] : [tileOrigin(tileUrl)])],
         'font-src': ["'self'"],
         'connect-src': development ? ["'self'", 'ws:'] : ["'self'"],
         'worker-src': ["'self'"],
@@ -51,6 +53,12 @@ export function securityHeaders({ photoOrigin, https, development }: SecurityHea
     xFrameOptions: { action: 'deny' },
   });
   return [giveNonce, protect, limitDeviceAccess];
+}
+
+/** `https://*.tiles.example.org` of `https://{s}.tiles.example.org/{z}/{x}/{y}.png`. */
+export function tileOrigin(tileUrl: string): string {
+  const { protocol, host } = new URL(tileUrl.replace('{s}', 'subdomain-of-tiles'));
+  return `${protocol}//${host.replace('subdomain-of-tiles', '*')}`;
 }
 
 const giveNonce: RequestHandler = (_request, response, next) => {

@@ -6,10 +6,11 @@ import { env } from '#app/env.server.ts';
 import { log } from '#app/log.server.ts';
 import type { JobDefinition } from './define-job.ts';
 import { preparePhotoJob } from './definitions/prepare-photo.ts';
+import { runComputationJob } from './definitions/run-computation.ts';
 import { runReconstructionJob } from './definitions/run-reconstruction.ts';
 import { sendMailJob } from './definitions/send-mail.ts';
 
-const definitions = [runReconstructionJob, preparePhotoJob, sendMailJob] as const;
+const definitions = [runReconstructionJob, runComputationJob, preparePhotoJob, sendMailJob] as const;
 
 let starting: Promise<PgBoss> | undefined;
 

@@ -3,6 +3,7 @@ import { missOf, type Mark, type Miss } from './alignment.ts';
 import type { Beam, FocusModel } from '#app/physics/optics/closed-form/beam.ts';
 import type { Reach } from './reach.ts';
 import type { Skyline } from './skyline.ts';
+import type { Mask, RayShare } from './reconstruction/mask.ts';
 import type { SunMinute } from './sun-track.ts';
 import { halfAngleRad } from '#app/physics/sun/sun-disc.ts';
 import { degree, wrap180 } from './units.ts';
@@ -14,6 +15,8 @@ export interface Scene {
   readonly skyline: Skyline | null;
   readonly skylineSigmaDeg: number;
   readonly opening: OpeningInput | undefined;
+  /** Openings and bars ray by ray; null where none was surveyed by its corners. */
+  readonly mask: Mask | null;
   readonly model: FocusModel | null;
   readonly mark: Mark | null;
   readonly reach: Reach | null;
@@ -25,6 +28,8 @@ export interface Judgement {
   readonly reason: MinuteReason;
   readonly miss: Miss | null;
   readonly beam: Beam | null;
+  /** Share of the light towards the optic that passes openings and bars; null where none were surveyed, or nothing was to pass. */
+  readonly passing: number | null;
 }
 
 /** Radius of the sun's disc, and the least margin about the horizon that refraction near it demands. [°] */
@@ -63,6 +68,13 @@ function againstOpening(sun: SunMinute, opening: OpeningInput | undefined): Find
   const { lowestElevationDeg: lowest = -90, highestElevationDeg: highest = 90 } = opening;
   if (sun.apparentElevationDeg < lowest || sun.apparentElevationDeg > highest) return { definite: true, reason: 'outside-opening' };
   return offDeg > opening.halfWidthDeg - plusMinusDeg ? { definite: false, reason: 'uncertainty-straddles' } : null;
+}
+
+/** Every ray must be stopped, survey error included, before openings and bars settle a minute. */
+function againstMask(share: RayShare | null): Finding {
+  if (share === null) return null;
+  if (share.most === 0) return { definite: true, reason: 'blocked' };
+  return share.least === 0 ? { definite: false, reason: 'uncertainty-straddles' } : null;
 }
 
 /**
@@ -119,14 +131,18 @@ function againstOptic(sun: SunMinute, scene: Scene): { readonly finding: Finding
  */
 export function judgeMinute(sun: SunMinute, scene: Scene): Judgement {
   const horizon = againstHorizon(sun, scene);
-  if (horizon?.definite === true) return { verdict: 'not-sunlit', reason: horizon.reason, miss: null, beam: null };
+  if (horizon?.definite === true) return { verdict: 'not-sunlit', reason: horizon.reason, miss: null, beam: null, passing: null };
   const { finding: optic, miss, beam } = againstOptic(sun, scene);
-  const findings = [againstSkyline(sun, scene), againstOpening(sun, scene.opening), optic, horizon];
+  const before = [againstSkyline(sun, scene), againstOpening(sun, scene.opening)];
+  const open = before.every((finding) => finding?.definite !== true) && (beam !== null || scene.model === null);
+  const share = open ? scene.mask?.(sun.towardsSun, halfAngleRad(sun.distanceAu)) ?? null : null;
+  const passing = share?.nominal ?? null;
+  const findings = [...before, againstMask(share), optic, horizon];
   const refusal = findings.find((finding) => finding?.definite === true);
-  if (refusal !== undefined && refusal !== null) return { verdict: 'not-sunlit', reason: refusal.reason, miss, beam };
+  if (refusal !== undefined && refusal !== null) return { verdict: 'not-sunlit', reason: refusal.reason, miss, beam, passing };
   const doubt = [horizon, ...findings].find((finding) => finding !== null);
-  if (doubt !== undefined && doubt !== null) return { verdict: 'cannot-tell', reason: doubt.reason, miss, beam };
-  return { verdict: 'sunlit', reason: 'sun-on-mark', miss, beam };
+  if (doubt !== undefined && doubt !== null) return { verdict: 'cannot-tell', reason: doubt.reason, miss, beam, passing };
+  return { verdict: 'sunlit', reason: 'sun-on-mark', miss, beam, passing };
 }
 
 /** Angle that a length spans at a distance. [°] */

@@ -1,4 +1,4 @@
-import type { Optic } from '#app/physics/optics/optic.ts';
+import type { OpticInput } from '#app/physics/optics/optic.ts';
 
 /**
  * The contract of the engine: what goes into a reconstruction and what comes out of it.
@@ -7,7 +7,7 @@ import type { Optic } from '#app/physics/optics/optic.ts';
  * where they form a series. Lengths are metres unless the name says mm, fluxes kW/m² or W/m² as the name says.
  */
 
-export const engineVersion = '0.1.0';
+export const engineVersion = '0.2.0';
 
 /** Climate classes with published or stated medians of aerosol and water; see `sky/climate-classes.ts`. */
 export const climateClasses = [
@@ -63,6 +63,19 @@ export interface OpeningInput {
   readonly transmittanceSource: string;
 }
 
+/**
+ * Flat obstacle or opening near the optic, by its corners. A `block` (mullion, bar, sill, fin) stops the rays that meet
+ * it; an `opening` stops the rays that miss every opening of its plane. Rays are tested one by one.
+ */
+export interface OccluderInput {
+  readonly kind: 'block' | 'opening';
+  readonly name?: string;
+  /** Three corners or more in order, in one plane within 1 mm, from the optic's origin. */
+  readonly corners: readonly { readonly eastM: number; readonly northM: number; readonly upM: number }[];
+  /** Openings only: depth of the reveal outward of the outline, square to its plane. [m] */
+  readonly revealDepthM?: number;
+}
+
 export interface SkylineInput {
   /** Apparent elevation of the skyline by bearing; linear between points, closed round the circle. */
   readonly points: readonly { readonly azimuthDeg: number; readonly elevationDeg: number; readonly name?: string }[];
@@ -108,9 +121,12 @@ export interface ReconstructionInput {
   readonly window: { readonly startUtc: string; readonly endUtc: string; readonly clockSigmaS: number };
   readonly sky: SkyInput;
   readonly opening?: OpeningInput;
+  readonly occluders?: readonly OccluderInput[];
+  /** One sigma of the corners of the occluders. [m] Left out: 0.01. */
+  readonly occluderSigmaM?: number;
   readonly skyline?: SkylineInput;
   /** Left out when unknown: only sun, sky and daylight are then computed. */
-  readonly optic?: Optic;
+  readonly optic?: OpticInput;
   /** Relative one-sigma of the optic's focal length or radius. Left out: 0.02 measured, 0.30 type default. */
   readonly opticSigmaRel?: number;
   readonly mark?: MarkInput;
@@ -134,6 +150,7 @@ export const minuteReasons = [
   'near-horizon',
   'below-skyline',
   'outside-opening',
+  'blocked',
   'wrong-side',
   'beam-misses',
   'uncertainty-straddles',
@@ -243,6 +260,8 @@ export interface FocusResult {
 /** Figures of the ray trace at the best minute, in the plane that `plane` names. */
 export interface TracedFocusResult {
   readonly rays: number;
+  /** Share of the light towards the optic that openings and bars stop; left out by engines before 0.2. */
+  readonly blockedFraction?: number;
   /** Share of the power meeting the optic that leaves it towards the focus. */
   readonly transmittedFraction: number;
   /** Radii round the hot spot that hold half and four fifths of the power in the plane. */
@@ -313,6 +332,13 @@ export interface Grade {
   readonly because: readonly string[];
 }
 
+/** The trace table that the sampling reads: every axis with its nodes, and the rays that each node rests on. */
+export interface TraceTableResult {
+  readonly traces: number;
+  readonly raysEach: number;
+  readonly axes: readonly { readonly axis: string; readonly unit: string; readonly nodes: readonly number[] }[];
+}
+
 /** What the seeded sampling over the inputs' uncertainties found; null without optic, mark or beam. */
 export interface SamplingResult {
   readonly samples: number;
@@ -322,10 +348,37 @@ export interface SamplingResult {
   /** Flux on a 5 mm disc at the part of the mark nearest to the spot, at the best minute. */
   readonly fluxKwm2: Band;
   readonly fluxOver: readonly { readonly thresholdKwm2: number; readonly share: number }[];
-  /** By how much the median flux still moves between the two halves of the sample. */
+  /**
+   * Share of samples in which the measured time to ignition of 100 mm samples with a spark is shorter than the rest of
+   * the spot on one point; null where no such time is on file. Left out by engines before 0.2.
+   */
+  readonly ignitedWithinDwellShare?: number | null;
+  /** By how much the median flux moves from half of the samples to all of them. */
   readonly convergenceKwm2: number;
+  /** Median flux of the first half of the samples. Left out by engines before 0.2. */
+  readonly halfSampleMedianKwm2?: number;
+  /** Null where nothing could be traced, and the closed form was sampled. Left out by engines before 0.2. */
+  readonly table?: TraceTableResult | null;
   /** One input at a time, one sigma either way, greatest effect first. */
   readonly tornado: readonly { readonly input: string; readonly lowKwm2: number; readonly highKwm2: number }[];
+}
+
+/** Consecutive minutes with light on the mark; `toUtc` is the end of the last minute. */
+export interface LightInterval {
+  readonly fromUtc: string;
+  readonly toUtc: string;
+  readonly minutes: number;
+  /** Greatest likely concentration on the 5 mm disc at the mark, in suns. */
+  readonly greatestSuns: number;
+}
+
+/** When any part of the optic throws sunlight on the mark, apart from when that light is focused there. */
+export interface LightOnMark {
+  readonly lit: readonly LightInterval[];
+  readonly focused: readonly LightInterval[];
+  /** Concentrations on the 5 mm disc at the mark from which light counts as lit and as focused. [suns] */
+  readonly litFromSuns: number;
+  readonly focusedFromSuns: number;
 }
 
 export interface ReconstructionResult {
@@ -338,6 +391,8 @@ export interface ReconstructionResult {
   readonly minutes: readonly MinuteResult[];
   readonly runs: readonly MinuteRun[];
   readonly totals: { readonly sunlit: number; readonly notSunlit: number; readonly cannotTell: number };
+  /** Null without optic or mark; left out by engines before 0.2. */
+  readonly light?: LightOnMark | null;
   readonly best: BestMoment | null;
   readonly focus: FocusResult | null;
   readonly heating: HeatingResult | null;

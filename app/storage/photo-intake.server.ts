@@ -1,7 +1,8 @@
 import { env } from '#app/env.server.ts';
 import type { PhotoExif, PhotoMime } from '#app/domain/photo.ts';
-import { contentOf, photoRefusal, showableFileName } from '#app/domain/photo.ts';
-import { readExif } from './exif.server.ts';
+import { contentOf, isPhotoMime, photoRefusal, showableFileName } from '#app/domain/photo.ts';
+import { readExif, readHeicExif } from './exif.server.ts';
+import { heicSize, isHeicWhole } from './heic-decoder.server.ts';
 import { imageDecoder } from './image-decoder.server.ts';
 import { sha256Hex } from './sha256.server.ts';
 
@@ -34,22 +35,45 @@ export async function examinePhoto(file: IncomingFile): Promise<Examination> {
   if (file.bytes.byteLength === 0) return refuse(photoRefusal.empty(fileName));
   if (file.bytes.byteLength > env.PHOTO_MAX_BYTES) return refuse(photoRefusal.tooBig(fileName, env.PHOTO_MAX_BYTES));
   const content = contentOf(file.bytes);
-  if (content !== 'image/jpeg' && content !== 'image/png' && content !== 'image/webp') return refuse(photoRefusal.otherKind(fileName, content));
-  const size = await readSize(file.bytes);
+  if (!isPhotoMime(content)) return refuse(photoRefusal.otherKind(fileName, content));
+  const look = content === 'image/heic' ? heic : ordinary;
+  const size = await look.size(file.bytes);
   if (!size) return refuse(photoRefusal.damaged(fileName));
   if (size.widthPx * size.heightPx > env.PHOTO_MAX_PIXELS) return refuse(photoRefusal.tooManyPixels(fileName, env.PHOTO_MAX_PIXELS));
-  if (!(await decodesToTheEnd(file.bytes))) return refuse(photoRefusal.damaged(fileName));
-  const { exifBlock, ...shown } = size;
-  return { ok: true, photo: { bytes: file.bytes, fileName, mime: content, sha256: sha256Hex(file.bytes), ...shown, exif: await readExif(exifBlock) } };
+  if (!(await look.isWhole(file.bytes))) return refuse(photoRefusal.damaged(fileName));
+  return { ok: true, photo: { bytes: file.bytes, fileName, mime: content, sha256: sha256Hex(file.bytes), ...size, exif: await look.exif(file.bytes) } };
 }
 
-/** Size from the header alone; null when even that cannot be read. */
+interface Look {
+  /** From the head of the file alone; null when even that cannot be read. */
+  readonly size: (bytes: Uint8Array) => Promise<{ widthPx: number; heightPx: number } | null>;
+  readonly isWhole: (bytes: Uint8Array) => Promise<boolean>;
+  readonly exif: (bytes: Uint8Array) => Promise<PhotoExif>;
+}
+
+const ordinary: Look = { size: readSize, isWhole: decodesToTheEnd, exif: async (bytes) => readExif((await readHeader(bytes)).exif) };
+
+/** A HEIC picture takes seconds to decode, so that here only its boxes are looked at; the worker decodes it for its copies. */
+const heic: Look = {
+  size: async (bytes) => {
+    try {
+      return await heicSize(bytes);
+    } catch {
+      // As below: the decoder's reasons are for programmers.
+      return null;
+    }
+  },
+  isWhole: (bytes) => Promise.resolve(isHeicWhole(bytes)),
+  exif: readHeicExif,
+};
+
+// The limit is checked by the caller, which has a sentence for it.
+const readHeader = (bytes: Uint8Array) => imageDecoder(bytes, { limitInputPixels: false }).metadata();
+
 async function readSize(bytes: Uint8Array) {
   try {
-    // The limit is checked by the caller, which has a sentence for it.
-    const header = await imageDecoder(bytes, { limitInputPixels: false }).metadata();
-    const { width, height } = header.autoOrient;
-    return { widthPx: width, heightPx: height, exifBlock: header.exif };
+    const { width, height } = (await readHeader(bytes)).autoOrient;
+    return { widthPx: width, heightPx: height };
   } catch {
     // The decoder's reasons are for programmers; the person reads that the file is damaged.
     return null;

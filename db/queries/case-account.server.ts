@@ -157,8 +157,10 @@ async function lacksOf(db: DbOrTx, row: CaseRow, facts: MoveFacts, scene: Scene 
 }
 
 const places: Readonly<Record<string, MovePlace>> = { triage: 'triage', reported: 'triage', findings: 'findings' };
+/** What follows a signature is the manager's, who has no form on the page of the finding. */
+const managersMoves: readonly string[] = ['close-no-action', 'pass-to-action'];
 /** The finding is sent from its own page, where it is written; duplicates are undone where they were marked. */
-const placeOfMove = (moveId: string, from: string): MovePlace => (moveId === 'send-findings' ? 'findings' : (places[from] ?? 'here'));
+const placeOfMove = (moveId: string, from: string): MovePlace => (moveId === 'send-findings' ? 'findings' : managersMoves.includes(moveId) ? 'here' : (places[from] ?? 'here'));
 
 /** The way onward stands first, ways back and aside after it. */
 const weight = (move: Move) => (onward.includes(move.id) ? 0 : 1);

@@ -1,11 +1,12 @@
 import { and, asc, desc, eq, inArray, isNotNull, isNull, sql } from 'drizzle-orm';
 import type { DbOrTx } from '#db/client.server.ts';
 import { caseNotes, correctiveActions, findings, hypotheses, injuries, involvements, logEntries, organisations, photos, reconstructions, scenes, sites, sunReturns, users } from '#db/schema/all.ts';
-import type { ActionBeforeRedaction, CaseBeforeRedaction, FindingBeforeRedaction, PhotoBeforeRedaction } from '#app/domain/case-before-redaction.ts';
+import type { ActionBeforeRedaction, CaseBeforeRedaction, FindingBeforeRedaction, ItemBeforeRedaction, PhotoBeforeRedaction } from '#app/domain/case-before-redaction.ts';
 import type { CaseState } from '#app/domain/case-state.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import type { CaseSubject } from '#app/domain/permissions.ts';
 import type { CaseRow } from './case-subject.server.ts';
+import { listEvidenceOfCase } from './evidence.server.ts';
 import { findCase } from './case-subject.server.ts';
 
 const iso = (instant: Date | null): string | null => instant?.toISOString() ?? null;
@@ -46,6 +47,7 @@ export async function readCaseBeforeRedaction(db: DbOrTx, params: { readonly act
       moves: await movesOf(db, row.id),
       people: await peopleOf(db, row.id),
       staff: await staffOf(db, row),
+      items: await itemsOf(db, row.id),
       injuries: await db.select({ treatment: injuries.treatment }).from(injuries).where(eq(injuries.caseId, row.id)).orderBy(asc(injuries.createdAt), asc(injuries.id)),
     },
   };
@@ -220,6 +222,15 @@ async function movesOf(db: DbOrTx, caseId: string) {
   const state = sql<CaseState>`${logEntries.after} ->> 'state'`;
   const rows = await db.select({ at: logEntries.at, state }).from(logEntries).where(and(eq(logEntries.caseId, caseId), eq(logEntries.subject, 'cases'), sql`${logEntries.after} ->> 'state' is not null`)).orderBy(asc(logEntries.at), asc(logEntries.sequence));
   return rows.map((row) => ({ ...row, at: row.at.toISOString() }));
+}
+
+async function itemsOf(db: DbOrTx, caseId: string): Promise<ItemBeforeRedaction[]> {
+  return (await listEvidenceOfCase(db, caseId)).map(({ item, custody, exams }) => ({
+    label: item.label,
+    kind: item.kind,
+    custody: custody.map((record) => ({ role: record.holderRole, from: record.fromAt.toISOString(), to: iso(record.toAt) })),
+    exams: exams.map((exam) => ({ kind: exam.kind, at: exam.performedAt.toISOString(), noticeGiven: exam.noticeAt !== null })),
+  }));
 }
 
 async function peopleOf(db: DbOrTx, caseId: string) {

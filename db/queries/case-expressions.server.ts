@@ -14,6 +14,9 @@ export const latestOpticKind = sql<SceneOpticKind>`coalesce((select s.scene->'op
 
 export const markBearingKnown = sql<boolean>`coalesce((select s.scene->'mark' ? 'bearingDeg' from scenes s where s.case_id = ${cases.id} order by s.version desc limit 1), false)`;
 
+/** From optic to mark as last measured, in the frame that the scene states. */
+export const markBearingDeg = sql<number | null>`(select (s.scene->'mark'->'bearingDeg'->>'value')::float8 from scenes s where s.case_id = ${cases.id} order by s.version desc limit 1)`;
+
 export const signedCertainty = sql<Certainty | null>`(select f.certainty from findings f where f.case_id = ${cases.id} and f.state = 'signed' order by f.version desc limit 1)`;
 
 export const sunlightRuledOut = sql<boolean>`(${signedCertainty} is not null and exists (select 1 from hypotheses h where h.case_id = ${cases.id} and h.kind = 'focused-sunlight' and h.result = 'ruled-out'))`;

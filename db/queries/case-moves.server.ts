@@ -20,6 +20,7 @@ export async function readMoveFacts(db: DbOrTx, row: CaseRow): Promise<MoveFacts
     reconstructionWaiver: row.reconstructionWaiver,
     evidenceWaiver: row.evidenceWaiver,
     effectivenessWaiver: row.effectivenessWaiver,
+    noActionReason: row.noActionReason,
     lesson: row.lesson,
     externalReports: row.externalReports,
     closedAt: row.closedAt,

@@ -71,6 +71,7 @@ export async function getFindingPage(db: DbOrTx, { actor, caseNumber, version }:
     opinionShown,
     versions: readable.map((finding) => versionView(finding, found.row.zone)),
     chosen: chosen ? { words: findingWords(chosen, hypothesisLabel(hypotheses, chosen.selectedHypothesisId)), note: noteOf(chosen, found.row.zone) } : null,
+    before: chosen ? beforeOf(chosen, readable, hypotheses) : null,
     chosenVersion: chosen?.version ?? null,
     signed: chosen?.state === 'signed' ? await getFrozenFinding(db, { actor, caseNumber, version: chosen.version }) : null,
     form,
@@ -87,6 +88,12 @@ function choose({ mode, opinionShown, latest }: Context, readable: readonly Find
   const asked = readable.find((finding) => finding.version === version);
   if (asked) return asked;
   return mode === 'write' ? null : latest;
+}
+
+/** The version before the chosen one, in words, for reading what changed; null for the first that this reader may see. */
+function beforeOf(chosen: FindingView, readable: readonly FindingView[], hypotheses: readonly HypothesisView[]) {
+  const earlier = readable.find((finding) => finding.version < chosen.version);
+  return earlier ? findingWords(earlier, hypothesisLabel(hypotheses, earlier.selectedHypothesisId)) : null;
 }
 
 function hypothesisLabel(hypotheses: readonly HypothesisView[], id: string | null): string | null {

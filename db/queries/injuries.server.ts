@@ -5,6 +5,7 @@ import type { Actor } from '#app/domain/roles.ts';
 import { visibleTo } from './scope.server.ts';
 
 export type InjuryValues = Pick<typeof injuries.$inferInsert, 'part' | 'kind' | 'treatment' | 'daysAway' | 'restrictedDays' | 'description'>;
+type NewInjury = InjuryValues & Pick<typeof injuries.$inferInsert, 'involvementId'>;
 export type InjuryRow = typeof injuries.$inferSelect;
 
 /** Injuries of a case. Class health: call it only after `case:read-health` was decided for this actor and case. */
@@ -18,7 +19,7 @@ export async function listInjuries(db: DbOrTx, params: { actor: Actor; caseNumbe
   return rows.map((row) => row.injury);
 }
 
-export async function insertInjury(tx: Transaction, caseId: string, values: InjuryValues): Promise<string> {
+export async function insertInjury(tx: Transaction, caseId: string, values: NewInjury): Promise<string> {
   const [row] = await tx.insert(injuries).values({ caseId, ...values }).returning({ id: injuries.id });
   if (!row) throw new Error('The injury was not stored.');
   return row.id;

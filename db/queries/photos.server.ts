@@ -1,8 +1,9 @@
 import { and, asc, eq, isNull, lt, sql } from 'drizzle-orm';
 import type { DbOrTx, Transaction } from '#db/client.server.ts';
 import { cases, photos } from '#db/schema/all.ts';
-import type { PhotoExifAnswer, PhotoMask } from '#app/domain/photo.ts';
+import type { PhotoExif, PhotoExifAnswer, PhotoMask } from '#app/domain/photo.ts';
 import type { PhotoView } from '#app/domain/incident.ts';
+import type { PhotoMark } from '#app/domain/photo-marks.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import { visibleTo } from './scope.server.ts';
 
@@ -14,9 +15,28 @@ export interface DraftPhoto {
   readonly id: string;
   readonly fileName: string;
   readonly bytes: number;
+  readonly mime: string;
   readonly state: PhotoRow['state'];
+  readonly exif: PhotoExif;
+  readonly exifAnswer: PhotoExifAnswer;
+  readonly view: PhotoView | null;
+  readonly caption: string;
+  readonly clockErrorS: number;
+  readonly madeSmaller: boolean;
 }
-const draftPhoto = { id: photos.id, fileName: photos.fileName, bytes: photos.bytes, state: photos.state };
+const draftPhoto = {
+  id: photos.id,
+  fileName: photos.fileName,
+  bytes: photos.bytes,
+  mime: photos.mime,
+  state: photos.state,
+  exif: photos.exif,
+  exifAnswer: photos.exifAnswer,
+  view: photos.view,
+  caption: photos.caption,
+  clockErrorS: photos.clockErrorS,
+  madeSmaller: photos.madeSmaller,
+};
 
 /** Whoever knows the client id holds the draft, except that a signed-in person's photos are theirs alone. */
 const ofDraft = (clientId: string, actorId: string | null) =>
@@ -27,12 +47,18 @@ const ofDraft = (clientId: string, actorId: string | null) =>
   );
 
 export function listDraftPhotos(db: DbOrTx, params: { clientId: string; actorId: string | null }): Promise<DraftPhoto[]> {
-  return db.select(draftPhoto).from(photos).where(ofDraft(params.clientId, params.actorId)).orderBy(asc(photos.createdAt), asc(photos.id));
+  return db.select(draftPhoto).from(photos).where(ofDraft(params.clientId, params.actorId)).orderBy(sql`${photos.position} asc nulls last`, asc(photos.createdAt), asc(photos.id));
 }
 
 export async function findDraftPhoto(db: DbOrTx, params: { photoId: string; clientId: string; actorId: string | null }): Promise<PhotoRow | null> {
   const [row] = await db.select().from(photos).where(and(eq(photos.id, params.photoId), ofDraft(params.clientId, params.actorId)));
   return row ?? null;
+}
+
+/** Says something of a photo of a report that was not sent. @returns false when there is no such photo any more. */
+export async function updateDraftPhoto(tx: Transaction, params: { photoId: string; clientId: string; actorId: string | null; change: PhotoChange }): Promise<boolean> {
+  const rows = await tx.update(photos).set(params.change).where(and(eq(photos.id, params.photoId), ofDraft(params.clientId, params.actorId))).returning({ id: photos.id });
+  return rows.length > 0;
 }
 
 /** Removes a photo of a report that was not sent. Photos of a case are never removed. */
@@ -100,6 +126,12 @@ export async function listCasePhotos(db: DbOrTx, params: { actor: Actor; caseNum
   return rows.map((row) => row.photo);
 }
 
+/** One photo of a visible case, by label. */
+export async function findPhotoByLabel(db: DbOrTx, params: { actor: Actor; caseNumber: number; label: number }): Promise<PhotoRow | null> {
+  const [row] = await db.select({ photo: photos }).from(photos).innerJoin(cases, eq(cases.id, photos.caseId)).where(and(visibleTo(params.actor), eq(cases.number, params.caseNumber), eq(photos.label, params.label)));
+  return row?.photo ?? null;
+}
+
 /** A photo of the locked case. */
 export async function getPhotoOfCase(tx: Transaction, params: { caseId: string; photoId: string }): Promise<PhotoRow | null> {
   const [row] = await tx.select().from(photos).where(and(eq(photos.caseId, params.caseId), eq(photos.id, params.photoId)));
@@ -113,7 +145,9 @@ export interface PhotoChange {
   readonly clockErrorS?: number;
   readonly takenAt?: Date | null;
   readonly exifAnswer?: PhotoExifAnswer;
+  readonly position?: number | null;
   readonly masks?: readonly PhotoMask[];
+  readonly marks?: readonly PhotoMark[];
   readonly releasable?: PhotoRow['releasable'];
 }
 

@@ -11,11 +11,12 @@ import { runView } from '#app/domain/run-view.ts';
 import type { ReconstructionInput, ReconstructionResult } from '#app/physics/model.ts';
 import type { CaseRow } from './case-subject.server.ts';
 import { findCase } from './case-subject.server.ts';
+import { getScaledPhoto } from './photo-scale.server.ts';
 import { getReconstruction, getReconstructionSource, listReconstructions } from './reconstructions.server.ts';
 import type { ReconstructionLine, ReconstructionWhole } from './reconstructions.server.ts';
 
 /** The case, if this person may read its runs; null when the case is not theirs to see. @throws DomainError `forbidden` */
-async function readableCase(db: DbOrTx, actor: Actor, caseNumber: number) {
+export async function findReadableRuns(db: DbOrTx, actor: Actor, caseNumber: number) {
   const found = await findCase(db, actor, caseNumber);
   if (found && !canOnCase(actor, 'reconstruction:read', found.subject)) throw new DomainError('forbidden', `Reconstructions are not open to you. ${whoCan('reconstruction:read')}`);
   return found;
@@ -27,7 +28,8 @@ function windowWords(window: { readonly startUtc: string; readonly endUtc: strin
   return sameDay ? `${formatDay(start, zone)}, ${formatClock(start, zone)} to ${formatClock(end, zone)}` : `${formatDayClock(start, zone)} to ${formatDayClock(end, zone)}`;
 }
 
-function lineView(line: Omit<ReconstructionLine, 'resultHash'>, zone: string): RunLineView {
+/** One run as a line of the list. */
+export function lineView(line: Omit<ReconstructionLine, 'resultHash'>, zone: string): RunLineView {
   return {
     number: line.number,
     state: line.state,
@@ -48,7 +50,7 @@ function lineView(line: Omit<ReconstructionLine, 'resultHash'>, zone: string): R
 
 /** The runs of a case, with what a new one would go by; null when the case is not theirs to see. */
 export async function getRunsPage(db: DbOrTx, params: { actor: Actor; caseNumber: number; now: Date }): Promise<RunsPageView | null> {
-  const found = await readableCase(db, params.actor, params.caseNumber);
+  const found = await findReadableRuns(db, params.actor, params.caseNumber);
   const source = await getReconstructionSource(db, params);
   if (!found || !source) return null;
   const runs = (await listReconstructions(db, params)).map((line) => lineView(line, found.row.zone));
@@ -82,7 +84,7 @@ async function changesSince(db: DbOrTx, params: { actor: Actor; caseNumber: numb
 
 /** One run with all that its page draws; null when it is not there or not theirs to see. */
 export async function getRunPage(db: DbOrTx, params: { actor: Actor; caseNumber: number; number: number; now: Date }): Promise<RunPageView | null> {
-  const found = await readableCase(db, params.actor, params.caseNumber);
+  const found = await findReadableRuns(db, params.actor, params.caseNumber);
   const run = await getReconstruction(db, params);
   if (!found || !run) return null;
   const { zone } = found.row;
@@ -97,6 +99,7 @@ export async function getRunPage(db: DbOrTx, params: { actor: Actor; caseNumber:
     changes: await changesSince(db, params, run),
     refusal: runRefusal(params.actor, 'reconstruction:run', found.subject),
     attachRefusal: runRefusal(params.actor, 'reconstruction:attach', found.subject),
+    photo: run.state === 'done' ? await getScaledPhoto(db, params) : null,
     view: run.state === 'done' && run.result ? runView(run.input, run.result, { foundAt: foundAt(found.row), now: params.now }) : null,
   };
 }
@@ -114,7 +117,7 @@ export interface RunExport {
 
 /** A finished run as it was computed, for taking away; null when there is none or it is not theirs to see. */
 export async function getRunExport(db: DbOrTx, params: { actor: Actor; caseNumber: number; number: number }): Promise<RunExport | null> {
-  const found = await readableCase(db, params.actor, params.caseNumber);
+  const found = await findReadableRuns(db, params.actor, params.caseNumber);
   const run = await getReconstruction(db, params);
   if (!found || !run?.result || !run.resultHash) return null;
   const { number, engineVersion, zoneRules, inputHash, resultHash, input, result } = run;

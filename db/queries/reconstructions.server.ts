@@ -4,7 +4,9 @@ import { cases, reconstructions, scenes, sites, sunReturns, users } from '#db/sc
 import type { Actor } from '#app/domain/roles.ts';
 import type { Scene, SceneSkyline } from '#app/domain/scene.ts';
 import type { ReconstructionInput, ReconstructionResult } from '#app/physics/model.ts';
+import type { WeatherSeries } from '#app/domain/weather.ts';
 import { visibleTo } from './scope.server.ts';
+import { standingWeather } from './weather.server.ts';
 
 export interface ReconstructionSource {
   readonly caseId: string;
@@ -13,6 +15,7 @@ export interface ReconstructionSource {
   readonly scene: Scene | null;
   readonly site: { readonly latitudeDeg: number; readonly longitudeDeg: number; readonly elevationM: number; readonly zone: string; readonly skyline: SceneSkyline | null };
   readonly times: { readonly onsetEarliestAt: Date | null; readonly onsetLatestAt: Date | null; readonly foundAt: Date | null; readonly foundClockErrorS: number; readonly foundPrecision: string };
+  readonly weather: readonly WeatherSeries[];
 }
 
 /** What a reconstruction of the case is made from: the newest scene, the place and the times. */
@@ -38,6 +41,7 @@ export async function getReconstructionSource(db: DbOrTx, params: { actor: Actor
       skyline: row.site.skyline,
     },
     times: { onsetEarliestAt, onsetLatestAt, foundAt, foundClockErrorS, foundPrecision },
+    weather: await standingWeather(db, row.row.id),
   };
 }
 

@@ -2,9 +2,10 @@ import type { DbOrTx } from '#db/client.server.ts';
 import type { CardCase } from '#app/domain/case-card.ts';
 import { dayCard, needsWholeDay } from '#app/domain/case-card.ts';
 import type { RegisterGroup, RegisterRowView, RegisterView } from '#app/domain/case-view.ts';
-import { registerGroups, registerHeading } from '#app/domain/case-view.ts';
+import { firstLookHeading, registerGroups, registerHeading } from '#app/domain/case-view.ts';
 import { waitsFor } from '#app/domain/case-waiting.ts';
 import { noReturnWords, returnView, stateNote, windowWords } from '#app/domain/case-words.ts';
+import { firstLookView } from '#app/domain/first-look.ts';
 import { sunAzimuthDeg } from '#app/domain/sun-now.ts';
 import { localDay } from '#app/domain/local-time.ts';
 import { caseRules } from '#app/domain/permissions.ts';
@@ -21,9 +22,11 @@ export async function getRegister(db: DbOrTx, query: RegisterQuery): Promise<Reg
   const wide = facts.some((one) => needsWholeDay(cardCase(one), one.run));
   const span = wide ? { fromHour: 0, toHour: 24 } : { fromHour: 4, toHour: 22 };
   const ownOnly = !holdsRoleAnywhere(query.actor, caseRules['case:read'].roles);
+  const rows = facts.map((one) => registerRow(one, query.now, span));
+  const late = rows.filter((row) => row.firstLook?.late).length;
   return {
-    heading: registerHeading(groupCounts['before-fix'], total, ownOnly, counts.open),
-    rows: facts.map((one) => registerRow(one, query.now, span)),
+    heading: query.filter.view === 'first-look' ? firstLookHeading(total, late) : registerHeading(groupCounts['before-fix'], total, ownOnly, counts.open),
+    rows,
     total,
     groupCounts,
     counts: { ...counts, late: mayFilterLate(query.actor) ? counts.late : null, injury: mayFilterInjury(query.actor) ? counts.injury : null },
@@ -55,6 +58,7 @@ function cardCase(facts: RegisterFacts): CardCase {
 export function registerRow(facts: RegisterFacts, now: Date, span: RegisterView['span']): RegisterRowView {
   const { zone, state } = facts;
   const window = windowWords(facts.onsetEarliestAt, facts.onsetLatestAt, correctedFound(facts), zone);
+  const firstLook = state === 'reported' ? firstLookView({ reportedAt: facts.reportedAt, zone, urgent: facts.hazardStillPresent === 'yes' || facts.hurt }, now) : null;
   const relevant = state !== 'closed' && state !== 'duplicate' && !facts.sunlightRuledOut;
   return {
     number: facts.number,
@@ -66,9 +70,10 @@ export function registerRow(facts: RegisterFacts, now: Date, span: RegisterView[
     windowHours: window.hours,
     card: dayCard(cardCase(facts), facts.run, span),
     state,
-    stateNote: stateNote({ ...facts, mayReadHealth: facts.healthVisible }),
+    stateNote: [stateNote({ ...facts, mayReadHealth: facts.healthVisible }), firstLook ? `first look ${firstLook.words}` : ''].filter(Boolean).join(', '),
     nextReturn: relevant ? returnView(facts.nextReturnAt, zone, now) : null,
     returnWords: noReturnWords({ state, duplicateOfNumber: facts.duplicateOfNumber, attachedRun: facts.run !== null, returnsListed: facts.returnsListed, sunlightRuledOut: facts.sunlightRuledOut }),
+    firstLook,
     waitsFor: waitsFor({
       ...facts,
       today: localDay(now, zone),

@@ -37,6 +37,7 @@ export const mayFilterInjury = (actor: Actor): boolean => holdsRoleAnywhere(acto
 /** Whether the filter for late actions is offered at all. */
 export const mayFilterLate = (actor: Actor): boolean => holdsRoleAnywhere(actor, caseRules['action:read'].roles);
 
+const awaitsLook = sql`${cases.state} in ('reported', 'triage', 'returned')`;
 const isOpen = sql`${cases.state} not in ('closed', 'duplicate')`;
 
 function isMine(actor: Actor): SQL {
@@ -44,13 +45,16 @@ function isMine(actor: Actor): SQL {
     select 1 from ${correctiveActions} where ${correctiveActions.caseId} = ${cases.id} and (${correctiveActions.ownerId} = ${actor.userId} or ${correctiveActions.verifierId} = ${actor.userId})))`;
 }
 
-const isHurt = (actor: Actor): SQL => sql`(${cases.anyoneHurt} = 'yes' and ${healthVisible(actor)})`;
+/** Somebody was hurt, to those who may know. */
+export const isHurt = (actor: Actor): SQL => sql`(${cases.anyoneHurt} = 'yes' and ${healthVisible(actor)})`;
 const isLate = (actor: Actor, now: Date): SQL => sql`(${hasLateAction(now)} and ${actionsVisible(actor)})`;
 
 function viewCondition({ actor, filter, now }: RegisterQuery): SQL | undefined {
   switch (filter.view) {
     case 'open':
       return isOpen;
+    case 'first-look':
+      return awaitsLook;
     case 'late':
       return isLate(actor, now);
     case 'injury':
@@ -98,8 +102,10 @@ function groupOf(now: Date) {
   return sql<number>`case when ${isOpen} and ${nextReturnAt(now)} is not null and not ${fixProven} then 1 when ${cases.state} in ('reported', 'triage', 'returned') then 2 else 3 end`;
 }
 
-function orderOf({ filter, now }: RegisterQuery): SQL[] {
+function orderOf({ actor, filter, now }: RegisterQuery): SQL[] {
   const lastly = desc(cases.number);
+  // The clock of a hazard or an injury is the shortest; what waits for its reporter comes last.
+  if (filter.view === 'first-look' && filter.sort === 'return') return [sql`case when ${cases.state} = 'returned' then 2 when ${cases.hazardStillPresent} = 'yes' or ${isHurt(actor)} then 0 else 1 end`, sql`${cases.reportedAt} asc`, lastly];
   if (filter.sort === 'newest') return [desc(cases.reportedAt), lastly];
   if (filter.sort === 'oldest') return [sql`${cases.reportedAt} asc`, lastly];
   if (filter.sort === 'risk') return [sql`array_position(array['severe', 'high', 'medium', 'low'], ${cases.risk}) asc nulls last`, lastly];
@@ -142,6 +148,9 @@ function registerColumns(actor: Actor, now: Date) {
     returnsListed,
     draftExists,
     openComments,
+    noActionSaid: sql<boolean>`(${cases.noActionReason} is not null)`,
+    hazardStillPresent: cases.hazardStillPresent,
+    hurt: sql<boolean>`${isHurt(actor)}`,
     duplicateOfNumber,
     nextReturnAt: nextReturnAt(now),
     run: attachedRun,
@@ -183,12 +192,12 @@ export async function countRegisterGroups(db: DbOrTx, query: RegisterQuery): Pro
 }
 
 /** Counts beside the words of the filter line, over everything that the actor may see. */
-export async function countRegisterViews(db: DbOrTx, actor: Actor, now: Date): Promise<{ all: number; open: number; late: number; injury: number; mine: number }> {
+export async function countRegisterViews(db: DbOrTx, actor: Actor, now: Date): Promise<{ all: number; open: number; 'first-look': number; late: number; injury: number; mine: number }> {
   const where = (condition: SQL) => sql<number>`count(*) filter (where ${condition})`.mapWith(Number);
   const [row] = await db
-    .select({ all: where(sql`true`), open: where(isOpen), late: where(isLate(actor, now)), injury: where(isHurt(actor)), mine: where(isMine(actor)) })
+    .select({ all: where(sql`true`), open: where(isOpen), 'first-look': where(awaitsLook), late: where(isLate(actor, now)), injury: where(isHurt(actor)), mine: where(isMine(actor)) })
     .from(cases)
     .innerJoin(sites, eq(sites.id, cases.siteId))
     .where(visibleTo(actor));
-  return row ?? { all: 0, open: 0, late: 0, injury: 0, mine: 0 };
+  return row ?? { all: 0, open: 0, 'first-look': 0, late: 0, injury: 0, mine: 0 };
 }

@@ -2,14 +2,26 @@ import { and, asc, eq, inArray, isNotNull, isNull, or, sql } from 'drizzle-orm';
 import type { DbOrTx, Transaction } from '#db/client.server.ts';
 import { cases, findings, hypotheses, involvements, logEntries, photos, sites } from '#db/schema/all.ts';
 import type { CaseState } from '#app/domain/case-state.ts';
+import { acceptedTime } from '#app/domain/photo.ts';
 import type { ReportHolder, ReportSite } from '#app/domain/report.ts';
 
 const reportSite = { id: sites.id, organisationId: sites.organisationId, name: sites.name, code: sites.code, zone: sites.zone };
 
+const ofHolder = (holder: ReportHolder) => (holder.kind === 'guest' ? eq(sites.id, holder.site.id) : eq(sites.organisationId, holder.actor.organisationId));
+type SiteRow = typeof sites.$inferSelect;
+
 /** Sites that the holder of a report may choose from: all of the person's organisation, or the one of the guest's link. */
-export function listReportSites(db: DbOrTx, holder: ReportHolder): Promise<(ReportSite & { latitudeDeg: number; longitudeDeg: number })[]> {
-  const mine = holder.kind === 'guest' ? eq(sites.id, holder.site.id) : eq(sites.organisationId, holder.actor.organisationId);
-  return db.select({ ...reportSite, latitudeDeg: sites.latitudeDeg, longitudeDeg: sites.longitudeDeg }).from(sites).where(mine).orderBy(asc(sites.name), asc(sites.id));
+export function listReportSites(db: DbOrTx, holder: ReportHolder): Promise<(ReportSite & Pick<SiteRow, 'latitudeDeg' | 'longitudeDeg' | 'jurisdiction'>)[]> {
+  return db.select({ ...reportSite, latitudeDeg: sites.latitudeDeg, longitudeDeg: sites.longitudeDeg, jurisdiction: sites.jurisdiction }).from(sites).where(ofHolder(holder)).orderBy(asc(sites.name), asc(sites.id));
+}
+
+/** What the sun at one such site depends on; null when it is not the holder's to report for. */
+export async function getReportSitePlace(db: DbOrTx, holder: ReportHolder, siteId: string): Promise<Pick<SiteRow, 'latitudeDeg' | 'longitudeDeg' | 'elevationM' | 'zone' | 'skyline'> | null> {
+  const [row] = await db
+    .select({ latitudeDeg: sites.latitudeDeg, longitudeDeg: sites.longitudeDeg, elevationM: sites.elevationM, zone: sites.zone, skyline: sites.skyline })
+    .from(sites)
+    .where(and(ofHolder(holder), eq(sites.id, siteId)));
+  return row ?? null;
 }
 
 /** The site whose account-free link carries this code; null when the link is closed or never was. */
@@ -31,6 +43,7 @@ export interface SentReport {
   readonly organisationId: string;
   readonly siteId: string;
   readonly reporterId: string | null;
+  readonly zone: string;
 }
 
 const sentReport = {
@@ -41,6 +54,7 @@ const sentReport = {
   organisationId: cases.organisationId,
   siteId: cases.siteId,
   reporterId: cases.reporterId,
+  zone: cases.zone,
 };
 
 /** The case that a report became, whoever sent it; the caller decides by `isHeldBy`. */
@@ -57,20 +71,26 @@ export async function insertReportedCase(tx: Transaction, values: NewReportedCas
   return row ?? null;
 }
 
-export async function insertInvolvement(tx: Transaction, values: Omit<typeof involvements.$inferInsert, 'id' | 'createdAt'>): Promise<void> {
-  await tx.insert(involvements).values(values);
+export async function insertInvolvement(tx: Transaction, values: Omit<typeof involvements.$inferInsert, 'id' | 'createdAt'>): Promise<string> {
+  const [row] = await tx.insert(involvements).values(values).returning({ id: involvements.id });
+  if (!row) throw new Error('The person was not stored.');
+  return row.id;
 }
 
-/** Gives the photos of the report to its case, labelled in the order they came. Photos that somebody else brought stay behind. */
-export async function attachReportPhotos(tx: Transaction, params: { clientId: string; caseId: string; actorId: string | null }): Promise<number> {
+/**
+ * Gives the photos of the report to its case, labelled in the order that the reporter gave, else in which they came.
+ * Photos that somebody else brought stay behind. A time in a file that the reporter accepted becomes the photo's time.
+ */
+export async function attachReportPhotos(tx: Transaction, params: { clientId: string; caseId: string; actorId: string | null; zone: string }): Promise<number> {
   const mine = params.actorId ? or(isNull(photos.uploadedById), eq(photos.uploadedById, params.actorId)) : isNull(photos.uploadedById);
   const waiting = await tx
-    .select({ id: photos.id })
+    .select({ id: photos.id, exif: photos.exif, exifAnswer: photos.exifAnswer })
     .from(photos)
     .where(and(eq(photos.reportClientId, params.clientId), isNull(photos.caseId), mine))
-    .orderBy(asc(photos.createdAt), asc(photos.id));
+    .orderBy(sql`${photos.position} asc nulls last`, asc(photos.createdAt), asc(photos.id));
   for (const [index, photo] of waiting.entries()) {
-    await tx.update(photos).set({ caseId: params.caseId, label: index + 1 }).where(eq(photos.id, photo.id));
+    const takenAt = acceptedTime(photo, params.zone);
+    await tx.update(photos).set({ caseId: params.caseId, label: index + 1, takenAt }).where(eq(photos.id, photo.id));
   }
   return waiting.length;
 }

@@ -81,3 +81,7 @@ export async function updateSite(tx: Transaction, siteId: string, site: Omit<New
 export async function updateGuestCode(tx: Transaction, siteId: string, guestCode: string | null): Promise<void> {
   await tx.update(sites).set({ guestCode }).where(eq(sites.id, siteId));
 }
+
+export async function updateSiteSkyline(tx: Transaction, siteId: string, skyline: SiteRow['skyline']): Promise<void> {
+  await tx.update(sites).set({ skyline }).where(eq(sites.id, siteId));
+}

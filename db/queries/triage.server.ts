@@ -35,6 +35,7 @@ export async function getTriage(db: DbOrTx, params: { actor: Actor; caseNumber: 
   const investigators = mayAssign ? await listRoleHolders(db, { organisationId: row.organisationId, siteId: row.siteId, roles: ['investigator'] }) : null;
   const mayReadHealth = holdsRole(actor, caseRules['case:read-health'].roles, row.siteId);
   const view: TriageView = {
+    nowUtc: now.toISOString(),
     version: row.version,
     state: row.state,
     hazard: hazardLine(row),
@@ -46,8 +47,9 @@ export async function getTriage(db: DbOrTx, params: { actor: Actor; caseNumber: 
     investigators: investigators?.map((person) => ({ userId: person.userId, name: person.displayName })) ?? null,
     investigatorId: row.assignedToId ?? '',
     warnings: account.warnings,
+    where: await whereView(db, row, scene?.scene ?? null, now),
     sun: await sunOnIt(db, row, scene?.scene ?? null, now),
-    similar: await listSimilarCases(db, { actor, row, opticKind: scene?.scene.optic.kind ?? 'dont-know', now }),
+    similar: await listSimilarCases(db, { actor, row, now }),
     waiting: await listWaitingCases(db, { actor, now }),
     moves: account.moves,
     proposedAnswerDay: localDay(new Date(now.getTime() + 3 * 86_400_000), row.zone),
@@ -81,6 +83,18 @@ function factFields(row: CaseRow): Record<string, string> {
     likelihood: row.likelihood ?? '',
     risk: row.risk ?? '',
     riskBasis: row.riskBasis ?? '',
+  };
+}
+
+async function whereView(db: DbOrTx, row: CaseRow, scene: Scene | null, now: Date): Promise<TriageView['where']> {
+  const place = await casePlace(db, row);
+  const { azimuthDeg, elevationDeg } = sunNow(now, place);
+  const own = row.latitudeDeg !== null && row.longitudeDeg !== null;
+  return {
+    placeWords: `${place.latitudeDeg.toFixed(2)}, ${place.longitudeDeg.toFixed(2)}; ${own ? 'pin of the report' : 'the site, no pin in the report'}`,
+    accuracyM: own ? row.accuracyM : null,
+    sun: { azimuthDeg, elevationDeg },
+    markBearingDeg: scene?.mark.bearingDeg?.value ?? null,
   };
 }
 

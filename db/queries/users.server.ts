@@ -31,6 +31,11 @@ export async function getAccount(db: DbOrTx, userId: string): Promise<Account | 
   return row ?? null;
 }
 
+/** Holds a person's row until the transaction ends, so that two requests of theirs cannot both pass a limit. */
+export async function lockUser(tx: Transaction, userId: string): Promise<void> {
+  await tx.select({ id: users.id }).from(users).where(eq(users.id, userId)).for('update');
+}
+
 export async function updatePassword(db: DbOrTx, userId: string, passwordHash: string): Promise<void> {
   await db.update(users).set({ passwordHash }).where(eq(users.id, userId));
 }

@@ -71,6 +71,8 @@ export const cases = pgTable(
     reconstructionWaiver: text(),
     evidenceWaiver: text(),
     effectivenessWaiver: text(),
+    /** Said by the reviewer with the signature: nothing is to be done, and why. */
+    noActionReason: text(),
     lesson: text(),
     externalReports: text(),
     /** Optimistic lock: raised by every write. */

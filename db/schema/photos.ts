@@ -1,7 +1,8 @@
 import { sql } from 'drizzle-orm';
-import { bigint, check, index, integer, jsonb, pgTable, text, uniqueIndex, uuid } from 'drizzle-orm/pg-core';
+import { bigint, boolean, check, index, integer, jsonb, pgTable, text, uniqueIndex, uuid } from 'drizzle-orm/pg-core';
 import { photoViews } from '#app/domain/incident.ts';
 import type { PhotoExif, PhotoExifAnswer, PhotoMask } from '#app/domain/photo.ts';
+import type { PhotoMark } from '#app/domain/photo-marks.ts';
 import { createdAt, id, instant } from './_columns.ts';
 import { cases } from './cases.ts';
 import { users } from './people.ts';
@@ -29,12 +30,18 @@ export const photos = pgTable(
     state: text({ enum: ['stored', 'ready', 'failed'] }).notNull().default('stored'),
     exif: jsonb().$type<PhotoExif>().notNull(),
     exifAnswer: jsonb().$type<PhotoExifAnswer>().notNull(),
+    /** Place in the order that the reporter gave; null: as it came. */
+    position: integer(),
+    /** The device made it smaller before sending, as the person asked: the original here is not the camera's own file. */
+    madeSmaller: boolean().notNull().default(false),
     view: text({ enum: photoViews }),
     caption: text().notNull().default(''),
     altText: text().notNull().default(''),
     takenAt: instant(),
     clockErrorS: integer().notNull().default(0),
     masks: jsonb().$type<readonly PhotoMask[]>().notNull().default([]),
+    /** Drawn over a copy by a person; the original and the view copy are not touched. */
+    marks: jsonb().$type<readonly PhotoMark[]>().notNull().default([]),
     /** Last time the stored original was hashed again, and how it compared with the hash at intake. */
     hashCheckedAt: instant(),
     hashCheck: text({ enum: ['same', 'differs', 'missing'] }),

@@ -3,11 +3,13 @@ import type { DemoCase } from '#fixtures/demo/demo-case.ts';
 import type { Transaction } from '#db/client.server.ts';
 import { caseNotes, cases, injuries, involvements, logEntries, scenes } from '#db/schema/all.ts';
 import { seedActions, seedFinding } from './finding-and-actions.ts';
+import { seedEvidence } from './evidence.ts';
 import { moment } from './moment.ts';
 import { pick } from './people-and-sites.ts';
 import type { DemoPlaces } from './people-and-sites.ts';
 import { seedPhotos } from './photos.ts';
 import { seedRun } from './runs.ts';
+import { seedWeather } from './weather.ts';
 
 const letters = 'ABCDEFGHJKLMNPQRSTUVWXYZ23456789';
 const draw = (count: number) => Array.from({ length: count }, () => letters[randomInt(letters.length)]).join('');
@@ -79,8 +81,9 @@ export async function seedCase(tx: Transaction, demo: DemoCase, places: DemoPlac
   if (demo.photoKey !== null) await seedPhotos(tx, { photoKey: demo.photoKey, caseId, clientId, zone: site.zone, uploadedById: reporterId, releasable: demo.released !== undefined });
   const runAt = new Date(reportedAt.getTime() + 50 * hourMs);
   if (demo.runs && investigatorId) {
-    await seedRun(tx, demo, { caseId, site, investigatorId, at: runAt, recurrenceTo: new Date(now.getTime() + 400 * 24 * hourMs) });
+    await seedRun(tx, demo, { caseId, site, weather: await seedWeather(tx, demo, { caseId, investigatorId, at: new Date(reportedAt.getTime() + 40 * hourMs) }), investigatorId, at: runAt, recurrenceTo: new Date(now.getTime() + 400 * 24 * hourMs) });
   }
+  await seedEvidence(tx, demo.number, { caseId, zone: site.zone, places });
   await seedFinding(tx, demo, { caseId, zone: site.zone, places });
   await seedActions(tx, demo, { caseId, zone: site.zone, places });
   await seedLog(tx, demo, { caseId, reporterId, investigatorId, reportedAt, runAt, zone: site.zone, places });

@@ -2,6 +2,7 @@ import { demoOrganisations, demoPassword, demoPeople, demoEmail } from '#fixture
 import { demoSites } from '#fixtures/demo/sites.ts';
 import { hashPassword } from '#app/auth/password.server.ts';
 import type { Transaction } from '#db/client.server.ts';
+import type { SceneSkyline } from '#app/domain/scene.ts';
 import { grants, organisations, sites, users } from '#db/schema/all.ts';
 
 export interface DemoSiteRow {
@@ -12,6 +13,7 @@ export interface DemoSiteRow {
   readonly latitudeDeg: number;
   readonly longitudeDeg: number;
   readonly elevationM: number;
+  readonly skyline: SceneSkyline | null;
 }
 
 export interface DemoPlaces {

@@ -2,6 +2,7 @@ import type { DemoCase } from '#fixtures/demo/demo-case.ts';
 import type { Transaction } from '#db/client.server.ts';
 import { reconstructions, sunReturns } from '#db/schema/all.ts';
 import { localDay } from '#app/domain/local-time.ts';
+import type { WeatherSeries } from '#app/domain/weather.ts';
 import { reconstructionInput } from '#app/domain/reconstruction-input.ts';
 import { engineVersion } from '#app/physics/model.ts';
 import { reconstruct } from '#app/physics/reconstruct.ts';
@@ -10,12 +11,12 @@ import { moment } from './moment.ts';
 import type { DemoSiteRow } from './people-and-sites.ts';
 
 /** Computes the reconstruction of a demonstration case with the engine, here and now, and attaches it. */
-export async function seedRun(tx: Transaction, demo: DemoCase, target: { caseId: string; site: DemoSiteRow; investigatorId: string; at: Date; recurrenceTo: Date }): Promise<string | null> {
+export async function seedRun(tx: Transaction, demo: DemoCase, target: { caseId: string; site: DemoSiteRow; investigatorId: string; at: Date; recurrenceTo: Date; weather: readonly WeatherSeries[] }): Promise<string | null> {
   if (!demo.scene) return null;
   const { site } = target;
   const request = reconstructionInput({
     scene: demo.scene,
-    site: { ...site, skyline: null },
+    site,
     times: {
       onsetEarliestAt: demo.onset ? moment(demo.onset.earliest, site.zone) : null,
       onsetLatestAt: demo.onset ? moment(demo.onset.latest, site.zone) : null,
@@ -23,6 +24,7 @@ export async function seedRun(tx: Transaction, demo: DemoCase, target: { caseId:
       foundClockErrorS: demo.found.clockErrorS ?? 0,
       foundPrecision: demo.found.precision,
     },
+    weather: target.weather,
     seed: demo.number,
     recurrenceToUtc: target.recurrenceTo.toISOString(),
   });

@@ -53,9 +53,13 @@ const sphere = measure(() => {
 });
 line('sphere trace, one million rays', sphere, `${(rays / sphere.medianMs / 1000).toFixed(1)} million rays/s`);
 
-const whole = measure(() => reconstruct(exampleInput));
+const { occluders: _occluders, occluderSigmaM: _sigma, ...open } = exampleInput;
+const whole = measure(() => reconstruct(open));
 line('reconstruction, 100,000 rays, 4,096 samples', whole, 'with a year of recurrence');
 
-const { mark: _mark, optic: _optic, target: _target, ...sunOnly } = exampleInput;
+const masked = measure(() => reconstruct(exampleInput));
+line('the same behind a window with reveal and bar', masked, 'every minute masked ray by ray');
+
+const { mark: _mark, optic: _optic, target: _target, ...sunOnly } = open;
 const sky = measure(() => reconstruct({ ...sunOnly, window: { startUtc: '2025-03-01T00:00:00Z', endUtc: '2025-03-15T00:00:00Z', clockSigmaS: 60 } }));
 line('sun and sky alone, fourteen days', sky, `${(20_160 / sky.medianMs).toFixed(0)} thousand minutes/s`);

@@ -121,7 +121,7 @@ describe('a rooftop scorch', () => {
     await page.getByLabel('Limits of this opinion').fill('The edge was measured in part only.');
     await send(page, page.getByRole('button', { name: 'Send the finding to review' }));
     await expect.poll(() => page.getByText('Findings', { exact: true }).count()).toBeGreaterThan(0);
-    expect(await page.getByRole('button', { name: 'Sign and pass to action' }).count()).toBe(0);
+    expect(await page.getByRole('button', { name: 'Sign this version' }).count()).toBe(0);
   });
 
   it('is reviewed by another person, who reads the inputs before the opinion, and signs', async () => {
@@ -130,7 +130,7 @@ describe('a rooftop scorch', () => {
     await send(page, page.getByRole('button', { name: /Show the opinion/u }));
     await page.getByText('Sunlight gathered by the curved steel edge is a possible cause').waitFor();
     for (const box of await page.getByRole('checkbox', { name: /^read:/u }).all()) await box.check();
-    await send(page, page.getByRole('button', { name: 'Sign and pass to action' }));
+    await send(page, page.getByRole('button', { name: 'Sign this version' }));
     await expect.poll(() => page.getByText('Corrective action', { exact: true }).count()).toBeGreaterThan(0);
   });
 

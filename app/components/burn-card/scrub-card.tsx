@@ -1,4 +1,3 @@
-import { useState } from 'react';
 import type { KeyboardEvent } from 'react';
 import { BurnCard } from './burn-card.tsx';
 import type { BurnCardModel } from './model.ts';
@@ -10,28 +9,56 @@ import { verdictWords } from './words.ts';
 export interface SunAtMinute extends ScrubMinute {
   readonly azimuthDeg: number;
   readonly apparentElevationDeg: number;
+  readonly reasonWords: string;
 }
-export interface ScrubCardProps {
+export interface ScrubProps {
   readonly model: BurnCardModel;
   readonly minutes: readonly SunAtMinute[];
-  readonly label?: string;
-  /** Minute to start with, such as the best moment. */
-  readonly startUtc?: string | null;
+  /** Minute under the blue line. */
+  readonly atUtc: string;
   /** Told of each chosen minute, so that other drawings move in the same frame. */
-  readonly onMinute?: (atUtc: string) => void;
+  readonly onMinute: (atUtc: string) => void;
+}
+export interface ScrubCardProps extends ScrubProps {
+  readonly label?: string;
+}
+
+const indexOf = (minutes: readonly SunAtMinute[], atUtc: string): number => Math.max(0, minutes.findIndex((minute) => minute.atUtc === atUtc));
+
+/** "10:12, can't tell, the ±3° of the skyline straddles; sun 12.1° up, 146.2°". */
+export function minuteWords(minute: SunAtMinute, zone: string): string {
+  const why = minute.verdict === 'sunlit' ? '' : `, ${minute.reasonWords}`;
+  return `${clockWords(minute.atUtc, zone)}, ${verdictWords[minute.verdict]}${why}; sun ${minute.apparentElevationDeg.toFixed(1)}° up, ${minute.azimuthDeg.toFixed(1)}°`;
 }
 
 /** A large card whose blue line is moved by dragging, by keys, or by typing a time. */
-export function ScrubCard({ model, minutes, label, startUtc, onMinute }: ScrubCardProps) {
-  const begin = Math.max(0, minutes.findIndex((minute) => minute.atUtc === startUtc));
-  const [index, setIndex] = useState(begin);
+export function ScrubCard({ label, ...props }: ScrubCardProps) {
+  const { model, minutes, atUtc, onMinute } = props;
+  const index = indexOf(minutes, atUtc);
   const minute = minutes[index];
   if (!minute) return <BurnCard model={model} size="L" {...(label ? { label } : {})} />;
+  return (
+    <div>
+      <div className="relative">
+        <BurnCard model={{ ...model, cursorUtc: minute.atUtc }} size="L" {...(label ? { label } : {})} />
+        <ScrubRange {...props} className="scrub-range top-10" />
+      </div>
+      <div data-print="no" className="flex flex-wrap items-center gap-x-4 gap-y-1 text-small">
+        <JumpToTime minutes={minutes} zone={model.zone} index={index} choose={(wanted) => onMinute(minutes[wanted]?.atUtc ?? atUtc)} />
+        <span aria-hidden="true">{minuteWords(minute, model.zone)}</span>
+      </div>
+    </div>
+  );
+}
+
+/** The slider that lies over a card, from end to end of the window. */
+export function ScrubRange({ model, minutes, atUtc, onMinute, className }: ScrubProps & { readonly className: string }) {
+  const index = indexOf(minutes, atUtc);
+  const minute = minutes[index];
+  const parts = windowParts(model);
   const choose = (wanted: number) => {
     const chosen = minutes[wanted];
-    if (!chosen) return;
-    setIndex(wanted);
-    onMinute?.(chosen.atUtc);
+    if (chosen) onMinute(chosen.atUtc);
   };
   const onKeyDown = (event: KeyboardEvent) => {
     const wanted = scrubTo(minutes, index, event.key, event.shiftKey);
@@ -39,31 +66,20 @@ export function ScrubCard({ model, minutes, label, startUtc, onMinute }: ScrubCa
     event.preventDefault();
     choose(wanted);
   };
-  const words = `${clockWords(minute.atUtc, model.zone)}, ${verdictWords[minute.verdict]}, sun ${minute.apparentElevationDeg.toFixed(1)}° up, ${minute.azimuthDeg.toFixed(1)}°`;
-  const parts = windowParts(model);
   return (
-    <div>
-      <div className="relative">
-        <BurnCard model={{ ...model, cursorUtc: minute.atUtc }} size="L" {...(label ? { label } : {})} />
-        <input
-          type="range"
-          min={0}
-          max={minutes.length - 1}
-          step={1}
-          value={index}
-          aria-label="Minute of the window"
-          aria-valuetext={words}
-          onChange={(event) => choose(Number(event.currentTarget.value))}
-          onKeyDown={onKeyDown}
-          className="scrub-range absolute top-10"
-          style={{ left: `${parts.from * 100}%`, width: `${(parts.to - parts.from) * 100}%` }}
-        />
-      </div>
-      <div data-print="no" className="flex flex-wrap items-center gap-x-4 gap-y-1 text-small">
-        <JumpToTime minutes={minutes} zone={model.zone} index={index} choose={choose} />
-        <span aria-hidden="true">{words}</span>
-      </div>
-    </div>
+    <input
+      type="range"
+      min={0}
+      max={minutes.length - 1}
+      step={1}
+      value={index}
+      aria-label="Minute of the window"
+      aria-valuetext={minute ? minuteWords(minute, model.zone) : ''}
+      onChange={(event) => choose(Number(event.currentTarget.value))}
+      onKeyDown={onKeyDown}
+      className={`absolute ${className}`}
+      style={{ left: `${parts.from * 100}%`, width: `${(parts.to - parts.from) * 100}%` }}
+    />
   );
 }
 

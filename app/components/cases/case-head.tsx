@@ -6,6 +6,7 @@ import { PageTitle } from '#app/components/ui/page-title.tsx';
 import { StateMark } from '#app/components/ui/state-mark.tsx';
 import { Tabs } from '#app/components/ui/tabs.tsx';
 import type { CaseHeaderView } from '#app/domain/case-view.ts';
+import { measurePages } from './measure-nav.tsx';
 
 export interface CaseHeadProps {
   readonly head: CaseHeaderView;
@@ -20,7 +21,9 @@ const ownCard = /\/reconstructions\/\d+\/?$/u;
 export function CaseHead({ head, path }: CaseHeadProps) {
   const base = href('/cases/:caseNumber', { caseNumber: String(head.number) });
   const span = head.card.window ? headerSpan(head.card.window) : { fromUtc: head.card.fromUtc, toUtc: head.card.toUtc };
-  const isCurrent = (tabPath: string) => (tabPath === '' ? path === base || path === `${base}/` : path === `${base}${tabPath}` || path.startsWith(`${base}${tabPath}/`));
+  const isUnder = (tabPath: string) => path === `${base}${tabPath}` || path.startsWith(`${base}${tabPath}/`);
+  // Plan, skyline and weather are pages of the measurements; they share one word among the tabs.
+  const isCurrent = (tabPath: string) => (tabPath === '' ? path === base || path === `${base}/` : tabPath === '/measurements' ? measurePages.some((page) => isUnder(`/${page}`)) : isUnder(tabPath));
   return (
     <>
       <PageTitle number={head.number} below={head.subtitle} aside={<StateAndReturn head={head} />}>{head.title}</PageTitle>

@@ -1,6 +1,7 @@
 import { Form, href } from 'react-router';
 import { BurnCard } from '#app/components/burn-card/burn-card.tsx';
 import type { BurnCardModel } from '#app/components/burn-card/model.ts';
+import { ClockRibbon } from '#app/components/burn-card/clock-ribbon.tsx';
 import { Select } from '#app/components/forms/text-field.tsx';
 import { OpticDrawing } from '#app/components/optics/optic-drawing.tsx';
 import { AppLink } from '#app/components/ui/app-link.tsx';
@@ -56,7 +57,7 @@ function todayWords(model: BurnCardModel): string {
 export function SimilarCases({ similar }: { readonly similar: readonly SimilarCaseView[] }) {
   return (
     <section aria-labelledby="similar-heading">
-      <SectionHeading id="similar-heading" note="same site or kind of optic; same time of year first">Similar cases</SectionHeading>
+      <SectionHeading id="similar-heading" note="by place, optic, bearing and sun days; what is shared stands beside each">Similar cases</SectionHeading>
       {similar.length === 0 ? <p className="text-second">None among the cases that you may see.</p> : (
         <ul>
           {similar.map(({ row, reasons }) => (
@@ -80,10 +81,10 @@ export function SimilarCases({ similar }: { readonly similar: readonly SimilarCa
   );
 }
 
-const groupWords = { hazard: 'Hazard still there', 'first-look': 'First look', reporter: 'Waiting for the reporter' } as const;
+const groupWords = { hazard: 'Hazard or injury, one hour', 'first-look': 'First look, four working hours', reporter: 'Waiting for the reporter' } as const;
 
 /** What else waits, soonest first. */
-export function WaitingList({ waiting, current }: { readonly waiting: readonly WaitingCaseView[]; readonly current: number }) {
+export function WaitingList({ waiting, current, nowUtc }: { readonly waiting: readonly WaitingCaseView[]; readonly current: number; readonly nowUtc: string }) {
   const groups = (['hazard', 'first-look', 'reporter'] as const).map((group) => ({ group, cases: waiting.filter((one) => one.group === group) })).filter((one) => one.cases.length > 0);
   return (
     <nav aria-label="Waiting for a look">
@@ -96,13 +97,16 @@ export function WaitingList({ waiting, current }: { readonly waiting: readonly W
               <li key={one.number} className={`border-b border-hair ${one.number === current ? 'border-l-4 border-l-ink bg-wash pl-2' : ''}`}>
                 <AppLink href={`${href('/cases/:caseNumber', { caseNumber: String(one.number) })}/triage`} className="block py-1.5 no-underline hover:underline" {...(one.number === current ? { 'aria-current': 'page' as const } : {})}>
                   <span className="font-serif text-second">{one.number}</span> <span className="font-medium">{one.title}</span>
-                  <span className="block text-axis text-second">{one.place}, {one.clockWords}</span>
+                  <span className="block text-axis text-second">{one.place}</span>
+                  {one.firstLook ? <ClockRibbon fromUtc={one.firstLook.reportedUtc} toUtc={one.firstLook.late ? nowUtc : one.firstLook.dueUtc} nowUtc={nowUtc} dueUtc={one.firstLook.dueUtc} label={`First look, case ${one.number}`} /> : null}
+                  <span className={`block text-axis ${one.firstLook?.late ? 'font-semibold' : 'text-second'}`}>{one.clockWords}</span>
                 </AppLink>
               </li>
             ))}
           </ul>
         </div>
       ))}
+      <p className="pt-3 text-axis text-second">Blue: now. Dark: time left. Diamond: due. Dashes: late. Working hours are 09:00 to 17:00 of the place, Monday to Friday; the clock of one hour never stops. The hours are our own default.</p>
     </nav>
   );
 }

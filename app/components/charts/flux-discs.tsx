@@ -19,8 +19,10 @@ export interface FluxDiscsData {
   readonly discs: readonly FluxDiscRow[];
   /** Contours of the flux map, where rays were traced: radius from the hot spot at 1, 3, 10 … kW/m². */
   readonly rings?: readonly { readonly fluxKwm2: number; readonly radiusMm: number }[];
-  /** Trail through the window, straight; heading clockwise from up in the plane of the target. */
-  readonly trail?: { readonly lengthMm: number; readonly headingDeg: number; readonly words: string } | null;
+  /** Way of the spot over the target, from the hot spot, right and up as one faces the target. [mm] */
+  readonly track?: { readonly points: readonly (readonly [rightMm: number, upMm: number])[]; readonly words: string } | null;
+  /** Turn of a line focus in the target's plane, anticlockwise from level. [°] */
+  readonly lineTurnDeg?: number;
   /** A line focus is shown as a band, never as a disc. */
   readonly focusKind: 'point' | 'line';
   /** Directions of the left and right edge, such as W and E. */
@@ -32,14 +34,14 @@ export interface FluxDiscsProps extends FluxDiscsData {
 
 const roundScaleMm = [0.5, 1, 2, 5, 10, 20, 50, 100, 200, 500, 1000] as const;
 
-function halfSpanMm({ discs, rings = [], trail }: FluxDiscsData): number {
-  return 1.25 * Math.max(1, ...discs.map((disc) => disc.diameterMm / 2), ...rings.map((ring) => ring.radiusMm), (trail?.lengthMm ?? 0) / 2);
+function halfSpanMm({ discs, rings = [] }: FluxDiscsData): number {
+  return 1.25 * Math.max(1, ...discs.map((disc) => disc.diameterMm / 2), ...rings.map((ring) => ring.radiusMm));
 }
 
 /** Averaging discs to scale over the rings of the flux map; each figure names its disc. */
 export function FluxDiscs({ width, ...data }: FluxDiscsProps) {
   const side = width < 400 ? Math.min(190, width * 0.55) : 260;
-  const box = { widthPx: width, heightPx: Math.max(side + 4, data.discs.length * 44 + 8), left: 0, right: 0, top: 0, bottom: 0 };
+  const box = { widthPx: width, heightPx: Math.max(side + 4, (data.discs.length + (data.track ? 1 : 0)) * 46 + 8), left: 0, right: 0, top: 0, bottom: 0 };
   const half = halfSpanMm(data);
   const px = (mm: number) => (mm / half) * (side / 2);
   const centre = side / 2 + 1;
@@ -48,9 +50,11 @@ export function FluxDiscs({ width, ...data }: FluxDiscsProps) {
       <rect x="1" y="1" width={side} height={side} className="fill-sheet stroke-edge" />
       <svg x="1" y="1" width={side} height={side} viewBox={`0 0 ${side} ${side}`}>
         <g transform={`translate(${side / 2} ${side / 2})`}>
-          <Rings data={data} px={px} side={side} />
-          {data.discs.map((disc) => <DiscOutline key={`${disc.disc}${disc.centre}`} radiusPx={px(disc.diameterMm / 2)} line={data.focusKind === 'line'} side={side} />)}
-          <Trail data={data} px={px} />
+          <g transform={`rotate(${-(data.lineTurnDeg ?? 0)})`}>
+            <Rings data={data} px={px} side={side} />
+            {data.discs.map((disc) => <DiscOutline key={`${disc.disc}${disc.centre}`} radiusPx={px(disc.diameterMm / 2)} line={data.focusKind === 'line'} side={side} />)}
+          </g>
+          <Track data={data} px={px} />
         </g>
       </svg>
       {data.edges ? <g className="fill-second"><text x="10" y="18">{data.edges.left}</text><text x={side - 8} y="18" textAnchor="end">{data.edges.right}</text></g> : null}
@@ -81,10 +85,9 @@ function DiscOutline({ radiusPx, line, side }: { readonly radiusPx: number; read
   return line ? <rect x={-side} y={-radiusPx} width={2 * side} height={2 * radiusPx} {...style} /> : <circle r={Math.max(1.5, radiusPx)} {...style} />;
 }
 
-function Trail({ data, px }: PartProps) {
-  if (!data.trail) return null;
-  const half = px(data.trail.lengthMm) / 2;
-  return <line x1="0" x2="0" y1={-half} y2={half} transform={`rotate(${data.trail.headingDeg})`} className="stroke-ink" strokeDasharray="4 3" />;
+function Track({ data, px }: PartProps) {
+  if (!data.track || data.track.points.length < 2) return null;
+  return <path d={data.track.points.map(([right, up], index) => `${index === 0 ? 'M' : 'L'}${px(right).toFixed(1)} ${(-px(up)).toFixed(1)}`).join('')} className="fill-none stroke-ink" strokeWidth="1.5" strokeDasharray="5 4" />;
 }
 
 function ScaleBar({ px, side, halfMm }: { readonly px: (mm: number) => number; readonly side: number; readonly halfMm: number }) {
@@ -113,7 +116,7 @@ function Callouts({ data, px, centre, side, width }: PartProps & { readonly cent
           </g>
         );
       })}
-      {data.trail ? <text x={x} y={24 + data.discs.length * 46} className="fill-second">dashes: {data.trail.words}</text> : null}
+      {data.track ? <text x={x} y={24 + data.discs.length * 46} className="fill-second">{data.track.words}</text> : null}
     </g>
   );
 }
@@ -125,6 +128,7 @@ function fluxSentence(data: FluxDiscsData): string {
 export function FluxDiscsFigure({ figure, title, note, ...data }: FluxDiscsData & { readonly figure?: string; readonly title: string; readonly note?: string }) {
   return (
     <Numbers
+      csv="flux-discs"
       {...(figure ? { figure } : {})}
       title={title}
       {...(note ? { note } : {})}

@@ -78,6 +78,7 @@ export function IrradianceDayFigure({ figure, title, note, ...data }: Irradiance
   const rows = data.bound.filter((_, index) => data.bound.length <= 40 || index % Math.ceil(data.bound.length / 40) === 0);
   return (
     <Numbers
+      csv="irradiance"
       {...(figure ? { figure } : {})}
       title={title}
       {...(note ? { note } : {})}

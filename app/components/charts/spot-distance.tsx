@@ -55,6 +55,7 @@ function spotSentence({ points, dangerZone }: SpotDistanceData): string {
 export function SpotDistanceFigure({ figure, title, note, ...data }: SpotDistanceData & { readonly figure?: string; readonly title: string; readonly note?: string }) {
   return (
     <Numbers
+      csv="spot-distance"
       {...(figure ? { figure } : {})}
       title={title}
       {...(note ? { note } : {})}

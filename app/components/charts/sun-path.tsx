@@ -152,6 +152,7 @@ export function SunPathFigure({ figure, title, note, ...data }: SunPathFigurePro
   const words = { sunlit: 'sunlit', 'not-sunlit': 'not sunlit', 'cannot-tell': "can't tell" } as const;
   return (
     <Numbers
+      csv="sun-path"
       {...(figure ? { figure } : {})}
       title={title}
       {...(note ? { note } : {})}

@@ -100,6 +100,7 @@ export function TemperatureCurveFigure({ figure, title, note, ...data }: Tempera
   const rows = data.points.filter((_, index) => index % every === 0 || index === data.points.length - 1);
   return (
     <Numbers
+      csv="temperature"
       {...(figure ? { figure } : {})}
       title={title}
       {...(note ? { note } : {})}

@@ -51,6 +51,7 @@ export function Tornado({ rows, base, unit, label }: TornadoProps) {
 export function TornadoFigure({ figure, title, note, ...data }: Omit<TornadoProps, 'label'> & { readonly figure?: string; readonly title: string; readonly note?: string }) {
   return (
     <Numbers
+      csv="sensitivity"
       {...(figure ? { figure } : {})}
       title={title}
       {...(note ? { note } : {})}

@@ -141,6 +141,7 @@ function plateSentence(data: YearPlateData): string {
 export function YearPlateFigure({ figure, title, note, ...data }: YearPlateData & { readonly figure?: string; readonly title: string; readonly note?: string }) {
   return (
     <Numbers
+      csv="returns"
       {...(figure ? { figure } : {})}
       title={title}
       {...(note ? { note } : {})}

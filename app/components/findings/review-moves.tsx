@@ -1,4 +1,5 @@
 import { Form } from 'react-router';
+import { ChoiceChips } from '#app/components/forms/choice-chips.tsx';
 import { ErrorSummary } from '#app/components/forms/error-summary.tsx';
 import { TextArea } from '#app/components/forms/text-field.tsx';
 import { Button } from '#app/components/ui/button.tsx';
@@ -24,7 +25,7 @@ export function ReviewMoves({ caseVersion, whoCan, openComments, opinionShown, s
     return (
       <section aria-labelledby="moves">
         <SectionHeading id="moves">Moves</SectionHeading>
-        <p>Send back with comments; sign and pass to action.</p>
+        <p>Send back with comments; sign and pass to action; sign, no action needed.</p>
         <p className="text-small text-second">{whoCan}</p>
       </section>
     );
@@ -45,9 +46,10 @@ export function ReviewMoves({ caseVersion, whoCan, openComments, opinionShown, s
         <input type="hidden" name="intent" value="sign" />
         <input type="hidden" name="version" value={caseVersion} />
         <ErrorSummary errors={signAnswer?.formErrors} title="Not signed yet." fields={[{ field: { name: 'read', errors: signAnswer?.fieldErrors['read'] }, label: 'Inputs' }]} />
-        <TextArea field={problemFields(signAnswer, {}, 'sign-')('reason')} label="What the signature rests on" aside="not required" rows={2} />
-        <Button look={opinionShown && openComments === 0 ? 'filled' : 'waiting'} block>Sign and pass to action</Button>
-        <p className="text-axis text-second">Needs: {signNeeds.join(', ')}. The version is then frozen with a hash and cannot be changed.</p>
+        <ChoiceChips field={problemFields(signAnswer, { after: 'action' }, 'sign-')('after')} legend="After the signature" options={[{ value: 'action', label: 'Pass to action' }, { value: 'no-action', label: 'No action needed' }]} />
+        <TextArea field={problemFields(signAnswer, {}, 'sign-')('reason')} label="What the signature rests on" aside="required where no action is needed: why not" rows={2} />
+        <Button look={opinionShown && openComments === 0 ? 'filled' : 'waiting'} block>Sign this version</Button>
+        <p className="text-axis text-second">Needs: {signNeeds.join(', ')}. Without an action the case then waits for the site manager, who closes it or passes it to action after all. The version is then frozen with a hash and cannot be changed.</p>
       </Form>
     </section>
   );

@@ -1,7 +1,7 @@
 import type { ReactNode } from 'react';
 
 export const opticDrawingKinds = [
-  'metal-trim', 'window-pane', 'curved-building-face', 'curved-mirror', 'glass-ball', 'bowl-or-vase', 'bottle', 'dish', 'magnifier', 'flat-plastic-lens', 'telescope', 'dont-know',
+  'metal-trim', 'window-pane', 'curved-building-face', 'curved-mirror', 'glass-ball', 'bowl-or-vase', 'bottle', 'dish', 'magnifier', 'flat-plastic-lens', 'telescope', 'water-on-dome', 'dont-know',
 ] as const;
 export type OpticDrawingKind = (typeof opticDrawingKinds)[number];
 
@@ -17,6 +17,7 @@ export const opticDrawingNames: Record<OpticDrawingKind, string> = {
   magnifier: 'Magnifier or lens',
   'flat-plastic-lens': 'Flat plastic lens',
   telescope: 'Telescope',
+  'water-on-dome': 'Water on a rooflight',
   'dont-know': "Don't know",
 };
 
@@ -31,7 +32,8 @@ interface Drawing {
   readonly lands: readonly [number, number];
 }
 
-const drawings: Record<Exclude<OpticDrawingKind, 'dont-know'>, Drawing> = {
+/** The things themselves, for other drawings of them. */
+export const opticDrawings: Record<Exclude<OpticDrawingKind, 'dont-know'>, Drawing> = {
   'curved-mirror': {
     thing: <path d="M44 5c6 9 6 19 1 28l-3 9M35 45h15M42 42v3" />,
     detail: <path d="m49 8 4-2M51 14l4-1M51.5 20h4M51 26l4 1" />,
@@ -92,6 +94,12 @@ const drawings: Record<Exclude<OpticDrawingKind, 'dont-know'>, Drawing> = {
     rays: 'M4 2 20 7 52 43M6 12 17 13 52 43',
     lands: [53, 44],
   },
+  'water-on-dome': {
+    thing: <path d="M6 15v27M58 15v27M6 15c8 17 44 17 52 0M2 15h4M58 15h4" />,
+    detail: <path d="M11.5 21.5h41" />,
+    rays: 'M13 1 20 21.5 24 26 33 44M27 1 30 21.5 31 28 33 44M42 1 42 21.5 40.5 26.5 33 44',
+    lands: [33, 44],
+  },
 };
 
 function Unknown() {
@@ -117,7 +125,7 @@ export interface OpticDrawingProps {
 /** The thing in ink, light in blue, and where it lands in brown. */
 export function OpticDrawing({ kind, width = 38, named = false, label }: OpticDrawingProps) {
   const said = label ?? (named ? opticDrawingNames[kind] : undefined);
-  const drawing = kind === 'dont-know' ? null : drawings[kind];
+  const drawing = kind === 'dont-know' ? null : opticDrawings[kind];
   return (
     <svg width={width} height={(width * 3) / 4} viewBox="0 0 64 48" className="flex-none" {...(said ? { role: 'img', 'aria-label': said } : { 'aria-hidden': true })}>
       {drawing === null ? <Unknown /> : (
@@ -141,17 +149,17 @@ export interface OpticPickerProps {
   readonly chosen?: string | undefined;
 }
 
-/** Twelve shapes to pick from; native radios, so it works without a script. */
+/** The shapes to pick from; native radios, so it works without a script. */
 export function OpticPicker({ name, legend, help, chosen }: OpticPickerProps) {
   return (
     <fieldset id={name} tabIndex={-1}>
       <legend className="pb-1 text-account font-semibold">{legend}</legend>
       {help ? <p className="pb-2 text-small text-second">{help}</p> : null}
-      <div className="grid grid-cols-3 gap-px border-[1.5px] border-edge bg-edge tablet:grid-cols-4 desk:grid-cols-6">
+      <div className="grid grid-cols-3 gap-px border-[1.5px] border-edge bg-edge tablet:grid-cols-4">
         {opticDrawingKinds.map((kind) => (
-          <label key={kind} className="relative flex min-h-32 cursor-pointer flex-col items-center gap-1 bg-sheet px-1 pt-3 pb-2 text-center text-small has-checked:bg-pale has-checked:font-semibold has-checked:outline-4 has-checked:-outline-offset-4 has-checked:outline-card-edge has-focus-visible:z-10 has-focus-visible:outline-3 has-focus-visible:outline-offset-2 has-focus-visible:outline-ink">
+          <label key={kind} className={`relative flex cursor-pointer flex-col items-center gap-1 bg-sheet px-1 pt-3 pb-2 text-center text-small ${kind === 'dont-know' ? 'col-span-full' : 'min-h-32'} has-checked:bg-pale has-checked:font-semibold has-checked:outline-4 has-checked:-outline-offset-4 has-checked:outline-card-edge has-focus-visible:z-10 has-focus-visible:outline-3 has-focus-visible:outline-offset-2 has-focus-visible:outline-ink`}>
             <input type="radio" name={name} value={kind} defaultChecked={chosen === kind} className="absolute inset-0 h-full w-full cursor-pointer opacity-0" />
-            <OpticDrawing kind={kind} width={88} />
+            <OpticDrawing kind={kind} width={kind === 'dont-know' ? 60 : 88} />
             <span>{opticDrawingNames[kind]}</span>
           </label>
         ))}

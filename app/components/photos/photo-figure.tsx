@@ -1,3 +1,4 @@
+import { MarksLayer } from './marks-layer.tsx';
 import type { PhotoCard } from '#app/domain/photo-view.ts';
 import type { PhotoMask } from '#app/domain/photo.ts';
 
@@ -15,6 +16,7 @@ export function PhotoFigure({ card, caseNumber }: { readonly card: PhotoCard; re
             {card.state === 'failed' ? 'The original is kept, but no copy could be made of it.' : 'Being prepared. Reload in a few seconds.'}
           </p>
         )}
+        {card.marks.length > 0 ? <MarksLayer marks={card.marks} widthPx={card.widthPx} heightPx={card.heightPx} /> : null}
         {card.masks.map((mask, index) => <MaskBox key={index} mask={mask} number={index + 1} />)}
       </div>
       <figcaption className="space-y-0.5 pt-1.5 text-small">

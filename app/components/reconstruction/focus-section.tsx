@@ -1,11 +1,14 @@
 import { FluxDiscsFigure } from '#app/components/charts/flux-discs.tsx';
+import type { FluxDiscsData } from '#app/components/charts/flux-discs.tsx';
 import { plainNumber } from '#app/components/charts/number-table.tsx';
 import { SpotDistanceFigure } from '#app/components/charts/spot-distance.tsx';
 import { Cell, DataTable, HeadCell, Row, TableHead } from '#app/components/ui/data-table.tsx';
 import { FactList } from '#app/components/ui/fact-list.tsx';
 import type { Fact } from '#app/components/ui/fact-list.tsx';
+import type { BeamView } from '#app/domain/run-beam.ts';
 import type { RunView } from '#app/domain/run-view.ts';
 import type { Band } from '#app/physics/model.ts';
+import { dot } from '#app/physics/vector.ts';
 
 type Focus = NonNullable<RunView['result']['focus']>;
 
@@ -13,6 +16,8 @@ export interface FocusSectionProps {
   readonly focus: Focus;
   readonly rings: RunView['rings'];
   readonly clock: string;
+  readonly beam: BeamView | null;
+  readonly bestUtc: string | null;
 }
 
 const bandWords = (band: Band): string => `${plainNumber(band.low)} to ${plainNumber(band.high)}`;
@@ -22,7 +27,7 @@ const lengthWords = (metres: number): string => (metres < 2 ? `${plainNumber(met
 export function BeamFigure({ focus, markDistanceM }: Pick<FocusSectionProps, 'focus'> & { readonly markDistanceM: number | null }) {
   return (
     <SpotDistanceFigure
-      figure="Fig. 2"
+      figure="Fig. 6"
       title={focus.focusKind === 'line' ? 'Line width against distance, mm' : 'Spot size against distance, mm'}
       points={focus.spotAtDistance}
       dangerZone={focus.dangerZone}
@@ -34,7 +39,7 @@ export function BeamFigure({ focus, markDistanceM }: Pick<FocusSectionProps, 'fo
 }
 
 /** Flux on named discs in a named plane, and how long it rests on a point. */
-export function FocusSection({ focus, rings, clock }: FocusSectionProps) {
+export function FocusSection({ focus, rings, clock, beam, bestUtc }: FocusSectionProps) {
   const line = focus.focusKind === 'line';
   const centre = focus.discs.some((disc) => disc.centre === 'mark') ? 'mark' : 'hot spot';
   const method = focus.traced ? `${focus.traced.rays.toLocaleString('en-GB')} rays traced` : 'Closed form, no rays traced';
@@ -42,12 +47,13 @@ export function FocusSection({ focus, rings, clock }: FocusSectionProps) {
     <div className="grid gap-x-8 gap-y-6 [&>*]:min-w-0 tablet:grid-cols-2">
       <div className="space-y-6">
         <FluxDiscsFigure
-          figure="Fig. 3"
+          figure="Fig. 5"
+          {...trackOver(beam, bestUtc)}
           title={`Flux at ${clock}, kW/m²`}
           discs={focus.discs.filter((disc) => disc.centre === 'hot spot')}
           rings={rings}
           focusKind={focus.focusKind}
-          note={`Plane: ${focus.plane}. Picture centred on the hot spot. ${method}. ${rings.length > 0 ? `${line ? 'Bands: as wide as the mean' : 'Rings: circles as large as the area'} over 1, 3, 10, 30, 100 and 300 kW/m², as far as the map holds them.` : ''}`}
+          note={`Plane: ${focus.plane}. Picture centred on the hot spot. ${method}. ${rings.length > 0 ? `${line ? 'Bands: as wide as the mean' : 'Rings: circles as large as the area'} over 1, 3, 10, 30, 100 and 300 kW/m², as far as the map holds them.` : ''}${beam?.facing ? ' Dashes: way of the spot over the target, as one faces it.' : ''}`}
         />
         <section aria-label="Time on one point" className="border-t-[1.5px] border-ink pt-1.5">
           <h3 className="pb-2 text-body font-semibold">Time on one point</h3>
@@ -62,6 +68,20 @@ export function FocusSection({ focus, rings, clock }: FocusSectionProps) {
       </section>
     </div>
   );
+}
+
+/** The way of the spot relative to where it stands at the best minute, and how a line lies in the target's plane. */
+function trackOver(beam: BeamView | null, bestUtc: string | null): Pick<FluxDiscsData, 'track' | 'lineTurnDeg' | 'edges'> {
+  const best = beam?.minutes.find((minute) => minute.atUtc === bestUtc)?.spotMm;
+  if (!beam?.facing || !best) return {};
+  const { right, up, rightWords } = beam.facing;
+  const points = beam.minutes.flatMap(({ spotMm }): [number, number][] => (spotMm ? [[spotMm.rightMm - best.rightMm, spotMm.upMm - best.upMm]] : []));
+  const along = beam.generator ? [dot(beam.generator, right), dot(beam.generator, up)] as const : null;
+  return {
+    track: { points, words: 'dashes: way of the spot' },
+    edges: { left: '', right: rightWords },
+    ...(along ? { lineTurnDeg: (Math.atan2(along[1], along[0]) * 180) / Math.PI } : {}),
+  };
 }
 
 function DiscTable({ focus, centre }: { readonly focus: Focus; readonly centre: 'mark' | 'hot spot' }) {
@@ -99,6 +119,7 @@ function focusFacts(focus: Focus, line: boolean): Fact[] {
   if (focus.trailSpeedMmPerH !== null) facts.push({ term: 'Spot moves', value: `${plainNumber(focus.trailSpeedMmPerH)} mm/h`, note: focus.trailHeadingDeg === null ? '' : `towards ${plainNumber(focus.trailHeadingDeg)}° true` });
   if (focus.trailMinutesAtLeast !== null) facts.push({ term: 'Trail needs at least', value: `${plainNumber(focus.trailMinutesAtLeast)} min of sun` });
   if (traced) {
+    if (traced.blockedFraction) facts.push({ term: 'Stopped by frame and bars', value: `${Math.round(traced.blockedFraction * 100)} %`, note: 'of the light towards the optic, ray by ray' });
     facts.push({ term: 'Leaves the optic', value: `${Math.round(traced.transmittedFraction * 100)} %`, note: 'of the light that meets it' });
     facts.push({ term: 'Half, four fifths of the light within', value: `${plainNumber(traced.r50Mm)}, ${plainNumber(traced.r80Mm)} mm`, note: 'radius round the hot spot' });
     if (traced.hotSpotOffsetMm !== null) facts.push({ term: 'Hot spot from the mark', value: `${plainNumber(traced.hotSpotOffsetMm)} mm` });

@@ -14,7 +14,7 @@ function materialWords(id: string): string {
 export function HeatFigure({ heating }: { readonly heating: HeatingResult }) {
   return (
     <TemperatureCurveFigure
-      figure="Fig. 5"
+      figure="Fig. 8"
       title={`Surface of ${materialWords(heating.materialId)} under steady sun, °C`}
       points={heating.surfaceTemperatureC}
       outcomes={heating.outcomes.map((outcome) => ({ label: outcomeLabels[outcome.id], answer: outcome.answer, timeS: outcome.timeS }))}

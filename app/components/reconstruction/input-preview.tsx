@@ -11,7 +11,7 @@ export interface InputPreviewProps {
   readonly measurementsHref: string;
 }
 
-const originWords = { measured: 'measured', reported: 'reported', assumed: 'assumed' } as const;
+const originWords = { measured: 'measured', reported: 'reported', file: 'from file', assumed: 'assumed' } as const;
 
 /** What a new run would go by: every value with where it comes from, and what is still missing. */
 export function InputPreview({ origins, missing, sceneVersion, measurementsHref }: InputPreviewProps) {

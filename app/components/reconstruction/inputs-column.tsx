@@ -78,7 +78,11 @@ function Sampling({ sampling, baseKwm2 }: { readonly sampling: SamplingResult; r
             { term: 'Focus beside the mark', value: `${plainNumber(sampling.missLateralMm.mid)} mm`, note: `5 to 95: ${plainNumber(sampling.missLateralMm.low)} to ${plainNumber(sampling.missLateralMm.high)}` },
             { term: 'Flux on 5 mm', value: `${plainNumber(sampling.fluxKwm2.mid)} kW/m²`, note: `5 to 95: ${plainNumber(sampling.fluxKwm2.low)} to ${plainNumber(sampling.fluxKwm2.high)}` },
             ...over.map((row) => ({ term: `Samples over ${plainNumber(row.thresholdKwm2)} kW/m²`, value: countWords(row.share, sampling.samples) })),
-            { term: 'Median still moves by', value: `${plainNumber(sampling.convergenceKwm2)} kW/m²`, note: 'between the two halves of the sample' },
+            ...(typeof sampling.ignitedWithinDwellShare === 'number'
+              ? [{ term: 'Samples in which a 100 mm piece with a spark would ignite while the spot rests', value: countWords(sampling.ignitedWithinDwellShare, sampling.samples), note: 'a small spot without a spark needs more' }]
+              : []),
+            { term: 'Median still moves by', value: `${plainNumber(sampling.convergenceKwm2)} kW/m²`, note: 'from half of the samples to all of them' },
+            ...(sampling.table ? [{ term: 'Read from', value: `${sampling.table.traces} traces`, note: `${sampling.table.raysEach.toLocaleString('en-GB')} rays each, over ${sampling.table.axes.filter((axis) => axis.nodes.length > 1).map((axis) => axis.axis).join('; ')}` }] : []),
           ]}
         />
       </section>

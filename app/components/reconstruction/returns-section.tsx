@@ -12,7 +12,7 @@ export function ReturnsSection({ view, zone }: { readonly view: RunView; readonl
   const { requiredSun } = view.result;
   return (
     <div className="space-y-4">
-      <YearPlateFigure figure="Fig. 6" title="When this mark can be lit again: day and clock time" days={view.plate.days} reach={view.plate.reach} lit={view.plate.lit} todayOn={view.plate.todayOn} note={view.plate.note} />
+      <YearPlateFigure figure="Fig. 9" title="When this mark can be lit again: day and clock time" days={view.plate.days} reach={view.plate.reach} lit={view.plate.lit} todayOn={view.plate.todayOn} note={view.plate.note} />
       {requiredSun ? (
         <p className="text-small text-second">
           The mark asks for a sun at {requiredSun.azimuthDeg.toFixed(1)}° true and {requiredSun.apparentElevationDeg.toFixed(1)}° up, declination {requiredSun.declinationDeg.toFixed(2)}°

@@ -13,20 +13,26 @@ export interface RunCardProps {
   readonly label: string;
   /** Words at both ends of the window, where the case's own card has the same window. */
   readonly words: { readonly start: readonly string[]; readonly end: readonly string[] } | null;
+  /** Minute under the blue line, where the window is moved along minute by minute. */
+  readonly cursorUtc: string | null;
   readonly onMinute: (atUtc: string) => void;
 }
 
 const weekMs = 7 * 86_400_000;
 
 /** The large card of a run: moved along minute by minute within a day, day by day beyond a week. */
-export function RunCard({ view, label, words, onMinute }: RunCardProps) {
+export function RunCard({ view, label, words, cursorUtc, onMinute }: RunCardProps) {
   const { window } = view.card;
-  const span = window ? headerSpan(window) : { fromUtc: view.card.fromUtc, toUtc: view.card.toUtc };
-  const model: BurnCardModel = { ...view.card, ...span, startWords: words?.start ?? [], endWords: words?.end ?? [] };
+  const model: BurnCardModel = { ...runCardModel(view), startWords: words?.start ?? [], endWords: words?.end ?? [] };
   const length = window ? Date.parse(window.endUtc) - Date.parse(window.startUtc) : 0;
   if (length > weekMs) return <Table model={model} card={<DayCards model={model} label={label} />} />;
   if (!view.scrubs) return <CaptionedBurnCard model={model} size="L" label={label} />;
-  return <Table model={model} card={<ScrubCard model={model} minutes={view.minutes} label={label} startUtc={view.result.best?.atUtc ?? null} onMinute={onMinute} />} />;
+  return <Table model={model} card={<ScrubCard model={model} minutes={view.minutes} label={label} atUtc={cursorUtc ?? view.minutes[0]?.atUtc ?? ''} onMinute={onMinute} />} />;
+}
+
+/** The card of a run: its window with a margin on both sides. */
+export function runCardModel({ card }: RunView): BurnCardModel {
+  return { ...card, ...(card.window ? headerSpan(card.window) : { fromUtc: card.fromUtc, toUtc: card.toUtc }) };
 }
 
 function Table({ model, card }: { readonly model: BurnCardModel; readonly card: ReactNode }) {

@@ -6,7 +6,7 @@ import { TextInput } from '#app/components/forms/text-field.tsx';
 import { Button } from '#app/components/ui/button.tsx';
 
 export interface RunFormProps {
-  readonly intent: 'run' | 'attach';
+  readonly intent: 'run' | 'repeat' | 'attach';
   readonly label: string;
   readonly fieldLabel: string;
   readonly help: string;
@@ -32,7 +32,7 @@ export function RunForm({ intent, label, fieldLabel, help, refusal, problem, loo
       <Refusal refused={refused} />
       <input type="hidden" name="intent" value={intent} />
       <div className="flex flex-wrap items-end gap-x-4 gap-y-3">
-        <div className="min-w-0 flex-1 basis-64"><TextInput field={field(intent === 'run' ? 'note' : 'reason')} label={fieldLabel} help={help} maxLength={300} /></div>
+        <div className="min-w-0 flex-1 basis-64"><TextInput field={field(intent === 'attach' ? 'reason' : 'note')} label={fieldLabel} help={help} maxLength={300} /></div>
         <Button look={look}>{label}</Button>
       </div>
     </Form>

@@ -32,8 +32,9 @@ export function RunHead({ page, listHref, href }: RunHeadProps) {
       ) : null}
       <p data-print="no" className="flex flex-wrap gap-x-5 gap-y-1 text-small [&_a]:inline-flex [&_a]:min-h-8 [&_a]:items-center">
         <AppLink href={listHref}>All runs</AppLink>
-        {page.view ? <AppLink href={`${href}?format=csv`} download>Minutes as CSV</AppLink> : null}
-        {page.view ? <AppLink href={`${href}?format=json`} download>Input and result as JSON</AppLink> : null}
+        {page.view && page.runCount > 1 ? <AppLink href={`${listHref}/compare?a=${line.number > 1 ? line.number - 1 : 2}&b=${line.number}`}>Compare with another run</AppLink> : null}
+        {page.view ? <AppLink href={`${href}/figures/minutes.csv`} download>Minutes as CSV</AppLink> : null}
+        {page.view ? <AppLink href={`${href}?format=json`} download>Record as JSON, input and result</AppLink> : null}
       </p>
     </div>
   );

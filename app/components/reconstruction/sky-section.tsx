@@ -50,7 +50,7 @@ export function IrradianceSection({ view, zone, clock }: { readonly view: RunVie
   return (
     <div className="min-w-0">
       <IrradianceDayFigure
-        figure="Fig. 4"
+        figure="Fig. 7"
         title="Direct irradiance, W/m²"
         zone={zone}
         fromUtc={irradiance.fromUtc}
@@ -59,7 +59,7 @@ export function IrradianceSection({ view, zone, clock }: { readonly view: RunVie
         likely={irradiance.likely}
         {...(irradiance.measured.length > 0 && irradiance.measuredName ? { measured: irradiance.measured, measuredName: irradiance.measuredName } : {})}
         sunlit={irradiance.sunlit}
-        note={`Square to the sun, before any glass. Dashed: clean-air bound. Thin: likely clear sky of the air class, below 6° the lower of two models; none below 3°. ${irradiance.measured.length === 0 ? 'No measured series was entered for this time.' : ''}`}
+        note={`Square to the sun, before any glass. Dashed: clean-air bound. Thin: likely clear sky of the air class, going over from 10° down to the lower of two models at 6°; none below 3°. ${irradiance.measured.length === 0 ? 'No measured series was entered for this time.' : ''}`}
       />
       {dni && clock ? (
         <div className="pt-2">

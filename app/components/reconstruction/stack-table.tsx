@@ -21,7 +21,7 @@ export function StackTable({ caption, heads, columns, rows }: StackTableProps) {
         {rows.map((row) => (
           <div key={row.key} role="row" className={`avoid-break grid items-start gap-x-4 gap-y-1.5 border-b border-hair py-2 ${columns}`}>
             {row.cells.map((cell, index) => (
-              <div key={heads[index]} role={index === 0 ? 'rowheader' : 'cell'} className={index === 0 ? 'font-semibold' : row.strong && index === 1 ? 'font-semibold' : 'max-tablet:flex max-tablet:gap-3'}>
+              <div key={heads[index]} role={index === 0 ? 'rowheader' : 'cell'} className={index === 0 ? 'font-semibold' : row.strong && index === 1 ? 'font-semibold' : cell === '' ? 'max-tablet:hidden' : 'max-tablet:flex max-tablet:gap-3'}>
                 {index > 0 ? <span aria-hidden="true" className="w-24 flex-none text-small font-normal text-second tablet:hidden">{heads[index]}</span> : null}
                 <div className="min-w-0">{cell}</div>
               </div>

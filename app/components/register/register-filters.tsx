@@ -4,7 +4,7 @@ import { Tabs } from '#app/components/ui/tabs.tsx';
 import { caseStateLabels, caseStates } from '#app/domain/case-state.ts';
 import type { RegisterView as RegisterData } from '#app/domain/case-view.ts';
 import type { RegisterFilter, RegisterView } from '#app/domain/register-filter.ts';
-import { registerResultLabels, registerResults, registerSearch, registerSortLabels, registerSorts, returnSpans } from '#app/domain/register-filter.ts';
+import { registerResultLabels, registerResults, registerSearch, registerSortLabels, registerSorts, registerViews, returnSpans } from '#app/domain/register-filter.ts';
 import { sceneOpticKinds, sceneOpticLabels } from '#app/domain/scene.ts';
 
 export interface RegisterFiltersProps {
@@ -13,7 +13,7 @@ export interface RegisterFiltersProps {
   readonly showAs: 'list' | 'map';
 }
 
-const viewWords: Record<RegisterView, string> = { all: 'All', open: 'Open', late: 'Late', injury: 'Injury', mine: 'Mine' };
+const viewWords: Record<RegisterView, string> = { all: 'All', open: 'Open', 'first-look': 'First look', late: 'Late', injury: 'Injury', mine: 'Mine' };
 const listPath = '/cases';
 const mapPath = '/cases/map';
 
@@ -21,7 +21,7 @@ const mapPath = '/cases/map';
 export function RegisterFilters({ filter, counts, showAs }: RegisterFiltersProps) {
   const submit = useSubmit();
   const path = showAs === 'map' ? mapPath : listPath;
-  const views = (['all', 'open', 'late', 'injury', 'mine'] as const).flatMap((view) => {
+  const views = registerViews.flatMap((view) => {
     const count = counts[view];
     return count === null ? [] : [{ href: `${path}${registerSearch(filter, { view })}`, label: viewWords[view], count, current: filter.view === view }];
   });

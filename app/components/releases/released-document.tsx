@@ -1,6 +1,7 @@
 import type { ReleaseDocument } from '#app/domain/release-document.ts';
 import type { ReleaseFrame } from '#app/domain/release-view.ts';
 import { SectionLevel } from './document-section.tsx';
+import { EvidenceSection } from './evidence-section.tsx';
 import { ManifestSection, PhotosSection } from './files-sections.tsx';
 import type { FileHref } from './files-sections.tsx';
 import { ActionsSection, FindingSection, HypothesesSection } from './reasoning-sections.tsx';
@@ -12,6 +13,7 @@ import { Watermark } from './watermark.tsx';
 export const documentParts = [
   { id: 'summary', label: 'Summary' },
   { id: 'chronology', label: 'Chronology' },
+  { id: 'evidence', label: 'Evidence and custody' },
   { id: 'measurements', label: 'Measurements' },
   { id: 'sun', label: 'Sun and weather' },
   { id: 'hypotheses', label: 'Hypotheses and tests' },
@@ -44,13 +46,14 @@ export function ReleasedDocument({ view, frame, zone, fileHref, watermark, level
         {view.sun?.card ? <ReleasedCard card={view.sun.card} caseNumber={view.caseNumber} /> : null}
         <SummarySection view={view} number={1} />
         <ChronologySection view={view} number={2} />
-        <MeasurementsSection view={view} number={3} />
-        <SunSection sun={view.sun} zone={zone} number={4} />
-        <HypothesesSection hypotheses={view.hypotheses} number={5} />
-        <FindingSection finding={view.finding} number={6} />
-        <ActionsSection actions={view.actions} number={7} />
-        <PhotosSection photos={view.photos} fileHref={fileHref} number={8} />
-        <ManifestSection frame={frame} fileHref={fileHref} number={9} />
+        <EvidenceSection items={view.evidence} number={3} />
+        <MeasurementsSection view={view} number={4} />
+        <SunSection sun={view.sun} zone={zone} number={5} />
+        <HypothesesSection hypotheses={view.hypotheses} number={6} />
+        <FindingSection finding={view.finding} number={7} />
+        <ActionsSection actions={view.actions} number={8} />
+        <PhotosSection photos={view.photos} fileHref={fileHref} number={9} />
+        <ManifestSection frame={frame} fileHref={fileHref} number={10} />
         <p className="mt-8 border-t border-hair pt-2 text-axis text-second">{watermark}</p>
       </article>
     </SectionLevel>

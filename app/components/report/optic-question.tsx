@@ -1,74 +1,70 @@
 import { ChoiceChips } from '#app/components/forms/choice-chips.tsx';
-import { FieldError } from '#app/components/forms/field.tsx';
-import { fieldIds, fieldText } from '#app/components/forms/field-like.ts';
+import { fieldText } from '#app/components/forms/field-like.ts';
+import { TextInput } from '#app/components/forms/text-field.tsx';
+import { MeasureSketch } from '#app/components/optics/measure-sketch.tsx';
 import { OpticPicker } from '#app/components/optics/optic-drawing.tsx';
-import { dimensionFields, dimensionsOfKind, dimensionTexts, kindsWithMaterial, lengthUnits, reportDimensions, reportMaterials } from '#app/domain/report-optic.ts';
-import type { ReportDimension } from '#app/domain/report-optic.ts';
+import type { UnitSystem } from '#app/domain/lengths.ts';
+import { ifUnknown, kindsByFacing, kindsThatLie, kindsWithCoating, kindsWithFaces, kindsWithMaterial, kindsWithPrint, reportMaterials, sizeQuestions } from '#app/domain/report-optic-sizes.ts';
 import { sceneOpticKinds } from '#app/domain/scene.ts';
-import { Follows, Question } from './question.tsx';
+import { FacingFields } from './facing-fields.tsx';
+import { Follows, OnlyMarks, Question } from './question.tsx';
 import type { ReportField } from './report-fields.ts';
+import { SizeFields } from './size-fields.tsx';
 
-const kindsWith = (dimension: ReportDimension) => sceneOpticKinds.filter((kind) => dimensionsOfKind[kind].includes(dimension)).join(' ');
+const dontKnow = { value: 'dont-know', label: "Don't know", dashed: true } as const;
+const coatings = [
+  { value: '1', label: '1: the outermost face' },
+  { value: '2', label: '2: behind the outer pane' },
+  { value: '3', label: '3: before the inner pane' },
+  { value: '4', label: '4: the room side' },
+  dontKnow,
+];
 
-/** What may have bent the light, by picture; then only the sizes that matter for that kind. Nothing here is required. */
-export function OpticQuestion({ field }: { readonly field: ReportField }) {
+export interface OpticQuestionProps {
+  readonly field: ReportField;
+  readonly units: UnitSystem;
+  /** What the form holds at the moment. */
+  readonly values: Readonly<Record<string, string>>;
+}
+
+/** What may have bent the light, by picture; then only what the model of that kind uses. Nothing here is required. */
+export function OpticQuestion({ field, units, values }: OpticQuestionProps) {
   return (
     <Question title="What may have bent the light?" help="Not required. Pick the nearest shape. Blue is light, brown is where it lands.">
       <OpticPicker name="opticKind" legend={<span className="sr-only">What may have bent the light?</span>} chosen={fieldText(field('opticKind'))} />
-      {reportDimensions.map((dimension) => (
-        <Follows key={dimension} on={kindsWith(dimension)}>
-          <DimensionFields dimension={dimension} field={field} />
+      <Follows on="optic-known">
+        <p className="border-l-6 border-ink py-1 pl-4 text-small">Measure only what you can reach with your feet on the ground, with the thing shaded or covered. Do not clean it, move it or pour anything out. A guess, a photo or “Don't know” is fine.</p>
+      </Follows>
+      {sceneOpticKinds.filter((kind) => kind !== 'dont-know').map((kind) => (
+        <Follows key={kind} on={kind}>
+          <OnlyMarks>
+            <MeasureSketch kind={kind} />
+            {sizeQuestions[kind].map((question) => <SizeFields key={question.dimension} kind={kind} question={question} field={field} units={units} />)}
+            <p className="text-small text-second">{ifUnknown[kind]}</p>
+          </OnlyMarks>
         </Follows>
       ))}
+      <Follows on={kindsWithPrint.join(' ')}>
+        <TextInput field={field('opticPrinted')} label="Is anything printed on it?" help="Such as 5×, f 200 or 8 × 40. A number like 5× is a clue, not a measurement." autoComplete="off" maxLength={80} />
+      </Follows>
       <Follows on={kindsWithMaterial.join(' ')}>
         <ChoiceChips field={field('opticMaterial')} legend="What is it made of?" options={reportMaterials.map((option) => ({ ...option, dashed: option.value === 'unknown' }))} />
       </Follows>
+      <Follows on={kindsWithFaces.join(' ')}>
+        <ChoiceChips field={field('opticFace')} legend="Which face was up, toward the sun?" options={[{ value: 'curved', label: 'The curved face' }, { value: 'flat', label: 'The flat face' }, dontKnow]} />
+      </Follows>
+      <Follows on={kindsWithCoating.join(' ')}>
+        <ChoiceChips field={field('opticCoating')} legend="Which face of the glass is coated?" help="Often printed in the bar between the panes. Faces are counted from outside." options={coatings} />
+      </Follows>
+      <Follows on={kindsThatLie.join(' ')}>
+        <ChoiceChips field={field('opticLies')} legend="How did it stand?" options={[{ value: 'upright', label: 'Upright' }, { value: 'lying', label: 'Lying down' }, dontKnow]} />
+      </Follows>
+      <Follows on={kindsByFacing.join(' ')}>
+        <FacingFields field={field} values={values} />
+      </Follows>
       <Follows on="optic-known">
-        <ChoiceChips
-          field={field('opticMoved')}
-          legend="Has it been moved since?"
-          options={[{ value: 'no', label: 'No' }, { value: 'yes', label: 'Yes' }, { value: 'dont-know', label: "Don't know", dashed: true }]}
-        />
+        <ChoiceChips field={field('opticMoved')} legend="Has it been moved since?" options={[{ value: 'no', label: 'No' }, { value: 'yes', label: 'Yes' }, dontKnow]} />
       </Follows>
     </Question>
-  );
-}
-
-/** Value, unit, ± and how it was got; "Don't know" is one of the ways. */
-function DimensionFields({ dimension, field }: { readonly dimension: ReportDimension; readonly field: ReportField }) {
-  const names = dimensionFields(dimension);
-  const text = dimensionTexts[dimension];
-  const value = field(names.value);
-  const plusMinus = field(names.plusMinus);
-  const unit = field(names.unit, text.unit);
-  const invalid = { 'aria-invalid': (value.errors?.length ?? 0) > 0 || undefined, 'aria-describedby': `${names.value}-help${value.errors ? ` ${fieldIds(value).errorId}` : ''}` };
-  return (
-    <fieldset className="min-w-0 pt-2">
-      <legend className="pb-1 font-semibold">{text.question}</legend>
-      <p id={`${names.value}-help`} className="pb-1.5 text-small text-second">{text.help}</p>
-      <div className="flex gap-2.5 pb-2">
-        <div className="min-w-0 flex-[2]">
-          <label htmlFor={names.value} className="block pb-1 text-small text-second">About</label>
-          <input id={names.value} name={names.value} defaultValue={fieldText(value)} inputMode="decimal" autoComplete="off" className="field-box" {...invalid} />
-        </div>
-        <div className="min-w-20 flex-1">
-          <label htmlFor={names.unit} className="block pb-1 text-small text-second">Unit</label>
-          <select id={names.unit} name={names.unit} defaultValue={fieldText(unit)} className="field-box">
-            {lengthUnits.map((one) => <option key={one} value={one}>{one}</option>)}
-          </select>
-        </div>
-        <div className="min-w-0 flex-1">
-          <label htmlFor={names.plusMinus} className="block pb-1 text-small text-second"><span aria-hidden="true">±</span><span className="sr-only">Plus or minus</span></label>
-          <input id={names.plusMinus} name={names.plusMinus} defaultValue={fieldText(plusMinus)} inputMode="decimal" autoComplete="off" className="field-box" aria-invalid={(plusMinus.errors?.length ?? 0) > 0 || undefined} />
-        </div>
-      </div>
-      <FieldError field={value} />
-      <FieldError field={plusMinus} />
-      <ChoiceChips
-        field={field(names.method)}
-        legend={<span className="sr-only">{text.question} How was it got?</span>}
-        options={[{ value: 'measured', label: 'Measured' }, { value: 'estimated', label: 'Estimated' }, { value: 'dont-know', label: "Don't know", dashed: true }]}
-      />
-    </fieldset>
   );
 }

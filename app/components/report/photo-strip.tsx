@@ -1,127 +1,90 @@
-import { useDropzone } from 'react-dropzone';
+import { useState } from 'react';
 import { FieldError } from '#app/components/forms/field.tsx';
 import { TwoPartBar } from '#app/components/layout/page.tsx';
 import { Button } from '#app/components/ui/button.tsx';
-import { photoMimes } from '#app/domain/photo.ts';
+import type { KeptPhoto } from './device-store.ts';
+import { AddPhotoTile } from './add-photo-tile.tsx';
+import { photoDifference } from './photo-difference.ts';
+import { PhotoPanel } from './photo-panel.tsx';
+import { PlainPhotos } from './plain-photos.tsx';
+import { PhotoTile } from './photo-tile.tsx';
 import type { ReportField } from './report-fields.ts';
-import { useHydrated } from './use-hydrated.ts';
-import type { PhotoUpload, PhotoUploads } from './use-photo-uploads.ts';
-
-/** A photo of this report that the team already has. */
-export interface StoredPhoto {
-  readonly id: string;
-  readonly fileName: string;
-  readonly state: 'stored' | 'ready' | 'failed';
-}
+import type { StoredPhoto } from './report-view.ts';
+import type { StatedFinding } from './stated-finding.ts';
+import type { ReportPhotos } from './use-report-photos.ts';
 
 export interface PhotoStripProps {
   readonly field: ReportField;
   readonly clientId: string;
+  /** What the team has, for a page without a script. */
   readonly stored: readonly StoredPhoto[];
-  readonly uploads: PhotoUploads;
+  readonly photos: ReportPhotos;
+  readonly progress: Readonly<Record<string, number>>;
+  /** A script runs, and the device keeps what it is given. */
+  readonly keeps: boolean;
+  readonly finding: StatedFinding;
+  /** Fills a field of the form with what a file says. */
+  readonly onUse: (values: Readonly<Record<string, string>>) => void;
 }
 
-const accepted = photoMimes.join(',');
-
-/** Photos first: the ones the team has, the ones on their way, and one tile to add more. */
-export function PhotoStrip({ field, clientId, stored, uploads }: PhotoStripProps) {
-  const hydrated = useHydrated();
-  const shown = stored.filter((photo) => !uploads.uploads.some((upload) => upload.photoId === photo.id));
-  const open = uploads.uploads.filter((upload) => upload.state !== 'stored');
+/** Photos first: each with what is said of it, and one tile to add more. */
+export function PhotoStrip({ field, clientId, stored, photos, progress, keeps, finding, onUse }: PhotoStripProps) {
+  const [openKey, setOpenKey] = useState<string | null>(null);
+  const [smaller, setSmaller] = useState(false);
+  const shown = photos.photos.filter((photo) => photo.removedAt === null && photo.state !== 'refused');
+  const open = shown.find((photo) => photo.key === openKey);
+  const number = (photo: KeptPhoto) => shown.indexOf(photo) + 1;
   return (
     <section id="photos" tabIndex={-1} aria-labelledby="photos-heading" className="space-y-3 pb-4">
       <h2 id="photos-heading" className="sr-only">Photos</h2>
-      <ul className="grid grid-cols-3 gap-3 tablet:grid-cols-4">
-        {shown.map((photo) => <StoredTile key={photo.id} photo={photo} clientId={clientId} />)}
-        {uploads.uploads.map((upload, index) => (upload.state === 'refused' ? null : <UploadTile key={upload.key} upload={upload} number={shown.length + index + 1} onTakeOff={() => uploads.takeOff(upload.key)} />))}
-        {hydrated ? <li><AddTile onFiles={uploads.add} /></li> : null}
-      </ul>
-      {hydrated ? null : <PlainPhotoInput />}
-      <p className="text-small text-second">Photograph the mark and the whole scene, with something that shows the size. Stay out of the beam. No faces, please.</p>
+      {keeps ? (
+        <ul className="grid grid-cols-[repeat(auto-fill,minmax(6rem,1fr))] gap-3">
+          {shown.map((photo) => (
+            <PhotoTile key={photo.key} photo={photo} number={number(photo)} src={photos.previewOf(photo)} copy={photos.copyOf(photo)} differs={photoDifference(photo, finding) !== null} open={photo === open} onOpen={() => setOpenKey(photo === open ? null : photo.key)} onMove={(by) => photos.move(photo.key, by)} />
+          ))}
+          <li><AddPhotoTile onFiles={(files) => void photos.add(files, smaller)} /></li>
+        </ul>
+      ) : <PlainPhotos stored={stored} clientId={clientId} />}
+      {open ? <PhotoPanel key={open.key} photo={open} number={number(open)} count={shown.length} photos={photos} finding={finding} onUse={onUse} onClose={() => setOpenKey(null)} /> : null}
+      <p className="text-small text-second">Photograph the mark and the whole scene, with something that shows the size. Stay out of the beam. No faces, please.{keeps && shown.length > 0 ? ' Press a photo to say what it shows.' : ''}</p>
+      {keeps ? <SmallerChoice chosen={smaller} onChange={setSmaller} /> : null}
       <FieldError field={field('photos')} />
-      {open.length > 0 ? <UploadLines uploads={open} actions={uploads} /> : null}
+      <Lines photos={photos} shown={shown} progress={progress} />
     </section>
   );
 }
 
-function StoredTile({ photo, clientId }: { readonly photo: StoredPhoto; readonly clientId: string }) {
+function SmallerChoice({ chosen, onChange }: { readonly chosen: boolean; readonly onChange: (chosen: boolean) => void }) {
   return (
-    <li className="min-w-0">
-      <div className="flex aspect-[3/2] items-center justify-center overflow-hidden bg-wash">
-        {photo.state === 'ready'
-          ? <img src={`/photos/${photo.id}/thumbnail?report=${clientId}`} alt={photo.fileName} className="h-full w-full object-cover" />
-          : <span className="px-2 text-center text-axis text-second">{photo.state === 'failed' ? 'kept; cannot be shown' : 'being prepared'}</span>}
-      </div>
-      <p className="truncate pt-1 text-axis text-second">{photo.fileName}</p>
-      <button type="submit" name="intent" value={`remove-photo:${photo.id}`} formNoValidate className="min-h-6 cursor-pointer text-axis underline decoration-ember decoration-2 underline-offset-4">
-        Take off<span className="sr-only"> {photo.fileName}</span>
-      </button>
-    </li>
+    <label className="flex min-h-11 items-center gap-3">
+      <input type="checkbox" className="tick-box" checked={chosen} onChange={(event) => onChange(event.currentTarget.checked)} />
+      <span>Make the next photos smaller for sending<span className="block text-axis text-second">Left open, they go as the camera made them, which shows most.</span></span>
+    </label>
   );
 }
 
-function UploadTile({ upload, number, onTakeOff }: { readonly upload: PhotoUpload; readonly number: number; readonly onTakeOff: () => void }) {
+/** What is on this phone and what is with the team; what was taken off and can be taken back; a refused file says why. */
+function Lines({ photos, shown, progress }: { readonly photos: ReportPhotos; readonly shown: readonly KeptPhoto[]; readonly progress: Readonly<Record<string, number>> }) {
+  const waiting = shown.filter((photo) => photo.state === 'waiting');
   return (
-    <li className="min-w-0">
-      <img src={upload.previewUrl} alt={upload.file.name} className="aspect-[3/2] w-full bg-wash object-cover" />
-      <p className="truncate pt-1 text-axis text-second">{upload.state === 'stored' ? 'with the team' : upload.state === 'interrupted' ? 'waits for signal' : 'on its way'}</p>
-      {upload.state === 'sending' ? null : <button type="button" onClick={onTakeOff} className="min-h-6 cursor-pointer text-axis underline decoration-ember decoration-2 underline-offset-4">Take off<span className="sr-only"> photo {number}</span></button>}
-    </li>
-  );
-}
-
-function CameraSign() {
-  return (
-    <svg width="40" height="32" viewBox="0 0 40 32" aria-hidden="true" className="fill-none stroke-ember" strokeWidth="2.2">
-      <path d="M2 8h9l4-5h10l4 5h9v21H2Z" />
-      <circle cx="20" cy="18" r="7" />
-    </svg>
-  );
-}
-
-/** Press for camera or library, or drop files on it. */
-function AddTile({ onFiles }: { readonly onFiles: (files: readonly File[]) => void }) {
-  const { getRootProps, getInputProps, isDragActive, open } = useDropzone({ onDrop: (files) => onFiles(files), noClick: true, noKeyboard: true });
-  return (
-    <div {...getRootProps()} className="h-full">
-      <input {...getInputProps({ accept: accepted, 'aria-label': 'Photo files' })} />
-      <button type="button" onClick={open} className={`flex aspect-[3/2] w-full cursor-pointer flex-col items-center justify-center gap-1 border-2 border-ember font-semibold text-ember ${isDragActive ? 'bg-wash' : ''}`}>
-        <CameraSign />
-        {isDragActive ? 'Drop here' : 'Add photo'}
-      </button>
-    </div>
-  );
-}
-
-/** Without a script: the platform's own field, sent with the form or by its own button. */
-function PlainPhotoInput() {
-  return (
-    <div className="space-y-2">
-      <label htmlFor="photo-files" className="block font-semibold">Add photos</label>
-      <input type="file" id="photo-files" name="photos" multiple accept={accepted} className="field-box" />
-      <Button look="outlined" name="intent" value="add-photos" formNoValidate>Add these photos now</Button>
-    </div>
-  );
-}
-
-const detailOf: Record<PhotoUpload['state'], string> = { waiting: 'waits its turn', sending: 'on its way', stored: 'with the team', refused: 'refused', interrupted: 'no signal; kept in this page' };
-
-/** What is on this phone and what is with the team; a refused file says why. */
-function UploadLines({ uploads, actions }: { readonly uploads: readonly PhotoUpload[]; readonly actions: PhotoUploads }) {
-  const stuck = uploads.some(({ state }) => state === 'interrupted');
-  return (
-    <div className="space-y-3" role="status">
-      {uploads.map((upload) =>
-        upload.state === 'refused' ? (
-          <div key={upload.key} className="flex items-start justify-between gap-3 border-l-5 border-ink pl-3">
-            <p className="text-small font-semibold">{upload.sentence}</p>
-            <Button type="button" look="quiet" onClick={() => actions.takeOff(upload.key)}>Dismiss</Button>
-          </div>
-        ) : (
-          <TwoPartBar key={upload.key} label={upload.file.name} detail={detailOf[upload.state]} sentPart={upload.sentPart} />
-        ),
-      )}
-      {stuck ? <Button type="button" look="outlined" onClick={actions.retry}>Try the photos again</Button> : null}
+    <div className="space-y-3 empty:hidden" role="status">
+      {waiting.map((photo) => {
+        const part = progress[photo.key] ?? 0;
+        return <TwoPartBar key={photo.key} label={`Photo ${shown.indexOf(photo) + 1}`} detail={part > 0 && part < 1 ? `on its way, ${Math.round(part * 100)} %` : 'on this phone'} sentPart={part} />;
+      })}
+      {photos.roomless ? <p className="text-small font-semibold">This device has no room to keep a photo. Leave this page open until it is with the team.</p> : null}
+      {photos.photos.filter((photo) => photo.state === 'refused').map((photo) => (
+        <div key={photo.key} className="flex items-start justify-between gap-3 border-l-5 border-ink pl-3">
+          <p className="text-small font-semibold">{photo.sentence}</p>
+          <Button type="button" look="quiet" className="min-h-11" onClick={() => photos.dismiss(photo.key)}>Dismiss</Button>
+        </div>
+      ))}
+      {photos.photos.filter((photo) => photo.removedAt !== null).map((photo) => (
+        <div key={photo.key} className="flex items-center justify-between gap-3 border-t border-hair">
+          <p className="min-w-0 truncate text-small">Taken off: {photo.details.caption || photo.fileName}</p>
+          <Button type="button" look="quiet" className="min-h-11 flex-none" onClick={() => photos.takeBack(photo.key)}>Undo<span className="sr-only">: put {photo.fileName} back</span></Button>
+        </div>
+      ))}
     </div>
   );
 }

@@ -3,6 +3,8 @@ import type { MarkedState } from '#app/components/ui/state-mark.tsx';
 
 export interface ProgressLineStep {
   readonly state: MarkedState;
+  /** Plain name of the step. */
+  readonly name: string;
   readonly words: string;
   /** "9 May 2026, 15:41", "now", or empty. */
   readonly when: string;
@@ -18,7 +20,7 @@ export function ProgressLine({ steps }: { readonly steps: readonly ProgressLineS
           {index < steps.length - 1 ? (
             <span aria-hidden="true" className={`absolute top-6 bottom-0 left-[7.25px] border-l-[1.5px] border-current ${steps[index + 1]?.reached ? '' : 'border-dashed'}`} />
           ) : null}
-          <StateMark state={step.state} {...(step.when ? { note: step.when } : {})} />
+          <StateMark state={step.state} word={step.name} {...(step.when ? { note: step.when } : {})} />
           <p className="pl-6">{step.reached ? null : <span className="sr-only">Still to come: </span>}{step.words}</p>
         </li>
       ))}

@@ -11,10 +11,23 @@ export function AnswerDisc({ number, answers }: { readonly number: number; reado
   );
 }
 
+/** A bright patch that left no mark takes a shorter way: what is only about marks is left out, by `report.css`. */
+const onlyMarks = 'only-marks';
+
 /** One of the four questions that a report needs, or, without a number, one that it does not. */
-export function Question({ number, answers, title, help, children }: { readonly number?: number; readonly answers?: string; readonly title: ReactNode; readonly help?: ReactNode; readonly children: ReactNode }) {
+export interface QuestionProps {
+  readonly number?: number;
+  readonly answers?: string;
+  readonly title: ReactNode;
+  readonly help?: ReactNode;
+  /** Left out for a near miss. */
+  readonly shortPath?: boolean;
+  readonly children: ReactNode;
+}
+
+export function Question({ number, answers, title, help, shortPath = false, children }: QuestionProps) {
   return (
-    <section className="border-t border-hair pt-4 pb-5">
+    <section className={`${shortPath ? `${onlyMarks} ` : ''}border-t border-hair pt-4 pb-5`}>
       <h2 className="flex items-center gap-3 pb-2.5 text-account font-semibold">
         {number !== undefined && answers !== undefined ? <AnswerDisc number={number} answers={answers} /> : <OptionalDisc />}
         {title}
@@ -35,6 +48,11 @@ function OptionalDisc() {
 }
 
 /** Shown by the style sheet when the answer it depends on is given; see `report.css`. */
-export function Follows({ on, children }: { readonly on: string; readonly children: ReactNode }) {
-  return <div className="follows space-y-3" data-on={on}>{children}</div>;
+export function Follows({ on, shortPath = false, children }: { readonly on: string; readonly shortPath?: boolean; readonly children: ReactNode }) {
+  return <div className={`follows space-y-3${shortPath ? ` ${onlyMarks}` : ''}`} data-on={on}>{children}</div>;
+}
+
+/** Left out for a near miss. */
+export function OnlyMarks({ children }: { readonly children: ReactNode }) {
+  return <div className={`${onlyMarks} space-y-3`}>{children}</div>;
 }

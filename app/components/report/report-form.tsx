@@ -5,38 +5,40 @@ import { ErrorSummary } from '#app/components/forms/error-summary.tsx';
 import { TextArea } from '#app/components/forms/text-field.tsx';
 import { sightingLabels, sightings } from '#app/domain/incident.ts';
 import { reportFieldLabels } from '#app/domain/report-fields.ts';
+import { HurtQuestions } from './hurt-questions.tsx';
 import { MoreQuestions } from './more-questions.tsx';
+import { answerField } from './form-words.ts';
 import { PhotoStrip } from './photo-strip.tsx';
-import type { StoredPhoto } from './photo-strip.tsx';
-import { Follows, Question } from './question.tsx';
+import { Question } from './question.tsx';
 import './report.css';
+import { reportAddress } from './report-addresses.ts';
 import { ReportBar } from './report-bar.tsx';
 import { reportFields } from './report-fields.ts';
 import type { ReportField, ReportFormState } from './report-fields.ts';
 import { useHydrated } from './use-hydrated.ts';
-import type { PhotoUploads } from './use-photo-uploads.ts';
+import type { ReportView } from './report-view.ts';
+import { statedFinding } from './stated-finding.ts';
+import { StoryHintLine } from './story-hint.tsx';
 import type { ReportDraft } from './use-report-draft.ts';
+import type { ReportPhotos } from './use-report-photos.ts';
 import type { ReportSending } from './use-report-sending.ts';
 import { WhenQuestion } from './when-question.tsx';
 import { WhereQuestion } from './where-question.tsx';
-import type { SiteChoice } from './where-question.tsx';
 
 export interface ReportFormProps {
-  readonly address: string;
-  readonly clientId: string;
-  readonly sites: readonly SiteChoice[];
-  readonly guest: boolean;
+  readonly view: ReportView;
   readonly state: ReportFormState;
-  readonly stored: readonly StoredPhoto[];
   readonly formRef: RefObject<HTMLFormElement | null>;
   readonly draft: ReportDraft;
   readonly sending: ReportSending;
-  readonly uploads: PhotoUploads;
+  readonly photos: ReportPhotos;
 }
 
 /** One page, four answers, the rest as one likes. Posts as it stands without a script. */
-export function ReportForm({ address, clientId, sites, guest, state, stored, formRef, draft, sending, uploads }: ReportFormProps) {
+export function ReportForm({ view, state, formRef, draft, sending, photos }: ReportFormProps) {
+  const { clientId, sites, guest } = view;
   const hydrated = useHydrated();
+  const keeps = hydrated && !draft.unkept;
   const field = reportFields(state);
   const site = sites.find((one) => one.id === draft.values['siteId']);
   const fill = (name: string, value: string, onlyEmpty: boolean) => {
@@ -55,28 +57,38 @@ export function ReportForm({ address, clientId, sites, guest, state, stored, for
     <Form
       ref={formRef}
       method="post"
-      action={address}
+      action={reportAddress(clientId, view.guestCode)}
       encType="multipart/form-data"
       noValidate
       className="report-form"
-      onInput={draft.keep}
+      onInput={() => void draft.keep()}
       onSubmit={(event) => {
+        // A device that keeps nothing sends the form as it stands, files and all.
+        if (!keeps) return;
         event.preventDefault();
-        const submitter = event.nativeEvent instanceof SubmitEvent ? event.nativeEvent.submitter : null;
-        if (submitter instanceof HTMLButtonElement && submitter.value !== 'send') sending.submitOther(submitter);
-        else sending.send();
+        void draft.keep().then(photos.dismissRefused).then(sending.send);
       }}
     >
       <input type="hidden" name="clientId" value={clientId} />
       {/* The first button of a form answers the Enter key: it must be the one that sends. */}
       <button type="submit" name="intent" value="send" tabIndex={-1} aria-hidden="true" className="sr-only">Send</button>
       <div className="pb-4 empty:hidden"><ErrorSummary errors={state.formErrors} fields={summaryFields(field, state)} title="Not sent yet. What you typed is still here." /></div>
-      <PhotoStrip field={field} clientId={clientId} stored={stored} uploads={uploads} />
-      <WhereQuestion field={field} sites={sites} chosen={site} fixed={guest} onSite={startClock} />
-      <WhenQuestion field={field} state={state} site={site} values={draft.values} onAnswer={pinNow} />
+      <PhotoStrip
+        field={field}
+        clientId={clientId}
+        stored={view.photos}
+        photos={photos}
+        progress={sending.progress}
+        keeps={keeps}
+        finding={statedFinding(draft.values, site?.zone ?? null)}
+        onUse={(values) => { for (const [name, value] of Object.entries(values)) if (formRef.current) answerField(formRef.current, name, value); }}
+      />
+      <WhereQuestion field={field} sites={sites} chosen={site} fixed={guest} values={draft.values} onSite={startClock} />
+      <WhenQuestion field={field} state={state} site={site} values={draft.values} guestCode={view.guestCode} onAnswer={pinNow} />
       <Question number={3} answers="sighting" title="What do you see?">
         <ChoiceChips field={field('sighting')} legend={<span className="sr-only">What do you see?</span>} options={sightings.map((value) => ({ value, label: sightingLabels[value], dashed: value === 'dont-know' }))} />
         <TextArea field={field('narrative')} label="In your words" help="What, how large, which way it runs. No names, nothing about injuries." rows={3} maxLength={4000} />
+        <StoryHintLine story={draft.values['narrative'] ?? ''} />
       </Question>
       <Question number={4} answers="anyoneHurt" title="Was anyone hurt?">
         <ChoiceChips
@@ -86,17 +98,10 @@ export function ReportForm({ address, clientId, sites, guest, state, stored, for
           size="large"
           spread
         />
-        <Follows on="hurt">
-          <ChoiceChips
-            field={field('hurtAgeBand')}
-            legend="How old, roughly? No name, please."
-            options={[{ value: 'adult', label: 'Adult' }, { value: '16-17', label: '16 or 17' }, { value: 'under-16', label: 'Under 16' }, { value: 'unknown', label: "Don't know", dashed: true }]}
-          />
-          <p className="text-small text-second">Blurred or dark spots in sight: get medical help now. Tell the person in charge of the site. The injury itself is asked about later, and kept apart.</p>
-        </Follows>
+        <HurtQuestions field={field} />
       </Question>
-      <MoreQuestions field={field} guest={guest} />
-      <ReportBar hydrated={hydrated} draft={draft} sending={sending.state} photosOnTheWay={uploads.onTheWay} />
+      <MoreQuestions field={field} guest={guest} units={(site ?? sites[0])?.units ?? 'metric'} values={draft.values} />
+      <ReportBar hydrated={hydrated} draft={draft} />
     </Form>
   );
 }

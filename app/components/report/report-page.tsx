@@ -1,57 +1,54 @@
-import { useCallback, useEffect, useRef } from 'react';
+import { useCallback, useEffect, useRef, useState } from 'react';
+import { useNavigate } from 'react-router';
 import { TaskHeader } from '#app/components/layout/app-header.tsx';
 import { MakeSafeCard } from '#app/components/layout/make-safe-card.tsx';
 import { Page } from '#app/components/layout/page.tsx';
-import { AppLink } from '#app/components/ui/app-link.tsx';
-import { Button, ButtonLink } from '#app/components/ui/button.tsx';
-import type { StoredPhoto } from './photo-strip.tsx';
+import { Button } from '#app/components/ui/button.tsx';
+import { keptDays } from './device-store.ts';
+import { deviceWord } from './device-word.ts';
+import { GoOn } from './go-on.tsx';
+import { keepView } from './kept-views.ts';
+import { newReportAddress, receivedAddress, reportAddress } from './report-addresses.ts';
 import type { ReportFormState } from './report-fields.ts';
 import { ReportForm } from './report-form.tsx';
+import type { ReportView } from './report-view.ts';
+import { SavedScreen } from './saved-screen.tsx';
+import { registerServiceWorker, sendsInBackground } from './service-worker-registration.ts';
 import { useHydrated } from './use-hydrated.ts';
-import { usePhotoUploads } from './use-photo-uploads.ts';
+import { lastingWords, useLastingStorage } from './use-lasting-storage.ts';
 import { useReportDraft } from './use-report-draft.ts';
+import { useReportPhotos } from './use-report-photos.ts';
 import { useReportSending } from './use-report-sending.ts';
-import type { SiteChoice } from './where-question.tsx';
-
-/** Everything the page of a report under way needs. */
-export interface ReportView {
-  /** Made with the first look at the page; the same report keeps it until it is sent. */
-  readonly clientId: string;
-  /** Names the place on the device where this holder's draft lies. */
-  readonly holderKey: string;
-  readonly guestCode: string | null;
-  /** Without an account: one site, and a way to be reached is asked for. */
-  readonly guest: boolean;
-  readonly sites: readonly SiteChoice[];
-  readonly emergencyNumber: string;
-  readonly photos: readonly StoredPhoto[];
-  readonly closeHref: string;
-}
+import { WaitingNote, WaitingReports } from './waiting-reports.tsx';
 
 const nothingTyped: ReportFormState = { typed: {}, formErrors: [], fieldErrors: {}, repeated: {}, longWindowDays: null };
+const roomless = new Map<string, Blob>();
+const fileOf = (key: string) => roomless.get(key);
 
-export const reportAddress = (clientId: string, guestCode: string | null) => `/report?${new URLSearchParams({ ...(guestCode ? { at: guestCode } : {}), report: clientId }).toString()}`;
-const photosAddress = (clientId: string, guestCode: string | null) => `/report/${clientId}/photos${guestCode ? `?at=${encodeURIComponent(guestCode)}` : ''}`;
-
-/** Make-safe card first, then the form. Without a script both stand on one page. */
+/** Make-safe card first, then the form, then what is saved and waits. Without a script card and form stand on one page. */
 export function ReportPage({ view, problem }: { readonly view: ReportView; readonly problem: ReportFormState | null }) {
-  const { clientId, guestCode } = view;
+  const { clientId, guestCode, holderKey } = view;
   const hydrated = useHydrated();
   const form = useRef<HTMLFormElement>(null);
   const heading = useRef<HTMLHeadingElement>(null);
-  const address = reportAddress(clientId, guestCode);
-  const uploads = usePhotoUploads(photosAddress(clientId, guestCode));
-  const sending = useReportSending({ form, address, photosOnTheWay: uploads.onTheWay });
   const addressOf = useCallback((id: string) => reportAddress(id, guestCode), [guestCode]);
-  const draft = useReportDraft({ form, clientId, holderKey: view.holderKey, addressOf, mending: problem !== null, first: { ...(view.sites.length === 1 ? { siteId: view.sites[0]?.id ?? '' } : {}), ...problem?.typed } });
-  // A form that came back to be mended is the page, with a script or without.
-  const atForm = problem !== null || (hydrated && draft.begun);
+  const only = view.sites.length === 1 ? view.sites[0] : undefined;
+  const draft = useReportDraft({ form, clientId, holderKey, guestCode, addressOf, mending: problem !== null, first: { ...(only ? { siteId: only.id } : {}), ...problem?.typed } });
+  const sending = useReportSending({ clientId, holderKey, report: draft.report, fileOf });
+  const photos = useReportPhotos({ clientId, stored: view.fromDevice ? null : view.photos, maxBytes: view.photoMaxBytes, roomless, keep: draft.keep, onChange: sending.tryNow });
+  const lasting = useLastingStorage(draft.report !== null && (photos.photos.length > 0 || draft.report.wanted !== 'no'));
+  const background = useArrival(view);
+  useWayToReceipt(draft.report, guestCode);
 
+  const mend = problem ?? (draft.report?.problem ? { ...draft.report.problem, typed: draft.report.values } : null);
+  // A form that came back to be mended is the page, with a script or without.
+  const atForm = mend !== null || (hydrated && draft.begun);
+  const saved = draft.report !== null && draft.report.wanted !== 'no';
   useEffect(() => {
-    if (!problem) return;
+    if (!mend) return;
     const summary = form.current?.querySelector('[role="alert"]');
     if (summary instanceof HTMLElement) summary.focus();
-  }, [problem]);
+  }, [mend !== null]); // eslint-disable-line react-hooks/exhaustive-deps -- once for each time something has to be mended
 
   const begin = (stillThere: boolean) => {
     const choice = stillThere ? form.current?.querySelector("[name='hazardStillPresent'][value='yes']") : null;
@@ -62,77 +59,55 @@ export function ReportPage({ view, problem }: { readonly view: ReportView; reado
       heading.current?.focus();
     });
   };
-
-  const startAnew = () => {
-    if (!window.confirm('Throw away what you typed? Nothing of it has been sent.')) return;
-    draft.discard();
-    window.location.assign(guestCode ? `/report?at=${encodeURIComponent(guestCode)}` : '/report');
+  const startAnew = async () => {
+    await draft.discard();
+    window.location.assign(newReportAddress(guestCode));
   };
 
   const Heading = atForm ? 'h1' : 'h2';
   return (
     <>
-      <TaskHeader title="Report a mark" closeHref={view.closeHref} open={!atForm} />
+      <TaskHeader title={saved ? 'Your report' : 'Report a mark'} closeHref={view.closeHref} open={!atForm} />
       <Page withBar width="task">
-        <div hidden={atForm || undefined} className="-mx-(--page-margin) pb-4">
+        {saved && draft.report ? (
+          <SavedScreen report={draft.report} photos={photos.photos} siteName={view.sites.find((site) => site.id === draft.report?.values['siteId'])?.name ?? ''} savedAt={draft.savedAt ?? ''} sending={sending} lasting={lasting} background={background} />
+        ) : null}
+        <div hidden={saved || atForm || undefined} className="-mx-(--page-margin) pb-4">
           <MakeSafeCard telephone={view.emergencyNumber} headingLevel={atForm ? 2 : 1}>
             <GoOn view={view} hydrated={hydrated} onGo={begin} />
           </MakeSafeCard>
         </div>
-        <div id="report" hidden={(hydrated && !atForm) || undefined} className="pt-4">
+        <div id="report" hidden={saved || (hydrated && !atForm) || undefined} className="pt-4">
           <Heading ref={heading} tabIndex={-1} className="pb-3 font-serif text-title outline-none">What did you find?</Heading>
-          <ReportForm
-            address={address}
-            clientId={clientId}
-            sites={view.sites}
-            guest={view.guest}
-            state={problem ?? nothingTyped}
-            stored={view.photos}
-            formRef={form}
-            draft={draft}
-            sending={sending}
-            uploads={uploads}
-          />
-          {hydrated ? <p className="pt-4 pb-8"><Button type="button" look="quiet" className="min-h-11" onClick={startAnew}>Throw this draft away and start anew</Button></p> : null}
+          {hydrated ? <WaitingNote holderKey={holderKey} clientId={clientId} /> : null}
+          <ReportForm view={view} state={mend ?? nothingTyped} formRef={form} draft={draft} sending={sending} photos={photos} />
+          {hydrated && !draft.unkept ? <p className="pt-4 text-small text-second">What you type and the photos stay on this {deviceWord()} for at least {keptDays} days, until they are sent. {lastingWords[lasting]}</p> : null}
+          {hydrated ? <p><Button type="button" look="quiet" className="min-h-11" onClick={() => void startAnew()}>Throw this draft away and start anew</Button></p> : null}
         </div>
+        {hydrated ? <WaitingReports holderKey={holderKey} clientId={clientId} sites={view.sites} onTakeBack={sending.tryNow} /> : null}
       </Page>
     </>
   );
 }
 
-interface GoOnProps {
-  readonly view: ReportView;
-  readonly hydrated: boolean;
-  readonly onGo: (stillThere: boolean) => void;
+/** Makes the next start possible without a connection. @returns whether this browser sends with the page closed. */
+function useArrival(view: ReportView): boolean {
+  const [background, setBackground] = useState(false);
+  useEffect(() => {
+    registerServiceWorker();
+    // Storage that is switched off keeps no page either.
+    if (!view.fromDevice) keepView(view).catch(() => undefined);
+    void sendsInBackground().then(setBackground, () => undefined);
+  }, [view]);
+  return background;
 }
 
-/** One button on; what is kept, for those who came by the link of a site. */
-function GoOn({ view, hydrated, onGo }: GoOnProps) {
-  const site = view.guest ? view.sites[0] : undefined;
-  return (
-    <div className="space-y-3">
-      {site ? <p><span className="block text-small text-second">This link is for</span><span className="font-serif text-title">{site.name}</span></p> : null}
-      {hydrated
-        ? <Button type="button" size="large" block onClick={() => onGo(false)}>It is covered, or gone. Go on</Button>
-        : <ButtonLink href="#report" size="large" block>It is covered, or gone. Go on</ButtonLink>}
-      <p>
-        {hydrated
-          ? <Button type="button" look="quiet" className="min-h-11" onClick={() => onGo(true)}>I could not reach it</Button>
-          : <a href="#hazardStillPresent" className="inline-flex min-h-11 items-center">I could not reach it</a>}
-      </p>
-      {site ? <WhatIsKept /> : null}
-    </div>
-  );
-}
-
-function WhatIsKept() {
-  return (
-    <div className="space-y-2 border-t-[1.5px] border-ink pt-3">
-      <h2 className="font-semibold">About two minutes. No account, no name needed.</h2>
-      <p><b className="font-semibold">Your words, photos, time and place</b> are kept. The site team reads them.</p>
-      <p><b className="font-semibold">A way to reach you</b> only if you give one. It goes 90 days after the case closes.</p>
-      <p><b className="font-semibold">No faces, please.</b></p>
-      <p><AppLink href="/progress">Look up a report by its receipt</AppLink></p>
-    </div>
-  );
+/** Once the team has the words, the page with the receipt is next. */
+function useWayToReceipt(report: { readonly clientId: string; readonly receipt: string | null } | null, guestCode: string | null): void {
+  const navigate = useNavigate();
+  const receipt = report?.receipt ?? null;
+  const clientId = report?.clientId ?? '';
+  useEffect(() => {
+    if (receipt) void navigate(receivedAddress(receipt, guestCode, clientId));
+  }, [receipt, guestCode, clientId, navigate]);
 }

@@ -2,9 +2,18 @@ import { useCallback, useEffect, useRef, useState } from 'react';
 import type { RefObject } from 'react';
 import { useNavigate } from 'react-router';
 import { answersIn } from '#app/domain/report-fields.ts';
-import { fillForm, formValues, readDraft, removeDraft, writeDraft } from './draft-store.ts';
+import type { KeptReport } from './device-store.ts';
+import { listenForReports } from './device-store.ts';
+import { fillForm, formValues } from './form-words.ts';
+import { keepWords, patchReport, readReport, sweep } from './kept-reports.ts';
+import { unfinishedReport } from './kept-views.ts';
+import { newReportAddress } from './report-addresses.ts';
 
 export interface ReportDraft {
+  /** The report as this device keeps it; null before the first word. */
+  readonly report: KeptReport | null;
+  /** The device was asked what it keeps. */
+  readonly asked: boolean;
   /** "15:12", once something is kept on this device; null before. */
   readonly savedAt: string | null;
   /** This device keeps nothing: the page says so. */
@@ -16,15 +25,16 @@ export interface ReportDraft {
   /** Past the make-safe card. */
   readonly begun: boolean;
   readonly begin: () => void;
-  /** Call when something in the form has changed. */
-  readonly keep: () => void;
-  readonly discard: () => void;
+  /** Call when something in the form has changed. Resolves when it is kept. */
+  readonly keep: () => Promise<void>;
+  readonly discard: () => Promise<void>;
 }
 
 interface Params {
   readonly form: RefObject<HTMLFormElement | null>;
   readonly clientId: string;
   readonly holderKey: string;
+  readonly guestCode: string | null;
   /** Address of the report with this client id. */
   readonly addressOf: (clientId: string) => string;
   /** The server has sent the form back to be mended: its words are newer than the kept ones. */
@@ -36,62 +46,91 @@ interface Params {
 const clock = (ms: number) => new Date(ms).toLocaleTimeString('en-GB', { hour: '2-digit', minute: '2-digit' });
 
 /** Keeps the words of the form on this device with every change, and puts them back after a reload. */
-export function useReportDraft({ form, clientId, holderKey, addressOf, mending, first }: Params): ReportDraft {
+export function useReportDraft({ form, clientId, holderKey, guestCode, addressOf, mending, first }: Params): ReportDraft {
   const navigate = useNavigate();
-  const [savedAt, setSavedAt] = useState<string | null>(null);
+  const [report, setReport] = useState<KeptReport | null>(null);
+  const [asked, setAsked] = useState(false);
   const [unkept, setUnkept] = useState(false);
   const [begun, setBegun] = useState(mending);
   const [values, setValues] = useState<Readonly<Record<string, string>>>(first);
-  const restored = useRef(false);
+  const begunNow = useRef(mending);
+  const writing = useRef<Promise<void> | null>(null);
+  const again = useRef(false);
 
-  const count = useCallback(() => {
-    if (!form.current) return;
-    setValues(formValues(form.current));
-  }, [form]);
-
-  const write = useCallback(
-    (isBegun: boolean) => {
-      if (!form.current) return;
-      const now = Date.now();
-      const kept = writeDraft(holderKey, { clientId, savedAt: now, begun: isBegun, values: formValues(form.current) });
-      setUnkept(!kept);
-      setSavedAt(kept ? clock(now) : null);
-      count();
-    },
-    [form, clientId, holderKey, count],
-  );
+  /** One write at a time; words typed meanwhile go with the next. */
+  const keep = useCallback((): Promise<void> => {
+    if (form.current) setValues(formValues(form.current));
+    again.current = true;
+    writing.current ??= (async () => {
+      while (again.current && form.current) {
+        again.current = false;
+        try {
+          setReport(await keepWords({ clientId, holderKey, guestCode, begun: begunNow.current, values: formValues(form.current) }));
+          setUnkept(false);
+        } catch {
+          // Full, or switched off.
+          setUnkept(true);
+        }
+      }
+    })().finally(() => {
+      writing.current = null;
+    });
+    return writing.current;
+  }, [form, clientId, holderKey, guestCode]);
 
   useEffect(() => {
-    if (restored.current || !form.current) return;
-    restored.current = true;
-    const draft = mending ? null : readDraft(holderKey);
-    if (draft && draft.clientId !== clientId) {
-      // The draft has its own photos on the server; the page of its client id lists them.
-      restored.current = false;
-      void navigate(addressOf(draft.clientId), { replace: true });
-      return;
-    }
-    if (draft) {
-      fillForm(form.current, draft.values);
-      setSavedAt(clock(draft.savedAt));
-      setBegun(draft.begun);
-    }
-    count();
-  }, [form, clientId, holderKey, mending, navigate, addressOf, count]);
+    let left = false;
+    const restore = async () => {
+      await sweep();
+      const kept = await readReport(clientId);
+      const other = kept || mending ? null : await unfinishedReport(holderKey);
+      if (left || !form.current) return;
+      if (kept && kept.holderKey !== holderKey) {
+        // Somebody else's words on this device: they stay theirs, and this person gets a report of their own.
+        void navigate(newReportAddress(guestCode), { replace: true });
+        return;
+      }
+      if (other) {
+        // The unfinished report has its own photos; the page of its client id lists them.
+        void navigate(addressOf(other), { replace: true });
+        return;
+      }
+      if (kept) {
+        if (!mending) fillForm(form.current, kept.values);
+        begunNow.current = mending || kept.begun;
+        setReport(kept);
+        setBegun(begunNow.current);
+      }
+      setValues(formValues(form.current));
+      setAsked(true);
+    };
+    restore().catch(() => {
+      setUnkept(true);
+      setAsked(true);
+    });
+    const listening = listenForReports((changed) => {
+      if (changed === clientId) void readReport(clientId).then((now) => { if (!left && (now === null || now.holderKey === holderKey)) setReport(now); }, () => undefined);
+    });
+    return () => {
+      left = true;
+      listening();
+    };
+  }, [form, clientId, holderKey, guestCode, mending, navigate, addressOf]);
 
   return {
-    savedAt,
+    report,
+    asked,
+    savedAt: report && !unkept ? clock(report.savedAt) : null,
     unkept,
     ...answersIn((name) => values[name] ?? ''),
     values,
     begun: begun || mending,
     begin: () => {
+      begunNow.current = true;
       setBegun(true);
-      write(true);
-      // Browsers may clear storage when space runs short; this asks them not to.
-      void navigator.storage?.persist?.().catch(() => false);
+      void keep();
     },
-    keep: () => write(begun || mending),
-    discard: () => removeDraft(holderKey),
+    keep,
+    discard: () => patchReport(clientId, { thrownAwayAt: Date.now() }),
   };
 }

@@ -1,80 +1,104 @@
-import { useCallback, useEffect, useState } from 'react';
-import type { RefObject } from 'react';
-import { useNavigation, useSubmit } from 'react-router';
-
-export type SendingState = 'idle' | 'waiting-for-photos' | 'waiting-for-signal' | 'sending';
-
-interface Params {
-  readonly form: RefObject<HTMLFormElement | null>;
-  readonly address: string;
-  readonly photosOnTheWay: number;
-}
+import { useCallback, useEffect, useRef, useState } from 'react';
+import type { KeptReport } from './device-store.ts';
+import { listUnsent, patchReport } from './kept-reports.ts';
+import { postFromPage } from './post-report.ts';
+import { deliverAlone } from './report-sender.ts';
 
 export interface ReportSending {
-  readonly state: SendingState;
+  /** Something is being sent at this moment. */
+  readonly busy: boolean;
+  /** Part of each photo that has left, 0 to 1, by its key. */
+  readonly progress: Readonly<Record<string, number>>;
   /** Sends now, or as soon as photos and connection allow. A second press no longer waits for photos. */
-  readonly send: () => void;
-  /** For the other buttons of the form. */
-  readonly submitOther: (submitter: HTMLElement) => void;
+  readonly send: () => Promise<void>;
+  /** Back to the form, to add something. */
+  readonly hold: () => Promise<void>;
+  /** Photos changed, or the person asks: try at once. */
+  readonly tryNow: () => void;
 }
 
-const retryMs = 15_000;
-
-async function isReachable(): Promise<boolean> {
-  if (!navigator.onLine) return false;
-  try {
-    return (await fetch('/healthz', { cache: 'no-store' })).ok;
-  } catch {
-    // No connection, or none that reaches the team.
-    return false;
-  }
+interface Params {
+  readonly clientId: string;
+  readonly holderKey: string;
+  readonly report: KeptReport | null;
+  readonly fileOf: (photoKey: string) => Blob | undefined;
 }
+
+const firstRetryMs = 2_000;
+const longestRetryMs = 60_000;
 
 /**
- * Sends the report once the photos are with the team and the server answers; until then it waits and tries again by
- * itself. The client id makes a repeated sending harmless.
+ * Sends what is ready and tries again by itself: when the connection returns, when the page is looked at again, and after
+ * growing pauses. Other reports of the same person that wait on this device go after this one.
  */
-export function useReportSending({ form, address, photosOnTheWay }: Params): ReportSending {
-  const submit = useSubmit();
-  const navigation = useNavigation();
-  const [wanted, setWanted] = useState<'no' | 'with-photos' | 'now'>('no');
-  const [unreachable, setUnreachable] = useState(false);
+export function useReportSending({ clientId, holderKey, report, fileOf }: Params): ReportSending {
+  const [progress, setProgress] = useState<Readonly<Record<string, number>>>({});
+  const [busy, setBusy] = useState(false);
+  const kick = useRef<() => void>(() => undefined);
 
-  const post = useCallback(
-    (data: FormData) => submit(data, { method: 'post', action: address, encType: 'multipart/form-data', preventScrollReset: false }),
-    [submit, address],
-  );
-
-  const tryNow = useCallback(async () => {
-    if (!form.current) return;
-    const reachable = await isReachable();
-    setUnreachable(!reachable);
-    if (!reachable) return;
-    setWanted('no');
-    const data = new FormData(form.current);
-    data.set('intent', 'send');
-    await post(data);
-  }, [form, post]);
-
-  const ready = wanted === 'now' || (wanted === 'with-photos' && photosOnTheWay === 0);
   useEffect(() => {
-    if (!ready) return;
-    const attempt = () => void tryNow();
-    attempt();
-    const timer = setInterval(attempt, retryMs);
-    window.addEventListener('online', attempt);
-    return () => {
-      clearInterval(timer);
-      window.removeEventListener('online', attempt);
+    let left = false;
+    let running = false;
+    let again = false;
+    let timer = 0;
+    let pauseMs = firstRetryMs;
+    const options = { post: postFromPage, fileOf, onProgress: (key: string, part: number) => setProgress((all) => ({ ...all, [key]: part })) };
+    const round = async (): Promise<boolean> => {
+      const done = (await deliverAlone(clientId, options)) === 'done';
+      // What was written by the link of a site, anybody on this device may bring there.
+      const others = (await listUnsent()).filter((other) => other.clientId !== clientId && (other.holderKey === holderKey || other.guestCode !== null));
+      for (const other of others) await deliverAlone(other.clientId, options);
+      return done && others.length === 0;
     };
-  }, [ready, tryNow]);
+    const attempt = async () => {
+      if (running) {
+        again = true;
+        return;
+      }
+      running = true;
+      window.clearTimeout(timer);
+      setBusy(true);
+      do {
+        again = false;
+        const settled = await round().catch(() => false);
+        pauseMs = settled ? firstRetryMs : Math.min(pauseMs * 2, longestRetryMs);
+        if (!settled && !left) timer = window.setTimeout(() => void attempt(), pauseMs);
+      } while (again && !left);
+      running = false;
+      setBusy(false);
+    };
+    const atOnce = () => {
+      pauseMs = firstRetryMs;
+      void attempt();
+    };
+    const whenSeen = () => {
+      if (document.visibilityState === 'visible') atOnce();
+    };
+    kick.current = atOnce;
+    atOnce();
+    window.addEventListener('online', atOnce);
+    document.addEventListener('visibilitychange', whenSeen);
+    return () => {
+      left = true;
+      window.clearTimeout(timer);
+      window.removeEventListener('online', atOnce);
+      document.removeEventListener('visibilitychange', whenSeen);
+    };
+  }, [clientId, holderKey, fileOf]);
 
-  const sending = navigation.state !== 'idle' && navigation.formMethod === 'POST';
-  return {
-    state: sending ? 'sending' : wanted === 'no' ? 'idle' : !ready ? 'waiting-for-photos' : unreachable ? 'waiting-for-signal' : 'sending',
-    send: () => setWanted((before) => (before === 'no' ? 'with-photos' : 'now')),
-    submitOther: (submitter) => {
-      if (form.current) void post(new FormData(form.current, submitter));
-    },
-  };
+  const tryNow = useCallback(() => kick.current(), []);
+  const send = useCallback(async () => {
+    await patchReport(clientId, { wanted: report === null || report.wanted === 'no' ? 'with-photos' : 'now', problem: null });
+    kick.current();
+    await askForBackground();
+  }, [clientId, report]);
+  const hold = useCallback(() => patchReport(clientId, { wanted: 'no' }), [clientId]);
+  return { busy, progress, send, hold, tryNow };
+}
+
+/** Where the browser can send with the page closed, it is asked to. */
+async function askForBackground(): Promise<void> {
+  const registration: (ServiceWorkerRegistration & { sync?: { register: (tag: string) => Promise<void> } }) | undefined = await navigator.serviceWorker?.getRegistration();
+  // Refused by the person or the browser: the page sends, once it is open.
+  await registration?.sync?.register('send-reports').catch(() => undefined);
 }

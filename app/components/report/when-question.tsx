@@ -5,6 +5,7 @@ import { foundAnswerLabels, foundAnswers } from '#app/domain/report-fields.ts';
 import { FoundCard } from './found-card.tsx';
 import type { FoundAnswerTyped } from './found-card.tsx';
 import { MomentField } from './moment-field.tsx';
+import { SunPreviewLine } from './sun-preview.tsx';
 import { Follows, Question } from './question.tsx';
 import type { ReportField, ReportFormState } from './report-fields.ts';
 import type { SiteChoice } from './where-question.tsx';
@@ -16,6 +17,7 @@ export interface WhenQuestionProps {
   readonly site: SiteChoice | undefined;
   /** What the form holds at the moment. */
   readonly values: Readonly<Record<string, string>>;
+  readonly guestCode: string | null;
   /** Called with the answer, so that "Just now" can be pinned to the moment it was pressed. */
   readonly onAnswer?: (answer: string) => void;
 }
@@ -23,7 +25,7 @@ export interface WhenQuestionProps {
 const precisions = (['exact', 'within-15-min', 'within-1-h', 'date-only'] as const).map((value) => ({ value, label: foundPrecisionLabels[value] }));
 
 /** Second question. A range and "Don't know" are answers like any other. */
-export function WhenQuestion({ field, state, site, values, onAnswer }: WhenQuestionProps) {
+export function WhenQuestion({ field, state, site, values, guestCode, onAnswer }: WhenQuestionProps) {
   const clock = site ? `Clock time at the place, ${site.zone.replaceAll('_', ' ')}.` : 'Clock time at the place.';
   const nowLocal = site?.nowLocal ?? '';
   const typed = (name: keyof FoundAnswerTyped) => values[name] ?? '';
@@ -45,10 +47,11 @@ export function WhenQuestion({ field, state, site, values, onAnswer }: WhenQuest
         <MomentField {...moments} name="foundFromLocal" label="Last seen sound" help="The last time somebody saw that the mark was not there, such as the last walk." />
         <MomentField {...moments} name="foundToLocal" label="Found" fallback={nowLocal} help={clock} />
       </Follows>
-      <Follows on="not-range">
+      <Follows on="not-range" shortPath>
         <MomentField {...moments} name="lastSoundLocal" label="Last seen sound, if you know" help="The last time somebody saw that the mark was not there. Leave it empty if you don't know." />
       </Follows>
       {site ? <FoundCard site={site} typed={{ foundWhen: typed('foundWhen'), foundNowAt: typed('foundNowAt'), foundLocal: typed('foundLocal'), foundFromLocal: typed('foundFromLocal'), foundToLocal: typed('foundToLocal'), lastSoundLocal: typed('lastSoundLocal') }} /> : null}
+      <SunPreviewLine values={values} guestCode={guestCode} />
       {state.longWindowDays === null ? null : (
         <TickBox field={field('longWindowConfirmed')} value="yes" label={`It is right: between sound and found lie ${state.longWindowDays} days.`} />
       )}

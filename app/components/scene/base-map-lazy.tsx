@@ -1,11 +1,25 @@
 import { Suspense, lazy } from 'react';
-import type { ReactNode } from 'react';
+import type { ComponentType, ReactNode } from 'react';
 import { useHydrated } from '#app/components/report/use-hydrated.ts';
 import type { CaseMapProps } from './case-point.ts';
 import type { PickerMapProps } from './picker-map.client.tsx';
 
-const LazyCaseMap = lazy(async () => ({ default: (await import('./base-map.client.tsx')).CaseMap }));
-const LazyPickerMap = lazy(async () => ({ default: (await import('./base-map.client.tsx')).PickerMap }));
+const LazyCaseMap = lazy(async () => ({ default: await fetched(async () => (await import('./base-map.client.tsx')).CaseMap) }));
+const LazyPickerMap = lazy(async () => ({ default: await fetched(async () => (await import('./base-map.client.tsx')).PickerMap) }));
+
+/** Without a connection the map may not come; the page around it must not fall with it. */
+async function fetched<Props>(part: () => Promise<ComponentType<Props>>): Promise<ComponentType<Props>> {
+  try {
+    return await part();
+  } catch {
+    // Whatever kept it away, everything on the map is also in words or boxes on the page.
+    return NoMap;
+  }
+}
+
+function NoMap() {
+  return <p role="status" className="flex h-24 items-center justify-center border border-hair px-4 text-center text-small text-second">The map could not be fetched. Everything on it can also be typed or read on this page.</p>;
+}
 
 /** The register's cases on a world map; on the server, and until the script has come, a framed sentence. */
 export function CaseMap(props: CaseMapProps) {

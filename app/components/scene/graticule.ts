@@ -1,4 +1,4 @@
-import { degreesWithLetter } from './coordinate-text.ts';
+import { degreesWithLetter } from '#app/domain/coordinate-text.ts';
 
 /** What part of the world a map shows, in degrees. */
 export interface Extent {

@@ -1,9 +1,13 @@
 import * as L from 'leaflet';
 import { useEffect, useRef, useState } from 'react';
 import type { KeyboardEvent } from 'react';
-import type { Place } from './coordinate-text.ts';
-import { stepped } from './coordinate-text.ts';
-import { lengthText, scaleBar } from './graticule.ts';
+import type { Place } from '#app/domain/coordinate-text.ts';
+import { stepped } from '#app/domain/coordinate-text.ts';
+import { scaleBar } from './graticule.ts';
+import { Cross, Scale, Sign, Ticks } from './map-furniture.tsx';
+import type { MapTiles } from './map-tiles.ts';
+import type { PlacedPlan } from '#app/domain/plan-view.ts';
+import { addPlan } from './plan-layer.client.ts';
 import type { EdgeTick } from './world-layers.client.ts';
 import { STILL, addGraticule, addWorld } from './world-layers.client.ts';
 import { useLatest } from './use-latest.ts';
@@ -16,11 +20,23 @@ export interface PickerMapProps {
   readonly around: Place | null;
   /** Reported accuracy in metres, drawn as a dashed ring. */
   readonly accuracyM: number | null;
+  /** Pins that stay where they are, with their names where they have one, and lines with their length and direction. */
+  readonly pins?: readonly { readonly place: Place; readonly label: string | null }[];
+  readonly lines?: readonly { readonly from: Place; readonly to: Place; readonly label: string }[];
+  /** Drawing of the site under the pins. */
+  readonly plan?: PlacedPlan | null;
+  readonly tiles?: MapTiles | null;
+  /** What the cross is, for those who hear the map. */
+  readonly crossLabel?: string;
   /** Called when the map is moved by hand; `decimals` is as fine as the zoom can show. */
   readonly onMove: (place: Place, decimals: number) => void;
 }
 
-const MAX_ZOOM = 20;
+const MAX_ZOOM = 22;
+/** Tiles beyond this zoom are enlarged: few servers draw finer ones. */
+const TILE_ZOOM = 19;
+const NO_PINS: NonNullable<PickerMapProps['pins']> = [];
+const NO_LINES: NonNullable<PickerMapProps['lines']> = [];
 const CLOSE_ZOOM = 17;
 const ARROWS = [
   { key: 'ArrowUp', words: 'north', east: 0, north: 1, turn: 0, spot: 'right-14 bottom-24' },
@@ -30,7 +46,7 @@ const ARROWS = [
 ] as const;
 
 /** A map under a fixed cross: whatever lies under the cross is the place. */
-export default function PickerMap({ place, around, accuracyM, onMove }: PickerMapProps) {
+export default function PickerMap({ place, around, accuracyM, onMove, pins = NO_PINS, lines = NO_LINES, plan = null, tiles = null, crossLabel = 'the place' }: PickerMapProps) {
   const frame = useRef<HTMLDivElement>(null);
   const map = useRef<L.Map | null>(null);
   const [ticks, setTicks] = useState<readonly EdgeTick[]>([]);
@@ -63,7 +79,7 @@ export default function PickerMap({ place, around, accuracyM, onMove }: PickerMa
     if (!map.current || !place) return;
     // A move made on the map comes back as a prop and is already under the cross.
     if (map.current.latLngToContainerPoint([place.latitudeDeg, place.longitudeDeg]).distanceTo(map.current.getSize().divideBy(2)) < 2) return;
-    map.current.setView([place.latitudeDeg, place.longitudeDeg], Math.max(map.current.getZoom(), 12), { animate: false });
+    map.current.setView([place.latitudeDeg, place.longitudeDeg], Math.max(map.current.getZoom(), 18), { animate: false });
   }, [place]);
 
   useEffect(() => {
@@ -71,6 +87,27 @@ export default function PickerMap({ place, around, accuracyM, onMove }: PickerMa
     const ring = L.circle([place.latitudeDeg, place.longitudeDeg], { radius: accuracyM, className: 'map-accuracy', interactive: false, renderer: L.svg() }).addTo(map.current);
     return () => void ring.remove();
   }, [place, accuracyM]);
+
+  useEffect(() => {
+    if (!map.current) return;
+    const drawn = L.layerGroup().addTo(map.current);
+    for (const line of lines) {
+      L.polyline([pair(line.from), pair(line.to)], { className: 'map-wall', interactive: false, renderer: L.svg() }).bindTooltip(textOf(line.label), { ...LABEL, direction: 'bottom', offset: [0, 6] }).addTo(drawn);
+    }
+    for (const pin of pins) {
+      const dot = L.circleMarker(pair(pin.place), { radius: 5, className: 'map-set-pin', interactive: false, renderer: L.svg() }).addTo(drawn);
+      if (pin.label !== null) dot.bindTooltip(textOf(pin.label), LABEL);
+    }
+    return () => void drawn.remove();
+  }, [pins, lines]);
+
+  useEffect(() => (map.current && plan ? addPlan(map.current, plan) : undefined), [plan]);
+
+  useEffect(() => {
+    if (!map.current || !tiles) return;
+    const layer = L.tileLayer(tiles.url, { maxNativeZoom: TILE_ZOOM, maxZoom: MAX_ZOOM, attribution: tiles.attribution }).addTo(map.current);
+    return () => void layer.remove();
+  }, [tiles]);
 
   const step = (eastM: number, northM: number) => {
     if (!map.current) return;
@@ -97,7 +134,7 @@ export default function PickerMap({ place, around, accuracyM, onMove }: PickerMa
       <div
         ref={frame}
         role="application"
-        aria-label="Map. Arrow keys move the cross 1 metre, with Shift 10 metres; plus and minus zoom."
+        aria-label={`Map. The cross is ${crossLabel}. Arrow keys move the cross 1 metre, with Shift 10 metres; plus and minus zoom.`}
         // eslint-disable-next-line jsx-a11y/no-noninteractive-tabindex -- as above
         tabIndex={0}
         onKeyDown={press}
@@ -112,13 +149,24 @@ export default function PickerMap({ place, around, accuracyM, onMove }: PickerMa
         </button>
       ))}
       <Scale {...bar} />
+      {tiles ? <p className="pointer-events-none absolute right-0 bottom-0 bg-sheet px-1 text-axis text-second" style={{ zIndex: 540 }}>{tiles.attribution}</p> : null}
     </div>
   );
 }
 
+const LABEL: L.TooltipOptions = { permanent: true, direction: 'top', className: 'map-note', offset: [0, -4] };
+const pair = (place: Place): L.LatLngTuple => [place.latitudeDeg, place.longitudeDeg];
+
+/** Labels are text, never markup. */
+function textOf(words: string): HTMLElement {
+  const element = document.createElement('span');
+  element.textContent = words;
+  return element;
+}
+
 function look(map: L.Map, place: Place | null, around: Place | null): void {
   const at = place ?? around;
-  map.setView(at ? [at.latitudeDeg, at.longitudeDeg] : [20, 0], place ? 15 : around ? 9 : 1, { animate: false });
+  map.setView(at ? [at.latitudeDeg, at.longitudeDeg] : [20, 0], place ? 18 : around ? 15 : 1, { animate: false });
 }
 
 function centreOf(map: L.Map): Place {
@@ -143,47 +191,4 @@ function followSize(map: L.Map, element: HTMLElement): () => void {
   const watcher = new ResizeObserver(() => map.invalidateSize({ animate: false }));
   watcher.observe(element);
   return () => watcher.disconnect();
-}
-
-/** The fixed cross at the middle; its centre is filled once a place is set. */
-function Cross({ set }: { readonly set: boolean }) {
-  return (
-    <svg className="pointer-events-none absolute top-1/2 left-1/2 -translate-x-1/2 -translate-y-1/2" style={{ zIndex: 550 }} width="92" height="92" viewBox="-46 -46 92 92" aria-hidden="true">
-      <g stroke="var(--color-sheet)" strokeWidth="5"><path d="M0-45V-12M0 12V45M-45 0H-12M12 0H45" /></g>
-      <g stroke="var(--color-ink)" strokeWidth="1.9" fill="none"><path d="M0-45V-12M0 12V45M-45 0H-12M12 0H45" /></g>
-      <circle r="4.5" fill={set ? 'var(--color-ink)' : 'var(--color-sheet)'} stroke="var(--color-ink)" strokeWidth="1.5" strokeDasharray={set ? undefined : '2 2'} />
-    </svg>
-  );
-}
-
-/** Degrees along the top and left edges, clear of the buttons and of the scale bar. */
-function Ticks({ ticks }: { readonly ticks: readonly EdgeTick[] }) {
-  return (
-    <div aria-hidden="true">
-      {ticks.filter(hasRoom).map(({ axis, text, atPx }) => (axis === 'longitude' ? (
-        <span key={`x${text}`} className="map-tick top-0 -translate-x-1/2" style={{ left: atPx }}>{text}</span>
-      ) : (
-        <span key={`y${text}`} className="map-tick left-0 -translate-y-1/2" style={{ top: atPx }}>{text}</span>
-      )))}
-    </div>
-  );
-}
-
-/** Top right belongs to the zoom buttons, bottom left to the scale bar, top left to neither edge. */
-function hasRoom({ axis, atPx, ofPx }: EdgeTick): boolean {
-  return axis === 'longitude' ? atPx > 120 && atPx < ofPx - 100 : atPx > 28 && atPx < ofPx - 40;
-}
-
-function Scale({ metres, widthPx }: { readonly metres: number; readonly widthPx: number }) {
-  if (metres === 0) return null;
-  return (
-    <div className="pointer-events-none absolute bottom-2 left-3 flex items-center gap-2 bg-sheet px-1 text-axis" style={{ zIndex: 550 }}>
-      <svg width={widthPx + 2} height="12" aria-hidden="true"><path d={`M1 1V11M${widthPx + 1} 1V11M1 6H${widthPx + 1}`} stroke="var(--color-ink)" strokeWidth="1.5" /></svg>
-      {lengthText(metres)}
-    </div>
-  );
-}
-
-function Sign({ plus = false }: { readonly plus?: boolean }) {
-  return <svg width="20" height="20" viewBox="0 0 20 20" aria-hidden="true"><path d={plus ? 'M3 10H17M10 3V17' : 'M3 10H17'} stroke="currentColor" strokeWidth="1.9" /></svg>;
 }

@@ -11,8 +11,8 @@ export function SiteFields({ field, withCode }: { readonly field: SiteFieldOf; r
       {withCode ? <TextInput field={field('code')} label="Short code" help="Stands in addresses and report links, and stays." /> : null}
       <TextInput field={field('name')} label="Name" />
       <TextInput field={field('address')} label="Address" />
-      <TextInput field={field('latitudeDeg')} label="Latitude, degrees" inputMode="decimal" help="North positive, like 53.50" />
-      <TextInput field={field('longitudeDeg')} label="Longitude, degrees" inputMode="decimal" help="East positive, like -1.60" />
+      <TextInput field={field('latitudeDeg')} label="Latitude" help="Such as 53.50, or 53 30 0 N" />
+      <TextInput field={field('longitudeDeg')} label="Longitude" help="Such as -1.60, or 1 36 0 W" />
       <TextInput field={field('elevationM')} label="Height above sea level, m" inputMode="decimal" />
       <TextInput field={field('zone')} label="Time zone" help="Leave empty to take it from the coordinates." />
       <Select field={field('use')} label="Use" {...(withCode ? { emptyLabel: 'Choose one' } : {})} options={Object.entries(siteUseLabels).map(([value, label]) => ({ value, label }))} />

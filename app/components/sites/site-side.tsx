@@ -2,6 +2,8 @@ import { Form, href } from 'react-router';
 import { AppLink } from '#app/components/ui/app-link.tsx';
 import { Button } from '#app/components/ui/button.tsx';
 import { FactList } from '#app/components/ui/fact-list.tsx';
+import { QrCode } from '#app/components/ui/qr-code.tsx';
+import type { QrPath } from '#app/components/ui/qr-code.tsx';
 import { SectionHeading } from '#app/components/ui/page-title.tsx';
 import { TickLine } from '#app/components/ui/tick-line.tsx';
 import type { SiteUse } from '#app/domain/site-form.ts';
@@ -23,7 +25,9 @@ export interface SiteSideProps {
     readonly mayManage: boolean;
     /** Which cases the reader sees here. */
     readonly sees: 'all' | 'own' | 'none';
-    readonly guest: { readonly code: string; readonly link: string } | null;
+    readonly guest: { readonly code: string; readonly link: string; readonly qr: QrPath } | null;
+    /** Drawings that lie on the map, and those still to be placed. */
+    readonly plans: { readonly placed: number; readonly waiting: number };
     readonly people: readonly SitePerson[];
     readonly cases: readonly (SiteCase & { readonly nextReturnMs: number | null })[];
   };
@@ -47,12 +51,13 @@ export function SiteSide({ site }: SiteSideProps) {
             { term: 'Position', value: `${compass(site.latitudeDeg, 'N', 'S')}, ${compass(site.longitudeDeg, 'E', 'W')}`, ...(site.isExact ? {} : { note: 'rounded' }) },
             { term: 'Height above sea level', value: `${site.elevationM} m` },
             { term: 'Time zone', value: site.zone },
-            { term: 'Skyline', value: site.skylinePoints > 0 ? `${site.skylinePoints} points` : 'not measured' },
+            { term: 'Skyline', value: <AppLink href={href('/sites/:siteCode/skyline', { siteCode: site.code })}>{site.skylinePoints > 0 ? `${site.skylinePoints} points` : 'not measured'}</AppLink> },
           ]}
         />
       </section>
+      <Plans site={site} />
       {site.mayManage ? <StillLacking site={site} /> : null}
-      {site.mayManage ? <GuestLink guest={site.guest} /> : null}
+      {site.mayManage ? <GuestLink guest={site.guest} code={site.code} /> : null}
     </div>
   );
 }
@@ -78,6 +83,17 @@ function NextSun({ cases }: Pick<SiteSideProps['site'], 'cases'>) {
   );
 }
 
+function Plans({ site: { code, plans, mayManage } }: SiteSideProps) {
+  const counts = [plans.placed > 0 ? `${plans.placed} on the map` : '', plans.waiting > 0 ? `${plans.waiting} to be placed` : ''].filter(Boolean).join(', ');
+  return (
+    <section aria-labelledby="plans-heading">
+      <SectionHeading id="plans-heading">Drawings</SectionHeading>
+      <p>{counts === '' ? 'None. A drawing of the roof or of a floor shows reporters where they are.' : `${counts.charAt(0).toUpperCase()}${counts.slice(1)}.`}</p>
+      {mayManage || counts !== '' ? <p><AppLink href={href('/sites/:siteCode/plans', { siteCode: code })} className="inline-flex min-h-11 items-center">{mayManage ? 'Add or place drawings' : 'Look at the drawings'}</AppLink></p> : null}
+    </section>
+  );
+}
+
 function StillLacking({ site }: SiteSideProps) {
   const hasManager = site.people.some((person) => person.role === 'manager');
   return (
@@ -86,19 +102,22 @@ function StillLacking({ site }: SiteSideProps) {
       <TickLine done>Position and time zone</TickLine>
       <TickLine done={site.address !== ''}>Address</TickLine>
       <TickLine done={site.skylinePoints > 0} note={site.skylinePoints > 0 ? undefined : 'measured case by case until then'}>Skyline of the site</TickLine>
+      <TickLine done={site.plans.placed > 0}>A drawing on the map</TickLine>
       <TickLine done={hasManager}>A site manager</TickLine>
       <TickLine done={site.guest !== null}>Report link for people without an account</TickLine>
     </section>
   );
 }
 
-function GuestLink({ guest }: Pick<SiteSideProps['site'], 'guest'>) {
+function GuestLink({ guest, code }: Pick<SiteSideProps['site'], 'guest' | 'code'>) {
   return (
     <section aria-labelledby="guest-heading">
       <SectionHeading id="guest-heading">Report link without an account</SectionHeading>
       {guest ? (
         <>
           <p>Anyone with the link or the code can report a mark here, and sees nothing else.</p>
+          <QrCode code={guest.qr} label="Code that opens the report page of this site" className="mt-3 h-40 w-40" />
+          <p><AppLink href={href('/sites/:siteCode/door-card', { siteCode: code })} className="inline-flex min-h-11 items-center">Card for the door, to print</AppLink></p>
           <dl className="pt-2">
             <dt className="text-small text-second">Link</dt>
             <dd className="font-mono text-small break-all">{guest.link}</dd>

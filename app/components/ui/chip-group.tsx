@@ -32,7 +32,7 @@ export function ChipGroup({ name, options, multiple = false, chosen, size = 'nor
         <label key={option.value} className={`chip ${spread ? 'flex-1' : ''}`} data-size={size} {...(option.dashed ? { 'data-dashed': '' } : {})}>
           <input
             type={multiple ? 'checkbox' : 'radio'}
-            id={`${idPrefix}-${option.value}`}
+            id={`${idPrefix}-${option.value.replaceAll(/[^\w-]+/gu, '-')}`}
             name={name}
             value={option.value}
             defaultChecked={isChosen(option.value)}

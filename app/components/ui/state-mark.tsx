@@ -51,17 +51,19 @@ export interface StateMarkProps {
   /** Second line or note after the word, such as "probable, reopened" or "since 26 Mar 2026". */
   readonly note?: ReactNode;
   readonly below?: boolean;
+  /** Said in place of the state's own word, for readers who do not know the words of the trade. */
+  readonly word?: string;
 }
 
 /** Shape and word of a state; the shape never stands alone. */
-export function StateMark({ state, note, below = false }: StateMarkProps) {
+export function StateMark({ state, note, below = false, word }: StateMarkProps) {
   return (
     <span className="inline-flex items-start gap-2">
       <svg width="16" height="16" viewBox="0 0 16 16" aria-hidden="true" className="mt-[0.125em] flex-none">
         {shapes[state]}
       </svg>
       <span>
-        <span className="font-medium">{words[state]}</span>
+        <span className="font-medium">{word ?? words[state]}</span>
         {note ? <span className={`text-axis text-second ${below ? 'block' : 'ml-1.5'}`}>{note}</span> : null}
       </span>
     </span>

@@ -20,7 +20,7 @@ export function Tabs({ label, items, look = 'page' }: TabsProps) {
   const page = look === 'page';
   return (
     <nav aria-label={label} className={`words-scroll ${page ? 'border-t-2 border-b border-t-ink border-b-hair' : ''}`}>
-      <ul className={`flex ${page ? 'gap-7' : 'gap-4'}`}>
+      <ul className={`flex ${page ? 'gap-5' : 'gap-4'}`}>
         {items.map((item) => (
           <li key={item.href} className="flex-none">
             <AppLink

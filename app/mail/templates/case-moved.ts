@@ -45,3 +45,9 @@ export function findingSignedMail({ caseNumber }: CaseMail) {
   const heading = `Case ${caseNumber}: the finding is signed`;
   return { subject: heading, ...mail({ heading, lines: ['The finding passed review and the case is in corrective action. Each action needs an owner, a verifier and a day.'], link: { href: caseLink(caseNumber, '/actions'), words: 'Open the actions' } }) };
 }
+
+/** To the managers of the site, when the reviewer sees nothing to be done. */
+export function noActionMail({ caseNumber }: CaseMail) {
+  const heading = `Case ${caseNumber}: signed, no action needed`;
+  return { subject: heading, ...mail({ heading, lines: ['The finding is signed, and the reviewer says that no action is needed. A manager of the site, who is another person, closes the case or passes it to action after all.'], link: { href: caseLink(caseNumber), words: `Open case ${caseNumber}` } }) };
+}

@@ -73,8 +73,7 @@ export function roundBand(band: Band, digits = 3): Band {
   return { low: roundSignificant(band.low, digits), mid: roundSignificant(band.mid, digits), high: roundSignificant(band.high, digits) };
 }
 
-function seconds(value: number | null): string {
-  if (value === null) return 'never';
+function seconds(value: number): string {
   return value < 100 ? `${roundSignificant(value, 2)} s` : `${Math.round(value / 60)} min`;
 }
 
@@ -84,6 +83,12 @@ interface Context {
   readonly body: HeatedBody;
   readonly exposure: Exposure;
   readonly around: SpotSurroundings;
+}
+
+function temperatureWords(verb: string, range: string, likely: number | null, fast: number | null): string {
+  if (fast === null) return `The surface ${verb} at ${range}, which it does not reach even in the cleanest air and with its darkest face.`;
+  const earliest = `${seconds(fast)} of steady sun on one point at the earliest`;
+  return likely === null ? `The surface ${verb} at ${range}: not at the likely flux, after ${earliest}.` : `The surface ${verb} at ${range}: after ${seconds(likely)} likely, ${earliest}.`;
 }
 
 /** Softening or scorching: the surface passes a temperature. */
@@ -100,7 +105,7 @@ function temperatureOutcome(
   return {
     id,
     ...answerFrom(fast, likely, slow, exposure.dwellS),
-    sentence: `The surface ${verb} at ${range}: after ${seconds(likely)} of steady sun on one point likely, ${seconds(fast)} at the earliest.`,
+    sentence: temperatureWords(verb, range, likely, fast),
     basis: 'surface heat balance of a small spot, fresh and charred absorptance as the two ends',
     sampleSizeMm: null,
     source,
@@ -143,7 +148,7 @@ function flamingOutcome(context: Context): TargetOutcome {
     sentence:
       fast === null
         ? 'Even in the cleanest air and charred black, the flux stays under the lowest that ignited samples with a spark.'
-        : `Samples of 100 mm with a spark ignite in ${seconds(likely)} at the likely flux, ${seconds(fast)} at the highest; a small spot without a spark needs more.`,
+        : `Samples of 100 mm with a spark ${likely === null ? 'do not ignite' : `ignite in ${seconds(likely)}`} at the likely flux, ${likely === null ? 'and in ' : ''}${seconds(fast)} at the highest; a small spot without a spark needs more.`,
     basis: `measured time to piloted ignition: ${material.ignition.map((series) => series.product).join('; ')}${extrapolated ? '; extrapolated beyond the measured fluxes' : ''}`,
     source: first.source,
   };

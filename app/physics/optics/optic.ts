@@ -95,6 +95,10 @@ export interface CurvedReflectorOptic extends Common, Pose {
   readonly generators: 'vertical' | 'horizontal';
   /** Width of one flat pane along the curve; left out for smooth metal. */
   readonly paneWidthM?: number;
+  /** Tilt of each pane against the ideal curve, one sigma. [mrad] Left out: class value. */
+  readonly paneTiltMrad?: number;
+  /** Inward bow at the centre of each pane. [m] Left out: flat. */
+  readonly paneBowM?: number;
   readonly reflectance: number;
 }
 
@@ -133,6 +137,27 @@ export interface TelescopeOptic extends Common, Pose {
   readonly focalLengthM: number;
   readonly transmittance: number;
 }
+
+/** What the bow of a pane follows from where it was not measured: the sealed cavity of its unit. */
+export interface SealedUnitInput {
+  readonly outerThicknessM: number;
+  readonly innerThicknessM: number;
+  readonly gapM: number;
+  /** Pressure and temperature at which the unit was sealed. */
+  readonly sealPressureHpa: number;
+  readonly sealTemperatureC: number;
+  /** Temperature of the gas in the cavity at the time of the incident. */
+  readonly cavityTemperatureC: number;
+}
+
+/** A pane as it is asked about: its bow measured, or the unit that it belongs to. A measured bow has precedence. */
+export interface PaneInput extends Omit<PaneOptic, 'centreBowM'> {
+  readonly centreBowM?: number;
+  readonly sealedUnit?: SealedUnitInput;
+}
+
+/** An optic as it is asked about. */
+export type OpticInput = Exclude<Optic, PaneOptic> | PaneInput;
 
 export type Optic =
   | LensOptic

@@ -39,18 +39,39 @@ export function mediumOf(material: RefractiveMaterial): Medium {
 }
 
 /**
+ * Reflectances of a bare interface for light polarised across (s) and in (p) the plane of incidence.
+ *
+ * @param n1 Index on the side that the light comes from. ≥ 1
+ * @param n2 Index on the other side. ≥ 1
+ * @param cosIncidence Cosine of the angle of incidence. 0…1
+ * @returns [Rs, Rp], both 1 under total reflection.
+ * @see M. Born and E. Wolf, Principles of Optics, §1.5
+ */
+export function fresnelReflectances(n1: number, n2: number, cosIncidence: number): readonly [number, number] {
+  if (!(cosIncidence >= 0 && cosIncidence <= 1)) throw new RangeError(`cosIncidence = ${cosIncidence}; allowed 0 to 1`);
+  const eta = n1 / n2;
+  const k = 1 - eta * eta * (1 - cosIncidence * cosIncidence);
+  if (k <= 0) return [1, 1];
+  const ct = Math.sqrt(k);
+  const rs = (n1 * cosIncidence - n2 * ct) / (n1 * cosIncidence + n2 * ct);
+  const rp = (n2 * cosIncidence - n1 * ct) / (n2 * cosIncidence + n1 * ct);
+  return [rs * rs, rp * rp];
+}
+
+/**
  * Unpolarised reflectance of one smooth surface.
  *
  * @param cosIncidence Cosine on the incoming side. 0…1
  * @param indexRatio Index of the far side over that of the near side.
  */
 export function fresnelReflectance(cosIncidence: number, indexRatio: number): number {
-  const sinSquared = (1 - cosIncidence * cosIncidence) / (indexRatio * indexRatio);
-  if (sinSquared >= 1) return 1;
-  const cosRefracted = Math.sqrt(1 - sinSquared);
-  const s = (cosIncidence - indexRatio * cosRefracted) / (cosIncidence + indexRatio * cosRefracted);
-  const p = (indexRatio * cosIncidence - cosRefracted) / (indexRatio * cosIncidence + cosRefracted);
-  return (s * s + p * p) / 2;
+  const [s, p] = fresnelReflectances(1, indexRatio, Math.min(1, cosIncidence));
+  return (s + p) / 2;
+}
+
+/** Angle of incidence at which p light is not reflected. [rad] */
+export function brewsterAngle(n1: number, n2: number): number {
+  return Math.atan2(n2, n1);
 }
 
 /** Focal length of a full sphere or cylinder from its centre. [m] */

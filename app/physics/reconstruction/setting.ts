@@ -4,6 +4,7 @@ import { lowestHarmfulFluxKwm2 } from '#app/physics/heating/outcomes.ts';
 import type { TargetMaterial } from '#app/physics/heating/target-material.ts';
 import { targetMaterials } from '#app/physics/heating/target-materials.data.ts';
 import { spannedDeg, surveySigmaM, type Scene } from '#app/physics/lit.ts';
+import type { Optic } from '#app/physics/optics/optic.ts';
 import { surveyOrigin, type FocusModel } from '#app/physics/optics/closed-form/beam.ts';
 import { focusModelOf } from '#app/physics/optics/closed-form/focus-model.ts';
 import { measuredOpticSigmaRel, slopeErrors } from '#app/physics/optics/optic-defaults.data.ts';
@@ -16,17 +17,28 @@ import { extraterrestrialWm2 } from '#app/physics/sky/extraterrestrial.ts';
 import { readSkyline } from '#app/physics/skyline.ts';
 import { minutesIn, sunTrack, type SunMinute } from '#app/physics/sun-track.ts';
 import { halfAngleRad } from '#app/physics/sun/sun-disc.ts';
+import { defaultOccluderSigmaM, readOccluders } from '#app/physics/occluders.ts';
+import type { Occluder } from '#app/physics/optics/trace/trace-model.ts';
 import { inRange, parseUtc } from '#app/physics/units.ts';
+import { checkInput } from './checked-input.ts';
+import { maskOf } from './mask.ts';
+import { readyOptic } from './pane-bow.ts';
+
+/** An input with its mark by bearing and the shape of its optic settled. */
+export interface SettledInput extends Omit<ReconstructionInput, 'optic' | 'markCoordinates'> {
+  readonly optic?: Optic;
+}
 
 /** A reconstruction with its input read, checked and completed. */
 export interface Setting {
-  readonly input: ReconstructionInput;
+  readonly input: SettledInput;
   readonly site: Site;
   readonly startMs: number;
   readonly endMs: number;
   readonly track: readonly SunMinute[];
   readonly series: DniSeries | null;
   readonly opening: OpeningInput | undefined;
+  readonly occluders: readonly Occluder[];
   readonly model: FocusModel | null;
   readonly mark: Mark | null;
   readonly required: RequiredSun | null;
@@ -48,15 +60,8 @@ function readWindow(input: ReconstructionInput): { readonly startMs: number; rea
   return { startMs, endMs };
 }
 
-function checkPlace({ place }: ReconstructionInput): void {
-  inRange('place.latitudeDeg', place.latitudeDeg, -90, 90, '°');
-  inRange('place.longitudeDeg', place.longitudeDeg, -180, 180, '°');
-  inRange('place.elevationM', place.elevationM, -500, 9000, 'm');
-  inRange('place.heightAboveGroundM', place.heightAboveGroundM, 0, 1000, 'm');
-}
-
 /** Class values that the closed forms take for what the input left open. */
-function opticAssumptions(input: ReconstructionInput): Assumption[] {
+function opticAssumptions(input: SettledInput): Assumption[] {
   const { optic } = input;
   if (optic === undefined) return [];
   const list: Assumption[] = [];
@@ -74,6 +79,18 @@ function opticAssumptions(input: ReconstructionInput): Assumption[] {
   return list;
 }
 
+/** What stands, or is taken to stand, between the sun and the optic. */
+function obstacleAssumptions({ skyline, occluders, occluderSigmaM }: SettledInput): Assumption[] {
+  const list: Assumption[] = [];
+  if (skyline === undefined) list.push({ field: 'skyline', value: 'level horizon', source: { text: 'no skyline recorded', verified: true } });
+  if (occluders === undefined || occluders.length === 0) {
+    list.push({ field: 'occluders', value: 'none', source: { text: 'no frame, bar or reveal recorded by its corners', verified: true } });
+  } else if (occluderSigmaM === undefined) {
+    list.push({ field: 'occluderSigmaM', value: `${defaultOccluderSigmaM} m`, source: { text: 'tape measure, common practice', verified: true } });
+  }
+  return list;
+}
+
 /** Direction of the sun by which the reach is settled: the required one, else the highest that meets the working face. */
 function referenceSun(model: FocusModel, required: RequiredSun | null, track: readonly SunMinute[]): SunMinute | null {
   let best: SunMinute | null = null;
@@ -86,7 +103,7 @@ function referenceSun(model: FocusModel, required: RequiredSun | null, track: re
 
 /** What the reach depends on besides the optic. */
 interface ReachParts {
-  readonly input: ReconstructionInput;
+  readonly input: SettledInput;
   readonly site: Site;
   readonly mark: Mark;
   readonly required: RequiredSun | null;
@@ -106,12 +123,13 @@ function settleReach(model: FocusModel, { input, site, mark, required, material,
   return reachOf(beam, mark, (clear?.boundWm2 ?? 1000) * glass, lowestHarmfulFluxKwm2(material, site.air.temperatureC));
 }
 
-/** The input with its mark by bearing, however it was surveyed. */
-function withMark(given: ReconstructionInput): ReconstructionInput {
-  const { markCoordinates, ...rest } = given;
-  if (markCoordinates === undefined) return given;
+/** The input with its mark by bearing, however it was surveyed, and its optic as `readyOptic` settled it. */
+function settledInput(given: ReconstructionInput, optic: Optic | undefined): SettledInput {
+  const { markCoordinates, optic: _asked, ...rest } = given;
+  const shaped = optic === undefined ? rest : { ...rest, optic };
+  if (markCoordinates === undefined) return shaped;
   if (given.mark !== undefined) throw new RangeError('mark and markCoordinates disagree: give one of the two.');
-  return { ...rest, mark: markFromCoordinates(markCoordinates) };
+  return { ...shaped, mark: markFromCoordinates(markCoordinates) };
 }
 
 /**
@@ -120,10 +138,11 @@ function withMark(given: ReconstructionInput): ReconstructionInput {
  * @throws RangeError naming the field, its value and the allowed interval, or the two fields that contradict each other.
  */
 export function settle(given: ReconstructionInput): Setting {
-  const input = withMark(given);
-  checkPlace(input);
-  const { startMs, endMs } = readWindow(input);
-  const site = settleSite(input);
+  checkInput(given);
+  const { startMs, endMs } = readWindow(given);
+  const site = settleSite(given);
+  const ready = given.optic === undefined ? null : readyOptic(given.optic, site.air.pressureHpa);
+  const input = settledInput(given, ready?.optic);
   const track = sunTrack(site.observer, startMs, minutesIn(startMs, endMs));
   const model = input.optic === undefined ? null : focusModelOf(input.optic);
   const mark = input.mark === undefined ? null : readMark(input.mark, model?.startsAt ?? surveyOrigin);
@@ -134,20 +153,19 @@ export function settle(given: ReconstructionInput): Setting {
   const surveyDeg = mark === null ? 0 : 2 * spannedDeg(surveySigmaM(mark), mark.distanceM);
   const required = model === null || mark === null || model.moves ? null : requiredSunFor(model, mark.towards, site.observer, surveyDeg);
   const reach = model === null || mark === null || !focusesForward(model) ? null : settleReach(model, { input, site, mark, required, material, track });
-  const skylineAssumption: Assumption[] = input.skyline === undefined
-    ? [{ field: 'skyline', value: 'level horizon', source: { text: 'no skyline recorded', verified: true } }]
-    : [];
+  const occluders = readOccluders(input.occluders);
   return {
     input, site, startMs, endMs, track, model, mark, required, reach, material,
     series: readDniSeries(input.sky),
     opening: input.opening,
+    occluders,
     opticSigmaRel: input.opticSigmaRel ?? measuredOpticSigmaRel,
     scene: {
       dipDeg: site.dipDeg,
       skyline: input.skyline === undefined || input.skyline.points.length === 0 ? null : readSkyline(input.skyline),
       skylineSigmaDeg: input.skyline?.sigmaDeg ?? 0,
-      opening: input.opening, model, mark, reach,
+      opening: input.opening, mask: maskOf(input, occluders, model), model, mark, reach,
     },
-    assumptions: [...site.assumptions, ...opticAssumptions(input), ...skylineAssumption],
+    assumptions: [...site.assumptions, ...(ready?.assumptions ?? []), ...opticAssumptions(input), ...obstacleAssumptions(input)],
   };
 }

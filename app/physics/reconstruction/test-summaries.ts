@@ -1,6 +1,7 @@
 import type { Check, Grade, HeatingResult, ReconstructionResult, TestName, TestResult, TestSummary } from '#app/physics/model.ts';
 import { sunshineThresholdWm2 } from '#app/physics/constants.ts';
 import { lateralToleranceM } from '#app/physics/lit.ts';
+import { focusesForward } from '#app/physics/reach.ts';
 import type { Sampling } from '#app/physics/uncertainty.ts';
 import { roundSignificant, roundTo } from '#app/physics/units.ts';
 import type { FocusOutcome } from './focus-result.ts';
@@ -37,12 +38,12 @@ function geometry(setting: Setting, findings: Findings): TestSummary {
       };
   const contradiction = failed(findings, test);
   if (contradiction !== null) return { test, result: 'contradicts', sentence: contradiction.sentence, margin };
-  if (totals.sunlit > 0) return { test, result: 'supports', sentence: `The focus lies on the mark in ${totals.sunlit} minutes of the window.`, margin };
+  if (totals.sunlit > 0) return { test, result: 'supports', sentence: `The focus lies on the mark in ${totals.sunlit} ${totals.sunlit === 1 ? 'minute' : 'minutes'} of the window.`, margin };
   if (totals.cannotTell === 0) return { test, result: 'contradicts', sentence: 'The mark is in focused sunlight at no minute of the window.', margin };
   if (model === null || mark === null) {
     return { test, result: 'inconclusive', sentence: `The ${model === null ? 'optic' : 'mark'} is unknown; only sun, skyline and opening were tested.`, margin };
   }
-  return { test, result: 'inconclusive', sentence: `Survey error leaves ${totals.cannotTell} minutes undecided.`, margin };
+  return { test, result: 'inconclusive', sentence: `Survey error, refraction or an unknown skyline leave ${totals.cannotTell} ${totals.cannotTell === 1 ? 'minute' : 'minutes'} undecided.`, margin };
 }
 
 function weather(setting: Setting, findings: Findings): TestSummary {
@@ -85,8 +86,15 @@ function energy(setting: Setting, findings: Findings): TestSummary {
   }
   const reached = heating?.outcomes.find((outcome) => outcome.answer === 'reached');
   if (reached !== undefined) return { test, result: 'supports', sentence: reached.sentence, margin };
-  const why = material === null ? 'The target material is unknown.' : 'No effect is surely reached within the time that the spot rests on one point.';
-  return { test, result: material === null ? 'not tested' : 'inconclusive', sentence: why, margin };
+  return { test, result: material === null ? 'not tested' : 'inconclusive', sentence: undecidedWords(heating), margin };
+}
+
+/** Why the energy test stays open: the material, what is not on file, or an effect that the likely case does not reach. */
+function undecidedWords(heating: HeatingResult | null): string {
+  if (heating === null) return 'The target material is unknown.';
+  const [first] = heating.outcomes;
+  if (first !== undefined && heating.outcomes.every((outcome) => outcome.timeS === null && outcome.answer === 'cannot tell')) return first.sentence;
+  return 'In the likely case no effect is reached within the time that the spot rests on one point; in the most favourable case one may be.';
 }
 
 function markTest(setting: Setting, findings: Findings): TestSummary {
@@ -118,9 +126,11 @@ export function gradeOf(setting: Setting, findings: Findings, tests: readonly Te
   const against = [...new Set([...refuted, ...contradicted])];
   if (against.length > 0) return { word: 'inconsistent because', because: against };
   const missing: string[] = [];
-  if (setting.model === null) missing.push('the optic is unknown');
-  if (setting.mark === null) missing.push('the place of the mark is unknown');
-  if (setting.model !== null && setting.reach === null && setting.mark !== null) missing.push('no sun of the window meets the working face of the optic, or it spreads light as described');
+  if (setting.model === null) missing.push('The optic is unknown.');
+  if (setting.mark === null) missing.push('The place of the mark is unknown.');
+  if (setting.model !== null && setting.reach === null && setting.mark !== null) {
+    missing.push(focusesForward(setting.model) ? 'No sun of the window meets the working face of the optic.' : 'As described the optic spreads sunlight instead of focusing it; measure its curve again.');
+  }
   if (missing.length > 0) return { word: 'cannot tell because', because: missing };
   const open = tests.filter((summary) => summary.result !== 'supports').map((summary) => `${summary.test}: ${summary.sentence}`);
   return open.length === 0 ? { word: 'consistent', because: [] } : { word: 'not refuted', because: open };

@@ -2,9 +2,11 @@ import type { Assumption, TracedFocusResult } from '#app/physics/model.ts';
 import { slopeErrors } from '#app/physics/optics/optic-defaults.data.ts';
 import type { Beam } from '#app/physics/optics/closed-form/beam.ts';
 import { concentrationAlongAxis, dangerZone, type ZonePoint } from '#app/physics/optics/trace/danger-zone.ts';
-import { traceBundle } from '#app/physics/optics/trace/trace-bundle.ts';
+import { backTracedDiscAt, discAt, hotDiscIn } from '#app/physics/optics/trace/measure.ts';
+import { traceBundle, type TracedOptic } from '#app/physics/optics/trace/trace-bundle.ts';
 import { measureFocus } from '#app/physics/optics/trace/trace-focus.ts';
 import type { DiscName, TraceRequest, TraceResult } from '#app/physics/optics/trace/trace-model.ts';
+import { newWorkspace } from '#app/physics/optics/trace/workspace.ts';
 import { halfAngleRad } from '#app/physics/sun/sun-disc.ts';
 import type { SpotMotion } from '#app/physics/trail.ts';
 import { roundSignificant } from '#app/physics/units.ts';
@@ -23,6 +25,8 @@ export const cutShares = [0.2, 0.35, 0.5, 0.6, 0.7, 0.8, 0.85, 0.9, 0.95, 1, 1.0
 
 /** Ray trace at the best minute. */
 export interface TracedFocus {
+  readonly request: TraceRequest;
+  readonly traced: TracedOptic;
   readonly result: TraceResult;
   /** Hot-spot concentration of the 5 mm disc along the beam. */
   readonly along: readonly ZonePoint[];
@@ -32,6 +36,8 @@ export interface TracedFocus {
   /** Length of the contour along the trail above a number of suns. [m] */
   readonly contourWidthM: (suns: number) => number;
   readonly dangerZone: (suns: number) => { readonly nearM: number; readonly farM: number } | null;
+  /** Change of the logarithm of the hot spot's 5 mm flux for one sigma of the class's slope error. */
+  readonly lnPerSlopeSigma: number;
 }
 
 function requestFor(minute: JudgedMinute, beam: Beam, motion: SpotMotion | null, setting: Setting): TraceRequest | null {
@@ -46,6 +52,7 @@ function requestFor(minute: JudgedMinute, beam: Beam, motion: SpotMotion | null,
     rays: input.rays ?? defaultRays,
     seed: input.seed,
     gridCells: mapCells,
+    occluders: setting.occluders,
   };
   if (mark === null) return { ...common, receiver: { kind: 'best plane' } };
   if (dot(beam.direction, mark.normal) > -0.05) return null;
@@ -116,22 +123,54 @@ export function traceAt(minute: JudgedMinute, beam: Beam, motion: SpotMotion | n
   const request = requestFor(minute, beam, motion, setting);
   if (request === null || setting.model === null) return null;
   const traced = traceBundle(request);
-  const result = measureFocus(request, traced);
+  const workspace = newWorkspace(traced.bundle.capacity);
+  const result = measureFocus(request, traced, workspace);
   const shift = lengthOf(setting.model.startsAt) === 0 ? 0 : dot(subtract([0, 0, 0], setting.model.startsAt), beam.direction);
-  const along = concentrationAlongAxis(traced, markDiscM, cutShares.map((share) => share * beam.focusM - shift)).map((point) => ({
+  const along = concentrationAlongAxis(traced, markDiscM, cutShares.map((share) => share * beam.focusM - shift), workspace).map((point) => ({
     ...point, distanceM: point.distanceM + shift,
   }));
   const alongBeam = calibrationReader(along, beam);
   const atMark = ratioAtMark(minute, beam, result, setting);
   const anchorM = minute.miss?.alongM ?? beam.focusM;
   return {
-    result,
-    along,
+    request, traced, result, along,
     calibration: atMark === null ? alongBeam : (distanceM) => (atMark * alongBeam(distanceM)) / alongBeam(anchorM),
     concentration: (disc, centre) => result.discs.find((row) => row.disc === disc && row.centre === centre)?.concentration ?? null,
     contourWidthM: widthReader(result),
     dangerZone: (suns) => dangerZone(along, suns),
+    lnPerSlopeSigma: setting.input.optic?.slopeErrorMrad === undefined ? lnPerSlopeSigma(request, result) : 0,
   };
+}
+
+/** Rays of the side traces: of a rougher surface, and of single minutes. */
+const sideRays = 16_384;
+const minuteRays = 4096;
+/** A minute whose light is known no better than this, relative, is left to the closed form. */
+const worstMinuteError = 0.2;
+
+/** By how much a rougher surface changes the hot spot; the class's range is taken as two sigmas either way. */
+function lnPerSlopeSigma(request: TraceRequest, result: TraceResult): number {
+  const { slopeErrorMrad, rangeMrad: [low, high] } = slopeErrors[request.optic.kind];
+  const hot = result.discs.find((row) => row.disc === '5 mm' && row.centre === 'hot spot');
+  if (slopeErrorMrad <= 0 || low <= 0 || hot === undefined || hot.concentration <= 0) return 0;
+  const rougher: TraceRequest = { ...request, optic: { ...request.optic, slopeErrorMrad: slopeErrorMrad * (high / low) ** 0.25 }, rays: Math.min(sideRays, request.rays ?? sideRays) };
+  const { concentration } = hotDiscIn(traceBundle(rougher), result.receiver, markDiscM);
+  return concentration > 0 ? Math.log(concentration / hot.concentration) : 0;
+}
+
+/**
+ * Concentration on the mark's disc at one minute, traced with the openings and bars of that minute; null where the
+ * target turns its back, or too few rays fall on the mark.
+ */
+export function tracedSunsOnMark(minute: JudgedMinute, setting: Setting): number | null {
+  const request = minute.beam === null ? null : requestFor(minute, minute.beam, null, setting);
+  if (request === null || request.receiver.kind === 'best plane') return null;
+  const traced = traceBundle({ ...request, rays: Math.min(minuteRays, request.rays ?? minuteRays) });
+  const { origin, normal } = request.receiver;
+  const forward = discAt(traced, request.receiver, origin, markDiscM);
+  const back = forward.stdError < 0.05 * forward.concentration ? null : backTracedDiscAt(traced, { origin, normal }, origin, markDiscM, minuteRays / 2, request.seed);
+  const better = back !== null && back.stdError < forward.stdError ? back : forward;
+  return better.stdError <= worstMinuteError * better.concentration ? better.concentration : null;
 }
 
 /** The trace's own figures for the result. @param closedForm Concentration of the closed form on the 5 mm hot spot. */
@@ -142,6 +181,7 @@ export function tracedResult({ result }: TracedFocus, closedForm: number): Trace
   const grid = result.fluxGrid;
   return {
     rays: result.rays,
+    blockedFraction: roundSignificant(result.blockedFraction, 3),
     transmittedFraction: roundSignificant(result.transmittedFraction, 3),
     r50Mm: roundSignificant(result.r50M * 1000, 3),
     r80Mm: roundSignificant(result.r80M * 1000, 3),

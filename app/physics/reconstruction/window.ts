@@ -3,7 +3,6 @@ import { judgeMinute, surveySigmaM, type Judgement } from '#app/physics/lit.ts';
 import { directBeamAt } from '#app/physics/sky/direct-beam.ts';
 import { minuteMs, type SunMinute } from '#app/physics/sun-track.ts';
 import { roundSignificant, roundTo, toIsoUtc } from '#app/physics/units.ts';
-import { dot } from '#app/physics/vector.ts';
 import type { Setting } from './setting.ts';
 
 export interface JudgedMinute extends Judgement {
@@ -20,28 +19,32 @@ export function judgeWindow(setting: Setting, onMinute: (done: number) => void):
 /** Disc on which the flux at the mark is quoted minute by minute. [m] */
 export const markDiscM = 0.005;
 
-/** Likely flux at the mark; null where the beam passes so far off that the closed forms say nothing. */
-function fluxAtMarkKwm2(minute: JudgedMinute, calibration: (distanceM: number) => number, setting: Setting): number | null {
-  const { beam, miss, sun } = minute;
-  const { mark, reach } = setting;
-  if (beam === null || miss === null || mark === null || reach === null) return null;
-  if (miss.lateralM > 6 * reach.spotRadiusM + 3 * surveySigmaM(mark) + mark.halfLengthM) return null;
+/** Whether a beam passes the mark so near that its light there can be stated minute by minute. */
+export function nearTheSpot({ miss }: JudgedMinute, { mark, reach }: Setting): boolean {
+  if (miss === null || mark === null || reach === null) return false;
+  return miss.lateralM <= 6 * reach.spotRadiusM + 3 * surveySigmaM(mark) + mark.halfLengthM;
+}
+
+/** Likely flux at the mark for a concentration there; null where the beam passes so far off that the closed forms say nothing. */
+function fluxAtMarkKwm2(minute: JudgedMinute, suns: number, setting: Setting): number | null {
+  const { beam, sun } = minute;
+  if (beam === null || !nearTheSpot(minute, setting)) return null;
   const light = directBeamAt(
     sun.utcMs, sun.azimuthDeg, sun.apparentElevationDeg, sun.distanceAu, setting.input.place.elevationM, setting.site.air, setting.series, setting.opening,
   );
-  if (light.likelyWm2 === null) return null;
-  const cosine = Math.max(0, -dot(beam.direction, mark.normal));
-  return (calibration(miss.alongM) * beam.concentration(miss.alongM, miss.offsetM, markDiscM) * cosine * light.likelyWm2 * light.transmittance) / 1000;
+  return light.likelyWm2 === null ? null : (suns * light.likelyWm2 * light.transmittance) / 1000;
 }
 
 /**
- * Minutes for the result, their flux by the closed form scaled with the trace at the best minute. Night is left to the runs, which keep it whole: of four days half would be empty rows.
+ * Minutes for the result. Night is left to the runs, which keep it whole: of four days half would be empty rows.
+ *
+ * @param suns Concentration on the mark at every minute.
  */
-export function minuteResults(judged: readonly JudgedMinute[], calibration: (distanceM: number) => number, setting: Setting): readonly MinuteResult[] {
-  return judged.filter((minute) => minute.reason !== 'night').map((minute) => {
-    const lit = minute.verdict !== 'not-sunlit' || minute.reason === 'beam-misses';
-    const flux = lit ? fluxAtMarkKwm2(minute, calibration, setting) : null;
-    return {
+export function minuteResults(judged: readonly JudgedMinute[], suns: Float64Array, setting: Setting): readonly MinuteResult[] {
+  return judged.flatMap((minute, index): MinuteResult[] => {
+    if (minute.reason === 'night') return [];
+    const flux = lightReaches(minute) ? fluxAtMarkKwm2(minute, suns[index] ?? 0, setting) : null;
+    return [{
       atUtc: toIsoUtc(minute.sun.utcMs),
       azimuthDeg: roundTo(minute.sun.azimuthDeg, 2),
       apparentElevationDeg: roundTo(minute.sun.apparentElevationDeg, 2),
@@ -50,7 +53,7 @@ export function minuteResults(judged: readonly JudgedMinute[], calibration: (dis
       missLateralMm: minute.miss === null ? null : roundSignificant(minute.miss.lateralM * 1000, 3),
       missAxialMm: minute.miss === null ? null : roundSignificant(minute.miss.axialM * 1000, 3),
       fluxKwm2: flux === null ? null : roundSignificant(flux, 3),
-    };
+    }];
   });
 }
 

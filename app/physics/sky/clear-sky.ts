@@ -1,3 +1,4 @@
+import { clamp } from '#app/physics/units.ts';
 import { absoluteAirMass, kastenYoungAirMass } from './air-mass.ts';
 import { birdClearSky, broadbandAerosolDepth } from './bird.ts';
 import { ineichenPerezClearSky, kastenLinkeTurbidity } from './ineichen-perez.ts';
@@ -16,13 +17,14 @@ export interface Air {
 /** Below this apparent elevation no clear-sky figure is given at all. [°] */
 export const lowestClearSkyDeg = 3;
 
-/** Below this one the likely figure is the lower of the two models. [°] */
+/** From here down the likely figure goes over from the first model to the lower of the two, and is that one below. [°] */
+const modelsPartDeg = 10;
 const lowSunDeg = 6;
 
 /** A measured clear winter day at 2317 m exceeded the aerosol-free model by 1.4 %; 1.05 keeps it under the bound. */
 const boundFactor = 1.05;
 
-/** Direct normal irradiance under a clear sky. [W/m²] */
+/** Direct normal irradiance under a clear sky. [W/m²] `likelyWm2` has no step at any height of the sun. */
 export interface ClearSky {
   readonly birdWm2: number;
   readonly ineichenWm2: number;
@@ -52,6 +54,7 @@ export function clearSkyAt(
   const ineichenWm2 = ineichenPerezClearSky(zenithDeg, absolute, linke, elevationM, extraterrestrialWm2).dniWm2;
   const clean = { ozoneCm: 0.28, waterCm: 0.2, aod380: 0, aod500: 0 };
   const boundWm2 = boundFactor * birdClearSky(zenithDeg, relative, absolute, extraterrestrialWm2, clean).dniWm2;
-  const likelyWm2 = apparentElevationDeg < lowSunDeg ? Math.min(birdWm2, ineichenWm2) : birdWm2;
+  const goneOver = clamp((modelsPartDeg - apparentElevationDeg) / (modelsPartDeg - lowSunDeg), 0, 1);
+  const likelyWm2 = birdWm2 + goneOver * Math.min(0, ineichenWm2 - birdWm2);
   return { birdWm2, ineichenWm2, likelyWm2, boundWm2: Math.max(boundWm2, likelyWm2) };
 }

@@ -1,5 +1,5 @@
 import type { OpeningInput, SkyInput } from '#app/physics/model.ts';
-import { degree, parseUtc, wrap180 } from '#app/physics/units.ts';
+import { degree, parseUtc, toIsoUtc, wrap180 } from '#app/physics/units.ts';
 import { clearSkyAt, type Air } from './clear-sky.ts';
 import { extraterrestrialWm2 } from './extraterrestrial.ts';
 import { paneTransmittance } from './pane-transmittance.ts';
@@ -27,6 +27,12 @@ export function readDniSeries(sky: SkyInput): DniSeries | null {
     }
   }
   rows.sort((a, b) => a.fromMs - b.fromMs);
+  for (const [index, row] of rows.entries()) {
+    const before = rows[index - 1];
+    if (before !== undefined && row.fromMs < before.toMs) {
+      throw new RangeError(`sky.dniSeries.values disagree: the interval from ${toIsoUtc(row.fromMs)} begins before the one from ${toIsoUtc(before.fromMs)} ends.`);
+    }
+  }
   return {
     basis: series.basis,
     source: series.source,

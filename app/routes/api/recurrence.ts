@@ -1,5 +1,4 @@
 import type { Route } from './+types/recurrence';
-import { actorContext } from '#app/auth/actor-context.ts';
 import { problemsOf } from '#app/domain/api-contract.ts';
 import { parseRecurrenceRequest } from '#app/domain/recurrence-request.ts';
 import { answerJson, otherMethod, ProblemError, readJson, requireApiActor } from '#app/http/problem-details.server.ts';
@@ -9,7 +8,7 @@ import { recurrenceNow } from '#app/services/reconstructions/run-now.server.ts';
 export function action({ request, context }: Route.ActionArgs) {
   if (request.method !== 'POST') return otherMethod('POST');
   return answerJson(async () => {
-    await requireApiActor(context.get(actorContext), 'compute');
+    await requireApiActor({ request, context }, 'compute');
     const asked = parseRecurrenceRequest(await readJson(request));
     if (!asked.success) throw new ProblemError(422, 'Some fields of the input have to be mended.', { problems: problemsOf(asked.error) });
     return recurrenceNow(asked.data);

@@ -1,22 +1,36 @@
 import { data, Form, redirect } from 'react-router';
 import type { Route } from './+types/account';
+import { db } from '#db/client.server.ts';
+import { listApiTokens } from '#db/queries/api-tokens.server.ts';
 import { requireActor } from '#app/auth/middleware.server.ts';
 import { fieldErrorsOf } from '#app/http/field-errors.ts';
 import { formProblem, problemFromError } from '#app/http/form-result.server.ts';
 import { ErrorSummary } from '#app/components/forms/error-summary.tsx';
 import { TextInput } from '#app/components/forms/text-field.tsx';
 import { Page } from '#app/components/layout/page.tsx';
+import { ApiKeys } from '#app/components/people/api-keys.tsx';
 import { Button } from '#app/components/ui/button.tsx';
 import { ChipGroup } from '#app/components/ui/chip-group.tsx';
 import { Notice } from '#app/components/ui/notice.tsx';
 import { PageTitle, SectionHeading } from '#app/components/ui/page-title.tsx';
 import { accountSchema, shortestPassword } from '#app/domain/account.ts';
+import { formatDay } from '#app/domain/local-time.ts';
+import { canInOrganisation } from '#app/domain/permissions.ts';
 import { roleLabels } from '#app/domain/roles.ts';
+import { makeApiToken, revokeToken } from '#app/services/people/api-tokens.server.ts';
 import { changePassword, changeUnits, signOutEverywhere } from '#app/services/people/own-account.server.ts';
 
-export function loader({ context, request }: Route.LoaderArgs) {
+export async function loader({ context, request }: Route.LoaderArgs) {
   const actor = requireActor(context, request);
-  return { name: actor.displayName, email: actor.email, units: actor.units, roles: [...new Set(actor.grants.map((grant) => roleLabels[grant.role]))] };
+  const day = (at: Date) => `${formatDay(at, 'UTC')} UTC`;
+  const tokens = canInOrganisation(actor, 'register:read') ? await listApiTokens(db, actor.userId) : null;
+  return {
+    name: actor.displayName,
+    email: actor.email,
+    units: actor.units,
+    roles: [...new Set(actor.grants.map((grant) => roleLabels[grant.role]))],
+    keys: tokens?.map(({ id, name, scope, ...at }) => ({ id, name, scope, madeOn: day(at.createdAt), endsOn: day(at.expiresAt), usedOn: at.lastUsedAt && day(at.lastUsedAt) })) ?? null,
+  };
 }
 
 export async function action({ context, request }: Route.ActionArgs) {
@@ -31,6 +45,11 @@ export async function action({ context, request }: Route.ActionArgs) {
       case 'change-units':
         await changeUnits(actor, parsed.data.units);
         return { ok: true as const, said: 'The units are changed.' };
+      case 'make-token':
+        return { ok: true as const, said: 'The key is made.', token: await makeApiToken(actor, { name: parsed.data.name, scope: parsed.data.scope, days: Number(parsed.data.days) }) };
+      case 'revoke-token':
+        await revokeToken(actor, parsed.data.tokenId);
+        return { ok: true as const, said: 'The key is ended. Whatever uses it is refused from now on.' };
       case 'sign-out-everywhere':
         return redirect('/', { headers: { 'Set-Cookie': await signOutEverywhere(actor) } });
     }
@@ -79,6 +98,9 @@ export default function Account({ loaderData, actionData }: Route.ComponentProps
           <Button look="outlined">Sign out everywhere</Button>
         </Form>
       </section>
+      {loaderData.keys ? (
+        <ApiKeys keys={loaderData.keys} made={actionData?.ok && 'token' in actionData ? (actionData.token ?? null) : null} problem={problem?.intent === 'make-token' ? problem : null} />
+      ) : null}
     </Page>
   );
 }

@@ -96,6 +96,7 @@ function TakeAway({ frame, fileHref }: { readonly frame: Frame; readonly fileHre
     <section aria-labelledby="take-away-heading" data-print="no" className="space-y-2">
       <h2 id="take-away-heading" className={headingLook}>Take away</h2>
       {has('data.json') ? <ButtonLink href={fileHref('data.json')} download block>Data, JSON</ButtonLink> : null}
+      {has('report.pdf') ? <ButtonLink href={fileHref('report.pdf')} download look="outlined" block>Report, PDF</ButtonLink> : null}
       {has('runs.csv') ? <ButtonLink href={fileHref('runs.csv')} download look="outlined" block>Minutes of sun, CSV</ButtonLink> : null}
       {has('measurements.csv') ? <ButtonLink href={fileHref('measurements.csv')} download look="outlined" block>Measurements, CSV</ButtonLink> : null}
       <p className="text-axis text-second">On paper: print this page. Release <span className="font-mono">{shortHash(frame.releasedHash)}</span></p>

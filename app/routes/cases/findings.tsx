@@ -10,6 +10,7 @@ import { answerTo } from '#app/components/findings/problem-fields.ts';
 import { ReviewComments } from '#app/components/findings/review-comments.tsx';
 import { ReviewInputs } from '#app/components/findings/review-inputs.tsx';
 import { ReviewMoves, signFormId } from '#app/components/findings/review-moves.tsx';
+import { VersionDiff } from '#app/components/findings/version-diff.tsx';
 import { VersionList } from '#app/components/findings/version-list.tsx';
 import { Columns } from '#app/components/layout/page.tsx';
 import { Button } from '#app/components/ui/button.tsx';
@@ -118,7 +119,8 @@ async function reviewMove(intent: 'send-back' | 'sign', { actor, caseNumber, for
   if (intent === 'sign' && !inputGroups.every((group) => read.includes(group))) {
     return formProblem(intent, form, { fieldErrors: { read: ['Tick each group of inputs once you have read it; the ticks stand at the right of the headings.'] } });
   }
-  await moveCase({ actor, caseNumber, moveId: intent, version, reason });
+  const moveId = intent === 'sign' && form.get('after') === 'no-action' ? 'sign-no-action' : intent;
+  await moveCase({ actor, caseNumber, moveId, version, reason });
   return null;
 }
 
@@ -146,6 +148,7 @@ export default function Findings({ loaderData: page, actionData }: Route.Compone
           {page.chosen ? <FindingText words={page.chosen.words} note={page.chosen.note} /> : null}
           {page.mode === 'review' ? <div className="pt-6"><ReviewInputs groups={page.inputs} pins={page.comments} formId={signFormId} ticked={(signing?.typed['ticked'] ?? '').split(' ')} errors={signing?.fieldErrors['read']} /></div> : null}
           {page.versions.length === 0 && !page.form ? <EmptyState title="No finding is open to you yet.">It is written by an investigator and signed by a technical reviewer who is not the author.</EmptyState> : null}
+          {page.chosen && page.before ? <VersionDiff earlier={page.before} later={page.chosen.words} /> : null}
           <VersionList versions={page.versions} chosen={page.chosenVersion} hashAgrees={page.hashAgrees} />
           {page.frozenText ? <FrozenText text={page.frozenText} /> : null}
         </Columns>
@@ -157,7 +160,7 @@ export default function Findings({ loaderData: page, actionData }: Route.Compone
 function HiddenOpinion() {
   return (
     <div className="pb-6">
-      <HatchSection withheld="The author's opinion, the certainty, the tests and the results are hidden until the inputs are read. Showing them writes a line in the log.">
+      <HatchSection withheld="The author's opinion, the certainty and causes, and the results of the hypotheses are hidden until the inputs are read. What the engine computed is data, and open. Showing the rest writes a line in the log.">
         <Form method="post">
           <input type="hidden" name="intent" value="show-opinion" />
           <Button look="outlined">Show the opinion</Button>

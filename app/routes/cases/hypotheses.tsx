@@ -45,8 +45,8 @@ export function loader({ request, context, params }: Route.LoaderArgs) {
       heading: outcomeShown ? hypothesesHeading(list) : `${list.length} ${list.length === 1 ? 'hypothesis' : 'hypotheses'} to read; results are hidden`,
       hypotheses: list.map((hypothesis) => hypothesisCard(hypothesis, { zone: found.row.zone, outcomeShown })),
       obstacles: outcomeShown ? certaintyObstacles('probable', certaintyFacts(list, null)) : [],
-      engine: engine && outcomeShown ? engineWords(engine) : null,
-      engineHidden: !outcomeShown,
+      engine: engine ? engineWords(engine) : null,
+      outcomeHidden: !outcomeShown,
       editable,
       closedBecause: editable ? null : `${whoCan('hypothesis:write').replace(/\.$/u, '')} while the case is under investigation.`,
       takeOverHref: editable && engine ? `?edit=${list.find((hypothesis) => hypothesis.kind === 'focused-sunlight')?.id ?? 'new'}&engine=1#hypothesis-form` : undefined,
@@ -132,7 +132,8 @@ export default function Hypotheses({ loaderData, actionData }: Route.ComponentPr
         </section>
       ) : null}
       <div className="mt-4 max-w-[60rem]">
-        {loaderData.engineHidden ? <p className="text-second">What the engine computed is hidden until you ask to see the author&rsquo;s opinion.</p> : <EngineSays caseNumber={caseNumber} words={engine} takeOverHref={form?.suggested ? undefined : loaderData.takeOverHref} />}
+        {loaderData.outcomeHidden ? <p className="pb-3 text-second">The author&rsquo;s tests and results are hidden until you ask to see the opinion. What the engine computed is data, and open.</p> : null}
+        <EngineSays caseNumber={caseNumber} words={engine} takeOverHref={form?.suggested ? undefined : loaderData.takeOverHref} />
       </div>
     </div>
   );

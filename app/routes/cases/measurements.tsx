@@ -1,20 +1,19 @@
 import { href, redirect } from 'react-router';
 import type { Route } from './+types/measurements';
 import { db } from '#db/client.server.ts';
-import { casePlace } from '#db/queries/case-place.server.ts';
-import { findCase } from '#db/queries/case-subject.server.ts';
-import { latestScene, listSceneVersions } from '#db/queries/scenes.server.ts';
+import { getMeasuredCase } from '#db/queries/measure-pages.server.ts';
+import { listSceneVersions } from '#db/queries/scenes.server.ts';
+import { standingWeather } from '#db/queries/weather.server.ts';
 import { requireActor } from '#app/auth/middleware.server.ts';
+import { MeasureNav } from '#app/components/cases/measure-nav.tsx';
 import { SceneForm } from '#app/components/cases/scene-form.tsx';
 import { Columns } from '#app/components/layout/page.tsx';
 import { FactList } from '#app/components/ui/fact-list.tsx';
 import { SectionHeading } from '#app/components/ui/page-title.tsx';
 import { readCaseNumber } from '#app/domain/case-number.ts';
-import { DomainError, notFound } from '#app/domain/errors.ts';
 import { formatDayClock, localDay } from '#app/domain/local-time.ts';
-import { canOnCase, whoCan } from '#app/domain/permissions.ts';
-import { sceneSchema } from '#app/domain/scene.ts';
-import { sceneToFields } from '#app/domain/scene-form.ts';
+import { declinationWords, sceneStamps, skylineWords } from '#app/domain/measurements-view.ts';
+import { sceneToFields } from '#app/domain/scene-form-fields.ts';
 import { sceneFacts } from '#app/domain/scene-words.ts';
 import { problemFromError, typedValues } from '#app/http/form-result.server.ts';
 import { respond } from '#app/http/to-response.server.ts';
@@ -25,25 +24,33 @@ export async function loader({ request, context, params }: Route.LoaderArgs) {
   return respond(async () => {
     const actor = requireActor(context, request);
     const caseNumber = readCaseNumber(params.caseNumber);
-    const found = await findCase(db, actor, caseNumber);
-    if (!found) throw notFound(`Case ${params.caseNumber}`);
-    if (!canOnCase(actor, 'reconstruction:read', found.subject)) throw new DomainError('forbidden', `The measurements are not open to you. ${whoCan('reconstruction:read')}`);
-    const { zone } = found.row;
+    const { row, place, scene, version, mayEdit, whoEdits } = await getMeasuredCase(db, { actor, caseNumber });
     const now = new Date();
-    const latest = await latestScene(db, found.row.id);
-    const scene = latest?.scene ?? sceneSchema.parse({});
     const versions = await listSceneVersions(db, { actor, caseNumber });
-    const { declinationDeg, declinationSource } = declinationAt(await casePlace(db, found.row), now);
+    const weather = await standingWeather(db, row.id);
+    const { declinationDeg, declinationSource } = declinationAt(place, now);
     return {
-      mayEdit: canOnCase(actor, 'case:edit-facts', found.subject),
-      whoEdits: whoCan('case:edit-facts'),
+      caseNumber,
+      mayEdit,
+      whoEdits,
       kind: scene.optic.kind,
       stored: sceneToFields(scene),
+      stamps: sceneStamps(scene),
       facts: sceneFacts(scene),
-      baseVersion: latest?.version ?? 0,
-      today: localDay(now, zone),
-      declinationWords: declinationDeg === null ? `No magnetic model covers ${declinationSource}.` : `Magnetic declination here today: ${declinationDeg >= 0 ? '+' : ''}${declinationDeg.toFixed(1)}° (${declinationSource}); east is added.`,
-      versions: versions.map((version) => ({ number: version.version, meta: `${formatDayClock(version.createdAt, zone)}, ${version.authorName ?? 'with the report'}`, note: version.note })),
+      baseVersion: version,
+      storageKey: `scorchline.measurements.${actor.userId}.${caseNumber}`,
+      measurer: actor.displayName,
+      north: {
+        today: localDay(now, row.zone),
+        declinationDeg,
+        declinationWords: declinationWords(declinationDeg, declinationSource),
+        place: { latitudeDeg: place.latitudeDeg, longitudeDeg: place.longitudeDeg, elevationM: place.elevationM, zone: place.zone },
+      },
+      around: {
+        skyline: skylineWords(scene.skyline, place.skyline),
+        weather: weather.length === 0 ? 'No weather is on record.' : `Weather: ${weather.length === 1 ? 'one record' : `${weather.length} records`}.`,
+      },
+      versions: versions.map((line) => ({ number: line.version, meta: `${formatDayClock(line.createdAt, row.zone)}, ${line.authorName ?? 'with the report'}`, note: line.note })),
     };
   });
 }
@@ -59,23 +66,26 @@ export async function action({ request, context, params }: Route.ActionArgs) {
     } catch (error) {
       return problemFromError('save-scene', form, error);
     }
-    return redirect(`${href('/cases/:caseNumber', { caseNumber: String(caseNumber) })}/measurements`, 303);
+    return redirect(href('/cases/:caseNumber/measurements', { caseNumber: String(caseNumber) }), 303);
   });
 }
 
 export default function Measurements({ loaderData: data, actionData: problem }: Route.ComponentProps) {
   return (
-    <Columns sideLabel="Versions" side={<Versions versions={data.versions} />}>
-      {data.mayEdit ? (
-        <SceneForm key={data.baseVersion} kind={data.kind} stored={data.stored} baseVersion={data.baseVersion} today={data.today} declinationWords={data.declinationWords} problem={problem} />
-      ) : (
-        <section aria-labelledby="measured-heading" className="max-w-[48rem]">
-          <SectionHeading id="measured-heading" note={data.baseVersion === 0 ? 'nothing recorded yet' : `version ${data.baseVersion}, bearings from true north`}>Measured scene</SectionHeading>
-          <FactList facts={data.facts.map(({ note, ...fact }) => (note ? { ...fact, note } : fact))} />
-          <p className="pt-3 text-small text-second">Changing it now: {data.whoEdits}</p>
-        </section>
-      )}
-    </Columns>
+    <>
+      <MeasureNav caseNumber={data.caseNumber} current="measurements" />
+      <Columns sideLabel="Versions" side={<Versions versions={data.versions} />}>
+        {data.mayEdit ? (
+          <SceneForm key={data.baseVersion} kind={data.kind} stored={data.stored} stamps={data.stamps} baseVersion={data.baseVersion} storageKey={data.storageKey} measurer={data.measurer} north={data.north} around={data.around} problem={problem} />
+        ) : (
+          <section aria-labelledby="measured-heading" className="max-w-[48rem]">
+            <SectionHeading id="measured-heading" note={data.baseVersion === 0 ? 'nothing recorded yet' : `version ${data.baseVersion}, bearings from true north`}>Measured scene</SectionHeading>
+            <FactList facts={data.facts.map(({ note, ...fact }) => (note ? { ...fact, note } : fact))} />
+            <p className="pt-3 text-small text-second">Changing it now: {data.whoEdits}</p>
+          </section>
+        )}
+      </Columns>
+    </>
   );
 }
 

@@ -7,6 +7,7 @@ import { ErrorSummary } from '#app/components/forms/error-summary.tsx';
 import { PhotoDescription, PhotoOffers, PhotoRelease } from '#app/components/photos/photo-editor.tsx';
 import type { PhotoProblem } from '#app/components/photos/photo-editor.tsx';
 import { PhotoFigure } from '#app/components/photos/photo-figure.tsx';
+import { AppLink } from '#app/components/ui/app-link.tsx';
 import { Button } from '#app/components/ui/button.tsx';
 import { EmptyState } from '#app/components/ui/notice.tsx';
 import { SectionHeading } from '#app/components/ui/page-title.tsx';
@@ -14,7 +15,7 @@ import { notFound } from '#app/domain/errors.ts';
 import { canOnCase } from '#app/domain/permissions.ts';
 import { photoCard, photoSheetSentence } from '#app/domain/photo-view.ts';
 import type { PhotoCard } from '#app/domain/photo-view.ts';
-import { maskSchema, photoFormSchema, photoMimes } from '#app/domain/photo.ts';
+import { maskSchema, photoFileTypes, photoFormSchema } from '#app/domain/photo.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import { problemFromError, typedValues } from '#app/http/form-result.server.ts';
 import { readForm } from '#app/http/multipart-form.server.ts';
@@ -42,6 +43,7 @@ export function loader({ request, params, context }: Route.LoaderArgs) {
       mayAdd: canOnCase(actor, 'case:add-photo', found.subject),
       mayDecideRelease: canOnCase(actor, 'release:prepare', found.subject),
       mayReadOriginals: canOnCase(actor, 'photo:read-original', found.subject),
+      mayMeasure: canOnCase(actor, 'reconstruction:read', found.subject),
     };
   });
 }
@@ -131,9 +133,11 @@ function problemOf(card: PhotoCard, actionData: PhotoProblem | undefined): Photo
 
 interface SheetItemProps {
   readonly card: PhotoCard;
-  readonly rights: { readonly caseNumber: number; readonly mayAdd: boolean; readonly mayDecideRelease: boolean; readonly mayReadOriginals: boolean };
+  readonly rights: { readonly caseNumber: number; readonly mayAdd: boolean; readonly mayDecideRelease: boolean; readonly mayReadOriginals: boolean; readonly mayMeasure: boolean };
   readonly problem: PhotoProblem | null;
 }
+
+const marksWords = (count: number) => (count === 0 ? 'Draw on a copy' : `${count} ${count === 1 ? 'mark' : 'marks'} on a copy`);
 
 const summaryLook = 'inline-flex min-h-9 items-center underline decoration-ember decoration-2 underline-offset-4';
 
@@ -141,6 +145,7 @@ function SheetItem({ card, rights, problem }: SheetItemProps) {
   return (
     <li id={`photo-${card.id}`} className="min-w-0 space-y-3">
       <PhotoFigure card={card} caseNumber={rights.caseNumber} />
+      <p className="text-small"><AppLink href={href('/cases/:caseNumber/photos/:label/marks', { caseNumber: String(rights.caseNumber), label: String(card.label) })} className="inline-flex min-h-8 items-center">{marksWords(card.marks.length)}<span className="sr-only"> over photo {card.label}</span></AppLink></p>
       <PhotoOffers card={card} editable={rights.mayAdd} />
       {rights.mayAdd ? (
         <details open={problem?.intent === 'describe' || undefined}>
@@ -154,6 +159,7 @@ function SheetItem({ card, rights, problem }: SheetItemProps) {
           <PhotoRelease card={card} problem={problem} />
         </details>
       ) : null}
+      {rights.mayMeasure && card.state === 'ready' ? <p className="text-small"><AppLink href={href('/cases/:caseNumber/photos/:photoId/measure', { caseNumber: String(rights.caseNumber), photoId: card.id })}>Measure on photo {card.label}</AppLink></p> : null}
       {rights.mayReadOriginals ? <p className="text-small"><a href={`/photos/${card.id}/original`} download>Original of photo {card.label}</a></p> : null}
     </li>
   );
@@ -167,7 +173,7 @@ function AddPhotos({ caseNumber, problem: wrong }: { readonly caseNumber: number
       {wrong ? <ErrorSummary fields={[{ field, label: 'Photos' }]} title="Not all photos were taken. Those that were are above." /> : null}
       <Form method="post" encType="multipart/form-data" className="space-y-3">
         <label htmlFor={field.id} className="block font-semibold">Photos for case {caseNumber}</label>
-        <input type="file" id={field.id} name="photos" multiple accept={photoMimes.join(',')} className="field-box" />
+        <input type="file" id={field.id} name="photos" multiple accept={photoFileTypes} className="field-box" />
         <Button name="intent" value="add-photos" look="outlined">Add them</Button>
       </Form>
     </section>

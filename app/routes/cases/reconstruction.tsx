@@ -12,37 +12,30 @@ import { RunHead } from '#app/components/reconstruction/run-head.tsx';
 import { Notice } from '#app/components/ui/notice.tsx';
 import { canonicalJson } from '#app/domain/canonical-json.ts';
 import { readCaseNumber } from '#app/domain/case-number.ts';
-import { csvText } from '#app/domain/csv.ts';
 import { notFound } from '#app/domain/errors.ts';
-import { formatClock, localDay } from '#app/domain/local-time.ts';
 import { runNoteSchema } from '#app/domain/run-page.ts';
-import { minuteRows, minutesCsvHead } from '#app/domain/run-view.ts';
 import { formProblem, problemFromError } from '#app/http/form-result.server.ts';
 import { respond } from '#app/http/to-response.server.ts';
+import { engineVersion } from '#app/physics/model.ts';
 import { attachReconstruction } from '#app/services/reconstructions/attach-reconstruction.server.ts';
+import { repeatReconstruction } from '#app/services/reconstructions/repeat-reconstruction.server.ts';
 import { requestReconstruction } from '#app/services/reconstructions/request-reconstruction.server.ts';
 
-/** `?format=csv` gives every minute, `?format=json` the exact input and result; anything else is the page. */
+/** `?format=json` gives the record of the run, input and result to the byte; anything else is the page. */
 export const middleware: Route.MiddlewareFunction[] = [
   async ({ request, context, params }, next) => {
-    const format = new URL(request.url).searchParams.get('format');
-    if (request.method !== 'GET' || (format !== 'csv' && format !== 'json')) return next();
-    return respond(() => takeAway(format, requireActor(context, request), params));
+    if (request.method !== 'GET' || new URL(request.url).searchParams.get('format') !== 'json') return next();
+    return respond(() => takeAway(requireActor(context, request), params));
   },
 ];
 
-async function takeAway(format: 'csv' | 'json', actor: ReturnType<typeof requireActor>, params: Route.LoaderArgs['params']): Promise<Response> {
+async function takeAway(actor: ReturnType<typeof requireActor>, params: Route.LoaderArgs['params']): Promise<Response> {
   const run = await getRunExport(db, { actor, caseNumber: readCaseNumber(params.caseNumber), number: readCaseNumber(params.number) });
   if (!run) throw notFound(`A finished run ${params.number} of case ${params.caseNumber}`);
-  const name = `case-${run.caseNumber}-run-${run.number}`;
-  if (format === 'json') return fileResponse(canonicalJson(run), 'application/json', `${name}.json`);
-  const { zone } = run.input.place;
-  const rows = minuteRows(run.input, run.result, (at) => `${localDay(at, zone)} ${formatClock(at, zone)}`);
-  return fileResponse(csvText(minutesCsvHead, rows), 'text/csv; charset=utf-8', `${name}-minutes.csv`);
+  return new Response(canonicalJson(run), {
+    headers: { 'Content-Type': 'application/json', 'Content-Disposition': `attachment; filename="case-${run.caseNumber}-run-${run.number}.json"`, 'X-Content-Type-Options': 'nosniff' },
+  });
 }
-
-const fileResponse = (body: string, type: string, name: string): Response =>
-  new Response(body, { headers: { 'Content-Type': type, 'Content-Disposition': `attachment; filename="${name}"`, 'X-Content-Type-Options': 'nosniff' } });
 
 export function loader({ request, context, params }: Route.LoaderArgs) {
   return respond(async () => {
@@ -57,13 +50,15 @@ export function action({ request, context, params }: Route.ActionArgs) {
     const actor = requireActor(context, request);
     const caseNumber = readCaseNumber(params.caseNumber);
     const form = await request.formData();
-    const intent = form.get('intent') === 'run' ? 'run' : 'attach';
+    const asked = form.get('intent');
+    const intent = asked === 'run' || asked === 'repeat' ? asked : 'attach';
     const parsed = z.object({ note: runNoteSchema, reason: runNoteSchema }).safeParse(Object.fromEntries(form));
     if (!parsed.success) return formProblem(intent, form, { fieldErrors: z.flattenError(parsed.error).fieldErrors });
     const pathOf = (number: number) => href('/cases/:caseNumber/reconstructions/:number', { caseNumber: params.caseNumber, number: String(number) });
     try {
       if (intent === 'run') return redirect(pathOf((await requestReconstruction({ actor, caseNumber, note: parsed.data.note })).number), 303);
       const number = readCaseNumber(params.number);
+      if (intent === 'repeat') return redirect(pathOf((await repeatReconstruction({ actor, caseNumber, number, note: parsed.data.note })).number), 303);
       await attachReconstruction({ actor, caseNumber, number, reason: parsed.data.reason });
       return redirect(pathOf(number), 303);
     } catch (error) {
@@ -89,7 +84,10 @@ export default function Reconstruction({ loaderData: page, actionData: problem, 
       {view && line.standing !== 'attached' ? (
         <RunForm intent="attach" label="Attach to the case" fieldLabel="Why this run is attached" help="The case then rests on it: its days of return become those of the case. The run before is kept." refusal={page.attachRefusal} problem={problem} />
       ) : null}
-      {view ? <RunBody key={line.number} page={page} view={view} label={`Case ${head.number}, run ${line.number}`} words={sameWindow ? { start: head.card.startWords, end: head.card.endWords } : null} /> : null}
+      {view ? <RunBody key={line.number} page={page} view={view} href={path} label={`Case ${head.number}, run ${line.number}`} words={sameWindow ? { start: head.card.startWords, end: head.card.endWords } : null} /> : null}
+      {view ? (
+        <RunForm intent="repeat" label={`Run ${line.number} again on engine ${engineVersion}`} fieldLabel="Why again" help={line.engineVersion === engineVersion ? 'The same input on the same engine gives the same bytes; a check that nothing changed.' : `The same input, made on engine ${line.engineVersion}. What differs afterwards is the engine’s alone; compare the two.`} refusal={page.refusal} problem={problem} look="outlined" />
+      ) : null}
       {pending ? null : <RunForm intent="run" label="Run again" fieldLabel="Why this run" help="A new run goes by the measurements and times as they stand now. May be left empty." refusal={page.refusal} problem={problem} look={view && line.standing !== 'attached' ? 'outlined' : 'filled'} />}
     </div>
   );

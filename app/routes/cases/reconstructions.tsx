@@ -9,6 +9,7 @@ import { InputPreview } from '#app/components/reconstruction/input-preview.tsx';
 import { LiveProgress } from '#app/components/reconstruction/live-progress.tsx';
 import { RunForm } from '#app/components/reconstruction/run-form.tsx';
 import { RunList } from '#app/components/reconstruction/run-list.tsx';
+import { AppLink } from '#app/components/ui/app-link.tsx';
 import { EmptyState } from '#app/components/ui/notice.tsx';
 import { SectionHeading } from '#app/components/ui/page-title.tsx';
 import { readCaseNumber } from '#app/domain/case-number.ts';
@@ -52,6 +53,7 @@ export default function Reconstructions({ loaderData: page, actionData: problem 
       <LiveProgress pending={page.pending} />
       <section aria-labelledby="runs-heading">
         <SectionHeading id="runs-heading" note={page.runs.length > 0 ? `${page.runs.length} ${page.runs.length === 1 ? 'run' : 'runs'}, newest first; none is ever changed or removed` : undefined}>{page.heading}</SectionHeading>
+        {page.runs.filter((run) => run.state === 'done').length > 1 ? <p className="pb-2 text-small"><AppLink href={href('/cases/:caseNumber/reconstructions/compare', { caseNumber })} className="inline-flex min-h-11 items-center desk:min-h-8">Compare two runs</AppLink></p> : null}
         {page.runs.length === 0 ? (
           <EmptyState title="A run tests every minute of the window.">Sun, skyline, opening, optic and mark are put together as entered. What is not known is drawn as such.</EmptyState>
         ) : (

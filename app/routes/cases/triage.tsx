@@ -7,6 +7,7 @@ import { AccountText, PhotoStrip } from '#app/components/cases/account-parts.tsx
 import { FactsForm } from '#app/components/cases/facts-form.tsx';
 import { MovesPanel } from '#app/components/cases/moves-panel.tsx';
 import { AssignForm, HazardLine, SimilarCases, SunOnIt, WaitingList } from '#app/components/cases/triage-parts.tsx';
+import { WherePlan } from '#app/components/cases/where-plan.tsx';
 import { useCaseHeader } from '#app/components/cases/use-case-header.ts';
 import { Caution } from '#app/components/ui/caution.tsx';
 import { SectionHeading } from '#app/components/ui/page-title.tsx';
@@ -68,12 +69,15 @@ export default function Triage({ loaderData: { view, workedOut }, actionData: pr
   const casePath = href('/cases/:caseNumber', { caseNumber: String(head.number) });
   return (
     <div className="desk:grid desk:grid-cols-[minmax(0,1fr)_280px] desk:gap-x-10 min-[1400px]:grid-cols-[220px_minmax(0,1fr)_280px]">
-      <div className="hidden min-[1400px]:block"><WaitingList waiting={view.waiting} current={head.number} /></div>
+      <div className="hidden min-[1400px]:block"><WaitingList waiting={view.waiting} current={head.number} nowUtc={view.nowUtc} /></div>
       <div className="min-w-0 space-y-7">
         <HazardLine hazard={view.hazard} hurtWords={view.hurtWords} />
-        <div className="grid gap-x-8 gap-y-5 tablet:grid-cols-2">
-          <AccountText account={view.account} />
-          <PhotoStrip photos={view.photos} count={view.photoCount} casePath={casePath} />
+        <div className="grid gap-x-8 gap-y-5 [&>*]:min-w-0 tablet:grid-cols-2">
+          <div className="space-y-5">
+            <AccountText account={view.account} />
+            <PhotoStrip photos={view.photos} count={view.photoCount} casePath={casePath} />
+          </div>
+          <WherePlan where={view.where} similar={view.similar} caseNumber={head.number} />
         </div>
         <SunOnIt sun={view.sun} workedOut={workedOut} workOutHref={`${casePath}/triage?sun=today#sun`} />
         <SimilarCases similar={view.similar} />
@@ -88,7 +92,7 @@ export default function Triage({ loaderData: { view, workedOut }, actionData: pr
       <aside aria-label="Moves" className="min-w-0 space-y-5 max-desk:mt-8 desk:border-l desk:border-hair desk:pl-6">
         {view.investigators ? <AssignForm investigators={view.investigators} investigatorId={view.investigatorId} version={view.version} problem={problem} /> : null}
         <MovesPanel moves={view.moves} version={view.version} casePath={casePath} here="triage" problem={problem} proposedDay={view.proposedAnswerDay} mainCases={view.similar.map(({ row }) => ({ number: row.number, title: row.title }))} />
-        <div className="min-[1400px]:hidden"><WaitingList waiting={view.waiting} current={head.number} /></div>
+        <div className="min-[1400px]:hidden"><WaitingList waiting={view.waiting} current={head.number} nowUtc={view.nowUtc} /></div>
       </aside>
     </div>
   );

@@ -15,7 +15,7 @@ import { SectionHeading } from '#app/components/ui/page-title.tsx';
 import { plainText } from '#app/domain/incident.ts';
 import { formatDay, formatDayClock } from '#app/domain/local-time.ts';
 import { progressHeading, progressSteps } from '#app/domain/report-progress.ts';
-import { readReceipt } from '#app/domain/report.ts';
+import { readReceipt } from '#app/domain/report-receipt.ts';
 import { clientAddressContext } from '#app/http/client-address.ts';
 import type { FormProblem } from '#app/http/form-result.server.ts';
 import { formProblem, problemFromError } from '#app/http/form-result.server.ts';
@@ -48,7 +48,7 @@ export function loader({ request, context }: Route.LoaderArgs) {
         heading: progressHeading(progress),
         sentWords: formatDayClock(progress.reportedAt, zone),
         question: question ? { words: question, dueWords: answerDueAt ? formatDay(answerDueAt, zone) : null } : null,
-        steps: steps.map(({ state, words, at, reached, now }) => ({ state, words, reached, when: [at ? formatDayClock(at, zone) : '', now ? 'now' : ''].filter(Boolean).join(', ') })),
+        steps: steps.map(({ state, name, words, at, reached, now }) => ({ state, name, words, reached, when: [at ? formatDayClock(at, zone) : '', now ? 'now' : ''].filter(Boolean).join(', ') })),
       },
     };
   });

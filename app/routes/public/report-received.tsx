@@ -1,9 +1,10 @@
-import { href } from 'react-router';
+import { href, isRouteErrorResponse } from 'react-router';
 import type { Route } from './+types/report-received';
 import { actorContext } from '#app/auth/actor-context.ts';
 import { TaskHeader } from '#app/components/layout/app-header.tsx';
 import { Page } from '#app/components/layout/page.tsx';
-import { ClearSentDraft } from '#app/components/report/clear-sent-draft.tsx';
+import { FinishReport } from '#app/components/report/finish-report.tsx';
+import { newReportAddress } from '#app/components/report/report-addresses.ts';
 import { AppLink } from '#app/components/ui/app-link.tsx';
 import { ButtonLink } from '#app/components/ui/button.tsx';
 import { Caution } from '#app/components/ui/caution.tsx';
@@ -12,7 +13,8 @@ import { SectionHeading } from '#app/components/ui/page-title.tsx';
 import { notFound } from '#app/domain/errors.ts';
 import { formatDayClock } from '#app/domain/local-time.ts';
 import { homeFor } from '#app/domain/navigation.ts';
-import { clientIdSchema, readReceipt } from '#app/domain/report.ts';
+import { clientIdSchema } from '#app/domain/report.ts';
+import { readReceipt } from '#app/domain/report-receipt.ts';
 import { clientAddressContext } from '#app/http/client-address.ts';
 import { limitReporting } from '#app/auth/report-limits.server.ts';
 import { respond } from '#app/http/to-response.server.ts';
@@ -31,14 +33,28 @@ export function loader({ request, params, context }: Route.LoaderArgs) {
     return {
       receipt,
       receivedWords: formatDayClock(progress.reportedAt, progress.zone),
-      photoCount: progress.photoCount,
+      photoCount: photoWords(progress.photoCount),
       /** Set right after sending: the draft of this id may leave the device. */
       sentClientId: clientIdSchema.safeParse(query.get('report')).data ?? null,
-      anotherHref: guestCode ? `/report?at=${encodeURIComponent(guestCode)}` : actor ? '/report' : null,
+      anotherHref: guestCode || actor ? newReportAddress(guestCode) : null,
       closeHref: actor ? homeFor(actor) : '/',
       caseHref: actor && progress.reporterId === actor.userId ? href('/cases/:caseNumber', { caseNumber: String(progress.caseNumber) }) : null,
     };
   });
+}
+
+const photoWords = (count: number) => (count === 0 ? 'none' : String(count));
+
+/** The receipt is in the address: when the connection goes right after the sending, it is shown all the same. */
+export async function clientLoader({ request, params, serverLoader }: Route.ClientLoaderArgs): Promise<Awaited<ReturnType<typeof serverLoader>>> {
+  try {
+    return await serverLoader();
+  } catch (error) {
+    const receipt = readReceipt(params.receipt);
+    if (!receipt || error instanceof Response || isRouteErrorResponse(error)) throw error;
+    const query = new URL(request.url).searchParams;
+    return { receipt, receivedWords: 'just now', photoCount: 'see there when there is signal', sentClientId: clientIdSchema.safeParse(query.get('report')).data ?? null, anotherHref: newReportAddress(query.get('at')), closeHref: '/', caseHref: null };
+  }
 }
 
 export const meta: Route.MetaFunction = () => [{ title: 'Report received · Scorchline' }];
@@ -48,15 +64,15 @@ export default function ReportReceived({ loaderData }: Route.ComponentProps) {
   return (
     <>
       <TaskHeader title="Your report" closeHref={closeHref} />
-      {sentClientId ? <ClearSentDraft clientId={sentClientId} /> : null}
       <Page width="task">
         <h1 className="pt-6 font-serif text-title">Received. Thank you</h1>
         <p className="pt-1 pb-4">Your report is stored with the team. Sending it again would not make a second one.</p>
+        {sentClientId ? <FinishReport clientId={sentClientId} /> : null}
         <FactList
           facts={[
             { term: 'Receipt', value: <span className="font-mono text-account">{receipt}</span> },
             { term: 'Received', value: receivedWords },
-            { term: 'Photos', value: photoCount === 0 ? 'none' : String(photoCount) },
+            { term: 'Photos', value: photoCount },
           ]}
         />
         <p className="py-4">Note the receipt, or keep this page. Anyone who has it can read how far the report is; that page holds no names.</p>

@@ -1,24 +1,28 @@
-import type { ReportView } from '#app/components/report/report-page.tsx';
+import type { ReportView } from '#app/components/report/report-view.ts';
 import type { TodayAtSite } from '#app/components/report/where-question.tsx';
 import { formatClock, localDay, toLocalInput } from '#app/domain/local-time.ts';
 import { homeFor } from '#app/domain/navigation.ts';
+import { placedPlan } from '#app/domain/plan-view.ts';
 import type { ReportHolder } from '#app/domain/report.ts';
 import { env } from '#app/env.server.ts';
 import type { Daylight } from '#app/physics/sun/daylight.ts';
 import { daylightOn } from '#app/physics/sun/daylight.ts';
-import { holderId } from '#app/services/reports/report-holder.server.ts';
+import { holderId, holderKeyOf } from '#app/services/reports/report-holder.server.ts';
 import { db } from '#db/client.server.ts';
 import { listDraftPhotos } from '#db/queries/photos.server.ts';
 import { listReportSites } from '#db/queries/reports.server.ts';
+import { listPlacedPlans } from '#db/queries/site-plans.server.ts';
 
 /** Everything that the page of a report under way shows, for its holder. */
 export async function reportView(holder: ReportHolder, clientId: string, guestCode: string | null): Promise<ReportView> {
   const now = new Date();
   const sites = await listReportSites(db, holder);
+  // Where a drawing lies is the position of the site, which guests are not told.
+  const plans = holder.kind === 'person' ? await listPlacedPlans(db, sites.map(({ id }) => id)) : [];
   const photos = await listDraftPhotos(db, { clientId, actorId: holderId(holder) });
   return {
     clientId,
-    holderKey: holder.kind === 'person' ? `person-${holder.actor.userId}` : `site-${holder.site.id}`,
+    holderKey: holderKeyOf(holder),
     guestCode,
     guest: holder.kind === 'guest',
     sites: sites.map((site) => ({
@@ -30,13 +34,19 @@ export async function reportView(holder: ReportHolder, clientId: string, guestCo
       // To the minute, as the clock time beside it.
       nowUtc: new Date(Math.floor(now.getTime() / 60_000) * 60_000).toISOString(),
       today: sites.length <= sitesWithDaylight ? todayAt(site, now) : null,
+      units: holder.kind === 'person' ? holder.actor.units : site.jurisdiction === 'US' ? ('us' as const) : ('metric' as const),
+      plans: plans.flatMap((plan) => (plan.siteId === site.id ? (placedPlan(plan) ?? []) : [])),
       around: holder.kind === 'person' ? { latitudeDeg: Number(site.latitudeDeg.toFixed(3)), longitudeDeg: Number(site.longitudeDeg.toFixed(3)) } : null,
     })),
     emergencyNumber: env.EMERGENCY_NUMBER,
-    photos: photos.map(({ id, fileName, state }) => ({ id, fileName, state })),
+    photos,
+    photoMaxBytes: env.PHOTO_MAX_BYTES,
     closeHref: holder.kind === 'person' ? homeFor(holder.actor) : '/',
   };
 }
+
+/** The same page with nobody's data in it. */
+export const shellView = (): ReportView => ({ shell: true, clientId: '', holderKey: '', guestCode: null, guest: false, sites: [], emergencyNumber: env.EMERGENCY_NUMBER, photos: [], photoMaxBytes: env.PHOTO_MAX_BYTES, closeHref: '/' });
 
 const hourMs = 3_600_000;
 /** Houses with more sites than this do without the card: a sunrise takes milliseconds. */

@@ -6,30 +6,33 @@ import { actorContext } from '#app/auth/actor-context.ts';
 import { requireActor } from '#app/auth/middleware.server.ts';
 import { TaskHeader } from '#app/components/layout/app-header.tsx';
 import { Page } from '#app/components/layout/page.tsx';
-import { ReportPage, reportAddress } from '#app/components/report/report-page.tsx';
+import { receivedAddress, reportAddress } from '#app/components/report/report-addresses.ts';
+import { ReportPage } from '#app/components/report/report-page.tsx';
+import { viewFromDevice } from '#app/components/report/kept-views.ts';
+import { ReportFromDevice } from '#app/components/report/report-from-device.tsx';
+import type { ReportView } from '#app/components/report/report-view.ts';
 import { AppLink } from '#app/components/ui/app-link.tsx';
 import type { ReportFormState } from '#app/components/report/report-fields.ts';
 import { DomainError } from '#app/domain/errors.ts';
+import { readPhotoFields } from '#app/domain/photo-details.ts';
 import type { ReportHolder } from '#app/domain/report.ts';
-import { clientIdSchema, readReport } from '#app/domain/report.ts';
+import { clientIdSchema } from '#app/domain/report.ts';
 import { clientAddressContext } from '#app/http/client-address.ts';
 import { typedValues } from '#app/http/form-result.server.ts';
 import { readForm } from '#app/http/multipart-form.server.ts';
 import { limitReporting } from '#app/auth/report-limits.server.ts';
-import { respond, statusFor } from '#app/http/to-response.server.ts';
+import { respond } from '#app/http/to-response.server.ts';
+import { captionDraftPhoto } from '#app/services/photos/describe-draft-photo.server.ts';
 import { storeReportPhoto } from '#app/services/photos/store-photo.server.ts';
 import { removeDraftPhoto } from '#app/services/photos/remove-draft-photo.server.ts';
 import { identifyHolder, isHeldBy } from '#app/services/reports/report-holder.server.ts';
-import { submitReport } from '#app/services/reports/submit-report.server.ts';
 import { db } from '#db/client.server.ts';
-import { findSentReport, listReportSites } from '#db/queries/reports.server.ts';
-import { reportView } from './report-view.server.ts';
+import { findSentReport } from '#db/queries/reports.server.ts';
+import { photoErrors, receiveReport } from './receive-report.server.ts';
+import { reportView, shellView } from './report-view.server.ts';
 
 const guestCodeOf = (request: Request) => new URL(request.url).searchParams.get('at');
 const clientIdOf = (request: Request) => clientIdSchema.safeParse(new URL(request.url).searchParams.get('report')).data ?? null;
-
-/** With the link's code, so that another mark can be reported from there, and the id whose draft may leave the device. */
-const receivedAddress = (receipt: string, guestCode: string | null, clientId: string) => `/received/${receipt}?${new URLSearchParams({ ...(guestCode ? { at: guestCode } : {}), report: clientId }).toString()}`;
 
 /** The holder, or the way to the sign-in page. */
 async function requireHolder(request: Request, context: Readonly<RouterContextProvider>): Promise<ReportHolder> {
@@ -40,6 +43,8 @@ async function requireHolder(request: Request, context: Readonly<RouterContextPr
 export function loader({ request, context }: Route.LoaderArgs) {
   return respond(async () => {
     await limitReporting('look', null, context.get(clientAddressContext));
+    // The page without anybody's data, which a phone keeps to open the form without a connection.
+    if (new URL(request.url).searchParams.has('shell')) return shellView();
     const holder = await requireHolder(request, context);
     const guestCode = guestCodeOf(request);
     const clientId = clientIdOf(request);
@@ -82,24 +87,16 @@ async function answer(received: Received) {
   const [what, photoId] = intent.split(':');
   const toRemove = what === 'remove-photo' ? clientIdSchema.safeParse(photoId).data : undefined;
   if (toRemove) await removeDraftPhoto({ holder, clientId, photoId: toRemove });
-  if (intent !== 'send') return backToForm(received, { fieldErrors: photoErrors(refused, false) }, refused.length > 0 ? 400 : 200);
   const typed = typedValues(form);
-  const site = (await listReportSites(db, holder)).find((one) => one.id === typed['siteId']) ?? null;
-  const reading = readReport(typed, { site, now: new Date() });
-  if (!reading.ok) return backToForm(received, { ...reading, fieldErrors: { ...reading.fieldErrors, ...photoErrors(refused, false) } }, 400);
-  if (refused.length > 0) return backToForm(received, { fieldErrors: photoErrors(refused, true) }, 400);
-  try {
-    const { receipt } = await submitReport({ holder, clientId, report: reading.report });
-    return redirect(receivedAddress(receipt, received.guestCode, clientId), 303);
-  } catch (error) {
-    if (!(error instanceof DomainError)) throw error;
-    return backToForm(received, { formErrors: [error.message] }, statusFor(error));
-  }
+  await captionPhotos(received, typed);
+  if (intent !== 'send') return backToForm(received, { fieldErrors: photoErrors(refused, false) }, refused.length > 0 ? 400 : 200);
+  const reception = await receiveReport({ holder, clientId, typed, refused });
+  return reception.ok ? redirect(receivedAddress(reception.receipt, received.guestCode, clientId), 303) : backToForm(received, reception.problem, reception.status);
 }
 
-function photoErrors(refused: readonly string[], restIsFine: boolean): Record<string, string[]> {
-  if (refused.length === 0) return {};
-  return { photos: [...refused, restIsFine ? 'Everything else is fine: press Send again to send without it, or choose another file.' : 'Everything else is still here.'] };
+/** Without a script the form itself carries what is said of each photo. */
+async function captionPhotos({ holder, clientId }: Received, typed: Readonly<Record<string, string>>): Promise<void> {
+  for (const photo of readPhotoFields(typed)) await captionDraftPhoto({ holder, clientId, ...photo });
 }
 
 /** The form again, with everything that was typed and every photo that was taken. */
@@ -110,7 +107,19 @@ async function backToForm({ holder, clientId, form, guestCode }: Received, probl
 
 export const meta: Route.MetaFunction = () => [{ title: 'Report a mark · Scorchline' }];
 
+/** Between pages without a connection, what this device knows of the place takes over. */
+export async function clientLoader({ request, serverLoader }: Route.ClientLoaderArgs): Promise<ReportView> {
+  try {
+    return await serverLoader();
+  } catch (error) {
+    const kept = isRouteErrorResponse(error) || error instanceof Response ? null : await viewFromDevice(new URL(request.url));
+    if (!kept) throw error;
+    return kept;
+  }
+}
+
 export default function ReportRoute({ loaderData, actionData }: Route.ComponentProps) {
+  if (loaderData.shell) return <ReportFromDevice shell={loaderData} />;
   // After a post without a script the photos of the answer are newer than those of the loader.
   const view = actionData?.view ?? loaderData;
   return <ReportPage key={view.clientId} view={view} problem={actionData?.state ?? null} />;

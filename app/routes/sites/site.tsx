@@ -1,6 +1,7 @@
 import { Form, href, redirect } from 'react-router';
 import type { Route } from './+types/site';
 import { db } from '#db/client.server.ts';
+import { listSitePlans } from '#db/queries/site-plans.server.ts';
 import { getSiteByCode, listCasesAtSite } from '#db/queries/sites.server.ts';
 import { listPeopleOfSite } from '#db/queries/users.server.ts';
 import { requireActorWho } from '#app/auth/middleware.server.ts';
@@ -18,10 +19,10 @@ import { canInOrganisation, caseRules } from '#app/domain/permissions.ts';
 import { holdsRole } from '#app/domain/roles.ts';
 import type { Actor, Role } from '#app/domain/roles.ts';
 import { siteFormSchema, siteUseLabels } from '#app/domain/site-form.ts';
-import { env } from '#app/env.server.ts';
 import { fieldErrorsOf } from '#app/http/field-errors.ts';
 import { formProblem, problemFromError } from '#app/http/form-result.server.ts';
 import { respond } from '#app/http/to-response.server.ts';
+import { labelCode } from '#app/services/evidence/label-code.server.ts';
 import { changeSite, setGuestLink } from '#app/services/sites/save-site.server.ts';
 
 export function loader({ context, request, params }: Route.LoaderArgs) {
@@ -32,6 +33,7 @@ export function loader({ context, request, params }: Route.LoaderArgs) {
     const rows = await listCasesAtSite(db, { actor, siteId: site.id, now: new Date() });
     const mayManage = holdsRole(actor, ['administrator', 'manager'], site.id);
     const people = mayManage ? await listPeopleOfSite(db, { organisationId: actor.organisationId, siteId: site.id }) : [];
+    const plans = await listSitePlans(db, site.id);
     return {
       ...placeFor(actor, site),
       code: site.code,
@@ -43,7 +45,8 @@ export function loader({ context, request, params }: Route.LoaderArgs) {
       skylinePoints: site.skyline?.points.length ?? 0,
       mayManage,
       sees: holdsRole(actor, caseReaders, site.id) ? ('all' as const) : canInOrganisation(actor, 'register:read') ? ('own' as const) : ('none' as const),
-      guest: mayManage && site.guestCode ? { code: site.guestCode, link: `${env.PUBLIC_URL}/report?at=${encodeURIComponent(site.guestCode)}` } : null,
+      guest: mayManage && site.guestCode ? { code: site.guestCode, ...guestLink(site.guestCode) } : null,
+      plans: { placed: plans.filter((plan) => plan.points.length > 0).length, waiting: plans.filter((plan) => plan.points.length === 0).length },
       people: people.map((person) => ({ role: person.role, name: person.displayName, onlyHere: person.siteId !== null })),
       cases: rows.map((row) => ({
         number: row.number,
@@ -55,6 +58,11 @@ export function loader({ context, request, params }: Route.LoaderArgs) {
       })),
     };
   });
+}
+
+function guestLink(guestCode: string) {
+  const { url, size, path } = labelCode(`/report?at=${encodeURIComponent(guestCode)}`);
+  return { link: url, qr: { size, path } };
 }
 
 const caseReaders: readonly Role[] = caseRules['case:read'].roles;

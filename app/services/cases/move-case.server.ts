@@ -70,8 +70,8 @@ async function moveInTransaction(tx: Transaction, request: MoveRequest): Promise
 }
 
 async function applyToFinding(tx: Transaction, move: Move, row: CaseRow, actor: Actor, reason: string): Promise<void> {
-  if (move.id === 'send-findings' || move.id === 'send-back' || move.id === 'sign') {
-    await applyFindingMove(tx, { moveId: move.id, caseId: row.id, actor, reason });
+  if (move.id === 'send-findings' || move.id === 'send-back' || move.id === 'sign' || move.id === 'sign-no-action') {
+    await applyFindingMove(tx, { moveId: move.id === 'sign-no-action' ? 'sign' : move.id, caseId: row.id, actor, reason });
   }
 }
 

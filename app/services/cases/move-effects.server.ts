@@ -3,6 +3,7 @@ import { findCase } from '#db/queries/case-subject.server.ts';
 import type { CaseRow } from '#db/queries/case-subject.server.ts';
 import type { CasePatch } from '#db/queries/cases.server.ts';
 import { countDuplicatesOf } from '#db/queries/cases.server.ts';
+import { listFindingRows } from '#db/queries/findings.server.ts';
 import type { MoveExtra } from '#app/domain/case-move.ts';
 import { isTriageCloseReason } from '#app/domain/case-move.ts';
 import type { Move } from '#app/domain/case-state.ts';
@@ -38,7 +39,7 @@ export function waiversOf(move: Move, extra: MoveExtra): Pick<Partial<CaseRow>, 
 
 /** Columns that the move changes besides the state, after the rules that need more than the case itself. */
 export async function effectOf(tx: Transaction, context: MoveContext): Promise<Effect> {
-  const { move, row, extra, now } = context;
+  const { move, row, reason, extra, now } = context;
   switch (move.id) {
     case 'return':
       return {
@@ -53,12 +54,18 @@ export async function effectOf(tx: Transaction, context: MoveContext): Promise<E
       return { patch: { duplicateOfId: null }, summary: 'No longer a duplicate; back to triage.' };
     case 'close-at-triage':
       return closedAtTriage(context);
+    case 'send-findings':
+      return { patch: { noActionReason: null }, summary: 'Finding sent to review.' };
+    case 'sign-no-action':
+      return { patch: { noActionReason: reason.trim() }, summary: 'Finding signed: no action needed. The site manager closes the case, or passes it to action.' };
+    case 'close-no-action':
+      return closedWithoutAction(tx, context);
     case 'close':
       refuseCloseOfHighRisk(context);
       return { patch: { closedAt: now }, summary: 'Closed.' };
     case 'reopen-investigation':
     case 'reopen-action':
-      return { patch: { closedAt: null, closeReason: null, reopenCount: row.reopenCount + 1 }, summary: `Reopened, for the ${ordinal(row.reopenCount + 1)} time.` };
+      return { patch: { closedAt: null, closeReason: null, noActionReason: null, reopenCount: row.reopenCount + 1 }, summary: `Reopened, for the ${ordinal(row.reopenCount + 1)} time.` };
     default:
       return { patch: {}, summary: `${summaries[move.id] ?? move.label}.` };
   }
@@ -68,9 +75,9 @@ const summaries: Readonly<Record<string, string>> = {
   'open-triage': 'First look',
   accept: 'Investigation opened',
   'straight-to-action': 'Passed straight to corrective action',
-  'send-findings': 'Finding sent to review',
   'send-back': 'Finding sent back with comments',
   sign: 'Finding signed, passed to corrective action',
+  'pass-to-action': 'Passed to corrective action after all',
   'back-to-investigation': 'Back to investigation',
 };
 
@@ -107,6 +114,14 @@ function closedAtTriage({ row, actor, extra, now }: MoveContext): Effect {
   }
   if (!isTriageCloseReason(extra.closeReason)) throw new DomainError('invalid-input', 'Choose why the case closes here.');
   return { patch: { closedAt: now, closeReason: extra.closeReason }, summary: `Closed at triage: ${triageCloseReasonLabels[extra.closeReason].toLowerCase()}.` };
+}
+
+/** Two people agree that nothing is to be done: the reviewer by the signature, and a manager who is somebody else. */
+async function closedWithoutAction(tx: Transaction, context: MoveContext): Promise<Effect> {
+  refuseCloseOfHighRisk(context);
+  const [latest] = await listFindingRows(tx, context.row.id);
+  if (latest?.reviewerId === context.actor.userId) throw new DomainError('forbidden', 'You signed the finding. Another person, the site manager, agrees that no action is needed.');
+  return { patch: { closedAt: context.now }, summary: `Closed: no action needed. ${context.row.noActionReason ?? ''}`.trim() };
 }
 
 function refuseCloseOfHighRisk({ row, actor }: MoveContext): void {

@@ -5,7 +5,7 @@ import { insertMail } from '#db/queries/outbox.server.ts';
 import type { Move } from '#app/domain/case-state.ts';
 import { formatDay } from '#app/domain/local-time.ts';
 import type { Actor, Role } from '#app/domain/roles.ts';
-import { assignedMail, closedMail, findingSentMail, findingSignedMail, reopenedMail, returnedMail } from '#app/mail/templates/case-moved.ts';
+import { assignedMail, closedMail, findingSentMail, findingSignedMail, noActionMail, reopenedMail, returnedMail } from '#app/mail/templates/case-moved.ts';
 
 interface Message {
   readonly subject: string;
@@ -23,6 +23,7 @@ export async function mailMove(tx: Transaction, { move, row, actor }: { move: Mo
     case 'return':
       return mailReporter(tx, { row, actor, key }, returnedMail(about, row.answerDueAt ? formatDay(row.answerDueAt, row.zone) : 'soon'));
     case 'close':
+    case 'close-no-action':
     case 'close-at-triage':
       return mailReporter(tx, { row, actor, key }, closedMail(about));
     case 'reopen-investigation':
@@ -32,6 +33,8 @@ export async function mailMove(tx: Transaction, { move, row, actor }: { move: Mo
       return mailHolders(tx, { row, actor, key }, 'reviewer', findingSentMail(about));
     case 'sign':
       return mailHolders(tx, { row, actor, key }, 'manager', findingSignedMail(about));
+    case 'sign-no-action':
+      return mailHolders(tx, { row, actor, key }, 'manager', noActionMail(about));
     default:
       return;
   }

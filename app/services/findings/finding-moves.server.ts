@@ -10,6 +10,7 @@ import { certaintyFacts, selectionObstacles } from '#app/domain/finding-form.ts'
 import { certaintyObstacles } from '#app/domain/finding.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import { findingSentBackMail } from '#app/mail/templates/finding-sent-back.ts';
+import { freezeReport } from '#app/services/finding-reports/freeze-report.server.ts';
 import { freezeFinding } from './freeze-finding.server.ts';
 
 export interface FindingMove {
@@ -71,6 +72,9 @@ async function sign(tx: Transaction, { actor, caseId, reason }: FindingMove, lat
   const signedAt = new Date();
   const { frozen, frozenHash } = await freezeFinding(tx, { finding: latest, reviewer: actor, signedAt });
   await markFindingSigned(tx, latest.id, { reviewerId: actor.userId, at: signedAt, frozen, frozenHash });
+  const { case: caseRow } = await readSignedBasis(tx, caseId);
+  const author = await getPerson(tx, latest.authorId);
+  await freezeReport(tx, { actor, caseNumber: caseRow.number, findingId: latest.id, finding: { ...latest, state: 'signed', author: author?.displayName ?? 'the author', reviewer: actor.displayName, signedAt, frozenHash }, at: signedAt });
   await writeLine(tx, { actor, caseId, reason }, latest, 'finding.signed', `Finding version ${latest.version} signed and frozen, SHA-256 ${frozenHash}.`);
 }
 

@@ -5,8 +5,7 @@ import { insertLogEntry } from '#db/queries/log.server.ts';
 import { findCasePhoto, findDraftPhoto, recordHashCheck } from '#db/queries/photos.server.ts';
 import type { PhotoRow } from '#db/queries/photos.server.ts';
 import { DomainError, notFound } from '#app/domain/errors.ts';
-import type { PhotoMime } from '#app/domain/photo.ts';
-import { photoExtension, photoMimes } from '#app/domain/photo.ts';
+import { isPhotoMime, photoExtension } from '#app/domain/photo.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import { authorize } from '#app/services/authorize.ts';
 import { getObject } from '#app/storage/objects.server.ts';
@@ -76,7 +75,7 @@ async function readOriginal(photo: PhotoRow, caseRow: CaseRow, actor: Actor, nam
     });
   });
   if (!bytes || result !== 'same') throw new DomainError('conflict', `The stored original of photo ${photo.label} is refused: ${hashWords[result]}. The log has a line about it; ask the device that took it for its own copy.`);
-  const mime = photoMimes.find((known): known is PhotoMime => known === photo.mime) ?? 'image/jpeg';
+  const mime = isPhotoMime(photo.mime) ? photo.mime : 'image/jpeg';
   return { bytes, mime, fileName: `${name}-original.${photoExtension[mime]}` };
 }
 

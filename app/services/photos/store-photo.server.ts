@@ -5,7 +5,9 @@ import { countReportPhotos, findPhotoByHash, insertPhoto, lockCaseRow, nextPhoto
 import type { NewPhoto, PhotoRow } from '#db/queries/photos.server.ts';
 import type { SentReport } from '#db/queries/reports.server.ts';
 import { findSentReport, lockReport } from '#db/queries/reports.server.ts';
-import { photoExtension, photoRefusal, photosPerReport } from '#app/domain/photo.ts';
+import type { PhotoDetails } from '#app/domain/photo-details.ts';
+import { noDetails } from '#app/domain/photo-details.ts';
+import { acceptedTime, photoExtension, photoRefusal, photosPerReport } from '#app/domain/photo.ts';
 import type { ReportHolder } from '#app/domain/report.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import { preparePhotoJob } from '#app/jobs/definitions/prepare-photo.ts';
@@ -15,6 +17,7 @@ import { isHeldBy, notYourReport } from '#app/services/reports/report-holder.ser
 import { putObject } from '#app/storage/objects.server.ts';
 import { examinePhoto } from '#app/storage/photo-intake.server.ts';
 import type { ExaminedPhoto, IncomingFile } from '#app/storage/photo-intake.server.ts';
+import { detailColumns } from './photo-columns.ts';
 
 /** Stored, or a sentence that names the file. */
 export type PhotoOutcome =
@@ -26,8 +29,12 @@ interface Upload {
   /** The report that the photo belongs to, sent or not. */
   readonly clientId: string;
   readonly uploader: Pick<Actor, 'userId' | 'displayName'> | null;
+  /** What the person said of it; nothing, for a photo added to a case. */
+  readonly details?: PhotoDetails;
 }
-type PhotoTarget = Pick<SentReport, 'caseId' | 'organisationId'>;
+interface PhotoTarget extends Pick<SentReport, 'caseId' | 'organisationId'> {
+  readonly zone?: string;
+}
 
 /**
  * Takes a photo for a report under way. The original goes to the object store first, byte for byte; only then is it
@@ -36,9 +43,9 @@ type PhotoTarget = Pick<SentReport, 'caseId' | 'organisationId'>;
  *
  * @throws DomainError `forbidden` when the report was sent by somebody else.
  */
-export async function storeReportPhoto(params: { holder: ReportHolder; clientId: string; file: IncomingFile }): Promise<PhotoOutcome> {
-  const { holder, clientId, file } = params;
-  return storePhoto({ file, clientId, uploader: holder.kind === 'person' ? holder.actor : null }, async (tx) => {
+export async function storeReportPhoto(params: { holder: ReportHolder; clientId: string; file: IncomingFile; details?: PhotoDetails }): Promise<PhotoOutcome> {
+  const { holder, clientId, file, details = noDetails } = params;
+  return storePhoto({ file, clientId, uploader: holder.kind === 'person' ? holder.actor : null, details }, async (tx) => {
     const sent = await findSentReport(tx, clientId);
     if (sent && !isHeldBy(sent, holder)) throw notYourReport();
     return sent;
@@ -50,7 +57,7 @@ export async function storeReportPhoto(params: { holder: ReportHolder; clientId:
  *
  * @param findCase the case that the photo joins, null for a report under way; called under the report's lock.
  */
-export async function storePhoto({ file, clientId, uploader }: Upload, findCase: (tx: Transaction) => Promise<PhotoTarget | null>): Promise<PhotoOutcome> {
+export async function storePhoto({ file, clientId, uploader, details = noDetails }: Upload, findCase: (tx: Transaction) => Promise<PhotoTarget | null>): Promise<PhotoOutcome> {
   const examined = await examinePhoto(file);
   if (!examined.ok) return examined;
   const { photo } = examined;
@@ -65,7 +72,9 @@ export async function storePhoto({ file, clientId, uploader }: Upload, findCase:
     if (earlier) return outcomeOf(earlier, true);
     if ((await countReportPhotos(tx, clientId)) >= photosPerReport) return { ok: false, fileName: photo.fileName, sentence: photoRefusal.tooMany(photo.fileName) };
     const label = target ? await labelIn(tx, target.caseId) : null;
-    const row = await insertPhoto(tx, { reportClientId: clientId, caseId: target?.caseId ?? null, label, uploadedById: uploader?.userId ?? null, originalKey, ...columnsOf(photo) });
+    const said = detailColumns(details, new Date());
+    const takenAt = target?.zone ? acceptedTime({ exif: photo.exif, exifAnswer: said.exifAnswer }, target.zone) : null;
+    const row = await insertPhoto(tx, { reportClientId: clientId, caseId: target?.caseId ?? null, label, uploadedById: uploader?.userId ?? null, originalKey, ...columnsOf(photo), ...said, takenAt, madeSmaller: details.madeSmaller });
     if (!row) throw new Error('The photo was inserted by another transaction in spite of the lock.');
     if (target) await logAdded(tx, row, target, uploader);
     await enqueue(tx, preparePhotoJob, { photoId: row.id });
@@ -88,7 +97,7 @@ async function labelIn(tx: Transaction, caseId: string): Promise<number> {
   return nextPhotoLabel(tx, caseId);
 }
 
-function columnsOf(photo: ExaminedPhoto): Omit<NewPhoto, 'reportClientId' | 'originalKey'> {
+function columnsOf(photo: ExaminedPhoto): Omit<NewPhoto, 'reportClientId' | 'originalKey' | 'exifAnswer'> {
   return {
     fileName: photo.fileName,
     mime: photo.mime,
@@ -97,7 +106,6 @@ function columnsOf(photo: ExaminedPhoto): Omit<NewPhoto, 'reportClientId' | 'ori
     widthPx: photo.widthPx,
     heightPx: photo.heightPx,
     exif: photo.exif,
-    exifAnswer: { time: null, place: null, answeredAt: null },
   };
 }
 

@@ -20,7 +20,7 @@ async function inTurn<Result>(work: () => Promise<Result>): Promise<Result> {
   try {
     return await work();
   } catch (error) {
-    if (error instanceof EngineTimeoutError) throw new DomainError('invalid-input', `${error.message} Ask for fewer rays or samples, or a shorter window or calendar; a case keeps longer runs.`);
+    if (error instanceof EngineTimeoutError) throw new DomainError('invalid-input', `${error.message} Ask for a shorter calendar.`);
     throw error;
   } finally {
     const next = waiting.shift();
@@ -29,8 +29,16 @@ async function inTurn<Result>(work: () => Promise<Result>): Promise<Result> {
   }
 }
 
-export function reconstructNow(input: ReconstructionInput): Promise<ReconstructionResult> {
-  return inTurn(() => runEngine(input, { timeoutMs }));
+/** The result, or null where it takes longer than the sender should wait: such a run belongs into the queue. */
+export function reconstructNow(input: ReconstructionInput): Promise<ReconstructionResult | null> {
+  return inTurn(async () => {
+    try {
+      return await runEngine(input, { timeoutMs });
+    } catch (error) {
+      if (error instanceof EngineTimeoutError) return null;
+      throw error;
+    }
+  });
 }
 
 export function recurrenceNow(request: RecurrenceRequest): Promise<RecurrenceAnswer> {

@@ -8,6 +8,7 @@ import { redactCase } from '#app/domain/redaction.ts';
 import { checkReleasedText } from '#app/domain/release-check.ts';
 import type { ReleaseCheck } from '#app/domain/release-check.ts';
 import type { Actor } from '#app/domain/roles.ts';
+import { pdfText } from '#app/storage/pdf-text.server.ts';
 import { getObject } from '#app/storage/objects.server.ts';
 import { hashOf, sha256Hex } from '#app/storage/sha256.server.ts';
 import { dataFileName } from './release-files.server.ts';
@@ -33,7 +34,7 @@ export async function inspectRelease(db: DbOrTx, params: { readonly actor: Actor
   if (!current) throw notFound('The case');
   const files: ReadFile[] = [];
   for (const file of release.files) files.push({ ...file, found: await getObject(file.objectKey) });
-  const checks = [hashCheck(release, files), ...textChecks(release, files, current.source), ...(await photoChecks(files, current.source))];
+  const checks = [hashCheck(release, files), ...(await textChecks(release, files, current.source)), ...(await photoChecks(files, current.source))];
   const today = redactCase(current.source, release.audience, release.decisions);
   return { checks, passed: checks.every((check) => check.passed), caseUnchanged: hashOf(today.released) === release.releasedHash, sourceHash: hashOf(current.source) };
 }
@@ -47,12 +48,18 @@ function hashCheck(release: ReleaseRow, files: readonly ReadFile[]): ReleaseChec
 
 const decoder = new TextDecoder();
 
-function textChecks(release: ReleaseRow, files: readonly ReadFile[], source: CaseBeforeRedaction): readonly ReleaseCheck[] {
-  const texts = files.filter((file) => !file.mime.startsWith('image/')).map((file) => ({ fileName: file.name, text: decoder.decode(file.found ?? new Uint8Array()) }));
+async function textChecks(release: ReleaseRow, files: readonly ReadFile[], source: CaseBeforeRedaction): Promise<readonly ReleaseCheck[]> {
+  const texts = await Promise.all(files.filter((file) => !file.mime.startsWith('image/')).map(async (file) => ({ fileName: file.name, text: await textOf(file) })));
   const data = texts.find((file) => file.fileName === dataFileName)?.text ?? '';
   // The manifest is shown to the reader beside the files.
   const manifest = { fileName: 'manifest', text: files.map((file) => `${file.name} ${file.change}`).join('\n') };
   return checkReleasedText({ source, audience: release.audience, data: parsed(data), texts: [...texts, manifest], changeNote: release.changeNote, fileNames: files.map((file) => file.name) });
+}
+
+/** What can be read out of a file. A printed file that cannot be read fails by its hash. */
+async function textOf({ mime, found }: ReadFile): Promise<string> {
+  if (!found) return '';
+  return mime === 'application/pdf' ? await pdfText(found) : decoder.decode(found);
 }
 
 function parsed(text: string): unknown {

@@ -64,7 +64,7 @@ export async function prepareRelease(request: PrepareRequest): Promise<number> {
   const expiresAt = expiryOf(request.expires, before.source.zone);
   const redaction = redactCase(before.source, audience, decisions);
   const id = randomUUID();
-  const files = await storeFiles(id, await makeReleaseFiles(redaction, before.source));
+  const files = await storeFiles(id, await makeReleaseFiles(redaction, before.source, audience));
   try {
     return await inTransaction((tx) => store(tx, { request, before, redaction, id, files, expiresAt }));
   } catch (error) {

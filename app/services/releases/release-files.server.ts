@@ -1,13 +1,18 @@
+import { buildReport } from '#app/domain/build-report.ts';
 import type { CaseBeforeRedaction, PhotoBeforeRedaction } from '#app/domain/case-before-redaction.ts';
 import { canonicalJson } from '#app/domain/canonical-json.ts';
 import { DomainError } from '#app/domain/errors.ts';
 import type { Redaction } from '#app/domain/redaction.ts';
+import type { Audience } from '#app/domain/release-policy.ts';
+import { releasedReport } from '#app/domain/released-report.ts';
 import { measurementsCsv, runsCsv } from '#app/domain/released-tables.ts';
+import { renderPdf } from '#app/services/finding-reports/render-pdf.server.ts';
 import { getObject } from '#app/storage/objects.server.ts';
 import { sha256Hex } from '#app/storage/sha256.server.ts';
 import { renderReleasePhoto } from './release-photo.server.ts';
 
 export const dataFileName = 'data.json';
+export const reportFileName = 'report.pdf';
 
 /** A file of a release before it is stored. */
 export interface MadeFile {
@@ -20,11 +25,14 @@ export interface MadeFile {
 const encoder = new TextEncoder();
 
 /** The files of a release: the released case as data, its tables, and the photos, each made from redacted material. */
-export async function makeReleaseFiles({ released, photos }: Redaction, source: CaseBeforeRedaction): Promise<MadeFile[]> {
+export async function makeReleaseFiles({ released, withheld, photos }: Redaction, source: CaseBeforeRedaction, audience: Audience): Promise<MadeFile[]> {
   const runs = runsCsv(released);
   const measurements = measurementsCsv(released);
+  const data = encoder.encode(canonicalJson(released));
+  const report = await renderPdf(buildReport(releasedReport({ released, withheld, audience, releasedHash: sha256Hex(data) })));
   const files: MadeFile[] = [
-    { name: dataFileName, change: 'the released case, whole', mime: 'application/json', bytes: encoder.encode(canonicalJson(released)) },
+    { name: dataFileName, change: 'the released case, whole', mime: 'application/json', bytes: data },
+    { name: reportFileName, change: 'made from the released case alone', mime: 'application/pdf', bytes: report },
     ...(runs === null ? [] : [{ name: 'runs.csv', change: 'from the reconstruction, no names in it', mime: 'text/csv; charset=utf-8', bytes: encoder.encode(runs) }]),
     ...(measurements === null ? [] : [{ name: 'measurements.csv', change: 'numbers and method, typed words left out', mime: 'text/csv; charset=utf-8', bytes: encoder.encode(measurements) }]),
   ];

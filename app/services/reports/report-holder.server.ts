@@ -28,6 +28,9 @@ export async function identifyHolder(actor: Actor | null, guestCode: string | nu
 /** The account behind the holder; null for guests. */
 export const holderId = (holder: ReportHolder): string | null => (holder.kind === 'person' ? holder.actor.userId : null);
 
+/** Names the place on a device where this holder's reports lie. */
+export const holderKeyOf = (holder: ReportHolder): string => (holder.kind === 'person' ? `person-${holder.actor.userId}` : `site-${holder.site.id}`);
+
 /** Whether a report that was sent is this holder's: the same person, or a guest by the link of the same site. */
 export function isHeldBy(sent: Pick<SentReport, 'reporterId' | 'siteId'>, holder: ReportHolder): boolean {
   return holder.kind === 'person' ? sent.reporterId === holder.actor.userId : sent.reporterId === null && sent.siteId === holder.site.id;

@@ -1,14 +1,17 @@
 import { randomBytes } from 'node:crypto';
 import { inTransaction } from '#db/client.server.ts';
 import type { Transaction } from '#db/client.server.ts';
+import { insertInjury } from '#db/queries/injuries.server.ts';
 import { insertLogEntry } from '#db/queries/log.server.ts';
 import type { NewReportedCase, SentReport } from '#db/queries/reports.server.ts';
 import { attachReportPhotos, findSentReport, insertInvolvement, insertReportedCase, lockReport } from '#db/queries/reports.server.ts';
 import { insertScene } from '#db/queries/scenes.server.ts';
 import { DomainError } from '#app/domain/errors.ts';
 import { canInOrganisation } from '#app/domain/permissions.ts';
+import type { PersonRelation } from '#app/domain/person-relation.ts';
+import { personRelationLabels } from '#app/domain/person-relation.ts';
 import type { Report, ReportHolder } from '#app/domain/report.ts';
-import { receiptFrom, titleOfReport } from '#app/domain/report.ts';
+import { receiptFrom, titleOfReport } from '#app/domain/report-receipt.ts';
 import { enqueue } from '#app/jobs/queue.server.ts';
 import { sendMailJob } from '#app/jobs/definitions/send-mail.ts';
 import { holderId, isHeldBy, notYourReport } from './report-holder.server.ts';
@@ -47,8 +50,8 @@ export async function submitReport(submission: Submission): Promise<Receipt> {
     }
     const sent = await insertWithReceipt(tx, caseValues(submission));
     await insertScene(tx, { caseId: sent.caseId, version: 1, scene: submission.report.scene, note: 'As reported', authorId: holderId(submission.holder) });
-    await insertPeople(tx, sent.caseId, submission);
-    const photoCount = await attachReportPhotos(tx, { clientId: submission.clientId, caseId: sent.caseId, actorId: holderId(submission.holder) });
+    await insertPeople(tx, sent, submission);
+    const photoCount = await attachReportPhotos(tx, { clientId: submission.clientId, caseId: sent.caseId, actorId: holderId(submission.holder), zone: sent.zone });
     await insertLogEntry(tx, receivedLine(sent, submission.holder, photoCount));
     await mailReport(tx, sent, submission);
     await enqueue(tx, sendMailJob, {});
@@ -93,18 +96,31 @@ async function insertWithReceipt(tx: Transaction, values: Omit<NewReportedCase, 
   throw new Error('Five receipts in a row were taken; the generator of random numbers is broken.');
 }
 
-async function insertPeople(tx: Transaction, caseId: string, { report }: Submission): Promise<void> {
+async function insertPeople(tx: Transaction, sent: SentReport, { holder, report }: Submission): Promise<void> {
+  const { caseId } = sent;
   if (report.contact) await insertInvolvement(tx, { caseId, role: 'reporter', ...report.contact });
-  if (report.hurtAgeBand) await insertInvolvement(tx, { caseId, role: 'injured', ageBand: report.hurtAgeBand });
+  if (report.witness) await insertInvolvement(tx, { caseId, role: 'witness', relation: relationWords(report.witness.relation) });
+  if (!report.hurt) return;
+  const { ageBand, relation, injury } = report.hurt;
+  const involvementId = await insertInvolvement(tx, { caseId, role: 'injured', ageBand, relation: relationWords(relation) });
+  if (!injury) return;
+  const injuryId = await insertInjury(tx, caseId, { ...injury, involvementId });
+  await insertLogEntry(tx, { ...lineOf(sent, holder), event: 'case.injury-added', subject: 'injuries', subjectId: injuryId, summary: 'Health fields added.' });
 }
+
+const relationWords = (relation: PersonRelation | null) => (relation ? personRelationLabels[relation].toLowerCase() : null);
+
+const lineOf = (sent: SentReport, holder: ReportHolder) => ({
+  actorId: holderId(holder),
+  actorName: holder.kind === 'person' ? holder.actor.displayName : 'Guest by site link',
+  organisationId: sent.organisationId,
+  caseId: sent.caseId,
+});
 
 function receivedLine(sent: SentReport, holder: ReportHolder, photoCount: number) {
   const photos = photoCount === 1 ? 'one photo' : `${photoCount} photos`;
   return {
-    actorId: holderId(holder),
-    actorName: holder.kind === 'person' ? holder.actor.displayName : 'Guest by site link',
-    organisationId: sent.organisationId,
-    caseId: sent.caseId,
+    ...lineOf(sent, holder),
     event: 'case.reported',
     subject: 'cases',
     subjectId: sent.caseId,

@@ -1,5 +1,5 @@
 import geomagnetism from 'geomagnetism';
-import type { BearingFrames } from '#app/domain/scene-form.ts';
+import type { BearingFrames } from '#app/domain/scene-bearings.ts';
 
 /**
  * Magnetic declination at a place on a day, by the World Magnetic Model of NOAA and BGS as the package `geomagnetism`

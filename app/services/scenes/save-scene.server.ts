@@ -1,16 +1,13 @@
 import { inTransaction } from '#db/client.server.ts';
 import { casePlace } from '#db/queries/case-place.server.ts';
-import { lockCase } from '#db/queries/case-subject.server.ts';
-import { insertLogEntry } from '#db/queries/log.server.ts';
-import { insertScene, latestScene } from '#db/queries/scenes.server.ts';
-import { canonicalJson } from '#app/domain/canonical-json.ts';
-import { DomainError, notFound } from '#app/domain/errors.ts';
-import { plainText } from '#app/domain/incident.ts';
+import { DomainError } from '#app/domain/errors.ts';
+import { localDay } from '#app/domain/local-time.ts';
 import type { Actor } from '#app/domain/roles.ts';
+import { stampMeasures } from '#app/domain/scene-form-fields.ts';
 import type { Typed } from '#app/domain/scene-form.ts';
 import { readSceneForm } from '#app/domain/scene-form.ts';
-import { authorize } from '#app/services/authorize.ts';
 import { declinationAt } from './declination.server.ts';
+import { lockScene, noteErrors, writeScene } from './write-scene.server.ts';
 
 export interface SaveSceneRequest {
   readonly actor: Actor;
@@ -32,41 +29,22 @@ export interface SaveSceneRequest {
 export async function saveScene(request: SaveSceneRequest): Promise<number> {
   return inTransaction(async (tx) => {
     const { actor, typed, now } = request;
-    const found = await lockCase(tx, actor, request.caseNumber);
-    if (!found) throw notFound('The case');
-    authorize(actor, 'case:edit-facts', found.subject);
-    const latest = await latestScene(tx, found.row.id);
-    const version = latest?.version ?? 0;
-    if (version !== request.baseVersion) throw new DomainError('conflict', `Version ${version} of the measurements was saved while this page was open. What you typed is kept; load the page again to see that version.`);
-    const reading = readSceneForm(typed, declinationAt(await casePlace(tx, found.row), measuredOn(typed, now)));
-    const note = plainText(500).safeParse(request.note);
-    const fieldErrors = { ...(reading.ok ? {} : reading.fieldErrors), ...noteErrors(note) };
-    if (!reading.ok || !note.success || note.data === '') throw new DomainError('invalid-input', 'Some measurements cannot be saved as they stand.', { fieldErrors });
-    if (latest && canonicalJson(latest.scene) === canonicalJson(reading.scene)) return version;
-    await insertScene(tx, { caseId: found.row.id, version: version + 1, scene: reading.scene, note: [note.data, ...reading.bearingNotes].join(' '), authorId: actor.userId });
-    await insertLogEntry(tx, {
-      actorId: actor.userId,
-      actorName: actor.displayName,
-      organisationId: found.row.organisationId,
-      caseId: found.row.id,
-      event: 'scene.saved',
-      subject: 'scenes',
-      subjectId: `${found.row.id}:${version + 1}`,
-      summary: `Measurements, version ${version + 1}.`,
-      reason: [note.data, ...reading.bearingNotes].join(' '),
-      ...(latest ? { before: { scene: latest.scene } } : {}),
-      after: { scene: reading.scene },
-    });
-    return version + 1;
+    const locked = await lockScene(tx, actor, request.caseNumber, request.baseVersion);
+    const day = measuredOn(typed, locked.row.zone, now);
+    const reading = readSceneForm(typed, declinationAt(await casePlace(tx, locked.row), day.at));
+    const fieldErrors = { ...(reading.ok ? {} : reading.fieldErrors), ...noteErrors(request.note), ...day.errors };
+    if (!reading.ok || Object.keys(fieldErrors).length > 0) throw new DomainError('invalid-input', 'Some measurements cannot be saved as they stand.', { fieldErrors });
+    const by = (typed['measuredBy'] ?? '').trim().slice(0, 120) || actor.displayName;
+    const scene = stampMeasures(locked.scene, reading.scene, { by, on: day.on });
+    return writeScene(tx, locked, { actor, scene, note: [request.note.trim(), ...reading.bearingNotes].join(' ') });
   });
 }
 
-function noteErrors(note: { success: boolean; data?: string }): Record<string, string[]> {
-  if (!note.success) return { note: ['Keep the note under 500 characters.'] };
-  return note.data === '' ? { note: ['Say in a few words what was measured or changed, and by whom.'] } : {};
-}
-
-function measuredOn(typed: Typed, now: Date): Date {
+/** The day on which the values were taken; a day to come is refused. */
+function measuredOn(typed: Typed, zone: string, now: Date): { readonly at: Date; readonly on: string; readonly errors: Record<string, string[]> } {
+  const today = localDay(now, zone);
   const day = typed['measuredOn'] ?? '';
-  return /^\d{4}-\d{2}-\d{2}$/u.test(day) ? new Date(`${day}T12:00:00Z`) : now;
+  if (!/^\d{4}-\d{2}-\d{2}$/u.test(day)) return { at: now, on: today, errors: {} };
+  const errors: Record<string, string[]> = day > today ? { measuredOn: ['That day is still to come. Give the day on which it was measured.'] } : {};
+  return { at: new Date(`${day}T12:00:00Z`), on: day, errors };
 }

@@ -1,26 +1,16 @@
 import { randomBytes } from 'node:crypto';
-import tzLookup from 'tz-lookup';
 import { inTransaction } from '#db/client.server.ts';
-import type { Transaction } from '#db/client.server.ts';
-import { insertLogEntry } from '#db/queries/log.server.ts';
-import { insertSite, lockSiteByCode, updateGuestCode, updateSite } from '#db/queries/sites.server.ts';
+import { insertSite, updateGuestCode, updateSite } from '#db/queries/sites.server.ts';
 import type { NewSite } from '#db/queries/sites.server.ts';
-import { DomainError, notFound } from '#app/domain/errors.ts';
-import { holdsRole } from '#app/domain/roles.ts';
+import { DomainError } from '#app/domain/errors.ts';
 import type { Actor } from '#app/domain/roles.ts';
-
-const requireSiteRights = (actor: Actor, siteId: string | null) => {
-  if (!holdsRole(actor, ['administrator', 'manager'], siteId)) throw new DomainError('forbidden', 'Sites are looked after by the site manager or an administrator.');
-};
+import { logSite, ownSite, requireSiteRights } from './own-site.server.ts';
+import { zoneAt } from './zone-at.server.ts';
 
 const withZone = <Facts extends { zone: string; latitudeDeg: number; longitudeDeg: number }>(facts: Facts): Facts => ({
   ...facts,
-  zone: facts.zone === '' ? tzLookup(facts.latitudeDeg, facts.longitudeDeg) : facts.zone,
+  zone: facts.zone === '' ? zoneAt(facts) : facts.zone,
 });
-
-function logSite(tx: Transaction, actor: Actor, siteId: string, event: string, summary: string, after?: Record<string, unknown>): Promise<void> {
-  return insertLogEntry(tx, { actorId: actor.userId, actorName: actor.displayName, organisationId: actor.organisationId, caseId: null, event, subject: 'sites', subjectId: siteId, summary, ...(after ? { after } : {}) });
-}
 
 export function addSite(actor: Actor, site: NewSite): Promise<void> {
   requireSiteRights(actor, null);
@@ -29,13 +19,6 @@ export function addSite(actor: Actor, site: NewSite): Promise<void> {
     if (!id) throw new DomainError('conflict', 'The site was not added.', { fieldErrors: { code: ['Another site has this code. Choose another.'] } });
     await logSite(tx, actor, id, 'site.added', `Site ${site.name} added`);
   });
-}
-
-async function ownSite(tx: Transaction, actor: Actor, code: string) {
-  const site = await lockSiteByCode(tx, actor.organisationId, code);
-  if (!site) throw notFound('The site');
-  requireSiteRights(actor, site.id);
-  return site;
 }
 
 export function changeSite(actor: Actor, code: string, facts: Omit<NewSite, 'code'>): Promise<void> {

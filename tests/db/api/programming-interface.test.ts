@@ -1,19 +1,29 @@
-import { describe, expect, test } from 'vitest';
+import { eq, sql } from 'drizzle-orm';
+import { afterAll, describe, expect, test } from 'vitest';
 import { RouterContextProvider } from 'react-router';
 import { z } from 'zod';
 import { actorContext } from '#app/auth/actor-context.ts';
-import { problemSchema } from '#app/domain/api-contract.ts';
+import { computationAnswerSchema, problemSchema, queuedAnswerSchema } from '#app/domain/api-contract.ts';
 import { reconstructionResultSchema } from '#app/domain/reconstruction-result-schema.ts';
 import type { Actor } from '#app/domain/roles.ts';
+import { runComputation } from '#app/jobs/handlers/run-computation.server.ts';
+import { stopQueue } from '#app/jobs/queue.server.ts';
 import { reconstruct } from '#app/physics/reconstruct.ts';
 import * as clearSky from '#app/routes/api/clear-sky.ts';
 import * as openapi from '#app/routes/api/openapi.ts';
+import * as reconstruction from '#app/routes/api/reconstruction.ts';
 import * as reconstructions from '#app/routes/api/reconstructions.ts';
 import * as recurrence from '#app/routes/api/recurrence.ts';
 import * as sun from '#app/routes/api/sun.ts';
+import { makeApiToken, revokeToken } from '#app/services/people/api-tokens.server.ts';
+import { db } from '#db/client.server.ts';
+import { listApiTokens } from '#db/queries/api-tokens.server.ts';
+import { apiTokens, logEntries, users } from '#db/schema/all.ts';
 import rows from '#fixtures/reference/check-values.json';
 import { createActor, createHouse, createOrganisation } from '#tests/support/factories.ts';
 import { plainInput } from '#tests/db/reconstructions/stage.ts';
+
+afterAll(stopQueue);
 
 const origin = 'http://localhost:3000';
 
@@ -44,8 +54,9 @@ describe('who may ask', () => {
       reconstructions.action(args('/api/v1/reconstructions', null, post(plainInput))),
       recurrence.action(args('/api/v1/recurrence', null, post({}))),
       openapi.loader(args('/api/v1/openapi.json', null)),
+      reconstruction.loader({ ...args('/api/v1/reconstructions/x', null), params: { computationId: 'x' } }),
     ]);
-    expect(answers.map((answer) => answer.status)).toEqual([401, 401, 401, 401, 401]);
+    expect(answers.map((answer) => answer.status)).toEqual([401, 401, 401, 401, 401, 401]);
     for (const answer of answers) expect((await problemOf(answer)).detail).toContain('Sign in');
   });
 
@@ -165,6 +176,128 @@ describe('POST /api/v1/reconstructions', () => {
   });
 });
 
+describe('long reconstructions', () => {
+  const ask = (actor: Actor, body: unknown, headers: Record<string, string> = { Prefer: 'respond-async' }) =>
+    reconstructions.action(args('/api/v1/reconstructions', actor, { method: 'POST', headers: { 'Content-Type': 'application/json', ...headers }, body: JSON.stringify(body) }));
+  const look = (actor: Actor, id: string) => reconstruction.loader({ ...args(`/api/v1/reconstructions/${id}`, actor), params: { computationId: id } });
+  const queued = async (answer: Response) => {
+    expect(answer.status).toBe(202);
+    const body = queuedAnswerSchema.parse(await answer.json());
+    expect(answer.headers.get('Location')).toBe(body.href);
+    return body;
+  };
+  const stateOf = async (answer: Response) => computationAnswerSchema.parse(await answer.json());
+
+  test('are answered by 202 with a link that gives state, progress and at last the result', async () => {
+    const actor = await investigator();
+    const { id, href } = await queued(await ask(actor, plainInput));
+    expect(href).toBe(`/api/v1/reconstructions/${id}`);
+    const waiting = await look(actor, id);
+    expect(waiting.headers.get('Retry-After')).toBe('2');
+    expect(await stateOf(waiting)).toMatchObject({ state: 'queued', result: null, failure: null });
+    await runComputation({ computationId: id });
+    const done = await stateOf(await look(actor, id));
+    expect(done.state).toBe('done');
+    expect(done.finishedUtc).not.toBeNull();
+    expect(done.result?.grade).toEqual(reconstruct(plainInput).grade);
+    // A second worker changes nothing.
+    await runComputation({ computationId: id });
+    expect((await stateOf(await look(actor, id))).finishedUtc).toBe(done.finishedUtc);
+  }, 60_000);
+
+  test('are known by their size: five million rays wait in the queue, a plain sun does not', async () => {
+    const actor = await investigator();
+    const optic = { kind: 'sphere', diameterM: 0.1, material: { name: 'crown-glass' } };
+    await queued(await ask(actor, { ...plainInput, optic, rays: 5_000_000 }, {}));
+    expect((await ask(actor, plainInput, {})).status).toBe(200);
+  }, 60_000);
+
+  test('sent again find the run that they began, with one job and one line in the log', async () => {
+    const actor = await investigator();
+    const first = await queued(await ask(actor, plainInput));
+    const again = await queued(await ask(actor, plainInput));
+    expect(again.id).toBe(first.id);
+    expect((await db.execute(sql`select 1 from pgboss.job where name = 'run-computation' and data->>'computationId' = ${first.id}`)).length).toBe(1);
+    expect((await db.select().from(logEntries).where(eq(logEntries.subjectId, first.id))).map((line) => line.event)).toEqual(['computation.requested']);
+    expect((await queued(await ask(actor, { ...plainInput, seed: 8 }))).id).not.toBe(first.id);
+  }, 60_000);
+
+  test('belong to whoever asked; another person, and an address that is none, find nothing', async () => {
+    const { id } = await queued(await ask(await investigator(), plainInput));
+    const stranger = await investigator();
+    expect((await problemOf(await look(stranger, id))).status).toBe(404);
+    expect((await problemOf(await look(stranger, 'no-such-run'))).status).toBe(404);
+  }, 60_000);
+
+  test('that the engine refuses end with its sentence and may be asked for again', async () => {
+    const actor = await investigator();
+    const bad = { ...plainInput, window: { ...plainInput.window, endUtc: '2026-05-01T00:00:00Z' } };
+    const { id } = await queued(await ask(actor, bad));
+    await runComputation({ computationId: id });
+    expect(await stateOf(await look(actor, id))).toMatchObject({ state: 'failed', failure: expect.stringContaining('window.startUtc and window.endUtc disagree') });
+    expect((await queued(await ask(actor, bad))).id).toBe(id);
+    expect((await stateOf(await look(actor, id))).state).toBe('queued');
+  }, 60_000);
+});
+
+describe('keys for programs', () => {
+  const withKey = (path: string, token: string, init: RequestInit = {}) => args(path, null, { ...init, headers: { ...Object.fromEntries(new Headers(init.headers)), Authorization: `Bearer ${token}` } });
+  const sunBy = (token: string) => sun.loader(withKey(`/api/v1/sun?${query()}`, token));
+
+  test('stand for the person who made them, within their scope', async () => {
+    const actor = await investigator();
+    const reading = await makeApiToken(actor, { name: 'weather board', scope: 'read', days: 30 });
+    const computing = await makeApiToken(actor, { name: 'night batch', scope: 'compute', days: 30 });
+    expect((await sunBy(reading)).status).toBe(200);
+    const refused = await reconstructions.action(withKey('/api/v1/reconstructions', reading, post(plainInput)));
+    expect(refused.headers.get('WWW-Authenticate')).toContain('insufficient_scope');
+    expect((await problemOf(refused)).status).toBe(403);
+    expect((await reconstructions.action(withKey('/api/v1/reconstructions', computing, post(plainInput)))).status).toBe(200);
+  }, 60_000);
+
+  test('are kept as a hash, noted when used, and logged when made and ended', async () => {
+    const actor = await investigator();
+    const token = await makeApiToken(actor, { name: 'weather board', scope: 'read', days: 30 });
+    const [held] = await listApiTokens(db, actor.userId);
+    expect(held).toMatchObject({ name: 'weather board', lastUsedAt: null });
+    await sunBy(token);
+    const [row] = await db.select().from(apiTokens).where(eq(apiTokens.userId, actor.userId));
+    expect(JSON.stringify(row)).not.toContain(token);
+    expect(row?.lastUsedAt).toBeInstanceOf(Date);
+    await revokeToken(actor, held?.id ?? '');
+    const after = await sunBy(token);
+    expect(after.headers.get('WWW-Authenticate')).toContain('invalid_token');
+    expect((await problemOf(after)).status).toBe(401);
+    expect((await db.select().from(logEntries).where(eq(logEntries.subjectId, held?.id ?? ''))).map((line) => line.event)).toEqual(['account.token-made', 'account.token-ended']);
+  });
+
+  test('end at their time, with the account, and are nobody else’s to end', async () => {
+    const actor = await investigator();
+    const token = await makeApiToken(actor, { name: 'old', scope: 'read', days: 30 });
+    const [held] = await listApiTokens(db, actor.userId);
+    await expect(revokeToken(await investigator(), held?.id ?? '')).rejects.toMatchObject({ code: 'not-found' });
+    await db.update(apiTokens).set({ expiresAt: new Date(Date.now() - 1000) }).where(eq(apiTokens.userId, actor.userId));
+    expect((await sunBy(token)).status).toBe(401);
+    await db.update(apiTokens).set({ expiresAt: new Date(Date.now() + 60_000) }).where(eq(apiTokens.userId, actor.userId));
+    expect((await sunBy(token)).status).toBe(200);
+    await db.update(users).set({ disabled: true }).where(eq(users.id, actor.userId));
+    expect((await sunBy(token)).status).toBe(401);
+  });
+
+  test('a word that is no key is refused even beside a session', async () => {
+    const both = args(`/api/v1/sun?${query()}`, await investigator(), { headers: { Authorization: 'Bearer nonsense' } });
+    expect((await sun.loader(both)).status).toBe(401);
+  });
+
+  test('are not made for a reader of case files, nor beyond ten', async () => {
+    const insurer = await createActor((await createOrganisation({ kind: 'insurer' })).id, 'insurer');
+    await expect(makeApiToken(insurer, { name: 'x', scope: 'read', days: 30 })).rejects.toMatchObject({ code: 'forbidden' });
+    const actor = await investigator();
+    for (let count = 0; count < 10; count += 1) await makeApiToken(actor, { name: `key ${count}`, scope: 'read', days: 30 });
+    await expect(makeApiToken(actor, { name: 'one more', scope: 'read', days: 30 })).rejects.toMatchObject({ code: 'invalid-state' });
+  });
+});
+
 describe('POST /api/v1/recurrence', () => {
   const place = { latitudeDeg: 0, longitudeDeg: 0, elevationM: 0, heightAboveGroundM: 0, zone: 'UTC' };
   const year = { fromUtc: '2026-01-01T00:00:00Z', toUtc: '2027-01-01T00:00:00Z' };
@@ -208,7 +341,7 @@ describe('GET /api/v1/openapi.json', () => {
   test('names every address with its method, its fields and its refusals', async () => {
     const document = documentSchema.parse(await (await openapi.loader(args('/api/v1/openapi.json', await investigator()))).json());
     expect(Object.entries(document.paths).map(([path, methods]) => `${Object.keys(methods).join()} ${path}`)).toEqual([
-      'get /api/v1/sun', 'get /api/v1/clear-sky', 'post /api/v1/reconstructions', 'post /api/v1/recurrence',
+      'get /api/v1/sun', 'get /api/v1/clear-sky', 'post /api/v1/reconstructions', 'get /api/v1/reconstructions/{computationId}', 'post /api/v1/recurrence',
     ]);
     const parameters = document.paths['/api/v1/sun']?.['get']?.parameters ?? [];
     expect(parameters.filter((one) => one.required).map((one) => one.name)).toEqual(['lat', 'lon', 'utc']);

@@ -300,7 +300,7 @@ describe('the first look', () => {
     await createScene({ caseId: foreign.id, scene: { optic: { kind: 'dish' } } });
     const triage = await getTriage(db, { actor: fresh.investigator, caseNumber: row.number, now });
     expect(triage?.view.similar.map((one) => [one.row.number, one.reasons])).toEqual([
-      [near.number, ['same site', 'same time of year']],
+      [near.number, ['same site', 'sun as high as on 20 Dec 2024']],
       [far.number, ['same site']],
     ]);
   });

@@ -67,7 +67,7 @@ describe('a reporter', () => {
     await createCase('triage', { site: house.site, title: 'Melted saddle' });
     const view = await show(house.reporter);
     expect(numbers(view)).toEqual([own.number]);
-    expect(view.counts).toEqual({ all: 1, open: 1, late: null, injury: null, mine: 1 });
+    expect(view.counts).toEqual({ all: 1, open: 1, 'first-look': 1, late: null, injury: null, mine: 1 });
     expect(numbers(await show(house.reporter, 'q=melted'))).toEqual([own.number]);
     expect(view.heading).toBe('One of your reports is still open');
   });
@@ -165,4 +165,29 @@ test('a kind of event that tells of an injury is not named to those who may not 
   const row = await createCase('triage', { site: house.site, eventType: 'burn-injury' });
   expect((await show(house.manager, `q=${row.number}`)).rows[0]?.stateNote).toBe('event');
   expect((await show(house.investigator, `q=${row.number}`)).rows[0]?.stateNote).toBe('injury');
+});
+
+describe('the first look', () => {
+  test('lists reports by their clock: hazard and injury first, those returned last, each with what is left of it', async () => {
+    const fresh = await createHouse();
+    const at = (clock: string) => new Date(`2026-07-15T${clock}:00Z`);
+    // 15 July 2026 is a Wednesday; the desk of the site opens at 09:00 BST, 08:00 UTC.
+    const usual = await createCase('reported', { site: fresh.site, reportedAt: at('08:00') });
+    const hazard = await createCase('reported', { site: fresh.site, reportedAt: at('08:10'), hazardStillPresent: 'yes' });
+    const hurt = await createCase('reported', { site: fresh.site, reportedAt: at('06:00'), anyoneHurt: 'yes' });
+    const returned = await createCase('returned', { site: fresh.site, reportedAt: at('05:00') });
+    await createCase('investigation', { site: fresh.site });
+    const view = await show(fresh.investigator, 'view=first-look');
+    expect(numbers(view)).toEqual([hurt, hazard, usual, returned].map((row) => row.number));
+    expect(view.rows.map((row) => row.firstLook?.words ?? null)).toEqual(['2 h late', '28 min left', 'due today 13:00', null]);
+    expect(view.rows[0]?.stateNote).toContain('first look 2 h late');
+    expect(view.heading).toBe('Four reports wait, one is late for a first look');
+    expect(view.counts['first-look']).toBe(4);
+  });
+
+  test('does not tell by its clock who was hurt, to a manager who may not know', async () => {
+    const fresh = await createHouse();
+    await createCase('reported', { site: fresh.site, reportedAt: new Date('2026-07-15T08:00:00Z'), anyoneHurt: 'yes' });
+    expect((await show(fresh.manager, 'view=first-look')).rows[0]?.firstLook?.words).toBe('due today 13:00');
+  });
 });

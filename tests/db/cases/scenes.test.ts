@@ -5,7 +5,7 @@ import { logEntries, scenes } from '#db/schema/all.ts';
 import type { cases } from '#db/schema/all.ts';
 import { DomainError } from '#app/domain/errors.ts';
 import { sceneSchema } from '#app/domain/scene.ts';
-import { sceneToFields } from '#app/domain/scene-form.ts';
+import { sceneToFields } from '#app/domain/scene-form-fields.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import { saveScene } from '#app/services/scenes/save-scene.server.ts';
 import { createActor, createCase, createHouse, createScene } from '#tests/support/factories.ts';
@@ -36,7 +36,7 @@ describe('saving the measurements', () => {
     const [first, second] = await versionsOf(row);
     expect(first?.scene.optic.kind).toBe('dont-know');
     expect(second).toMatchObject({ version: 2, authorId: house.investigator.userId, note: 'Measured on the roof.' });
-    expect(second?.scene.optic.diameterMm).toEqual({ value: 1400, method: 'measured' });
+    expect(second?.scene.optic.diameterMm).toEqual({ value: 1400, method: 'measured', by: house.investigator.displayName, on: '2026-02-03' });
     const [line] = await db.select().from(logEntries).where(eq(logEntries.caseId, row.id));
     expect(line).toMatchObject({ event: 'scene.saved', summary: 'Measurements, version 2.', reason: 'Measured on the roof.' });
   });

@@ -171,7 +171,7 @@ describe('photos of a report under way', () => {
   });
 
   test('are taken by nobody without account or link', async () => {
-    expect((await upload({ clientId: randomUUID(), files: [['roof.jpg', await plainJpeg()]] })).status).toBe(403);
+    expect((await upload({ clientId: randomUUID(), files: [['roof.jpg', await plainJpeg()]] })).status).toBe(401);
     expect((await upload({ at: 'no-such-link', clientId: randomUUID(), files: [['roof.jpg', await plainJpeg()]] })).status).toBe(404);
   });
 

@@ -1,10 +1,12 @@
 import { randomUUID } from 'node:crypto';
+import { readFile } from 'node:fs/promises';
 import { eq } from 'drizzle-orm';
 import exifr from 'exifr';
 import sharp from 'sharp';
-import { afterAll, beforeAll, describe, expect, test } from 'vitest';
+import { afterAll, beforeAll, describe, expect, test, vi } from 'vitest';
 import { preparePhoto } from '#app/jobs/handlers/prepare-photo.server.ts';
 import { stopQueue } from '#app/jobs/queue.server.ts';
+import { log } from '#app/log.server.ts';
 import { purgeAbandonedPhotos } from '#app/services/photos/purge-abandoned-photos.server.ts';
 import { storeReportPhoto } from '#app/services/photos/store-photo.server.ts';
 import { deleteObject, getObject, putObject } from '#app/storage/objects.server.ts';
@@ -34,6 +36,35 @@ async function objectOf(key: string | null | undefined): Promise<Buffer> {
 }
 
 describe('copies for pages', () => {
+  test('are made of a HEIC photo too, upright and in its colours; the original stays as it came', async () => {
+    const bytes = await readFile(new URL('../../../fixtures/photos/with-gps-exif.heic', import.meta.url));
+    const photoId = await stored(bytes);
+    await preparePhoto({ photoId });
+    const row = await rowOf(photoId);
+    expect(row).toMatchObject({ state: 'ready', mime: 'image/heic' });
+    expect((await objectOf(row?.originalKey)).equals(bytes)).toBe(true);
+    const { data, info } = await sharp(await objectOf(row?.viewKey)).raw().toBuffer({ resolveWithObject: true });
+    expect([info.width, info.height]).toEqual([160, 120]);
+    const at = (x: number, y: number) => [...data.subarray((y * info.width + x) * info.channels, (y * info.width + x) * info.channels + 3)];
+    // The card that the file was made from: #241c14 in the upper left, #b8b4a8 at the right; coding moves them a little.
+    for (const [found, drawn] of [[at(10, 10), [0x24, 0x1c, 0x14]], [at(140, 60), [0xb8, 0xb4, 0xa8]]] as const) {
+      for (const [index, value] of drawn.entries()) expect(Math.abs((found[index] ?? 0) - value)).toBeLessThan(8);
+    }
+  });
+
+  test('of a HEIC photo that cannot be decoded fail, and the original is kept', async () => {
+    const bytes = Buffer.from(await readFile(new URL('../../../fixtures/photos/with-gps-exif.heic', import.meta.url)));
+    // The coded picture, between the box of media data and the camera data behind it.
+    bytes.fill(0, 0x1a8, 0x2e0);
+    const photoId = await stored(bytes);
+    const quiet = vi.spyOn(log, 'error').mockImplementation(() => undefined);
+    await preparePhoto({ photoId });
+    quiet.mockRestore();
+    const row = await rowOf(photoId);
+    expect(row?.state).toBe('failed');
+    expect((await objectOf(row?.originalKey)).equals(bytes)).toBe(true);
+  });
+
   test('carry no camera data, no time and no place; the original keeps them', async () => {
     const bytes = await cameraJpeg();
     const photoId = await stored(bytes);

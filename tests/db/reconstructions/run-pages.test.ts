@@ -7,7 +7,9 @@ import { actorContext } from '#app/auth/actor-context.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import type { ReconstructionInput } from '#app/physics/model.ts';
 import { reconstruct } from '#app/physics/reconstruct.ts';
+import { figureIds } from '#app/domain/run-figures.ts';
 import * as route from '#app/routes/cases/reconstruction.tsx';
+import * as figureRoute from '#app/routes/resources/run-figure.ts';
 import { hashOf } from '#app/storage/sha256.server.ts';
 import { createCase, createHouse, createReconstruction } from '#tests/support/factories.ts';
 import { measuredCase, plainInput } from './stage.ts';
@@ -19,6 +21,17 @@ const skylineInput: ReconstructionInput = {
   ...plainInput,
   window: { startUtc: '2026-05-09T03:30:00.000Z', endUtc: '2026-05-09T05:30:00.000Z', clockSigmaS: 60 },
   skyline: { sigmaDeg: 0.5, points: [{ azimuthDeg: 65, elevationDeg: 12, name: '=HYPERLINK("Grain House")' }, { azimuthDeg: 200, elevationDeg: 12 }] },
+};
+
+/** A ball with a mark, computed with few rays, so that every figure has numbers. */
+const quickBall: ReconstructionInput = {
+  ...plainInput,
+  optic: { kind: 'sphere', diameterM: 0.12, material: { name: 'acrylic' } },
+  mark: { bearingDeg: 330, bearingSigmaDeg: 3, elevationDeg: -45, elevationSigmaDeg: 3, distanceM: 0.091, distanceSigmaM: 0.002, lengthMm: 12, widthMm: 4 },
+  target: { materialId: 'wool-felt' },
+  rays: 1_000,
+  samples: 64,
+  recurrenceToUtc: '2026-12-01T00:00:00.000Z',
 };
 
 async function finishedRun(input: ReconstructionInput = plainInput) {
@@ -38,6 +51,13 @@ async function takeAway(actor: Actor, caseNumber: number, format: string): Promi
   const answer = await middleware({ request: new Request(url), url, context, params: { caseNumber: String(caseNumber), number: '1' }, pattern: '/cases/:caseNumber/reconstructions/:number' }, () => Promise.resolve(new Response('the page')));
   if (!(answer instanceof Response)) throw new Error('No answer was given.');
   return answer;
+}
+
+async function figureFile(actor: Actor, caseNumber: number, fileName: string): Promise<Response> {
+  const context = new RouterContextProvider();
+  context.set(actorContext, actor);
+  const url = new URL(`http://localhost:3000/cases/${caseNumber}/reconstructions/1/figures/${fileName}`);
+  return figureRoute.loader({ request: new Request(url), url, context, params: { caseNumber: String(caseNumber), number: '1', fileName }, pattern: '/cases/:caseNumber/reconstructions/:number/figures/:fileName' });
 }
 
 describe('the list of runs', () => {
@@ -106,11 +126,11 @@ describe('one run', () => {
 describe('taking a run away', () => {
   test('the minutes leave as CSV, one row a minute, and no cell is taken for a formula', async () => {
     const { house, caseNumber } = await finishedRun(skylineInput);
-    const answer = await takeAway(house.investigator, caseNumber, 'csv');
+    const answer = await figureFile(house.investigator, caseNumber, 'minutes.csv');
     expect(answer.headers.get('Content-Disposition')).toBe(`attachment; filename="case-${caseNumber}-run-1-minutes.csv"`);
     const lines = (await answer.text()).trimEnd().split('\r\n');
     expect(lines).toHaveLength(121);
-    expect(lines[0]).toContain('azimuth_deg,apparent_elevation_deg,verdict,reason');
+    expect(lines[0]).toContain('azimuth_deg,apparent_elevation_deg,result,reason');
     expect(lines.slice(1).every((line) => !/(?:^|,)"?[=+@]/u.test(line))).toBe(true);
     expect(lines.some((line) => line.includes('"behind =HYPERLINK(""Grain House"")"'))).toBe(true);
   });
@@ -121,6 +141,23 @@ describe('taking a run away', () => {
     const body = z.object({ input: z.unknown(), result: z.unknown(), inputHash: z.string(), resultHash: z.string() }).parse(await answer.json());
     expect(hashOf(body.input)).toBe(body.inputHash);
     expect(hashOf(body.result)).toBe(body.resultHash);
+  });
+
+  test.each(figureIds)('the numbers of %s leave with a head and as many cells in each row', async (id) => {
+    const { house, caseNumber } = await finishedRun(quickBall);
+    const text = await (await figureFile(house.manager, caseNumber, `${id}.csv`)).text();
+    const lines = text.replace(/^\uFEFF/u, '').trimEnd().split('\r\n');
+    expect(lines.length).toBeGreaterThan(1);
+    const cells = (line: string) => line.replace(/"(?:[^"]|"")*"/gu, 'x').split(',').length;
+    for (const line of lines) expect(cells(line)).toBe(cells(lines[0] ?? ''));
+  });
+
+  test('a figure that is not one, a stranger and a reporter get nothing', async () => {
+    const { house, caseNumber } = await finishedRun();
+    await expect(figureFile(house.investigator, caseNumber, 'secrets.csv')).rejects.toMatchObject({ init: { status: 404 } });
+    await expect(figureFile(house.investigator, caseNumber, 'minutes.json')).rejects.toMatchObject({ init: { status: 404 } });
+    await expect(figureFile((await createHouse()).investigator, caseNumber, 'minutes.csv')).rejects.toMatchObject({ init: { status: 404 } });
+    await expect(figureFile(house.reporter, caseNumber, 'minutes.csv')).rejects.toMatchObject({ init: { status: expect.any(Number) } });
   });
 
   test('another format is the page, and a stranger gets nothing', async () => {

@@ -1,8 +1,12 @@
+import { randomUUID } from 'node:crypto';
 import exifr from 'exifr';
 import sharp from 'sharp';
+import { getDocument } from 'pdfjs-dist/legacy/build/pdf.mjs';
 import { beforeAll, describe, expect, it } from 'vitest';
 import { foreignJpegSegments } from '#app/domain/jpeg-segments.ts';
+import { collectItem } from '#app/services/evidence/collect-item.server.ts';
 import { masksAreSolid } from '#app/services/releases/release-photo.server.ts';
+import { pdfText } from '#app/storage/pdf-text.server.ts';
 import { sha256Hex } from '#app/storage/sha256.server.ts';
 import { bytesOf, mask, phonePhoto, photoPlace, prepareAll, releaseStage } from './stage.ts';
 import type { ReleaseStage } from './stage.ts';
@@ -11,12 +15,19 @@ let stage: ReleaseStage;
 let bytes: Awaited<ReturnType<typeof bytesOf>>;
 beforeAll(async () => {
   stage = await releaseStage();
+  await collectItem({
+    actor: stage.house.investigator,
+    caseNumber: stage.caseNumber,
+    item: { clientId: randomUUID(), kind: 'optic', description: 'Mirror of Ottilie Vantongeren', fromWhere: 'kitchen sill', collectedBy: 'Branwen Hollis', sealNumber: 'Q-77', condition: 'whole', holderRole: 'investigator', holderName: 'Branwen Hollis', place: '' },
+    collectedAt: new Date('2026-05-10T09:00:00Z'),
+    now: new Date(),
+  });
   bytes = await bytesOf(stage, await prepareAll(stage));
 });
 
 describe('every byte of a release', () => {
   it('is listed in the manifest with its size and hash', () => {
-    expect([...bytes.files.keys()].sort()).toEqual(['data.json', 'measurements.csv', 'photo-01.jpg', 'runs.csv']);
+    expect([...bytes.files.keys()].sort()).toEqual(['data.json', 'measurements.csv', 'photo-01.jpg', 'report.pdf', 'runs.csv']);
     for (const file of bytes.row.files) {
       expect(sha256Hex(bytes.files.get(file.name) ?? '')).toBe(file.sha256);
       expect(bytes.files.get(file.name)?.byteLength).toBe(file.bytes);
@@ -32,10 +43,33 @@ describe('every byte of a release', () => {
     for (const { displayName } of [stage.house.reporter, stage.house.investigator, stage.house.reviewer, stage.house.manager]) expect(bytes.text).not.toMatch(new RegExp(`${displayName}(?!\\d)`, 'u'));
   });
 
+  it('tells who held an item by part and time, and none of its typed words', () => {
+    expect(bytes.row.released.evidence).toEqual([{ code: `${stage.caseNumber}-A`, kind: 'optic', custody: [{ role: 'investigator', from: '2026-05-10T09:00:00.000Z', to: null }], exams: [] }]);
+    for (const typed of ['Mirror of', 'Q-77', 'kitchen']) expect(bytes.text).not.toContain(typed);
+  });
+
   it('holds what was shared', () => {
     expect(bytes.text).toContain('The curtain had a brown line.');
     expect(bytes.text).toContain('Focused sunlight is probable.');
     expect(bytes.row.released).toMatchObject({ siteName: stage.house.site.name, injury: 'yes, first aid', loss: { amount: 1850, currency: 'GBP' } });
+  });
+});
+
+describe('the report of a release', () => {
+  const pdf = () => bytes.files.get('report.pdf') ?? Buffer.alloc(0);
+
+  it('says in print what the data says, and names what was withheld by class', async () => {
+    const words = (await pdfText(pdf())).replace(/\s+/gu, ' ');
+    for (const part of ['The curtain had a brown line.', 'Focused sunlight is probable.', bytes.row.releasedHash, '[withheld: personal]', 'do not look at the sun']) expect(words).toContain(part);
+    for (const secret of ['Hollis', 'Vantongeren', 'SK9', '53.5123', stage.house.reporter.displayName]) expect(words).not.toMatch(new RegExp(`${secret}(?!\\d)`, 'u'));
+  });
+
+  it('is tagged, in a stated language', async () => {
+    const document = await getDocument({ data: new Uint8Array(pdf()), verbosity: 0 }).promise;
+    expect(await document.getMarkInfo()).toMatchObject({ Marked: true });
+    expect((await document.getMetadata()).info).toMatchObject({ Language: 'en-GB' });
+    expect(JSON.stringify(await (await document.getPage(1)).getStructTree())).toContain('"role":"H1"');
+    await document.destroy();
   });
 });
 
@@ -74,5 +108,5 @@ describe('photos of a release', () => {
 });
 
 it('names of files say nothing of the names that the files came with', () => {
-  expect(bytes.row.files.every((file) => /^(?:data\.json|runs\.csv|measurements\.csv|photo-\d+\.jpg)$/u.test(file.name))).toBe(true);
+  expect(bytes.row.files.every((file) => /^(?:data\.json|report\.pdf|runs\.csv|measurements\.csv|photo-\d+\.jpg)$/u.test(file.name))).toBe(true);
 });

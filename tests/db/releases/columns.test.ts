@@ -3,7 +3,7 @@ import type { PgTable } from 'drizzle-orm/pg-core';
 import { describe, expect, it } from 'vitest';
 import { prepareRelease } from '#app/services/releases/prepare-release.server.ts';
 import { db } from '#db/client.server.ts';
-import { caseNotes, cases, correctiveActions, findings, hypotheses, injuries, involvements, photos, reconstructions, scenes, sites, sunReturns } from '#db/schema/all.ts';
+import { attachments, caseNotes, cases, correctiveActions, custodyRecords, evidenceExams, evidenceItems, findings, hypotheses, injuries, involvements, photos, reconstructions, scenes, sites, sunReturns, timelineEvents, weatherRecords, witnessAccounts } from '#db/schema/all.ts';
 import { bytesOf, inADay, releaseStage, shareAll } from './stage.ts';
 
 /**
@@ -22,7 +22,7 @@ const columns: Readonly<Record<string, { readonly table: PgTable; readonly fates
       reduced: 'foundAt eventType anyoneHurt closedAt',
       withheld:
         'id clientId receipt organisationId siteId state latitudeDeg longitudeDeg accuracyM sighting hazardStillPresent foundByMeans interimControlEnds fireServiceAttended potentialConsequence likelihood riskBasis risk ' +
-        'privilegedNote legalHold legalHoldReason reporterId guestReport assignedToId duplicateOfId reopenCount closeReason question answer answerDueAt reconstructionWaiver evidenceWaiver effectivenessWaiver lesson externalReports version createdAt updatedAt',
+        'privilegedNote legalHold legalHoldReason reporterId guestReport assignedToId duplicateOfId reopenCount closeReason question answer answerDueAt reconstructionWaiver evidenceWaiver effectivenessWaiver noActionReason lesson externalReports version createdAt updatedAt',
     },
   },
   involvements: { table: involvements, fates: { released: '', redacted: '', reduced: '', withheld: 'id caseId role name phone email relation ageBand guardianContact createdAt' } },
@@ -33,7 +33,7 @@ const columns: Readonly<Record<string, { readonly table: PgTable; readonly fates
       released: 'view',
       redacted: 'caption altText',
       reduced: 'label masks originalKey sha256 releasable',
-      withheld: 'id reportClientId caseId fileName mime bytes widthPx heightPx viewKey thumbnailKey state exif exifAnswer takenAt clockErrorS hashCheckedAt hashCheck uploadedById createdAt',
+      withheld: 'id reportClientId caseId fileName mime bytes widthPx heightPx viewKey thumbnailKey state exif exifAnswer takenAt clockErrorS position madeSmaller marks hashCheckedAt hashCheck uploadedById createdAt',
     },
   },
   case_notes: { table: caseNotes, fates: { released: 'createdAt', redacted: 'body', reduced: 'authorId', withheld: 'id caseId authorName' } },
@@ -67,6 +67,13 @@ const columns: Readonly<Record<string, { readonly table: PgTable; readonly fates
       withheld: 'id caseId why ownerId verifierId risk costCurrency proof doneById verifiedById verificationNote effectCheckOn effectById withdrawnReason version createdById createdAt updatedAt',
     },
   },
+  attachments: { table: attachments, fates: { released: '', redacted: '', reduced: '', withheld: 'id caseId label title kind class fileName mime bytes sha256 objectKey hashCheckedAt hashCheck uploadedById createdAt' } },
+  evidence_items: { table: evidenceItems, fates: { released: 'label kind', redacted: '', reduced: '', withheld: 'id caseId clientId description fromWhere collectedBy collectedAt sealNumber disposal disposalReason createdById createdAt' } },
+  custody_records: { table: custodyRecords, fates: { released: 'holderRole fromAt toAt', redacted: '', reduced: '', withheld: 'id itemId clientId sequence previousSequence holderName place purpose condition givenBy receivedBy recordedById createdAt' } },
+  evidence_exams: { table: evidenceExams, fates: { released: 'kind performedAt', redacted: '', reduced: 'noticeAt', withheld: 'id itemId clientId method result performedBy noticeTo protocolAttachmentId recordedById createdAt' } },
+  witness_accounts: { table: witnessAccounts, fates: { released: '', redacted: '', reduced: '', withheld: 'id caseId clientId label involvementId takenById takenAt language words readBack speaksOfAt signedAttachmentId createdAt' } },
+  timeline_events: { table: timelineEvents, fates: { released: '', redacted: '', reduced: '', withheld: 'id caseId clientId source sourceName readingAt clockErrorS clockErrorBasis what attachmentId createdById withdrawnAt withdrawnReason createdAt' } },
+  weather_records: { table: weatherRecords, fates: { released: '', redacted: '', reduced: '', withheld: 'id caseId number kind nature sourceName station stationDistanceKm stationBearingDeg intervalMin licenceNote fileSha256 mapping values valuesSha256 createdById createdAt setAsideAt setAsideById setAsideReason' } },
   sites: { table: sites, fates: { released: 'name use', redacted: '', reduced: '', withheld: 'id organisationId code address latitudeDeg longitudeDeg elevationM zone jurisdiction skyline guestCode createdAt updatedAt' } },
 };
 
@@ -100,8 +107,8 @@ describe('text in every column', () => {
       const kept = plainText(table, wordsOf(fates.withheld)).map((column) => [column, mark(column)] as const);
       const out = plainText(table, [...wordsOf(fates.redacted), ...wordsOf(fates.released)]).map((column) => [column, mark(column)] as const);
       if (kept.length + out.length === 0) continue;
-      // Signed findings and finished runs refuse to be written again; the stage's own text stands for theirs.
-      if (name === 'findings' || name === 'reconstructions') continue;
+      // Signed findings, finished runs, custody and accounts refuse to be written again; the stage's own text stands for theirs.
+      if (['findings', 'reconstructions', 'custody_records', 'evidence_exams', 'witness_accounts'].includes(name)) continue;
       const id = getTableColumns(table)['caseId'];
       const own = name === 'sites' ? eq(sites.id, stage.house.site.id) : id ? eq(id, stage.caseId) : eq(cases.id, stage.caseId);
       await db.update(table).set(Object.fromEntries([...kept, ...out])).where(own);

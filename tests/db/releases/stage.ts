@@ -9,6 +9,7 @@ import type { Actor } from '#app/domain/roles.ts';
 import type { ReconstructionInput, ReconstructionResult } from '#app/physics/model.ts';
 import { releaseCaseFile } from '#app/services/releases/approve-release.server.ts';
 import { prepareRelease } from '#app/services/releases/prepare-release.server.ts';
+import { pdfText } from '#app/storage/pdf-text.server.ts';
 import { getObject, putObject } from '#app/storage/objects.server.ts';
 import { sha256Hex } from '#app/storage/sha256.server.ts';
 import { db } from '#db/client.server.ts';
@@ -157,7 +158,7 @@ export async function rowOf(stage: ReleaseStage, number: number) {
   return row;
 }
 
-/** Every byte of a release, as one Latin-1 text for searching, with each file by its name. */
+/** Every byte of a release, as one text for searching, with each file by its name. Printed files, which are packed, are read by their words. */
 export async function bytesOf(stage: ReleaseStage, number: number) {
   const row = await rowOf(stage, number);
   const files = new Map<string, Buffer>();
@@ -166,6 +167,7 @@ export async function bytesOf(stage: ReleaseStage, number: number) {
     if (!bytes) throw new Error(`${file.name} is missing from the store.`);
     files.set(file.name, Buffer.from(bytes));
   }
-  const text = [JSON.stringify(row.released), JSON.stringify(row.files.map(({ name, change }) => ({ name, change }))), ...[...files.values()].map((bytes) => bytes.toString('latin1'))].join('\n');
+  const words = await Promise.all([...files].map(([name, bytes]) => (name.endsWith('.pdf') ? pdfText(bytes) : bytes.toString('latin1'))));
+  const text = [JSON.stringify(row.released), JSON.stringify(row.files.map(({ name, change }) => ({ name, change }))), ...words].join('\n');
   return { row, files, text };
 }

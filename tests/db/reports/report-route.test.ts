@@ -1,7 +1,9 @@
 import { randomUUID } from 'node:crypto';
+import { readFile } from 'node:fs/promises';
 import { eq } from 'drizzle-orm';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import type { Actor } from '#app/domain/roles.ts';
+import { env } from '#app/env.server.ts';
 import { stopQueue } from '#app/jobs/queue.server.ts';
 import { action, loader } from '#app/routes/public/report.tsx';
 import { db } from '#db/client.server.ts';
@@ -86,6 +88,34 @@ describe('the form as it stands, without a script', () => {
     expect(answer.body).toMatchObject({ state: { fieldErrors: { photos: [expect.stringContaining('“notes.jpg”'), expect.stringContaining('Send again')] } }, view: { photos: [{ fileName: 'roof.jpg' }] } });
     expect((await post({ actor: house.reporter, clientId })).status).toBe(303);
     expect(await db.select({ label: photos.label }).from(photos).where(eq(photos.reportClientId, clientId))).toEqual([{ label: 1 }]);
+  });
+
+  test('bad files of every kind are each named, and neither the good photo nor a word is lost', async () => {
+    const clientId = randomUUID();
+    const fixture = async (name: string, as = name) => new File([new Uint8Array(await readFile(new URL(`../../../fixtures/photos/${name}`, import.meta.url)))], as);
+    const tooBig = new Uint8Array(env.PHOTO_MAX_BYTES + 1);
+    tooBig.set([0xff, 0xd8, 0xff]);
+    const bad = [
+      await fixture('zero-byte.jpg'), await fixture('text-renamed.jpg'), await fixture('html-renamed.jpg', '<img src=x onerror=alert(1)>.jpg'), await fixture('truncated.jpg', '../../etc/passwd.jpg'),
+      await fixture('huge-dimensions.png', 'bomb\u202Egnp.png'), new File([tooBig], 'big.jpg'),
+    ];
+    const typed = { narrative: 'Brown band', placeDetail: 'roof' };
+    const answer = await post({ actor: house.reporter, clientId, typed, files: [...bad, await fixture('no-exif.png', 'picture.txt')] });
+    expect(answer).toMatchObject({ status: 400, body: { state: { typed }, view: { photos: [{ fileName: 'picture.txt', mime: 'image/png' }] } } });
+    const sentences = String((answer.body as { state: { fieldErrors: { photos: string[] } } }).state.fieldErrors.photos.join(' '));
+    for (const name of ['zero-byte.jpg', 'text-renamed.jpg', '<img src=x onerror=alert(1)>.jpg', 'passwd.jpg', 'bombgnp.png', 'big.jpg']) expect(sentences).toContain(`“${name}”`);
+    expect((await post({ actor: house.reporter, clientId, typed })).status).toBe(303);
+    const row = await caseOf(clientId);
+    expect(row?.narrative).toBe('Brown band');
+    expect(await db.$count(photos, eq(photos.caseId, row?.id ?? ''))).toBe(1);
+  });
+
+  test('what is said of each photo is kept with it', async () => {
+    const clientId = randomUUID();
+    await post({ actor: house.reporter, clientId, typed: { intent: 'add-photos' }, files: [await jpegFile('roof.jpg')] });
+    const [photo] = await db.select({ id: photos.id }).from(photos).where(eq(photos.reportClientId, clientId));
+    await post({ actor: house.reporter, clientId, typed: { [`photoView.${photo?.id}`]: 'close', [`photoCaption.${photo?.id}`]: 'ruler 300 mm' } });
+    expect(await db.select({ view: photos.view, caption: photos.caption, label: photos.label }).from(photos).where(eq(photos.reportClientId, clientId))).toEqual([{ view: 'close', caption: 'ruler 300 mm', label: 1 }]);
   });
 
   test('adds photos, and takes one off, without sending', async () => {

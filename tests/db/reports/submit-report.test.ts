@@ -25,12 +25,12 @@ const mailFor = async (caseId: string) => db.select().from(outbox).where(eq(outb
 describe('a report becomes one case', () => {
   test('with state reported, a receipt, a first scene and a log line', async () => {
     const clientId = randomUUID();
-    const receipt = await submitReport({ holder: person(house.reporter), clientId, report: reportAt(house.site, { opticKind: 'metal-trim', 'optic-radiusOfCurvatureM': '1.2' }) });
+    const receipt = await submitReport({ holder: person(house.reporter), clientId, report: reportAt(house.site, { opticKind: 'curved-building-face', 'optic-curved-building-face-radiusOfCurvatureM': '42' }) });
     const row = await caseOf(clientId);
     expect(row).toMatchObject({ state: 'reported', receipt: receipt.receipt, number: receipt.caseNumber, reporterId: house.reporter.userId, guestReport: false, zone: 'Europe/London' });
     expect(receipt.receipt).toMatch(receiptPattern);
     const [scene] = await db.select().from(scenes).where(eq(scenes.caseId, row?.id ?? ''));
-    expect(scene).toMatchObject({ version: 1, authorId: house.reporter.userId, scene: { optic: { kind: 'metal-trim', radiusOfCurvatureM: { value: 1.2 } } } });
+    expect(scene).toMatchObject({ version: 1, authorId: house.reporter.userId, scene: { optic: { kind: 'curved-building-face', radiusOfCurvatureM: { value: 42 } } } });
     const lines = await db.select().from(logEntries).where(eq(logEntries.caseId, row?.id ?? ''));
     expect(lines).toMatchObject([{ event: 'case.reported', actorId: house.reporter.userId, after: { state: 'reported' } }]);
   });
@@ -123,12 +123,13 @@ describe('mail', () => {
   test.each([
     ['the hazard is still there', { hazardStillPresent: 'yes' }, ['investigator', 'manager']],
     ['somebody was hurt', { anyoneHurt: 'yes' }, ['investigator', 'manager', 'privacyLead']],
+    ['a child was hurt', { anyoneHurt: 'yes', hurtAgeBand: 'under-16' }, ['investigator', 'manager', 'privacyLead']],
   ] as const)('alerts those who must know when %s, with no health word in the subject or body', async (_when, typed, roles) => {
     const clientId = randomUUID();
     await submitReport({ holder: guest, clientId, report: reportAt(house.site, typed) });
     const mails = await mailFor((await caseOf(clientId))?.id ?? '');
     expect(mails.map(({ toAddress }) => toAddress).sort()).toEqual(roles.map((role) => house[role].email).sort());
-    for (const mail of mails) expect(`${mail.subject} ${mail.bodyText}`).not.toMatch(/hurt|injur|burn|hospital/iu);
+    for (const mail of mails) expect(`${mail.subject} ${mail.bodyText}`).not.toMatch(/hurt|injur|burn|hospital|child|under 16/iu);
   });
 
   test('alerts nobody when nobody was hurt and the hazard is gone', async () => {

@@ -87,13 +87,15 @@ describe('the time zone of a site', () => {
 describe('the form of a site', () => {
   test('reads what was typed', () => {
     expect(siteFormSchema.parse(typed)).toEqual({ intent: 'add-site', code: 'TARROW', ...facts });
+    // Minutes are sixtieths of a degree (ISO 80000-3).
+    expect(siteFormSchema.parse({ ...typed, latitudeDeg: '51° 24′ N', longitudeDeg: '2 54 0 W' })).toMatchObject({ latitudeDeg: expect.closeTo(51.4, 9), longitudeDeg: expect.closeTo(-2.9, 9) });
   });
 
   test.each([
     ['code', 'roof / south'],
     ['name', ' '],
     ['latitudeDeg', '91'],
-    ['latitudeDeg', '53° 30′'],
+    ['latitudeDeg', '53° 60′'],
     ['longitudeDeg', '-180.5'],
     ['longitudeDeg', ''],
     ['elevationM', ''],

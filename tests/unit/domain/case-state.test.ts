@@ -5,17 +5,20 @@ import type { MoveFacts } from '#app/domain/case-state.ts';
 import { caseStates, findMove, moves, movesFrom } from '#app/domain/case-state.ts';
 import { isReady, moveChecklist } from '#app/domain/move-checklist.ts';
 
-/** From the table of states in the requirements: from, to. The finding is passed on to action only by signing it. */
+/**
+ * From the table of states in the requirements: from, to. The finding is passed on to action by signing it, or by the
+ * manager after a signature that said that no action is needed; that signature leaves the state as it is.
+ */
 const agreed = [
   'reported>triage', 'triage>returned', 'returned>triage', 'triage>duplicate', 'triage>investigation', 'triage>corrective-action', 'triage>closed',
-  'investigation>findings', 'findings>investigation', 'findings>corrective-action', 'corrective-action>closed', 'corrective-action>investigation',
+  'investigation>findings', 'findings>investigation', 'findings>corrective-action', 'findings>corrective-action', 'findings>findings', 'findings>closed', 'corrective-action>closed', 'corrective-action>investigation',
   'closed>investigation', 'closed>corrective-action', 'duplicate>triage',
 ];
 
 const nothing: MoveFacts = {
   eventType: null, hazardStillPresent: null, interimControl: null, investigatorId: null, risk: null, anyoneHurt: null, onsetEarliestAt: null, onsetLatestAt: null, opticStated: false,
   attachedReconstructions: 0, reconstructionWaiver: null, alternativesExamined: 0, focusedHypotheses: 0, untestedWithoutWhy: 4, photoCount: 0, evidenceWaiver: null, finding: null,
-  openReviewComments: 0, actionsOpen: 0, actionsUnproven: 0, actionsNotEffective: 0, effectivenessWaiver: null, lesson: null, externalReports: null, closedAt: null,
+  openReviewComments: 0, actionsOpen: 0, actionsUnproven: 0, actionsNotEffective: 0, effectivenessWaiver: null, noActionReason: null, lesson: null, externalReports: null, closedAt: null,
 };
 const draft = { authorId: 'author', state: 'draft', limits: 'No skyline.', opinion: 'Focused sunlight.', certainty: 'possible' };
 const complete: MoveFacts = {
@@ -104,6 +107,32 @@ describe('review', () => {
   });
 });
 
+describe('no action needed', () => {
+  const signed = { finding: { ...draft, state: 'signed' }, noActionReason: 'The lamp is gone.' };
+  test('is signed like any finding, once', () => {
+    expect(needs('sign-no-action', { openReviewComments: 0 })).toEqual([]);
+    expect(needs('sign-no-action', { openReviewComments: 1 })).toHaveLength(1);
+    for (const id of ['sign', 'sign-no-action', 'send-back']) expect(needs(id, { ...signed, openReviewComments: id === 'send-back' ? 1 : 0 }).join()).toContain('signed already');
+  });
+  test('closes when all is there', () => expect(needs('close-no-action', signed)).toEqual([]));
+  test.each([
+    [{ ...signed, finding: draft }, 'signs the finding first'],
+    [{ ...signed, finding: null }, 'signs the finding first'],
+    [{ ...signed, noActionReason: null }, 'no action is needed, and why'],
+    [{ ...signed, openReviewComments: 1 }, 'comment'],
+    [{ ...signed, actionsOpen: 3 }, '3 still open'],
+    [{ ...signed, hazardStillPresent: 'yes', interimControl: 'Sheet.' }, 'still there'],
+  ] as const)('with %j asks for it', (change, word) => {
+    const sentences = needs('close-no-action', change);
+    expect(sentences).toHaveLength(1);
+    expect(sentences[0]).toContain(word);
+  });
+  test('is passed to action after all only once it is signed', () => {
+    expect(needs('pass-to-action', signed)).toEqual([]);
+    expect(needs('pass-to-action', { finding: draft })).toHaveLength(1);
+  });
+});
+
 describe('closing', () => {
   const signed = { finding: { ...draft, state: 'signed' } };
   test('needs nothing more when all is there', () => expect(needs('close', signed)).toEqual([]));
@@ -131,7 +160,7 @@ describe('what is typed with a move', () => {
   const now = new Date('2026-07-16T09:00:00Z');
   const typed = (id: string, reason: string, extra: object = {}, since = now) => Object.keys(missingInput(move(id), { reason, extra, now, since }));
 
-  test.each(['mark-duplicate', 'straight-to-action', 'close-at-triage', 'back-to-investigation', 'reopen-investigation', 'reopen-action'])('%s needs a reason that is more than spaces', (id) => {
+  test.each(['mark-duplicate', 'straight-to-action', 'close-at-triage', 'sign-no-action', 'close-no-action', 'pass-to-action', 'back-to-investigation', 'reopen-investigation', 'reopen-action'])('%s needs a reason that is more than spaces', (id) => {
     expect(typed(id, '  ')).toContain('reason');
     expect(typed(id, 'A new fact.')).not.toContain('reason');
     expect(asksReason(id)).toBe(true);
@@ -171,6 +200,7 @@ describe('the checklist', () => {
     actionsUnproven: fc.integer({ min: 0, max: 1 }),
     actionsNotEffective: fc.integer({ min: 0, max: 1 }),
     effectivenessWaiver: fc.constantFrom(null, 'Glass removed.'),
+    noActionReason: fc.constantFrom(null, 'Lamp already replaced.'),
     lesson: fc.constantFrom(null, 'Look up.'),
     externalReports: fc.constantFrom(null, 'Not needed.'),
     closedAt: fc.constant(null),

@@ -136,3 +136,23 @@ describe('the way of the light', () => {
     expect(build({}).input?.seed).toBe(118);
   });
 });
+
+describe('the origin of a value', () => {
+  const record = { number: 2, nature: 'station' as const, sourceName: 'Moor station', station: 'Moor', stationDistanceKm: 4, intervalMin: 10, values: [{ startUtc: '2026-05-09T09:00:00.000Z', endUtc: '2026-05-09T14:10:00.000Z', directWm2: 700 }] };
+  const withRecord = (kind: 'hand' | 'file') => {
+    const weather = [{ ...record, kind }];
+    return reconstructionInput({ scene: sceneSchema.parse({}), site, times, weather, seed: 118, recurrenceToUtc: '2027-05-09T00:00:00.000Z' }).origins.find((one) => one.field === 'Direct irradiance')?.origin;
+  };
+
+  test('is the file for irradiance that was imported, and a person for what was entered by hand', () => {
+    expect(withRecord('file')).toBe('file');
+    expect(withRecord('hand')).toBe('measured');
+  });
+
+  test('is told for the place and for every measure of the mark', () => {
+    const { origins } = build({ mark: { bearingDeg: m(330, 3), elevationDeg: m(-45, 3), distanceMm: m(91, 2), lengthMm: { ...m(12), method: 'photo' }, widthMm: m(4), surfaceAzimuthDeg: { value: 156, method: 'estimated' } } });
+    expect(origins.find((one) => one.field === 'Place')).toMatchObject({ value: '53.50, -1.60, 60 m above sea', origin: 'reported' });
+    expect(origins.find((one) => one.field === 'Mark, length')).toMatchObject({ value: '12 mm', origin: 'measured', note: 'from a photo' });
+    expect(origins.find((one) => one.field === 'Surface of the target faces')).toMatchObject({ origin: 'reported', note: 'estimated' });
+  });
+});

@@ -41,6 +41,7 @@ export function sourceOf(values: Partial<CaseBeforeRedaction> = {}): CaseBeforeR
     finding: null,
     actions: [],
     returnDays: [],
+    items: [],
     moves: [],
     people: [],
     staff: [],

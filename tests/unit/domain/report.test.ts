@@ -2,7 +2,8 @@ import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { receiptPattern } from '#app/domain/incident.ts';
 import { readNumber, readReportedOptic } from '#app/domain/report-optic.ts';
-import { readReceipt, readReport, receiptFrom, titleOfReport } from '#app/domain/report.ts';
+import { readReport } from '#app/domain/report.ts';
+import { readReceipt, receiptFrom, titleOfReport } from '#app/domain/report-receipt.ts';
 
 const site = { id: 'site-1', organisationId: 'organisation-1', name: 'Kestwick Court Block C', code: 'KC-C', zone: 'Europe/London' };
 const now = new Date('2026-05-09T14:12:00Z');
@@ -35,7 +36,7 @@ describe('a report', () => {
   test('asks the age of the hurt person only when somebody was hurt', () => {
     const age = (anyoneHurt: string) => {
       const reading = readReport({ ...four, anyoneHurt, hurtAgeBand: 'under-16' }, { site, now });
-      return reading.ok ? reading.report.hurtAgeBand : 'not read';
+      return reading.ok ? (reading.report.hurt?.ageBand ?? null) : 'not read';
     };
     expect([age('no'), age('yes')]).toEqual([null, 'under-16']);
   });
@@ -50,7 +51,7 @@ describe('a report', () => {
   });
 
   test('never throws, whatever is typed', () => {
-    const names = ['foundLocal', 'foundNowAt', 'lastSoundLocal', 'narrative', 'latitudeDeg', 'longitudeDeg', 'opticKind', 'optic-diameterMm', 'contactEmail', 'sighting', 'foundWhen'];
+    const names = ['foundLocal', 'foundNowAt', 'lastSoundLocal', 'narrative', 'latitudeDeg', 'longitudeDeg', 'opticKind', 'optic-bottle-diameterMm', 'opticPlace', 'wall-1-from', 'wall-1-to', 'opticFacesDeg', 'contactEmail', 'sighting', 'foundWhen'];
     const typed = fc.dictionary(fc.constantFrom(...names), fc.string({ unit: 'binary' }));
     fc.assert(fc.property(typed, (values) => typeof readReport({ ...four, opticKind: 'bottle', foundWhen: 'at', ...values }, { site, now }).ok === 'boolean'));
   });
@@ -96,7 +97,7 @@ describe('a receipt', () => {
 
 describe('a reported size', () => {
   const diameter = (typed: Record<string, string>) => {
-    const { optic, errors } = readReportedOptic({ opticKind: 'bottle', ...Object.fromEntries(Object.entries(typed).map(([name, value]) => [`optic-diameterMm${name}`, value])) });
+    const { optic, errors } = readReportedOptic({ opticKind: 'bottle', ...Object.fromEntries(Object.entries(typed).map(([name, value]) => [`optic-bottle-diameterMm${name}`, value])) });
     return { size: optic.diameterMm, errors: Object.keys(errors) };
   };
 
@@ -111,11 +112,11 @@ describe('a reported size', () => {
   });
 
   test.each(['about 6', '1,200', '1.2.3', '-5', '0', '99999999'])('%j is refused beside the box', (value) => {
-    expect(diameter({ '': value }).errors).toEqual(['optic-diameterMm']);
+    expect(diameter({ '': value }).errors).toEqual(['optic-bottle-diameterMm']);
   });
 
   test('that does not belong to the chosen kind is ignored', () => {
-    expect(readReportedOptic({ opticKind: 'metal-trim', 'optic-diameterMm': 'nonsense' })).toMatchObject({ errors: {}, optic: { kind: 'metal-trim' } });
+    expect(readReportedOptic({ opticKind: 'metal-trim', 'optic-bottle-diameterMm': 'nonsense' })).toMatchObject({ errors: {}, optic: { kind: 'metal-trim' } });
   });
 
   test.each([['12.5', 12.5], ['12,5', 12.5], [' 7 ', 7], ['−3', -3], ['1,250', null], ['1 200', null], ['', null]])('number %j is read as %j', (text, value) => {

@@ -1,7 +1,8 @@
 import { describe, expect, test } from 'vitest';
 import { sceneSchema } from '#app/domain/scene.ts';
 import type { Scene } from '#app/domain/scene.ts';
-import { readSceneForm, sceneToFields } from '#app/domain/scene-form.ts';
+import { readSceneForm } from '#app/domain/scene-form.ts';
+import { sceneToFields } from '#app/domain/scene-form-fields.ts';
 import { allSceneFields, fieldName } from '#app/domain/scene-fields.ts';
 import { readDniLines, readNumber, readSkylineLines } from '#app/domain/scene-lines.ts';
 

@@ -46,7 +46,7 @@ let port = 0;
 
 beforeAll(async () => {
   const app = express();
-  app.use(securityHeaders({ photoOrigin: 'https://photos.example', https: true, development: false }));
+  app.use(securityHeaders({ photoOrigin: 'https://photos.example', tileUrl: null, https: true, development: false }));
   app.use(pageHandler({ build, mode: 'test', bodyLimitBytes }));
   server = createServer(app).listen(0, '127.0.0.1');
   await once(server, 'listening');

@@ -34,6 +34,8 @@ export interface FocusModel {
   readonly startsAt: Vector;
   /** Half the optic's extent along its generators. [m] */
   readonly lineHalfLengthM: number;
+  /** Half the optic's greatest extent across the light; for a line optic, across the line. [m] */
+  readonly halfWidthM: number;
   /** True for optics that are turned by hand or by a drive. */
   readonly moves: boolean;
   /** True where the light comes back from the face that it meets; the target may then stand in direct sun as well. */

@@ -98,71 +98,99 @@ function landingsFor(pane: PaneCells, normal: Vector, right: Vector, top: Vector
   return out;
 }
 
-/** Insulating glass pane that bows inward: a cell-by-cell mirror with the plate's own shape. */
-export function bowedPaneModel(optic: PaneOptic): FocusModel {
+/** A pane made ready: its cells, its axes and what blurs its light. */
+interface ReadyPane {
+  readonly optic: PaneOptic;
+  readonly cells: PaneCells;
+  readonly normal: Vector;
+  readonly right: Vector;
+  readonly top: Vector;
+  readonly meanFocalM: number;
+  readonly slopeBlurRad: number;
+}
+
+function readyPane(optic: PaneOptic): ReadyPane {
   const normal = fromAzimuthElevation(optic.axisAzimuthDeg, optic.axisElevationDeg);
   const right = fromAzimuthElevation(optic.axisAzimuthDeg + 90, 0);
-  const top = cross(right, normal);
   const pane = paneCells(optic);
-  const focusing = optic.centreBowM > 0 && (optic.coatingSurface === undefined || optic.coatingSurface <= 2);
-  const shortRadiusM = Math.min(Math.abs(pane.radiusXM), Math.abs(pane.radiusYM));
-  const meanFocalM = Math.sqrt(Math.abs(pane.radiusXM * pane.radiusYM)) / 2;
-  const slopeBlurRad = (4 * (optic.slopeErrorMrad ?? slopeErrors['bowed-pane'].slopeErrorMrad)) / 1000;
-  /** The sharpest distance changes slowly with the incidence, so it is kept by steps of some two degrees. */
-  const focusByIncidence = new Map<string, number>();
-  const beamFor = (towardsSun: Vector, halfAngle: number): Beam | null => {
-    const cosIncidence = dot(towardsSun, normal);
-    if (cosIncidence <= 0.02) return null;
-    const direction = mirrored(towardsSun, normal);
-    let known: Landings | null = null;
-    const landings = (): Landings => (known ??= landingsFor(pane, normal, right, top, towardsSun, direction));
-    // A cell's own footprint shrinks towards the focus; without it the far field would fall apart into dots.
-    const blur = (z: number): number =>
-      Math.hypot(z * Math.tan(halfAngle), z * slopeBlurRad, (0.6 * Math.max(optic.widthM, optic.heightM) * (1 - z / meanFocalM)) / cells);
-    const lightM2 = optic.widthM * optic.heightM * cosIncidence * optic.reflectance;
-    const concentration = (z: number, offset: number, disc: number): number => {
-      if (z <= 0) return 0;
-      const { u0, u1, v0, v1 } = landings();
-      const radius = blur(z);
-      let share = 0;
-      for (let k = 0; k < u0.length; k++) {
-        const distance = Math.hypot((u0[k] ?? 0) + (u1[k] ?? 0) * z - offset, (v0[k] ?? 0) + (v1[k] ?? 0) * z);
-        share += circleOverlapM2(radius, disc / 2, distance);
-      }
-      return (lightM2 * share) / (u0.length * Math.PI * radius * radius) / ((Math.PI * disc * disc) / 4);
-    };
-    return {
-      direction, tilt: Math.acos(Math.min(1, cosIncidence)), across: null, concentration,
-      get focusM() {
-        const key = `${Math.round(dot(towardsSun, right) * 25)}/${Math.round(dot(towardsSun, top) * 25)}`;
-        let focusM = focusByIncidence.get(key);
-        if (focusM === undefined) {
-          focusM = sharpestDistanceM((z) => concentration(z, 0, 2 * z * Math.tan(halfAngle)), shortRadiusM / 2, 0.5, 2.2);
-          focusByIncidence.set(key, focusM);
-        }
-        return focusM;
-      },
-      spotDiameterM: (z) => {
-        const { u0, u1, v0, v1 } = landings();
-        const distances = Array.from(u0, (value, k) => Math.hypot(value + (u1[k] ?? 0) * z, (v0[k] ?? 0) + (v1[k] ?? 0) * z));
-        distances.sort((p, q) => p - q);
-        return 2 * Math.hypot(distances[Math.floor(distances.length / 2)] ?? 0, z * Math.hypot(Math.tan(halfAngle), slopeBlurRad));
-      },
-    };
+  return {
+    optic, normal, right, cells: pane,
+    top: cross(right, normal),
+    meanFocalM: Math.sqrt(Math.abs(pane.radiusXM * pane.radiusYM)) / 2,
+    slopeBlurRad: (4 * (optic.slopeErrorMrad ?? slopeErrors['bowed-pane'].slopeErrorMrad)) / 1000,
   };
+}
+
+/** Radius of the spot that one cell throws. A cell's own footprint shrinks towards the focus; without it the far field would fall apart into dots. [m] */
+function cellBlurM({ optic, meanFocalM, slopeBlurRad }: ReadyPane, halfAngle: number, z: number): number {
+  const footprint = (0.9 * Math.max(optic.widthM, optic.heightM) * (1 - z / meanFocalM)) / cells;
+  return Math.hypot(z * Math.tan(halfAngle), z * slopeBlurRad, footprint);
+}
+
+/** Share of the cells' light on a disc, over its area. [1/m²] */
+function densityOnDisc({ u0, u1, v0, v1 }: Landings, z: number, offset: number, disc: number, blurM: number): number {
+  let share = 0;
+  for (let k = 0; k < u0.length; k++) {
+    const distance = Math.hypot((u0[k] ?? 0) + (u1[k] ?? 0) * z - offset, (v0[k] ?? 0) + (v1[k] ?? 0) * z);
+    share += circleOverlapM2(blurM, disc / 2, distance);
+  }
+  return share / (u0.length * Math.PI * blurM * blurM) / ((Math.PI * disc * disc) / 4);
+}
+
+/** Diameter round the chief ray that holds half of the cells' light. [m] */
+function halfLightDiameterM({ u0, u1, v0, v1 }: Landings, z: number, imageRad: number): number {
+  const distances = Array.from(u0, (value, k) => Math.hypot(value + (u1[k] ?? 0) * z, (v0[k] ?? 0) + (v1[k] ?? 0) * z));
+  distances.sort((p, q) => p - q);
+  return 2 * Math.hypot(distances[Math.floor(distances.length / 2)] ?? 0, z * imageRad);
+}
+
+/** Light of one sun. @param focusByIncidence Sharpest distances kept from sun to sun, by steps of some two degrees. */
+function paneBeam(pane: ReadyPane, towardsSun: Vector, halfAngle: number, focusByIncidence: Map<string, number>): Beam | null {
+  const { optic, normal, right, top } = pane;
+  const cosIncidence = dot(towardsSun, normal);
+  if (cosIncidence <= 0.02) return null;
+  const direction = mirrored(towardsSun, normal);
+  let known: Landings | null = null;
+  const landings = (): Landings => (known ??= landingsFor(pane.cells, normal, right, top, towardsSun, direction));
+  const lightM2 = optic.widthM * optic.heightM * cosIncidence * optic.reflectance;
+  const concentration = (z: number, offset: number, disc: number): number =>
+    z <= 0 ? 0 : lightM2 * densityOnDisc(landings(), z, offset, disc, cellBlurM(pane, halfAngle, z));
+  return {
+    direction, tilt: Math.acos(Math.min(1, cosIncidence)), across: null, concentration,
+    get focusM() {
+      const key = `${Math.round(dot(towardsSun, right) * 25)}/${Math.round(dot(towardsSun, top) * 25)}`;
+      let focusM = focusByIncidence.get(key);
+      if (focusM === undefined) {
+        const shortFocalM = Math.min(Math.abs(pane.cells.radiusXM), Math.abs(pane.cells.radiusYM)) / 2;
+        focusM = sharpestDistanceM((z) => concentration(z, 0, 2 * z * Math.tan(halfAngle)), shortFocalM, 0.5, 2.2);
+        focusByIncidence.set(key, focusM);
+      }
+      return focusM;
+    },
+    spotDiameterM: (z) => halfLightDiameterM(landings(), z, Math.hypot(Math.tan(halfAngle), pane.slopeBlurRad)),
+  };
+}
+
+/** Insulating glass pane that bows inward: a cell-by-cell mirror with the plate's own shape. */
+export function bowedPaneModel(optic: PaneOptic): FocusModel {
+  const pane = readyPane(optic);
+  const focusing = optic.centreBowM > 0 && (optic.coatingSurface === undefined || optic.coatingSurface <= 2);
+  const shortFocalM = Math.min(Math.abs(pane.cells.radiusXM), Math.abs(pane.cells.radiusYM)) / 2;
+  const focusByIncidence = new Map<string, number>();
   return {
     focusKind: 'point',
-    focalLengthM: focusing ? shortRadiusM / 2 : -shortRadiusM / 2,
+    focalLengthM: focusing ? shortFocalM : -shortFocalM,
     generator: null,
     startsAt: surveyOrigin,
     lineHalfLengthM: 0,
+    halfWidthM: Math.hypot(optic.widthM, optic.heightM) / 2,
     moves: false,
     reflects: true,
     throughput: optic.reflectance,
-    beamFor,
+    beamFor: (towardsSun, halfAngle) => paneBeam(pane, towardsSun, halfAngle, focusByIncidence),
     requiredSun: (towardsMark) => {
-      const sun = mirrored(towardsMark, normal);
-      return dot(sun, normal) > 0 ? sun : null;
+      const sun = mirrored(towardsMark, pane.normal);
+      return dot(sun, pane.normal) > 0 ? sun : null;
     },
   };
 }

@@ -71,6 +71,7 @@ export function cylinderModel(optic: CylinderOptic): FocusModel {
     generator,
     startsAt: surveyOrigin,
     lineHalfLengthM: optic.lengthM / 2,
+    halfWidthM: radiusM,
     moves: false,
     reflects: false,
     throughput: medium.internalTransmittance(optic.diameterM),
@@ -111,7 +112,7 @@ export function curvedReflectorModel(optic: CurvedReflectorOptic): FocusModel {
   const generator = reflectorGenerator(optic, normal);
   const slopeMrad = optic.slopeErrorMrad ?? slopeErrors[optic.kind].slopeErrorMrad;
   // Flat panes stand a little off the ideal curve, each in its own way.
-  const slopeBlurRad = (4 * Math.hypot(slopeMrad, optic.paneWidthM === undefined ? 0 : paneTiltMrad)) / 1000;
+  const slopeBlurRad = (4 * Math.hypot(slopeMrad, optic.paneWidthM === undefined ? 0 : optic.paneTiltMrad ?? paneTiltMrad)) / 1000;
   const kept: FocusCache = new Map();
   return {
     focusKind: 'line',
@@ -119,6 +120,7 @@ export function curvedReflectorModel(optic: CurvedReflectorOptic): FocusModel {
     generator,
     startsAt: surveyOrigin,
     lineHalfLengthM: optic.lengthM / 2,
+    halfWidthM: optic.chordM / 2,
     moves: false,
     reflects: true,
     throughput: optic.reflectance,

@@ -20,7 +20,7 @@ interface RoundShape {
   readonly fan: Fan;
   readonly focalLengthM: number;
   readonly apertureM2: number;
-  readonly apertureDiameterM: number;
+  readonly halfWidthM: number;
   readonly throughput: number;
   /** Blur radius per metre of distance from the slope error. [rad] */
   readonly slopeBlurRad: number;
@@ -78,7 +78,7 @@ function roundModel(shape: RoundShape): FocusModel {
     return shape.axis !== null && dot(sun, shape.axis) <= 0 ? null : sun;
   };
   return {
-    focusKind: 'point', focalLengthM: shape.focalLengthM, generator: null, startsAt: surveyOrigin, lineHalfLengthM: 0,
+    focusKind: 'point', focalLengthM: shape.focalLengthM, generator: null, startsAt: surveyOrigin, lineHalfLengthM: 0, halfWidthM: shape.halfWidthM,
     moves: shape.moves, reflects: shape.reflects, throughput: shape.throughput, beamFor, requiredSun,
   };
 }
@@ -130,7 +130,7 @@ function sphereModel(optic: SphereOptic): FocusModel {
     fan: ballFan(true, radiusM, medium),
     focalLengthM: ballFocalLengthM(radiusM, medium.refractiveIndex),
     apertureM2: Math.PI * radiusM * radiusM,
-    apertureDiameterM: optic.diameterM,
+    halfWidthM: optic.diameterM / 2,
     throughput: medium.internalTransmittance(optic.diameterM),
     slopeBlurRad: slopeBlur(optic, medium.refractiveIndex),
     axis: null, reflects: false, moves: false, tiltEffect: untilted,
@@ -149,7 +149,11 @@ function lensModel(optic: LensOptic): FocusModel {
     );
   }
   const sag = radiusM - Math.sqrt(radiusM * radiusM - halfM * halfM);
-  const thicknessM = optic.centreThicknessM ?? (biconvex ? 2 : 1) * sag + 0.001;
+  const thinnestM = (biconvex ? 2 : 1) * sag;
+  if (optic.centreThicknessM !== undefined && optic.centreThicknessM < 0.99 * thinnestM) {
+    throw new RangeError(`optic.centreThicknessM ${optic.centreThicknessM} and optic.diameterM ${optic.diameterM} disagree: at this focal length the middle is at least ${thinnestM.toPrecision(3)} m thick.`);
+  }
+  const thicknessM = optic.centreThicknessM ?? thinnestM + 0.001;
   const curvedFirst = biconvex || optic.faceToSun === 'curved';
   const first = curvedFirst ? radiusM : Number.POSITIVE_INFINITY;
   const second = biconvex || !curvedFirst ? -radiusM : Number.POSITIVE_INFINITY;
@@ -158,7 +162,7 @@ function lensModel(optic: LensOptic): FocusModel {
     fan: lensFan(first, second, thicknessM, halfM, medium, biconvex ? nodalM : curvedFirst ? thicknessM - thicknessM / n : thicknessM),
     focalLengthM: optic.focalLengthM,
     apertureM2: Math.PI * halfM * halfM,
-    apertureDiameterM: optic.diameterM,
+    halfWidthM: optic.diameterM / 2,
     throughput: medium.internalTransmittance(thicknessM),
     slopeBlurRad: slopeBlur(optic, n),
     axis: fromAzimuthElevation(optic.axisAzimuthDeg, optic.axisElevationDeg),
@@ -176,7 +180,7 @@ function mirrorModel(optic: MirrorOptic): FocusModel {
     fan: mirrorFan(optic.figure, optic.radiusM, halfM, optic.reflectance),
     focalLengthM: optic.radiusM / 2,
     apertureM2: Math.PI * halfM * halfM,
-    apertureDiameterM: optic.diameterM,
+    halfWidthM: optic.diameterM / 2,
     throughput: optic.reflectance,
     slopeBlurRad: slopeBlur(optic, null),
     axis: fromAzimuthElevation(optic.axisAzimuthDeg, optic.axisElevationDeg),
@@ -193,7 +197,7 @@ function sheetModel(optic: FresnelOptic | TelescopeOptic): FocusModel {
     fan: idealFan(optic.focalLengthM, diameterM / 2, optic.transmittance, fresnel ? fresnelColourSpread : 0),
     focalLengthM: optic.focalLengthM,
     apertureM2,
-    apertureDiameterM: diameterM,
+    halfWidthM: fresnel ? Math.hypot(optic.widthM, optic.heightM) / 2 : diameterM / 2,
     throughput: optic.transmittance,
     slopeBlurRad: slopeBlur(optic, 1.5),
     axis: fromAzimuthElevation(optic.axisAzimuthDeg, optic.axisElevationDeg),

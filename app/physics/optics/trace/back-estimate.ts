@@ -4,7 +4,7 @@ import type { LocalPlane } from './bundle.ts';
 import { frameAbout } from './frame.ts';
 import type { BackTrace } from './kernel.ts';
 import { batchCount } from './kernel.ts';
-import { ScrambledSobol } from './sobol.ts';
+import { ScrambledSobol } from '#app/physics/sobol.ts';
 
 /**
  * Concentration on a disc by tracing back from it: independent of the forward rays and exact by the invariance of

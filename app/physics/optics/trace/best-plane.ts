@@ -2,7 +2,7 @@
 import type { Vector } from '#app/physics/vector.ts';
 import { dot, scale } from '#app/physics/vector.ts';
 import type { LocalPlane, PlaneHits } from './bundle.ts';
-import { cutPlane } from './bundle.ts';
+import { cutPlane, raysWithin } from './bundle.ts';
 import { addScaled } from './frame.ts';
 import type { LineHint, SpotFinder } from './hot-spot.ts';
 import type { TracedOptic } from './trace-bundle.ts';
@@ -51,6 +51,9 @@ export interface PlaneScan {
   readonly concentration: number;
 }
 
+/** Rays of each batch in the first, coarse look along the axis. */
+const firstLook = 500;
+
 /** Rays that a hot spot should rest on in a quick look. */
 const fewestInScan = 60;
 
@@ -78,12 +81,8 @@ function scanRadius(traced: TracedOptic, distanceM: number, radius: number, perB
 }
 
 /** All rays over those looked at. */
-function sharePerBatch(traced: TracedOptic, perBatch: number): number {
-  const { bundle } = traced;
-  let looked = 0;
-  bundle.batchEnd.forEach((end, b) => {
-    looked += Math.min(end - bundle.batchStart(b), perBatch);
-  });
+function sharePerBatch({ bundle }: TracedOptic, perBatch: number): number {
+  const looked = raysWithin(bundle, perBatch);
   return looked > 0 ? bundle.count / looked : 1;
 }
 
@@ -123,8 +122,8 @@ export function bestDistances(traced: TracedOptic, radii: readonly number[], fin
   const steps = 18;
   const ratio = (high / low) ** (1 / steps);
   const coarse = Array.from({ length: steps + 1 }, (_, i) => low * ratio ** i);
-  const wide = radii.map((radius) => scanRadius(traced, Math.max(clearanceM, 0.97 * f), radius, 800, finder, hits));
-  const scans = scanPlanes(traced, coarse, wide, 800, finder, hits);
+  const wide = radii.map((radius) => scanRadius(traced, Math.max(clearanceM, 0.97 * f), radius, firstLook, finder, hits));
+  const scans = scanPlanes(traced, coarse, wide, firstLook, finder, hits);
   return radii.map((radius, k) => {
     const scan = scans[k] ?? [];
     let centre = scan[bestOf(scan)]?.distanceM ?? f;
@@ -133,7 +132,7 @@ export function bestDistances(traced: TracedOptic, radii: readonly number[], fin
     for (let round = 0; round < 5; round++) {
       width /= 2.5;
       const around = Array.from({ length: 5 }, (_, i) => Math.max(clearanceM, centre * (1 + width * (i - 2))));
-      const perBatch = round === 0 ? 1000 : 2000;
+      const perBatch = round === 0 ? 800 : 1600;
       const [fine = []] = scanPlanes(traced, around, [scanRadius(traced, centre, radius, perBatch, finder, hits)], perBatch, finder, hits);
       const best = bestOf(fine);
       const flat = Math.min(...fine.map((s) => s.concentration)) > 0.93 * (fine[best]?.concentration ?? 0);

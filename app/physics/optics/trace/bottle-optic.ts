@@ -6,7 +6,7 @@ import type { OcclusionTestOf } from './body-spec.ts';
 import { kernelOf } from './body-spec.ts';
 import { addScaled, frameAbout, unitOf } from './frame.ts';
 import type { Kernel } from './kernel.ts';
-import { slopeError } from './slope-defaults.ts';
+import { slopeError } from './slope-error.ts';
 import { indexForFocus } from './spectral.ts';
 import type { SunDisc } from './sun-sampling.ts';
 import type { TraceRequest } from './trace-model.ts';

@@ -101,6 +101,11 @@ export class RayBundle {
   }
 }
 
+/** Rays among the first `perBatch` of every batch. */
+export function raysWithin(bundle: RayBundle, perBatch: number): number {
+  return bundle.batchEnd.reduce((sum, end, b) => sum + Math.min(end - bundle.batchStart(b), perBatch), 0);
+}
+
 /** Plane of a receiver in the optic's local axes; the normal looks towards the light. */
 export interface LocalPlane {
   readonly origin: Vector;

@@ -30,7 +30,12 @@ export interface LineHint {
   readonly half: number;
 }
 
-const climbRays = 16000;
+/** Hits that a climb looks at: the place of the disc moves by far less than its radius with more. */
+const climbRays = 5000;
+
+/** Hits that a search of the grid looks at first, and those of them on a disc that place it well enough. */
+const thinnedHits = 12_000;
+const fewestThinned = 300;
 const eighths = Float64Array.from({ length: 8 }, (_, k) => Math.cos((k * Math.PI) / 4));
 
 /** Finds hot spots in plane hits; its arrays are reused from search to search. */
@@ -45,8 +50,11 @@ export class SpotFinder {
   readonly #nearW: Float64Array;
   #meanX = 0;
   #meanY = 0;
-  #thinning = 1;
   #steps = 3;
+  /** Hits that the last gathering found, before it thinned them. */
+  #gathered = 0;
+  /** Every how many hits a search of the grid looks at. Odd, so that it falls on no subset of the low-discrepancy points. */
+  #stride = 1;
 
   constructor(capacity: number) {
     this.#coarse = new CellSums(capacity);
@@ -72,6 +80,11 @@ export class SpotFinder {
     const meanWeight = total / (to - from);
     const enough = Math.min(fewest, (to - from) / 4);
     this.#steps = look === 'quick' ? 1 : 3;
+    if (!line && to - from > 2 * thinnedHits) {
+      const spot = this.#findThinned(hits, radius, meanWeight, from, to);
+      if (spot) return spot;
+    }
+    this.#stride = 1;
     for (let r = radius; ; r *= 2) {
       const disc = line ? this.#findAcross(hits, r, line, from, to) : this.#findOnGrid(hits, r, enough * meanWeight, from, to);
       const rays = disc.power / meanWeight;
@@ -82,6 +95,14 @@ export class SpotFinder {
     }
   }
 
+  /** Search among a part of the hits; null where that puts too few of them on the disc to place it. */
+  #findThinned(hits: PlaneHits, radius: number, meanWeight: number, from: number, to: number): Spot | null {
+    this.#stride = Math.ceil((to - from) / thinnedHits) | 1;
+    const disc = this.#findOnGrid(hits, radius, (fewestThinned / this.#stride) * meanWeight, from, to);
+    const rays = disc.power / meanWeight;
+    return rays < fewestThinned * this.#stride ? null : { x: disc.x, y: disc.y, radius, concentration: disc.power / (Math.PI * radius * radius), rays };
+  }
+
   /**
    * Cells of four radii first. The best of them gives a disc; only where cells hold more than that disc can a better
    * one lie, and only there cells of half a radius are filled.
@@ -89,9 +110,9 @@ export class SpotFinder {
   #findOnGrid(hits: PlaneHits, radius: number, enough: number, from: number, to: number): Disc {
     const coarse = this.#coarse;
     const inverse = 1 / (4 * radius);
-    coarse.clear(to - from);
+    coarse.clear(Math.ceil((to - from) / this.#stride));
     let strongest = 0;
-    for (let i = from; i < to; i++) {
+    for (let i = from; i < to; i += this.#stride) {
       const k = coarse.add(Math.floor(hits.x[i]! * inverse), Math.floor(hits.y[i]! * inverse), hits.weight[i]!);
       this.#coarseSlot[i] = k;
       if (coarse.sum[k] === coarse.highest) strongest = k;
@@ -106,7 +127,7 @@ export class SpotFinder {
       const k = coarse.slots[i]!;
       // A quick look passes over cells at the foot of the distribution.
       if (this.#steps === 1 && coarse.sum[k]! < 0.35 * coarse.highest) continue;
-      if (this.#promising[k] === 0 && coarse.around(k, false) > first.power) {
+      if (this.#promising[k] === 0 && coarse.around(k, false) * this.#stride > first.power) {
         this.#promising[k] = 1;
         more = true;
       }
@@ -127,8 +148,8 @@ export class SpotFinder {
     const fine = this.#fine;
     const cell = radius / 2;
     const inverse = 1 / cell;
-    fine.clear(to - from);
-    for (let i = from; i < to; i++) {
+    fine.clear(Math.ceil((to - from) / this.#stride));
+    for (let i = from; i < to; i += this.#stride) {
       if (this.#promising[this.#coarseSlot[i]!] === 0) continue;
       fine.add(Math.floor(hits.x[i]! * inverse), Math.floor(hits.y[i]! * inverse), hits.weight[i]!);
     }
@@ -180,7 +201,21 @@ export class SpotFinder {
         }
       }
     }
-    return { x, y, radius, power: power * this.#thinning };
+    // The place may come from a part of the hits; the power is that of all.
+    return { x, y, radius, power: this.#powerOfAll(hits, x, y, radius) };
+  }
+
+  /** Power on a disc inside the reach of the last gathering, of all its hits. */
+  #powerOfAll(hits: PlaneHits, x: number, y: number, radius: number): number {
+    const r2 = radius * radius;
+    let sum = 0;
+    for (let k = 0; k < this.#gathered; k++) {
+      const i = this.#index[k]!;
+      const dx = hits.x[i]! - x;
+      const dy = hits.y[i]! - y;
+      if (dx * dx + dy * dy <= r2) sum += hits.weight[i]!;
+    }
+    return sum;
   }
 
   /** Hits near a point, thinned evenly to what a climb needs. */
@@ -192,6 +227,7 @@ export class SpotFinder {
       const dy = hits.y[i]! - y0;
       if (dx * dx + dy * dy <= near2) this.#index[count++] = i;
     }
+    this.#gathered = count;
     const stride = Math.max(1, Math.floor(count / climbRays));
     let kept = 0;
     for (let k = 0; k < count; k += stride) {
@@ -201,7 +237,6 @@ export class SpotFinder {
       this.#nearW[kept] = hits.weight[i]!;
       kept++;
     }
-    this.#thinning = kept > 0 ? count / kept : 1;
     return kept;
   }
 

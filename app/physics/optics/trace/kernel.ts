@@ -2,7 +2,7 @@ import type { Vector } from '#app/physics/vector.ts';
 import type { RayBundle } from './bundle.ts';
 import type { Frame } from './frame.ts';
 import type { OcclusionTest } from './occlusion.ts';
-import { ScrambledSobol } from './sobol.ts';
+import { ScrambledSobol } from '#app/physics/sobol.ts';
 import type { SunDisc } from './sun-sampling.ts';
 import { sampleSun } from './sun-sampling.ts';
 import type { TraceAssumption } from './trace-model.ts';

@@ -7,7 +7,7 @@ import { kernelOf } from './body-spec.ts';
 import type { ConvexSet } from './convex-body.ts';
 import { frameAbout, toLocal } from './frame.ts';
 import type { Kernel } from './kernel.ts';
-import { slopeError } from './slope-defaults.ts';
+import { slopeError } from './slope-error.ts';
 import { indexForFocus } from './spectral.ts';
 import type { SunDisc } from './sun-sampling.ts';
 import type { TraceRequest } from './trace-model.ts';

@@ -8,7 +8,7 @@ import type { RayBundle } from './bundle.ts';
 import { frameAbout, toLocal } from './frame.ts';
 import { gaussPair } from './gauss.ts';
 import type { BackTrace, Kernel, Launch, Samples } from './kernel.ts';
-import { slopeError } from './slope-defaults.ts';
+import { slopeError } from './slope-error.ts';
 import type { SunDisc } from './sun-sampling.ts';
 import { relativeRadiance } from './sun-sampling.ts';
 

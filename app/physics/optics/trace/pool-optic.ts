@@ -6,7 +6,7 @@ import { always, kernelOf } from './body-spec.ts';
 import type { Frame } from './frame.ts';
 import { frameAbout } from './frame.ts';
 import type { Kernel } from './kernel.ts';
-import { slopeError } from './slope-defaults.ts';
+import { slopeError } from './slope-error.ts';
 import { indexForFocus } from './spectral.ts';
 import { sphereKernel } from './sphere-optic.ts';
 import type { SunDisc } from './sun-sampling.ts';

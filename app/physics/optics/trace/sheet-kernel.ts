@@ -1,4 +1,5 @@
 /* eslint-disable @typescript-eslint/no-non-null-assertion -- every index is bounded by its loop; a fallback in the hot loops would hide a wrong one as 0 */
+import { paneTiltMrad } from '#app/physics/optics/optic-defaults.data.ts';
 import type { CurvedReflectorOptic, PaneOptic } from '#app/physics/optics/optic.ts';
 import { fresnelReflectance } from '#app/physics/optics/refraction.ts';
 import type { Vector } from '#app/physics/vector.ts';
@@ -9,14 +10,14 @@ import type { RayBundle } from './bundle.ts';
 import { newCrossing, tiltNormal } from './convex-body.ts';
 import type { Frame } from './frame.ts';
 import { frameAbout, toLocal } from './frame.ts';
-import { paneReflectance } from './fresnel.ts';
 import { gaussPair } from './gauss.ts';
 import type { Kernel, Launch, Samples } from './kernel.ts';
+import { paneIndex, paneReflectance } from './pane-reflectance.ts';
 import { centreRadiusCoefficients } from './plate.ts';
 import type { SheetSurface } from './sheet-surface.ts';
 import { bowedPane, panedArc, smoothArc } from './sheet-surface.ts';
 import { sheetBackTrace } from './sheet-back-trace.ts';
-import { slopeError } from './slope-defaults.ts';
+import { slopeError } from './slope-error.ts';
 import type { SunDisc } from './sun-sampling.ts';
 import type { TraceAssumption, TraceRequest } from './trace-model.ts';
 
@@ -133,7 +134,7 @@ const lawOf = (reflectance: number, request: TraceRequest, glass: boolean): Law 
 
 /** Both faces of an uncoated outer pane, absorption in it left out. */
 function clearPane(cosIncidence: number): number {
-  const r = fresnelReflectance(Math.min(1, cosIncidence), 1.523);
+  const r = fresnelReflectance(Math.min(1, cosIncidence), paneIndex);
   return (2 * r) / (1 + r);
 }
 
@@ -182,16 +183,16 @@ export function curvedReflectorKernel(optic: CurvedReflectorOptic, request: Trac
   const frame = frameAbout(axis, optic.generators === 'vertical' ? [0, 0, 1] : [Math.cos(azimuth), -Math.sin(azimuth), 0]);
   const slope = slopeError(optic);
   const paned = optic.paneWidthM !== undefined;
-  const tiltMrad = request.paneTiltMrad ?? 3;
+  const tiltMrad = optic.paneTiltMrad ?? paneTiltMrad;
   const paneHeight = Math.min(optic.lengthM, 3.5);
   const surface =
     optic.paneWidthM === undefined
       ? smoothArc(optic)
-      : panedArc(optic, optic.paneWidthM, paneHeight, request.paneBowM ?? 0, tiltMrad / 1000, request.seed);
+      : panedArc(optic, optic.paneWidthM, paneHeight, optic.paneBowM ?? 0, tiltMrad / 1000, request.seed);
   const setting: TraceAssumption[] =
-    paned && request.paneTiltMrad === undefined
+    paned && optic.paneTiltMrad === undefined
       ? [
-          { field: 'paneTiltMrad', value: '3 mrad', source: 'setting-out tolerance of façade panes 2–5 mrad', verified: false },
+          { field: 'paneTiltMrad', value: `${paneTiltMrad} mrad`, source: 'setting-out tolerance of façade panes 2–5 mrad', verified: false },
           { field: 'paneHeightM', value: `${paneHeight} m`, source: 'storey height, common practice', verified: false },
         ]
       : [];

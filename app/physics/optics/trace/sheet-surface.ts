@@ -2,7 +2,7 @@
 import type { CurvedReflectorOptic } from '#app/physics/optics/optic.ts';
 import { gaussPair } from './gauss.ts';
 import { PlateShape } from './plate.ts';
-import { wordSource } from './sobol.ts';
+import { wordSource } from '#app/physics/sobol.ts';
 
 /**
  * Reflecting sheet that is met from a parametrised surface: u runs along local x, v along local y; O is the origin

@@ -6,7 +6,7 @@ import type { OcclusionTestOf } from './body-spec.ts';
 import { always, kernelOf } from './body-spec.ts';
 import { frameAbout } from './frame.ts';
 import type { Kernel } from './kernel.ts';
-import { slopeError } from './slope-defaults.ts';
+import { slopeError } from './slope-error.ts';
 import { channelsOf, indexForFocus } from './spectral.ts';
 import { traceSphere } from './sphere-kernel.ts';
 import type { SunDisc } from './sun-sampling.ts';

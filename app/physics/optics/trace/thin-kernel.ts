@@ -2,15 +2,17 @@
 import type { FresnelOptic, TelescopeOptic } from '#app/physics/optics/optic.ts';
 import { fromAzimuthElevation } from '#app/physics/vector.ts';
 import type { RayBundle } from './bundle.ts';
+import type { OcclusionTestOf } from './body-spec.ts';
 import { newCrossing, tiltNormal } from './convex-body.ts';
 import { frameAbout, toLocal } from './frame.ts';
 import { gaussPair } from './gauss.ts';
 import type { Kernel, Launch, Samples } from './kernel.ts';
-import { slopeError } from './slope-defaults.ts';
+import { slopeError } from './slope-error.ts';
 import { channelPicker } from './sphere-kernel.ts';
 import type { Channel } from './spectral.ts';
 import { channelsOf, indexForFocus } from './spectral.ts';
 import type { SunDisc } from './sun-sampling.ts';
+import { objectiveBackTrace, sheetLensBackTrace } from './thin-back-trace.ts';
 
 const acrylic = { name: 'acrylic' } as const;
 const facet = newCrossing();
@@ -72,10 +74,12 @@ function fresnelTracer(optic: FresnelOptic, channels: readonly Channel[], sigma:
 }
 
 /** Fresnel sheet; O is its centre, local z looks to the sun. */
-export function fresnelKernel(optic: FresnelOptic, sun: SunDisc): Kernel {
+export function fresnelKernel(optic: FresnelOptic, sun: SunDisc, blockedIn: OcclusionTestOf): Kernel {
   const frame = frameAbout(fromAzimuthElevation(optic.axisAzimuthDeg, optic.axisElevationDeg));
   const towards = toLocal(frame, sun.direction);
   const slope = slopeError(optic);
+  const channels = channelsOf(acrylic, 0.01);
+  const blocked = blockedIn(frame);
   return {
     frame,
     focusKind: 'point',
@@ -90,19 +94,20 @@ export function fresnelKernel(optic: FresnelOptic, sun: SunDisc): Kernel {
     dimensions: slope.sigmaRad > 0 ? 7 : 5,
     outputsPerRay: 1,
     transmittanceBound: optic.transmittance,
-    backTrace: null,
+    backTrace: sheetLensBackTrace(optic, channels, indexForFocus(acrylic), slope.sigmaRad, { ...sun, direction: towards }, (...at) => blocked?.(...at) ?? false),
     assumptions: [...slope.assumptions, { field: 'material', value: 'acrylic, flat face to the sun', source: 'usual make of the sheet, common practice', verified: false }],
     warnings: towards[2] <= 0 ? ['The sun stands behind the sheet.'] : [],
-    trace: fresnelTracer(optic, channelsOf(acrylic, 0.01), slope.sigmaRad),
+    trace: fresnelTracer(optic, channels, slope.sigmaRad),
   };
 }
 
 /** Objective of a telescope as a thin ideal lens: light of one direction meets in one point of the focal plane. */
-export function telescopeKernel(optic: TelescopeOptic, sun: SunDisc): Kernel {
+export function telescopeKernel(optic: TelescopeOptic, sun: SunDisc, blockedIn: OcclusionTestOf): Kernel {
   const frame = frameAbout(fromAzimuthElevation(optic.axisAzimuthDeg, optic.axisElevationDeg));
   const towards = toLocal(frame, sun.direction);
   const half = optic.diameterM / 2;
   const f = optic.focalLengthM;
+  const blocked = blockedIn(frame);
   return {
     frame,
     focusKind: 'point',
@@ -117,7 +122,7 @@ export function telescopeKernel(optic: TelescopeOptic, sun: SunDisc): Kernel {
     dimensions: 4,
     outputsPerRay: 1,
     transmittanceBound: optic.transmittance,
-    backTrace: null,
+    backTrace: objectiveBackTrace(optic, { ...sun, direction: towards }, (...at) => blocked?.(...at) ?? false),
     assumptions: [{ field: 'figure', value: 'thin ideal objective, focus of a mirror folded behind it', source: 'model', verified: true }],
     warnings: towards[2] <= 0 ? ['The sun stands behind the objective.'] : [],
     trace(samples, launch, bundle) {

@@ -36,8 +36,8 @@ const inRange = (name: string, value: number, low: number, high: number): void =
 function checkOptic(optic: Optic): void {
   for (const [name, value] of Object.entries(optic)) {
     if (name === 'reflectance' || name === 'transmittance') inRange(name, Number(value), 0, 1);
-    else if (name === 'centreBowM') inRange(name, Number(value), -0.1, 0.1);
-    else if (name.endsWith('M') && value !== undefined) inRange(name, Number(value), 1e-5, 1000);
+    else if (name.endsWith('BowM')) inRange(name, Number(value ?? 0), -0.2, 0.2);
+    else if (name.endsWith('M') && value !== undefined) inRange(name, Number(value), 1e-5, 2000);
   }
   if ('material' in optic && optic.material.name === 'explicit') {
     inRange('refractiveIndex', optic.material.refractiveIndex, 1.05, 3);
@@ -69,9 +69,9 @@ function kernelFor(request: TraceRequest, sun: SunDisc, blocked: OcclusionTestOf
     case 'trough':
       return curvedReflectorKernel(optic, request, sun, blocked);
     case 'fresnel':
-      return fresnelKernel(optic, sun);
+      return fresnelKernel(optic, sun, blocked);
     case 'telescope':
-      return telescopeKernel(optic, sun);
+      return telescopeKernel(optic, sun, blocked);
   }
 }
 

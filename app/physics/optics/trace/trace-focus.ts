@@ -3,17 +3,18 @@ import { dot } from '#app/physics/vector.ts';
 import { backEstimate } from './back-estimate.ts';
 import { bestDistances, lineHint, naturalPlane } from './best-plane.ts';
 import type { LocalPlane, PlaneHits } from './bundle.ts';
-import { cutPlane, emptyHits } from './bundle.ts';
+import { cutPlane } from './bundle.ts';
 import { batchMean, discPowers } from './disc-power.ts';
 import { enclosingRadii, gridOf, profileAlong, widthAbove } from './flux-map.ts';
 import { addScaled, toGlobal, toLocal, unitOf } from './frame.ts';
 import { guardRadiance, radianceBound } from './guards.ts';
-import { SpotFinder } from './hot-spot.ts';
+import type { SpotFinder } from './hot-spot.ts';
 import { batchCount } from './kernel.ts';
 import type { TracedOptic } from './trace-bundle.ts';
 import { traceBundle } from './trace-bundle.ts';
 import type { BestPlane, ContourWidth, DiscName, FluxGrid, TraceDisc, TraceRequest, TraceResult } from './trace-model.ts';
 import { discNames } from './trace-model.ts';
+import { newWorkspace } from './workspace.ts';
 
 /** Paths traced back for one disc: fewer where fewer rays were asked for. */
 const backPaths = (rays: number): number => Math.max(2048, Math.min(32768, rays / 4));
@@ -141,7 +142,7 @@ class Focus {
     if (!backTrace) return null;
     const mark = this.markIn(cut);
     const at = mark ?? hot;
-    const { concentration, stdError } = backEstimate(backTrace, pointOf(cut, at.x, at.y), cut.plane, 0.005, 2 * backPaths(this.traced.rays), this.request.seed);
+    const { concentration, stdError } = backEstimate(backTrace, pointOf(cut, at.x, at.y), cut.plane, 0.005, backPaths(this.traced.rays), this.request.seed);
     return { centre: mark ? 'mark' : 'hot spot', diameterM: 0.005, concentration: digits(concentration), stdError: digits(stdError, 3) };
   }
 
@@ -202,10 +203,9 @@ export function traceFocus(request: TraceRequest): TraceResult {
 }
 
 /** As `traceFocus`, with the rays at hand; several receivers can share them. */
-export function measureFocus(request: TraceRequest, traced: TracedOptic): TraceResult {
-  const { kernel, bundle } = traced;
-  const finder = new SpotFinder(bundle.capacity);
-  const hits = emptyHits(bundle.capacity);
+export function measureFocus(request: TraceRequest, traced: TracedOptic, workspace = newWorkspace(traced.bundle.capacity)): TraceResult {
+  const { kernel } = traced;
+  const { finder, hits } = workspace;
   const focus = new Focus(request, traced, finder);
   const diameters = discDiameters(traced);
   const imageM = diameters['sun-image'];

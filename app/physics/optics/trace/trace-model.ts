@@ -47,10 +47,6 @@ export interface TraceRequest {
   readonly branches?: 'first' | 'all';
   /** Coated and bare glass reflects more at grazing incidence. Default `glass` for panes and façades of panes. */
   readonly angularReflectance?: 'constant' | 'glass';
-  /** Tilt of each façade pane against the ideal curve, one sigma. [mrad] Default 3 (2–5, unverified). */
-  readonly paneTiltMrad?: number;
-  /** Inward bow at the centre of each façade pane. [m] Default 0. */
-  readonly paneBowM?: number;
 }
 
 export type DiscName = 'sun-image' | '1 mm' | '5 mm';

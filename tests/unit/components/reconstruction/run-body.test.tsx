@@ -25,7 +25,7 @@ function page(input: ReconstructionInput): string {
     number: 1, state: 'done', askedWords: '', askedBy: '', engineVersion: '', inputHash: '', sceneVersion: 1, note: '', windowWords: '', totals: view.result.totals,
     grade: view.result.grade, standing: 'not attached', progress: { done: 1, total: 1 }, failure: null,
   };
-  return renderToStaticMarkup(<RunBody page={{ line, zone: input.place.zone, zoneRules: '', resultHash: null, finishedWords: null, runCount: 1, changes: null, refusal: null, attachRefusal: null, view }} view={view} label="Case 1, run 1" words={null} />);
+  return renderToStaticMarkup(<RunBody page={{ line, zone: input.place.zone, zoneRules: '', resultHash: null, finishedWords: null, runCount: 1, changes: null, refusal: null, attachRefusal: null, photo: null, view }} view={view} href="/cases/1/reconstructions/1" label="Case 1, run 1" words={null} />);
 }
 
 describe('the page of a run', () => {
@@ -72,5 +72,22 @@ describe('the page of a run', () => {
     const html = page({ ...plain, window: { ...plain.window, startUtc: '2026-04-26T00:00:00.000Z' } });
     expect(html).toContain('alike');
     expect(html).toContain('The window has several days');
+  });
+
+  test('offers every figure as numbers and as a file under the address of the run', () => {
+    const html = page(ball);
+    for (const id of ['sun-path', 'beam', 'flux-discs', 'spot-distance', 'irradiance', 'temperature', 'returns']) expect(html).toContain(`href="/cases/1/reconstructions/1/figures/${id}.csv"`);
+    expect(html).toContain('Section along 330.0°');
+    expect(html).toContain('Plan at');
+    expect(html).toContain('Way of the spot over the target, as one faces it');
+    expect(html).toContain('its direction was not recorded and is taken square to the line from the optic');
+  });
+
+  test('says what is missing where no photo has a scale', () => {
+    expect(page(ball)).toContain('measure the mark on a square-on photo');
+  });
+
+  test('tells of each minute why it is not sunlit', () => {
+    expect(page(ball)).toMatch(/aria-valuetext="11:\d\d, (?:not sunlit|can&#x27;t tell), [^"]+; sun \d/u);
   });
 });

@@ -11,6 +11,8 @@ const site = {
   nowLocal: '2026-05-09T15:12',
   nowUtc: '2026-05-09T14:12:00.000Z',
   around: null,
+  units: 'metric' as const,
+  plans: [],
   today: { fromUtc: '2026-05-09T03:00:00.000Z', toUtc: '2026-05-09T21:00:00.000Z', riseUtc: '2026-05-09T04:16:00.000Z', setUtc: '2026-05-09T19:52:00.000Z', polar: null, words: '' },
 };
 const typed = (values: Partial<FoundAnswerTyped>): FoundAnswerTyped => ({ foundWhen: '', foundNowAt: '', foundLocal: '', foundFromLocal: '', foundToLocal: '', lastSoundLocal: '', ...values });

@@ -33,6 +33,20 @@ describe('clear sky', () => {
     }), { seed: 12, numRuns: 300 });
   });
 
+  test('the likely figure has no step: over a hundredth of a degree it changes by less than 1 %, and never brightens as the sun sinks', () => {
+    fc.assert(fc.property(aerosol, fc.double({ min: 3, max: 89.9, noNaN: true }), (a, h) => {
+      const low = clearSkyAt(h, 1361.1, 0, airWith(a, 1.5))?.likelyWm2 ?? 0;
+      const high = clearSkyAt(h + 0.01, 1361.1, 0, airWith(a, 1.5))?.likelyWm2 ?? 0;
+      expect(high).toBeGreaterThanOrEqual(low - 1e-9);
+      expect(high - low).toBeLessThan(0.01 * high + 0.05);
+    }), { seed: 13, numRuns: 1000 });
+    // The two joints themselves, from both sides.
+    for (const joint of [6, 10]) {
+      const [below, above] = [joint - 1e-9, joint + 1e-9].map((h) => clearSkyAt(h, 1361.1, 0, airWith(0.12, 1.5))?.likelyWm2 ?? 0);
+      expect(Math.abs((above ?? 0) - (below ?? 0))).toBeLessThan(1e-4);
+    }
+  });
+
   test('below 3° no figure is given', () => {
     expect(clearSkyAt(2.9, 1361.1, 0, airWith(0.1, 1.5))).toBeNull();
   });

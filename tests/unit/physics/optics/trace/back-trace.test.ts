@@ -28,6 +28,8 @@ const cases: readonly { readonly name: string; readonly optic: Optic; readonly a
   { name: 'trough deeper than 45°', optic: { kind: 'trough', radiusM: 0.5, chordM: 0.95, lengthM: 1, generators: 'horizontal', reflectance: 0.8, slopeErrorMrad: 0, axisAzimuthDeg: 180, axisElevationDeg: 80 }, at: 0.8, discM: 0.04, elevationDeg: 80 },
   { name: 'bowed pane', optic: { kind: 'bowed-pane', widthM: 0.6, heightM: 0.6, centreBowM: 0.003, reflectance: 0.35, slopeErrorMrad: 0.6, axisAzimuthDeg: 180, axisElevationDeg: 20 }, at: 0.9, discM: 0.05, elevationDeg: 40 },
   { name: 'pane with its coating on the inner sheet', optic: { kind: 'bowed-pane', widthM: 0.6, heightM: 0.6, centreBowM: 0.003, reflectance: 0.35, coatingSurface: 3, slopeErrorMrad: 0, axisAzimuthDeg: 180, axisElevationDeg: 20 }, at: 0.9, discM: 0.05, elevationDeg: 40 },
+  { name: 'telescope 3° off the sun', optic: { kind: 'telescope', diameterM: 0.08, focalLengthM: 0.4, transmittance: 0.85, ...up }, at: 1, discM: 0.008, elevationDeg: 87 },
+  { name: 'grooved sheet in colours', optic: { kind: 'fresnel', widthM: 0.2, heightM: 0.28, focalLengthM: 0.3, transmittance: 0.8, slopeErrorMrad: 1, ...up }, at: 1, discM: 0.012, elevationDeg: 86 },
 ];
 
 describe('light traced forward and light traced back from the receiver agree', () => {

@@ -5,7 +5,7 @@ import { emptyHits } from '#app/physics/optics/trace/bundle.ts';
 import { batchMean, discPowers } from '#app/physics/optics/trace/disc-power.ts';
 import { enclosingRadii, profileAlong, widthAbove } from '#app/physics/optics/trace/flux-map.ts';
 import { SpotFinder } from '#app/physics/optics/trace/hot-spot.ts';
-import { wordSource } from '#app/physics/optics/trace/sobol.ts';
+import { wordSource } from '#app/physics/sobol.ts';
 
 /** Uniform round patches: centre, radius, number of hits. */
 function patches(list: readonly { x: number; y: number; r: number; n: number }[], seed: number): PlaneHits {

@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest';
-import { ScrambledSobol } from '#app/physics/optics/trace/sobol.ts';
+import { ScrambledSobol } from '#app/physics/sobol.ts';
 import type { SunDisc } from '#app/physics/optics/trace/sun-sampling.ts';
 import { buieChi, buieGamma, relativeRadiance, sampleSun } from '#app/physics/optics/trace/sun-sampling.ts';
 

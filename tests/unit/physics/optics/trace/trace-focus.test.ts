@@ -2,7 +2,7 @@ import { describe, expect, test, vi } from 'vitest';
 import type { LensOptic, PaneOptic } from '#app/physics/optics/optic.ts';
 import { fresnelReflectance } from '#app/physics/optics/refraction.ts';
 import { concentrationAlongAxis, dangerZone } from '#app/physics/optics/trace/danger-zone.ts';
-import { paneReflectance } from '#app/physics/optics/trace/fresnel.ts';
+import { paneReflectance } from '#app/physics/optics/trace/pane-reflectance.ts';
 import { PlateShape } from '#app/physics/optics/trace/plate.ts';
 import { traceBundle } from '#app/physics/optics/trace/trace-bundle.ts';
 import { traceFocus } from '#app/physics/optics/trace/trace-focus.ts';
