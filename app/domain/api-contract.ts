@@ -124,7 +124,7 @@ function instantOf(utc: string): number {
 }
 
 /** Answer to a long run: where its result will be. */
-export const queuedAnswerSchema = z.object({ id: z.uuid(), state: z.literal('queued'), href: z.string().describe('Address of the run, as in `Location`') });
+export const queuedAnswerSchema = z.object({ id: z.uuid(), href: z.string().describe('Address of the run, as in `Location`') });
 
 export const computationAnswerSchema = z.object({
   id: z.uuid(),

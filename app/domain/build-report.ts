@@ -91,7 +91,7 @@ function scenePart({ scene, account, notes, chronology, accounts }: ReportSource
     ...notes.flatMap((note) => [small(`Note by ${note.by}`), serif(note.text)]),
     heading('Chronology'),
     small('True time is the reading less the error of the clock that it was read from.'),
-    chronology.length === 0 ? nothing('Nothing is on record.') : { kind: 'table', caption: 'Chronology', head: ['Day', 'True time', 'Clock read', 'Correction', 'What', 'Source'], widths: [1.2, 0.9, 1.1, 1, 2.6, 2], rows: chronology.map((row) => [row.day, row.trueTime, row.reading, row.correction, row.what, row.source]) },
+    chronology.length === 0 ? nothing('Nothing is on record.') : chronology.every((row) => row.reading === '') ? { kind: 'table', caption: 'Chronology', head: ['Day', 'True time', 'What'], widths: [1.2, 0.9, 4], rows: chronology.map((row) => [row.day, row.trueTime, row.what]) } : { kind: 'table', caption: 'Chronology', head: ['Day', 'True time', 'Clock read', 'Correction', 'What', 'Source'], widths: [1.2, 0.9, 1.1, 1, 2.6, 2], rows: chronology.map((row) => [row.day, row.trueTime, row.reading, row.correction, row.what, row.source]) },
     heading('Accounts of witnesses'),
     ...(accounts.length === 0 ? [nothing('None is in this report.')] : accounts.flatMap((one) => [sub(one.heading), small(one.meta), serif(one.words)])),
   ];
@@ -102,7 +102,7 @@ function evidencePart({ evidence, custodyLines, zone, dateUtc }: ReportSource, f
   return [
     heading('Evidence and custody'),
     small('Holders are named by their part in the matter. Each record begins at the moment at which the one before it ends.'),
-    ...(custodyLines.length > 0 ? [custodyFigure(custodyLines, { number: figures.next++, width: printWidthPt, textSize: printTextPt, zone, now: new Date(dateUtc) })] : []),
+    ...(custodyLines.length > 0 ? [custodyFigure(custodyLines, { number: figures.next++, width: printWidthPt, textSize: printTextPt, zone, now: new Date(dateUtc), endWords: 'end of the record' })] : []),
     ...evidence.flatMap(itemPart),
   ];
 }

@@ -46,7 +46,7 @@ const focus = z.object({
   discs: z.array(z.object({ disc: z.enum(['sun-image', '1 mm', '5 mm']), diameterMm: z.number(), centre, concentration: band, fluxKwm2: band })),
   plane: z.string(),
   spotAtDistance: z.array(z.object({ distanceM: z.number(), diameterMm: z.number(), fluxKwm2: z.number() })),
-  dangerZone: z.object({ thresholdKwm2: z.number(), nearM: z.number(), farM: z.number() }).nullable(),
+  dangerZone: z.object({ thresholdKwm2: z.number(), nearM: z.number(), farM: z.number(), widthMm: z.number().optional() }).nullable(),
   trailSpeedMmPerH: number, trailHeadingDeg: number, trailMinutesAtLeast: number,
   dwellS: z.array(z.object({ thresholdKwm2: z.number(), seconds: band })),
   traced: traced.nullable().optional(),

@@ -46,7 +46,7 @@ const focus = z.object({
   discs: z.array(z.object({ disc: z.enum(['sun-image', '1 mm', '5 mm']), diameterMm: number, centre: z.enum(['hot spot', 'mark']), concentration: band, fluxKwm2: band })),
   plane: text,
   spotAtDistance: z.array(z.object({ distanceM: number, diameterMm: number, fluxKwm2: number })),
-  dangerZone: z.object({ thresholdKwm2: number, nearM: number, farM: number }).nullable(),
+  dangerZone: z.object({ thresholdKwm2: number, nearM: number, farM: number, widthMm: number.optional() }).nullable(),
   trailSpeedMmPerH: maybe,
   trailHeadingDeg: maybe,
   trailMinutesAtLeast: maybe,

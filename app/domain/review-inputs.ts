@@ -131,7 +131,7 @@ function airRows({ skyline, air }: Scene): InputRow[] {
     ...(air.pressureHpa === undefined ? [] : [plain('Air pressure', `${air.pressureHpa} hPa`)]),
     air.dni
       ? plain('Direct sunlight on record', `${air.dni.values.length} values`, `${air.dni.source}, ${air.dni.basis.replaceAll('-', ' ')}`, stationCheck(air.dni.stationDistanceKm))
-      : plain('Direct sunlight on record', 'none', '', 'the sky at the time is not shown'),
+      : plain('Direct sunlight on record', 'none with the measurements', '', 'a run goes by the weather records of the case, where there are any'),
   ];
 }
 

@@ -24,7 +24,8 @@ export function sceneFacts(scene: Scene): FactView[] {
     ...measured,
     { term: 'Target', value: scene.target.material === 'dont-know' ? 'not known' : targetMaterialLabels[scene.target.material], note: scene.target.colour ?? null },
     { term: 'Skyline', value: skyline, note: scene.skyline?.source ?? null },
-    { term: 'Sun strength', value: dni ? `${dni.values.length} values` : 'not measured', note: dni?.source ?? null },
+    // Weather has records of its own; a series typed with the measurements is an older way.
+    ...(dni ? [{ term: 'Sun strength', value: `${dni.values.length} values`, note: dni.source }] : []),
     ...reporterFacts(scene),
   ];
 }

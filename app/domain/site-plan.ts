@@ -72,6 +72,6 @@ export function placePlan(picture: PlanPicture, points: readonly KnownPoint[]): 
 
 /** "1 px is 0.052 m; the upper edge points to 27.3° true; left over 0.4 m." */
 export function placementWords({ metresPerPx, upBearingDeg, leftOverM }: PlanPlacement): string {
-  const fit = leftOverM === null ? 'two points always fit; a third shows how well' : `left over ${leftOverM.toFixed(leftOverM < 10 ? 1 : 0)} m`;
+  const fit = leftOverM === null ? 'two points always fit; a third shows how well' : leftOverM < 0.05 ? 'left over under 0.1 m' : `left over ${leftOverM.toFixed(leftOverM < 10 ? 1 : 0)} m`;
   return `1 px is ${Number(metresPerPx.toPrecision(3))} m; the upper edge points to ${upBearingDeg.toFixed(1)}° true; ${fit}.`;
 }

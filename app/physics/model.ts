@@ -247,7 +247,8 @@ export interface FocusResult {
   readonly plane: string;
   /** Spot or line width against distance from the optic's origin. */
   readonly spotAtDistance: readonly { readonly distanceM: number; readonly diameterMm: number; readonly fluxKwm2: number }[];
-  readonly dangerZone: { readonly thresholdKwm2: number; readonly nearM: number; readonly farM: number } | null;
+  /** Stretch along the beam with this flux on 5 mm, and how wide it is in the plane of `plane`; the width is left out by engines before 0.2. */
+  readonly dangerZone: { readonly thresholdKwm2: number; readonly nearM: number; readonly farM: number; readonly widthMm?: number } | null;
   readonly trailSpeedMmPerH: number | null;
   readonly trailHeadingDeg: number | null;
   /** Sunlit minutes that the found trail needs at least; null for a line focus, which carries no time. */

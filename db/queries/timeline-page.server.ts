@@ -7,6 +7,7 @@ import { findCase } from './case-subject.server.ts';
 import { listEvidence } from './evidence.server.ts';
 import { listCasePhotos } from './photos.server.ts';
 import { listTimelineEvents } from './timeline.server.ts';
+import { standingWeather } from './weather.server.ts';
 import { listWitnessAccounts } from './witness-accounts.server.ts';
 import { attachmentCode } from '#app/domain/attachment.ts';
 import type { CaseState } from '#app/domain/case-state.ts';
@@ -14,10 +15,12 @@ import { caseStateLabels } from '#app/domain/case-state.ts';
 import { DomainError } from '#app/domain/errors.ts';
 import { examKindLabels, holderRoleLabels, itemCode, itemLetter } from '#app/domain/evidence.ts';
 import { foundMeansLabels, onsetBasisLabels, photoViewLabels } from '#app/domain/incident.ts';
+import { formatClock } from '#app/domain/local-time.ts';
 import { canOnCase, whoCan } from '#app/domain/permissions.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import { timelineHeading, timelineRows, timelineSourceLabels, trueTime } from '#app/domain/timeline.ts';
 import type { Happening } from '#app/domain/timeline.ts';
+import { withinSpan } from '#app/domain/weather.ts';
 import { witnessNames } from '#app/domain/witness.ts';
 
 interface Query {
@@ -27,7 +30,7 @@ interface Query {
 
 /** Everything of a case that has a time, from all sources, in the order of true time. Nobody is named in it. */
 export async function listHappenings(db: DbOrTx, row: CaseRow, query: Query): Promise<Happening[]> {
-  return [...caseHappenings(row), ...(await eventHappenings(db, query)), ...(await photoHappenings(db, query)), ...(await witnessHappenings(db, query)), ...(await evidenceHappenings(db, query)), ...(await moveHappenings(db, row))];
+  return [...caseHappenings(row), ...(await eventHappenings(db, query)), ...(await photoHappenings(db, query)), ...(await witnessHappenings(db, query)), ...(await weatherHappenings(db, row)), ...(await evidenceHappenings(db, query)), ...(await moveHappenings(db, row))];
 }
 
 const plain = { reading: null, clockErrorS: 0, basis: '', path: null } as const;
@@ -79,6 +82,20 @@ async function witnessHappenings(db: DbOrTx, query: Query): Promise<Happening[]>
       ...(account.speaksOfAt ? [{ ...plain, key: `speaks-${account.id}`, at: account.speaksOfAt, source: witness, what: `The moment of which account ${account.label} speaks`, basis: 'as the witness gave it', path }] : []),
       { ...plain, key: `account-${account.id}`, at: account.takenAt, source: 'Witnesses', what: `Account ${account.label} taken`, path },
     ];
+  });
+}
+
+/** Each weather record once: where its values begin to bear on the window, and until when. */
+async function weatherHappenings(db: DbOrTx, row: CaseRow): Promise<Happening[]> {
+  const { onsetEarliestAt, onsetLatestAt } = row;
+  if (!onsetEarliestAt || !onsetLatestAt) return [];
+  return (await standingWeather(db, row.id)).flatMap((record) => {
+    const values = withinSpan(record.values, onsetEarliestAt.getTime(), onsetLatestAt.getTime());
+    const [first] = values;
+    const last = values.at(-1);
+    if (!first || !last) return [];
+    const distance = record.stationDistanceKm === null ? '' : `${record.stationDistanceKm} km away`;
+    return [{ ...plain, key: `weather-${record.number}`, at: new Date(first.startUtc), source: [record.sourceName, record.station].filter(Boolean).join(', '), what: `Weather record ${record.number}: ${values.length} ${values.length === 1 ? 'value' : 'values'} in the window, to ${formatClock(new Date(last.endUtc), row.zone)}`, basis: distance, path: '/weather' }];
   });
 }
 

@@ -42,7 +42,7 @@ describe('evidence', () => {
     await maren.getByLabel('Held by, part').selectOption({ label: 'Investigator' });
     await maren.getByLabel('Held by, name').fill('Maren Kvist');
     await send(maren, maren.getByRole('button', { name: 'Record the item' }));
-    await maren.getByRole('heading', { name: '118-D: Timer of the display lamps' }).waitFor();
+    await maren.getByRole('heading', { name: '118-E: Timer of the display lamps' }).waitFor();
     await maren.getByLabel('When', { exact: true }).first().fill('2026-02-04T09:00');
     await maren.getByLabel('Taken over by, part').selectOption({ label: 'Store' });
     await maren.getByLabel('Taken over by, name').fill('Store Vestre');
@@ -54,13 +54,13 @@ describe('evidence', () => {
     expect(await maren.getByLabel('Purpose').inputValue()).toBe('Keeping');
     await maren.getByLabel('When', { exact: true }).first().fill('2026-02-05T09:00');
     await send(maren, maren.getByRole('button', { name: 'Record the hand-over' }));
-    await maren.getByRole('region', { name: 'Chain of custody of 118-D' }).getByRole('row', { name: /Store Vestre/u }).waitFor();
-    await open(maren, '/cases/118/evidence/D/label');
-    await maren.getByRole('img', { name: /Code that leads to .*\/cases\/118\/evidence\/D/u }).waitFor();
+    await maren.getByRole('region', { name: 'Chain of custody of 118-E' }).getByRole('row', { name: /Store Vestre/u }).waitFor();
+    await open(maren, '/cases/118/evidence/E/label');
+    await maren.getByRole('img', { name: /Code that leads to .*\/cases\/118\/evidence\/E/u }).waitFor();
   });
 
   it('is refused an examination that may alter it without notice and protocol', async () => {
-    await open(maren, '/cases/118/evidence/D');
+    await open(maren, '/cases/118/evidence/E');
     await choose(maren, 'Kind of examination', 'May alter the item');
     await maren.getByLabel('When', { exact: true }).last().fill('2026-02-06T09:00');
     await maren.getByLabel('Made by').fill('Laboratory Halm');

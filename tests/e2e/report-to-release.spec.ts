@@ -38,7 +38,7 @@ describe('a rooftop scorch', () => {
     await openReport(page);
     await page.getByLabel('Photo files').setInputFiles([demoPhotoPath('03-1'), demoPhotoPath('03-2')]);
     await fillRooftopReport(page, words);
-    await expect.poll(() => page.getByText('with the team').count()).toBe(2);
+    await expect.poll(() => page.getByText(/^\d+, with the team$/u).count()).toBe(2);
     await page.getByRole('button', { name: 'Send', exact: true }).last().click();
     await page.getByRole('heading', { name: 'Received. Thank you' }).waitFor();
     receipt = new URL(page.url()).pathname.split('/').at(-1) ?? '';

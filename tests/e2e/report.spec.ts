@@ -1,6 +1,7 @@
 import { fileURLToPath } from 'node:url';
 import AxeBuilder from '@axe-core/playwright';
 import postgres from 'postgres';
+import sharp from 'sharp';
 import type { Page } from 'playwright-core';
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import { receiptPattern } from '#app/domain/incident.ts';
@@ -82,6 +83,33 @@ test('a guest reports with a photo from a phone, gets a receipt, and follows it'
   await expectNoViolations(page);
   const [row] = await sql<{ state: string; photos: number }[]>`select state, (select count(*)::int from photos where case_id = cases.id) as photos from cases where receipt = ${receipt}`;
   expect(row).toEqual({ state: 'reported', photos: 1 });
+});
+
+test('a photo goes as the camera made it, and smaller only when that was asked for, with its camera data', async () => {
+  const large = async () => ({
+    name: 'large.jpg',
+    mimeType: 'image/jpeg',
+    buffer: await sharp({ create: { width: 3000, height: 1500, channels: 3, background: '#808080', noise: { type: 'gaussian', mean: 128, sigma: 30 } } })
+      .jpeg({ quality: 92 })
+      .withExif({ IFD0: { Make: 'None', Model: 'Box 1' }, IFD2: { DateTimeOriginal: '2026:05:09 15:10:30', OffsetTimeOriginal: '+01:00' } })
+      .toBuffer(),
+  });
+  const page = await stage.visit({ size: 'phone' });
+  await page.goto(guestReport);
+  await goOn(page);
+  const asItIs = await large();
+  await page.getByLabel('Photo files').setInputFiles(asItIs);
+  await page.getByText('1, with the team').waitFor();
+  await page.getByLabel(/Make the next photos smaller/u).check();
+  await page.getByLabel('Photo files').setInputFiles(await large());
+  await page.getByText('2, with the team').waitFor();
+  const rows = await sql`select bytes::int, width_px, height_px, made_smaller, exif->>'takenAtLocal' as taken, exif->>'camera' as camera from photos where report_client_id = ${clientIdOf(page)} order by position`;
+  const taken = { taken: '2026-05-09T15:10:30', camera: 'None Box 1' };
+  expect(rows.map((row) => ({ ...row }))).toEqual([
+    { bytes: asItIs.buffer.byteLength, width_px: 3000, height_px: 1500, made_smaller: false, ...taken },
+    { bytes: expect.any(Number), width_px: 2048, height_px: 1024, made_smaller: true, ...taken },
+  ]);
+  expect(rows[1]?.bytes).toBeLessThan(asItIs.buffer.byteLength);
 });
 
 test('what was typed, and the photos, are there again after a reload', async () => {

@@ -34,7 +34,7 @@ export interface SceneFormProps {
 
 const otherNames: Readonly<Record<string, string>> = { measuredOn: 'Day of the measurements', 'target.layers': 'Layers', 'air.temperatureC': 'Air temperature', 'air.pressureHpa': 'Air pressure', 'opening.halfWidthDeg': 'Open to each side', 'skyline.points': 'Skyline', walls: 'Walls', 'dni.values': 'Sun strength', note: 'What was measured' };
 /** Kept as they are: they have pages of their own. */
-export const carriedNames = ['skyline.points', 'skyline.plusMinusDeg', 'skyline.source', 'walls', 'dni.values', 'dni.source', 'dni.basis', 'dni.stationDistanceKm'] as const;
+const carriedNames = ['skyline.points', 'skyline.plusMinusDeg', 'skyline.source', 'walls', 'dni.values', 'dni.source', 'dni.basis', 'dni.stationDistanceKm'] as const;
 
 /** The measured scene, part by part in the order of the paper sheet, saved together as a new version. */
 export function SceneForm({ kind, stored, stamps, baseVersion, storageKey, measurer, north, around, problem }: SceneFormProps) {

@@ -85,6 +85,18 @@ function BeamTable({ beam, minutes, zone, caption }: BeamFigureProps & { readonl
   );
 }
 
+/** The minute of the blue line alone: directions and lengths that a plan shows; every minute is in the section's table. */
+function PlanTable({ beam, cursorUtc, caption }: BeamFigureProps & { readonly caption: string }) {
+  const minute = minuteAt(beam, cursorUtc);
+  const reach = beam.mark ? subtract(beam.mark.position, beam.startsAt) : null;
+  const direction = (vector: Vector) => [`${azimuthOf(vector).toFixed(1)}`, `${elevationOf(vector).toFixed(1)}`];
+  const rows = [
+    ...(minute ? [['Towards the sun', ...direction(minute.towardsSun), ''], ['Chief ray', ...direction(minute.direction), `${plainNumber(beam.profiles[minute.profile]?.focusM ?? Number.NaN)} to the focus`]] : []),
+    ...(reach ? [['From optic to mark', ...direction(reach), plainNumber(lengthOf(reach))]] : []),
+  ];
+  return <NumberTable caption={caption} columns={[{ head: 'Direction' }, { head: 'Bearing, ° true', numeric: true }, { head: 'Above level, °', numeric: true }, { head: 'Length, m', numeric: true }]} rows={rows} />;
+}
+
 const methodWords = 'Chief ray and width by the closed form of the engine for the minute of the blue line; blue outline: four fifths of the light. Dash and dot: chief ray.';
 
 /** The beam from the side: the upright plane through optic and mark. */
@@ -116,7 +128,7 @@ export function PlanFigure({ figure, ...props }: BeamFigureProps & { readonly fi
       figure={figure}
       title={title}
       picture={<Drawn {...props} sight={planSight} north what="Plan" />}
-      numbers={<BeamTable {...props} caption={title} />}
+      numbers={<PlanTable {...props} caption={title} />}
       note={`True north up. ${methodWords} ${distanceWords(beam)}`}
     />
   );

@@ -47,7 +47,7 @@ export function ReviewMoves({ caseVersion, whoCan, openComments, opinionShown, s
         <input type="hidden" name="version" value={caseVersion} />
         <ErrorSummary errors={signAnswer?.formErrors} title="Not signed yet." fields={[{ field: { name: 'read', errors: signAnswer?.fieldErrors['read'] }, label: 'Inputs' }]} />
         <ChoiceChips field={problemFields(signAnswer, { after: 'action' }, 'sign-')('after')} legend="After the signature" options={[{ value: 'action', label: 'Pass to action' }, { value: 'no-action', label: 'No action needed' }]} />
-        <TextArea field={problemFields(signAnswer, {}, 'sign-')('reason')} label="What the signature rests on" aside="required where no action is needed: why not" rows={2} />
+        <TextArea field={problemFields(signAnswer, {}, 'sign-')('reason')} label="What the signature rests on" aside="needed without an action" rows={2} />
         <Button look={opinionShown && openComments === 0 ? 'filled' : 'waiting'} block>Sign this version</Button>
         <p className="text-axis text-second">Needs: {signNeeds.join(', ')}. Without an action the case then waits for the site manager, who closes it or passes it to action after all. The version is then frozen with a hash and cannot be changed.</p>
       </Form>

@@ -80,7 +80,7 @@ function SearchForm({ action = '/cases', query = '', id }: { readonly action?: s
 
 function Folded({ summary, wide = false, children }: { readonly summary: ReactNode; readonly wide?: boolean; readonly children: ReactNode }) {
   return (
-    <details className="group relative">
+    <details className="group relative" data-print="no">
       <summary className="flex min-h-11 min-w-11 list-none items-center justify-end font-medium [&::-webkit-details-marker]:hidden">{summary}</summary>
       <div className={`absolute right-0 z-20 border-2 border-ink bg-sheet p-4 ${wide ? 'w-[calc(100vw-2*var(--page-margin))]' : 'w-64'}`}>{children}</div>
     </details>

@@ -39,9 +39,11 @@ export function ApiKeys({ keys, made, problem }: ApiKeysProps) {
       <SectionHeading id="keys-heading">Keys for programs</SectionHeading>
       <p className="pt-3">With a key, a program asks for sun, sky and reconstructions in your name. It sees no case. Send it as <code>Authorization: Bearer …</code></p>
       {made ? (
-        <Notice title="Copy the key now. It is not shown again." role="status">
-          <code className="block break-all py-2 font-mono text-small select-all">{made}</code>
-        </Notice>
+        <div className="pt-4">
+          <Notice title="Copy the key now. It is not shown again." role="status">
+            <code className="block break-all py-2 font-mono text-small text-ink select-all">{made}</code>
+          </Notice>
+        </div>
       ) : null}
       {keys.length > 0 ? (
         <ul className="mt-4 border-t border-hair" aria-label="Keys that hold">
@@ -59,10 +61,11 @@ export function ApiKeys({ keys, made, problem }: ApiKeysProps) {
             </li>
           ))}
         </ul>
-      ) : (
+      ) : made ? null : (
         <p className="pt-3 text-second">You hold no key.</p>
       )}
-      <Form method="post" className="space-y-4 pt-4" noValidate>
+      {/* A new key empties the form. */}
+      <Form key={keys.length} method="post" className="space-y-4 pt-4" preventScrollReset noValidate>
         <ErrorSummary
           errors={problem?.formErrors ?? []}
           fields={[{ field: name, label: 'What it is for' }, { field: scope, label: 'What it may do' }, { field: days, label: 'How long it holds' }]}

@@ -44,7 +44,7 @@ export function FocusSection({ focus, rings, clock, beam, bestUtc }: FocusSectio
   const centre = focus.discs.some((disc) => disc.centre === 'mark') ? 'mark' : 'hot spot';
   const method = focus.traced ? `${focus.traced.rays.toLocaleString('en-GB')} rays traced` : 'Closed form, no rays traced';
   return (
-    <div className="grid gap-x-8 gap-y-6 [&>*]:min-w-0 tablet:grid-cols-2">
+    <div className="grid gap-x-8 gap-y-6 [&>*]:min-w-0 tablet:grid-cols-2 print:grid-cols-1">
       <div className="space-y-6">
         <FluxDiscsFigure
           figure="Fig. 5"
@@ -115,7 +115,7 @@ function focusFacts(focus: Focus, line: boolean): Fact[] {
     { term: line ? 'Line width' : 'Spot', value: `${plainNumber(focus.spotDiameterMm.mid)} mm`, note: bandWords(focus.spotDiameterMm) },
     { term: 'Focal length', value: lengthWords(focus.focalLengthM), note: focus.method === 'ray-trace' ? 'ray trace' : 'closed form' },
   ];
-  if (dangerZone) facts.push({ term: `At or above ${plainNumber(dangerZone.thresholdKwm2)} kW/m²`, value: `${lengthWords(dangerZone.nearM)} to ${lengthWords(dangerZone.farM)}`, note: 'from the optic, 5 mm disc' });
+  if (dangerZone) facts.push({ term: `At or above ${plainNumber(dangerZone.thresholdKwm2)} kW/m²`, value: `${lengthWords(dangerZone.nearM)} to ${lengthWords(dangerZone.farM)}`, note: `from the optic, 5 mm disc${dangerZone.widthMm ? `; ${plainNumber(dangerZone.widthMm)} mm wide on the plane of the figures` : ''}` });
   if (focus.trailSpeedMmPerH !== null) facts.push({ term: 'Spot moves', value: `${plainNumber(focus.trailSpeedMmPerH)} mm/h`, note: focus.trailHeadingDeg === null ? '' : `towards ${plainNumber(focus.trailHeadingDeg)}° true` });
   if (focus.trailMinutesAtLeast !== null) facts.push({ term: 'Trail needs at least', value: `${plainNumber(focus.trailMinutesAtLeast)} min of sun` });
   if (traced) {

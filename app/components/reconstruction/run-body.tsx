@@ -56,7 +56,7 @@ export function RunBody({ page, view, label, words, href }: RunBodyProps) {
         }
       >
         <div className="space-y-8">
-          <div className="grid gap-x-8 gap-y-6 [&>*]:min-w-0 tablet:grid-cols-2">
+          <div className="grid gap-x-8 gap-y-6 [&>*]:min-w-0 tablet:grid-cols-2 print:grid-cols-1">
             <SunSection view={view} zone={page.zone} cursorUtc={cursorUtc} />
             {beam ? <SectionFigure figure="Fig. 2" {...beam} /> : null}
             {beam ? <PlanFigure figure="Fig. 3" {...beam} /> : null}
@@ -67,7 +67,7 @@ export function RunBody({ page, view, label, words, href }: RunBodyProps) {
           <FourTests tests={result.tests} />
           {result.light ? <LightIntervals light={result.light} zone={page.zone} /> : null}
           {result.focus && clock ? <FocusSection focus={result.focus} rings={view.rings} clock={clock} beam={view.beam} bestUtc={bestUtc} /> : null}
-          <div className="grid gap-x-8 gap-y-6 [&>*]:min-w-0 tablet:grid-cols-2">
+          <div className="grid gap-x-8 gap-y-6 [&>*]:min-w-0 tablet:grid-cols-2 print:grid-cols-1">
             {result.focus ? <BeamFigure focus={result.focus} markDistanceM={view.markDistanceM} /> : null}
             <IrradianceSection view={view} zone={page.zone} clock={clock} />
             {result.heating ? <HeatFigure heating={result.heating} /> : null}

@@ -24,7 +24,7 @@ export function SavedViews({ views, search, path, problem }: SavedViewsProps) {
       {views.map((view) => (
         <AppLink key={view.id} href={`${path}${view.search}`} {...(view.id === here?.id ? { 'aria-current': 'page' as const } : {})} className={`inline-flex min-h-11 items-center border-b-4 no-underline desk:min-h-8 ${view.id === here?.id ? 'border-here font-semibold' : 'border-transparent'}`}>{view.name}</AppLink>
       ))}
-      <details open={problem !== undefined} className="open:basis-full">
+      <details key={`${here?.id ?? 'none'}${search}`} open={problem !== undefined} className="open:basis-full">
         <summary className="inline-flex min-h-11 items-center underline decoration-ember decoration-2 underline-offset-4 desk:min-h-8">{here ? `Change "${here.name}"` : 'Keep this view'}</summary>
         <div className="max-w-md space-y-4 py-2">
           {here ? <ChangeView view={here} problem={problem} /> : <KeepView search={search} problem={problem} />}

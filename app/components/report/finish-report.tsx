@@ -50,7 +50,7 @@ export function FinishReport({ clientId }: { readonly clientId: string }) {
   const refused = left.filter((photo) => photo.state === 'refused');
   if (left.length === 0) return null;
   return (
-    <div role="status" className="space-y-2 border-l-6 border-ink pt-1 pl-3">
+    <div role="status" className="mb-4 space-y-2 border-l-6 border-ink py-1 pl-3">
       {waiting > 0 ? <p className="font-semibold">{waiting === 1 ? 'One photo is' : `${waiting} photos are`} still on this {deviceWord()}. {waiting === 1 ? 'It follows' : 'They follow'} by {waiting === 1 ? 'itself' : 'themselves'}: leave this page open, or open the report page later.</p> : null}
       {refused.map((photo) => <p key={photo.key} className="font-semibold">{photo.sentence}</p>)}
       {waiting === 0 ? <Button type="button" look="quiet" className="min-h-11" onClick={() => void forgetReport(clientId).then(() => setLeft([]))}>Understood</Button> : null}

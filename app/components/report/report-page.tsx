@@ -37,13 +37,13 @@ export function ReportPage({ view, problem }: { readonly view: ReportView; reado
   const sending = useReportSending({ clientId, holderKey, report: draft.report, fileOf });
   const photos = useReportPhotos({ clientId, stored: view.fromDevice ? null : view.photos, maxBytes: view.photoMaxBytes, roomless, keep: draft.keep, onChange: sending.tryNow });
   const lasting = useLastingStorage(draft.report !== null && (photos.photos.length > 0 || draft.report.wanted !== 'no'));
-  const background = useArrival(view);
   useWayToReceipt(draft.report, guestCode);
 
   const mend = problem ?? (draft.report?.problem ? { ...draft.report.problem, typed: draft.report.values } : null);
   // A form that came back to be mended is the page, with a script or without.
   const atForm = mend !== null || (hydrated && draft.begun);
   const saved = draft.report !== null && draft.report.wanted !== 'no';
+  const background = useArrival(view, saved);
   useEffect(() => {
     if (!mend) return;
     const summary = form.current?.querySelector('[role="alert"]');
@@ -91,14 +91,15 @@ export function ReportPage({ view, problem }: { readonly view: ReportView; reado
 }
 
 /** Makes the next start possible without a connection. @returns whether this browser sends with the page closed. */
-function useArrival(view: ReportView): boolean {
+function useArrival(view: ReportView, saved: boolean): boolean {
   const [background, setBackground] = useState(false);
   useEffect(() => {
     registerServiceWorker();
     // Storage that is switched off keeps no page either.
     if (!view.fromDevice) keepView(view).catch(() => undefined);
-    void sendsInBackground().then(setBackground, () => undefined);
   }, [view]);
+  // Asked when it matters: at the first visit the worker needs a moment to take over.
+  useEffect(() => void sendsInBackground().then(setBackground, () => undefined), [saved]);
   return background;
 }
 

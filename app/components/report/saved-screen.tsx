@@ -73,8 +73,10 @@ function PhotoBar({ photo, number, part }: { readonly photo: KeptPhoto; readonly
 }
 
 /** As typed, on the clock of the place. */
-function foundWords({ foundWhen, foundLocal = '', foundFromLocal = '', foundToLocal = '' }: KeptReport['values']): string {
+function foundWords({ foundWhen, foundNowAt, foundLocal = '', foundFromLocal = '', foundToLocal = '' }: KeptReport['values']): string {
   const clock = (local: string) => local.replace('T', ', ');
+  // "Just now" was when it was pressed, by the clock of this device.
+  if (foundWhen === 'just-now' && foundNowAt) return new Date(foundNowAt).toLocaleString('en-GB', { day: 'numeric', month: 'short', hour: '2-digit', minute: '2-digit' });
   if (foundWhen === 'at') return clock(foundLocal);
   if (foundWhen === 'range') return `${clock(foundFromLocal)} to ${clock(foundToLocal)}`;
   const answer = foundAnswers.find((value) => value === foundWhen);

@@ -62,6 +62,7 @@ export function WeatherMappingForm({ stage, problem }: { readonly stage: FileSta
       <div className="flex flex-wrap gap-3">
         <Button name="intent" value="try-file" look="outlined">Try it, keep nothing</Button>
         <Button name="intent" value="import-file" look={stage.dryRun && stage.dryRun.kept > 0 ? 'filled' : 'waiting'}>{stage.dryRun ? `Keep ${stage.dryRun.kept} values` : 'Keep the values'}</Button>
+        <a href="?" className="inline-flex min-h-11 items-center">Take another file</a>
       </div>
     </Form>
   );

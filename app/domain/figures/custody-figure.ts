@@ -20,19 +20,23 @@ export interface CustodyFigureOptions {
   readonly width: number;
   readonly textSize: number;
   readonly zone: string;
-  /** The line ends here. */
+  /** The line ends here, or at the last record where that is later. */
   readonly now: Date;
+  /** Words at the end of the line; `today` on a page. */
+  readonly endWords?: string;
 }
 
 /**
  * One line an item over folded days: thick in a person's hands, thin in a store, a tick with a foot at each hand-over,
  * a square for each examination. Drawn from records that cannot have a gap between them.
  */
-export function custodyFigure(lines: readonly CustodyLine[], { number, width, textSize, zone, now }: CustodyFigureOptions): ReportFigure {
-  const instants = [...lines.flatMap((line) => [...line.holders.flatMap((holder) => [holder.from]), ...line.exams.map((exam) => exam.at)]), now];
+export function custodyFigure(lines: readonly CustodyLine[], { number, width, textSize, zone, now: asked, endWords = 'today' }: CustodyFigureOptions): ReportFigure {
+  const recorded = lines.flatMap((line) => [...line.holders.map((holder) => holder.from), ...line.exams.map((exam) => exam.at)]);
+  const now = new Date(Math.max(asked.getTime(), ...recorded.map((instant) => instant.getTime())));
+  const instants = [...recorded, now];
   const scale = foldedScale(instants, 4, width - 8);
   const head = textSize * 2.4;
-  const row = textSize * 2 + 34;
+  const row = textSize * 2 + 38;
   const height = head + lines.length * row + 4;
   return {
     kind: 'figure',
@@ -41,7 +45,7 @@ export function custodyFigure(lines: readonly CustodyLine[], { number, width, te
     alt: `Custody of ${lines.length} ${lines.length === 1 ? 'item' : 'items'} without a gap. ${lines.map((line) => lineWords(line, zone)).join(' ')}`,
     widthPt: width,
     heightPt: height,
-    marks: [...axis(scale, { textSize, zone, head, height, now }), ...lines.flatMap((line, index) => itemMarks(line, scale, { top: head + index * row, row, textSize, width, now }))],
+    marks: [...axis(scale, { textSize, zone, head, height, now, endWords }), ...lines.flatMap((line, index) => itemMarks(line, scale, { top: head + index * row, row, textSize, width, now }))],
   };
 }
 
@@ -51,14 +55,14 @@ function lineWords({ code, holders, exams }: CustodyLine, zone: string): string 
   return `${code}: ${held}${examined ? `; ${examined}` : ''}.`;
 }
 
-function axis(scale: FoldedScale, { textSize, zone, head, height, now }: { textSize: number; zone: string; head: number; height: number; now: Date }): FigureMark[] {
+function axis(scale: FoldedScale, { textSize, zone, head, height, now, endWords }: { textSize: number; zone: string; head: number; height: number; now: Date; endWords: string }): FigureMark[] {
   const y = head - textSize * 0.6;
   const marks: FigureMark[] = scale.folds.map((fold): FigureMark => ({ mark: 'line', points: [[fold.from + 2, y], [fold.to - 2, y]], ink: 'edge', widthPt: 1, dash: [1, 3] }));
   let free = -Infinity;
   let said = '';
   for (const stop of scale.stops) {
     const today = stop.at.getTime() === now.getTime();
-    const text = today ? 'today' : formatDay(stop.at, zone).replace(/ \d{4}$/u, '');
+    const text = today ? endWords : formatDay(stop.at, zone).replace(/ \d{4}$/u, '');
     const half = textWidth(text, textSize) / 2;
     const x = Math.min(Math.max(stop.x, half), scale.stops.at(-1)?.x ?? stop.x);
     if (text === said || (x - half < free && !today)) continue;
@@ -85,7 +89,7 @@ interface RowBox {
 
 function itemMarks(line: CustodyLine, scale: FoldedScale, { top, row, textSize, width, now }: RowBox): FigureMark[] {
   const title = top + textSize * 2;
-  const y = top + textSize * 2 + 20;
+  const y = top + textSize * 2 + 25;
   const words = [line.description, line.seal].filter(Boolean).join(', ');
   const room = Math.floor((width - textWidth(line.code, textSize) - 24) / (textSize * 0.56));
   const marks: FigureMark[] = [

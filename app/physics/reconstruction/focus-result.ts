@@ -169,6 +169,7 @@ export function focusOf(minute: JudgedMinute, beam: Beam, parts: FocusParts, set
   const thresholdKwm2 = reach?.thresholdKwm2 ?? scorchContourKwm2;
   const zoneSuns = (thresholdKwm2 * 1000) / Math.max(light.mid, 1);
   const zone = traced === null ? zoneAlong(beam, zoneSuns, markDiscM) : traced.dangerZone(zoneSuns);
+  const zoneWidthM = traced === null ? contourWidthM(plane, thresholdKwm2, light.mid) : traced.contourWidthM(zoneSuns);
   const trailM = (input.mark?.lengthMm ?? 0) / 1000;
   const minutes = motion === null ? null : trailMinutesAtLeast(model, trailM, scorchWidthM, motion.speedMPerS);
   const hot = concentrationBand(plane, 0, markDiscM, setting.opticSigmaRel, traced?.concentration('5 mm', 'hot spot') ?? null);
@@ -187,7 +188,7 @@ export function focusOf(minute: JudgedMinute, beam: Beam, parts: FocusParts, set
       discs: discsOf(plane, light, sampling, traced, imageM, setting.opticSigmaRel),
       plane: planeWords(plane),
       spotAtDistance: spotAtDistance(beam, light.mid, traced),
-      dangerZone: zone === null ? null : { thresholdKwm2: roundSignificant(thresholdKwm2, 3), nearM: roundSignificant(zone.nearM, 3), farM: roundSignificant(zone.farM, 3) },
+      dangerZone: zone === null ? null : { thresholdKwm2: roundSignificant(thresholdKwm2, 3), nearM: roundSignificant(zone.nearM, 3), farM: roundSignificant(zone.farM, 3), widthMm: roundSignificant(zoneWidthM * 1000, 3) },
       trailSpeedMmPerH: motion === null ? null : roundSignificant(motion.speedMPerS * 3_600_000, 3),
       trailHeadingDeg: motion === null ? null : roundTo(motion.headingDeg, 1),
       trailMinutesAtLeast: minutes === null ? null : roundTo(minutes, 1),

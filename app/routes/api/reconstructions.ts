@@ -25,7 +25,7 @@ export function action({ request, context }: Route.ActionArgs) {
     if (result) return result;
     const { id } = await queueComputation(actor, input.data);
     const address = href('/api/v1/reconstructions/:computationId', { computationId: id });
-    return new JsonAnswer({ id, state: 'queued', href: address }, 202, { Location: address, 'Retry-After': askAgainS, ...(wantsLink ? { 'Preference-Applied': 'respond-async' } : {}) });
+    return new JsonAnswer({ id, href: address }, 202, { Location: address, 'Retry-After': askAgainS, ...(wantsLink ? { 'Preference-Applied': 'respond-async' } : {}) });
   });
 }
 

@@ -57,7 +57,7 @@ export function action({ request, context, params }: Route.ActionArgs) {
 type Typed = Record<string, string>;
 
 async function stageOf(actor: Actor, caseNumber: number, intent: string, typed: Typed) {
-  const look = await lookAtFile({ actor, caseNumber, text: typed['text'] ?? '', fileName: '' });
+  const look = await lookAtFile({ actor, caseNumber, text: typed['text'] ?? '' });
   const dryRun = intent === 'try-file' || look.format !== 'table' ? await tryFile({ actor, caseNumber, typed: { ...look.sourceGuess, ...typed } }) : null;
   return { look, typed: intent === 'try-file' ? typed : { ...look.guess, ...look.sourceGuess, ...typed }, dryRun };
 }
@@ -66,7 +66,7 @@ async function stageOf(actor: Actor, caseNumber: number, intent: string, typed: 
 async function refusedStage(actor: Actor, caseNumber: number, form: FormData, intent: string, error: unknown) {
   if (!(error instanceof DomainError) || error.code === 'not-found' || error.code === 'forbidden') return problemFromError(intent, form, error);
   const typed = typedValues(form);
-  const look = await lookAtFile({ actor, caseNumber, text: typed['text'] ?? '', fileName: '' });
+  const look = await lookAtFile({ actor, caseNumber, text: typed['text'] ?? '' });
   return data({ stage: { look, typed, dryRun: null }, ...{ intent, formErrors: [error.message, ...error.needs], fieldErrors: error.fieldErrors, typed } }, { status: 400 });
 }
 

@@ -1,6 +1,7 @@
 import { inTransaction } from '#db/client.server.ts';
 import { casePlace } from '#db/queries/case-place.server.ts';
 import { DomainError } from '#app/domain/errors.ts';
+import { plainText } from '#app/domain/incident.ts';
 import { localDay } from '#app/domain/local-time.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import { stampMeasures } from '#app/domain/scene-form-fields.ts';
@@ -36,7 +37,7 @@ export async function saveScene(request: SaveSceneRequest): Promise<number> {
     if (!reading.ok || Object.keys(fieldErrors).length > 0) throw new DomainError('invalid-input', 'Some measurements cannot be saved as they stand.', { fieldErrors });
     const by = (typed['measuredBy'] ?? '').trim().slice(0, 120) || actor.displayName;
     const scene = stampMeasures(locked.scene, reading.scene, { by, on: day.on });
-    return writeScene(tx, locked, { actor, scene, note: [request.note.trim(), ...reading.bearingNotes].join(' ') });
+    return writeScene(tx, locked, { actor, scene, note: [plainText(500).parse(request.note), ...reading.bearingNotes].join(' ') });
   });
 }
 

@@ -59,7 +59,7 @@ async function openCase(actor: Actor, caseNumber: number) {
 }
 
 /** A first look at a file: its kind, its columns, and guesses to start from. */
-export async function lookAtFile(request: { actor: Actor; caseNumber: number; text: string; fileName: string }): Promise<FileLook> {
+export async function lookAtFile(request: { actor: Actor; caseNumber: number; text: string }): Promise<FileLook> {
   const { place } = await openCase(request.actor, request.caseNumber);
   const text = checkText(request.text);
   const format = fileFormatOf(text);

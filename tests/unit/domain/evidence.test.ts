@@ -119,3 +119,10 @@ describe('marks over a photo', () => {
     expect(read.error?.issues.map((issue) => issue.path[0])).toContain(field);
   });
 });
+
+test('a line of custody never runs backwards: a record later than the day of the report moves its end', () => {
+  const line = { code: '7-A', description: 'Sphere', seal: '', holders: [{ role: 'investigator' as const, from: at('2026-05-10T00:00:00Z'), to: null }], exams: [] };
+  const figure = custodyFigure([line], { number: 1, width: 400, textSize: 12, zone: 'UTC', now: at('2026-03-02T00:00:00Z'), endWords: 'end' });
+  const held = figure.marks.find((mark) => mark.mark === 'line' && mark.widthPt === 4);
+  expect(held?.mark === 'line' && (held.points[1]?.[0] ?? 0) >= (held.points[0]?.[0] ?? 0)).toBe(true);
+});

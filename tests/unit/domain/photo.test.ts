@@ -9,7 +9,7 @@ describe('content of a file', () => {
     ['\x89PNG\r\n\x1a\n', 'image/png'],
     ['RIFF\0\0\0\0WEBP', 'image/webp'],
     ['RIFF\0\0\0\0WAVE', null],
-    ['\0\0\0\x18ftypheic', 'heic'],
+    ['\0\0\0\x18ftypheic', 'image/heic'],
     ['\0\0\0\x18ftypavif', 'avif'],
     ['\0\0\0\x18ftypqt  ', 'video'],
     ['%PDF-1.7', 'pdf'],
