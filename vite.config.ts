@@ -39,7 +39,6 @@ export default defineConfig(({ mode }) => ({
           include: ['tests/e2e/**/*.spec.ts'],
           globalSetup: ['./tests/e2e/support/seeded-template.ts'],
           pool: 'forks',
-          fileParallelism: false,
           testTimeout: 240_000,
           hookTimeout: 240_000,
           // A page on a busy machine takes its time.

@@ -51,8 +51,8 @@ describe('the head of a case', () => {
     const row = await createCase('investigation', { site: house.site, reporterId: house.reporter.userId });
     const tabs = async (actor: Actor) => (await getCaseHeader(db, { actor, caseNumber: row.number, now }))?.tabs.map((tab) => tab.key);
     expect(await tabs(house.reporter)).toEqual(['account', 'photos']);
-    expect(await tabs(house.investigator)).toEqual(['account', 'triage', 'measurements', 'photos', 'reconstructions', 'hypotheses', 'findings', 'actions', 'releases', 'log']);
-    expect(await tabs(house.reviewer)).toEqual(['account', 'measurements', 'photos', 'reconstructions', 'hypotheses', 'findings', 'actions', 'log']);
+    expect(await tabs(house.investigator)).toEqual(['account', 'triage', 'measurements', 'photos', 'reconstructions', 'evidence', 'witnesses', 'timeline', 'hypotheses', 'findings', 'report', 'actions', 'releases', 'log']);
+    expect(await tabs(house.reviewer)).toEqual(['account', 'measurements', 'photos', 'reconstructions', 'evidence', 'witnesses', 'timeline', 'hypotheses', 'findings', 'report', 'actions', 'log']);
     expect(await tabs(house.administrator)).toBeUndefined();
   });
 
