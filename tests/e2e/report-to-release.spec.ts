@@ -1,5 +1,6 @@
-import type { Locator, Page } from 'playwright-core';
+import type { Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { castOf, send } from './support/cast.ts';
 import { choose, demoPhotoPath, fillRooftopReport, openReport } from './support/report-form.ts';
 import { signedIn } from './support/sign-in.ts';
 import { openStage } from './support/stage.ts';
@@ -11,16 +12,7 @@ const words = 'Brown band along the membrane under the curved steel edge, about 
 let stage: Stage;
 let caseNumber = 0;
 let receipt = '';
-const people = new Map<string, Page>();
-
-async function as(key: string, path: string): Promise<Page> {
-  const page = people.get(key) ?? (await signedIn(stage, key));
-  people.set(key, page);
-  await page.goto(path);
-  // Filling a field before the page has taken over its own markup can be undone by it.
-  await page.waitForLoadState('networkidle');
-  return page;
-}
+const as = castOf(() => stage);
 const casePath = (tab = '') => `/cases/${caseNumber}${tab}`;
 
 beforeAll(async () => {
@@ -215,12 +207,6 @@ describe('a rooftop scorch', () => {
     expect(text).not.toMatch(/Kvist|Farrant|Penhallow|Weir/u);
   });
 });
-
-/** Presses a button and waits until the server has answered the form. */
-async function send(page: Page, button: Locator): Promise<void> {
-  await Promise.all([page.waitForResponse((response) => response.request().method() === 'POST'), button.click()]);
-  await page.waitForLoadState('networkidle');
-}
 
 async function openFold(page: Page, button: string): Promise<void> {
   const fold = page.locator('details').filter({ has: page.locator(`button:has-text("${button}")`) }).first();

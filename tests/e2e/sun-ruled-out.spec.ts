@@ -1,7 +1,7 @@
-import type { Locator, Page } from 'playwright-core';
+import type { Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { castOf, send } from './support/cast.ts';
 import { choose, demoPhotoPath } from './support/report-form.ts';
-import { signedIn } from './support/sign-in.ts';
 import { openStage } from './support/stage.ts';
 import type { Stage } from './support/stage.ts';
 
@@ -60,20 +60,7 @@ const stories: readonly Story[] = [
 ];
 
 let stage: Stage;
-const people = new Map<string, Page>();
-
-async function as(key: string, path: string): Promise<Page> {
-  const page = people.get(key) ?? (await signedIn(stage, key));
-  people.set(key, page);
-  await page.goto(path);
-  await page.waitForLoadState('networkidle');
-  return page;
-}
-
-async function send(page: Page, button: Locator): Promise<void> {
-  await Promise.all([page.waitForResponse((response) => response.request().method() === 'POST'), button.click()]);
-  await page.waitForLoadState('networkidle');
-}
+const as = castOf(() => stage);
 
 async function report(story: Story): Promise<number> {
   const page = await as('maren', '/report');

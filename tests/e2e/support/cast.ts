@@ -1,0 +1,22 @@
+import type { Locator, Page } from 'playwright-core';
+import { signedIn } from './sign-in.ts';
+import type { Stage } from './stage.ts';
+
+/** The people of one story, each in a browser of their own that stays signed in. */
+export function castOf(stage: () => Stage): (key: string, path: string) => Promise<Page> {
+  const people = new Map<string, Page>();
+  return async (key, path) => {
+    const page = people.get(key) ?? (await signedIn(stage(), key));
+    people.set(key, page);
+    await page.goto(path);
+    // Filling a field before the page has taken over its own markup can be undone by it.
+    await page.waitForLoadState('networkidle');
+    return page;
+  };
+}
+
+/** Presses a button and waits until the server has answered the form. */
+export async function send(page: Page, button: Locator): Promise<void> {
+  await Promise.all([page.waitForResponse((response) => response.request().method() === 'POST'), button.click()]);
+  await page.waitForLoadState('networkidle');
+}
