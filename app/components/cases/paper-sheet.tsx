@@ -22,6 +22,8 @@ export interface PaperSheetProps {
 /** Two pages for the clipboard, in the order of the measurements page. */
 export function PaperSheet(props: PaperSheetProps) {
   return (
+    // A frame that scrolls must take the keyboard.
+    // eslint-disable-next-line jsx-a11y/no-noninteractive-tabindex
     <div className="relative space-y-6 overflow-x-auto print:space-y-0 print:overflow-visible" role="region" aria-label="Sheet for paper" tabIndex={0}>
       <section className={`paper-sheet ${props.isLetter ? 'paper-letter' : ''}`} aria-label="Sheet 1 of 2">
         <SheetHead {...props} page={1} />
