@@ -66,7 +66,7 @@ export function ReportForm({ view, state, formRef, draft, sending, photos }: Rep
         // A device that keeps nothing sends the form as it stands, files and all.
         if (!keeps) return;
         event.preventDefault();
-        void draft.keep().then(photos.dismissRefused).then(sending.send);
+        void draft.keep().then(photos.added).then(photos.dismissRefused).then(sending.send);
       }}
     >
       <input type="hidden" name="clientId" value={clientId} />

@@ -14,6 +14,8 @@ export interface ReportPhotos {
   /** This device had no room for some: they live as long as the page. */
   readonly roomless: boolean;
   readonly add: (files: readonly File[], smaller: boolean) => Promise<void>;
+  /** Resolves once every chosen file is kept: until then a report would leave without it. */
+  readonly added: () => Promise<void>;
   readonly say: (key: string, details: Partial<PhotoDetails>) => void;
   readonly move: (key: string, by: -1 | 1) => void;
   readonly takeOff: (key: string) => void;
@@ -50,6 +52,7 @@ export function useReportPhotos({ clientId, stored, maxBytes, roomless: files, k
   const [roomless, setRoomless] = useState(false);
   const previews = useRef(new Map<string, string>());
   const pause = useRef(0);
+  const adding = useRef<Promise<void>>(Promise.resolve());
 
   const reload = useCallback(() => listPhotos(clientId).then(setPhotos, () => undefined), [clientId]);
   useEffect(() => {
@@ -74,7 +77,7 @@ export function useReportPhotos({ clientId, stored, maxBytes, roomless: files, k
     pause.current = window.setTimeout(onChange, pauseMs);
   }, [onChange]);
 
-  const add = useCallback(
+  const keepChosen = useCallback(
     async (chosen: readonly File[], smaller: boolean) => {
       await keep();
       const from = (await listPhotos(clientId)).length;
@@ -94,6 +97,16 @@ export function useReportPhotos({ clientId, stored, maxBytes, roomless: files, k
     },
     [clientId, maxBytes, files, keep, reload, onChange],
   );
+  const add = useCallback(
+    (chosen: readonly File[], smaller: boolean) => {
+      // One choice after the other, so that each photo has a place of its own; a choice that failed stops no later one.
+      const adds = adding.current.then(() => keepChosen(chosen, smaller));
+      adding.current = adds.catch(() => undefined);
+      return adds;
+    },
+    [keepChosen],
+  );
+  const added = useCallback(() => adding.current, []);
 
   const say = useCallback(
     (key: string, details: Partial<PhotoDetails>) => {
@@ -135,7 +148,7 @@ export function useReportPhotos({ clientId, stored, maxBytes, roomless: files, k
   );
   const copyOf = useCallback((photo: KeptPhoto) => (photo.photoId ? `/photos/${photo.photoId}/thumbnail?report=${clientId}` : ''), [clientId]);
   const onTheWay = photos.filter((photo) => photo.state === 'waiting' && photo.removedAt === null).length;
-  return { photos, onTheWay, roomless: roomless && onTheWay > 0, add, say, move, takeOff, takeBack, dismiss, dismissRefused, previewOf, copyOf };
+  return { photos, onTheWay, roomless: roomless && onTheWay > 0, add, added, say, move, takeOff, takeBack, dismiss, dismissRefused, previewOf, copyOf };
 }
 
 /** The page and the team's side may have parted: another device, a page without a script, a store put back from a copy. */
@@ -150,4 +163,3 @@ async function reconcile(clientId: string, stored: readonly StoredPhoto[]): Prom
     else await forgetPhoto(photo.key);
   }
 }
-
