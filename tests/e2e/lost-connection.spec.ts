@@ -78,6 +78,21 @@ describe('a connection that breaks', () => {
     expect((await photosOf('Cut between photos.'))[0]).toHaveLength(3);
   });
 
+  test('by Send pressed at once, while a slow phone still reads the photos', async () => {
+    await write('Sent in a hurry.');
+    await page.evaluate(() => {
+      const { arrayBuffer } = Blob.prototype;
+      Blob.prototype.arrayBuffer = async function slow() {
+        await new Promise((resolve) => { setTimeout(resolve, 600); });
+        return arrayBuffer.call(this);
+      };
+    });
+    await choose(photos);
+    await send();
+    await received();
+    expect((await photosOf('Sent in a hurry.'))[0]).toHaveLength(3);
+  });
+
   test('after a photo was stored, before its answer', async () => {
     await write('The answer about a photo was lost.');
     await withRequest(photoPosts, 1, answerLost);
