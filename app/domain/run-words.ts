@@ -129,6 +129,9 @@ const assumptionFields: Readonly<Record<string, string>> = {
   'optic.centreBowM': 'Bow at the centre',
   'optic.sealedUnit': 'Sealed unit',
   opticSigmaRel: 'Spread of the optic',
+  throughputSigmaRel: 'Spread of what the optic passes',
+  glassSigmaRel: 'Spread of the glass in the path',
+  ignitionTimeSigmaRel: 'Spread of times to ignition',
   'target.solarAbsorptance': 'Share of light absorbed',
 };
 export const assumptionLabel = (field: string): string => assumptionFields[field] ?? field;

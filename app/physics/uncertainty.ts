@@ -1,5 +1,6 @@
 import type { Band } from './model.ts';
 import { normalQuantile, normalShare } from './normal-quantile.ts';
+import { samplingSigmas } from './sampling-sigmas.data.ts';
 import { ScrambledSobol } from './sobol.ts';
 import { clearSkyAt, type Air } from '#app/physics/sky/clear-sky.ts';
 import { angstromExponent, classSigmaLn } from '#app/physics/sky/climate-classes.data.ts';
@@ -95,9 +96,6 @@ export interface SampledState {
   readonly ignites: boolean | null;
 }
 
-/** One sigma of measured times to ignition, relative: ±30 % between laboratories and repeats. */
-const sigmaIgnitionTimeRel = 0.3;
-
 /** What each dimension of a sample varies, in order; every draw is a standard normal number. */
 const inputNames = [
   'bearing of the mark', 'elevation of the mark', 'distance of the mark', 'clock', 'focal length or radius', 'aerosol or measured beam', 'water vapour',
@@ -173,7 +171,7 @@ export function stateFor(plan: SamplingPlan, draw: (index: number) => number): S
 
 function ignites(ignition: IgnitionPlan, fluxKwm2: number, beamAtOpticWm2: number, absorptanceShare: number, slowness: number): boolean {
   const seconds = ignition.secondsAt(fluxKwm2, absorptanceShare);
-  return seconds !== null && seconds * Math.max(0.1, 1 + sigmaIgnitionTimeRel * slowness) <= ignition.dwellS(beamAtOpticWm2);
+  return seconds !== null && seconds * Math.max(0.1, 1 + samplingSigmas.ignitionTime.sigmaRel * slowness) <= ignition.dwellS(beamAtOpticWm2);
 }
 
 /** Effect of one input alone, at minus and plus one sigma, on the flux at the mark. */

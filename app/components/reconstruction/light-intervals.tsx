@@ -21,7 +21,7 @@ export function LightIntervals({ light, zone }: LightIntervalsProps) {
   const day = (utc: string) => (several ? `${formatIsoDay(localDay(Date.parse(utc), zone))}, ` : '');
   return (
     <section aria-labelledby="light-on-mark">
-      <SectionHeading id="light-on-mark" note={`Lit: some part of the optic throws light on the middle of the mark, ${plainNumber(light.litFromSuns)} suns or more. Focused: ${plainNumber(light.focusedFromSuns)} suns or more.`}>
+      <SectionHeading id="light-on-mark" note={`Lit: some part of the optic throws light on the middle of the mark, ${plainNumber(light.litFromSuns)} suns or more. Focused: ${plainNumber(light.focusedFromSuns)} suns or more. Both limits are our own choice, unverified.`}>
         Lit and focused
       </SectionHeading>
       {rows.length === 0 ? (

@@ -6,10 +6,10 @@ import type { Setting } from './setting.ts';
 import { tracedSunsOnMark } from './traced-focus.ts';
 import { lightReaches, markDiscM, nearTheSpot, type JudgedMinute } from './window.ts';
 
-/** From here a wide pane does more than add its own reflection to the day. [suns] */
+/** From here a wide pane does more than add its own reflection to the day; our choice, unverified. [suns] */
 export const focusedFromSuns = 1.5;
 
-/** Less than this is the glimmer that every curved surface throws about; a clear double pane reflects twice as much. [suns] */
+/** Less than this is the glimmer that every curved surface throws about; a clear double pane reflects twice as much. Our choice, unverified. [suns] */
 export const litFromSuns = 0.05;
 
 /** Widest spread of light beyond the optic's own shadow: sun, slope errors and pane tilts together. [rad] */

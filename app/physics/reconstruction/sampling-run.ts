@@ -7,6 +7,7 @@ import type { Beam, FocusModel } from '#app/physics/optics/closed-form/beam.ts';
 import type { Optic } from '#app/physics/optics/optic.ts';
 import type { Reach } from '#app/physics/reach.ts';
 import type { DirectBeam } from '#app/physics/sky/direct-beam.ts';
+import { samplingSigmas } from '#app/physics/sampling-sigmas.data.ts';
 import { extraterrestrialWm2 } from '#app/physics/sky/extraterrestrial.ts';
 import type { SpotMotion } from '#app/physics/trail.ts';
 import { samplePlan, type BeamSpread, type IgnitionPlan, type PlaceInBeam, type Sampling, type SamplingPlan, type TrackPoint } from '#app/physics/uncertainty.ts';
@@ -21,9 +22,6 @@ const defaultSamples = 4096;
 
 /** One sigma of a measured beam by kind. Measured 3–5 %, archive 20 %: common practice. */
 const beamSigma = { measured: 0.04, derived: 0.1, 'hourly-archive': 0.2 } as const;
-
-/** One sigma of the transmittance of glass in the path. Common practice. */
-const glassSigmaRel = 0.05;
 
 function beamSpread(minute: JudgedMinute, light: DirectBeam, setting: Setting): BeamSpread | null {
   if (light.likelyWm2 === null) return null;
@@ -78,9 +76,6 @@ function ignitionPlan(setting: Setting, { traced, motion }: SamplingParts): Igni
     dwellS: (beamWm2) => (beamWm2 <= 0 ? 0 : traced.contourWidthM((reach.thresholdKwm2 * 1000) / beamWm2) / motion.speedMPerS),
   };
 }
-
-/** One sigma of what an optic passes or reflects, where it is a number of the input. Common practice. */
-const throughputSigmaRel = 0.05;
 
 /** Relative distances between which the samples lie: four sigmas of the optic and of the survey. */
 function relativeSpan(mark: Mark, opticSigmaRel: number): readonly [near: number, far: number] {
@@ -137,8 +132,8 @@ function planOf(known: Known, parts: SamplingParts, spread: BeamSpread, concentr
     sigmaOpticRel: setting.opticSigmaRel,
     beam: spread,
     transmittance: light.transmittance,
-    sigmaTransmittanceRel: setting.opening === undefined || setting.opening.transmittance >= 1 ? 0 : glassSigmaRel,
-    sigmaThroughputRel: 'reflectance' in optic || 'transmittance' in optic ? throughputSigmaRel : 0,
+    sigmaTransmittanceRel: setting.opening === undefined || setting.opening.transmittance >= 1 ? 0 : samplingSigmas.glass.sigmaRel,
+    sigmaThroughputRel: 'reflectance' in optic || 'transmittance' in optic ? samplingSigmas.throughput.sigmaRel : 0,
     lnPerSlopeSigma: traced?.lnPerSlopeSigma ?? 0,
     lateralToleranceM: lateralToleranceM(reach, mark, model.focusKind),
     markHalfM: markHalfM(mark, model.focusKind),

@@ -10,6 +10,7 @@ import { focusModelOf } from '#app/physics/optics/closed-form/focus-model.ts';
 import { measuredOpticSigmaRel, slopeErrors } from '#app/physics/optics/optic-defaults.data.ts';
 import { refractiveMaterials } from '#app/physics/optics/refractive-materials.data.ts';
 import { focusesForward, reachOf, type Reach } from '#app/physics/reach.ts';
+import { samplingSigmas } from '#app/physics/sampling-sigmas.data.ts';
 import { settleSite, type Site } from '#app/physics/site.ts';
 import { openingTransmittance, readDniSeries, type DniSeries } from '#app/physics/sky/direct-beam.ts';
 import { clearSkyAt } from '#app/physics/sky/clear-sky.ts';
@@ -91,6 +92,17 @@ function obstacleAssumptions({ skyline, occluders, occluderSigmaM }: SettledInpu
   return list;
 }
 
+/** Spreads that the samples take and no field of the input states. */
+function spreadAssumptions({ optic, opening }: SettledInput, material: TargetMaterial | null): Assumption[] {
+  const { throughput, glass, ignitionTime } = samplingSigmas;
+  const line = (field: string, { sigmaRel, source }: (typeof samplingSigmas)[keyof typeof samplingSigmas]): Assumption => ({ field, value: `±${Math.round(sigmaRel * 100)} %, one sigma`, source });
+  return [
+    ...(optic !== undefined && ('reflectance' in optic || 'transmittance' in optic) ? [line('throughputSigmaRel', throughput)] : []),
+    ...(opening !== undefined && opening.transmittance < 1 ? [line('glassSigmaRel', glass)] : []),
+    ...(optic !== undefined && material !== null && material.ignition.length > 0 ? [line('ignitionTimeSigmaRel', ignitionTime)] : []),
+  ];
+}
+
 /** Direction of the sun by which the reach is settled: the required one, else the highest that meets the working face. */
 function referenceSun(model: FocusModel, required: RequiredSun | null, track: readonly SunMinute[]): SunMinute | null {
   let best: SunMinute | null = null;
@@ -166,6 +178,6 @@ export function settle(given: ReconstructionInput): Setting {
       skylineSigmaDeg: input.skyline?.sigmaDeg ?? 0,
       opening: input.opening, mask: maskOf(input, occluders, model), model, mark, reach,
     },
-    assumptions: [...site.assumptions, ...(ready?.assumptions ?? []), ...opticAssumptions(input), ...obstacleAssumptions(input)],
+    assumptions: [...site.assumptions, ...(ready?.assumptions ?? []), ...opticAssumptions(input), ...obstacleAssumptions(input), ...spreadAssumptions(input, material)],
   };
 }

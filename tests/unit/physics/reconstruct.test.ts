@@ -209,6 +209,11 @@ describe('runs', () => {
     expect(result.assumptions.find((assumption) => assumption.field === 'sky.aod500')?.source.verified).toBe(false);
   });
 
+  test('a spread that nobody stated is an assumption, and one that rests on no publication says so', () => {
+    const { assumptions } = reconstruct({ ...exampleInput, ...fast });
+    expect(assumptions.find(({ field }) => field === 'ignitionTimeSigmaRel')?.source.verified).toBe(false);
+  });
+
   test('progress runs from low to all', () => {
     const seen: number[] = [];
     reconstruct({ ...exampleInput, ...fast }, (done, total) => seen.push(done / total));
