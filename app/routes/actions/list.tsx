@@ -127,7 +127,7 @@ export async function action({ request, context }: Route.ActionArgs) {
   }
 }
 
-export const meta: Route.MetaFunction = () => [{ title: 'Actions | Scorchline' }];
+export const meta: Route.MetaFunction = () => [{ title: 'Actions · Scorchline' }];
 
 const bulkFormId = 'bulk-form';
 

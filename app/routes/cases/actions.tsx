@@ -94,7 +94,7 @@ async function step(intent: Exclude<z.infer<typeof intents>, 'add'>, actor: Acto
   }
 }
 
-export const meta: Route.MetaFunction = ({ params }) => [{ title: `Case ${params.caseNumber}, actions | Scorchline` }];
+export const meta: Route.MetaFunction = ({ params }) => [{ title: `Case ${params.caseNumber}, actions · Scorchline` }];
 
 export default function CaseActions({ loaderData: page, actionData }: Route.ComponentProps) {
   const { pathname } = useLocation();

@@ -90,7 +90,7 @@ const act = {
   },
 };
 
-export const meta: Route.MetaFunction = ({ params }) => [{ title: `Item ${params.caseNumber}-${params.letter} | Scorchline` }];
+export const meta: Route.MetaFunction = ({ params }) => [{ title: `Item ${params.caseNumber}-${params.letter} · Scorchline` }];
 
 export default function EvidenceItem({ loaderData: page, actionData, params }: Route.ComponentProps) {
   const { item } = page;

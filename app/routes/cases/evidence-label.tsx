@@ -21,7 +21,7 @@ export function loader({ request, context, params }: Route.LoaderArgs) {
   });
 }
 
-export const meta: Route.MetaFunction = ({ params }) => [{ title: `Label ${params.caseNumber}-${params.letter} | Scorchline` }];
+export const meta: Route.MetaFunction = ({ params }) => [{ title: `Label ${params.caseNumber}-${params.letter} · Scorchline` }];
 
 /** A label of 100 by 62 mm: number, seal, and a code that leads to the custody page. No personal words on its front but who collected it. */
 export default function EvidenceLabel({ loaderData: label, params }: Route.ComponentProps) {

@@ -72,7 +72,7 @@ async function addDocument(actor: Actor, caseNumber: number, form: FormData, fil
   return redirect(`${href('/cases/:caseNumber/evidence', { caseNumber: String(caseNumber) })}#documents`, 303);
 }
 
-export const meta: Route.MetaFunction = ({ params }) => [{ title: `Case ${params.caseNumber}, evidence | Scorchline` }];
+export const meta: Route.MetaFunction = ({ params }) => [{ title: `Case ${params.caseNumber}, evidence · Scorchline` }];
 
 export default function Evidence({ loaderData: page, actionData }: Route.ComponentProps) {
   const collecting = answerTo(actionData, 'collect');

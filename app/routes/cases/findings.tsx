@@ -124,7 +124,7 @@ async function reviewMove(intent: 'send-back' | 'sign', { actor, caseNumber, for
   return null;
 }
 
-export const meta: Route.MetaFunction = ({ params }) => [{ title: `Case ${params.caseNumber}, finding | Scorchline` }];
+export const meta: Route.MetaFunction = ({ params }) => [{ title: `Case ${params.caseNumber}, finding · Scorchline` }];
 
 export default function Findings({ loaderData: page, actionData }: Route.ComponentProps) {
   const signing = answerTo(actionData, 'sign');

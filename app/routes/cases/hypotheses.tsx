@@ -107,7 +107,7 @@ export async function action({ request, context, params }: Route.ActionArgs) {
   }
 }
 
-export const meta: Route.MetaFunction = ({ params }) => [{ title: `Case ${params.caseNumber}, hypotheses | Scorchline` }];
+export const meta: Route.MetaFunction = ({ params }) => [{ title: `Case ${params.caseNumber}, hypotheses · Scorchline` }];
 
 export default function Hypotheses({ loaderData, actionData }: Route.ComponentProps) {
   const { caseNumber, hypotheses, form, engine } = loaderData;

@@ -29,6 +29,8 @@ export async function loader({ request, context, params }: Route.LoaderArgs) {
   });
 }
 
+export const meta: Route.MetaFunction = ({ params }) => [{ title: `Case ${params.caseNumber}, log · Scorchline` }];
+
 export default function CaseLog({ loaderData }: Route.ComponentProps) {
   const path = `${href('/cases/:caseNumber', { caseNumber: String(loaderData.caseNumber) })}/log`;
   return (

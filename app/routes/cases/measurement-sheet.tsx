@@ -49,7 +49,7 @@ export function loader({ request, context, params }: Route.LoaderArgs) {
   });
 }
 
-export const meta: Route.MetaFunction = ({ params }) => [{ title: `Measurement sheet, case ${params.caseNumber} | Scorchline` }];
+export const meta: Route.MetaFunction = ({ params }) => [{ title: `Measurement sheet, case ${params.caseNumber} · Scorchline` }];
 
 export default function MeasurementSheet({ loaderData: { paper, ...sheet } }: Route.ComponentProps) {
   const hydrated = useHydrated();

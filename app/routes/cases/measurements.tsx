@@ -1,4 +1,3 @@
-import { href, redirect } from 'react-router';
 import type { Route } from './+types/measurements';
 import { db } from '#db/client.server.ts';
 import { getMeasuredCase } from '#db/queries/measure-pages.server.ts';
@@ -15,10 +14,10 @@ import { formatDayClock, localDay } from '#app/domain/local-time.ts';
 import { declinationWords, sceneStamps, skylineWords } from '#app/domain/measurements-view.ts';
 import { sceneToFields } from '#app/domain/scene-form-fields.ts';
 import { sceneFacts } from '#app/domain/scene-words.ts';
-import { problemFromError, typedValues } from '#app/http/form-result.server.ts';
 import { respond } from '#app/http/to-response.server.ts';
 import { declinationAt } from '#app/services/scenes/declination.server.ts';
 import { saveScene } from '#app/services/scenes/save-scene.server.ts';
+import { saveVersion } from './save-version.server.ts';
 
 export async function loader({ request, context, params }: Route.LoaderArgs) {
   return respond(async () => {
@@ -55,20 +54,9 @@ export async function loader({ request, context, params }: Route.LoaderArgs) {
   });
 }
 
-export async function action({ request, context, params }: Route.ActionArgs) {
-  return respond(async () => {
-    const actor = requireActor(context, request);
-    const caseNumber = readCaseNumber(params.caseNumber);
-    const form = await request.formData();
-    const typed = typedValues(form);
-    try {
-      await saveScene({ actor, caseNumber, baseVersion: Number(typed['baseVersion']), note: typed['note'] ?? '', typed, now: new Date() });
-    } catch (error) {
-      return problemFromError('save-scene', form, error);
-    }
-    return redirect(href('/cases/:caseNumber/measurements', { caseNumber: String(caseNumber) }), 303);
-  });
-}
+export const action = (args: Route.ActionArgs) => saveVersion(args, 'save-scene', saveScene);
+
+export const meta: Route.MetaFunction = ({ params }) => [{ title: `Case ${params.caseNumber}, measurements · Scorchline` }];
 
 export default function Measurements({ loaderData: data, actionData: problem }: Route.ComponentProps) {
   return (

@@ -64,7 +64,7 @@ export async function action({ request, context, params }: Route.ActionArgs) {
   });
 }
 
-export const meta: Route.MetaFunction = ({ params }) => [{ title: `Case ${params.caseNumber}, marks on photo ${params.label} | Scorchline` }];
+export const meta: Route.MetaFunction = ({ params }) => [{ title: `Case ${params.caseNumber}, marks on photo ${params.label} · Scorchline` }];
 
 export default function PhotoMarks({ loaderData: { photo, marks, mayDraw, whoDraws }, actionData, params }: Route.ComponentProps) {
   const [shown, setShown] = useState(true);

@@ -45,6 +45,8 @@ export function action({ request, context, params }: Route.ActionArgs) {
   });
 }
 
+export const meta: Route.MetaFunction = ({ params }) => [{ title: `Case ${params.caseNumber}, measuring on a photo · Scorchline` }];
+
 export default function PhotoMeasurePage({ loaderData: data, actionData: problem }: Route.ComponentProps) {
   const sheet = href('/cases/:caseNumber/photos', { caseNumber: String(data.caseNumber) });
   return (

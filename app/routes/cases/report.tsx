@@ -16,7 +16,7 @@ export function loader({ request, context, params }: Route.LoaderArgs) {
   });
 }
 
-export const meta: Route.MetaFunction = ({ params }) => [{ title: `Case ${params.caseNumber}, report | Scorchline` }];
+export const meta: Route.MetaFunction = ({ params }) => [{ title: `Case ${params.caseNumber}, report · Scorchline` }];
 
 export default function Report({ loaderData: report, params }: Route.ComponentProps) {
   const file = `${href('/cases/:caseNumber/report.pdf', params)}${report.version === null ? '' : `?version=${report.version}`}`;

@@ -1,4 +1,3 @@
-import { href, redirect } from 'react-router';
 import type { Route } from './+types/scene';
 import { db } from '#db/client.server.ts';
 import { getMeasuredCase } from '#db/queries/measure-pages.server.ts';
@@ -9,9 +8,9 @@ import { readCaseNumber } from '#app/domain/case-number.ts';
 import { formatDayClock, fromLocalInput, localDay } from '#app/domain/local-time.ts';
 import { sceneToFields } from '#app/domain/scene-form-fields.ts';
 import { weatherWindow } from '#app/domain/weather-window.ts';
-import { problemFromError, typedValues } from '#app/http/form-result.server.ts';
 import { respond } from '#app/http/to-response.server.ts';
 import { saveScene } from '#app/services/scenes/save-scene.server.ts';
+import { saveVersion } from './save-version.server.ts';
 
 export function loader({ request, context, params }: Route.LoaderArgs) {
   return respond(async () => {
@@ -48,20 +47,9 @@ function drawnSpan(window: { readonly from: Date; readonly to: Date } | null, zo
   return { fromUtc: at('04:00').toISOString(), toUtc: at('22:00').toISOString(), words: 'Today: no onset window is known yet.' };
 }
 
-export function action({ request, context, params }: Route.ActionArgs) {
-  return respond(async () => {
-    const actor = requireActor(context, request);
-    const caseNumber = readCaseNumber(params.caseNumber);
-    const form = await request.formData();
-    const typed = typedValues(form);
-    try {
-      await saveScene({ actor, caseNumber, baseVersion: Number(typed['baseVersion']), note: typed['note'] ?? '', typed, now: new Date() });
-    } catch (error) {
-      return problemFromError('save-scene', form, error);
-    }
-    return redirect(href('/cases/:caseNumber/scene', { caseNumber: String(caseNumber) }), 303);
-  });
-}
+export const action = (args: Route.ActionArgs) => saveVersion(args, 'save-scene', saveScene);
+
+export const meta: Route.MetaFunction = ({ params }) => [{ title: `Case ${params.caseNumber}, plan and section · Scorchline` }];
 
 export default function ScenePage({ loaderData: data, actionData: problem }: Route.ComponentProps) {
   return (

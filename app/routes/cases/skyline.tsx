@@ -1,4 +1,3 @@
-import { href, redirect } from 'react-router';
 import type { Route } from './+types/skyline';
 import { db } from '#db/client.server.ts';
 import { getMeasuredCase } from '#db/queries/measure-pages.server.ts';
@@ -13,9 +12,9 @@ import { photoCard } from '#app/domain/photo-view.ts';
 import { skylineRows } from '#app/domain/skyline-form.ts';
 import { sunLine, turningDays } from '#app/domain/sun-lines.ts';
 import { weatherWindow } from '#app/domain/weather-window.ts';
-import { problemFromError, typedValues } from '#app/http/form-result.server.ts';
 import { respond } from '#app/http/to-response.server.ts';
 import { saveCaseSkyline } from '#app/services/scenes/save-skyline.server.ts';
+import { saveVersion } from './save-version.server.ts';
 
 export function loader({ request, context, params }: Route.LoaderArgs) {
   return respond(async () => {
@@ -40,20 +39,9 @@ export function loader({ request, context, params }: Route.LoaderArgs) {
   });
 }
 
-export function action({ request, context, params }: Route.ActionArgs) {
-  return respond(async () => {
-    const actor = requireActor(context, request);
-    const caseNumber = readCaseNumber(params.caseNumber);
-    const form = await request.formData();
-    const typed = typedValues(form);
-    try {
-      await saveCaseSkyline({ actor, caseNumber, baseVersion: Number(typed['baseVersion']), note: typed['note'] ?? '', typed });
-    } catch (error) {
-      return problemFromError('save-skyline', form, error);
-    }
-    return redirect(href('/cases/:caseNumber/skyline', { caseNumber: String(caseNumber) }), 303);
-  });
-}
+export const action = (args: Route.ActionArgs) => saveVersion(args, 'save-skyline', saveCaseSkyline);
+
+export const meta: Route.MetaFunction = ({ params }) => [{ title: `Case ${params.caseNumber}, skyline · Scorchline` }];
 
 export default function CaseSkyline({ loaderData: data, actionData: problem }: Route.ComponentProps) {
   return (

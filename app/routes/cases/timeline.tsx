@@ -55,7 +55,7 @@ export async function action({ request, context, params }: Route.ActionArgs) {
   });
 }
 
-export const meta: Route.MetaFunction = ({ params }) => [{ title: `Case ${params.caseNumber}, timeline | Scorchline` }];
+export const meta: Route.MetaFunction = ({ params }) => [{ title: `Case ${params.caseNumber}, timeline · Scorchline` }];
 
 export default function Timeline({ loaderData: page, actionData }: Route.ComponentProps) {
   return (

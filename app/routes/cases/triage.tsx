@@ -64,6 +64,8 @@ export async function action({ request, context, params }: Route.ActionArgs) {
   });
 }
 
+export const meta: Route.MetaFunction = ({ params }) => [{ title: `Case ${params.caseNumber}, facts and risk · Scorchline` }];
+
 export default function Triage({ loaderData: { view, workedOut }, actionData: problem }: Route.ComponentProps) {
   const head = useCaseHeader();
   const casePath = href('/cases/:caseNumber', { caseNumber: String(head.number) });

@@ -85,6 +85,8 @@ async function perform(intent: string, actor: Actor, caseNumber: number, typed: 
   return addWeather({ actor, caseNumber, kind: 'hand', source: source.source, values: hand.values, fileSha256: null, mapping: {} });
 }
 
+export const meta: Route.MetaFunction = ({ params }) => [{ title: `Case ${params.caseNumber}, weather · Scorchline` }];
+
 export default function WeatherPage({ loaderData: page, actionData }: Route.ComponentProps) {
   const stage = actionData && 'stage' in actionData ? actionData.stage : null;
   const problem = actionData && 'intent' in actionData ? actionData : undefined;

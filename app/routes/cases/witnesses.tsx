@@ -57,7 +57,7 @@ export async function action({ request, context, params }: Route.ActionArgs) {
   });
 }
 
-export const meta: Route.MetaFunction = ({ params }) => [{ title: `Case ${params.caseNumber}, witnesses | Scorchline` }];
+export const meta: Route.MetaFunction = ({ params }) => [{ title: `Case ${params.caseNumber}, witnesses · Scorchline` }];
 
 export default function Witnesses({ loaderData: page, actionData }: Route.ComponentProps) {
   return (
