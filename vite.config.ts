@@ -18,8 +18,9 @@ export default defineConfig(({ mode }) => ({
     passWithNoTests: false,
     projects: [
       { extends: true, test: { name: 'architecture', include: ['tests/architecture.test.ts'] } },
-      { extends: true, test: { name: 'unit', include: ['tests/unit/**/*.test.{ts,tsx}'], setupFiles: quiet, testTimeout: 60_000 } },
-      { extends: true, test: { name: 'handbook', include: ['tests/handbook/**/*.test.ts'], setupFiles: quiet, testTimeout: 60_000 } },
+      // Pure code keeps nothing from one file to the next, so that its modules are loaded once.
+      { extends: true, test: { name: 'unit', include: ['tests/unit/**/*.test.{ts,tsx}'], setupFiles: quiet, testTimeout: 60_000, isolate: false } },
+      { extends: true, test: { name: 'handbook', include: ['tests/handbook/**/*.test.ts'], setupFiles: quiet, testTimeout: 60_000, isolate: false } },
       {
         extends: true,
         test: {

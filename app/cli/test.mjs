@@ -45,8 +45,8 @@ const steps = {
   },
 };
 
-/** Steps that keep one core each run side by side; the others use both. */
-const inOrder = [['typecheck', 'lint'], ['architecture'], ['unit'], ['handbook'], ['db'], ['e2e']];
+/** Stages one after the other. Lanes of a stage run side by side: the linter keeps one core only, and would leave the other idle. */
+const stages = [[['lint'], ['typecheck', 'architecture', 'handbook', 'unit']], [['db']], [['e2e']]];
 
 onStopRequest(() => {
   interrupted = true;
@@ -73,9 +73,13 @@ async function main(wanted) {
   if (unknown.length > 0) throw new Error(`No such step: ${unknown.join(', ')}. Steps: ${Object.keys(steps).join(', ')}.`);
   const env = await timed('set-up', provision);
   const asked = (name) => wanted.length === 0 || wanted.includes(name);
-  for (const group of inOrder) {
+  for (const lanes of stages) await Promise.all(lanes.map((lane) => runLane(lane.filter(asked), env)));
+}
+
+async function runLane(names, env) {
+  for (const name of names) {
     if (interrupted) return;
-    await Promise.all(group.filter(asked).map((name) => runStep(name, env)));
+    await runStep(name, env);
   }
 }
 

@@ -14,15 +14,15 @@ export function findPostgresServers() {
     .sort((a, b) => Number(b.version) - Number(a.version));
 }
 
-/** Path of Debian's Chromium, or null. */
+/** Path of Debian's Chromium, or null. Without the windows of a whole browser it takes a quarter less time. */
 export function findChromium() {
-  return ['/usr/bin/chromium', '/usr/bin/chromium-browser'].find((path) => existsSync(path)) ?? null;
+  return ['/usr/bin/chromium-headless-shell', '/usr/bin/chromium', '/usr/bin/chromium-browser'].find((path) => existsSync(path)) ?? null;
 }
 
 /** What each part needs, and how to see that it is there. */
 export const requirements = {
   postgres: { packages: ['postgresql'], present: () => findPostgresServers().length > 0 },
-  chromium: { packages: ['chromium', 'fonts-dejavu-core'], present: () => findChromium() !== null },
+  chromium: { packages: ['chromium-headless-shell', 'fonts-dejavu-core'], present: () => findChromium() !== null },
 };
 
 /**

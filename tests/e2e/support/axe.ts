@@ -14,7 +14,7 @@ export async function axeViolations(page: Page, paths: readonly string[]): Promi
     else await page.goto(path);
     await page.waitForLoadState('networkidle');
     // No page of ours has a frame, for which axe would otherwise open a page more.
-    const { violations } = await new AxeBuilder({ page }).setLegacyMode(true).withTags(tags).analyze();
+    const { violations } = await new AxeBuilder({ page }).setLegacyMode(true).options({ resultTypes: ['violations'] }).withTags(tags).analyze();
     found.push(...violations.map((violation) => `${path}: ${violation.id}: ${violation.nodes.map((node) => node.target.join(' ')).slice(0, 3).join('; ')}`));
   }
   return found;

@@ -18,7 +18,7 @@ const folder = mkdtempSync(join(tmpdir(), 'reconstruct-'));
 afterAll(() => rmSync(folder, { recursive: true }));
 
 function run(...args: readonly string[]) {
-  return spawnSync('npx', ['tsx', 'app/cli/reconstruct.ts', ...args], { encoding: 'utf8' });
+  return spawnSync(process.execPath, ['--import', 'tsx', 'app/cli/reconstruct.ts', ...args], { encoding: 'utf8' });
 }
 
 function inputFile(name: string, content: string): string {
