@@ -2,8 +2,11 @@ import type { Locator, Page } from 'playwright-core';
 import { signedIn } from './sign-in.ts';
 import type { Stage } from './stage.ts';
 
+/** The page of one person, opened at an address. */
+export type Cast = (key: string, path: string) => Promise<Page>;
+
 /** The people of one story, each in a browser of their own that stays signed in. */
-export function castOf(stage: () => Stage): (key: string, path: string) => Promise<Page> {
+export function castOf(stage: () => Stage): Cast {
   const people = new Map<string, Page>();
   return async (key, path) => {
     const page = people.get(key) ?? (await signedIn(stage(), key));
