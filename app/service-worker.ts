@@ -1,6 +1,7 @@
 import { listUnsent } from '#app/components/report/kept-reports.ts';
 import { postFromWorker } from '#app/components/report/post-report.ts';
 import { deliverAlone } from '#app/components/report/report-sender.ts';
+import { takenPrefix, travelsAlong } from '#app/components/report/taken-pages.ts';
 
 /** Put in when the script is bundled: what the report page needs, and a name that grows with every build. */
 declare const precacheList: readonly string[];
@@ -37,7 +38,7 @@ const shell = '/report?shell';
 /** A page that has not come after this long is opened from the device: one bar of signal is often none. [ms] */
 const patienceMs = 6_000;
 
-/** Nothing but the files of the build and the empty page is ever kept: no page that somebody's session gave. */
+/** Nothing but the files of the build and the empty page is kept by itself: a page that somebody's session gave only when that person takes it along. */
 async function install(): Promise<void> {
   const cache = await caches.open(cacheName);
   await cache.addAll(precacheList.map((address) => new Request(new URL(address, location.href), { cache: 'no-cache' })));
@@ -60,7 +61,8 @@ async function kept(address: string): Promise<Response | undefined> {
   return current ?? caches.match(address);
 }
 
-async function reportPage(request: Request): Promise<Response> {
+/** The page from the team; when it does not come in time, the one on this device. */
+async function pageOr(request: Request, onDevice: () => Promise<Response | undefined>): Promise<Response> {
   const late = new Promise<null>((resolve) => {
     setTimeout(() => resolve(null), patienceMs);
   });
@@ -69,9 +71,13 @@ async function reportPage(request: Request): Promise<Response> {
     (answer) => (answer.status >= 502 ? null : answer),
     () => null,
   );
-  const answer = (await Promise.race([fromTeam, late])) ?? (await kept(shell));
+  const answer = (await Promise.race([fromTeam, late])) ?? (await onDevice());
   return answer ?? (await fromTeam) ?? Response.error();
 }
+
+/** A page that somebody took along; the address may carry more than the copy's. */
+const takenPage = async (path: string): Promise<Response | undefined> =>
+  (await caches.has(takenPrefix + path)) ? (await caches.open(takenPrefix + path)).match(path, { ignoreVary: true }) : undefined;
 
 const keptFile = async (request: Request): Promise<Response> => (await kept(request.url)) ?? fetch(request);
 
@@ -80,7 +86,8 @@ function onFetch(event: FetchEvent): void {
   const address = new URL(request.url);
   if (request.method !== 'GET' || address.origin !== location.origin) return;
   if (request.mode === 'navigate') {
-    if (address.pathname === '/report' && !address.searchParams.has('shell')) event.respondWith(reportPage(request));
+    if (address.pathname === '/report' && !address.searchParams.has('shell')) event.respondWith(pageOr(request, () => kept(shell)));
+    else if (travelsAlong(address.pathname)) event.respondWith(pageOr(request, () => takenPage(address.pathname)));
   } else if (precacheList.includes(address.pathname) || address.pathname.startsWith('/assets/')) {
     event.respondWith(keptFile(request));
   }

@@ -165,3 +165,36 @@ test('a session that ended meanwhile: the report stays, asks to sign in, and the
   expect(await casesWith(words)).toEqual([{ photos: 1, reporter: demoEmail(writer) }]);
   await page.context().close();
 });
+
+test('the measurements of a case, taken along, open without the server, keep what is typed and are saved once it is back', async () => {
+  const page = await signedIn(stage, 'maren', 'phone', { serviceWorkers: 'allow' });
+  const context = page.context();
+  const path = '/cases/129/measurements';
+  await page.goto(path);
+  await page.getByRole('button', { name: 'Take this page along' }).click();
+  await page.getByText(/^On this device since/u).waitFor();
+  await prepared(page);
+  await page.close();
+  await stage.web.kill();
+
+  const roof = await newPage(context, '/report');
+  await roof.getByRole('link', { name: 'Measurements of case 129' }).click();
+  await roof.getByText(/^The copy on this device, of/u).waitFor();
+  await roof.getByLabel('Width of the mark, value').fill('23');
+  await roof.getByLabel('Width of the mark, method').selectOption({ label: 'Measured' });
+  await roof.getByLabel('What was measured or changed, and by whom').fill('Tape, by hand on the roof.');
+  await roof.getByRole('button', { name: /^Save as version/u }).click();
+  await roof.getByText(/No signal\. Save again when it is back/u).waitFor();
+  await roof.close();
+
+  await stage.web.start();
+  const back = await newPage(context, path);
+  await expect.poll(() => back.getByLabel('Width of the mark, value').inputValue()).toBe('23');
+  await back.getByRole('button', { name: /^Save as version/u }).click();
+  await expect.poll(async () => (await sql<{ note: string }[]>`
+    select v.note from scenes v join cases c on c.id = v.case_id where c.number = 129 order by v.version desc limit 1`)[0]?.note).toBe('Tape, by hand on the roof.');
+  await context.clearCookies();
+  await back.goto(new URL('/sign-in', stage.baseUrl).toString());
+  await expect.poll(() => back.evaluate(() => caches.keys().then((names) => names.filter((name) => name.startsWith('taken-along')).length))).toBe(0);
+  await context.close();
+});

@@ -21,6 +21,7 @@ function fakeCaches() {
     caches: {
       open,
       keys: () => Promise.resolve([...all.keys()]),
+      has: (name: string) => Promise.resolve(all.has(name)),
       delete: (name: string) => Promise.resolve(all.delete(name)),
       match: (request: string) => Promise.resolve([...all.values()].map((kept) => kept.get(full(request))).find(Boolean)),
     },
@@ -121,6 +122,29 @@ describe('a look at the report page', () => {
     const answer = ask('/report', navigate);
     await vi.advanceTimersByTimeAsync(6_001);
     expect(await answer).toBe('net /report?shell');
+  });
+});
+
+describe('the measurements of a case that were taken along', () => {
+  const navigate = { mode: 'navigate' };
+  const path = '/cases/129/measurements';
+
+  test('come from the team while it answers, else from the device, of that case only', async () => {
+    const { ask, store, net } = await start('a');
+    await (await store.caches.open(`taken-along ${path}`)).put(path, text('the copy'));
+    expect(await ask(path, navigate)).toBe(`net ${path}`);
+    net.mockImplementation(() => Promise.reject(new TypeError('Failed to fetch')));
+    expect(await ask(`${path}?saved=1`, navigate)).toBe('the copy');
+    // An error as of the network: the browser says in its own words that there is no connection.
+    expect(await ask('/cases/118/measurements', navigate)).toBe('');
+  });
+
+  test('stay when a new build comes', async () => {
+    const { store, install, activate } = await start('b');
+    await (await store.caches.open(`taken-along ${path}`)).put(path, text('the copy'));
+    await install();
+    await activate();
+    expect([...store.all.keys()]).toContain(`taken-along ${path}`);
   });
 });
 

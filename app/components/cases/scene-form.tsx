@@ -1,6 +1,6 @@
 import { useRef, useState } from 'react';
 import type { ReactNode } from 'react';
-import { Form } from 'react-router';
+import { Form, useSubmit } from 'react-router';
 import { ErrorSummary } from '#app/components/forms/error-summary.tsx';
 import { TextInput } from '#app/components/forms/text-field.tsx';
 import { FixedBar } from '#app/components/layout/page.tsx';
@@ -15,6 +15,7 @@ import type { RefusedForm } from './form-fields.ts';
 import { NorthPart } from './north-part.tsx';
 import type { NorthFacts } from './north-part.tsx';
 import { AirPart, MarkPart, OpeningPart, OpticPart } from './scene-parts.tsx';
+import { teamAnswers } from './taken-along.ts';
 import type { FormDraft } from './use-form-draft.ts';
 import { useFormDraft } from './use-form-draft.ts';
 
@@ -45,6 +46,16 @@ export function SceneForm({ kind, stored, stamps, baseVersion, storageKey, measu
   const field = (name: string) => fieldOf(name, stored[name]);
   const labels = [...allSceneFields.map((one) => ({ field: field(fieldName(one)), label: one.label })), ...Object.entries(otherNames).map(([name, label]) => ({ field: field(name), label }))];
   const follows = workedOut(draft.values);
+  const submit = useSubmit();
+  /** Without a signal the words stay here; a failed request would throw the page away. */
+  const saveWhenReached = async (element: HTMLFormElement) => {
+    draft.keep();
+    const answers = await teamAnswers();
+    setNoSignal(!answers);
+    if (!answers) return;
+    draft.markSent();
+    await submit(element, { preventScrollReset: true });
+  };
   return (
     <Form
       method="post"
@@ -53,11 +64,8 @@ export function SceneForm({ kind, stored, stamps, baseVersion, storageKey, measu
       preventScrollReset
       onInput={draft.keep}
       onSubmit={(event) => {
-        // Without a signal the words stay here; a failed request would throw the page away.
-        if (navigator.onLine) return draft.markSent();
         event.preventDefault();
-        draft.keep();
-        setNoSignal(true);
+        void saveWhenReached(event.currentTarget);
       }}
     >
       {refused ? <ErrorSummary errors={refused.formErrors} fields={labels} /> : null}

@@ -3,6 +3,7 @@ import { device } from './device-store.ts';
 import { personMark } from './forget-person.ts';
 import { listReports, readReport } from './kept-reports.ts';
 import type { ReportView } from './report-view.ts';
+import { forgetTaken } from './taken-pages.ts';
 
 /** Keeps what this page shows of the places, for a start without a connection. Photos and the report itself lie elsewhere. */
 export async function keepView(view: ReportView): Promise<void> {
@@ -11,10 +12,11 @@ export async function keepView(view: ReportView): Promise<void> {
   if (!view.guest) localStorage.setItem(personMark, 'yes');
 }
 
-/** Nobody is signed in any more: the list of their sites leaves the device. Unsent reports stay. */
+/** Nobody is signed in any more: the list of their sites and the pages taken along leave the device. Unsent reports stay. */
 export async function forgetPersonView(): Promise<void> {
   const db = await device();
   for (const { key, view } of await db.getAll('views')) if (!view.guest) await db.delete('views', key);
+  await forgetTaken();
   localStorage.removeItem(personMark);
 }
 

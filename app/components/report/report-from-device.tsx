@@ -7,6 +7,7 @@ import { listGuestPlaces, viewFromDevice } from './kept-views.ts';
 import { newReportAddress, reportAddress } from './report-addresses.ts';
 import { ReportPage } from './report-page.tsx';
 import type { ReportView } from './report-view.ts';
+import { TakenList } from './taken-list.tsx';
 
 type Found = { readonly view: ReportView } | { readonly places: readonly { guestCode: string; name: string }[] };
 
@@ -33,6 +34,7 @@ export function ReportFromDevice({ shell }: { readonly shell: ReportView }) {
             {found ? <Unknown places={found.places} /> : <p role="status">Looking for what is kept on this device.</p>}
           </MakeSafeCard>
         </div>
+        {found ? <TakenList /> : null}
       </Page>
     </>
   );

@@ -14,6 +14,7 @@ import { ReportForm } from './report-form.tsx';
 import type { ReportView } from './report-view.ts';
 import { SavedScreen } from './saved-screen.tsx';
 import { registerServiceWorker, sendsInBackground } from './service-worker-registration.ts';
+import { TakenList } from './taken-list.tsx';
 import { useHydrated } from './use-hydrated.ts';
 import { lastingWords, useLastingStorage } from './use-lasting-storage.ts';
 import { useReportDraft } from './use-report-draft.ts';
@@ -85,6 +86,7 @@ export function ReportPage({ view, problem }: { readonly view: ReportView; reado
           {hydrated ? <p><Button type="button" look="quiet" className="min-h-11" onClick={() => void startAnew()}>Throw this draft away and start anew</Button></p> : null}
         </div>
         {hydrated ? <WaitingReports holderKey={holderKey} clientId={clientId} sites={view.sites} onTakeBack={sending.tryNow} /> : null}
+        {hydrated && !view.guest ? <TakenList /> : null}
       </Page>
     </>
   );

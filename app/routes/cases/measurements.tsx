@@ -1,3 +1,4 @@
+import { href } from 'react-router';
 import type { Route } from './+types/measurements';
 import { db } from '#db/client.server.ts';
 import { getMeasuredCase } from '#db/queries/measure-pages.server.ts';
@@ -6,6 +7,7 @@ import { standingWeather } from '#db/queries/weather.server.ts';
 import { requireActor } from '#app/auth/middleware.server.ts';
 import { MeasureNav } from '#app/components/cases/measure-nav.tsx';
 import { SceneForm } from '#app/components/cases/scene-form.tsx';
+import { TakeAlong } from '#app/components/cases/take-along.tsx';
 import { Columns } from '#app/components/layout/page.tsx';
 import { FactList } from '#app/components/ui/fact-list.tsx';
 import { SectionHeading } from '#app/components/ui/page-title.tsx';
@@ -29,6 +31,7 @@ export async function loader({ request, context, params }: Route.LoaderArgs) {
     const weather = await standingWeather(db, row.id);
     const { declinationDeg, declinationSource } = declinationAt(place, now);
     return {
+      madeAt: now.toISOString(),
       caseNumber,
       mayEdit,
       whoEdits,
@@ -63,6 +66,7 @@ export default function Measurements({ loaderData: data, actionData: problem }: 
     <>
       <MeasureNav caseNumber={data.caseNumber} current="measurements" />
       <Columns sideLabel="Versions" side={<Versions versions={data.versions} />}>
+        {data.mayEdit ? <TakeAlong address={href('/cases/:caseNumber/measurements', { caseNumber: String(data.caseNumber) })} madeAt={data.madeAt} /> : null}
         {data.mayEdit ? (
           <SceneForm key={data.baseVersion} kind={data.kind} stored={data.stored} stamps={data.stamps} baseVersion={data.baseVersion} storageKey={data.storageKey} measurer={data.measurer} north={data.north} around={data.around} problem={problem} />
         ) : (
