@@ -1,5 +1,7 @@
 import type { ReconstructionResult } from '#app/physics/model.ts';
 import { daylightOn } from '#app/physics/sun/daylight.ts';
+import type { Daylight } from '#app/physics/sun/daylight.ts';
+import type { Observer } from '#app/physics/sun/solar-position.ts';
 import { nextDay } from '#app/physics/sun/zone-days.ts';
 import { fromLocalInput, localDay } from './local-time.ts';
 import { minuteReasonWords } from './run-words.ts';
@@ -66,9 +68,21 @@ function daysOf(stretch: Stretch, zone: string): string[] {
   return days;
 }
 
+/** Days of places whose daylight was worked out already: a register shows the same ones again and again. */
+const known = new Map<string, Daylight>();
+const mostKnown = 5_000;
+
+function knownDaylight(day: string, zone: string, observer: Observer): Daylight {
+  const key = `${day} ${zone} ${observer.latitudeDeg} ${observer.longitudeDeg} ${observer.elevationM}`;
+  const found = known.get(key) ?? daylightOn(day, zone, observer);
+  if (known.size >= mostKnown) known.clear();
+  known.set(key, found);
+  return found;
+}
+
 function daylightOf(days: readonly string[], facts: CardCase): Pick<CardView, 'daylight' | 'polar'> {
   const observer = { latitudeDeg: facts.latitudeDeg, longitudeDeg: facts.longitudeDeg, elevationM: facts.elevationM, pressureHpa: 1_013.25, temperatureC: 15 };
-  const found = days.map((day) => daylightOn(day, facts.zone, observer));
+  const found = days.map((day) => knownDaylight(day, facts.zone, observer));
   const daylight = found.flatMap((one, index) => {
     const day = days[index] ?? '';
     if (one.polar === 'day') return [{ riseUtc: startOf(day, facts.zone), setUtc: startOf(nextDay(day), facts.zone) }];

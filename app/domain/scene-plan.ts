@@ -101,7 +101,10 @@ export function nearestMoment(plan: ScenePlan, place: PlanPlace, fromMs: number,
   const stepMs = Math.max(60_000, Math.ceil((toMs - fromMs) / 600 / 60_000) * 60_000);
   let best: { utcMs: number; missM: number } | null = null;
   for (let utcMs = fromMs; utcMs <= toMs; utcMs += stepMs) {
-    const { missM } = sceneMoment(plan, place, utcMs);
+    const sun = solarPosition(utcMs, { ...place, ...standardAir });
+    // The distance of the sharpest spot, which a whole moment holds, costs more than all else and says nothing here.
+    const beam = sun.apparentElevationDeg > 0 ? plan.model.beamFor(sun.towardsSun, halfAngleRad(sun.distanceAu)) : null;
+    const missM = beam ? missOf(beam, plan.model, plan.mark).lateralM : null;
     if (missM !== null && (best === null || missM < best.missM)) best = { utcMs, missM };
   }
   return best;
