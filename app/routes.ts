@@ -51,6 +51,7 @@ export default [
       route('releases', 'routes/cases/releases.tsx'),
       route('releases/:number', 'routes/cases/release.tsx'),
       route('log', 'routes/cases/log.tsx'),
+      route('undo', 'routes/cases/undo.tsx'),
     ]),
     route('actions', 'routes/actions/list.tsx'),
   ]),
@@ -75,6 +76,9 @@ export default [
   route('sites/:siteCode/skyline', 'routes/sites/skyline.tsx'),
   route('people', 'routes/people/list.tsx'),
   route('log', 'routes/people/log.tsx'),
+
+  // Every other address
+  route('*', 'routes/public/nowhere.tsx'),
 
   // Files and pages without a screen of their own
   route('photos/:photoId/:rendition', 'routes/resources/photo.ts'),

@@ -1,4 +1,4 @@
-import type { ReconstructionInput } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
 
 /** A complete, invented input: a glass ball on a window shelf and a scorched curtain. Every optional field is shown. */
 export const exampleInput: ReconstructionInput = {

@@ -1,8 +1,8 @@
 import { readFileSync } from 'node:fs';
 import { canonicalJson } from '#app/domain/canonical-json.ts';
 import { parseReconstructionInput } from '#app/domain/reconstruction-schema.ts';
-import { engineVersion } from '#app/physics/model.ts';
-import type { ReconstructionResult } from '#app/physics/model.ts';
+import { engineVersion } from '#app/physics/model/engine-version.ts';
+import type { ReconstructionResult } from '#app/physics/model/result.ts';
 import { reconstruct } from '#app/physics/reconstruct.ts';
 import { hashOf } from '#app/storage/sha256.server.ts';
 import { exampleInput } from './example-input.ts';

@@ -43,7 +43,8 @@ export const actionFormSchema = z
   });
 export type ActionDraft = z.output<typeof actionFormSchema>;
 
-export const noteSchema = z.object({ note: required(4_000, 'Say what you saw, in a sentence.') });
+export const doneSchema = z.object({ note: required(4_000, 'Say what was done, in a sentence.') });
+export const sendBackSchema = z.object({ note: required(4_000, 'Say what is still missing, in a sentence.') });
 export const withdrawSchema = z.object({ reason: reasonSchema });
 export const reDateSchema = z.object({ dueOn: day, reason: reasonSchema });
 export const reassignSchema = z

@@ -1,6 +1,7 @@
 import { z } from 'zod';
-import { climateClasses } from '#app/physics/model.ts';
-import type { Assumption, ReconstructionResult } from '#app/physics/model.ts';
+import { climateClasses } from '#app/physics/model/input.ts';
+import type { ReconstructionResult } from '#app/physics/model/result.ts';
+import type { Assumption } from '#app/physics/model/stated.ts';
 import { settleSite } from '#app/physics/site.ts';
 import { absoluteAirMass, kastenYoungAirMass } from '#app/physics/sky/air-mass.ts';
 import { clearSkyAt, lowestClearSkyDeg } from '#app/physics/sky/clear-sky.ts';

@@ -1,22 +1,12 @@
 import { custodyFigure } from './figures/custody-figure.ts';
-import { sunPathFigure } from './figures/sun-path-figure.ts';
 import { windowFigure, windowRows } from './figures/window-figure.ts';
-import { testLabels } from './hypothesis.ts';
-import { formatDayClock, formatIsoDay } from './local-time.ts';
+import { formatDayClock } from './local-time.ts';
+import { FigureCount, heading, plain, serif, small, sub, tableIf } from './report-blocks.ts';
 import type { ReportBlock, ReportDocument } from './report-document.ts';
 import type { ReportedHypothesis, ReportedItem, ReportedRun, ReportSource } from './report-source.ts';
-import { focusRows, heatRows, spotRows } from './report-numbers.ts';
-import { assumptionLabel, checkAnswer, checkLabel, gradeHeading } from './run-words.ts';
+import { sunPart } from './report-sun-part.ts';
 
-const printWidthPt = 499;
-const printTextPt = 8;
-
-const heading = (text: string): ReportBlock => ({ kind: 'heading', level: 1, text });
-const sub = (text: string): ReportBlock => ({ kind: 'heading', level: 2, text });
-const plain = (text: string): ReportBlock => ({ kind: 'text', text });
-const serif = (text: string): ReportBlock => ({ kind: 'text', text, voice: 'serif' });
-const small = (text: string): ReportBlock => ({ kind: 'text', text, voice: 'small' });
-const nothing = (text: string): ReportBlock => small(text);
+const nothing = small;
 
 /** Cautions that stand in every report. */
 const cautions = [
@@ -31,7 +21,7 @@ const cautions = [
  * measurements, sun and weather, hypotheses, opinion, classification, recommendations, appendices.
  */
 export function buildReport(source: ReportSource): ReportDocument {
-  const figures = { next: 1 };
+  const figures = new FigureCount();
   return {
     format: 1,
     title: source.title,
@@ -59,14 +49,10 @@ export function buildReport(source: ReportSource): ReportDocument {
   };
 }
 
-interface Figures {
-  next: number;
-}
-
-function windowPart({ run, zone }: ReportSource, figures: Figures): ReportBlock[] {
+function windowPart({ run, zone }: ReportSource, figures: FigureCount): ReportBlock[] {
   if (!run) return [];
   return [
-    windowFigure(run.result, { number: figures.next++, width: printWidthPt, textSize: printTextPt, zone }),
+    ...figures.place((size) => windowFigure(run.result, { ...size, zone })),
     { kind: 'table', caption: 'The window in words', head: ['From', 'To', 'Minutes', 'Sun on the mark', 'Reason'], widths: [1.3, 1.3, 0.8, 1.2, 3], rows: windowRows(run.result, zone) },
   ];
 }
@@ -97,12 +83,12 @@ function scenePart({ scene, account, notes, chronology, accounts }: ReportSource
   ];
 }
 
-function evidencePart({ evidence, custodyLines, zone, dateUtc }: ReportSource, figures: Figures): ReportBlock[] {
+function evidencePart({ evidence, custodyLines, zone, dateUtc }: ReportSource, figures: FigureCount): ReportBlock[] {
   if (evidence.length === 0) return [heading('Evidence and custody'), nothing('No item is in this report.')];
   return [
     heading('Evidence and custody'),
     small('Holders are named by their part in the matter. Each record begins at the moment at which the one before it ends.'),
-    ...(custodyLines.length > 0 ? [custodyFigure(custodyLines, { number: figures.next++, width: printWidthPt, textSize: printTextPt, zone, now: new Date(dateUtc), endWords: 'end of the record' })] : []),
+    ...(custodyLines.length > 0 ? figures.place((size) => custodyFigure(custodyLines, { ...size, zone, now: new Date(dateUtc), endWords: 'end of the record' })) : []),
     ...evidence.flatMap(itemPart),
   ];
 }
@@ -115,6 +101,8 @@ function itemPart(item: ReportedItem): ReportBlock[] {
     ...(about === '' ? [] : [small(about)]),
     ...(item.inBrief ? tableIf(custody, ['From', 'To', 'Holder'], [1.5, 1.5, 3], item.custody.map((record) => [record.from, record.to, record.holder])) : tableIf(custody, ['From', 'To', 'Holder', 'Purpose', 'Condition taken over'], [1.5, 1.5, 1.4, 2, 2], item.custody.map((record) => [record.from, record.to, record.holder, record.purpose, record.condition]))),
     ...(item.inBrief ? tableIf(exams, ['When', 'Kind', 'Notice'], [1.5, 1.5, 3], item.exams.map((exam) => [exam.when, exam.kind, exam.notice])) : tableIf(exams, ['When', 'Kind', 'Method', 'Result', 'Notice'], [1.3, 1.3, 2, 2.2, 1.8], item.exams.map((exam) => [exam.when, exam.kind, exam.method, exam.result, exam.notice]))),
+    ...tableIf(`Planned examinations of ${item.code}`, ['Planned for', 'What is to be done', 'Still lacks'], [1.3, 2.4, 3], item.planned.map((plan) => [plan.when, plan.method, plan.lacks])),
+    ...tableIf(`Notices about ${item.code}`, ['Told', 'Sent', 'How', 'About', 'Answer'], [1.4, 1.3, 1, 1.8, 1.6], item.notices.map((notice) => [notice.told, notice.sent, notice.way, notice.about, notice.answer])),
   ];
 }
 
@@ -123,32 +111,6 @@ function measurementPart({ measurements }: ReportSource): ReportBlock[] {
     heading('Measurements'),
     measurements.length === 0 ? nothing('None is on record for this reader.') : { kind: 'table', caption: 'Measurements with uncertainty', head: ['Group', 'Measure', 'Value', '±', 'Unit', 'Method'], widths: [1, 2.2, 1.6, 0.7, 0.8, 1.6], rows: measurements.map((row) => [row.group, row.label, row.value, row.plusMinus, row.unit, row.method]) },
   ];
-}
-
-function sunPart({ run, zone, returns }: ReportSource, figures: Figures): ReportBlock[] {
-  if (!run) return [heading('Sun and weather in the window'), nothing('No reconstruction is attached.')];
-  const path = sunPathFigure(run, { number: figures.next, width: printWidthPt, textSize: printTextPt, zone });
-  if (path) figures.next += 1;
-  const { result } = run;
-  return [
-    heading('Sun and weather in the window'),
-    plain(`${gradeHeading(result.grade)}. The engine states what the values allow and what they contradict; it states no cause.`),
-    ...(path ? [path] : []),
-    ...tableIf('The best minute and the focus', ['Quantity', 'Value', 'Note'], [1.6, 1.4, 3], focusRows(result, zone)),
-    ...tableIf('Spot against distance', ['Distance [m]', 'Width of the spot [mm]', 'Likely flux [kW/m²]'], [1, 1, 1], spotRows(result)),
-    ...tableIf('What the heat could do to the target', ['Outcome', 'Answer', 'Time [s], low to high', 'Sentence and source'], [0.9, 0.9, 1.1, 3.4], heatRows(result)),
-    ...(result.heating ? [small('Small hot spots lose heat fast, so limits found on large samples do not carry over: read them as bands, never as a pass line.')] : []),
-    ...(result.checks.length > 0 ? [sub('Checks that could contradict')] : []),
-    ...tableIf('Checks', ['Check', 'Answer', 'Sentence'], [1.6, 1, 3.4], result.checks.map((check) => [checkLabel(check), checkAnswer(check.passed), check.sentence])),
-    ...tableIf('The four tests as the engine answers them', ['Test', 'Answer', 'Sentence'], [0.9, 1, 4], result.tests.map((test) => [testLabels[test.test], test.result, test.sentence])),
-    ...(result.assumptions.length > 0 ? [sub('Assumed, not measured'), ...tableIf('Assumptions', ['Quantity', 'Value', 'Source'], [1.4, 1.2, 3], result.assumptions.map((one) => [assumptionLabel(one.field), one.value, `${one.source.text}${one.source.verified ? '' : ' (unverified)'}`]))] : []),
-    ...(result.warnings.length > 0 ? [{ kind: 'list' as const, items: result.warnings }] : []),
-    ...(returns.length > 0 ? [sub('When the sun returns to the mark'), ...tableIf('Returns', ['Day', 'Best moment', 'Minutes'], [1, 1.4, 0.8], returns.slice(0, 24).map((day) => [formatIsoDay(day.on), formatDayClock(new Date(day.bestAt), zone), String(day.minutes)])), ...(returns.length > 24 ? [small(`${returns.length - 24} further days are in the data of the run.`)] : [])] : []),
-  ];
-}
-
-function tableIf(caption: string, head: readonly string[], widths: readonly number[], rows: readonly (readonly string[])[]): ReportBlock[] {
-  return rows.length === 0 ? [] : [{ kind: 'table', caption, head, widths, rows }];
 }
 
 function hypothesisPart(one: ReportedHypothesis): ReportBlock[] {

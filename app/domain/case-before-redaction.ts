@@ -5,8 +5,10 @@ import type { Certainty, Classification } from './finding.ts';
 import type { FourTests, HypothesisKind, HypothesisResult } from './hypothesis.ts';
 import type { EventType, Extent, FoundPrecision, OnsetBasis, PhotoView, siteUses, WeatherSeen, YesNoUnknown } from './incident.ts';
 import type { PhotoMask } from './photo.ts';
+import type { ReliedWeather } from './relied-weather.ts';
 import type { Scene } from './scene.ts';
-import type { ReconstructionResult } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
+import type { ReconstructionResult } from '#app/physics/model/result.ts';
 
 /** Everything the redactor is given; it never leaves the server. Instants are ISO 8601 in UTC. */
 export interface CaseBeforeRedaction {
@@ -41,7 +43,9 @@ export interface CaseBeforeRedaction {
   readonly notes: readonly { readonly id: string; readonly at: string; readonly authorId: string | null; readonly text: string }[];
   readonly photos: readonly PhotoBeforeRedaction[];
   readonly scene: Scene | null;
-  readonly reconstruction: { readonly number: number; readonly engineVersion: string; readonly inputHash: string; readonly resultHash: string; readonly result: ReconstructionResult } | null;
+  readonly reconstruction: { readonly number: number; readonly engineVersion: string; readonly inputHash: string; readonly resultHash: string; readonly input: ReconstructionInput; readonly result: ReconstructionResult } | null;
+  /** What the attached run went by, with the record that it came from. */
+  readonly weather: ReliedWeather | null;
   readonly hypotheses: readonly HypothesisBeforeRedaction[];
   /** The newest signed version. */
   readonly finding: FindingBeforeRedaction | null;

@@ -1,4 +1,4 @@
-import type { ReconstructionResult } from '#app/physics/model.ts';
+import type { ReconstructionResult } from '#app/physics/model/result.ts';
 import { daylightOn } from '#app/physics/sun/daylight.ts';
 import type { Daylight } from '#app/physics/sun/daylight.ts';
 import type { Observer } from '#app/physics/sun/solar-position.ts';

@@ -1,6 +1,7 @@
 import type { FirstLookView } from './first-look.ts';
 import type { CardView } from './case-card.ts';
 import type { CaseState } from './case-state.ts';
+import type { UndoOffer } from './move-undo.ts';
 import type { SceneOpticKind } from './scene.ts';
 
 /** What screens of a case are given: explicit views, never rows of a table. Words are ready to be shown. */
@@ -82,6 +83,8 @@ export interface CaseHeaderView {
   readonly cardNote: string;
   readonly reconstructionNumber: number | null;
   readonly tabs: readonly CaseTab[];
+  /** The reader's own last move, while it may be taken back. */
+  readonly undo: UndoOffer | null;
 }
 
 /** One line of what a move needs. */

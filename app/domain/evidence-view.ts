@@ -1,9 +1,10 @@
-import { attachmentClassLabels, attachmentCode, attachmentKindLabels } from './attachment.ts';
-import type { AttachmentClass, AttachmentKind } from './attachment.ts';
+import type { OfferFacts } from './custody-offer.ts';
+import type { NoticeFacts } from './evidence-notice.ts';
 import { disposalLabels, evidenceKindLabels, examKindLabels, holderRoleLabels, itemCode, itemLetter } from './evidence.ts';
 import type { Disposal, EvidenceKind, ExamKind, HolderRole } from './evidence.ts';
 import type { CustodyLine } from './figures/custody-figure.ts';
 import { formatDayClock } from './local-time.ts';
+import type { PlanFacts } from './planned-exam.ts';
 
 /** What rows of the evidence tables hold that pages show. */
 export interface ItemFacts {
@@ -31,6 +32,9 @@ export interface ItemFacts {
     readonly toAt: Date | null;
     readonly givenBy: string;
     readonly receivedBy: string;
+    readonly clientId: string;
+    /** Null: the recorder typed the taker's signature. */
+    readonly receiverId: string | null;
   }[];
   readonly exams: readonly {
     readonly id: string;
@@ -42,7 +46,11 @@ export interface ItemFacts {
     readonly noticeTo: string;
     readonly noticeAt: Date | null;
     readonly protocolAttachmentId: string | null;
+    readonly wentAheadReason: string;
   }[];
+  readonly plans: readonly PlanFacts[];
+  readonly notices: readonly NoticeFacts[];
+  readonly offers: readonly OfferFacts[];
 }
 
 export interface ItemLineView {
@@ -78,6 +86,8 @@ export interface ExamView {
   /** Told beforehand, and when; null where no notice was needed or given. */
   readonly notice: string | null;
   readonly protocolId: string | null;
+  /** Why it was made although something spoke against it; empty otherwise. */
+  readonly wentAhead: string;
 }
 
 export interface ItemView extends ItemLineView {
@@ -128,7 +138,7 @@ export function itemView(facts: ItemFacts, caseNumber: number, zone: string): It
       place: record.place,
       purpose: record.purpose,
       condition: record.condition,
-      signed: record.sequence === 1 ? record.receivedBy : `given by ${record.givenBy}, taken by ${record.receivedBy}`,
+      signed: signedWords(record, facts.offers),
     })),
     examinations: facts.exams.map((exam) => ({
       id: exam.id,
@@ -139,8 +149,18 @@ export function itemView(facts: ItemFacts, caseNumber: number, zone: string): It
       result: exam.result,
       notice: exam.noticeAt && exam.noticeTo ? `${exam.noticeTo}, told ${formatDayClock(exam.noticeAt, zone)}` : null,
       protocolId: exam.protocolAttachmentId,
+      wentAhead: exam.wentAheadReason,
     })),
   };
+}
+
+/** Who signed, and whether on their own account or by the hand of the recorder. */
+function signedWords({ sequence, givenBy, receivedBy, receiverId, clientId }: ItemFacts['custody'][number], offers: readonly OfferFacts[]): string {
+  const taken = receiverId ? `${receivedBy}, on their own account` : `${receivedBy}, typed by the recorder`;
+  if (sequence === 1) return taken;
+  const offer = offers.find((one) => one.id === clientId);
+  const giver = offer && offer.offeredBy === givenBy ? 'on their own account' : 'typed by the recorder';
+  return receiverId ? `given by ${givenBy}, ${giver}; taken by ${taken}` : `given by ${givenBy}, taken by ${receivedBy}; both typed by the recorder`;
 }
 
 export function custodyLine(facts: ItemFacts, caseNumber: number): CustodyLine {
@@ -150,65 +170,6 @@ export function custodyLine(facts: ItemFacts, caseNumber: number): CustodyLine {
     seal: facts.item.sealNumber ? `seal ${facts.item.sealNumber}` : '',
     holders: facts.custody.map((record) => ({ role: record.holderRole, from: record.fromAt, to: record.toAt })),
     exams: facts.exams.map((exam) => ({ kind: exam.kind, at: exam.performedAt })),
+    planned: facts.plans.filter((plan) => plan.outcome === null).map((plan) => plan.plannedAt),
   };
-}
-
-export interface DocumentFacts {
-  readonly id: string;
-  readonly label: number;
-  readonly title: string;
-  readonly kind: AttachmentKind;
-  readonly class: AttachmentClass;
-  readonly mime: string;
-  readonly bytes: number;
-  readonly sha256: string;
-  readonly hashCheck: 'same' | 'differs' | 'missing' | null;
-  readonly hashCheckedAt: Date | null;
-  readonly createdAt: Date;
-  readonly uploadedBy: string;
-}
-
-export interface DocumentView {
-  readonly id: string;
-  readonly code: string;
-  readonly title: string;
-  readonly kind: string;
-  readonly class: string;
-  readonly size: string;
-  readonly sha256: string;
-  readonly hashCheck: DocumentFacts['hashCheck'];
-  readonly hashWords: string;
-  readonly added: string;
-}
-
-const formats: Readonly<Record<string, string>> = { 'application/pdf': 'PDF', 'text/csv': 'CSV', 'text/plain': 'text', 'image/jpeg': 'JPEG', 'image/png': 'PNG', 'image/webp': 'WebP' };
-
-export function documentView(document: DocumentFacts, zone: string): DocumentView {
-  const when = document.hashCheckedAt ? `, ${formatDayClock(document.hashCheckedAt, zone)}` : '';
-  const checked = { same: `same as at intake${when}`, differs: `differs, not handed out${when}`, missing: `missing from the store${when}` };
-  return {
-    id: document.id,
-    code: attachmentCode(document.label),
-    title: document.title,
-    kind: attachmentKindLabels[document.kind],
-    class: attachmentClassLabels[document.class],
-    size: `${formats[document.mime] ?? document.mime}, ${document.bytes < 1_000_000 ? `${Math.max(1, Math.ceil(document.bytes / 1000))} kB` : `${(document.bytes / 1_000_000).toFixed(1)} MB`}`,
-    sha256: document.sha256,
-    hashCheck: document.hashCheck,
-    hashWords: document.hashCheck ? checked[document.hashCheck] : 'hashed again at each download',
-    added: `${document.uploadedBy}, ${formatDayClock(document.createdAt, zone)}`,
-  };
-}
-
-/** The finding of the page, weakest fact first. */
-export function evidenceHeading(items: readonly ItemFacts[], documents: readonly DocumentFacts[], caseNumber: number): string {
-  const broken = documents.filter((document) => document.hashCheck === 'differs' || document.hashCheck === 'missing').map((document) => attachmentCode(document.label));
-  if (broken.length > 0) return `The stored file of document ${broken.join(', ')} is not what came in`;
-  if (items.length === 0) return 'No item has been collected';
-  const codes = (list: readonly ItemFacts[]) => list.map(({ item }) => itemCode(caseNumber, item.label)).join(', ');
-  const unsealed = items.filter(({ item }) => item.sealNumber === '' && item.kind !== 'record');
-  if (unsealed.length > 0) return `${codes(unsealed)} ${unsealed.length === 1 ? 'has' : 'have'} no seal`;
-  const undecided = items.filter(({ item }) => item.disposal === 'undecided');
-  if (undecided.length > 0) return `What becomes of ${codes(undecided)} is not decided`;
-  return items.length === 1 ? 'One item, in known hands since it was collected' : `${items.length} items, in known hands since they were collected`;
 }

@@ -30,7 +30,8 @@ export interface CommentPin {
   readonly pin: number;
   readonly field: ReviewField;
   readonly label: string;
-  readonly body: string;
+  /** Null while it is hidden from a reviewer who has not asked for the opinion. */
+  readonly body: string | null;
   readonly by: string;
   readonly version: number;
   readonly settled: string | null;

@@ -39,6 +39,10 @@ export const reviewFieldLabels: Record<ReviewField, string> = {
   weather: 'Weather',
 };
 
+/** Fields that the author concludes; the others are inputs. */
+const conclusionFields: readonly ReviewField[] = ['opinion', 'certainty', 'classification', 'causes', 'limits', 'hypotheses'];
+export const isConclusionField = (field: ReviewField): boolean => conclusionFields.includes(field);
+
 /**
  * Why this certainty may not be stated yet; empty when it may.
  *

@@ -2,7 +2,6 @@ import { attachmentCode, attachmentKindLabels } from './attachment.ts';
 import type { AttachmentClass, AttachmentKind } from './attachment.ts';
 import type { CaseBeforeRedaction } from './case-before-redaction.ts';
 import { actionStateLabels, controlLevelLabels } from './corrective-action.ts';
-import { evidenceKindLabels, examKindLabels, holderRoleLabels, itemCode } from './evidence.ts';
 import { custodyLine } from './evidence-view.ts';
 import type { ItemFacts } from './evidence-view.ts';
 import type { Certainty, Classification } from './finding.ts';
@@ -12,7 +11,8 @@ import { eventTypeLabels, extentLabels, onsetBasisLabels, photoViewLabels, weath
 import { formatDayClock, formatIsoDay } from './local-time.ts';
 import { releasedMeasurements } from './released-measurements.ts';
 import { authorNames } from './released-parts.ts';
-import type { ReportedFinding, ReportedHypothesis, ReportedItem, ReportedRun, ReportSource, ReportTerm } from './report-source.ts';
+import { reportedItem } from './reported-item.ts';
+import type { ReportedFinding, ReportedHypothesis, ReportedRun, ReportSource, ReportTerm } from './report-source.ts';
 import { timelineRows, trueTime } from './timeline.ts';
 import type { Happening } from './timeline.ts';
 import { witnessNames } from './witness.ts';
@@ -70,7 +70,7 @@ export function inHouseReport(parts: InHouseParts): ReportSource {
     notes: source.notes.map((note, index) => ({ by: `${authorNames(source)[index] ?? ''}, ${formatDayClock(new Date(note.at), zone)}`, text: note.text })),
     chronology: timelineRows(parts.happenings.filter((one) => !one.withdrawn), zone).map(({ day, trueTime: when, reading, correction, what, source: from, basis }) => ({ day, trueTime: when, reading, correction, what, source: [from, basis].filter(Boolean).join('; ') })),
     accounts: accountsOf(parts),
-    evidence: parts.items.map((one) => itemOf(one, caseNumber, zone)),
+    evidence: parts.items.map((one) => reportedItem(one, caseNumber, zone, at)),
     custodyLines: parts.items.map((one) => custodyLine(one, caseNumber)),
     measurements: releasedMeasurements(source.scene),
     run,
@@ -127,19 +127,6 @@ function accountsOf({ accounts, source }: InHouseParts): ReportSource['accounts'
     meta: `Taken ${formatDayClock(account.takenAt, source.zone)}, in ${account.language}; ${account.readBack ? 'read back' : 'not read back'}; ${account.signedAttachmentId ? 'signed copy kept' : 'no signed copy'}.`,
     words: account.words,
   }));
-}
-
-function itemOf({ item, custody, exams }: ItemFacts, caseNumber: number, zone: string): ReportedItem {
-  return {
-    code: itemCode(caseNumber, item.label),
-    description: item.description,
-    inBrief: false,
-    kind: evidenceKindLabels[item.kind],
-    seal: item.sealNumber ? `seal ${item.sealNumber}` : 'no seal',
-    fromWhere: item.fromWhere,
-    custody: custody.map((record) => ({ from: formatDayClock(record.fromAt, zone), to: record.toAt ? formatDayClock(record.toAt, zone) : 'holds it now', holder: holderRoleLabels[record.holderRole], purpose: record.purpose, condition: record.condition })),
-    exams: exams.map((exam) => ({ when: formatDayClock(exam.performedAt, zone), kind: examKindLabels[exam.kind], method: exam.method, result: exam.result, notice: exam.noticeAt ? `${exam.noticeTo}, ${formatDayClock(exam.noticeAt, zone)}` : 'none recorded' })),
-  };
 }
 
 function hypothesisOf(one: CaseBeforeRedaction['hypotheses'][number], shown: boolean): ReportedHypothesis {

@@ -2,6 +2,7 @@ import { canonicalJson } from './canonical-json.ts';
 import type { CaseBeforeRedaction } from './case-before-redaction.ts';
 import type { Audience, PolicyField } from './release-policy.ts';
 import { fieldPolicies } from './release-policy.ts';
+import { reliedSource } from './relied-weather.ts';
 
 /** A piece of free text that the preparer of a release decides on. */
 export interface LineToDecide {
@@ -54,6 +55,7 @@ export function linesToDecide(source: CaseBeforeRedaction, audience: Audience): 
     ...bySentence('account', 'Account', source.account),
     ...whole('interimControl', 'Interim control', source.interimControl),
     ...(open('reporterNotes') ? source.notes.flatMap((note, index) => bySentence(`note:${note.id}`, `Note ${index + 1}`, note.text)) : []),
+    ...(source.weather && fieldPolicies.weather[audience] === 'shown' ? whole('weather', 'Weather, source and station', reliedSource(source.weather)) : []),
     ...(open('hypotheses') ? source.hypotheses.flatMap((one, index) => whole(`hypothesis:${one.id}`, `Hypothesis ${index + 1}`, joined(one.statement, one.predicts, one.evidenceFor, one.evidenceAgainst, ...Object.values(one.tests).map((test) => test.why)))) : []),
     ...(finding && findingText ? whole('finding', `Finding, version ${finding.version}`, findingText) : []),
     ...source.actions.flatMap((action) => whole(`action:${action.number}`, `Action ${action.number}`, fieldPolicies.actions[audience] === 'reduced' ? action.title : joined(action.title, action.effect))),

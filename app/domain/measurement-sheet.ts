@@ -43,7 +43,7 @@ function fieldRow(scene: Scene, field: SceneField): Omit<SheetRow, 'number'> {
 
 /** What fits into one line on paper. */
 const shortHelp: Readonly<Record<string, string>> = {
-  'optic.faceAzimuthDeg': 'wall line from a map or shadow first',
+  'optic.faceAzimuthDeg': 'wall line or shadow first',
   'optic.faceTiltDeg': '0 faces the horizon, +90 the sky',
   'optic.sagittaMm': 'feeler or depth rule, at the middle',
   'optic.centreBowMm': 'straightedge across the face',
@@ -75,13 +75,13 @@ export function measurementSheet(scene: Scene): SheetGroup[] {
       heading: 'Place and north',
       rows: [
         blank({ label: 'Place of the optic', help: 'pin on the plan, or satellite position', unit: 'm', choices: ['pin', 'satellite'] }),
-        blank({ label: 'Timed shadow of a plumb line', help: 'away from the line; time to the second', unit: '°', choices: ['time:'] }),
+        blank({ label: 'Timed shadow of a plumb line', help: 'time to the second', unit: '°', choices: ['time:'] }),
       ],
     },
     { heading: 'Optic', rows: opticRows(scene) },
     {
       heading: 'In the path of the light',
-      rows: [...openingFields.map((field) => fieldRow(scene, field)), blank({ label: 'Panes, film, blind, screen', help: 'how many, and how they stood then', choices: ['blind open', 'part', 'closed', 'screen'] })],
+      rows: [...openingFields.map((field) => fieldRow(scene, field)), blank({ label: 'Panes, film, blind, screen', help: 'how many, how they stood then', choices: ['blind open', 'part', 'closed', 'screen'] })],
     },
     {
       heading: 'Mark and target',

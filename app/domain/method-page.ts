@@ -1,5 +1,5 @@
-import type { ReconstructionInput } from '#app/physics/model.ts';
-import { climateClasses } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
+import { climateClasses } from '#app/physics/model/input.ts';
 import { settleSite } from '#app/physics/site.ts';
 import { climateAir } from '#app/physics/sky/climate-classes.data.ts';
 import { clearSkyAt } from '#app/physics/sky/clear-sky.ts';

@@ -71,14 +71,16 @@ export function moveChecklist(move: Move, facts: MoveFacts): readonly NeedView[]
   return (items[move.id] ?? []).map((one) => ({ done: one.done(facts), label: one.label(facts) }));
 }
 
-/** Needs that a person may fill in with the move itself, so that they do not stand in its way beforehand. */
-const filledWithMove: Readonly<Record<string, readonly RegExp[]>> = {
-  close: [/^Write the lesson/u, /^Say whether reports to outside bodies/u, /^Every action is shown effective/u],
-  'send-findings': [/^Attach at least one reconstruction/u, /^Add at least one photo/u],
+/** Needs that a person may fill in with the move itself, each with its field, so that they do not stand in its way beforehand. */
+const filledWithMove: Readonly<Record<string, readonly (readonly [need: RegExp, field: string])[]>> = {
+  close: [[/^Write the lesson/u, 'lesson'], [/^Say whether reports to outside bodies/u, 'externalReports'], [/^Every action is shown effective/u, 'effectivenessWaiver']],
+  'send-findings': [[/^Attach at least one reconstruction/u, 'reconstructionWaiver'], [/^Add at least one photo/u, 'evidenceWaiver']],
 };
+
+/** The field of the move's own form beside which the sentence of a need belongs; null when it is mended elsewhere. */
+export const fieldOfNeed = (moveId: string, sentence: string): string | null => filledWithMove[moveId]?.find(([need]) => need.test(sentence))?.[1] ?? null;
 
 /** Whether nothing stands in the way that the move's own form could not fill in. */
 export function isReady(move: Move, facts: MoveFacts): boolean {
-  const fillable = filledWithMove[move.id] ?? [];
-  return needsOf(move, facts).every((need) => fillable.some((pattern) => pattern.test(need)));
+  return needsOf(move, facts).every((need) => fieldOfNeed(move.id, need) !== null);
 }

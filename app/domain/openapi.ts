@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { engineVersion } from '#app/physics/model.ts';
+import { engineVersion } from '#app/physics/model/engine-version.ts';
 import {
   clearSkyAnswerSchema, clearSkyQuerySchema, computationAnswerSchema, problemSchema, queuedAnswerSchema, sunAnswerSchema, sunQuerySchema,
 } from './api-contract.ts';

@@ -6,14 +6,17 @@ import { holdsRole } from './roles.ts';
  * Who may do what, to a case in which state. One table decides buttons and server alike.
  *
  * A rule passes when the actor holds one of `roles` for the case's site (or one of `relations` holds), the case is in
- * one of `states`, and none of `never` holds.
+ * one of `states`, none of `never` holds, and `only` does.
  */
 export type Relation =
   | 'reporter-of-case'
   | 'owner-of-action'
   | 'verifier-of-action'
   | 'author-of-finding'
-  | 'preparer-of-release';
+  | 'preparer-of-release'
+  | 'holder-of-item'
+  | 'receiver-of-item'
+  | 'maker-of-offer';
 
 interface Rule {
   readonly roles: readonly Role[];
@@ -22,6 +25,8 @@ interface Rule {
   readonly relations?: readonly Relation[];
   /** Relations that exclude a person in spite of the role. */
   readonly never?: readonly Relation[];
+  /** The role is not enough: this relation must hold too. */
+  readonly only?: Relation;
 }
 
 const beforeClose = ['reported', 'triage', 'returned', 'investigation', 'findings', 'corrective-action'] as const;
@@ -51,6 +56,9 @@ export const caseRules = {
   'case:hold': { roles: ['privacy-lead', 'administrator'], states: 'any' },
   'evidence:read': { roles: ['investigator', 'reviewer', 'manager', 'privacy-lead'], states: 'any' },
   'evidence:write': { roles: ['investigator'], states: workAndAfter },
+  'evidence:offer': { roles: ['investigator'], states: workAndAfter, relations: ['holder-of-item'] },
+  'evidence:take-over': { roles: ['investigator', 'reviewer', 'manager', 'privacy-lead'], states: workAndAfter, only: 'receiver-of-item' },
+  'evidence:withdraw-offer': { roles: ['investigator', 'reviewer', 'manager', 'privacy-lead'], states: workAndAfter, only: 'maker-of-offer' },
   'attachment:read': { roles: ['investigator', 'reviewer', 'manager', 'privacy-lead'], states: 'any' },
   'attachment:add': { roles: ['investigator', 'privacy-lead'], states: workAndAfter },
   'witness:read': { roles: ['investigator', 'reviewer', 'manager', 'privacy-lead'], states: 'any' },
@@ -92,9 +100,13 @@ export function canOnCase(actor: Actor, action: CaseAction, subject: CaseSubject
   if (actor.organisationId !== subject.organisationId) return false;
   if (rule.states !== 'any' && !rule.states.includes(subject.state)) return false;
   if (rule.never?.some((relation) => subject.relations.includes(relation))) return false;
+  if (rule.only && !subject.relations.includes(rule.only)) return false;
   if (rule.relations?.some((relation) => subject.relations.includes(relation))) return true;
   return holdsRole(actor, rule.roles, subject.siteId);
 }
+
+/** The subject with one relation more, where a decision is about a part of the case that the actor stands in it to. */
+export const withRelation = (subject: CaseSubject, relation: Relation, holds: boolean): CaseSubject => (holds ? { ...subject, relations: [...subject.relations, relation] } : subject);
 
 /** The sentence shown beside a move that the actor may not make. */
 export function whoCan(action: CaseAction): string {
@@ -114,11 +126,15 @@ export function whoCan(action: CaseAction): string {
     'verifier-of-action': 'its verifier',
     'author-of-finding': 'the author',
     'preparer-of-release': 'the person who prepared it',
+    'holder-of-item': 'the person who holds the item',
+    'receiver-of-item': 'the person to whom it is offered',
+    'maker-of-offer': 'the person who offered it',
   };
   const allowed = [...rule.roles.map((role) => names[role]), ...(rule.relations ?? []).map((relation) => relationNames[relation])];
   const list = allowed.length > 1 ? `${allowed.slice(0, -1).join(', ')} or ${allowed.at(-1)}` : (allowed[0] ?? 'nobody');
   const except = rule.never?.length ? `, but not ${rule.never.map((relation) => relationNames[relation]).join(' or ')}` : '';
-  return `Open to ${list}${except}.`;
+  const needed = rule.only ? `, and there only to ${relationNames[rule.only]}` : '';
+  return `Open to ${list}${except}${needed}.`;
 }
 
 /** Things done to an organisation rather than to a case. */

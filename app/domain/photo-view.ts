@@ -159,13 +159,14 @@ function hashWords(photo: PhotoFacts, zone: string): string {
 /** The finding of the sheet, weakest fact first. */
 export function photoSheetSentence(cards: readonly PhotoCard[]): string {
   if (cards.length === 0) return 'No photo yet';
-  const list = (labels: readonly number[]) => `photo ${labels.join(', ')}`;
+  const list = (labels: readonly number[]) => (labels.length === 1 ? `photo ${labels[0]}` : `photos ${labels.slice(0, -1).join(', ')} and ${labels.at(-1)}`);
   const bad = cards.filter(({ hashCheck }) => hashCheck === 'differs' || hashCheck === 'missing').map(({ label }) => label);
-  if (bad.length > 0) return `The original of ${list(bad)} is not what came in`;
+  if (bad.length > 0) return bad.length === 1 ? `The original of ${list(bad)} is not what came in` : `The originals of ${list(bad)} are not what came in`;
   const apart = cards.filter(({ differenceWords: words }) => words !== null).map(({ label }) => label);
-  if (apart.length > 0) return `The time of ${list(apart)} does not go with the stated finding`;
+  if (apart.length > 0) return apart.length === 1 ? `The time of ${list(apart)} does not go with the stated finding` : `The times of ${list(apart)} do not go with the stated finding`;
   const open = cards.filter(({ offers }) => offers.some(({ answer }) => answer === null)).map(({ label }) => label);
-  if (open.length > 0) return `What the file of ${list(open)} says is not confirmed yet`;
+  if (open.length > 0) return open.length === 1 ? `What the file of ${list(open)} says is not confirmed yet` : `What the files of ${list(open)} say is not confirmed yet`;
   const nameless = cards.filter(({ view }) => view === null).map(({ label }) => label);
-  return nameless.length > 0 ? `The view of ${list(nameless)} is not stated` : `${cards.length === 1 ? 'One photo' : `${cards.length} photos`}, each with view and time settled`;
+  if (nameless.length > 0) return nameless.length === 1 ? `The view of ${list(nameless)} is not stated` : `The views of ${list(nameless)} are not stated`;
+  return `${cards.length === 1 ? 'One photo' : `${cards.length} photos`}, each with view and time settled`;
 }

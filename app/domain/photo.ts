@@ -101,6 +101,7 @@ export const photoRefusal = {
   tooManyPixels: (name: string, limitPixels: number) => `“${name}” has more than ${Math.floor(limitPixels / 1_000_000)} million pixels. Send it in a smaller size.`,
   damaged: (name: string) => `“${name}” is damaged or cut off, and cannot be shown. Take the photo again, or choose another file.`,
   tooMany: (name: string) => `“${name}” was not taken: a report holds at most ${photosPerReport} photos.`,
+  tooManyAtOnce: (name: string, limit: number) => `“${name}” was not taken: send at most ${limit} photos at once, and the rest afterwards.`,
   notStored: (name: string) => `“${name}” could not be stored. Nothing is wrong with the photo: try it again in a minute.`,
   otherKind: (name: string, content: Exclude<KnownContent, PhotoMime> | null) => {
     if (content === 'avif') return `“${name}” is in the AVIF format, which is not read here. Share the photo as JPEG.`;

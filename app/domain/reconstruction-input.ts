@@ -1,4 +1,4 @@
-import type { MarkInput, OpeningInput, ReconstructionInput, SkyInput, SkylineInput, TargetInput } from '#app/physics/model.ts';
+import type { MarkInput, OpeningInput, ReconstructionInput, SkyInput, SkylineInput, TargetInput } from '#app/physics/model/input.ts';
 import { openingTransmittance } from './optic-class-values.ts';
 import { formatDayClock } from './local-time.ts';
 import { measureMethodLabels, targetMaterialLabels } from './scene.ts';

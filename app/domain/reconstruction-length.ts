@@ -1,4 +1,4 @@
-import type { ReconstructionInput } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
 
 /** A request that would keep its sender waiting longer than this is queued instead. [s] */
 const longestWaitS = 5;

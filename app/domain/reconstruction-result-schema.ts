@@ -1,6 +1,6 @@
 import { z } from 'zod';
-import { minuteReasons } from '#app/physics/model.ts';
-import type { ReconstructionResult } from '#app/physics/model.ts';
+import { minuteReasons } from '#app/physics/model/minutes.ts';
+import type { ReconstructionResult } from '#app/physics/model/result.ts';
 import { assumptionSchema, recurrenceBandSchema, requiredSunSchema } from './recurrence-request.ts';
 
 /** The contract of a reconstruction's result; `satisfies` holds it to the engine's own types. */

@@ -1,7 +1,7 @@
 import { z } from 'zod';
 import { targetMaterials } from '#app/physics/heating/target-materials.data.ts';
-import { inputRanges as ranges } from '#app/physics/input-ranges.ts';
-import { climateClasses, type ReconstructionInput } from '#app/physics/model.ts';
+import { inputRanges as ranges, type InputRange } from '#app/physics/input-ranges.ts';
+import { climateClasses, type ReconstructionInput } from '#app/physics/model/input.ts';
 import { numberIn } from './ranged-number.ts';
 import { opticSchema } from './optic-schema.ts';
 
@@ -77,6 +77,16 @@ const skylineSchema = z.strictObject({
   sigmaDeg: numberIn(ranges.skyline.sigmaDeg),
 });
 
+/** What is known of a mark however its place was measured. */
+const markLooks = ({ lengthMm, widthMm, trailHeadingDeg, normalAzimuthDeg, normalElevationDeg }: MarkLookRanges) => ({
+  lengthMm: numberIn(lengthMm).optional(),
+  widthMm: numberIn(widthMm).optional(),
+  trailHeadingDeg: numberIn(trailHeadingDeg).optional(),
+  normalAzimuthDeg: numberIn(normalAzimuthDeg).optional(),
+  normalElevationDeg: numberIn(normalElevationDeg).optional(),
+});
+type MarkLookRanges = Readonly<Record<'lengthMm' | 'widthMm' | 'trailHeadingDeg' | 'normalAzimuthDeg' | 'normalElevationDeg', InputRange>>;
+
 const markSchema = z.strictObject({
   bearingDeg: numberIn(ranges.mark.bearingDeg),
   bearingSigmaDeg: numberIn(ranges.mark.bearingSigmaDeg),
@@ -84,11 +94,7 @@ const markSchema = z.strictObject({
   elevationSigmaDeg: numberIn(ranges.mark.elevationSigmaDeg),
   distanceM: numberIn(ranges.mark.distanceM),
   distanceSigmaM: numberIn(ranges.mark.distanceSigmaM),
-  lengthMm: numberIn(ranges.mark.lengthMm).optional(),
-  widthMm: numberIn(ranges.mark.widthMm).optional(),
-  trailHeadingDeg: numberIn(ranges.mark.trailHeadingDeg).optional(),
-  normalAzimuthDeg: numberIn(ranges.mark.normalAzimuthDeg).optional(),
-  normalElevationDeg: numberIn(ranges.mark.normalElevationDeg).optional(),
+  ...markLooks(ranges.mark),
 });
 
 const markCoordinatesSchema = z.strictObject({
@@ -96,11 +102,7 @@ const markCoordinatesSchema = z.strictObject({
   northM: numberIn(ranges.markCoordinates.northM),
   upM: numberIn(ranges.markCoordinates.upM),
   sigmaM: numberIn(ranges.markCoordinates.sigmaM),
-  lengthMm: numberIn(ranges.markCoordinates.lengthMm).optional(),
-  widthMm: numberIn(ranges.markCoordinates.widthMm).optional(),
-  trailHeadingDeg: numberIn(ranges.markCoordinates.trailHeadingDeg).optional(),
-  normalAzimuthDeg: numberIn(ranges.markCoordinates.normalAzimuthDeg).optional(),
-  normalElevationDeg: numberIn(ranges.markCoordinates.normalElevationDeg).optional(),
+  ...markLooks(ranges.markCoordinates),
 });
 
 const targetSchema = z.strictObject({

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import type { ReconstructionInput } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
 import { declinationOf } from '#app/physics/sun/solar-position.ts';
 import { reconstruct } from '#app/physics/reconstruct.ts';
 import { recurrenceBands } from '#app/physics/recurrence.ts';

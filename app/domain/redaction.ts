@@ -7,8 +7,12 @@ import { fieldPolicies } from './release-policy.ts';
 import type { Audience, PolicyField, Treatment } from './release-policy.ts';
 import { releasedCaseSchema, withheldClasses } from './released-case.ts';
 import type { RedactedText, ReleasedCase, WithheldClass, WithheldCounts } from './released-case.ts';
+import { releasedDrawing } from './released-drawing.ts';
 import { releasedMeasurements } from './released-measurements.ts';
 import { authorNames, chronologyOf, correctedFound, injuryWords, releasedEvent, releasedEvidence, releasedResult } from './released-parts.ts';
+import { releasedWeather } from './released-weather.ts';
+import { reliedSource } from './relied-weather.ts';
+import { runDrawing } from './run-drawing.ts';
 
 /** Lines of free text, and photos, that the preparer decides one by one; what is undecided is held back. */
 export type LineDecision = 'share' | 'hold-back';
@@ -102,8 +106,9 @@ export function redactCase(source: CaseBeforeRedaction, audience: Audience, deci
 }
 
 /** Numbers and words from our own lists. */
-function plainPart({ source, searcher, treatment }: Desk) {
+function plainPart({ source, searcher, treatment, line }: Desk) {
   const run = source.reconstruction;
+  const station = source.weather ? line('weather', reliedSource(source.weather), 'weather') : [];
   const place = treatment('reconstruction') === 'shown' ? 'shown' : 'reduced';
   return {
     caseNumber: source.caseNumber,
@@ -124,8 +129,9 @@ function plainPart({ source, searcher, treatment }: Desk) {
     loss: treatment('loss') === 'shown' ? source.loss : null,
     measurements: treatment('measurements') === 'removed' ? [] : releasedMeasurements(source.scene),
     reconstruction: run && treatment('reconstruction') !== 'removed'
-      ? { number: run.number, engineVersion: run.engineVersion, inputHash: place === 'shown' ? run.inputHash : null, resultHash: run.resultHash, result: releasedResult(run.result, searcher, place) }
+      ? { number: run.number, engineVersion: run.engineVersion, inputHash: place === 'shown' ? run.inputHash : null, resultHash: run.resultHash, result: releasedResult(run.result, searcher, place, source.weather ? station : null), drawing: releasedDrawing(runDrawing(run.input, run.result), place) }
       : null,
+    weather: releasedWeather(source.weather, treatment('weather'), station),
     returnDays: source.returnDays,
     evidence: releasedEvidence(source, treatment('custody')),
     chronology: chronologyOf(source),
@@ -199,6 +205,8 @@ function countWithheld({ source, treatment }: Desk, released: ReleasedCase, shar
   add('personal', source.items.reduce((total, item) => total + item.custody.length, 0));
   add('exact-place', (source.position ? 1 : 0) + stated([source.site.address]) + (treatment('siteName') === 'removed' ? 1 : 0));
   add('exact-place', source.reconstruction && treatment('reconstruction') === 'reduced' ? 1 : 0);
+  // The bearing of the station, and the station itself where it is not named.
+  add('exact-place', source.weather ? (source.weather.bearingDeg === null ? 0 : 1) : 0);
   add('exact-place', shared.filter((photo) => photo.exifPlace !== null).length);
   for (const mask of shared.flatMap((photo) => photo.masks)) add(mask.class, 1);
   add('photo', source.photos.length - shared.length);

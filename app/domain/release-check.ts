@@ -61,7 +61,7 @@ export function checkReleasedText(params: { readonly source: CaseBeforeRedaction
     verdict('place', 'No coordinates, postcode or address of the place', [...found(heldHits, 'held-coordinates'), ...found(typedHits, 'coordinates', 'postcode', 'address', 'place'), ...coordinateFields(material, held)], `${held.coordinates.length} positions, ${material.numbers.length} numbers`),
     verdict('health-and-children', 'No health matter and no child in the text', found(typedHits, 'health', 'child'), `${material.typed.length} pieces of text`),
     verdict('legal', 'No legal advice and no marked part', [...found(typedHits, 'legal'), ...privilegedParts(material, source)], `${material.typed.length} pieces of text`),
-    verdict('file-names', 'File names say nothing', fileNames.filter((name) => !/^(?:photo-\d{2,}\.jpg|data\.json|report\.pdf|runs\.csv|measurements\.csv)$/u.test(name)), `${fileNames.length} names`),
+    verdict('file-names', 'File names say nothing', fileNames.filter((name) => !/^(?:photo-\d{2,}\.jpg|data\.json|report\.pdf|runs\.csv|measurements\.csv|weather\.csv)$/u.test(name)), `${fileNames.length} names`),
   ];
 }
 

@@ -7,10 +7,13 @@ import { hypothesisKindLabels, hypothesisResultLabels, testLabels, testNames } f
 import { extentLabels, foundPrecisionLabels, onsetBasisLabels, photoViewLabels, weatherSeenLabels } from './incident.ts';
 import { formatClock, formatDay, formatDayClock, formatIsoDay, formatOffset, formatWeekday, fromLocalInput } from './local-time.ts';
 import { redactedWords } from './redact-text.ts';
+import { trailWords } from './report-numbers.ts';
 import type { RedactedText, ReleasedCase } from './released-case.ts';
 import { releasedEventLabels } from './released-case.ts';
 import type { ReleasedResult } from './released-result.ts';
 import { assumptionLabel, becauseWords, gradeHeading, minuteReasonWords, totalsWords } from './run-words.ts';
+import { weatherLead, weatherLimits, weatherTable } from './weather-part.ts';
+import type { WeatherTable } from './weather-part.ts';
 
 /** A released case in the words of its page. Made from the released case alone. */
 export interface ReleaseDocument {
@@ -27,6 +30,8 @@ export interface ReleaseDocument {
   readonly evidence: readonly ReleasedItemView[];
   readonly measurements: readonly { readonly group: string; readonly rows: ReleasedCase['measurements'] }[];
   readonly sun: SunPart | null;
+  /** Null where the release says nothing of it. */
+  readonly weather: ReleasedWeatherView | 'clear-sky' | null;
   readonly hypotheses: readonly HypothesisPart[];
   readonly finding: FindingPart | null;
   readonly actions: readonly { readonly number: number; readonly title: RedactedText; readonly meta: string; readonly effect: RedactedText }[];
@@ -39,6 +44,13 @@ export interface ReleasedItemView {
   readonly kind: string;
   readonly custody: readonly { readonly holder: string; readonly from: string; readonly to: string }[];
   readonly exams: readonly { readonly kind: string; readonly when: string; readonly notice: string }[];
+}
+
+/** The weather that the run went by. */
+export interface ReleasedWeatherView {
+  readonly lead: RedactedText;
+  readonly limits: readonly string[];
+  readonly table: WeatherTable;
 }
 
 export interface SunPart {
@@ -96,6 +108,7 @@ export function releaseDocument(released: ReleasedCase): ReleaseDocument {
     evidence: releasedItems(released),
     measurements: grouped(released.measurements),
     sun: sunPart(released),
+    weather: weatherPart(released),
     hypotheses: released.hypotheses.map(hypothesisPart),
     finding: findingPart(released),
     actions: released.actions.map((action) => ({
@@ -179,6 +192,14 @@ function sunPart(released: ReleasedCase): SunPart | null {
   };
 }
 
+/** Releases made before the weather was part of them hold none. */
+function weatherPart({ weather, reconstruction, zone }: ReleasedCase): ReleaseDocument['weather'] {
+  if (weather === undefined || !reconstruction) return null;
+  if (weather === null) return 'clear-sky';
+  const { before, after } = weatherLead({ ...weather, bearingDeg: null });
+  return { lead: [{ text: before }, ...weather.source, { text: after }], limits: weatherLimits(weather), table: weatherTable(weather, reconstruction.result.window, zone) };
+}
+
 const dayMs = 86_400_000;
 
 function cardOf(released: ReleasedCase, result: ReleasedResult): CardView | null {
@@ -216,7 +237,7 @@ function numbersOf(result: ReleasedResult, zone: string): SunPart['numbers'] {
   if (focus) {
     lines.push({ term: 'Focal length', value: focus.focalLengthM < 2 ? `${round(focus.focalLengthM * 1000)} mm` : `${round(focus.focalLengthM)} m`, note: focus.method === 'ray-trace' ? 'by tracing rays' : 'closed form' });
     for (const disc of focus.discs) lines.push({ term: `Flux on ${disc.disc === 'sun-image' ? `${round(disc.diameterMm)} mm, the image of the sun` : disc.disc}, centred on the ${disc.centre}`, value: `${band(disc.fluxKwm2.low, disc.fluxKwm2.high)} kW/m²`, note: `middle ${round(disc.fluxKwm2.mid)}` });
-    if (focus.trailSpeedMmPerH !== null) lines.push({ term: 'Speed of the spot', value: `${round(focus.trailSpeedMmPerH)} mm/h`, note: focus.trailMinutesAtLeast === null ? 'a line focus carries no time' : `the trail needs at least ${round(focus.trailMinutesAtLeast)} min` });
+    if (focus.trailSpeedMmPerH !== null) lines.push({ term: 'Speed of the spot', value: `${round(focus.trailSpeedMmPerH)} mm/h`, note: trailWords(focus) });
   }
   return lines;
 }

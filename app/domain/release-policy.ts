@@ -9,7 +9,7 @@ export type Audience = (typeof audiences)[number];
 export const audienceLabels: Record<Audience, string> = { insurer: 'Insurer', 'other-party': 'Other party' };
 export const audienceMeanings: Record<Audience, string> = {
   insurer: 'Site by name, roles not names, reasoning and signed finding in full, loss but no cost of actions.',
-  'other-party': 'No site or organisation by name, no directions of the sun, no hypotheses, the opinion without causes and limits, no loss.',
+  'other-party': 'No site or organisation by name, no directions of the sun, no weather station by name, no hypotheses, the opinion without causes and limits, no loss.',
 };
 
 export type Treatment = 'shown' | 'reduced' | 'removed';
@@ -35,6 +35,7 @@ export const fieldPolicies = {
   photos: { class: 'photo', insurer: 'reduced', 'other-party': 'reduced' },
   measurements: { class: null, insurer: 'shown', 'other-party': 'shown' },
   reconstruction: { class: 'exact-place', insurer: 'shown', 'other-party': 'reduced' },
+  weather: { class: 'exact-place', insurer: 'shown', 'other-party': 'reduced' },
   hypotheses: { class: 'free-text', insurer: 'shown', 'other-party': 'removed' },
   draftFinding: { class: 'legal', insurer: 'removed', 'other-party': 'removed' },
   signedFinding: { class: 'free-text', insurer: 'shown', 'other-party': 'reduced' },

@@ -4,7 +4,9 @@ import { evidenceKinds, examKinds, holderRoles } from './evidence.ts';
 import { certainties, classifications } from './finding.ts';
 import { hypothesisKinds, hypothesisResults, testResults } from './hypothesis.ts';
 import { extents, foundPrecisions, onsetBases, photoViews, siteUses, weatherSeen } from './incident.ts';
+import { releasedDrawingSchema } from './released-drawing.ts';
 import { releasedResultSchema } from './released-result.ts';
+import { weatherNatures } from './weather.ts';
 
 export const withheldClasses = ['personal', 'health', 'child', 'legal', 'exact-place', 'commercial', 'free-text', 'photo'] as const;
 export type WithheldClass = (typeof withheldClasses)[number];
@@ -25,6 +27,7 @@ const redactedText = z.array(z.union([z.object({ text: z.string() }), z.object({
 export type RedactedText = z.infer<typeof redactedText>;
 
 const instant = z.string();
+const quantity = z.number().optional();
 const test = z.object({ result: z.enum(testResults), why: redactedText });
 
 /** An injury is one kind for a reader outside: which part of the body it was is a health matter. */
@@ -75,8 +78,26 @@ export const releasedCaseSchema = z.object({
       inputHash: z.string().nullable(),
       resultHash: z.string(),
       result: releasedResultSchema,
+      /** For the figures of the printed report; releases made before they had any hold none. */
+      drawing: releasedDrawingSchema.nullish(),
     })
     .nullable(),
+  /** The weather that the run went by; releases made before it was part of them hold none. */
+  weather: z
+    .object({
+      number: z.number().int().nullable(),
+      nature: z.enum(weatherNatures).nullable(),
+      source: redactedText,
+      /** Whole kilometres, one at least. */
+      distanceKm: z.number().nullable(),
+      basis: z.enum(['measured', 'derived', 'hourly-archive']),
+      intervalMin: z.number(),
+      setAside: z.boolean(),
+      values: z.array(
+        z.object({ startUtc: instant, endUtc: instant, usedWm2: z.number().nullable(), directWm2: quantity, globalWm2: quantity, sunshineMin: quantity, cloudOktas: quantity, temperatureC: quantity, pressureHpa: quantity, windMs: quantity }),
+      ),
+    })
+    .nullish(),
   hypotheses: z.array(
     z.object({
       kind: z.enum(hypothesisKinds),

@@ -74,7 +74,7 @@ function airRows({ skyline, air }: Scene): Row[] {
     ...(air.temperatureC === undefined ? [] : [{ ...stated(group, 'Air temperature', String(air.temperatureC)), unit: '°C' }]),
     ...(air.pressureHpa === undefined ? [] : [{ ...stated(group, 'Air pressure', String(air.pressureHpa)), unit: 'hPa' }]),
     stated(group, 'Climate class', sentence(air.climateClass)),
-    // Weather has records of its own, which stay in the house; their absence here says nothing.
+    // The weather that a run went by leaves as a part of its own.
     ...(air.dni
       ? [{ group, label: 'Direct sunlight on record', value: String(air.dni.values.length), plusMinus: '', unit: 'values', method: `${dniBasis[air.dni.basis]}${air.dni.stationDistanceKm === undefined ? '' : `, ${air.dni.stationDistanceKm} km away`}` }]
       : []),

@@ -5,8 +5,8 @@ import { itemCode } from './evidence.ts';
 import { onsetBasisLabels } from './incident.ts';
 import type { Searcher } from './redact-text.ts';
 import { redactedWords, redactText } from './redact-text.ts';
-import type { ReleasedCase, releasedEvents } from './released-case.ts';
-import type { ReconstructionResult } from '#app/physics/model.ts';
+import type { RedactedText, ReleasedCase, releasedEvents } from './released-case.ts';
+import type { ReconstructionResult } from '#app/physics/model/result.ts';
 
 /** Parts of a released case that are made of our own words and of numbers. */
 
@@ -97,12 +97,22 @@ function letterOf(index: number): string {
 }
 
 /**
+ * The name of a weather station is the one text of a result that somebody typed. It stands after a colon, and leaves as
+ * far as the line of the weather does.
+ */
+function releasedBasis(basis: string, searcher: Searcher, station: RedactedText | null): string {
+  const kept = station?.every((piece) => 'withheld' in piece) ? (basis.split(': ')[0] ?? '') : basis;
+  return redactedWords(redactText(kept, searcher));
+}
+
+/**
  * The result for a reader. Where the exact place is to stay in the house, everything from which clock time and angles
  * give a position closer than some tens of kilometres is left out: directions of the sun, and the seconds of sunrise.
+ *
+ * @param station What leaves of the name of the weather's source; null where the run went by none.
  */
-export function releasedResult(result: ReconstructionResult, searcher: Searcher, place: 'shown' | 'reduced'): ReconstructionResult {
-  // The name of a weather station is the one text of a result that somebody typed.
-  const best = result.best ? { ...result.best, dni: { ...result.best.dni, basis: redactedWords(redactText(result.best.dni.basis, searcher)) } } : null;
+export function releasedResult(result: ReconstructionResult, searcher: Searcher, place: 'shown' | 'reduced', station: RedactedText | null): ReconstructionResult {
+  const best = result.best ? { ...result.best, dni: { ...result.best.dni, basis: releasedBasis(result.best.dni.basis, searcher, station) } } : null;
   if (place === 'shown') return { ...result, best };
   const toMinute = (utc: string | null) => (utc ? new Date(Math.round(Date.parse(utc) / 60_000) * 60_000).toISOString() : null);
   return {

@@ -10,6 +10,8 @@ import type { Audience } from './release-policy.ts';
 import type { RedactedText, ReleasedCase, WithheldCounts } from './released-case.ts';
 import { releasedEventLabels, withheldClasses, withheldLabels } from './released-case.ts';
 import type { ReportSource, ReportTerm } from './report-source.ts';
+import { noDrawing } from './run-drawing.ts';
+import type { WeatherPart } from './weather-part.ts';
 
 export interface ReleasedReport {
   readonly released: ReleasedCase;
@@ -59,6 +61,8 @@ export function releasedReport({ released, withheld, audience, releasedHash }: R
       fromWhere: '',
       custody: item.custody.map((record) => ({ ...record, purpose: '', condition: '' })),
       exams: item.exams.map((exam) => ({ when: exam.when, kind: exam.kind, method: '', result: '', notice: exam.notice })),
+      planned: [],
+      notices: [],
     })),
     custodyLines: (released.evidence ?? []).filter((item) => item.custody.length > 0).map((item) => ({
       code: item.code,
@@ -66,9 +70,10 @@ export function releasedReport({ released, withheld, audience, releasedHash }: R
       seal: '',
       holders: item.custody.map((record) => ({ role: record.role, from: new Date(record.from), to: record.to ? new Date(record.to) : null })),
       exams: item.exams.map((exam) => ({ kind: exam.kind, at: new Date(exam.at) })),
+      planned: [],
     })),
     measurements: released.measurements,
-    run: reconstruction && { number: reconstruction.number, engineVersion: reconstruction.engineVersion, zoneRules: '', inputHash: reconstruction.inputHash, resultHash: reconstruction.resultHash, result: reconstruction.result, skyline: [] },
+    run: reconstruction && { number: reconstruction.number, engineVersion: reconstruction.engineVersion, zoneRules: '', inputHash: reconstruction.inputHash, resultHash: reconstruction.resultHash, result: reconstruction.result, drawing: reconstruction.drawing ?? noDrawing, weather: weatherOf(released) },
     returns: released.returnDays,
     hypotheses: released.hypotheses.map((one) => ({
       heading: hypothesisKindLabels[one.kind],
@@ -92,6 +97,11 @@ export function releasedReport({ released, withheld, audience, releasedHash }: R
     actions: released.actions.map((action) => ({ number: action.number, title: printedText(action.title), level: controlLevelLabels[action.controlLevel], due: formatIsoDay(action.dueOn), state: actionStateLabels[action.state] })),
     photos: released.photos.map((photo) => ({ label: photo.fileName, view: photo.view ? photoViewLabels[photo.view] : 'not stated', caption: printedText(photo.caption), taken: 'not stated', sha256: 'in the manifest' })),
   };
+}
+
+/** Releases made before the weather was part of them hold none. */
+export function weatherOf({ weather }: Pick<ReleasedCase, 'weather'>): WeatherPart | null {
+  return weather ? { ...weather, source: printedText(weather.source), bearingDeg: null } : null;
 }
 
 function sceneOf(released: ReleasedCase): ReportTerm[] {

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { minuteReasons } from '#app/physics/model.ts';
+import { minuteReasons } from '#app/physics/model/minutes.ts';
 
 /**
  * What of a reconstruction's result may leave the house. A key that is not named here is dropped on the way out, so a

@@ -47,9 +47,25 @@ export interface ReportFigure {
 /** Inks of a figure; the page and the print have a colour for each. */
 export type FigureInk = 'ink' | 'second' | 'hair' | 'edge' | 'card' | 'card-text' | 'pale' | 'slot' | 'burn' | 'clear' | 'paper';
 
+/** `opacity` is the share of the ink that a fill takes, 0 to 1; all of it where it is left out. */
 export type FigureMark =
-  | { readonly mark: 'line'; readonly points: readonly (readonly [number, number])[]; readonly ink: FigureInk; readonly widthPt: number; readonly dash?: readonly [number, number] }
-  | { readonly mark: 'area'; readonly points: readonly (readonly [number, number])[]; readonly fill?: FigureInk; readonly edge?: FigureInk; readonly widthPt?: number }
-  | { readonly mark: 'rect'; readonly x: number; readonly y: number; readonly width: number; readonly height: number; readonly fill?: FigureInk; readonly edge?: FigureInk; readonly widthPt?: number; readonly roundPt?: number }
-  | { readonly mark: 'dot'; readonly x: number; readonly y: number; readonly radiusPt: number; readonly fill?: FigureInk; readonly edge?: FigureInk }
-  | { readonly mark: 'text'; readonly x: number; readonly y: number; readonly text: string; readonly sizePt: number; readonly anchor?: 'start' | 'middle' | 'end'; readonly ink?: FigureInk; readonly bold?: boolean };
+  | { readonly mark: 'line'; readonly points: readonly FigurePoint[]; readonly ink: FigureInk; readonly widthPt: number; readonly dash?: readonly [number, number] }
+  | { readonly mark: 'area'; readonly points: readonly FigurePoint[]; readonly fill?: FigureInk; readonly edge?: FigureInk; readonly widthPt?: number; readonly opacity?: number }
+  | { readonly mark: 'rect'; readonly x: number; readonly y: number; readonly width: number; readonly height: number; readonly fill?: FigureInk; readonly edge?: FigureInk; readonly widthPt?: number; readonly roundPt?: number; readonly opacity?: number }
+  | { readonly mark: 'dot'; readonly x: number; readonly y: number; readonly radiusPt: number; readonly fill?: FigureInk; readonly edge?: FigureInk; readonly opacity?: number }
+  | FigureText;
+
+export type FigurePoint = readonly [x: number, y: number];
+export interface FigureText {
+  readonly mark: 'text';
+  readonly x: number;
+  /** Base line. */
+  readonly y: number;
+  readonly text: string;
+  readonly sizePt: number;
+  readonly anchor?: 'start' | 'middle' | 'end';
+  readonly ink?: FigureInk;
+  readonly bold?: boolean;
+  /** On a strip of the page's ground, or of a dark body, so that lines under it do not cut it. */
+  readonly bed?: 'paper' | 'card';
+}

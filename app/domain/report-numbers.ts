@@ -5,6 +5,12 @@ import { outcomeLabels } from './run-words.ts';
 const round = (value: number): string => (Math.abs(value) >= 100 ? Math.round(value).toString() : Number(value.toPrecision(3)).toString());
 const band = ({ low, high }: { readonly low: number; readonly high: number }): string => `${round(low)} to ${round(high)}`;
 
+/** What the speed of the spot says of time, which only the length of a trail can be set against. */
+export function trailWords({ focusKind, trailMinutesAtLeast }: Pick<NonNullable<ReportedResult['focus']>, 'focusKind' | 'trailMinutesAtLeast'>): string {
+  if (focusKind === 'line') return 'a line focus carries no time';
+  return trailMinutesAtLeast === null ? 'no length of a trail to set against it' : `the trail needs at least ${round(trailMinutesAtLeast)} min`;
+}
+
 /** The best minute and the focus there, one quantity a row: name, value, note. */
 export function focusRows({ best, focus }: ReportedResult, zone: string): string[][] {
   const rows: string[][] = [];
@@ -20,7 +26,7 @@ export function focusRows({ best, focus }: ReportedResult, zone: string): string
       const size = disc.disc === 'sun-image' ? `${round(disc.diameterMm)} mm disc, the image of the sun` : `${disc.disc} disc`;
       rows.push([`Flux on the ${size}`, `${band(disc.fluxKwm2)} kW/m²`, `middle ${round(disc.fluxKwm2.mid)}, centred on the ${disc.centre}`]);
     }
-    if (focus.trailSpeedMmPerH !== null) rows.push(['Speed of the spot', `${round(focus.trailSpeedMmPerH)} mm/h`, focus.trailMinutesAtLeast === null ? 'a line focus carries no time' : `the trail needs at least ${round(focus.trailMinutesAtLeast)} min`]);
+    if (focus.trailSpeedMmPerH !== null) rows.push(['Speed of the spot', `${round(focus.trailSpeedMmPerH)} mm/h`, trailWords(focus)]);
   }
   return rows;
 }

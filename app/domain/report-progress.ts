@@ -3,6 +3,7 @@ import type { Certainty } from './finding.ts';
 import type { HypothesisKind } from './hypothesis.ts';
 import { hypothesisKindLabels } from './hypothesis.ts';
 import type { triageCloseReasons } from './incident.ts';
+import { caseRules } from './permissions.ts';
 
 /** What a reporter may know of a case, in plain words: no names, no place, nothing of the account. */
 export interface ProgressFacts {
@@ -102,4 +103,12 @@ export function progressSteps(facts: ProgressFacts, times: { readonly reportedAt
   const aside: ProgressStep = { state: facts.state, name: names[facts.state], words: side, at: timeOf(facts.state), reached: true, now: true };
   const afterTriage = steps.findIndex(({ state }) => state === 'triage') + 1;
   return [...steps.slice(0, afterTriage), aside, ...(facts.state === 'duplicate' ? [] : steps.slice(afterTriage))];
+}
+
+/** Why whoever holds the receipt may not add a photo; null when they may: in the states in which a reporter may. */
+export function photoClosedWords(state: CaseState): string | null {
+  const open: readonly CaseState[] = caseRules['case:add-photo'].states;
+  if (open.includes(state)) return null;
+  if (state === 'duplicate') return 'This report goes on under an earlier one, so photos are not taken here any more. If the mark is back, report it again.';
+  return 'The case is closed, so photos are not taken any more. If the mark is back, report it again.';
 }

@@ -1,12 +1,14 @@
-import type { ReleasedResult } from './released-result.ts';
 import type { CustodyLine } from './figures/custody-figure.ts';
-
+import type { FluxMapSource } from './flux-discs.ts';
+import type { ReleasedResult } from './released-result.ts';
+import type { RunDrawing } from './run-drawing.ts';
+import type { WeatherPart } from './weather-part.ts';
 
 type Frozen<Value> = Value extends readonly (infer One)[] ? readonly Frozen<One>[] : Value extends object ? { readonly [Key in keyof Value]: Frozen<Value[Key]> } : Value;
-type Shown = Pick<ReleasedResult, 'window' | 'daylight' | 'minutes' | 'runs' | 'totals' | 'best' | 'heating' | 'requiredSun' | 'checks' | 'tests' | 'grade' | 'assumptions' | 'warnings'>;
+type Shown = Pick<ReleasedResult, 'window' | 'daylight' | 'minutes' | 'runs' | 'totals' | 'best' | 'heating' | 'recurrence' | 'requiredSun' | 'checks' | 'tests' | 'grade' | 'assumptions' | 'warnings'>;
 
 /** A result of the engine as far as a report shows it; what leaves the house has the same shape. */
-export type ReportedResult = Frozen<Shown & { focus: Omit<NonNullable<ReleasedResult['focus']>, 'traced'> | null }>;
+export type ReportedResult = Frozen<Shown & { focus: (Omit<NonNullable<ReleasedResult['focus']>, 'traced'> & Pick<NonNullable<FluxMapSource['focus']>, 'traced'>) | null }>;
 
 /**
  * All that a report is made of, in words that may stand in it. The reader decides what is put in: for a reader outside,
@@ -58,6 +60,9 @@ export interface ReportedItem {
   readonly fromWhere: string;
   readonly custody: readonly { readonly from: string; readonly to: string; readonly holder: string; readonly purpose: string; readonly condition: string }[];
   readonly exams: readonly { readonly when: string; readonly kind: string; readonly method: string; readonly result: string; readonly notice: string }[];
+  /** Examinations that may alter it and have not been made, with what each lacks. */
+  readonly planned: readonly { readonly when: string; readonly method: string; readonly lacks: string }[];
+  readonly notices: readonly { readonly told: string; readonly sent: string; readonly way: string; readonly about: string; readonly answer: string }[];
 }
 export interface ReportedRun {
   readonly number: number;
@@ -66,7 +71,9 @@ export interface ReportedRun {
   readonly inputHash: string | null;
   readonly resultHash: string;
   readonly result: ReportedResult;
-  readonly skyline: readonly { readonly azimuthDeg: number; readonly elevationDeg: number }[];
+  readonly drawing: RunDrawing;
+  /** Null where the run goes by the clear sky alone. */
+  readonly weather: WeatherPart | null;
 }
 export interface ReportedHypothesis {
   readonly heading: string;

@@ -24,6 +24,7 @@ interface TableRule {
   readonly roles: readonly Role[];
   readonly relations?: readonly Relation[];
   readonly never?: readonly Relation[];
+  readonly only?: Relation;
 }
 
 const admitting: Record<Relation, string> = {
@@ -32,6 +33,9 @@ const admitting: Record<Relation, string> = {
   'verifier-of-action': 'to verify',
   'author-of-finding': 'own findings',
   'preparer-of-release': 'own releases',
+  'holder-of-item': 'held items',
+  'receiver-of-item': 'items offered to them',
+  'maker-of-offer': 'own offers',
 };
 const excluding: Record<Relation, string> = {
   'reporter-of-case': 'not own reports',
@@ -39,10 +43,14 @@ const excluding: Record<Relation, string> = {
   'verifier-of-action': 'not own to verify',
   'author-of-finding': 'not own findings',
   'preparer-of-release': 'not own releases',
+  'holder-of-item': 'not held items',
+  'receiver-of-item': 'not items offered to them',
+  'maker-of-offer': 'not own offers',
 };
 
 /** An insurer reader belongs to another house, so no relation to a case can admit them. */
 function rightOf(role: Role, rule: TableRule): Right {
+  if (rule.only) return rule.roles.includes(role) ? { kind: 'part', words: admitting[rule.only] } : { kind: 'no' };
   if (rule.roles.includes(role)) return rule.never ? { kind: 'limit', words: rule.never.map((relation) => excluding[relation]).join(', ') } : { kind: 'any' };
   if (!rule.relations || role === 'insurer') return { kind: 'no' };
   return { kind: 'part', words: rule.relations.map((relation) => admitting[relation]).join(', ') };
@@ -82,6 +90,7 @@ export function roleTable(): readonly RoleTableGroup[] {
         ofCase('case:triage', 'First look, return, duplicate'),
         ofCase('case:edit-facts', 'Change facts and measurements'),
         ofCase('evidence:write', 'Collect evidence, record hand-overs'),
+        ofCase('evidence:take-over', 'Sign for an item as its receiver'),
         ofCase('attachment:add', 'Add documents'),
         ofCase('witness:write', 'Take accounts of witnesses'),
         ofCase('timeline:write', 'Enter events in the timeline'),

@@ -1,4 +1,4 @@
-import type { ReconstructionInput } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
 import { parseReconstructionInput } from './reconstruction-schema.ts';
 import { fieldWords, rankOfPart } from './run-difference.ts';
 

@@ -1,6 +1,6 @@
 import { markFromCoordinates, readMark } from '#app/physics/alignment.ts';
 import type { Mark } from '#app/physics/alignment.ts';
-import type { ReconstructionInput } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
 import type { Beam, FocusModel } from '#app/physics/optics/closed-form/beam.ts';
 import { focusModelOf } from '#app/physics/optics/closed-form/focus-model.ts';
 import { readyOptic } from '#app/physics/reconstruction/pane-bow.ts';

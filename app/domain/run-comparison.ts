@@ -1,4 +1,6 @@
-import type { ReconstructionInput, ReconstructionResult, TestName, TestResult } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
+import type { ReconstructionResult } from '#app/physics/model/result.ts';
+import type { TestName, TestResult } from '#app/physics/model/tests.ts';
 import type { CardView } from './case-card.ts';
 import { countInWords } from './case-view.ts';
 import { testLabels } from './hypothesis.ts';

@@ -1,4 +1,5 @@
-import type { ReconstructionInput } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
+import type { ReconstructionResult } from '#app/physics/model/result.ts';
 import { settleSite } from '#app/physics/site.ts';
 import { clearSkyAt } from '#app/physics/sky/clear-sky.ts';
 import { extraterrestrialWm2 } from '#app/physics/sky/extraterrestrial.ts';
@@ -17,6 +18,23 @@ export interface IrradianceSample {
 const pathStepMs = 600_000;
 const curvePoints = 120;
 const to2 = (value: number): number => Math.round(value * 100) / 100;
+
+const dayMs = 86_400_000;
+
+/** Local day of the best minute; of the longest sunlit stretch, or the beginning, where there is none. */
+export function bestDay(result: ReconstructionResult, zone: string): string {
+  const longest = result.runs.filter((run) => run.verdict === 'sunlit').reduce<(typeof result.runs)[number] | null>((best, run) => (best && best.minutes >= run.minutes ? best : run), null);
+  return localDay(Date.parse(result.best?.atUtc ?? longest?.fromUtc ?? result.window.startUtc), zone);
+}
+
+/** What an axis of irradiance holds: the window and a little more; of a window longer than a day, the daylight of one day. */
+export function irradianceSpan(window: { readonly startUtc: string; readonly endUtc: string }, day: string, zone: string, light: { readonly riseUtc: string; readonly setUtc: string } | null): { readonly fromUtc: string; readonly toUtc: string } {
+  const [startMs, endMs] = [Date.parse(window.startUtc), Date.parse(window.endUtc)];
+  const iso = (ms: number) => new Date(ms).toISOString();
+  if (endMs - startMs > dayMs) return light ? { fromUtc: iso(Date.parse(light.riseUtc)), toUtc: iso(Date.parse(light.setUtc)) } : { fromUtc: iso(startOfLocalDay(day, zone)), toUtc: iso(startOfLocalDay(nextDay(day), zone)) };
+  const margin = Math.max(1_800_000, (endMs - startMs) * 0.2);
+  return { fromUtc: iso(startMs - margin), toUtc: iso(endMs + margin) };
+}
 
 /** Path of the sun over one local day, every ten minutes while it is up. */
 export function pathOfDay(input: ReconstructionInput, day: string): SkyDirection[] {

@@ -1,4 +1,5 @@
-import type { ReconstructionInput, ReconstructionResult } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
+import type { ReconstructionResult } from '#app/physics/model/result.ts';
 import { azimuthOf, elevationOf } from '#app/physics/vector.ts';
 import type { CsvValue } from './csv.ts';
 import { testLabels } from './hypothesis.ts';

@@ -1,4 +1,4 @@
-import type { ReconstructionInput } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
 import type { OpticInput } from '#app/physics/optics/optic.ts';
 import { formatDayClock } from './local-time.ts';
 import { opticKindLabels, refractiveMaterialLabels } from './run-words.ts';

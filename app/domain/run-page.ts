@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import type { Grade } from '#app/physics/model.ts';
+import type { Grade } from '#app/physics/model/tests.ts';
 import type { CaseState } from './case-state.ts';
 import { caseStateLabels } from './case-state.ts';
 import { canOnCase, caseRules, whoCan } from './permissions.ts';

@@ -1,4 +1,5 @@
-import type { MinuteReason, ReconstructionInput } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
+import type { MinuteReason } from '#app/physics/model/minutes.ts';
 import type { Skyline } from '#app/physics/skyline.ts';
 import { readSkyline } from '#app/physics/skyline.ts';
 import { reasonAt } from './run-words.ts';

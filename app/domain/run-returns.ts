@@ -1,4 +1,5 @@
-import type { RecurrenceBand, ReconstructionInput, ReconstructionResult } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
+import type { RecurrenceBand, ReconstructionResult } from '#app/physics/model/result.ts';
 import { settleSite } from '#app/physics/site.ts';
 import { localDay } from '#app/physics/sun/zone-days.ts';
 import { formatClock, formatIsoDay } from './local-time.ts';
@@ -71,17 +72,30 @@ export function yearPlate(input: ReconstructionInput, result: ReconstructionResu
   const begin = now.getTime() - windowMs < 300 * 86_400_000 ? windowMs : now.getTime();
   const firstOn = `${localDay(begin, zone).slice(0, 7)}-01`;
   const { days, reach } = yearOfSun({ observer: settleSite(input).observer, zone, firstOn, days: 365, skyline: input.skyline, opening: input.opening });
-  const lit = result.recurrence.flatMap((band) =>
-    bandDays(band, zone).map((day) => ({ on: day.on, fromMin: minuteOfClock(day.from), toMin: Math.max(minuteOfClock(day.to), minuteOfClock(day.from) + 1) })),
-  );
-  const reachWords = input.skyline || input.opening ? ' Lighter: the sun reaches the optic, over the skyline and through the opening as recorded.' : ' No skyline and no opening were recorded, so all daylight counts as reaching the optic.';
+  const reachKnown = input.skyline !== undefined || input.opening !== undefined;
   return {
     days: days.map((day) => ({ on: day.on, riseMin: tenth(day.riseMin), setMin: tenth(day.setMin) })),
-    reach: input.skyline || input.opening ? reach.map((span) => ({ on: span.on, fromMin: Math.round(span.fromMin), toMin: Math.round(span.toMin) })) : [],
-    lit,
+    reach: reachKnown ? reach.map((span) => ({ on: span.on, fromMin: Math.round(span.fromMin), toMin: Math.round(span.toMin) })) : [],
+    lit: litSpans(result.recurrence, zone),
     todayOn: localDay(now.getTime(), zone),
-    note: `Clock of ${zone.replaceAll('_', ' ')}. Dark: daylight at the place.${reachWords} Cut through: the sun stands where it puts the focus on the mark. Summer time steps the clock, not the sun.`,
+    note: plateNote(zone, reachKnown),
   };
 }
 
 const tenth = (value: number | null): number | null => (value === null ? null : Math.round(value * 10) / 10);
+
+/** Days on which the sun lands on the mark, as they stand in the picture of a year. */
+export function litSpans(recurrence: readonly LitDays[], zone: string): YearSpan[] {
+  return recurrence.flatMap((band) => band.days).map((day) => {
+    const fromMin = minuteOfClock(formatClock(new Date(day.fromUtc), zone));
+    return { on: day.on, fromMin, toMin: Math.max(minuteOfClock(formatClock(new Date(day.toUtc), zone)), fromMin + 1) };
+  });
+}
+interface LitDays {
+  readonly days: readonly { readonly on: string; readonly fromUtc: string; readonly toUtc: string }[];
+}
+
+export function plateNote(zone: string, reachKnown: boolean): string {
+  const reachWords = reachKnown ? ' Lighter: the sun reaches the optic, over the skyline and through the opening as recorded.' : ' No skyline and no opening were recorded, so all daylight counts as reaching the optic.';
+  return `Clock of ${zone.replaceAll('_', ' ')}. Dark: daylight at the place.${reachWords} Cut through: the sun stands where it puts the focus on the mark. Summer time steps the clock, not the sun.`;
+}

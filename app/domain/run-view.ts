@@ -1,14 +1,20 @@
-import type { FocusResult, MinuteResult, ReconstructionInput, ReconstructionResult } from '#app/physics/model.ts';
+import type { FocusResult } from '#app/physics/model/focus.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
+import type { MinuteResult } from '#app/physics/model/minutes.ts';
+import type { ReconstructionResult } from '#app/physics/model/result.ts';
 import { settleSite } from '#app/physics/site.ts';
 import { solarPosition } from '#app/physics/sun/solar-position.ts';
-import { localDay, nextDay, startOfLocalDay } from '#app/physics/sun/zone-days.ts';
+import { localDay } from '#app/physics/sun/zone-days.ts';
 import { wholeCard } from './case-card.ts';
 import type { CardView } from './case-card.ts';
+import { ringsOf } from './flux-discs.ts';
+import type { FluxRing } from './flux-discs.ts';
 import { formatIsoDay } from './local-time.ts';
 import { beamView } from './run-beam.ts';
 import type { BeamView } from './run-beam.ts';
-import { clearSkyCurve, pathOfDay, referencePaths } from './run-day.ts';
+import { bestDay, clearSkyCurve, irradianceSpan, pathOfDay, referencePaths } from './run-day.ts';
 import type { IrradianceSample, SkyDirection } from './run-day.ts';
+import { markDistanceM } from './run-drawing.ts';
 import { inputGroups } from './run-inputs.ts';
 import type { InputGroup } from './run-inputs.ts';
 import { reasonReader } from './run-reasons.ts';
@@ -47,7 +53,7 @@ export interface RunView {
   };
   /** Plan, section and trail; null without an optic. */
   readonly beam: BeamView | null;
-  readonly rings: readonly { readonly fluxKwm2: number; readonly radiusMm: number }[];
+  readonly rings: readonly FluxRing[];
   readonly inputs: readonly InputGroup[];
   readonly assumptions: readonly { readonly label: string; readonly value: string; readonly source: string; readonly verified: boolean }[];
   readonly returns: readonly ReturnBandView[];
@@ -59,12 +65,6 @@ export interface RunView {
 export type TracedView = Omit<NonNullable<FocusResult['traced']>, 'map'>;
 
 const dayMs = 86_400_000;
-const ringsKwm2 = [1, 3, 10, 30, 100, 300] as const;
-
-function bestDay(input: ReconstructionInput, result: ReconstructionResult): string {
-  const longest = result.runs.filter((run) => run.verdict === 'sunlit').reduce<(typeof result.runs)[number] | null>((best, run) => (best && best.minutes >= run.minutes ? best : run), null);
-  return localDay(Date.parse(result.best?.atUtc ?? longest?.fromUtc ?? result.window.startUtc), input.place.zone);
-}
 
 /** Minutes of night are kept as runs only; for moving along the window they are put back, with their sun. */
 function everyMinute(input: ReconstructionInput, result: ReconstructionResult, why: (minute: ReasonedMinute) => string): RunMinuteView[] {
@@ -104,12 +104,8 @@ function requiredSun(input: ReconstructionInput, result: ReconstructionResult): 
 
 function irradianceOf(input: ReconstructionInput, result: ReconstructionResult, card: CardView, day: string): RunView['irradiance'] {
   const { zone } = input.place;
-  const short = Date.parse(result.window.endUtc) - Date.parse(result.window.startUtc) <= dayMs;
-  const margin = short ? Math.max(1_800_000, (Date.parse(result.window.endUtc) - Date.parse(result.window.startUtc)) * 0.2) : 0;
-  const light = card.daylight.find((one) => localDay(Date.parse(one.riseUtc) + 1, zone) === day);
-  const fromMs = short ? Date.parse(result.window.startUtc) - margin : light ? Date.parse(light.riseUtc) : startOfLocalDay(day, zone);
-  const toMs = short ? Date.parse(result.window.endUtc) + margin : light ? Date.parse(light.setUtc) : startOfLocalDay(nextDay(day), zone);
-  const [fromUtc, toUtc] = [new Date(fromMs).toISOString(), new Date(toMs).toISOString()];
+  const light = card.daylight.find((one) => localDay(Date.parse(one.riseUtc) + 1, zone) === day) ?? null;
+  const { fromUtc, toUtc } = irradianceSpan(result.window, day, zone, light);
   const within = <Span extends { readonly fromUtc: string; readonly toUtc: string }>(span: Span): Span[] =>
     span.toUtc > fromUtc && span.fromUtc < toUtc ? [{ ...span, fromUtc: span.fromUtc > fromUtc ? span.fromUtc : fromUtc, toUtc: span.toUtc < toUtc ? span.toUtc : toUtc }] : [];
   const series = input.sky.dniSeries;
@@ -124,21 +120,6 @@ function irradianceOf(input: ReconstructionInput, result: ReconstructionResult, 
 }
 
 const instant = (text: string): string => new Date(text).toISOString();
-
-/** From the traced map: radius of a circle as large as the area over each flux; for a line, half its mean width. */
-function ringsOf(result: ReconstructionResult): RunView['rings'] {
-  const map = result.focus?.traced?.map;
-  const dniWm2 = result.best?.dni.atOpticLikelyWm2;
-  if (!map || !dniWm2) return [];
-  const cellMm2 = (map.sizeMm / map.cells) ** 2;
-  return ringsKwm2.flatMap((fluxKwm2) => {
-    const cells = map.suns.filter((suns) => (suns * dniWm2) / 1000 >= fluxKwm2).length;
-    const areaMm2 = cells * cellMm2;
-    const radiusMm = result.focus?.focusKind === 'line' ? areaMm2 / (2 * map.sizeMm) : Math.sqrt(areaMm2 / Math.PI);
-    // A contour of one or two cells, or one that runs out of the map, has no radius to speak of.
-    return cells < 3 || radiusMm >= map.sizeMm / 2 ? [] : [{ fluxKwm2, radiusMm: Number(radiusMm.toPrecision(3)) }];
-  });
-}
 
 /** The card of a run. */
 export function runCardView(input: ReconstructionInput, result: ReconstructionResult, foundAt: Date | null): CardView {
@@ -161,7 +142,7 @@ export function runCardView(input: ReconstructionInput, result: ReconstructionRe
 
 /** Everything that the page of a finished run shows. @param foundAt True time at which the mark was found. */
 export function runView(input: ReconstructionInput, result: ReconstructionResult, context: { readonly foundAt: Date | null; readonly now: Date }): RunView {
-  const day = bestDay(input, result);
+  const day = bestDay(result, input.place.zone);
   const card = runCardView(input, result, context.foundAt);
   const { minutes: _minutes, recurrence: _recurrence, runs: _runs, focus, ...rest } = result;
   const traced = focus?.traced;
@@ -185,11 +166,6 @@ export function runView(input: ReconstructionInput, result: ReconstructionResult
     markDistanceM: markDistanceM(input),
     result: { ...rest, focus: focus ? { ...focus, traced: traced ? withoutMap(traced) : null } : null },
   };
-}
-
-function markDistanceM({ mark, markCoordinates }: ReconstructionInput): number | null {
-  if (mark) return mark.distanceM;
-  return markCoordinates ? Math.hypot(markCoordinates.eastM, markCoordinates.northM, markCoordinates.upM) : null;
 }
 
 /** A building surveyed at several corners is named at the first of them. */

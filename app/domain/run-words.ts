@@ -1,4 +1,7 @@
-import type { Check, Grade, MinuteReason, MinuteVerdict, SkylineInput, TargetOutcome } from '#app/physics/model.ts';
+import type { TargetOutcome } from '#app/physics/model/heating.ts';
+import type { SkylineInput } from '#app/physics/model/input.ts';
+import type { MinuteReason, MinuteVerdict } from '#app/physics/model/minutes.ts';
+import type { Check, Grade } from '#app/physics/model/tests.ts';
 import type { OpticKind, RefractiveMaterialName } from '#app/physics/optics/optic.ts';
 
 /** Words of the screen for what the engine answers with ids. The engine's own sentences are shown as they are. */

@@ -1,4 +1,4 @@
-import type { ReconstructionInput } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
 
 /** Three invented cases that the first page shows. What people found is told here; what the sun did is computed. */
 export interface SampleCase {

@@ -1,4 +1,4 @@
-import type { OccluderInput } from '#app/physics/model.ts';
+import type { OccluderInput } from '#app/physics/model/input.ts';
 import { add, fromAzimuthElevation, scale } from '#app/physics/vector.ts';
 import type { Vector } from '#app/physics/vector.ts';
 import type { Scene, SceneOpening, SceneWall } from './scene.ts';

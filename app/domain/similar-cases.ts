@@ -1,3 +1,4 @@
+import { lineOnGround } from './ground.ts';
 import { formatIsoDay } from './local-time.ts';
 import { sunOverhead } from './sun-now.ts';
 
@@ -16,15 +17,9 @@ export interface Likeness {
 }
 
 const nearM = 250;
-const alikeBearingDeg = 15;
+/** Bearings to the mark are alike within so many degrees. Our own choosing. */
+export const alikeBearingDeg = 15;
 const alikeSunDeg = 3;
-const earthM = 111_320;
-
-/** Offset of another place on the ground, for short distances. [m] */
-export function offsetM(from: { readonly latitudeDeg: number; readonly longitudeDeg: number }, to: { readonly latitudeDeg: number; readonly longitudeDeg: number }): { readonly eastM: number; readonly northM: number } {
-  const eastDeg = ((((to.longitudeDeg - from.longitudeDeg + 180) % 360) + 360) % 360) - 180;
-  return { eastM: eastDeg * earthM * Math.cos((from.latitudeDeg * Math.PI) / 180), northM: (to.latitudeDeg - from.latitudeDeg) * earthM };
-}
 
 /** Declination of the sun at noon UTC of a day. [°] */
 const declinationOfDay = (day: string): number => sunOverhead(new Date(`${day}T12:00:00Z`)).latitudeDeg;
@@ -34,15 +29,10 @@ const apartDeg = (a: number, b: number): number => Math.abs(((a - b + 540) % 360
 /** Why another case is like this one, strongest first; empty when nothing is shared. */
 export function likeness(here: Likeness, other: Likeness): string[] {
   const reasons: string[] = [];
+  const distanceM = here.position && other.position ? lineOnGround(here.position, other.position).lengthM : null;
   if (here.siteId === other.siteId) {
-    const off = here.position && other.position ? offsetM(here.position, other.position) : null;
-    const distanceM = off ? Math.hypot(off.eastM, off.northM) : null;
     reasons.push(distanceM === null ? 'same site' : distanceM < 1.5 ? 'same spot of the same site' : `same site, ${Math.round(distanceM)} m off`);
-  } else if (here.position && other.position) {
-    const off = offsetM(here.position, other.position);
-    const distanceM = Math.hypot(off.eastM, off.northM);
-    if (distanceM <= nearM) reasons.push(`${Math.round(distanceM)} m off, another site`);
-  }
+  } else if (distanceM !== null && distanceM <= nearM) reasons.push(`${Math.round(distanceM)} m off, another site`);
   if (here.opticKind !== 'dont-know' && here.opticKind === other.opticKind) reasons.push('same kind of optic');
   if (here.markBearingDeg !== null && other.markBearingDeg !== null && apartDeg(here.markBearingDeg, other.markBearingDeg) <= alikeBearingDeg) {
     reasons.push(`bearing to the mark alike, ${Math.round(here.markBearingDeg)}° and ${Math.round(other.markBearingDeg)}°`);

@@ -32,7 +32,7 @@ function readRow(row: Partial<Record<SkylineColumn, string>>): SkylinePoint | { 
   const azimuthDeg = readNumber(row.azimuthDeg ?? '');
   if (!(azimuthDeg >= 0 && azimuthDeg <= 360)) return { column: 'azimuthDeg', sentence: 'A bearing from true north, 0 to 360°.' };
   const elevationDeg = readNumber(row.elevationDeg ?? '');
-  if (!(elevationDeg >= -5 && elevationDeg <= 90)) return { column: 'elevationDeg', sentence: 'An elevation from -5 to 90°.' };
+  if (!(elevationDeg >= -5 && elevationDeg <= 90)) return { column: 'elevationDeg', sentence: 'An elevation from −5 to 90°.' };
   const typed = (row.plusMinusDeg ?? '').trim();
   const plusMinusDeg = typed === '' ? 1 : readNumber(typed);
   if (!(plusMinusDeg >= 0.1 && plusMinusDeg <= 20)) return { column: 'plusMinusDeg', sentence: 'A ± from 0.1 to 20°.' };

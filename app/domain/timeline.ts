@@ -19,7 +19,7 @@ const clockError = z
   .string()
   .default('')
   .transform((text) => (text.trim() === '' ? 0 : Number(text.trim().replace(',', '.').replace('−', '-'))))
-  .pipe(z.number('Write the clock error in minutes, such as 6 or -1.5.').min(-527_040, 'A clock error is at most a year.').max(527_040, 'A clock error is at most a year.'))
+  .pipe(z.number('Write the clock error in minutes, such as 6 or −1.5.').min(-527_040, 'A clock error is at most a year.').max(527_040, 'A clock error is at most a year.'))
   .transform((minutes) => Math.round(minutes * 60));
 
 /** An event as typed from a log or a recording; its clock time is read beside it. */
@@ -78,6 +78,9 @@ export function correctionWords(clockErrorS: number): string {
   return `${clockErrorS > 0 ? 'less' : 'plus'} ${span}`;
 }
 
+/** Stands for the reading of an event whose time was not read from a clock. */
+export const noReading = 'no clock read';
+
 /** Happenings in the order of true time, in words. Equal times keep the order in which they came. */
 export function timelineRows(happenings: readonly Happening[], zone: string): TimelineRow[] {
   const ordered = happenings.map((happening, index) => ({ happening, index })).sort((a, b) => a.happening.at.getTime() - b.happening.at.getTime() || a.index - b.index);
@@ -85,7 +88,7 @@ export function timelineRows(happenings: readonly Happening[], zone: string): Ti
     key: happening.key,
     day: formatDay(happening.at, zone),
     trueTime: happening.dayOnly ? 'hour not known' : clockTo(happening.at, zone),
-    reading: happening.reading ? clockTo(happening.reading, zone) : 'no clock read',
+    reading: happening.reading ? clockTo(happening.reading, zone) : noReading,
     correction: happening.reading ? correctionWords(happening.clockErrorS) : '',
     source: happening.source,
     what: happening.what,

@@ -1,4 +1,4 @@
-import type { SkyInput } from '#app/physics/model.ts';
+import type { SkyInput } from '#app/physics/model/input.ts';
 import { erbsSplit } from '#app/physics/sky/erbs.ts';
 import { extraterrestrialWm2 } from '#app/physics/sky/extraterrestrial.ts';
 import { solarPosition } from '#app/physics/sun/solar-position.ts';

@@ -1,5 +1,5 @@
 import { clearSkyAt } from '#app/physics/sky/clear-sky.ts';
-import type { ClimateClass } from '#app/physics/model.ts';
+import type { ClimateClass } from '#app/physics/model/input.ts';
 import { extraterrestrialWm2 } from '#app/physics/sky/extraterrestrial.ts';
 import { settleSite } from '#app/physics/site.ts';
 import { solarPosition } from '#app/physics/sun/solar-position.ts';
@@ -33,6 +33,8 @@ export interface WeatherRecordView {
   readonly setAside: string | null;
   /** A run goes by this one. */
   readonly chosen: boolean;
+  /** Heads of the values: start, end, and what the record holds. */
+  readonly columns: readonly string[];
   readonly rows: readonly (readonly string[])[];
 }
 
@@ -42,7 +44,8 @@ interface Sample {
 }
 export interface WeatherView {
   readonly records: readonly WeatherRecordView[];
-  /** Which record a run goes by, as a sentence. */
+  /** Which record a run goes by: the finding of the page, and what follows from it. */
+  readonly heading: string;
   readonly choiceWords: string;
   readonly choiceCaution: string;
   readonly trace: {
@@ -72,17 +75,18 @@ export function weatherView({ records, window, place, sceneDni }: ViewSource): W
   const choice = span ? chooseWeather(standing, span, place) : null;
   return {
     records: records.map((record) => recordView(record, place.zone, window, choice?.number === record.number && record.setAsideAt === null)),
-    choiceWords: choice ? `A run goes by record ${choice.number}: ${choice.how}.` : noChoiceWords(standing, span !== null, sceneDni),
+    ...(choice ? { heading: `A run goes by record ${choice.number}`, choiceWords: `${choice.how.charAt(0).toUpperCase()}${choice.how.slice(1)}.` } : noChoice(standing, span !== null, sceneDni)),
     choiceCaution: choice?.caution ?? '',
     trace: window ? trace(window, place, choice?.series ?? (sceneDni ? { source: sceneDni.source, values: sceneDni.values } : null)) : null,
   };
 }
 
-function noChoiceWords(standing: readonly WeatherSeries[], hasWindow: boolean, sceneDni: SceneAir['dni'] | null): string {
-  if (!hasWindow) return 'No onset window is known yet, so no hour of weather can be compared with it.';
-  if (sceneDni) return `A run goes by the ${sceneDni.values.length} values kept with the measurements: ${sceneDni.source}.`;
-  if (standing.length === 0) return 'No weather is on record. A run uses the clear sky of the air class, and says so; it can neither show nor refute that the sun shone.';
-  return 'No standing record has direct or global irradiance inside the onset window, so a run uses the clear sky of the air class.';
+function noChoice(standing: readonly WeatherSeries[], hasWindow: boolean, sceneDni: SceneAir['dni'] | null): Pick<WeatherView, 'heading' | 'choiceWords'> {
+  const clearSky = 'A run uses the clear sky of the air class, and says so; it can neither show nor refute that the sun shone.';
+  if (!hasWindow) return { heading: 'No onset window is known yet', choiceWords: 'So no hour of weather can be compared with it.' };
+  if (sceneDni) return { heading: 'A run goes by values kept with the measurements', choiceWords: `There are ${sceneDni.values.length} of them: ${sceneDni.source}.` };
+  if (standing.length === 0) return { heading: 'No weather is on record', choiceWords: clearSky };
+  return { heading: 'No record reaches into the onset window', choiceWords: `None that stands has direct or global irradiance inside it. ${clearSky}` };
 }
 
 function recordView(record: WeatherRecordFacts, zone: string, window: ViewSource['window'], chosen: boolean): WeatherRecordView {
@@ -105,14 +109,13 @@ function recordView(record: WeatherRecordFacts, zone: string, window: ViewSource
     ],
     setAside: record.setAsideAt ? `Set aside ${formatDayClock(record.setAsideAt, zone)}: ${record.setAsideReason ?? ''}` : null,
     chosen,
-    rows: (inWindow.length > 0 ? inWindow : record.values).slice(0, rowsShown).map((value) => rowOf(value, zone)),
+    columns: ['From', 'To', ...used.map(({ label, unit }) => `${label}, ${unit}`)],
+    rows: (inWindow.length > 0 ? inWindow : record.values).slice(0, rowsShown).map((value) => rowOf(value, used, zone)),
   };
 }
 
-export const recordColumns = ['From', 'To', ...weatherQuantities.map(({ label, unit }) => `${label}, ${unit}`)];
-
-function rowOf(value: WeatherValue, zone: string): string[] {
-  return [formatDayClock(new Date(value.startUtc), zone), formatDayClock(new Date(value.endUtc), zone), ...weatherQuantities.map(({ key }) => { const one = value[key]; return one === undefined ? '' : plain(one); })];
+function rowOf(value: WeatherValue, used: typeof weatherQuantities, zone: string): string[] {
+  return [formatDayClock(new Date(value.startUtc), zone), formatDayClock(new Date(value.endUtc), zone), ...used.map(({ key }) => { const one = value[key]; return one === undefined ? '' : plain(one); })];
 }
 
 /** Irradiance on the axis of the window: clear-sky bound, likely clear sky, and the chosen values as steps. */

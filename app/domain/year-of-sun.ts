@@ -1,4 +1,4 @@
-import type { OpeningInput, SkylineInput } from '#app/physics/model.ts';
+import type { OpeningInput, SkylineInput } from '#app/physics/model/input.ts';
 import { readSkyline } from '#app/physics/skyline.ts';
 import { refractionDeg } from '#app/physics/sun/refraction.ts';
 import type { Observer } from '#app/physics/sun/solar-position.ts';

@@ -3,7 +3,8 @@ import { fileURLToPath } from 'node:url';
 import { Worker } from 'node:worker_threads';
 import { DomainError } from '#app/domain/errors.ts';
 import type { RecurrenceAnswer, RecurrenceRequest } from '#app/domain/recurrence-request.ts';
-import type { ReconstructionInput, ReconstructionResult } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
+import type { ReconstructionResult } from '#app/physics/model/result.ts';
 
 /** What a thread is asked to do. */
 export type EngineTask =

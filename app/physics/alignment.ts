@@ -1,4 +1,4 @@
-import type { MarkCoordinatesInput, MarkInput } from './model.ts';
+import type { MarkCoordinatesInput, MarkInput } from './model/input.ts';
 import type { Beam, FocusModel } from '#app/physics/optics/closed-form/beam.ts';
 import { airlessElevationDeg } from '#app/physics/sun/refraction.ts';
 import { declinationOf, type Observer } from '#app/physics/sun/solar-position.ts';

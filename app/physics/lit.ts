@@ -1,4 +1,5 @@
-import type { MinuteReason, MinuteVerdict, OpeningInput } from './model.ts';
+import type { OpeningInput } from './model/input.ts';
+import type { MinuteReason, MinuteVerdict } from './model/minutes.ts';
 import { missOf, type Mark, type Miss } from './alignment.ts';
 import type { Beam, FocusModel } from '#app/physics/optics/closed-form/beam.ts';
 import type { Reach } from './reach.ts';

@@ -1,4 +1,4 @@
-import type { OccluderInput } from './model.ts';
+import type { OccluderInput } from './model/input.ts';
 import type { Occluder } from '#app/physics/optics/trace/trace-model.ts';
 import { inRange } from './units.ts';
 import { add, cross, dot, lengthOf, scale, subtract, type Vector } from './vector.ts';

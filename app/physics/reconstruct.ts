@@ -1,4 +1,7 @@
-import { engineVersion, type HeatingResult, type ReconstructionInput, type ReconstructionResult } from './model.ts';
+import { engineVersion } from './model/engine-version.ts';
+import type { HeatingResult } from './model/heating.ts';
+import type { ReconstructionInput } from './model/input.ts';
+import type { ReconstructionResult } from './model/result.ts';
 import { heatingOf } from '#app/physics/heating/outcomes.ts';
 import { bestMoment, lightAt } from '#app/physics/reconstruction/best-moment.ts';
 import { daylightOf, recurrenceOf } from '#app/physics/reconstruction/calendar.ts';

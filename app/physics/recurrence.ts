@@ -1,4 +1,5 @@
-import type { OpeningInput, RecurrenceBand } from './model.ts';
+import type { OpeningInput } from './model/input.ts';
+import type { RecurrenceBand } from './model/result.ts';
 import type { RequiredSun } from './alignment.ts';
 import type { Skyline } from './skyline.ts';
 import { airlessElevationDeg, refractionDeg } from '#app/physics/sun/refraction.ts';

@@ -1,5 +1,6 @@
 import { solarConstantWm2 } from './constants.ts';
-import type { Assumption, ReconstructionInput, SourceRef } from './model.ts';
+import type { ReconstructionInput } from './model/input.ts';
+import type { Assumption, SourceRef } from './model/stated.ts';
 import { standardPressureAtPa } from '#app/physics/sky/air-mass.ts';
 import type { Air } from '#app/physics/sky/clear-sky.ts';
 import { angstromExponent, climateAir, defaultOzoneCm } from '#app/physics/sky/climate-classes.data.ts';

@@ -1,4 +1,4 @@
-import type { SkylineInput } from './model.ts';
+import type { SkylineInput } from './model/input.ts';
 import { wrap360 } from './units.ts';
 
 /** Elevation of the skyline by bearing, closed round the circle. */

@@ -1,4 +1,4 @@
-import type { Band } from './model.ts';
+import type { Band } from './model/stated.ts';
 import { normalQuantile, normalShare } from './normal-quantile.ts';
 import { samplingSigmas } from './sampling-sigmas.data.ts';
 import { ScrambledSobol } from './sobol.ts';

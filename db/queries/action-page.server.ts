@@ -20,7 +20,7 @@ export interface ActionCard {
   readonly ownerId: string;
   readonly verifierId: string;
   readonly story: readonly { readonly term: string; readonly value: string; readonly note: string }[];
-  readonly checkWords: string | null;
+  readonly checkWords: { readonly day: string; readonly note: string } | null;
   /** Day on which the effect would be looked at if it were verified today. */
   readonly proposedCheckOn: string | null;
   /** First return that is still to come before the effect can be seen, in words. */
@@ -80,7 +80,7 @@ function card(actor: Actor, record: ActionRecord, returns: readonly ReturnDay[],
     ownerId: record.ownerId,
     verifierId: record.verifierId,
     story: actionStory(record),
-    checkWords: record.effectCheckOn ? formatIsoDay(record.effectCheckOn) : null,
+    checkWords: record.effectCheckOn ? { day: formatIsoDay(record.effectCheckOn), note: record.state === 'verified' && record.effectCheckOn < today ? 'past, and nothing recorded yet' : '' } : null,
     proposedCheckOn: effectivenessCheckOn(today, days),
     tooEarlyUntil: firstOn !== null && today < firstOn ? formatIsoDay(firstOn) : null,
     files: proofs.filter((proof) => proof.actionId === record.id).map((proof) => ({ id: proof.id, name: proof.fileName, note: `${sizeWords(proof.bytes)}, ${formatDayClock(proof.createdAt, zone)}, SHA-256 ${proof.sha256.slice(0, 12)}` })),

@@ -1,7 +1,8 @@
 import { and, eq, lt, ne, sql } from 'drizzle-orm';
 import type { DbOrTx, Transaction } from '#db/client.server.ts';
 import { apiComputations } from '#db/schema/all.ts';
-import type { ReconstructionInput, ReconstructionResult } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
+import type { ReconstructionResult } from '#app/physics/model/result.ts';
 
 export interface NewComputation {
   readonly userId: string;

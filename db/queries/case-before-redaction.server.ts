@@ -3,11 +3,14 @@ import type { DbOrTx } from '#db/client.server.ts';
 import { caseNotes, correctiveActions, findings, hypotheses, injuries, involvements, logEntries, organisations, photos, reconstructions, scenes, sites, sunReturns, users } from '#db/schema/all.ts';
 import type { ActionBeforeRedaction, CaseBeforeRedaction, FindingBeforeRedaction, ItemBeforeRedaction, PhotoBeforeRedaction } from '#app/domain/case-before-redaction.ts';
 import type { CaseState } from '#app/domain/case-state.ts';
+import { reliedWeather } from '#app/domain/relied-weather.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import type { CaseSubject } from '#app/domain/permissions.ts';
 import type { CaseRow } from './case-subject.server.ts';
 import { listEvidenceOfCase } from './evidence.server.ts';
 import { findCase } from './case-subject.server.ts';
+import { standingMoves } from './moves-in-log.server.ts';
+import { weatherOfCase } from './weather.server.ts';
 
 const iso = (instant: Date | null): string | null => instant?.toISOString() ?? null;
 
@@ -40,6 +43,7 @@ export async function readCaseBeforeRedaction(db: DbOrTx, params: { readonly act
       photos: await photosOf(db, row.id),
       scene: await sceneOf(db, row.id, run?.sceneVersion ?? null),
       reconstruction: run?.reconstruction ?? null,
+      weather: run ? reliedWeather(run.reconstruction.input.sky.dniSeries, await weatherOfCase(db, row.id)) : null,
       hypotheses: await hypothesesOf(db, row.id),
       finding: signed,
       actions: await actionsOf(db, row.id),
@@ -96,7 +100,7 @@ async function placeOf(db: DbOrTx, row: CaseRow) {
 
 async function attachedRun(db: DbOrTx, caseId: string) {
   const [run] = await db
-    .select({ number: reconstructions.number, engineVersion: reconstructions.engineVersion, inputHash: reconstructions.inputHash, resultHash: reconstructions.resultHash, result: reconstructions.result, sceneVersion: reconstructions.sceneVersion })
+    .select({ number: reconstructions.number, engineVersion: reconstructions.engineVersion, inputHash: reconstructions.inputHash, resultHash: reconstructions.resultHash, input: reconstructions.input, result: reconstructions.result, sceneVersion: reconstructions.sceneVersion })
     .from(reconstructions)
     .where(and(eq(reconstructions.caseId, caseId), eq(reconstructions.state, 'done'), isNotNull(reconstructions.attachedAt), isNull(reconstructions.supersededAt)))
     .orderBy(desc(reconstructions.number))
@@ -220,7 +224,7 @@ async function returnDaysOf(db: DbOrTx, caseId: string) {
 /** States reached, from the log, where every move notes the state it led to. */
 async function movesOf(db: DbOrTx, caseId: string) {
   const state = sql<CaseState>`${logEntries.after} ->> 'state'`;
-  const rows = await db.select({ at: logEntries.at, state }).from(logEntries).where(and(eq(logEntries.caseId, caseId), eq(logEntries.subject, 'cases'), sql`${logEntries.after} ->> 'state' is not null`)).orderBy(asc(logEntries.at), asc(logEntries.sequence));
+  const rows = await db.select({ at: logEntries.at, state }).from(logEntries).where(standingMoves(caseId)).orderBy(asc(logEntries.at), asc(logEntries.sequence));
   return rows.map((row) => ({ ...row, at: row.at.toISOString() }));
 }
 

@@ -4,7 +4,9 @@ import { cases, reconstructions, sunReturns } from '#db/schema/all.ts';
 import type { CardResult } from '#app/domain/case-card.ts';
 import type { WaitingAction } from '#app/domain/case-waiting.ts';
 import type { Certainty } from '#app/domain/finding.ts';
+import type { Actor } from '#app/domain/roles.ts';
 import type { SceneOpticKind } from '#app/domain/scene.ts';
+import { conclusionHidden } from './hidden-conclusion.server.ts';
 
 /**
  * Facts about a case as columns of a query on `cases`, each a subquery on it. The query must join another table, or the
@@ -17,9 +19,12 @@ export const markBearingKnown = sql<boolean>`coalesce((select s.scene->'mark' ? 
 /** From optic to mark as last measured, in the frame that the scene states. */
 export const markBearingDeg = sql<number | null>`(select (s.scene->'mark'->'bearingDeg'->>'value')::float8 from scenes s where s.case_id = ${cases.id} order by s.version desc limit 1)`;
 
-export const signedCertainty = sql<Certainty | null>`(select f.certainty from findings f where f.case_id = ${cases.id} and f.state = 'signed' order by f.version desc limit 1)`;
+/** Of the newest signed version; null while there is none, and while it is hidden from this reader. */
+export const signedCertainty = (actor: Actor) =>
+  sql<Certainty | null>`(case when ${conclusionHidden(actor)} then null else (select f.certainty from findings f where f.case_id = ${cases.id} and f.state = 'signed' order by f.version desc limit 1) end)`;
 
-export const sunlightRuledOut = sql<boolean>`(${signedCertainty} is not null and exists (select 1 from hypotheses h where h.case_id = ${cases.id} and h.kind = 'focused-sunlight' and h.result = 'ruled-out'))`;
+export const sunlightRuledOut = (actor: Actor) =>
+  sql<boolean>`(${signedCertainty(actor)} is not null and exists (select 1 from hypotheses h where h.case_id = ${cases.id} and h.kind = 'focused-sunlight' and h.result = 'ruled-out'))`;
 
 export const draftExists = sql<boolean>`exists (select 1 from findings f where f.case_id = ${cases.id} and f.state = 'draft')`;
 

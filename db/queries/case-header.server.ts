@@ -13,6 +13,7 @@ import type { Actor } from '#app/domain/roles.ts';
 import { duplicateOfNumber, headerRun, nextReturnAt, returnsListed, signedCertainty, sunlightRuledOut } from './case-expressions.server.ts';
 import { caseSubject } from './case-subject.server.ts';
 import { stateSince } from './cases.server.ts';
+import { undoOffer } from './moves-in-log.server.ts';
 import { visibleTo } from './scope.server.ts';
 
 const counted = (table: string) => sql<number>`(select count(*)::int from ${sql.identifier(table)} t where t.case_id = ${cases.id})`;
@@ -27,8 +28,8 @@ async function readHeader(db: DbOrTx, params: { actor: Actor; caseNumber: number
       siteLongitudeDeg: sites.longitudeDeg,
       siteElevationM: sites.elevationM,
       duplicateOfNumber,
-      signedCertainty,
-      sunlightRuledOut,
+      signedCertainty: signedCertainty(params.actor),
+      sunlightRuledOut: sunlightRuledOut(params.actor),
       returnsListed,
       nextReturnAt: nextReturnAt(params.now),
       run: headerRun,
@@ -76,6 +77,7 @@ export async function getCaseHeader(db: DbOrTx, params: { actor: Actor; caseNumb
     cardNote: cardNote(run, mayReadRuns),
     reconstructionNumber: mayReadRuns ? (run?.number ?? null) : null,
     tabs: tabsFor(facts, params.actor, subject),
+    undo: await undoOffer(db, params.actor, row),
   };
 }
 

@@ -2,6 +2,7 @@ import { and, desc, eq, sql } from 'drizzle-orm';
 import type { DbOrTx, Transaction } from '#db/client.server.ts';
 import { cases, logEntries } from '#db/schema/all.ts';
 import type { CaseRow } from './case-subject.server.ts';
+import { standingMoves } from './moves-in-log.server.ts';
 
 export type CasePatch = Partial<Omit<typeof cases.$inferInsert, 'id' | 'number' | 'clientId' | 'receipt' | 'organisationId' | 'siteId' | 'version'>>;
 
@@ -16,21 +17,21 @@ export async function updateCase(tx: Transaction, caseId: string, patch: CasePat
   return row;
 }
 
-/** When the case came into its present state: the last log line that says so, else the time of the report. */
+/** When the case came into its present state: the last move in the log that led there and stands, else the time of the report. */
 export async function stateSince(db: DbOrTx, row: Pick<CaseRow, 'id' | 'state' | 'reportedAt'>): Promise<Date> {
   const [line] = await db
     .select({ at: logEntries.at })
     .from(logEntries)
-    .where(and(eq(logEntries.caseId, row.id), sql`${logEntries.after}->>'state' = ${row.state}`))
+    .where(and(standingMoves(row.id), sql`${logEntries.after} ->> 'state' = ${row.state}`))
     .orderBy(desc(logEntries.sequence))
     .limit(1);
   return line?.at ?? row.reportedAt;
 }
 
 /** Last line of the case's log, for saying who was faster. */
-export async function lastChange(db: DbOrTx, caseId: string): Promise<{ at: Date; actorName: string; summary: string } | null> {
+export async function lastChange(db: DbOrTx, caseId: string): Promise<{ sequence: number; at: Date; actorName: string; summary: string } | null> {
   const [line] = await db
-    .select({ at: logEntries.at, actorName: logEntries.actorName, summary: logEntries.summary })
+    .select({ sequence: logEntries.sequence, at: logEntries.at, actorName: logEntries.actorName, summary: logEntries.summary })
     .from(logEntries)
     .where(eq(logEntries.caseId, caseId))
     .orderBy(desc(logEntries.sequence))

@@ -2,6 +2,12 @@ import { and, asc, desc, eq, inArray, isNull, sql } from 'drizzle-orm';
 import type { DbOrTx, Transaction } from '#db/client.server.ts';
 import { cases, custodyRecords, evidenceExams, evidenceItems } from '#db/schema/all.ts';
 import type { Actor } from '#app/domain/roles.ts';
+import { listOffers } from './custody-offers.server.ts';
+import type { OfferLine } from './custody-offers.server.ts';
+import { listNotices } from './evidence-notices.server.ts';
+import type { NoticeLine } from './evidence-notices.server.ts';
+import { listPlans } from './planned-exams.server.ts';
+import type { PlanRow } from './planned-exams.server.ts';
 import { visibleTo } from './scope.server.ts';
 
 export type EvidenceItemRow = typeof evidenceItems.$inferSelect;
@@ -13,9 +19,12 @@ export interface EvidenceWhole {
   /** First record first. */
   readonly custody: readonly CustodyRow[];
   readonly exams: readonly ExamRow[];
+  readonly plans: readonly PlanRow[];
+  readonly notices: readonly NoticeLine[];
+  readonly offers: readonly OfferLine[];
 }
 
-/** Items of a visible case with custody and examinations, in the order of their labels. */
+/** Items of a visible case with custody, examinations, plans, notices and offers, in the order of their labels. */
 export async function listEvidence(db: DbOrTx, params: { readonly actor: Actor; readonly caseNumber: number }): Promise<EvidenceWhole[]> {
   const rows = await db
     .select({ item: evidenceItems })
@@ -36,7 +45,11 @@ async function withChains(db: DbOrTx, items: readonly EvidenceItemRow[]): Promis
   const ids = items.map((item) => item.id);
   const custody = await db.select().from(custodyRecords).where(inArray(custodyRecords.itemId, ids)).orderBy(asc(custodyRecords.sequence));
   const exams = await db.select().from(evidenceExams).where(inArray(evidenceExams.itemId, ids)).orderBy(asc(evidenceExams.performedAt), asc(evidenceExams.id));
-  return items.map((item) => ({ item, custody: custody.filter((record) => record.itemId === item.id), exams: exams.filter((exam) => exam.itemId === item.id) }));
+  const [plans, notices, offers] = [await listPlans(db, ids), await listNotices(db, ids), await listOffers(db, ids)];
+  return items.map((item) => {
+    const own = <Row extends { readonly itemId: string }>(rows: readonly Row[]) => rows.filter((row) => row.itemId === item.id);
+    return { item, custody: own(custody), exams: own(exams), plans: own(plans), notices: own(notices), offers: own(offers) };
+  });
 }
 
 /** Next free label of a case; the caller holds the case's row lock. */
@@ -86,6 +99,11 @@ export async function insertCustody(tx: Transaction, values: typeof custodyRecor
 
 export async function closeCustody(tx: Transaction, custodyId: string, toAt: Date): Promise<void> {
   await tx.update(custodyRecords).set({ toAt }).where(eq(custodyRecords.id, custodyId));
+}
+
+export async function examByClientId(tx: Transaction, params: { readonly itemId: string; readonly clientId: string }): Promise<ExamRow | null> {
+  const [row] = await tx.select().from(evidenceExams).where(and(eq(evidenceExams.itemId, params.itemId), eq(evidenceExams.clientId, params.clientId)));
+  return row ?? null;
 }
 
 export async function insertExam(tx: Transaction, values: typeof evidenceExams.$inferInsert): Promise<string | null> {

@@ -2,14 +2,15 @@ import type { DbOrTx } from '#db/client.server.ts';
 import { readMoveFacts } from './case-moves.server.ts';
 import { findCase } from './case-subject.server.ts';
 import type { CaseRow } from './case-subject.server.ts';
-import { getFrozenFinding, hasSeenOpinion, listFindings, listReviewComments, readSignedBasis } from './findings.server.ts';
+import { getFrozenFinding, listFindings, listReviewComments, readSignedBasis } from './findings.server.ts';
 import type { CommentView, FindingView } from './findings.server.ts';
 import { listHypotheses } from './hypotheses.server.ts';
 import type { HypothesisView } from './hypotheses.server.ts';
+import { isConclusionHidden } from './hidden-conclusion.server.ts';
 import { moveChecklist } from '#app/domain/move-checklist.ts';
 import { findMove } from '#app/domain/case-state.ts';
 import { certaintyFacts, selectionObstacles } from '#app/domain/finding-form.ts';
-import { certaintyObstacles } from '#app/domain/finding.ts';
+import { certaintyObstacles, isConclusionField } from '#app/domain/finding.ts';
 import { commentLabel, findingHeading, findingWords, versionView } from '#app/domain/finding-view.ts';
 import type { CommentPin, FindingMode } from '#app/domain/finding-view.ts';
 import { hypothesisKindLabels } from '#app/domain/hypothesis.ts';
@@ -56,7 +57,7 @@ export async function getFindingPage(db: DbOrTx, { actor, caseNumber, version }:
   const readable = mayReadDrafts ? all : all.filter((finding) => finding.state === 'signed');
   const [latest = null] = all;
   const mode = modeOf(actor, subject, latest);
-  const opinionShown = mode !== 'review' || latest === null || (await hasSeenOpinion(db, { findingId: latest.id, userId: actor.userId }));
+  const opinionShown = !(await isConclusionHidden(db, { actor, caseNumber }));
   const context: Context = { actor, row: found.row, subject, mode, latest: readable[0] ?? null, opinionShown };
   const hypotheses = await listHypotheses(db, { actor, caseNumber });
   const comments = mayReadDrafts ? pinsOf(context, all, await listReviewComments(db, { actor, caseNumber })) : [];
@@ -84,7 +85,7 @@ export async function getFindingPage(db: DbOrTx, { actor, caseNumber, version }:
 
 /** A reviewer who has not asked for the opinion is shown no version of it, earlier ones included. */
 function choose({ mode, opinionShown, latest }: Context, readable: readonly FindingView[], version: number | null): FindingView | null {
-  if (mode === 'review' && !opinionShown) return null;
+  if (!opinionShown) return null;
   const asked = readable.find((finding) => finding.version === version);
   if (asked) return asked;
   return mode === 'write' ? null : latest;
@@ -106,7 +107,8 @@ function noteOf(finding: FindingView, zone: string): string {
   return `by ${finding.author}, version ${finding.version}, not signed`;
 }
 
-function pinsOf({ actor, row, subject }: Context, versions: readonly FindingView[], comments: readonly CommentView[]): CommentPin[] {
+/** What others remarked on a conclusion quotes it, so those words wait for the opinion too. */
+function pinsOf({ actor, row, subject, opinionShown }: Context, versions: readonly FindingView[], comments: readonly CommentView[]): CommentPin[] {
   return comments.map((comment, index) => {
     const authorId = versions.find((version) => version.id === comment.findingId)?.authorId ?? '';
     const settled = comment.settledAt ? `settled by ${comment.settledBy ?? 'a person'} ${formatDayClock(comment.settledAt, row.zone)}` : null;
@@ -115,7 +117,7 @@ function pinsOf({ actor, row, subject }: Context, versions: readonly FindingView
       pin: index + 1,
       field: comment.field,
       label: commentLabel(comment.field),
-      body: comment.body,
+      body: !opinionShown && isConclusionField(comment.field) && comment.authorId !== actor.userId ? null : comment.body,
       by: `${comment.author}, ${formatDayClock(comment.createdAt, row.zone)}`,
       version: comment.version,
       settled,

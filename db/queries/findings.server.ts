@@ -80,6 +80,11 @@ export async function markFindingSent(tx: Transaction, findingId: string): Promi
   await tx.update(findings).set({ state: 'sent', sentAt: sql`now()` }).where(eq(findings.id, findingId));
 }
 
+/** Back to its author as it was, before any reviewer has asked for it. */
+export async function markFindingUnsent(tx: Transaction, findingId: string): Promise<void> {
+  await tx.update(findings).set({ state: 'draft', sentAt: null }).where(and(eq(findings.id, findingId), eq(findings.state, 'sent')));
+}
+
 export async function markFindingSentBack(tx: Transaction, findingId: string, reviewerId: string): Promise<void> {
   await tx.update(findings).set({ state: 'sent-back', reviewerId, reviewedAt: sql`now()` }).where(eq(findings.id, findingId));
 }

@@ -4,7 +4,8 @@ import { cases, hypotheses, reconstructions, users } from '#db/schema/all.ts';
 import type { EngineTest, HypothesisDraft } from '#app/domain/hypothesis-form.ts';
 import type { FourTests, HypothesisKind, HypothesisResult } from '#app/domain/hypothesis.ts';
 import type { Actor } from '#app/domain/roles.ts';
-import type { Grade, ReconstructionResult, TestSummary } from '#app/physics/model.ts';
+import type { ReconstructionResult } from '#app/physics/model/result.ts';
+import type { Grade, TestSummary } from '#app/physics/model/tests.ts';
 import { visibleTo } from './scope.server.ts';
 
 export interface HypothesisView {

@@ -4,20 +4,26 @@ import { cases, logEntries } from '#db/schema/all.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import { visibleTo } from './scope.server.ts';
 
-export interface NewLogEntry {
+/** What happened, whoever did it. */
+export interface LoggedEvent {
+  /** Past tense, e.g. `case.closed`. */
+  readonly event: string;
+  /** The table and row that changed. */
+  readonly subject: string;
+  readonly subjectId: string;
+  /** Names no witness and no holder: the log is read by more people than personal fields are. */
+  readonly summary: string;
+  readonly reason?: string;
+  readonly before?: Record<string, unknown>;
+  readonly after?: Record<string, unknown>;
+}
+
+export interface NewLogEntry extends LoggedEvent {
   /** Null for the system and for guests; `actorName` then says who. */
   readonly actorId: string | null;
   readonly actorName: string;
   readonly organisationId: string;
   readonly caseId: string | null;
-  /** Past tense, e.g. `case.closed`. */
-  readonly event: string;
-  readonly subject: string;
-  readonly subjectId: string;
-  readonly summary: string;
-  readonly reason?: string;
-  readonly before?: Record<string, unknown>;
-  readonly after?: Record<string, unknown>;
 }
 
 /** Writes one line of the log. Takes a transaction only: a change and its line stand or fall together. */

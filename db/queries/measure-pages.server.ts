@@ -4,6 +4,7 @@ import { canOnCase, whoCan } from '#app/domain/permissions.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import { sceneSchema } from '#app/domain/scene.ts';
 import type { Scene } from '#app/domain/scene.ts';
+import { whyClosed } from '#app/domain/why-closed.ts';
 import { casePlace } from './case-place.server.ts';
 import type { CasePlace } from './case-place.server.ts';
 import { findCase } from './case-subject.server.ts';
@@ -33,6 +34,6 @@ export async function getMeasuredCase(db: DbOrTx, params: { actor: Actor; caseNu
     scene: latest?.scene ?? sceneSchema.parse({}),
     version: latest?.version ?? 0,
     mayEdit: canOnCase(params.actor, 'case:edit-facts', found.subject),
-    whoEdits: whoCan('case:edit-facts'),
+    whoEdits: whyClosed(params.actor, 'case:edit-facts', found.subject),
   };
 }

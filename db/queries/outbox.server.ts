@@ -9,11 +9,27 @@ export interface NewMail {
   readonly bodyText: string;
   readonly bodyHtml: string;
   readonly caseId: string | null;
+  /** Not before so many seconds from now, so that what causes it can be taken back. */
+  readonly heldForS?: number;
 }
 
 /** Puts a message in the outbox within the caller's transaction. A second message with the same key is dropped. */
-export async function insertMail(tx: Transaction, mail: NewMail): Promise<void> {
-  await tx.insert(outbox).values(mail).onConflictDoNothing({ target: outbox.dedupeKey });
+export async function insertMail(tx: Transaction, { heldForS = 0, ...mail }: NewMail): Promise<void> {
+  await tx
+    .insert(outbox)
+    .values({ ...mail, nextAttemptAt: sql`now() + make_interval(secs => ${heldForS})` })
+    .onConflictDoNothing({ target: outbox.dedupeKey });
+}
+
+/**
+ * Takes messages out of the outbox that nobody has tried to send, by the start of their keys.
+ *
+ * @returns How many others with such a key were tried already, and stay.
+ */
+export async function removeUnsentMail(tx: Transaction, keyStart: string): Promise<number> {
+  const ofKey = sql`starts_with(${outbox.dedupeKey}, ${keyStart})`;
+  await tx.delete(outbox).where(and(ofKey, eq(outbox.state, 'waiting'), eq(outbox.attempts, 0)));
+  return tx.$count(outbox, ofKey);
 }
 
 /** Messages that are due, locked for this transaction so that two workers never send the same one. */

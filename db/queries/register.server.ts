@@ -5,12 +5,12 @@ import { cases, correctiveActions, sites } from '#db/schema/all.ts';
 import type { RegisterFilter } from '#app/domain/register-filter.ts';
 import { pageSize } from '#app/domain/register-filter.ts';
 import { caseRules } from '#app/domain/permissions.ts';
-import type { Actor, Role } from '#app/domain/roles.ts';
+import type { Actor } from '#app/domain/roles.ts';
 import { holdsRoleAnywhere } from '#app/domain/roles.ts';
 import {
   actionsInBrief, attachedRun, draftExists, duplicateOfNumber, fixProven, hasLateAction, instantParameter, latestOpticKind, markBearingKnown, nextReturnAt, openComments, returnsListed, signedCertainty, sunlightRuledOut,
 } from './case-expressions.server.ts';
-import { visibleTo } from './scope.server.ts';
+import { heldBy, visibleTo } from './scope.server.ts';
 
 export interface RegisterQuery {
   readonly actor: Actor;
@@ -21,13 +21,6 @@ export interface RegisterQuery {
 /** Sites at which the actor may read health fields, as a condition on `cases`; their own reports always. */
 function healthVisible(actor: Actor): SQL {
   return heldBy(actor, caseRules['case:read-health'].roles, eq(cases.reporterId, actor.userId));
-}
-
-function heldBy(actor: Actor, roles: readonly Role[], own: SQL): SQL {
-  const held = actor.grants.filter((grant) => roles.includes(grant.role));
-  if (held.some((grant) => grant.siteId === null)) return sql`true`;
-  const siteIds = held.flatMap((grant) => (grant.siteId ? [grant.siteId] : []));
-  return (siteIds.length > 0 ? or(own, inArray(cases.siteId, siteIds)) : own) ?? sql`false`;
 }
 
 const actionsVisible = (actor: Actor): SQL => heldBy(actor, caseRules['action:read'].roles, sql`false`);
@@ -76,11 +69,12 @@ function textCondition(text: string): SQL | undefined {
   return or(ilike(cases.title, pattern), ilike(cases.placeDetail, pattern), ilike(sites.name, pattern), ilike(cases.narrative, pattern), ilike(cases.receipt, pattern), number ? eq(cases.number, Number(number)) : undefined);
 }
 
-function resultCondition(result: RegisterFilter['result']): SQL | undefined {
+/** What is hidden from a reader is not found by it either. */
+function resultCondition(actor: Actor, result: RegisterFilter['result']): SQL | undefined {
   if (result === null) return undefined;
-  if (result === 'none') return sql`${signedCertainty} is null`;
-  if (result === 'ruled-out') return sunlightRuledOut;
-  return sql`${signedCertainty} = ${result} and not ${sunlightRuledOut}`;
+  if (result === 'none') return sql`${signedCertainty(actor)} is null`;
+  if (result === 'ruled-out') return sunlightRuledOut(actor);
+  return sql`${signedCertainty(actor)} = ${result} and not ${sunlightRuledOut(actor)}`;
 }
 
 function conditions(query: RegisterQuery): SQL | undefined {
@@ -91,7 +85,7 @@ function conditions(query: RegisterQuery): SQL | undefined {
     viewCondition(query),
     filter.state ? eq(cases.state, filter.state) : undefined,
     filter.optic ? sql`${latestOpticKind} = ${filter.optic}` : undefined,
-    resultCondition(filter.result),
+    resultCondition(actor, filter.result),
     filter.within ? sql`${next} <= ${instantParameter(now)} + make_interval(days => ${filter.within}::int)` : undefined,
     textCondition(filter.q),
   );
@@ -143,8 +137,8 @@ function registerColumns(actor: Actor, now: Date) {
     group: groupOf(now),
     opticKind: latestOpticKind,
     markBearingKnown,
-    signedCertainty,
-    sunlightRuledOut,
+    signedCertainty: signedCertainty(actor),
+    sunlightRuledOut: sunlightRuledOut(actor),
     returnsListed,
     draftExists,
     openComments,

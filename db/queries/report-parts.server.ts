@@ -7,8 +7,11 @@ import { listCasePhotos } from './photos.server.ts';
 import { getReconstruction } from './reconstructions.server.ts';
 import { listHappenings } from './timeline-page.server.ts';
 import { listAccountsOfCase } from './witness-accounts.server.ts';
+import type { CaseBeforeRedaction } from '#app/domain/case-before-redaction.ts';
 import type { InHouseParts, ReportFinding } from '#app/domain/in-house-report.ts';
+import { reliedSource } from '#app/domain/relied-weather.ts';
 import type { ReportedRun } from '#app/domain/report-source.ts';
+import { runDrawing } from '#app/domain/run-drawing.ts';
 import type { Actor } from '#app/domain/roles.ts';
 
 export interface ReportQuery {
@@ -33,7 +36,7 @@ export async function readReportParts(db: DbOrTx, { actor, caseNumber, finding, 
     source: read.source,
     finding,
     opinionShown,
-    run: await runOf(db, query, read.source.reconstruction?.number ?? null),
+    run: await runOf(db, query, read.source),
     happenings: await listHappenings(db, found.row, query),
     accounts: (await listAccountsOfCase(db, found.row.id)).map(({ account }) => account),
     items: await listEvidence(db, query),
@@ -43,9 +46,9 @@ export async function readReportParts(db: DbOrTx, { actor, caseNumber, finding, 
   };
 }
 
-async function runOf(db: DbOrTx, query: Pick<ReportQuery, 'actor' | 'caseNumber'>, number: number | null): Promise<ReportedRun | null> {
-  if (number === null) return null;
-  const run = await getReconstruction(db, { ...query, number });
+async function runOf(db: DbOrTx, query: Pick<ReportQuery, 'actor' | 'caseNumber'>, { reconstruction, weather }: CaseBeforeRedaction): Promise<ReportedRun | null> {
+  if (!reconstruction) return null;
+  const run = await getReconstruction(db, { ...query, number: reconstruction.number });
   if (!run?.result || !run.resultHash) return null;
-  return { number: run.number, engineVersion: run.engineVersion, zoneRules: run.zoneRules, inputHash: run.inputHash, resultHash: run.resultHash, result: run.result, skyline: run.input.skyline?.points ?? [] };
+  return { number: run.number, engineVersion: run.engineVersion, zoneRules: run.zoneRules, inputHash: run.inputHash, resultHash: run.resultHash, result: run.result, drawing: runDrawing(run.input, run.result), weather: weather && { ...weather, source: reliedSource(weather) } };
 }

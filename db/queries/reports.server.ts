@@ -1,9 +1,10 @@
-import { and, asc, eq, inArray, isNotNull, isNull, or, sql } from 'drizzle-orm';
+import { and, asc, eq, inArray, isNotNull, isNull, max, or, sql } from 'drizzle-orm';
 import type { DbOrTx, Transaction } from '#db/client.server.ts';
 import { cases, findings, hypotheses, involvements, logEntries, photos, sites } from '#db/schema/all.ts';
 import type { CaseState } from '#app/domain/case-state.ts';
 import { acceptedTime } from '#app/domain/photo.ts';
 import type { ReportHolder, ReportSite } from '#app/domain/report.ts';
+import { standingMoves } from './moves-in-log.server.ts';
 
 const reportSite = { id: sites.id, organisationId: sites.organisationId, name: sites.name, code: sites.code, zone: sites.zone };
 
@@ -108,6 +109,8 @@ export interface ReportProgress {
   readonly question: string | null;
   readonly answerDueAt: Date | null;
   readonly photoCount: number;
+  /** When the newest of them came; null without photos. */
+  readonly lastPhotoAt: Date | null;
   readonly result: { readonly certainty: (typeof findings.$inferSelect)['certainty']; readonly kind: (typeof hypotheses.$inferSelect)['kind'] | null } | null;
   /** First time each state was reached. */
   readonly reachedAt: Partial<Record<CaseState, Date>>;
@@ -137,12 +140,13 @@ export async function getReportProgress(db: DbOrTx, receipt: string): Promise<Re
     .where(and(eq(findings.caseId, row.caseId), eq(findings.state, 'signed')))
     .orderBy(sql`${findings.version} desc`)
     .limit(1);
-  const [counted] = await db.select({ photoCount: sql<number>`count(*)::int` }).from(photos).where(eq(photos.caseId, row.caseId));
+  const [counted] = await db.select({ photoCount: sql<number>`count(*)::int`, lastPhotoAt: max(photos.createdAt) }).from(photos).where(eq(photos.caseId, row.caseId));
   return {
     ...row,
     question: row.state === 'returned' ? row.question : null,
     result: signed ?? null,
     photoCount: counted?.photoCount ?? 0,
+    lastPhotoAt: counted?.lastPhotoAt ?? null,
     reachedAt: await firstTimeInEachState(db, row.caseId),
   };
 }
@@ -153,7 +157,7 @@ async function firstTimeInEachState(db: DbOrTx, caseId: string): Promise<Partial
   const rows = await db
     .select({ state, sequence: sql<number>`min(${logEntries.sequence})::int` })
     .from(logEntries)
-    .where(and(eq(logEntries.caseId, caseId), sql`${logEntries.after} ->> 'state' is not null`))
+    .where(standingMoves(caseId))
     .groupBy(state);
   if (rows.length === 0) return {};
   const times = await db
@@ -163,7 +167,13 @@ async function firstTimeInEachState(db: DbOrTx, caseId: string): Promise<Partial
   return Object.fromEntries(rows.flatMap((row) => times.filter((time) => time.sequence === row.sequence).map((time) => [row.state, time.at])));
 }
 
-/** The case behind a receipt, locked, for an answer by whoever holds the receipt. */
+/** The case behind a receipt as a photo needs it, before its bytes are looked at. */
+export async function findCaseByReceipt(db: DbOrTx, receipt: string) {
+  const [row] = await db.select({ clientId: cases.clientId, state: cases.state, reporterId: cases.reporterId }).from(cases).where(eq(cases.receipt, receipt));
+  return row ?? null;
+}
+
+/** The case behind a receipt, locked, for an answer or a photo by whoever holds the receipt. */
 export async function lockCaseByReceipt(tx: Transaction, receipt: string) {
   const [row] = await tx.select().from(cases).where(eq(cases.receipt, receipt)).for('update');
   return row ?? null;

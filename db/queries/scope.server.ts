@@ -25,6 +25,14 @@ export function visibleTo(actor: Actor): SQL {
   return and(eq(cases.organisationId, actor.organisationId), or(...ways)) ?? sql`false`;
 }
 
+/** Cases at whose site the actor holds one of the roles, or that `own` admits, as a condition on `cases`. */
+export function heldBy(actor: Actor, roles: readonly Role[], own: SQL): SQL {
+  const held = actor.grants.filter((grant) => roles.includes(grant.role));
+  if (held.some((grant) => grant.siteId === null)) return sql`true`;
+  const siteIds = held.flatMap((grant) => (grant.siteId ? [grant.siteId] : []));
+  return (siteIds.length > 0 ? or(own, inArray(cases.siteId, siteIds)) : own) ?? sql`false`;
+}
+
 /** Releases that a reader of another organisation may open: addressed to it, released, and not expired. */
 export function releasedTo(actor: Actor): SQL {
   if (!actor.grants.some((grant) => grant.role === 'insurer')) return sql`false`;

@@ -3,9 +3,10 @@ import type { DbOrTx } from '#db/client.server.ts';
 import { cases, sites } from '#db/schema/all.ts';
 import type { SimilarCaseView, WaitingCaseView } from '#app/domain/case-view.ts';
 import { firstLookView } from '#app/domain/first-look.ts';
+import { offsetM } from '#app/domain/ground.ts';
 import { formatDay, localDay } from '#app/domain/local-time.ts';
 import type { Actor } from '#app/domain/roles.ts';
-import { likeness, offsetM } from '#app/domain/similar-cases.ts';
+import { alikeBearingDeg, likeness } from '#app/domain/similar-cases.ts';
 import type { Likeness } from '#app/domain/similar-cases.ts';
 import { latestOpticKind, markBearingDeg } from './case-expressions.server.ts';
 import type { CaseRow } from './case-subject.server.ts';
@@ -15,8 +16,6 @@ import { visibleTo } from './scope.server.ts';
 
 const mostSimilar = 6;
 const mostCandidates = 60;
-/** Bearings are alike within this many degrees; `domain/similar-cases.ts` says so in words. */
-const alikeBearingDeg = 15;
 
 /** What is compared, as columns. */
 function likenessColumns(day: string) {

@@ -1,10 +1,11 @@
-import { and, asc, eq, sql } from 'drizzle-orm';
+import { asc, sql } from 'drizzle-orm';
 import type { DbOrTx } from '#db/client.server.ts';
 import { logEntries } from '#db/schema/all.ts';
 import { listAttachments, readableClasses } from './attachments.server.ts';
 import type { CaseRow } from './case-subject.server.ts';
 import { findCase } from './case-subject.server.ts';
 import { listEvidence } from './evidence.server.ts';
+import { standingMoves } from './moves-in-log.server.ts';
 import { listCasePhotos } from './photos.server.ts';
 import { listTimelineEvents } from './timeline.server.ts';
 import { standingWeather } from './weather.server.ts';
@@ -17,6 +18,7 @@ import { examKindLabels, holderRoleLabels, itemCode, itemLetter } from '#app/dom
 import { foundMeansLabels, onsetBasisLabels, photoViewLabels } from '#app/domain/incident.ts';
 import { formatClock } from '#app/domain/local-time.ts';
 import { canOnCase, whoCan } from '#app/domain/permissions.ts';
+import { whyClosed } from '#app/domain/why-closed.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import { timelineHeading, timelineRows, timelineSourceLabels, trueTime } from '#app/domain/timeline.ts';
 import type { Happening } from '#app/domain/timeline.ts';
@@ -113,7 +115,7 @@ async function evidenceHappenings(db: DbOrTx, query: Query): Promise<Happening[]
 /** States reached, from the log, where every move notes the state it led to. */
 async function moveHappenings(db: DbOrTx, row: CaseRow): Promise<Happening[]> {
   const state = sql<CaseState>`${logEntries.after} ->> 'state'`;
-  const rows = await db.select({ sequence: logEntries.sequence, at: logEntries.at, state }).from(logEntries).where(and(eq(logEntries.caseId, row.id), eq(logEntries.subject, 'cases'), sql`${logEntries.after} ->> 'state' is not null`)).orderBy(asc(logEntries.sequence));
+  const rows = await db.select({ sequence: logEntries.sequence, at: logEntries.at, state }).from(logEntries).where(standingMoves(row.id)).orderBy(asc(logEntries.sequence));
   return rows.filter((move) => move.state !== 'reported' && move.state in caseStateLabels).map((move) => ({ ...plain, key: `move-${move.sequence}`, at: move.at, source: 'Log', what: `State: ${caseStateLabels[move.state].toLowerCase()}`, path: '/log' }));
 }
 
@@ -132,6 +134,6 @@ export async function getTimelinePage(db: DbOrTx, query: Query) {
     rows: timelineRows(happenings, row.zone),
     documents: documents.map((document) => ({ id: document.id, words: `${attachmentCode(document.label)} ${document.title}` })),
     mayWrite: canOnCase(query.actor, 'timeline:write', subject),
-    whoWrites: whoCan('timeline:write'),
+    whoWrites: whyClosed(query.actor, 'timeline:write', subject),
   };
 }

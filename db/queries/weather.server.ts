@@ -2,6 +2,7 @@ import { and, asc, eq, isNull, sql } from 'drizzle-orm';
 import type { DbOrTx, Transaction } from '#db/client.server.ts';
 import { cases, users, weatherRecords } from '#db/schema/all.ts';
 import type { Actor } from '#app/domain/roles.ts';
+import type { StoredWeather } from '#app/domain/relied-weather.ts';
 import type { WeatherSeries } from '#app/domain/weather.ts';
 import { visibleTo } from './scope.server.ts';
 
@@ -20,21 +21,32 @@ export async function listWeather(db: DbOrTx, params: { actor: Actor; caseNumber
   return rows.map((row) => ({ ...row.record, addedBy: row.addedBy }));
 }
 
+const seriesColumns = {
+  number: weatherRecords.number,
+  kind: weatherRecords.kind,
+  nature: weatherRecords.nature,
+  sourceName: weatherRecords.sourceName,
+  station: weatherRecords.station,
+  stationDistanceKm: weatherRecords.stationDistanceKm,
+  intervalMin: weatherRecords.intervalMin,
+  values: weatherRecords.values,
+} as const;
+
 /** What a run may go by: the records of a case that stand; the caller has already found the case. */
 export function standingWeather(db: DbOrTx, caseId: string): Promise<WeatherSeries[]> {
   return db
-    .select({
-      number: weatherRecords.number,
-      kind: weatherRecords.kind,
-      nature: weatherRecords.nature,
-      sourceName: weatherRecords.sourceName,
-      station: weatherRecords.station,
-      stationDistanceKm: weatherRecords.stationDistanceKm,
-      intervalMin: weatherRecords.intervalMin,
-      values: weatherRecords.values,
-    })
+    .select(seriesColumns)
     .from(weatherRecords)
     .where(and(eq(weatherRecords.caseId, caseId), isNull(weatherRecords.setAsideAt)))
+    .orderBy(asc(weatherRecords.number));
+}
+
+/** Every record of a case, those set aside among them: a run may have gone by one of them. The caller has already found the case. */
+export function weatherOfCase(db: DbOrTx, caseId: string): Promise<StoredWeather[]> {
+  return db
+    .select({ ...seriesColumns, stationBearingDeg: weatherRecords.stationBearingDeg, setAsideAt: weatherRecords.setAsideAt })
+    .from(weatherRecords)
+    .where(eq(weatherRecords.caseId, caseId))
     .orderBy(asc(weatherRecords.number));
 }
 

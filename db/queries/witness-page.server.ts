@@ -7,6 +7,7 @@ import { attachmentCode } from '#app/domain/attachment.ts';
 import { DomainError } from '#app/domain/errors.ts';
 import { formatDayClock } from '#app/domain/local-time.ts';
 import { canOnCase, whoCan } from '#app/domain/permissions.ts';
+import { whyClosed } from '#app/domain/why-closed.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import { witnessesHeading, witnessNames, witnessRoleLabels } from '#app/domain/witness.ts';
 
@@ -53,7 +54,7 @@ export async function getWitnessPage(db: DbOrTx, { actor, caseNumber }: { readon
     people: mayWrite ? people.map((person) => ({ id: person.id, words: `${nameOf(person)}, ${roleOf(person).toLowerCase()}` })) : [],
     statements: mayWrite ? documents.filter((document) => document.class !== 'ordinary').map((document) => ({ id: document.id, words: `${attachmentCode(document.label)} ${document.title}` })) : [],
     mayWrite,
-    whoWrites: whoCan('witness:write'),
+    whoWrites: whyClosed(actor, 'witness:write', subject),
   };
 }
 export type WitnessPage = NonNullable<Awaited<ReturnType<typeof getWitnessPage>>>;

@@ -61,6 +61,8 @@ export const custodyRecords = pgTable(
     /** Names as signed at the hand-over that began this record. Class personal. */
     givenBy: text().notNull().default(''),
     receivedBy: text().notNull(),
+    /** The taker's own account, when they signed on it; null when whoever recorded it typed the signature. */
+    receiverId: uuid().references(() => users.id, { onDelete: 'restrict' }),
     recordedById: uuid().notNull().references(() => users.id, { onDelete: 'restrict' }),
     createdAt: createdAt(),
   },
@@ -70,6 +72,7 @@ export const custodyRecords = pgTable(
     uniqueIndex('custody_records_one_open').on(table.itemId).where(sql`${table.toAt} is null`),
     foreignKey({ name: 'custody_records_no_gap', columns: [table.itemId, table.previousSequence, table.fromAt], foreignColumns: [table.itemId, table.sequence, table.toAt] }),
     index('custody_records_recorded_by_id_idx').on(table.recordedById),
+    index('custody_records_receiver_id_idx').on(table.receiverId),
     check('custody_records_order', sql`${table.toAt} is null or ${table.toAt} > ${table.fromAt}`),
     check('custody_records_chain', sql`case when ${table.sequence} = 1 then ${table.previousSequence} is null else ${table.previousSequence} is not null and ${table.previousSequence} = ${table.sequence} - 1 end`),
     check('custody_records_given', sql`${table.sequence} = 1 or ${table.givenBy} <> ''`),
@@ -91,6 +94,8 @@ export const evidenceExams = pgTable(
     noticeTo: text().notNull().default(''),
     noticeAt: instant(),
     protocolAttachmentId: uuid().references(() => attachments.id, { onDelete: 'restrict' }),
+    /** Why it was made although something spoke against it, such as a party that objected. */
+    wentAheadReason: text().notNull().default(''),
     recordedById: uuid().notNull().references(() => users.id, { onDelete: 'restrict' }),
     createdAt: createdAt(),
   },

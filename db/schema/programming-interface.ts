@@ -1,7 +1,8 @@
 import { sql } from 'drizzle-orm';
 import { check, index, integer, jsonb, pgTable, text, uniqueIndex, uuid } from 'drizzle-orm/pg-core';
 import { tokenScopes } from '#app/domain/api-token.ts';
-import type { ReconstructionInput, ReconstructionResult } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
+import type { ReconstructionResult } from '#app/physics/model/result.ts';
 import { createdAt, id, instant } from './_columns.ts';
 import { users } from './people.ts';
 import { reconstructionStates } from './reconstructions.ts';

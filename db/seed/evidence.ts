@@ -7,6 +7,7 @@ import { attachments, custodyRecords, evidenceExams, evidenceItems, involvements
 import { attachmentContent } from '#app/domain/attachment.ts';
 import { putObject } from '#app/storage/objects.server.ts';
 import { sha256Hex } from '#app/storage/sha256.server.ts';
+import { seedOffer, seedPlan } from './evidence-steps.ts';
 import { moment } from './moment.ts';
 import { pick } from './people-and-sites.ts';
 import type { DemoPlaces } from './people-and-sites.ts';
@@ -14,7 +15,7 @@ import type { DemoPlaces } from './people-and-sites.ts';
 interface Target {
   readonly caseId: string;
   readonly zone: string;
-  readonly places: Pick<DemoPlaces, 'userIds'>;
+  readonly places: Pick<DemoPlaces, 'userIds' | 'userNames'>;
 }
 
 /** Documents, items with their chains, accounts and events of one demonstration case. */
@@ -24,7 +25,12 @@ export async function seedEvidence(tx: Transaction, caseNumber: number, { caseId
   const userId = pick(places.userIds, demo.recordedBy);
   const at = (local: string) => moment(local, zone);
   const documents = await seedDocuments(tx, demo, { caseId, userId, at });
-  for (const [index, item] of demo.items.entries()) await seedItem(tx, item, { caseId, userId, at, label: index + 1, documents });
+  for (const [index, item] of demo.items.entries()) {
+    const itemId = await seedItem(tx, item, { caseId, userId, at, label: index + 1, documents, recorder: pick(places.userNames, demo.recordedBy) });
+    const target = { itemId, zone, userId, places, now: new Date() };
+    if (item.planned) await seedPlan(tx, item.planned, target);
+    if (item.offer) await seedOffer(tx, { offer: item.offer, custody: item.custody }, target);
+  }
   for (const [index, account] of demo.accounts.entries()) {
     const [person] = await tx.select({ id: involvements.id }).from(involvements).where(and(eq(involvements.caseId, caseId), eq(involvements.name, account.witnessName)));
     if (!person) throw new Error(`The witness of case ${caseNumber} is missing.`);
@@ -69,8 +75,8 @@ async function seedDocuments(tx: Transaction, demo: DemoEvidence, { caseId, user
   return ids;
 }
 
-async function seedItem(tx: Transaction, demo: DemoEvidence['items'][number], writer: Writer & { readonly label: number; readonly documents: ReadonlyMap<string, string> }): Promise<void> {
-  const { caseId, userId, at, label, documents } = writer;
+async function seedItem(tx: Transaction, demo: DemoEvidence['items'][number], writer: Writer & { readonly label: number; readonly documents: ReadonlyMap<string, string>; readonly recorder: string }): Promise<string> {
+  const { caseId, userId, at, label, documents, recorder } = writer;
   const [first] = demo.custody;
   if (!first) throw new Error('An item of the demonstration has no holder.');
   const { kind, description, fromWhere, collectedBy, sealNumber } = demo;
@@ -93,6 +99,7 @@ async function seedItem(tx: Transaction, demo: DemoEvidence['items'][number], wr
       toAt: next ? at(next.local) : null,
       givenBy: before?.name ?? '',
       receivedBy: record.name,
+      receiverId: record.name === recorder ? userId : null,
       recordedById: userId,
       createdAt: at(record.local),
     });
@@ -113,4 +120,5 @@ async function seedItem(tx: Transaction, demo: DemoEvidence['items'][number], wr
       createdAt: at(exam.local),
     });
   }
+  return item.id;
 }

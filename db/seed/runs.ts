@@ -4,7 +4,7 @@ import { reconstructions, sunReturns } from '#db/schema/all.ts';
 import { localDay } from '#app/domain/local-time.ts';
 import type { WeatherSeries } from '#app/domain/weather.ts';
 import { reconstructionInput } from '#app/domain/reconstruction-input.ts';
-import { engineVersion } from '#app/physics/model.ts';
+import { engineVersion } from '#app/physics/model/engine-version.ts';
 import { reconstruct } from '#app/physics/reconstruct.ts';
 import { hashOf } from '#app/storage/sha256.server.ts';
 import { moment } from './moment.ts';

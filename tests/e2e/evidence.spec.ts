@@ -10,10 +10,11 @@ import type { Stage } from './support/stage.ts';
 let stage: Stage;
 let maren: Page;
 let odile: Page;
+let joss: Page;
 
 beforeAll(async () => {
   stage = await openStage();
-  [maren, odile] = await Promise.all([signedIn(stage, 'maren'), signedIn(stage, 'odile')]);
+  [maren, odile, joss] = await Promise.all([signedIn(stage, 'maren'), signedIn(stage, 'odile'), signedIn(stage, 'joss')]);
 });
 afterAll(async () => {
   await stage.close();
@@ -43,29 +44,51 @@ describe('evidence', () => {
     await maren.getByLabel('Held by, name').fill('Maren Kvist');
     await send(maren, maren.getByRole('button', { name: 'Record the item' }));
     await maren.getByRole('heading', { name: '118-E: Timer of the display lamps' }).waitFor();
-    await maren.getByLabel('When', { exact: true }).first().fill('2026-02-04T09:00');
-    await maren.getByLabel('Taken over by, part').selectOption({ label: 'Store' });
-    await maren.getByLabel('Taken over by, name').fill('Store Vestre');
-    await maren.getByLabel('Purpose').fill('Keeping');
-    await maren.getByLabel('Condition of item and seal').fill('whole');
-    await maren.getByLabel('Signed by the taker').fill('Store Vestre');
+    await maren.getByText('To somebody without an account').click();
+    const typed = maren.locator('form').filter({ has: maren.getByRole('button', { name: 'Record the hand-over' }) });
+    await typed.getByLabel('When', { exact: true }).fill('2026-02-04T09:00');
+    await typed.getByLabel('Taken over by, part').selectOption({ label: 'Store' });
+    await typed.getByLabel('Taken over by, name').fill('Store Vestre');
+    await typed.getByLabel('Purpose').fill('Keeping');
+    await typed.getByLabel('Condition of item and seal').fill('whole');
+    await typed.getByLabel('Signed by the taker').fill('Store Vestre');
     await send(maren, maren.getByRole('button', { name: 'Record the hand-over' }));
     await maren.getByText('The hand-over comes after the one before it.').first().waitFor();
-    expect(await maren.getByLabel('Purpose').inputValue()).toBe('Keeping');
-    await maren.getByLabel('When', { exact: true }).first().fill('2026-02-05T09:00');
+    expect(await typed.getByLabel('Purpose').inputValue()).toBe('Keeping');
+    await typed.getByLabel('When', { exact: true }).fill('2026-02-05T09:00');
     await send(maren, maren.getByRole('button', { name: 'Record the hand-over' }));
     await maren.getByRole('region', { name: 'Chain of custody of 118-E' }).getByRole('row', { name: /Store Vestre/u }).waitFor();
     await open(maren, '/cases/118/evidence/E/label');
     await maren.getByRole('img', { name: /Code that leads to .*\/cases\/118\/evidence\/E/u }).waitFor();
   });
 
+  it('is signed for by the receiver on their own account, and held by the giver until then', async () => {
+    await open(maren, '/cases/118/evidence/E');
+    const offer = maren.locator('form').filter({ has: maren.getByRole('button', { name: 'Sign as giver and offer it' }) });
+    await offer.getByLabel('Who takes it over').selectOption({ label: 'Joss Penhallow' });
+    await offer.getByLabel('Their part').selectOption({ label: 'Site staff' });
+    await offer.getByLabel('Purpose').fill('Back to the site');
+    await offer.getByLabel('Condition of item and seal').fill('whole');
+    await send(maren, maren.getByRole('button', { name: 'Sign as giver and offer it' }));
+    await maren.getByRole('heading', { name: 'Offered to Joss Penhallow' }).waitFor();
+    await maren.getByRole('region', { name: 'Chain of custody of 118-E' }).getByRole('row', { name: /holds it now.*Store Vestre/u }).waitFor();
+    await open(joss, '/cases/118/evidence');
+    await joss.getByRole('region', { name: 'Waiting for a signature' }).getByRole('link', { name: '118-E' }).click();
+    await joss.getByRole('heading', { name: 'Offered to you' }).waitFor();
+    await joss.waitForLoadState('networkidle');
+    await joss.getByLabel('Condition as you take it over').fill('whole, bag torn at a corner');
+    await send(joss, joss.getByRole('button', { name: 'Take it over and sign' }));
+    await joss.getByRole('region', { name: 'Chain of custody of 118-E' }).getByRole('row', { name: /holds it now.*Joss Penhallow.*bag torn.*on their own account/u }).waitFor();
+  });
+
   it('is refused an examination that may alter it without notice and protocol', async () => {
     await open(maren, '/cases/118/evidence/E');
     await choose(maren, 'Kind of examination', 'May alter the item');
-    await maren.getByLabel('When', { exact: true }).last().fill('2026-02-06T09:00');
-    await maren.getByLabel('Made by').fill('Laboratory Halm');
-    await maren.getByLabel('Method').fill('Opened');
-    await maren.getByLabel('Result').fill('Contacts clean');
+    const exam = maren.getByRole('region', { name: 'Record an examination' });
+    await exam.getByLabel('When', { exact: true }).fill('2026-02-06T09:00');
+    await exam.getByLabel('Made by').fill('Laboratory Halm');
+    await exam.getByLabel('Method').fill('Opened');
+    await exam.getByLabel('Result').fill('Contacts clean');
     await send(maren, maren.getByRole('button', { name: 'Record the examination' }));
     await maren.getByText('needs notice').first().waitFor();
     await maren.getByText('Choose the protocol file').first().waitFor();

@@ -1,40 +1,34 @@
-import postgres from 'postgres';
 import type { Page, Route } from 'playwright-core';
 import { afterAll, beforeAll, beforeEach, describe, expect, test } from 'vitest';
-import { demoPhotoPath } from './support/report-form.ts';
+import { chooseAnswers, demoPhotoPath, goOn, guestReport, sendReport } from './support/report-form.ts';
 import { openStage } from './support/stage.ts';
 import type { Stage } from './support/stage.ts';
 
 /** What was acknowledged is stored, and nothing is stored twice, wherever the connection or the server goes away. */
 let stage: Stage;
-let sql: postgres.Sql;
 let page: Page;
 beforeAll(async () => {
   stage = await openStage();
-  sql = postgres(stage.databaseUrl, { max: 1 });
 });
 afterAll(async () => {
-  await sql.end();
   await stage.close();
 });
 
 const photos = [demoPhotoPath('03-1'), demoPhotoPath('07-2'), demoPhotoPath('08-1')];
-const photosOf = async (words: string) => (await sql<{ captions: string[] }[]>`
+const photosOf = async (words: string) => (await stage.sql<{ captions: string[] }[]>`
   select coalesce((select array_agg(p.caption order by p.label) from photos p where p.case_id = c.id), '{}') as captions from cases c where c.narrative = ${words}`).map(({ captions }) => captions);
 
 beforeEach(async () => {
   page = await stage.visit({ size: 'phone' });
-  await page.goto('/report?at=kestwick-roof-7q4m');
-  await page.getByRole('button', { name: 'It is covered, or gone. Go on' }).click();
-  await page.locator('[name=foundWhen][value=just-now]').check();
-  await page.locator('[name=sighting][value=mark]').check();
-  await page.locator('[name=anyoneHurt][value=no]').check();
+  await page.goto(guestReport);
+  await goOn(page);
+  await chooseAnswers(page);
   return () => page.context().close();
 });
 
 const write = (words: string) => page.getByLabel('In your words').fill(words);
 const choose = (paths: readonly string[]) => page.getByLabel('Photo files').setInputFiles([...paths]);
-const send = () => page.locator('button[value=send]').last().click();
+const send = () => sendReport(page);
 const received = () => page.getByRole('heading', { name: 'Received. Thank you' }).waitFor();
 const waits = () => page.getByText(/It goes by itself when signal returns, once only/u).waitFor();
 

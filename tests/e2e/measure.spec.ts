@@ -70,7 +70,7 @@ describe('the measurements of a case', () => {
     await page.getByLabel('What was measured, and by whom').fill('Clinometer at the pane.');
     await save(/Save as version 4/u);
     await page.getByRole('img', { name: 'Skyline of 3 points, up to 4.0°.' }).first().waitFor();
-    expect(await page.getByText('Skyline measured for this case: 3 points').count()).toBe(1);
+    expect(await page.getByText('3 points of skyline, measured for this case').count()).toBe(1);
   });
 
   it('have a sheet for paper with what is known and a code that leads back', async () => {

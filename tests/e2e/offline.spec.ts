@@ -1,27 +1,21 @@
-import postgres from 'postgres';
 import type { BrowserContext, Page } from 'playwright-core';
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import { demoEmail, demoPassword, demoPeople } from '#fixtures/demo/people.ts';
-import { demoPhotoPath } from './support/report-form.ts';
+import { chooseAnswers, demoPhotoPath, goOn, guestReport, sendReport as send } from './support/report-form.ts';
 import { signedIn } from './support/sign-in.ts';
 import { openStage } from './support/stage.ts';
 import type { Stage } from './support/stage.ts';
 
 /** The report page from a cold start, with the server gone: nothing but what the device keeps is there. */
-const guestReport = '/report?at=kestwick-roof-7q4m';
-
 let stage: Stage;
-let sql: postgres.Sql;
 beforeAll(async () => {
   stage = await openStage();
-  sql = postgres(stage.databaseUrl, { max: 1 });
 });
 afterAll(async () => {
-  await sql.end();
   await stage.close();
 });
 
-const casesWith = async (words: string) => (await sql<{ photos: number; reporter: string | null }[]>`
+const casesWith = async (words: string) => (await stage.sql<{ photos: number; reporter: string | null }[]>`
   select (select count(*)::int from photos p where p.case_id = c.id) as photos, (select email from users u where u.id = c.reporter_id) as reporter from cases c where c.narrative = ${words}`);
 
 const newPage = async (context: BrowserContext, address: string): Promise<Page> => {
@@ -39,14 +33,10 @@ async function prepared(page: Page): Promise<void> {
 }
 
 async function answer(page: Page, words: string): Promise<void> {
-  await page.getByRole('button', { name: 'It is covered, or gone. Go on' }).click();
+  await goOn(page);
   await page.getByLabel('In your words').fill(words);
-  await page.locator('[name=foundWhen][value=just-now]').check();
-  await page.locator('[name=sighting][value=mark]').check();
-  await page.locator('[name=anyoneHurt][value=no]').check();
+  await chooseAnswers(page);
 }
-
-const send = (page: Page) => page.locator('button[value=send]').last().click();
 
 test('by the link of a site: opens, keeps words and photo through a flat battery, and is filed once when the server is back', async () => {
   const words = 'Written with no signal at all.';
@@ -191,7 +181,7 @@ test('the measurements of a case, taken along, open without the server, keep wha
   const back = await newPage(context, path);
   await expect.poll(() => back.getByLabel('Width of the mark, value').inputValue()).toBe('23');
   await back.getByRole('button', { name: /^Save as version/u }).click();
-  await expect.poll(async () => (await sql<{ note: string }[]>`
+  await expect.poll(async () => (await stage.sql<{ note: string }[]>`
     select v.note from scenes v join cases c on c.id = v.case_id where c.number = 129 order by v.version desc limit 1`)[0]?.note).toBe('Tape, by hand on the roof.');
   await context.clearCookies();
   await back.goto(new URL('/sign-in', stage.baseUrl).toString());

@@ -1,25 +1,20 @@
 import { fileURLToPath } from 'node:url';
 import AxeBuilder from '@axe-core/playwright';
-import postgres from 'postgres';
 import sharp from 'sharp';
 import type { Page } from 'playwright-core';
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import { receiptPattern } from '#app/domain/incident.ts';
+import { chooseAnswers, goOn, guestReport, sendReport as send } from './support/report-form.ts';
 import { openStage } from './support/stage.ts';
 import type { Stage } from './support/stage.ts';
 
-/** The account-free link of a demonstration site. */
-const guestReport = '/report?at=kestwick-roof-7q4m';
 const photoFile = (name: string) => fileURLToPath(new URL(`../../fixtures/photos/${name}`, import.meta.url));
 
 let stage: Stage;
-let sql: postgres.Sql;
 beforeAll(async () => {
   stage = await openStage();
-  sql = postgres(stage.databaseUrl, { max: 1 });
 });
 afterAll(async () => {
-  await sql.end();
   await stage.close();
 });
 
@@ -28,18 +23,11 @@ async function expectNoViolations(page: Page): Promise<void> {
   expect(violations.map(({ id, nodes }) => `${id}: ${nodes.map((node) => node.target.join(' ')).join(', ')}`)).toEqual([]);
 }
 
-async function goOn(page: Page): Promise<void> {
-  await page.getByRole('button', { name: 'It is covered, or gone. Go on' }).click();
-}
-
 async function answerFour(page: Page): Promise<void> {
   await page.getByLabel('The spot, in words').fill('roof, south edge by hatch 2');
-  await page.locator('[name=foundWhen][value=just-now]').check();
-  await page.locator('[name=sighting][value=mark]').check();
-  await page.locator('[name=anyoneHurt][value=no]').check();
+  await chooseAnswers(page);
 }
 
-const send = (page: Page) => page.locator('button[value=send]').last().click();
 const clientIdOf = (page: Page) => new URL(page.url()).searchParams.get('report') ?? '';
 async function receiptOn(page: Page): Promise<string> {
   await page.waitForURL(/\/received\//u);
@@ -81,7 +69,7 @@ test('a guest reports with a photo from a phone, gets a receipt, and follows it'
   await page.getByRole('link', { name: 'Follow this report' }).click();
   await page.getByRole('heading', { name: 'Your report is in. The first look is still to come' }).waitFor();
   await expectNoViolations(page);
-  const [row] = await sql<{ state: string; photos: number }[]>`select state, (select count(*)::int from photos where case_id = cases.id) as photos from cases where receipt = ${receipt}`;
+  const [row] = await stage.sql<{ state: string; photos: number }[]>`select state, (select count(*)::int from photos where case_id = cases.id) as photos from cases where receipt = ${receipt}`;
   expect(row).toEqual({ state: 'reported', photos: 1 });
 });
 
@@ -103,7 +91,7 @@ test('a photo goes as the camera made it, and smaller only when that was asked f
   await page.getByLabel(/Make the next photos smaller/u).check();
   await page.getByLabel('Photo files').setInputFiles(await large());
   await page.getByText('2, with the team').waitFor();
-  const rows = await sql`select bytes::int, width_px, height_px, made_smaller, exif->>'takenAtLocal' as taken, exif->>'camera' as camera from photos where report_client_id = ${clientIdOf(page)} order by position`;
+  const rows = await stage.sql`select bytes::int, width_px, height_px, made_smaller, exif->>'takenAtLocal' as taken, exif->>'camera' as camera from photos where report_client_id = ${clientIdOf(page)} order by position`;
   const taken = { taken: '2026-05-09T15:10:30', camera: 'None Box 1' };
   expect(rows.map((row) => ({ ...row }))).toEqual([
     { bytes: asItIs.buffer.byteLength, width_px: 3000, height_px: 1500, made_smaller: false, ...taken },
@@ -152,7 +140,7 @@ test('without signal the report waits, goes by itself when it returns, and is fi
   await expectNoViolations(page);
   await page.context().setOffline(false);
   await receiptOn(page);
-  expect(await sql`select 1 from cases where client_id = ${clientId}`).toHaveLength(1);
+  expect(await stage.sql`select 1 from cases where client_id = ${clientId}`).toHaveLength(1);
 });
 
 test('without a script the same page reports, photos and all, and keeps what was typed when something is missing', async () => {

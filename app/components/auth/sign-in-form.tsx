@@ -23,8 +23,8 @@ export function SignInForm({ next, typedEmail = '', formErrors = [], fieldErrors
       <TextInput field={password} label="Password" type="password" autoComplete="current-password" />
       <Button block>Sign in</Button>
       <p className="flex flex-wrap justify-between gap-x-4 gap-y-2 text-small">
-        <AppLink href="/forgotten-password" className="inline-flex min-h-6 items-center">Forgotten password</AppLink>
-        <AppLink href="/progress" className="inline-flex min-h-6 items-center">Follow a report by its code</AppLink>
+        <AppLink href="/forgotten-password" className="inline-flex min-h-(--target-height) items-center">Forgotten password</AppLink>
+        <AppLink href="/progress" className="inline-flex min-h-(--target-height) items-center">Follow a report by its code</AppLink>
       </p>
     </Form>
   );

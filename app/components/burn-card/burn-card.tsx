@@ -50,10 +50,10 @@ export function CaptionedBurnCard({ model, size, label, width, viewerZone, links
       <BurnCard model={model} size={size} {...(label === undefined ? {} : { label })} {...(width === undefined ? {} : { width })} />
       <div className="flex flex-wrap items-baseline justify-between gap-x-6 gap-y-1 pt-1">
         <p className="text-small text-second"><b className="font-semibold text-ink">{zone.date}</b>{zone.rest}</p>
-        {links ? <div className="flex flex-wrap gap-5 [&_a]:inline-flex [&_a]:min-h-6 [&_a]:items-center">{links}</div> : null}
+        {links ? <div className="flex flex-wrap gap-5 [&_a]:inline-flex [&_a]:min-h-(--target-height) [&_a]:items-center">{links}</div> : null}
       </div>
       <details>
-        <summary className="inline-flex min-h-8 items-center text-small underline decoration-ember decoration-2 underline-offset-4">Minute table</summary>
+        <summary className="inline-flex min-h-(--target-height) items-center text-small underline decoration-ember decoration-2 underline-offset-4">Minute table</summary>
         <MinuteTable model={model} />
       </details>
     </div>

@@ -37,7 +37,7 @@ function Group({ group, label }: { readonly group: FoldedDays; readonly label?: 
     <>
       {card(first)}
       <details>
-        <summary className="ml-[7.25rem] inline-flex min-h-8 items-center text-small underline decoration-ember decoration-2 underline-offset-4">{rest.length} {rest.length === 1 ? 'day' : 'days'} alike</summary>
+        <summary className="ml-[7.25rem] inline-flex min-h-(--target-height) items-center text-small underline decoration-ember decoration-2 underline-offset-4">{rest.length} {rest.length === 1 ? 'day' : 'days'} alike</summary>
         {rest.map(card)}
       </details>
     </>

@@ -1,7 +1,8 @@
 import { useEffect, useRef, useState } from 'react';
 import type { RefObject } from 'react';
 import { BurnCard } from './burn-card.tsx';
-import type { ScrubProps } from './scrub-card.tsx';
+import { PlayButton } from './play-button.tsx';
+import type { PlayedProps } from './scrub-card.tsx';
 import { minuteWords, ScrubRange } from './scrub-card.tsx';
 import { clockWords } from './wall-clock.ts';
 import { verdictWords } from './words.ts';
@@ -19,13 +20,13 @@ function useScrolledPast(element: RefObject<HTMLElement | null>): boolean {
   return past;
 }
 
-export interface ScrubBarsProps extends ScrubProps {
+export interface ScrubBarsProps extends PlayedProps {
   /** The large card; the bar at the top stands in for it once it is out of sight. */
   readonly card: RefObject<HTMLElement | null>;
 }
 
 /** The time stays at hand while the figures are read: a low card at the top of a desk, a bar with two steps at the foot of a phone. */
-export function ScrubBars({ card, ...props }: ScrubBarsProps) {
+export function ScrubBars({ card, playing, onPlay, ...props }: ScrubBarsProps) {
   const past = useScrolledPast(card);
   const { model, minutes, atUtc, onMinute } = props;
   const index = minutes.findIndex((minute) => minute.atUtc === atUtc);
@@ -39,8 +40,9 @@ export function ScrubBars({ card, ...props }: ScrubBarsProps) {
     <>
       {past ? (
         <div className="fixed-bar fixed inset-x-0 top-0 z-20 h-[86px] border-b-2 border-ink bg-paper px-10 pt-1 max-tablet:hidden" data-print="no">
-          <div className="mx-auto grid max-w-[1600px] grid-cols-[15rem_minmax(0,1fr)] items-center gap-6">
+          <div className="mx-auto grid max-w-[1600px] grid-cols-[15rem_5rem_minmax(0,1fr)] items-center gap-6">
             <p className="text-small leading-tight" aria-hidden="true">{minuteWords(minute, model.zone)}</p>
+            <PlayButton playing={playing} onToggle={onPlay} />
             <div className="relative">
               <BurnCard model={{ ...model, cursorUtc: minute.atUtc }} size="M" />
               <ScrubRange {...props} className="scrub-range top-0 !h-[68px]" />
@@ -48,12 +50,13 @@ export function ScrubBars({ card, ...props }: ScrubBarsProps) {
           </div>
         </div>
       ) : null}
-      <div className="fixed-bar fixed inset-x-0 bottom-0 z-20 flex min-h-[72px] items-center justify-between gap-3 border-t-2 border-ink bg-sheet px-4 py-2 tablet:hidden" data-print="no">
+      <div className="fixed-bar fixed inset-x-0 bottom-0 z-20 mb-0 flex min-h-[72px] items-center justify-between gap-3 border-t-2 border-ink bg-sheet px-4 py-2 tablet:hidden" data-print="no">
         <StepButton label="One minute earlier" d="M14 4L6 12L14 20" disabled={index <= 0} onPress={() => step(-1)} />
-        <p className="text-center text-small leading-tight" aria-live="polite">
+        <p className="text-center text-small leading-tight" aria-live={playing ? 'off' : 'polite'}>
           <b className="block text-body font-semibold">{clockWords(minute.atUtc, model.zone)}, {verdictWords[minute.verdict]}</b>
           {minute.verdict === 'sunlit' ? `sun ${minute.apparentElevationDeg.toFixed(1)}° up, ${minute.azimuthDeg.toFixed(1)}° true` : minute.reasonWords}
         </p>
+        <PlayButton playing={playing} onToggle={onPlay} signOnly />
         <StepButton label="One minute later" d="M10 4L18 12L10 20" disabled={index >= minutes.length - 1} onPress={() => step(1)} />
       </div>
     </>

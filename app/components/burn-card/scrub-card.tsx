@@ -1,6 +1,8 @@
+import { useEffect, useRef, useState } from 'react';
 import type { KeyboardEvent } from 'react';
 import { BurnCard } from './burn-card.tsx';
 import type { BurnCardModel } from './model.ts';
+import { PlayButton } from './play-button.tsx';
 import { scrubTo, windowParts } from './scrub.ts';
 import type { ScrubMinute } from './scrub.ts';
 import { clockWords } from './wall-clock.ts';
@@ -19,7 +21,12 @@ export interface ScrubProps {
   /** Told of each chosen minute, so that other drawings move in the same frame. */
   readonly onMinute: (atUtc: string) => void;
 }
-export interface ScrubCardProps extends ScrubProps {
+/** The line may also go through the window by itself. */
+export interface PlayedProps extends ScrubProps {
+  readonly playing: boolean;
+  readonly onPlay: () => void;
+}
+export interface ScrubCardProps extends PlayedProps {
   readonly label?: string;
 }
 
@@ -31,8 +38,8 @@ export function minuteWords(minute: SunAtMinute, zone: string): string {
   return `${clockWords(minute.atUtc, zone)}, ${verdictWords[minute.verdict]}${why}; sun ${minute.apparentElevationDeg.toFixed(1)}° up, ${minute.azimuthDeg.toFixed(1)}°`;
 }
 
-/** A large card whose blue line is moved by dragging, by keys, or by typing a time. */
-export function ScrubCard({ label, ...props }: ScrubCardProps) {
+/** A large card whose blue line is moved by dragging, by keys, by typing a time, or goes by itself. */
+export function ScrubCard({ label, playing, onPlay, ...props }: ScrubCardProps) {
   const { model, minutes, atUtc, onMinute } = props;
   const index = indexOf(minutes, atUtc);
   const minute = minutes[index];
@@ -45,10 +52,26 @@ export function ScrubCard({ label, ...props }: ScrubCardProps) {
       </div>
       <div data-print="no" className="flex flex-wrap items-center gap-x-4 gap-y-1 text-small">
         <JumpToTime minutes={minutes} zone={model.zone} index={index} choose={(wanted) => onMinute(minutes[wanted]?.atUtc ?? atUtc)} />
+        <span className="max-tablet:hidden"><PlayButton playing={playing} onToggle={onPlay} /></span>
         <span aria-hidden="true">{minuteWords(minute, model.zone)}</span>
       </div>
+      <StoppedAt playing={playing} words={minuteWords(minute, model.zone)} />
     </div>
   );
+}
+
+/** Where the line came to rest after it went by itself, read out once; moved by hand, the slider says its own value. */
+function StoppedAt({ playing, words }: { readonly playing: boolean; readonly words: string }) {
+  const wasPlaying = useRef(false);
+  const [stoppedAt, setStoppedAt] = useState('');
+  useEffect(() => {
+    if (playing) setStoppedAt('');
+    else if (wasPlaying.current) setStoppedAt(words);
+    wasPlaying.current = playing;
+    // Only starting and stopping speak; the words of the minutes between do not.
+    // eslint-disable-next-line react-hooks/exhaustive-deps
+  }, [playing]);
+  return <p role="status" className="sr-only">{stoppedAt}</p>;
 }
 
 /** The slider that lies over a card, from end to end of the window. */

@@ -82,7 +82,7 @@ export function YearRibbonHead({ fromOn, months = 12, todayOn }: RibbonSpan & { 
         return (
           <g key={first} fontSize="12" textAnchor="middle">
             {showsYear ? <text x={middle} y="10" className="fill-ink font-semibold">{month.getUTCFullYear()}</text> : null}
-            <text x={middle} y="24" className="fill-second font-semibold">{monthNames[month.getUTCMonth()]}</text>
+            <text x={middle} y="24" className="fill-second font-semibold">{monthNames[month.getUTCMonth()]?.slice(0, 1)}<tspan className="max-tablet:hidden">{monthNames[month.getUTCMonth()]?.slice(1)}</tspan></text>
           </g>
         );
       })}

@@ -59,7 +59,7 @@ export function Notes({ account, problem }: { readonly account: CaseAccountView;
 export function PhotoStrip({ photos, count, casePath }: { readonly photos: readonly PhotoStripView[]; readonly count: number; readonly casePath: string }) {
   return (
     <section aria-labelledby="photos-heading">
-      <SectionHeading id="photos-heading" note={count > 0 ? `${photos.length} of ${count}, view copies` : undefined} aside={<AppLink href={`${casePath}/photos`} className="inline-flex min-h-8 items-center text-small">All photos and checks</AppLink>}>Photos</SectionHeading>
+      <SectionHeading id="photos-heading" note={count > 0 ? `${photos.length} of ${count}, view copies` : undefined} aside={<AppLink href={`${casePath}/photos`} className="inline-flex min-h-(--target-height) items-center text-small">All photos and checks</AppLink>}>Photos</SectionHeading>
       {count === 0 ? <p className="text-second">None yet.</p> : (
         <ul className="grid grid-cols-2 gap-4 tablet:grid-cols-4">
           {photos.map((photo) => (

@@ -55,5 +55,5 @@ function StateAndReturn({ head }: { readonly head: CaseHeaderView }) {
 
 function CardLinks({ head, base }: { readonly head: CaseHeaderView; readonly base: string }) {
   if (head.reconstructionNumber === null) return null;
-  return <AppLink href={`${base}/reconstructions/${head.reconstructionNumber}`} className="inline-flex min-h-8 items-center text-small">Open the reconstruction</AppLink>;
+  return <AppLink href={`${base}/reconstructions/${head.reconstructionNumber}`} className="inline-flex min-h-(--target-height) items-center text-small">Open the reconstruction</AppLink>;
 }

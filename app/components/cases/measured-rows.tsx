@@ -28,7 +28,7 @@ function MeasuredRow({ of, field, stamp }: { readonly of: SceneField; readonly f
   return (
     <fieldset id={`${id}-row`} className={`border-b border-hair py-2 ${hasErrors(value) ? 'border-l-5 border-l-ink pl-3' : ''}`}>
       <legend className="sr-only">{of.label}</legend>
-      <div className="grid grid-cols-[minmax(0,1fr)_3.25rem_minmax(0,1fr)] items-center gap-x-2 gap-y-1 tablet:grid-cols-[minmax(0,1fr)_5.5rem_3rem_4.5rem_8.5rem_12.5rem]">
+      <div className="grid grid-cols-[minmax(0,1fr)_3.25rem_minmax(0,1fr)] items-center gap-x-2 gap-y-1 tablet:grid-cols-[minmax(0,1fr)_5.5rem_3rem_4.5rem_8.5rem_14rem]">
         <div className="max-tablet:col-span-3">
           <label htmlFor={id} className="font-medium">{of.label}</label>
           {of.help ? <span className="block text-axis text-second" id={fieldIds(value).helpId}>{of.help}</span> : null}

@@ -64,7 +64,7 @@ function ClosingFields({ field }: { readonly field: FieldOf }) {
   return (
     <>
       <TextArea field={field('lesson')} label="Lesson for other sites" rows={3} help="No names. What should somebody look for elsewhere?" />
-      <Select field={field('externalReports')} label="Reports to outside bodies" emptyLabel="Choose after checking the local rule" options={[{ value: 'Checked: not needed.', label: 'Checked: not needed' }, { value: 'Checked: made.', label: 'Checked: made' }]} />
+      <Select field={field('externalReports')} label="Reports to outside bodies" emptyLabel="Choose" help="Check the local rule first." options={[{ value: 'Checked: not needed.', label: 'Checked: not needed' }, { value: 'Checked: made.', label: 'Checked: made' }]} />
       <TextArea field={field('effectivenessWaiver')} label="If an effect was not shown: why the case may close" rows={2} />
     </>
   );

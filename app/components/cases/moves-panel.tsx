@@ -3,6 +3,7 @@ import { AppLink } from '#app/components/ui/app-link.tsx';
 import { Button } from '#app/components/ui/button.tsx';
 import { TickLine } from '#app/components/ui/tick-line.tsx';
 import type { CaseMovesView } from '#app/domain/case-view.ts';
+import { fieldOfNeed } from '#app/domain/move-checklist.ts';
 import { formFields } from './form-fields.ts';
 import type { RefusedForm } from './form-fields.ts';
 import { MoveFields } from './move-fields.tsx';
@@ -56,12 +57,17 @@ function isElsewhere(move: OpenMove, here: MovesPanelProps['here']): boolean {
 
 function OneMove({ move, first, here, casePath, version, problem, proposedDay, mainCases }: MovesPanelProps & { readonly move: OpenMove; readonly first: boolean }) {
   const intent = `move-${move.id}`;
-  const { field, refused } = formFields(intent, problem);
+  const { field: plainField, refused } = formFields(intent, problem);
+  const field: typeof plainField = (name, stored) => {
+    const needed = refused?.formErrors.filter((sentence) => fieldOfNeed(move.id, sentence) === name) ?? [];
+    const own = plainField(name, stored);
+    return needed.length > 0 ? { ...own, errors: [...(own.errors ?? []), ...needed] } : own;
+  };
   const needs = move.needs.length > 0 ? <div className="pb-1 text-small">{move.needs.map((need) => <TickLine key={need.label} done={need.done}>{need.label}</TickLine>)}</div> : null;
   if (isElsewhere(move, here)) {
     return (
       <div className="border-b border-hair py-2">
-        <AppLink href={`${casePath}/${move.place === 'findings' ? 'findings' : 'triage'}`} className="inline-flex min-h-8 items-center font-medium">{move.label}<span className="sr-only">{linkWords[move.place]}</span></AppLink>
+        <AppLink href={`${casePath}/${move.place === 'findings' ? 'findings' : 'triage'}`} className="inline-flex min-h-(--target-height) items-center font-medium">{move.label}<span className="sr-only">{linkWords[move.place]}</span></AppLink>
         {needs}
       </div>
     );
@@ -69,7 +75,7 @@ function OneMove({ move, first, here, casePath, version, problem, proposedDay, m
   const look = move.ready ? (first ? 'filled' : 'outlined') : 'waiting';
   return (
     <details open={refused !== undefined || (first && move.id !== 'return')} className="border-b border-hair py-1.5" id={intent}>
-      <summary className="flex min-h-11 items-center font-medium desk:min-h-9">{move.label}</summary>
+      <summary className="inline-flex min-h-11 items-center font-medium underline decoration-ember decoration-2 underline-offset-4 desk:min-h-9">{move.label}</summary>
       {needs}
       <Form method="post" className="space-y-3 pt-1 pb-3" preventScrollReset>
         <Refusal refused={refused} />

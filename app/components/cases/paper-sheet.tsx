@@ -24,7 +24,7 @@ export function PaperSheet(props: PaperSheetProps) {
   return (
     // A frame that scrolls must take the keyboard.
     // eslint-disable-next-line jsx-a11y/no-noninteractive-tabindex
-    <div className="relative space-y-6 overflow-x-auto print:space-y-0 print:overflow-visible" role="region" aria-label="Sheet for paper" tabIndex={0}>
+    <div data-print="alone" className="relative space-y-6 overflow-x-auto print:space-y-0 print:overflow-visible" role="region" aria-label="Sheet for paper" tabIndex={0}>
       <section className={`paper-sheet ${props.isLetter ? 'paper-letter' : ''}`} aria-label="Sheet 1 of 2">
         <SheetHead {...props} page={1} />
         <Before {...props} />
@@ -55,7 +55,7 @@ export function PaperSheet(props: PaperSheetProps) {
 function SheetHead({ caseNumber, place, page }: PaperSheetProps & { readonly page: 1 | 2 }) {
   return (
     <div className="flex items-center justify-between gap-[4mm] border-b-[0.6mm] border-[#1c2430] pb-[1.5mm]">
-      <span className="flex items-center gap-[2mm] font-semibold"><LogoMark /> Scorchline measurement sheet</span>
+      <span className="flex flex-none items-center gap-[2mm] font-semibold"><LogoMark /> Scorchline measurement sheet</span>
       <span className="min-w-0 truncate">Case {caseNumber}, {place}</span>
       <span className="flex-none">Sheet {page} of 2</span>
     </div>
@@ -70,7 +70,7 @@ function Before({ code, sunWords, declination }: PaperSheetProps) {
         <p>{cautions.eyes.split('. ').slice(0, 3).join('. ')}.</p>
         <p><b className="font-semibold">Sun here:</b> {sunWords} {declination}</p>
       </div>
-      <div className="w-[38mm] flex-none space-y-[2mm]">
+      <div className="w-[36mm] flex-none space-y-[2mm]">
         {['Measured by', 'Date and start', 'Phone clock, true time'].map((label) => <p key={label} className="border-b-[0.3mm] border-[#1c2430] pb-[4mm]">{label}</p>)}
       </div>
       <div className="flex-none text-center">
@@ -95,15 +95,15 @@ function Line({ row }: { readonly row: SheetRow }) {
   return (
     <tr>
       <td className="w-[6mm] font-serif">{row.number}</td>
-      <th scope="row" className="w-[50mm] !leading-[8.5pt]"><span className="font-semibold">{row.label}</span>{row.help ? <span className="block text-[6.5pt] leading-[7.5pt]">{row.help}</span> : null}</th>
-      <td className="w-[62mm]">
+      <th scope="row" className="paper-close w-[53mm]"><span className="font-semibold">{row.label}</span>{row.help ? <span className="block">{row.help}</span> : null}</th>
+      <td className="w-[60mm]">
         <Box width={wide && row.choices.length < 2 ? 30 : 19}>{row.value}</Box> {row.unit}
         {row.bearing ? <>{['true', 'mag.', 'grid'].map((north) => <Tick key={north} on={north === 'true' && row.value !== ''}>{north}</Tick>)}</> : null}
         {row.choices.map((choice) => <Tick key={choice}>{choice}</Tick>)}
       </td>
-      <td className="w-[13mm]"><Box width={11}>{row.plusMinus}</Box></td>
-      <td className="w-[24mm]">{row.method ? <span className="block text-[7pt] leading-[8pt]">{row.method}</span> : <Box width={22} />}</td>
-      <td className="w-[25mm]">{row.by ? <span className="block text-[7pt] leading-[8pt]">{row.by}<br />{row.on}</span> : <Box width={24} />}</td>
+      <td className="w-[12mm]"><Box width={10}>{row.plusMinus}</Box></td>
+      <td className="paper-close w-[26mm]">{row.method ? <span className="block">{row.method}</span> : <Box width={24} />}</td>
+      <td className="paper-close w-[23mm]">{row.by ? <span className="block">{row.by}<br />{row.on}</span> : <Box width={22} />}</td>
     </tr>
   );
 }
@@ -113,7 +113,7 @@ function Box({ width, children }: { readonly width: number; readonly children?: 
 }
 
 function Tick({ on = false, children }: { readonly on?: boolean; readonly children: ReactNode }) {
-  return <span className="ml-[1.5mm] whitespace-nowrap"><span className="paper-tick" style={on ? { background: '#1c2430' } : undefined} /> {children}</span>;
+  return <span className="ml-[1.2mm] whitespace-nowrap"><span className="paper-tick" style={on ? { background: '#1c2430' } : undefined} /> {children}</span>;
 }
 
 function Sketch({ gridMm }: { readonly gridMm: number }) {
@@ -165,7 +165,7 @@ function Weather() {
 
 function SheetFoot({ caseNumber, version, printed }: PaperSheetProps) {
   return (
-    <p className="mt-[2mm] flex justify-between border-t-[0.4mm] border-[#1c2430] pt-[1mm] text-[7.5pt]">
+    <p className="mt-auto flex justify-between border-t-[0.4mm] border-[#1c2430] pt-[1mm]">
       <span>Same order as on the screen. Photograph the paper as evidence.</span>
       <span className="font-mono">{caseNumber}, version {version}, {printed}</span>
     </p>

@@ -1,4 +1,4 @@
-import { roundLengthM } from '#app/components/charts/scale-drawing.ts';
+import { roundLengthM } from '#app/domain/scale-drawing.ts';
 import { SectionHeading } from '#app/components/ui/page-title.tsx';
 import type { SimilarCaseView, WhereView } from '#app/domain/case-view.ts';
 

@@ -1,9 +1,10 @@
 import { useId } from 'react';
+import { incomingRays, markHalfDrawn, targetFace } from '#app/domain/beam-shape.ts';
+import type { BeamAt, BeamShape } from '#app/domain/beam-shape.ts';
 import type { BeamView } from '#app/domain/run-beam.ts';
-import type { BeamAt, BeamShape } from './beam-shape.ts';
+import { metresWords, pathOf, roundLengthM, scaleFrame } from '#app/domain/scale-drawing.ts';
+import type { Flat, ScaleFrame } from '#app/domain/scale-drawing.ts';
 import { HatchPattern, PlotText } from './plot.tsx';
-import { metresWords, pathOf, roundLengthM, scaleFrame } from './scale-drawing.ts';
-import type { Flat, ScaleFrame } from './scale-drawing.ts';
 
 export interface BeamDrawingProps {
   readonly width: number;
@@ -49,22 +50,14 @@ interface Layer {
   readonly frame: ScaleFrame;
 }
 
-const rays = [-1, -0.5, 0, 0.5, 1] as const;
-
 /** Light that comes in, parallel, and the beam beyond: its outline holds four fifths of the light. */
 function Light({ at, shape, frame }: Layer & { readonly at: BeamAt }) {
-  const [sunX, sunY] = at.towardsSun;
   const farM = (frame.widthPx + frame.heightPx) / frame.pxPerM;
   return (
     <g className="stroke-clear">
       {at.envelope.length === 0 ? null : <path d={`${pathOf(frame, at.envelope)}Z`} className="fill-clear" fillOpacity="0.2" strokeWidth="1" />}
       <path d={pathOf(frame, at.axis)} strokeWidth="1.2" strokeDasharray="8 3 2 3" />
-      {rays.map((share) => {
-        const off = share * at.halfApertureM * 0.96;
-        const stopM = shape.ball ? Math.sqrt(Math.max(0, shape.ball.radiusM ** 2 - off ** 2)) : 0;
-        const from: Flat = [shape.entry[0] - sunY * off + sunX * stopM, shape.entry[1] + sunX * off + sunY * stopM];
-        return <path key={share} d={pathOf(frame, [from, [from[0] + sunX * farM, from[1] + sunY * farM]])} strokeWidth="1" />;
-      })}
+      {incomingRays(shape, at, farM).map((ray, index) => <path key={index} d={pathOf(frame, ray)} strokeWidth="1" />)}
     </g>
   );
 }
@@ -79,26 +72,22 @@ function Optic({ shape, frame }: Layer) {
   );
 }
 
-const thickPx = 9;
-
 /** The surface that was hit: hatched behind its face, drawn a little way to both sides of the mark. */
 function Target({ beam, shape, frame, hatch }: Layer & { readonly beam: BeamView; readonly hatch: string }) {
-  const { mark, surface } = shape;
+  const { mark } = shape;
   if (!mark) return null;
   const [x, y] = [frame.x(mark[0]), frame.y(mark[1])];
-  const markPx = Math.max(3, ((beam.mark?.lengthMm ?? 0) / 2000) * frame.pxPerM);
-  if (!surface) return <g><circle cx={x} cy={y} r={Math.max(4, Math.min(markPx, 40))} fill={hatch} className="stroke-burn" strokeWidth="1.5" /><PlotText x={x + 10} y={y - 8} tone="burn" bold>mark</PlotText></g>;
-  const half = Math.max(70, markPx + 20);
-  const [ax, ay] = [surface.along[0], -surface.along[1]];
-  const [bx, by] = [-surface.outward[0] * thickPx, surface.outward[1] * thickPx];
-  const face = [x - ax * half, y - ay * half, x + ax * half, y + ay * half] as const;
+  const lengthMm = beam.mark?.lengthMm ?? null;
+  const target = targetFace(shape, lengthMm, frame, { leastHalf: 70, thick: 9 });
+  if (!target) return <g><circle cx={x} cy={y} r={Math.max(4, Math.min(markHalfDrawn(lengthMm, frame), 40))} fill={hatch} className="stroke-burn" strokeWidth="1.5" /><PlotText x={x + 10} y={y - 8} tone="burn" bold>mark</PlotText></g>;
+  const { face: [from, to], back: [backFrom, backTo], mark: [markFrom, markTo] } = target;
   const wordsLeft = x > frame.widthPx * 0.72;
   const away = wordsLeft ? -14 : 14;
   return (
     <g>
-      <path d={`M${face[0]} ${face[1]}L${face[2]} ${face[3]}l${bx} ${by}L${face[0] + bx} ${face[1] + by}Z`} fill={hatch} className="stroke-none" />
-      <line x1={face[0]} y1={face[1]} x2={face[2]} y2={face[3]} className="stroke-burn" strokeWidth="1.9" />
-      <line x1={x - ax * markPx} y1={y - ay * markPx} x2={x + ax * markPx} y2={y + ay * markPx} className="stroke-burn" strokeWidth="6" />
+      <path d={`M${from[0]} ${from[1]}L${to[0]} ${to[1]}L${backTo[0]} ${backTo[1]}L${backFrom[0]} ${backFrom[1]}Z`} fill={hatch} className="stroke-none" />
+      <line x1={from[0]} y1={from[1]} x2={to[0]} y2={to[1]} className="stroke-burn" strokeWidth="1.9" />
+      <line x1={markFrom[0]} y1={markFrom[1]} x2={markTo[0]} y2={markTo[1]} className="stroke-burn" strokeWidth="6" />
       <PlotText x={x + away} y={Math.min(frame.heightPx - 24, y + 26)} anchor={wordsLeft ? 'end' : 'start'} tone="burn" bold>mark</PlotText>
     </g>
   );

@@ -1,41 +1,12 @@
 import { Numbers } from '#app/components/ui/numbers.tsx';
-import { NumberTable, plainNumber } from './number-table.tsx';
+import { discWords, fluxSentence, halfSpanMm, scaleBarMm } from '#app/domain/flux-discs.ts';
+import type { FluxDiscsData } from '#app/domain/flux-discs.ts';
+import { plainNumber } from '#app/domain/plain-number.ts';
+import { NumberTable } from './number-table.tsx';
 import { ChartFrame, PlotSvg } from './plot.tsx';
 
-interface FluxBand {
-  readonly low: number;
-  readonly mid: number;
-  readonly high: number;
-}
-export interface FluxDiscRow {
-  /** "sun image", "1 mm", "5 mm" */
-  readonly disc: string;
-  readonly diameterMm: number;
-  readonly centre: string;
-  readonly concentration: FluxBand;
-  readonly fluxKwm2: FluxBand;
-}
-export interface FluxDiscsData {
-  readonly discs: readonly FluxDiscRow[];
-  /** Contours of the flux map, where rays were traced: radius from the hot spot at 1, 3, 10 … kW/m². */
-  readonly rings?: readonly { readonly fluxKwm2: number; readonly radiusMm: number }[];
-  /** Way of the spot over the target, from the hot spot, right and up as one faces the target. [mm] */
-  readonly track?: { readonly points: readonly (readonly [rightMm: number, upMm: number])[]; readonly words: string } | null;
-  /** Turn of a line focus in the target's plane, anticlockwise from level. [°] */
-  readonly lineTurnDeg?: number;
-  /** A line focus is shown as a band, never as a disc. */
-  readonly focusKind: 'point' | 'line';
-  /** Directions of the left and right edge, such as W and E. */
-  readonly edges?: { readonly left: string; readonly right: string };
-}
 export interface FluxDiscsProps extends FluxDiscsData {
   readonly width: number;
-}
-
-const roundScaleMm = [0.5, 1, 2, 5, 10, 20, 50, 100, 200, 500, 1000] as const;
-
-function halfSpanMm({ discs, rings = [] }: FluxDiscsData): number {
-  return 1.25 * Math.max(1, ...discs.map((disc) => disc.diameterMm / 2), ...rings.map((ring) => ring.radiusMm));
 }
 
 /** Averaging discs to scale over the rings of the flux map; each figure names its disc. */
@@ -91,7 +62,7 @@ function Track({ data, px }: PartProps) {
 }
 
 function ScaleBar({ px, side, halfMm }: { readonly px: (mm: number) => number; readonly side: number; readonly halfMm: number }) {
-  const mm = roundScaleMm.filter((one) => one <= halfMm * 0.7).at(-1) ?? 0.5;
+  const mm = scaleBarMm(halfMm);
   const y = side - 10;
   return (
     <g>
@@ -112,17 +83,13 @@ function Callouts({ data, px, centre, side, width }: PartProps & { readonly cent
           <g key={`${disc.disc}${disc.centre}`}>
             <line x1={centre + edge} y1={centre - edge} x2={x - 4} y2={y - 4} className="stroke-second" />
             <text x={x} y={y} className="fill-ink font-semibold">{plainNumber(disc.fluxKwm2.mid)} kW/m²</text>
-            <text x={x} y={y + 16} className="fill-second">{disc.disc === 'sun-image' ? "sun's image" : `${disc.disc} disc`}</text>
+            <text x={x} y={y + 16} className="fill-second">{discWords(disc.disc)}</text>
           </g>
         );
       })}
       {data.track ? <text x={x} y={24 + data.discs.length * 46} className="fill-second">{data.track.words}</text> : null}
     </g>
   );
-}
-
-function fluxSentence(data: FluxDiscsData): string {
-  return data.discs.map((disc) => `${plainNumber(disc.fluxKwm2.mid)} kW/m² averaged over the ${disc.disc} disc, ${plainNumber(disc.fluxKwm2.low)} to ${plainNumber(disc.fluxKwm2.high)}`).join('; ');
 }
 
 export function FluxDiscsFigure({ figure, title, note, ...data }: FluxDiscsData & { readonly figure?: string; readonly title: string; readonly note?: string }) {
@@ -138,7 +105,7 @@ export function FluxDiscsFigure({ figure, title, note, ...data }: FluxDiscsData 
           caption={title}
           columns={[{ head: 'Averaged over' }, { head: 'Centred on' }, { head: 'Suns', numeric: true }, { head: 'kW/m²', numeric: true }, { head: '5 to 95', numeric: true }]}
           rows={data.discs.map((disc) => [
-            `${disc.disc === 'sun-image' ? "sun's image" : `${disc.disc} disc`}, ${plainNumber(disc.diameterMm)} mm`, disc.centre, plainNumber(disc.concentration.mid), plainNumber(disc.fluxKwm2.mid), `${plainNumber(disc.fluxKwm2.low)} to ${plainNumber(disc.fluxKwm2.high)}`,
+            `${discWords(disc.disc)}, ${plainNumber(disc.diameterMm)} mm`, disc.centre, plainNumber(disc.concentration.mid), plainNumber(disc.fluxKwm2.mid), `${plainNumber(disc.fluxKwm2.low)} to ${plainNumber(disc.fluxKwm2.high)}`,
           ])}
         />
       }

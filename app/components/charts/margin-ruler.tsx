@@ -1,5 +1,5 @@
 import { scaleLinear, scaleLog } from 'd3-scale';
-import { plainNumber } from './number-table.tsx';
+import { plainNumber } from '#app/domain/plain-number.ts';
 
 export interface MarginRulerProps {
   /** The measured or computed value with its range. */

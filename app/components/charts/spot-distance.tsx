@@ -2,25 +2,19 @@ import { useId } from 'react';
 import { scaleLinear } from 'd3-scale';
 import { area } from 'd3-shape';
 import { Numbers } from '#app/components/ui/numbers.tsx';
-import { NumberTable, plainNumber } from './number-table.tsx';
+import { plainNumber } from '#app/domain/plain-number.ts';
+import { spotReach, spotSentence } from '#app/domain/spot-distance.ts';
+import type { SpotDistanceData } from '#app/domain/spot-distance.ts';
+import { NumberTable } from './number-table.tsx';
 import { ChartFrame, HatchPattern, innerOf, PlotSvg, PlotText, XAxis, YAxis } from './plot.tsx';
 import type { PlotBox } from './plot.tsx';
-
-export interface SpotDistanceData {
-  readonly points: readonly { readonly distanceM: number; readonly diameterMm: number; readonly fluxKwm2: number }[];
-  /** Stretch along the beam in which the flux is at or above a threshold. */
-  readonly dangerZone?: { readonly thresholdKwm2: number; readonly nearM: number; readonly farM: number } | null;
-  readonly markDistanceM?: number | null;
-  readonly focusKind: 'point' | 'line';
-}
 
 /** The beam from the side: its width against distance from the optic, the mark, and where it is strong. */
 export function SpotDistance({ width, ...data }: SpotDistanceData & { readonly width: number }) {
   const id = useId();
   const box: PlotBox = { widthPx: width, heightPx: width < 400 ? 220 : 240, left: 44, right: 10, top: 24, bottom: 40 };
   const inner = innerOf(box);
-  const far = Math.max(...data.points.map((point) => point.distanceM), data.markDistanceM ?? 0, 1e-6);
-  const widest = Math.max(...data.points.map((point) => point.diameterMm), 1e-6);
+  const { farM: far, widestMm: widest } = spotReach(data);
   const inMm = far < 2;
   const x = scaleLinear([0, far], [inner.x1, inner.x2]);
   const y = scaleLinear([-widest / 2, widest / 2], [inner.y2, inner.y1]).nice(4);
@@ -44,12 +38,6 @@ export function SpotDistance({ width, ...data }: SpotDistanceData & { readonly w
       <text x={inner.x1} y={box.heightPx - 4} className="fill-second">from the optic; upright: half the {data.focusKind === 'line' ? 'line' : 'spot'} width, mm</text>
     </PlotSvg>
   );
-}
-
-function spotSentence({ points, dangerZone }: SpotDistanceData): string {
-  const tightest = points.reduce<SpotDistanceData['points'][number] | null>((best, point) => (best === null || point.diameterMm < best.diameterMm ? point : best), null);
-  const zone = dangerZone ? ` At or above ${plainNumber(dangerZone.thresholdKwm2)} kW/m² from ${plainNumber(dangerZone.nearM)} to ${plainNumber(dangerZone.farM)} m.` : '';
-  return tightest ? `Narrowest ${plainNumber(tightest.diameterMm)} mm at ${plainNumber(tightest.distanceM)} m from the optic.${zone}` : 'No beam was computed.';
 }
 
 export function SpotDistanceFigure({ figure, title, note, ...data }: SpotDistanceData & { readonly figure?: string; readonly title: string; readonly note?: string }) {

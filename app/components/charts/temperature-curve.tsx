@@ -2,28 +2,12 @@ import { useId } from 'react';
 import { scaleLinear } from 'd3-scale';
 import { area, line } from 'd3-shape';
 import { Numbers } from '#app/components/ui/numbers.tsx';
-import { NumberTable, plainNumber } from './number-table.tsx';
+import { secondsWords, temperatureRows, temperatureSentence } from '#app/domain/temperature-curve.ts';
+import type { TemperatureCurveData } from '#app/domain/temperature-curve.ts';
+import { NumberTable } from './number-table.tsx';
 import { ChartFrame, HatchPattern, innerOf, PlotSvg, PlotText, XAxis, YAxis } from './plot.tsx';
 import type { PlotBox } from './plot.tsx';
 import { textWidthPx } from './text-width.ts';
-
-interface Band {
-  readonly low: number;
-  readonly mid: number;
-  readonly high: number;
-}
-export interface TemperatureCurveData {
-  readonly points: readonly { readonly timeS: number; readonly celsius: Band }[];
-  /** Published ranges of the material, hatched; unverified ones say so. */
-  readonly published?: readonly { readonly label: string; readonly fromC: number; readonly toC: number; readonly verified: boolean }[];
-  /** What the engine says of each way to respond, with seconds of steady sun on one point. */
-  readonly outcomes?: readonly { readonly label: string; readonly answer: string; readonly timeS: Band | null }[];
-}
-
-function seconds(value: number): string {
-  if (value >= 5400) return `${plainNumber(value / 3600)} h`;
-  return value >= 120 ? `${plainNumber(value / 60)} min` : `${plainNumber(value)} s`;
-}
 
 /** Surface temperature under steady sun: middle line in its band, published ranges hatched, outcomes as bars below. */
 export function TemperatureCurve({ width, ...data }: TemperatureCurveData & { readonly width: number }) {
@@ -78,7 +62,7 @@ function OutcomeBar({ outcome, y, x, longest, inner, narrow }: { readonly narrow
   const clip = (value: number) => Math.min(inner.x2, x(Math.min(longest, value)));
   const beyond = time.mid > longest;
   const after = clip(time.high);
-  const words = `${outcome.label}, ${outcome.answer}${beyond ? `, ${seconds(time.mid)}` : ''}`;
+  const words = `${outcome.label}, ${outcome.answer}${beyond ? `, ${secondsWords(time.mid)}` : ''}`;
   const wordsFit = after + 8 + textWidthPx(words, 12) < inner.x2 + 8;
   return (
     <g>
@@ -89,15 +73,7 @@ function OutcomeBar({ outcome, y, x, longest, inner, narrow }: { readonly narrow
   );
 }
 
-function temperatureSentence(data: TemperatureCurveData): string {
-  const last = data.points.at(-1);
-  if (!last) return 'No temperature was computed.';
-  return `After ${seconds(last.timeS)} of steady sun ${plainNumber(last.celsius.mid)} °C, ${plainNumber(last.celsius.low)} to ${plainNumber(last.celsius.high)}.`;
-}
-
 export function TemperatureCurveFigure({ figure, title, note, ...data }: TemperatureCurveData & { readonly figure?: string; readonly title: string; readonly note?: string }) {
-  const every = Math.max(1, Math.ceil(data.points.length / 16));
-  const rows = data.points.filter((_, index) => index % every === 0 || index === data.points.length - 1);
   return (
     <Numbers
       csv="temperature"
@@ -107,8 +83,8 @@ export function TemperatureCurveFigure({ figure, title, note, ...data }: Tempera
       picture={<ChartFrame draw={(width) => <TemperatureCurve width={width} {...data} />} />}
       numbers={
         <div className="space-y-4">
-          <NumberTable caption={title} columns={[{ head: 'After' }, { head: 'Middle, °C', numeric: true }, { head: '5 to 95, °C', numeric: true }]} rows={rows.map((point) => [seconds(point.timeS), Math.round(point.celsius.mid), `${Math.round(point.celsius.low)} to ${Math.round(point.celsius.high)}`])} />
-          {data.outcomes ? <NumberTable caption={`${title}: outcomes`} columns={[{ head: 'Outcome' }, { head: 'Answer' }, { head: 'Steady sun on one point', numeric: true }]} rows={data.outcomes.map((outcome) => [outcome.label, outcome.answer, outcome.timeS ? `${seconds(outcome.timeS.mid)} (${seconds(outcome.timeS.low)} to ${seconds(outcome.timeS.high)})` : 'no time'])} /> : null}
+          <NumberTable caption={title} columns={[{ head: 'After' }, { head: 'Middle, °C', numeric: true }, { head: '5 to 95, °C', numeric: true }]} rows={temperatureRows(data)} />
+          {data.outcomes ? <NumberTable caption={`${title}: outcomes`} columns={[{ head: 'Outcome' }, { head: 'Answer' }, { head: 'Steady sun on one point', numeric: true }]} rows={data.outcomes.map((outcome) => [outcome.label, outcome.answer, outcome.timeS ? `${secondsWords(outcome.timeS.mid)} (${secondsWords(outcome.timeS.low)} to ${secondsWords(outcome.timeS.high)})` : 'no time'])} /> : null}
         </div>
       }
     />

@@ -1,6 +1,7 @@
 import { scaleLinear } from 'd3-scale';
 import { Numbers } from '#app/components/ui/numbers.tsx';
-import { NumberTable, plainNumber } from './number-table.tsx';
+import { plainNumber } from '#app/domain/plain-number.ts';
+import { NumberTable } from './number-table.tsx';
 
 export interface TornadoRow {
   /** "Bearing ±3°" */

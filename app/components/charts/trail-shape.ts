@@ -1,7 +1,7 @@
+import type { RunMinute } from '#app/domain/beam-words.ts';
 import type { BeamView } from '#app/domain/run-beam.ts';
+import type { Flat } from '#app/domain/scale-drawing.ts';
 import { dot, fromAzimuthElevation } from '#app/physics/vector.ts';
-import type { RunMinute } from './beam-figures.tsx';
-import type { Flat } from './scale-drawing.ts';
 
 /** Stretch of the spot's way with one result; points in mm from the middle of the mark, right and up. */
 export interface TrailStretch {

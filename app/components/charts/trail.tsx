@@ -1,12 +1,13 @@
 import { clockWords } from '#app/components/burn-card/wall-clock.ts';
 import { verdictWords } from '#app/components/burn-card/words.ts';
 import { Numbers } from '#app/components/ui/numbers.tsx';
+import { plainNumber } from '#app/domain/plain-number.ts';
 import type { BeamView } from '#app/domain/run-beam.ts';
+import { metresWords, pathOf, roundLengthM, scaleFrame } from '#app/domain/scale-drawing.ts';
+import type { Flat, ScaleFrame } from '#app/domain/scale-drawing.ts';
 import type { BeamFigureProps } from './beam-figures.tsx';
-import { NumberTable, plainNumber } from './number-table.tsx';
+import { NumberTable } from './number-table.tsx';
 import { ChartFrame, PlotText } from './plot.tsx';
-import { metresWords, pathOf, roundLengthM, scaleFrame } from './scale-drawing.ts';
-import type { Flat, ScaleFrame } from './scale-drawing.ts';
 import { trailExtent, trailShape } from './trail-shape.ts';
 import type { TrailShape } from './trail-shape.ts';
 import { textWidthPx } from './text-width.ts';

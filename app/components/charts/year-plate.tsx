@@ -1,10 +1,10 @@
 import { Numbers } from '#app/components/ui/numbers.tsx';
 import { dateWords, monthNames } from '#app/components/burn-card/wall-clock.ts';
+import { clockOfMinutes, dayIndex, litBands, plateGrid, plateHours, plateMonths, platePieces, plateSentence, yearStart } from '#app/domain/year-plate.ts';
+import type { LitBand, YearPlateData } from '#app/domain/year-plate.ts';
 import { NumberTable } from './number-table.tsx';
 import { ChartFrame, PlotSvg, PlotText } from './plot.tsx';
 import { textWidthPx } from './text-width.ts';
-import { clockOfMinutes, dayIndex, litBands, platePath, yearStart } from './year-plate-shape.ts';
-import type { LitBand, PlateDay, YearPlateData } from './year-plate-shape.ts';
 
 const left = 26;
 const bottom = 20;
@@ -16,17 +16,15 @@ export function YearPlate({ width, ...data }: YearPlateData & { readonly width: 
   const inner = { x1: left, x2: width, y1: 8, y2: box.heightPx - bottom };
   const days = data.days.length;
   const x = (index: number) => inner.x1 + (index / days) * (inner.x2 - inner.x1);
-  const lit = data.days.flatMap((day) => (day.riseMin === null || day.setMin === null ? [] : [day.riseMin, day.setMin]));
-  const fromHour = Math.max(0, Math.floor(Math.min(...lit, 360) / 120) * 2);
-  const toHour = Math.min(24, Math.ceil(Math.max(...lit, 1080) / 120) * 2);
+  const { fromHour, toHour } = plateHours(data.days);
   const y = (minutes: number) => inner.y1 + ((minutes / 60 - fromHour) / (toHour - fromHour)) * (inner.y2 - inner.y1);
   const hours = Array.from({ length: (toHour - fromHour) / 2 + 1 }, (_, index) => fromHour + index * 2);
   const start = yearStart(data);
   const bands = litBands(data);
   return (
-    <PlotSvg box={box} label={plateSentence(data)}>
+    <PlotSvg box={box} label={plateSentence(data, dateWords)}>
       {hours.filter((hour) => !narrow || hour % 4 === 0).map((hour) => <text key={hour} x={left - 6} y={y(hour * 60) + 4} textAnchor="end" className="fill-second">{String(hour).padStart(2, '0')}</text>)}
-      <path d={platePath(data.days, x, y)} className="fill-card stroke-card-edge" />
+      <path d={platePieces(data.days).map((piece) => `M${piece.map(([index, minutes]) => `${x(index).toFixed(1)} ${y(minutes).toFixed(1)}`).join('L')}Z`).join('')} className="fill-card stroke-card-edge" />
       {(data.reach ?? []).map((span) => {
         const at = dayIndex(span.on, start);
         return <rect key={`${span.on}${span.fromMin}`} x={x(at)} y={y(span.fromMin)} width={x(at + 1) - x(at) + 0.3} height={Math.max(0.5, y(span.toMin) - y(span.fromMin))} className="fill-card-rule" fillOpacity="0.55" />;
@@ -34,7 +32,7 @@ export function YearPlate({ width, ...data }: YearPlateData & { readonly width: 
       <Grid data={data} x={x} y={y} hours={hours} />
       {bands.map((band) => <BandCells key={band.firstOn} band={band} x={x} y={y} />)}
       {bands.map((band) => <BandWords key={band.firstOn} band={band} x={x} y={y} width={width} narrow={narrow} />)}
-      <Months start={start} days={days} x={x} foot={box.heightPx - 4} narrow={narrow} />
+      <Months data={data} x={x} foot={box.heightPx - 4} narrow={narrow} />
       {data.todayOn ? <Today at={x(dayIndex(data.todayOn, start) + 0.5)} inner={inner} words={narrow ? '' : `today, ${dateWords(data.todayOn, false).slice(4)}`} /> : null}
     </PlotSvg>
   );
@@ -43,25 +41,7 @@ export function YearPlate({ width, ...data }: YearPlateData & { readonly width: 
 type Place = (value: number) => number;
 
 function Grid({ data, x, y, hours }: { readonly data: YearPlateData; readonly x: Place; readonly y: Place; readonly hours: readonly number[] }) {
-  const start = yearStart(data);
-  const lines: string[] = [];
-  for (const [index, day] of data.days.entries()) {
-    if (day.riseMin === null || day.setMin === null) continue;
-    if (new Date(start + index * 86_400_000).getUTCDate() === 1 && index > 0) lines.push(`M${x(index).toFixed(1)} ${y(day.riseMin).toFixed(1)}V${y(day.setMin).toFixed(1)}`);
-  }
-  for (const hour of hours) {
-    const inside = (day: PlateDay) => day.riseMin !== null && day.setMin !== null && day.riseMin < hour * 60 && day.setMin > hour * 60;
-    let from: number | null = null;
-    for (let index = 0; index <= data.days.length; index += 1) {
-      const day = data.days[index];
-      const lit = day !== undefined && inside(day);
-      if (lit && from === null) from = index;
-      if (!lit && from !== null) {
-        lines.push(`M${x(from).toFixed(1)} ${y(hour * 60).toFixed(1)}H${x(index).toFixed(1)}`);
-        from = null;
-      }
-    }
-  }
+  const lines = plateGrid(data, hours).map(([[x1, y1], [x2, y2]]) => `M${x(x1).toFixed(1)} ${y(y1).toFixed(1)}L${x(x2).toFixed(1)} ${y(y2).toFixed(1)}`);
   return <path d={lines.join('')} className="fill-none stroke-card-rule" strokeOpacity="0.6" strokeWidth="0.8" />;
 }
 
@@ -106,18 +86,12 @@ function daysWords(firstOn: string, lastOn: string): string {
   return `${sameMonth ? short(firstOn).split(' ')[0] : short(firstOn)} to ${short(lastOn)}`;
 }
 
-function Months({ start, days, x, foot, narrow }: { readonly start: number; readonly days: number; readonly x: Place; readonly foot: number; readonly narrow: boolean }) {
-  const firsts = Array.from({ length: 13 }, (_, index) => {
-    const begin = new Date(start);
-    return Date.UTC(begin.getUTCFullYear(), begin.getUTCMonth() + index, 1);
-  });
+function Months({ data, x, foot, narrow }: { readonly data: YearPlateData; readonly x: Place; readonly foot: number; readonly narrow: boolean }) {
   return (
     <g>
-      {firsts.slice(0, -1).map((first, index) => {
-        const at = (first - start) / 86_400_000;
-        const next = ((firsts[index + 1] ?? first) - start) / 86_400_000;
-        const name = monthNames[new Date(first).getUTCMonth()] ?? '';
-        return at >= days ? null : <text key={first} x={(x(Math.max(0, at)) + x(Math.min(days, next))) / 2} y={foot} textAnchor="middle" className="fill-second">{narrow ? name.slice(0, 1) : name}</text>;
+      {plateMonths(data).map(({ month, from, to }) => {
+        const name = monthNames[month] ?? '';
+        return <text key={from} x={(x(from) + x(to)) / 2} y={foot} textAnchor="middle" className="fill-second">{narrow ? name.slice(0, 1) : name}</text>;
       })}
     </g>
   );
@@ -130,12 +104,6 @@ function Today({ at, inner, words }: { readonly at: number; readonly inner: { re
       {words ? <PlotText x={at + 5} y={inner.y1 + 4} tone="clear">{words}</PlotText> : null}
     </g>
   );
-}
-
-function plateSentence(data: YearPlateData): string {
-  const bands = litBands(data);
-  if (bands.length === 0) return 'On no day of these twelve months is the mark lit.';
-  return `The mark can be lit ${bands.map((band) => `${dateWords(band.firstOn)} to ${dateWords(band.lastOn)}, ${clockOfMinutes(band.fromMin)} to ${clockOfMinutes(band.toMin)}`).join('; ')}.`;
 }
 
 export function YearPlateFigure({ figure, title, note, ...data }: YearPlateData & { readonly figure?: string; readonly title: string; readonly note?: string }) {

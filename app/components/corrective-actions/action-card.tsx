@@ -15,7 +15,7 @@ export interface ActionCardView {
   readonly ownerId: string;
   readonly verifierId: string;
   readonly story: readonly { readonly term: string; readonly value: string; readonly note: string }[];
-  readonly checkWords: string | null;
+  readonly checkWords: { readonly day: string; readonly note: string } | null;
   readonly proposedCheckOn: string | null;
   readonly tooEarlyUntil: string | null;
   readonly files: readonly { readonly id: string; readonly name: string; readonly note: string }[];
@@ -47,7 +47,7 @@ export function ActionCard({ card, todayOn, people, answer }: ActionCardProps) {
           <FactList facts={factsOf(card)} />
         </div>
         <div>
-          <div className="max-tablet:hidden"><YearRibbonHead fromOn={monthOf(todayOn)} todayOn={todayOn} /></div>
+          <YearRibbonHead fromOn={monthOf(todayOn)} todayOn={todayOn} />
           <YearRibbon fromOn={monthOf(todayOn)} todayOn={todayOn} dueOn={isBeingDone(line) ? line.dueOn : null} checkOn={line.state === 'verified' ? line.effectCheckOn : null} lit={line.spans} label={line.title} />
           <Story card={card} />
         </div>
@@ -69,7 +69,7 @@ function factsOf({ line, cost, checkWords }: ActionCardView) {
     { term: 'Verifier', value: line.verifier },
     { term: 'Due', value: line.dueWords, note: line.dueNote },
     { term: 'Sun returns', value: line.returnWords, note: line.returnNote },
-    ...(checkWords ? [{ term: 'See whether it works', value: checkWords }] : []),
+    ...(checkWords ? [{ term: 'See whether it works', value: checkWords.day, note: checkWords.note }] : []),
     ...(cost ? [{ term: 'Cost', value: cost }] : []),
   ];
 }

@@ -82,7 +82,7 @@ function StartStep({ actionId, version, number, answer }: ActionStepsProps) {
       <input type="hidden" name="actionId" value={actionId} />
       <input type="hidden" name="version" value={version} />
       <ErrorSummary errors={problem?.formErrors} title="Not started." />
-      <Button look="quiet">Start<span className="sr-only"> action {number}</span></Button>
+      <Button look="outlined">Start<span className="sr-only"> action {number}</span></Button>
     </Form>
   );
 }
@@ -90,7 +90,7 @@ function StartStep({ actionId, version, number, answer }: ActionStepsProps) {
 function ProofFiles({ field, label, help }: { readonly field: FieldLike; readonly label: string; readonly help: string }) {
   return (
     <Field field={field} label={label} help={help}>
-      <input type="file" id={fieldIds(field).id} name={field.name} multiple accept="image/jpeg,image/png,image/webp,application/pdf" className="field-box py-1.5" aria-describedby={describedBy(field, true)} aria-invalid={(field.errors?.length ?? 0) > 0 || undefined} />
+      <input type="file" id={fieldIds(field).id} name={field.name} multiple accept="image/jpeg,image/png,image/webp,application/pdf" className="field-box" aria-describedby={describedBy(field, true)} aria-invalid={(field.errors?.length ?? 0) > 0 || undefined} />
     </Field>
   );
 }
@@ -102,7 +102,7 @@ function DoneStep(props: ActionStepsProps) {
         <>
           <TextArea field={field('note')} label="What was done" rows={3} />
           <ProofFiles field={field('files')} label="Photo or document" help="JPEG, PNG, WebP or PDF, up to 25 MB each, five at most." />
-          <p className="text-small">{cautions.eyes}</p>
+          <p>{cautions.eyes}</p>
           <Button>Mark done</Button>
         </>
       )}
@@ -137,7 +137,7 @@ function EffectStep(props: ActionStepsProps) {
           <TextArea field={field('note')} label="What you saw, and when" rows={3} />
           {props.tooEarlyUntil ? <TextInput field={field('reason')} label="Why it can be told before the sun is back" aside="only for that" /> : null}
           <ProofFiles field={field('files')} label="Photo or document" help="Not required. Photograph the lit surface from well outside the beam, never the optic." />
-          <p className="text-small">{cautions.eyes}</p>
+          <p>{cautions.eyes}</p>
           <Button>Record it</Button>
         </>
       )}

@@ -48,7 +48,7 @@ export function ExamTable({ code, exams, documents }: { readonly code: string; r
             <Cell heading className="whitespace-nowrap">{exam.when}</Cell>
             <Cell note={`by ${exam.by}`}>{exam.kind}</Cell>
             <Cell>{exam.method}</Cell>
-            <Cell>{exam.result}</Cell>
+            <Cell note={exam.wentAhead ? `Went ahead because: ${exam.wentAhead}` : ''}>{exam.result}</Cell>
             <Cell>
               {exam.notice ?? 'no notice recorded'}
               {exam.protocolId ? <span className="block">{words(exam.protocolId) ? <a href={href('/documents/:documentId', { documentId: exam.protocolId })} download>{words(exam.protocolId)}</a> : 'protocol not open to you'}</span> : null}

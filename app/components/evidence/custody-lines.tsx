@@ -22,6 +22,7 @@ export function CustodyLines({ lines, zone, now }: CustodyLinesProps) {
         <Key words="looked at"><rect x="7" y="4" width="8" height="8" className="fill-ink" /></Key>
         <Key words="examined, nothing altered"><rect x="5" y="2" width="12" height="12" strokeWidth="1.4" /><rect x="9" y="6" width="4" height="4" className="fill-ink" /></Key>
         <Key words="examination that may have altered it"><rect x="5" y="2" width="12" height="12" strokeWidth="1.4" /><path d="M5 14 17 2" strokeWidth="1.4" /></Key>
+        <Key words="planned, may alter it"><rect x="5" y="2" width="12" height="12" strokeWidth="1.4" strokeDasharray="3 2" /><path d="M5 14 17 2" strokeWidth="1.4" strokeDasharray="3 2" /></Key>
       </ul>
     </section>
   );

@@ -9,7 +9,7 @@ import { Button } from '#app/components/ui/button.tsx';
 import { Cell, DataTable, HeadCell, Row, TableHead } from '#app/components/ui/data-table.tsx';
 import { SectionHeading } from '#app/components/ui/page-title.tsx';
 import { attachmentClassLabels, attachmentClasses, attachmentKindLabels, attachmentKinds } from '#app/domain/attachment.ts';
-import type { DocumentView } from '#app/domain/evidence-view.ts';
+import type { DocumentView } from '#app/domain/document-view.ts';
 
 /** Documents that this reader may open; each download is hashed again. */
 export function DocumentTable({ documents }: { readonly documents: readonly DocumentView[] }) {

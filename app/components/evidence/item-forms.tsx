@@ -2,6 +2,7 @@ import { Form } from 'react-router';
 import { ChoiceChips } from '#app/components/forms/choice-chips.tsx';
 import { ClockTimeField } from '#app/components/forms/clock-time-field.tsx';
 import { ErrorSummary } from '#app/components/forms/error-summary.tsx';
+import { fieldText } from '#app/components/forms/field-like.ts';
 import { Select, TextArea, TextInput } from '#app/components/forms/text-field.tsx';
 import { problemFields } from '#app/components/findings/problem-fields.ts';
 import type { FormAnswer } from '#app/components/findings/problem-fields.ts';
@@ -9,6 +10,8 @@ import { Button } from '#app/components/ui/button.tsx';
 import { Caution } from '#app/components/ui/caution.tsx';
 import { disposalLabels, disposals, examKindLabels, examKinds, holderRoleLabels, holderRoles } from '#app/domain/evidence.ts';
 import type { Disposal } from '#app/domain/evidence.ts';
+import { documentOptions } from './plan-forms.tsx';
+import type { DocumentChoice } from './plan-forms.tsx';
 
 interface FormProps {
   /** Makes a repeated sending harmless. */
@@ -17,7 +20,7 @@ interface FormProps {
   readonly answer: FormAnswer | null;
 }
 
-/** The open record ends and the next begins at the moment given here. */
+/** For a taker without an account, or the recorder: the open record ends and the next begins at the moment given here. */
 export function HandOverForm({ clientId, zone, answer, sequence, holderName }: FormProps & { readonly sequence: number; readonly holderName: string }) {
   const field = problemFields(answer, { givenBy: holderName }, 'hand-');
   const names = [['handedAt', 'When'], ['holderRole', 'Taken over by, part'], ['holderName', 'Taken over by, name'], ['purpose', 'Purpose'], ['condition', 'Condition'], ['givenBy', 'Signed by the giver'], ['receivedBy', 'Signed by the taker']] as const;
@@ -39,19 +42,22 @@ export function HandOverForm({ clientId, zone, answer, sequence, holderName }: F
         <TextInput field={field('givenBy', { required: true })} label="Signed by the giver" autoComplete="off" />
         <TextInput field={field('receivedBy', { required: true })} label="Signed by the taker" autoComplete="off" />
       </div>
-      <Button>Record the hand-over</Button>
+      <p className="text-axis text-second">Both signatures are typed by you, and the chain says so. A taker who has an account signs on it: offer the item to them.</p>
+      <Button look="outlined">Record the hand-over</Button>
     </Form>
   );
 }
 
 export interface ExamFormProps extends FormProps {
-  readonly documents: readonly { readonly id: string; readonly words: string; readonly protocol: boolean }[];
+  readonly documents: readonly DocumentChoice[];
+  /** What speaks against an examination that may alter the item, such as `objects: maker`. */
+  readonly against: readonly string[];
 }
 
 /** An examination that was made. One that may alter the item asks for notice and protocol. */
-export function ExamForm({ clientId, zone, answer, documents }: ExamFormProps) {
+export function ExamForm({ clientId, zone, answer, documents, against }: ExamFormProps) {
   const field = problemFields(answer, {}, 'exam-');
-  const names = [['examKind', 'Kind'], ['performedAt', 'When'], ['performedBy', 'Made by'], ['method', 'Method'], ['result', 'Result'], ['noticeTo', 'Who was told'], ['noticeAt', 'When they were told'], ['protocolAttachmentId', 'Protocol']] as const;
+  const names = [['examKind', 'Kind'], ['performedAt', 'When'], ['performedBy', 'Made by'], ['method', 'Method'], ['result', 'Result'], ['noticeTo', 'Who was told'], ['noticeAt', 'When they were told'], ['protocolAttachmentId', 'Protocol'], ['wentAheadReason', 'Why it went ahead']] as const;
   return (
     <Form method="post" className="space-y-4">
       <input type="hidden" name="intent" value="exam" />
@@ -68,7 +74,8 @@ export function ExamForm({ clientId, zone, answer, documents }: ExamFormProps) {
         <legend className="pb-1 font-semibold">Needed where it may alter the item</legend>
         <TextInput field={field('noticeTo')} label="Who was told beforehand" help="By part: owner, insurer, maker, other parties." />
         <ClockTimeField field={field('noticeAt')} fieldFor={field} label="When they were told" zone={zone} />
-        <Select field={field('protocolAttachmentId')} label="Protocol" help="A document of the case. Add it on the evidence page first." emptyLabel="None" options={documents.map((document) => ({ value: document.id, label: document.words, group: document.protocol ? 'Protocols' : 'Other documents' }))} />
+        <Select field={field('protocolAttachmentId')} label="Protocol" help="A document of the case. Add it on the evidence page first." emptyLabel="None" options={documentOptions(documents)} />
+        {against.length > 0 || field('wentAheadReason').errors || fieldText(field('wentAheadReason')) !== '' ? <TextArea field={field('wentAheadReason')} label="Why it went ahead" aside={against.join('; ')} help="Needed while a party objects." rows={2} /> : null}
       </fieldset>
       <Caution>Do not clean the optic. Do not repeat the ignition. A change to an item cannot be undone.</Caution>
       <Button look="outlined">Record the examination</Button>

@@ -42,7 +42,7 @@ function Comment({ pin }: { readonly pin: CommentPin }) {
   return (
     <div className="min-w-0 flex-1">
       <p className="font-semibold">{pin.label}</p>
-      <p className="font-serif whitespace-pre-line">{pin.body}</p>
+      {pin.body === null ? <p className="text-second">Hidden until you ask for the opinion.</p> : <p className="font-serif whitespace-pre-line">{pin.body}</p>}
       <p className="text-axis text-second">{pin.by}, on version {pin.version}{pin.settled ? `; ${pin.settled}` : ''}</p>
       {pin.maySettle ? (
         <Form method="post" className="mt-1 flex flex-wrap items-center gap-2">

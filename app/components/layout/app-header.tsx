@@ -43,7 +43,7 @@ export function AppHeader(props: AppHeaderProps) {
         </nav>
         <div className="ml-auto hidden items-center gap-5 tablet:flex desk:gap-7">
           {props.search ? <div className="max-desk:hidden"><SearchForm {...props.search} id="find-desk" /></div> : null}
-          {props.search ? <AppLink href={props.search.action ?? '/cases'} className="text-small no-underline desk:hidden">Find</AppLink> : null}
+          {props.search ? <AppLink href={props.search.action ?? '/cases'} data-print="no" className="inline-flex min-h-11 items-center text-small no-underline desk:hidden">Find</AppLink> : null}
           {props.now ? <time dateTime={props.now.iso} className="text-small text-second max-desk:hidden">{props.now.words}</time> : null}
           {props.myWork ? <span className="flex self-stretch"><NavWord item={props.myWork} /></span> : null}
           {props.person ? <Folded summary={<><span className="sr-only">Your account, </span>{props.person.initials}</>}><PersonMenu {...props} /></Folded> : null}
@@ -73,7 +73,7 @@ function SearchForm({ action = '/cases', query = '', id }: { readonly action?: s
   return (
     <form role="search" method="get" action={action} className="relative">
       <label htmlFor={id} className="sr-only">Find a case, place or mark</label>
-      <input id={id} type="search" name="q" defaultValue={query} placeholder="Find a case, place or mark" aria-keyshortcuts="/" className="field-box !min-h-8 w-full !py-1 desk:w-60" />
+      <input id={id} type="search" name="q" defaultValue={query} placeholder="Find a case, place or mark" aria-keyshortcuts="/" className="field-box !min-h-(--target-height) w-full !py-1 desk:w-60" />
     </form>
   );
 }
@@ -95,7 +95,7 @@ function PersonMenu({ person, personLinks = [], signOutAction = '/logout' }: App
         <p className="font-semibold">{person.name}</p>
         {person.detail ? <p className="text-small text-second">{person.detail}</p> : null}
       </div>
-      {personLinks.map((link) => <p key={link.href}><AppLink href={link.href}>{link.label}</AppLink></p>)}
+      {personLinks.map((link) => <p key={link.href}><AppLink href={link.href} className="inline-flex min-h-(--target-height) items-center">{link.label}</AppLink></p>)}
       <form method="post" action={signOutAction}>
         <button type="submit" className="min-h-11 w-full cursor-pointer border-2 border-ember font-semibold text-ember">Sign out</button>
       </form>
@@ -130,14 +130,14 @@ export interface TaskHeaderProps {
   readonly title: string;
   readonly closeHref: string;
   readonly closeLabel?: string;
-  /** No rule below, where the ink block follows at once. */
+  /** No rule below on phones, where the ink block follows at once. */
   readonly open?: boolean;
 }
 
 /** Head of a page that does one thing on a phone: sign, task, way out. */
 export function TaskHeader({ title, closeHref, closeLabel = 'Close', open = false }: TaskHeaderProps) {
   return (
-    <header className={open ? '' : 'border-b-2 border-ink'}>
+    <header className={`border-ink ${open ? 'desk:border-b-2' : 'border-b-2'}`}>
       <div className="mx-auto flex min-h-12.5 max-w-[1600px] items-center justify-between gap-4 px-(--page-margin)">
         <p className="flex items-center gap-2.5 text-[1.0625rem] font-semibold"><LogoMark />{title}</p>
         <AppLink href={closeHref} reload className="inline-flex min-h-11 items-center">{closeLabel}</AppLink>

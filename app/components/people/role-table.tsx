@@ -26,7 +26,7 @@ export function RoleTable({ chosen }: { readonly chosen: Role }) {
             <HeadCell>Action</HeadCell>
             {roles.map((role) => (
               <HeadCell key={role} className={`min-w-[88px] !pl-1.5 ${ground(role === chosen)}`}>
-                <AppLink href={roleHref(role)} className="inline-flex min-h-6 items-end" {...(role === chosen ? { 'aria-current': 'true' as const } : {})}>
+                <AppLink href={roleHref(role)} className="inline-flex min-h-(--target-height) items-end" {...(role === chosen ? { 'aria-current': 'true' as const } : {})}>
                   {roleLabels[role]}
                 </AppLink>
               </HeadCell>

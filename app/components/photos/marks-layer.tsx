@@ -8,14 +8,18 @@ export interface MarksLayerProps {
 }
 
 const unit = 1000;
+/** In units of the drawing, by the width at which the photo is shown: never under 12 px. */
+const wordSizes = 'text-[24px] @max-[700px]:text-[28px] @max-[460px]:text-[37px] @max-[330px]:text-[44px]';
 
 /** Marks drawn over a photo: ink on a pale bed, so that they show on dark and light grounds alike. The picture is not touched. */
 export function MarksLayer({ marks, widthPx, heightPx }: MarksLayerProps) {
   const height = (heightPx / widthPx) * unit;
   return (
-    <svg viewBox={`0 0 ${unit} ${height.toFixed(2)}`} aria-hidden="true" className="pointer-events-none absolute inset-0 h-full w-full">
-      {marks.map((mark, index) => <Mark key={index} mark={mark} height={height} number={index + 1} />)}
-    </svg>
+    <div aria-hidden="true" className="@container pointer-events-none absolute inset-0">
+      <svg viewBox={`0 0 ${unit} ${height.toFixed(2)}`} className={`h-full w-full ${wordSizes}`}>
+        {marks.map((mark, index) => <Mark key={index} mark={mark} height={height} number={index + 1} />)}
+      </svg>
+    </div>
   );
 }
 
@@ -43,5 +47,5 @@ function head(x1: number, y1: number, x2: number, y2: number): string {
 
 function Words({ x, y, text }: { readonly x: number; readonly y: number; readonly text: string }) {
   const right = x > unit * 0.7;
-  return <text x={right ? x - 10 : x + 10} y={y - 8} fontSize="26" fontWeight="600" textAnchor={right ? 'end' : 'start'} fill="#1c2430" stroke="#fcf9f3" strokeWidth="8" strokeLinejoin="round" paintOrder="stroke">{text}</text>;
+  return <text x={right ? x - 10 : x + 10} y={y - 8} fontWeight="600" textAnchor={right ? 'end' : 'start'} fill="#1c2430" stroke="#fcf9f3" strokeWidth="8" strokeLinejoin="round" paintOrder="stroke">{text}</text>;
 }

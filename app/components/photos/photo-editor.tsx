@@ -59,8 +59,8 @@ function OfferButtons({ card, offer }: { readonly card: PhotoCard; readonly offe
     <Form method="post" className="flex flex-wrap gap-x-5 pt-1">
       <Hidden card={card} intent="answer-offer" />
       <input type="hidden" name="offer" value={offer.kind} />
-      {offer.answer === 'accepted' ? null : <Button look="quiet" name="answer" value="accepted" className="min-h-8">Use it<span className="sr-only"> as the {what}</span></Button>}
-      {offer.answer === 'declined' ? null : <Button look="quiet" name="answer" value="declined" className="min-h-8">Do not use it<span className="sr-only"> as the {what}</span></Button>}
+      {offer.answer === 'accepted' ? null : <Button look="quiet" name="answer" value="accepted" className="min-h-(--target-height)">Use it<span className="sr-only"> as the {what}</span></Button>}
+      {offer.answer === 'declined' ? null : <Button look="quiet" name="answer" value="declined" className="min-h-(--target-height)">Do not use it<span className="sr-only"> as the {what}</span></Button>}
     </Form>
   );
 }
@@ -102,7 +102,7 @@ export function PhotoRelease({ card, problem }: EditorProps) {
           <Hidden card={card} intent="remove-mask" />
           <input type="hidden" name="mask" value={index} />
           <span>Box {index + 1}, {mask.class === 'personal' ? 'personal' : 'exact place'}: {rounded(mask.leftShare)}, {rounded(mask.topShare)} to {rounded(mask.leftShare + mask.widthShare)}, {rounded(mask.topShare + mask.heightShare)} %</span>
-          <Button look="quiet" className="min-h-8">Remove<span className="sr-only"> box {index + 1} of photo {card.label}</span></Button>
+          <Button look="quiet" className="min-h-(--target-height)">Remove<span className="sr-only"> box {index + 1} of photo {card.label}</span></Button>
         </Form>
       ))}
       <Form key={card.masks.length} method="post" className="space-y-2">

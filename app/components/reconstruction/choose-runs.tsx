@@ -9,7 +9,7 @@ export interface RunChoice {
 /** Which two runs are compared; the choice is in the address. */
 export function ChooseRuns({ runs, a, b }: { readonly runs: readonly RunChoice[]; readonly a: number | null; readonly b: number | null }) {
   return (
-    <Form method="get" className="flex flex-wrap items-end gap-x-4 gap-y-2" data-print="no">
+    <Form method="get" className="flex flex-wrap items-end gap-x-4 gap-y-3" data-print="no">
       <Choice name="a" label="Compare" runs={runs} value={a} />
       <Choice name="b" label="with" runs={runs} value={b} />
       <Button look="outlined">Show</Button>
@@ -19,9 +19,9 @@ export function ChooseRuns({ runs, a, b }: { readonly runs: readonly RunChoice[]
 
 function Choice({ name, label, runs, value }: { readonly name: 'a' | 'b'; readonly label: string; readonly runs: readonly RunChoice[]; readonly value: number | null }) {
   return (
-    <label className="flex flex-wrap items-center gap-2">
-      <span className="font-semibold">{label}</span>
-      <select name={name} key={String(value)} defaultValue={String(value ?? '')} className="field-box !w-auto max-w-full">
+    <label className="flex items-center gap-2 max-tablet:w-full">
+      <span className="flex-none font-semibold max-tablet:w-20">{label}</span>
+      <select name={name} key={String(value)} defaultValue={String(value ?? '')} className="field-box min-w-0 tablet:!w-auto">
         {runs.map((run) => <option key={run.number} value={run.number}>{run.words}</option>)}
       </select>
     </label>

@@ -7,7 +7,10 @@ import { StackTable } from './stack-table.tsx';
 
 export const changeWords: Record<Verdict, string> = { sunlit: 'sunlit', 'not-sunlit': 'not sunlit', 'cannot-tell': "can't tell", 'not-examined': 'not examined' };
 const nameOf = (number: number): string => `Run ${number}`;
-const withUnit = (value: string, unit: string): string => (unit === '' || value === 'not given' || value === 'none' ? value : `${value}${unit === '°' ? '' : ' '}${unit}`);
+const withUnit = (value: string, unit: string): string => {
+  if (unit === '' || value === 'not given' || value === 'none') return value;
+  return `${value}${unit === '°' ? '' : ' '}${unit === 'days' && /^[+−]?1$/u.test(value) ? 'day' : unit}`;
+};
 
 /** Minutes with another answer, old and new with their reasons. */
 export function StretchTable({ view }: { readonly view: RunComparisonView }) {

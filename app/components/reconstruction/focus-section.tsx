@@ -1,14 +1,13 @@
 import { FluxDiscsFigure } from '#app/components/charts/flux-discs.tsx';
-import type { FluxDiscsData } from '#app/components/charts/flux-discs.tsx';
-import { plainNumber } from '#app/components/charts/number-table.tsx';
 import { SpotDistanceFigure } from '#app/components/charts/spot-distance.tsx';
 import { Cell, DataTable, HeadCell, Row, TableHead } from '#app/components/ui/data-table.tsx';
 import { FactList } from '#app/components/ui/fact-list.tsx';
 import type { Fact } from '#app/components/ui/fact-list.tsx';
+import { trackOver } from '#app/domain/flux-discs.ts';
+import { plainNumber } from '#app/domain/plain-number.ts';
 import type { BeamView } from '#app/domain/run-beam.ts';
 import type { RunView } from '#app/domain/run-view.ts';
-import type { Band } from '#app/physics/model.ts';
-import { dot } from '#app/physics/vector.ts';
+import type { Band } from '#app/physics/model/stated.ts';
 
 type Focus = NonNullable<RunView['result']['focus']>;
 
@@ -68,20 +67,6 @@ export function FocusSection({ focus, rings, clock, beam, bestUtc }: FocusSectio
       </section>
     </div>
   );
-}
-
-/** The way of the spot relative to where it stands at the best minute, and how a line lies in the target's plane. */
-function trackOver(beam: BeamView | null, bestUtc: string | null): Pick<FluxDiscsData, 'track' | 'lineTurnDeg' | 'edges'> {
-  const best = beam?.minutes.find((minute) => minute.atUtc === bestUtc)?.spotMm;
-  if (!beam?.facing || !best) return {};
-  const { right, up, rightWords } = beam.facing;
-  const points = beam.minutes.flatMap(({ spotMm }): [number, number][] => (spotMm ? [[spotMm.rightMm - best.rightMm, spotMm.upMm - best.upMm]] : []));
-  const along = beam.generator ? [dot(beam.generator, right), dot(beam.generator, up)] as const : null;
-  return {
-    track: { points, words: 'dashes: way of the spot' },
-    edges: { left: '', right: rightWords },
-    ...(along ? { lineTurnDeg: (Math.atan2(along[1], along[0]) * 180) / Math.PI } : {}),
-  };
 }
 
 function DiscTable({ focus, centre }: { readonly focus: Focus; readonly centre: 'mark' | 'hot spot' }) {

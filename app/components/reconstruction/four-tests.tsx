@@ -2,7 +2,7 @@ import { MarginRuler } from '#app/components/charts/margin-ruler.tsx';
 import { SectionHeading } from '#app/components/ui/page-title.tsx';
 import { TestMark } from '#app/components/ui/test-mark.tsx';
 import { testLabels } from '#app/domain/hypothesis.ts';
-import type { TestSummary } from '#app/physics/model.ts';
+import type { TestSummary } from '#app/physics/model/tests.ts';
 
 /** Each test alone: result, why, and its margin in its own unit. There is no total. */
 export function FourTests({ tests }: { readonly tests: readonly TestSummary[] }) {

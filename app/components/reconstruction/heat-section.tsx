@@ -1,15 +1,9 @@
-import { plainNumber } from '#app/components/charts/number-table.tsx';
 import { TemperatureCurveFigure } from '#app/components/charts/temperature-curve.tsx';
+import { plainNumber } from '#app/domain/plain-number.ts';
 import { outcomeLabels } from '#app/domain/run-words.ts';
-import { targetMaterialLabels, targetMaterials } from '#app/domain/scene.ts';
-import type { HeatingResult, TargetOutcome } from '#app/physics/model.ts';
+import { materialWords, secondsWords, temperatureNote } from '#app/domain/temperature-curve.ts';
+import type { HeatingResult, TargetOutcome } from '#app/physics/model/heating.ts';
 import { StackTable } from './stack-table.tsx';
-
-/** "curtain fabric", or the engine's own id where the register has no word for it. */
-function materialWords(id: string): string {
-  const known = targetMaterials.find((material) => material === id);
-  return (known ? targetMaterialLabels[known] : id).toLowerCase();
-}
 
 export function HeatFigure({ heating }: { readonly heating: HeatingResult }) {
   return (
@@ -18,12 +12,10 @@ export function HeatFigure({ heating }: { readonly heating: HeatingResult }) {
       title={`Surface of ${materialWords(heating.materialId)} under steady sun, °C`}
       points={heating.surfaceTemperatureC}
       outcomes={heating.outcomes.map((outcome) => ({ label: outcomeLabels[outcome.id], answer: outcome.answer, timeS: outcome.timeS }))}
-      note="Steady sun on one point, 5 mm disc on the hot spot; band from low to high. Small spots lose heat fast, so the curve is an estimate, not a measurement."
+      note={temperatureNote}
     />
   );
 }
-
-const secondsWords = (value: number): string => (value >= 5400 ? `${plainNumber(value / 3600)} h` : value >= 120 ? `${plainNumber(value / 60)} min` : `${plainNumber(value)} s`);
 
 /** Each way to respond, with its own basis and sample size; none stands for another. */
 export function OutcomeTable({ heating }: { readonly heating: HeatingResult }) {

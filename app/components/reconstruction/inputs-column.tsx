@@ -1,9 +1,9 @@
 import { TornadoFigure } from '#app/components/charts/tornado.tsx';
-import { plainNumber } from '#app/components/charts/number-table.tsx';
 import { FactList } from '#app/components/ui/fact-list.tsx';
+import { plainNumber } from '#app/domain/plain-number.ts';
 import type { RunPageView } from '#app/domain/run-page.ts';
 import type { RunView } from '#app/domain/run-view.ts';
-import type { SamplingResult } from '#app/physics/model.ts';
+import type { SamplingResult } from '#app/physics/model/sampling.ts';
 
 export interface InputsColumnProps {
   readonly view: RunView;

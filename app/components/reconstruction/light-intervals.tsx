@@ -1,9 +1,9 @@
 import { clockWords } from '#app/components/burn-card/wall-clock.ts';
-import { plainNumber } from '#app/components/charts/number-table.tsx';
 import { Cell, DataTable, HeadCell, Row, TableHead } from '#app/components/ui/data-table.tsx';
 import { SectionHeading } from '#app/components/ui/page-title.tsx';
 import { formatIsoDay } from '#app/domain/local-time.ts';
-import type { LightOnMark } from '#app/physics/model.ts';
+import { plainNumber } from '#app/domain/plain-number.ts';
+import type { LightOnMark } from '#app/physics/model/minutes.ts';
 import { localDay } from '#app/physics/sun/zone-days.ts';
 
 export interface LightIntervalsProps {

@@ -1,6 +1,6 @@
-import { plainNumber } from '#app/components/charts/number-table.tsx';
 import { YearPlateFigure } from '#app/components/charts/year-plate.tsx';
 import { Cell, DataTable, HeadCell, Row, TableHead } from '#app/components/ui/data-table.tsx';
+import { plainNumber } from '#app/domain/plain-number.ts';
 import type { ReturnBandView } from '#app/domain/run-returns.ts';
 import type { RunView } from '#app/domain/run-view.ts';
 import { StackTable } from './stack-table.tsx';

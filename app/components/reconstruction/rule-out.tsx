@@ -1,8 +1,8 @@
-import { plainNumber } from '#app/components/charts/number-table.tsx';
 import { SectionHeading } from '#app/components/ui/page-title.tsx';
 import { testLabels } from '#app/domain/hypothesis.ts';
+import { plainNumber } from '#app/domain/plain-number.ts';
 import { checkAnswer, checkLabel } from '#app/domain/run-words.ts';
-import type { Check } from '#app/physics/model.ts';
+import type { Check } from '#app/physics/model/tests.ts';
 import { StackTable } from './stack-table.tsx';
 
 const withUnit = (value: number, unit: string): string => `${plainNumber(value)}${unit === '°' ? '' : ' '}${unit}`;

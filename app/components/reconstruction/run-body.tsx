@@ -1,5 +1,6 @@
 import { useRef, useState } from 'react';
 import { ScrubBars } from '#app/components/burn-card/scrub-bar.tsx';
+import { usePlayback } from '#app/components/burn-card/use-playback.ts';
 import { clockWords } from '#app/components/burn-card/wall-clock.ts';
 import { PlanFigure, SectionFigure } from '#app/components/charts/beam-figures.tsx';
 import { PhotoTrailFigure } from '#app/components/charts/photo-trail.tsx';
@@ -35,14 +36,24 @@ export function RunBody({ page, view, label, words, href }: RunBodyProps) {
   const card = useRef<HTMLDivElement>(null);
   const bestUtc = view.result.best?.atUtc ?? null;
   const [cursorUtc, setCursorUtc] = useState(bestUtc ?? view.minutes[0]?.atUtc ?? null);
+  const playback = usePlayback(view.minutes.length, view.minutes.findIndex((minute) => minute.atUtc === cursorUtc), (index) => setCursorUtc(view.minutes[index]?.atUtc ?? cursorUtc));
+  const scrub = {
+    playing: playback.playing,
+    onPlay: playback.toggle,
+    // A hand on the line stops it.
+    onMinute: (atUtc: string) => {
+      playback.pause();
+      setCursorUtc(atUtc);
+    },
+  };
   const { result } = view;
   const beam = view.beam ? { beam: view.beam, minutes: view.minutes, cursorUtc, bestUtc, zone: page.zone } : null;
   const clock = result.best ? clockWords(result.best.atUtc, page.zone) : null;
   return (
     <FigureFilesContext value={`${href}/figures`}>
     <div className={`space-y-6 ${view.scrubs ? 'max-tablet:pb-20' : ''}`}>
-      <div ref={card}><RunCard view={view} label={label} words={words} cursorUtc={cursorUtc} onMinute={setCursorUtc} /></div>
-      {view.scrubs && cursorUtc ? <ScrubBars card={card} model={runCardModel(view)} minutes={view.minutes} atUtc={cursorUtc} onMinute={setCursorUtc} /> : null}
+      <div ref={card}><RunCard view={view} label={label} words={words} cursorUtc={cursorUtc} {...scrub} /></div>
+      {view.scrubs && cursorUtc ? <ScrubBars card={card} model={runCardModel(view)} minutes={view.minutes} atUtc={cursorUtc} {...scrub} /> : null}
       {result.warnings.length > 0 ? <Caution title="Read this first"><ul className="list-disc pl-5">{result.warnings.map((warning) => <li key={warning}>{warning}</li>)}</ul></Caution> : null}
       <Columns
         sideFirst

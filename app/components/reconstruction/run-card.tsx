@@ -16,18 +16,20 @@ export interface RunCardProps {
   /** Minute under the blue line, where the window is moved along minute by minute. */
   readonly cursorUtc: string | null;
   readonly onMinute: (atUtc: string) => void;
+  readonly playing: boolean;
+  readonly onPlay: () => void;
 }
 
 const weekMs = 7 * 86_400_000;
 
 /** The large card of a run: moved along minute by minute within a day, day by day beyond a week. */
-export function RunCard({ view, label, words, cursorUtc, onMinute }: RunCardProps) {
+export function RunCard({ view, label, words, cursorUtc, ...scrub }: RunCardProps) {
   const { window } = view.card;
   const model: BurnCardModel = { ...runCardModel(view), startWords: words?.start ?? [], endWords: words?.end ?? [] };
   const length = window ? Date.parse(window.endUtc) - Date.parse(window.startUtc) : 0;
   if (length > weekMs) return <Table model={model} card={<DayCards model={model} label={label} />} />;
   if (!view.scrubs) return <CaptionedBurnCard model={model} size="L" label={label} />;
-  return <Table model={model} card={<ScrubCard model={model} minutes={view.minutes} label={label} atUtc={cursorUtc ?? view.minutes[0]?.atUtc ?? ''} onMinute={onMinute} />} />;
+  return <Table model={model} card={<ScrubCard model={model} minutes={view.minutes} label={label} atUtc={cursorUtc ?? view.minutes[0]?.atUtc ?? ''} {...scrub} />} />;
 }
 
 /** The card of a run: its window with a margin on both sides. */

@@ -48,7 +48,7 @@ export function ReleasedDocument({ view, frame, zone, fileHref, watermark, level
         <ChronologySection view={view} number={2} />
         <EvidenceSection items={view.evidence} number={3} />
         <MeasurementsSection view={view} number={4} />
-        <SunSection sun={view.sun} zone={zone} number={5} />
+        <SunSection sun={view.sun} weather={view.weather} zone={zone} number={5} />
         <HypothesesSection hypotheses={view.hypotheses} number={6} />
         <FindingSection finding={view.finding} number={7} />
         <ActionsSection actions={view.actions} number={8} />

@@ -6,8 +6,10 @@ import { Cell, DataTable, HeadCell, Row, TableHead } from '#app/components/ui/da
 import { FactList } from '#app/components/ui/fact-list.tsx';
 import { TestMark } from '#app/components/ui/test-mark.tsx';
 import type { CardView } from '#app/domain/case-card.ts';
-import type { SunPart } from '#app/domain/release-document.ts';
+import type { ReleaseDocument, SunPart } from '#app/domain/release-document.ts';
+import { noWeatherWords } from '#app/domain/weather-part.ts';
 import { DocumentSection, PartHeading } from './document-section.tsx';
+import { RedactedWords } from './redacted-words.tsx';
 
 /** The card of the window at the head of the document. */
 export function ReleasedCard({ card, caseNumber }: { readonly card: CardView; readonly caseNumber: number }) {
@@ -15,7 +17,7 @@ export function ReleasedCard({ card, caseNumber }: { readonly card: CardView; re
   return <CaptionedBurnCard model={{ ...card, ...span }} size="L" label={`Case ${caseNumber}`} />;
 }
 
-export function SunSection({ sun, zone, number }: { readonly sun: SunPart | null; readonly zone: string; readonly number: number }) {
+export function SunSection({ sun, weather, zone, number }: { readonly sun: SunPart | null; readonly weather: ReleaseDocument['weather']; readonly zone: string; readonly number: number }) {
   if (!sun) {
     return (
       <DocumentSection id="sun" title={`${number}. Sun and weather`}>
@@ -42,6 +44,7 @@ export function SunSection({ sun, zone, number }: { readonly sun: SunPart | null
           <SunPathFigure title="Path of the sun through the window, apparent altitude" zone={zone} minutes={sun.minutes} note="Every minute of the window that is not night, thinned where the window is long." />
         </div>
       ) : null}
+      <Weather weather={weather} />
       {sun.numbers.length > 0 ? (
         <>
           <PartHeading>Numbers</PartHeading>
@@ -56,6 +59,30 @@ export function SunSection({ sun, zone, number }: { readonly sun: SunPart | null
         </Caution>
       </div>
     </DocumentSection>
+  );
+}
+
+/** The record that the run went by, and its values in the window; the file holds them all. */
+function Weather({ weather }: { readonly weather: ReleaseDocument['weather'] }) {
+  if (weather === null) return null;
+  return (
+    <>
+      <PartHeading>Weather</PartHeading>
+      {weather === 'clear-sky' ? <p className="max-w-[64ch] text-second">{noWeatherWords}</p> : (
+        <>
+          <p className="max-w-[64ch] pb-2"><RedactedWords text={weather.lead} /> {weather.limits.join(' ')}</p>
+          <DataTable caption={weather.table.caption} captionShown className={weather.table.head.length > 4 ? 'min-w-[38rem]' : ''}>
+            <TableHead>{weather.table.head.map((head, index) => <HeadCell key={head} numeric={index > 1}>{head}</HeadCell>)}</TableHead>
+            <tbody>
+              {weather.table.rows.map((row, index) => (
+                <Row key={index} tight>{row.map((cell, place) => <Cell key={place} numeric={place > 1} className={place < 2 ? 'whitespace-nowrap' : ''}>{cell}</Cell>)}</Row>
+              ))}
+            </tbody>
+          </DataTable>
+          {weather.table.further > 0 ? <p className="pt-1 text-small text-second">{weather.table.further} further {weather.table.further === 1 ? 'value stands' : 'values stand'} in the file.</p> : null}
+        </>
+      )}
+    </>
   );
 }
 

@@ -8,6 +8,7 @@ const fills: Record<FigureInk, string> = {
   ink: 'fill-ink', second: 'fill-second', hair: 'fill-hair', edge: 'fill-edge', card: 'fill-card', 'card-text': 'fill-card-text',
   pale: 'fill-pale', slot: 'fill-slot', burn: 'fill-burn', clear: 'fill-clear', paper: 'fill-paper',
 };
+const beds = { paper: 'stroke-sheet', card: 'stroke-card' } as const;
 const path = (points: readonly (readonly [number, number])[]) => points.map(([x, y], index) => `${index === 0 ? 'M' : 'L'}${x.toFixed(2)} ${y.toFixed(2)}`).join(' ');
 
 /** A figure of a report as a drawing that scales with its frame; the alternative text says what it shows. */
@@ -24,12 +25,12 @@ function Mark({ mark }: { readonly mark: FigureMark }) {
     case 'line':
       return <path d={path(mark.points)} className={`fill-none ${strokes[mark.ink]}`} strokeWidth={mark.widthPt} strokeDasharray={mark.dash?.join(' ')} />;
     case 'area':
-      return <path d={`${path(mark.points)} Z`} className={`${mark.fill ? fills[mark.fill] : 'fill-none'} ${mark.edge ? strokes[mark.edge] : 'stroke-none'}`} strokeWidth={mark.widthPt ?? 1} />;
+      return <path d={`${path(mark.points)} Z`} className={`${mark.fill ? fills[mark.fill] : 'fill-none'} ${mark.edge ? strokes[mark.edge] : 'stroke-none'}`} strokeWidth={mark.widthPt ?? 1} fillOpacity={mark.opacity} />;
     case 'rect':
-      return <rect x={mark.x} y={mark.y} width={mark.width} height={mark.height} rx={mark.roundPt} className={`${mark.fill ? fills[mark.fill] : 'fill-none'} ${mark.edge ? strokes[mark.edge] : 'stroke-none'}`} strokeWidth={mark.widthPt ?? 1} />;
+      return <rect x={mark.x} y={mark.y} width={mark.width} height={mark.height} rx={mark.roundPt} className={`${mark.fill ? fills[mark.fill] : 'fill-none'} ${mark.edge ? strokes[mark.edge] : 'stroke-none'}`} strokeWidth={mark.widthPt ?? 1} fillOpacity={mark.opacity} />;
     case 'dot':
-      return <circle cx={mark.x} cy={mark.y} r={mark.radiusPt} className={`${mark.fill ? fills[mark.fill] : 'fill-none'} ${mark.edge ? strokes[mark.edge] : 'stroke-none'}`} />;
+      return <circle cx={mark.x} cy={mark.y} r={mark.radiusPt} className={`${mark.fill ? fills[mark.fill] : 'fill-none'} ${mark.edge ? strokes[mark.edge] : 'stroke-none'}`} fillOpacity={mark.opacity} />;
     case 'text':
-      return <text x={mark.x} y={mark.y} fontSize={mark.sizePt} textAnchor={mark.anchor ?? 'start'} className={`${fills[mark.ink ?? 'ink']} ${mark.bold ? 'font-semibold' : ''}`}>{mark.text}</text>;
+      return <text x={mark.x} y={mark.y} fontSize={mark.sizePt} textAnchor={mark.anchor ?? 'start'} className={`${fills[mark.ink ?? 'ink']} ${mark.bold ? 'font-semibold' : ''} ${mark.bed ? beds[mark.bed] : ''}`} {...(mark.bed ? { strokeWidth: 3, strokeLinejoin: 'round', paintOrder: 'stroke' } : {})}>{mark.text}</text>;
   }
 }

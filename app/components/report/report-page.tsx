@@ -73,7 +73,7 @@ export function ReportPage({ view, problem }: { readonly view: ReportView; reado
         {saved && draft.report ? (
           <SavedScreen report={draft.report} photos={photos.photos} siteName={view.sites.find((site) => site.id === draft.report?.values['siteId'])?.name ?? ''} savedAt={draft.savedAt ?? ''} sending={sending} lasting={lasting} background={background} />
         ) : null}
-        <div hidden={saved || atForm || undefined} className="-mx-(--page-margin) pb-4">
+        <div hidden={saved || atForm || undefined} className="-mx-(--page-margin) pb-4 desk:pt-6">
           <MakeSafeCard telephone={view.emergencyNumber} headingLevel={atForm ? 2 : 1}>
             <GoOn view={view} hydrated={hydrated} onGo={begin} />
           </MakeSafeCard>

@@ -69,12 +69,12 @@ export function PhotoMeasure({ label, source, alt, baseVersion, mayEdit, whoEdit
           </section>
           {reading.ok && measures ? <SquareOnView clicks={reading.clicks} source={source} alt={`${alt}, made square-on`} /> : null}
           <div className="grid grid-cols-2 gap-4">
-            {box('edgeBearingDeg', 'Corner 1 to 2 runs to, ° true', 'On a level surface seen from above; left empty on a wall.')}
+            {box('edgeBearingDeg', '1 to 2 runs to, ° true', 'On a level surface seen from above; left empty on a wall.')}
             {box('edgePlusMinusDeg', '± of it, °')}
             {box('clickPx', '± of a click, px')}
           </div>
           <p className="text-small text-second">The ± comes from the clicks and the known size. The bending of the lens is not in it: keep the mark near the middle, and the rectangle round it.</p>
-          {mayEdit ? <Button look={measures ? 'filled' : 'waiting'}>Use as measurement, version {baseVersion + 1}</Button> : <p className="text-small text-second">Using it as a measurement: {whoEdits}</p>}
+          {mayEdit ? <Button look={measures ? 'filled' : 'waiting'}>Use as measurement, version {baseVersion + 1}</Button> : <p className="text-small text-second">Using it as a measurement now: {whoEdits}</p>}
         </div>
       </div>
     </Form>

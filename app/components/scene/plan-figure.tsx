@@ -1,6 +1,6 @@
 import { PlotText } from '#app/components/charts/plot.tsx';
-import { pathOf, seenFrom } from '#app/components/charts/scale-drawing.ts';
-import type { Flat, ScaleFrame, Sight } from '#app/components/charts/scale-drawing.ts';
+import { pathOf, seenFrom } from '#app/domain/scale-drawing.ts';
+import type { Flat, ScaleFrame, Sight } from '#app/domain/scale-drawing.ts';
 import { moveMark, moveOpening, moveWallEnd, turnOptic } from '#app/domain/scene-moves.ts';
 import type { SceneMoment, ScenePlan } from '#app/domain/scene-plan.ts';
 import { add, azimuthOf, scale } from '#app/physics/vector.ts';

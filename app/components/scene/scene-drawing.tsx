@@ -1,8 +1,8 @@
 import { useId } from 'react';
 import type { ReactNode } from 'react';
 import { HatchPattern, PlotText } from '#app/components/charts/plot.tsx';
-import { hullOf, metresWords, pathOf, roundLengthM, seenFrom } from '#app/components/charts/scale-drawing.ts';
-import type { Flat, ScaleFrame, Sight } from '#app/components/charts/scale-drawing.ts';
+import { hullOf, metresWords, pathOf, roundLengthM, seenFrom } from '#app/domain/scale-drawing.ts';
+import type { Flat, ScaleFrame, Sight } from '#app/domain/scale-drawing.ts';
 import type { SceneMoment, ScenePlan } from '#app/domain/scene-plan.ts';
 import { add, scale } from '#app/physics/vector.ts';
 import type { Vector } from '#app/physics/vector.ts';

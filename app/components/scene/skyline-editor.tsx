@@ -3,12 +3,13 @@ import { Form } from 'react-router';
 import { formFields } from '#app/components/cases/form-fields.ts';
 import type { RefusedForm } from '#app/components/cases/form-fields.ts';
 import { NumberTable } from '#app/components/charts/number-table.tsx';
-import { FieldError } from '#app/components/forms/field.tsx';
+import { entryLabel, EntryRows } from '#app/components/forms/entry-rows.tsx';
 import { ErrorSummary } from '#app/components/forms/error-summary.tsx';
+import { describedBy, fieldIds, hasErrors } from '#app/components/forms/field-like.ts';
+import type { FieldLike } from '#app/components/forms/field-like.ts';
 import { TextArea, TextInput } from '#app/components/forms/text-field.tsx';
 import { useHydrated } from '#app/components/report/use-hydrated.ts';
 import { Button } from '#app/components/ui/button.tsx';
-import { Cell, DataTable, HeadCell, Row, TableHead } from '#app/components/ui/data-table.tsx';
 import { SectionHeading } from '#app/components/ui/page-title.tsx';
 import { leafStates, skylineSources } from '#app/domain/scene.ts';
 import { leafLabels, rowName, skylineColumns } from '#app/domain/skyline-form.ts';
@@ -30,8 +31,11 @@ export interface SkylineEditorProps {
   readonly problem: RefusedForm | undefined;
 }
 
-const emptyRow: SkylineRow = { azimuthDeg: '', elevationDeg: '', plusMinusDeg: '', source: '', leaf: '', name: '' };
+const emptyRow: SkylineRow = { azimuthDeg: '', elevationDeg: '', plusMinusDeg: '', source: 'clinometer', leaf: '', name: '' };
 const heads: Record<SkylineColumn, string> = { azimuthDeg: 'Bearing, ° true', elevationDeg: 'Elevation, °', plusMinusDeg: '±, °', source: 'Taken with', leaf: 'Tree', name: 'What it is' };
+
+const spans: Record<SkylineColumn, string> = { azimuthDeg: 'max-desk:col-span-2', elevationDeg: 'max-desk:col-span-2', plusMinusDeg: 'max-desk:col-span-2', source: 'max-desk:col-span-3', leaf: 'max-desk:col-span-3', name: 'max-desk:col-span-6' };
+const entryColumns = skylineColumns.map((key) => ({ key, head: heads[key], span: spans[key] }));
 
 function rowsOf(typed: Readonly<Record<string, string>>): SkylineRow[] {
   const count = Object.keys(typed).filter((name) => name.endsWith('.azimuthDeg')).length;
@@ -44,8 +48,8 @@ export function SkylineEditor({ rows: stored, paths, photos, base, saveLabel, ma
   const { field, refused } = formFields('save-skyline', problem, 'skyline');
   const [rows, setRows] = useState<readonly SkylineRow[]>(refused ? rowsOf(refused.typed) : [...stored, ...(mayEdit ? [emptyRow, emptyRow, emptyRow] : [])]);
   const hydrated = useHydrated();
-  const points = rows.flatMap((row) => (row.azimuthDeg !== '' && row.elevationDeg !== '' && Number.isFinite(Number(row.azimuthDeg)) && Number.isFinite(Number(row.elevationDeg)) ? [{ azimuthDeg: ((Number(row.azimuthDeg) % 360) + 360) % 360, elevationDeg: Number(row.elevationDeg), name: row.name, isTree: row.leaf !== '' }] : []));
-  const wrong = rows.flatMap((_row, index) => skylineColumns.map((column) => ({ field: field(rowName(index, column)), label: `Row ${index + 1}, ${heads[column]}` })));
+  const points = rows.flatMap((row) => (row.azimuthDeg !== '' && row.elevationDeg !== '' && Number.isFinite(Number(row.azimuthDeg)) && Math.abs(Number(row.elevationDeg)) <= 90 ? [{ azimuthDeg: ((Number(row.azimuthDeg) % 360) + 360) % 360, elevationDeg: Number(row.elevationDeg), name: row.name, isTree: row.leaf !== '' }] : []));
+  const wrong = rows.flatMap((_row, index) => skylineColumns.map((column) => ({ field: field(rowName(index, column)), label: entryLabel(index, heads[column]) })));
   const addRows = (more: readonly SkylineRow[]) => setRows([...rows.filter((row) => row.azimuthDeg !== '' || row.elevationDeg !== ''), ...more]);
   return (
     <div className="space-y-8">
@@ -55,10 +59,16 @@ export function SkylineEditor({ rows: stored, paths, photos, base, saveLabel, ma
         <input type="hidden" name="intent" value="save-skyline" />
         <input type="hidden" name={base.name} value={base.value} />
         {mayEdit ? null : <NumberTable caption="Points of the skyline" columns={skylineColumns.map((column) => ({ head: heads[column], numeric: column.endsWith('Deg') }))} rows={rows.map((row) => skylineColumns.map((column) => row[column]))} />}
-        {mayEdit ? <DataTable caption="Points of the skyline">
-          <TableHead>{skylineColumns.map((column) => <HeadCell key={column}>{heads[column]}</HeadCell>)}</TableHead>
-          <tbody>{rows.map((row, index) => <Line key={index} index={index} row={row} field={field} onChange={(next) => setRows(rows.map((one, at) => (at === index ? next : one)))} />)}</tbody>
-        </DataTable> : null}
+        {mayEdit ? (
+          <EntryRows
+            caption="Points of the skyline"
+            columns={entryColumns}
+            grid="desk:grid-cols-[1.5rem_7rem_7rem_6rem_10rem_10rem_minmax(10rem,1fr)]"
+            rowCount={rows.length}
+            fieldOf={(row, column) => field(rowName(row, column))}
+            control={(index, column, label) => <CellControl field={field(rowName(index, column))} label={label} column={column} value={rows[index]?.[column] ?? ''} onChange={(value) => setRows(rows.map((one, at) => (at === index ? { ...one, [column]: value } : one)))} />}
+          />
+        ) : null}
         {mayEdit ? (
           <>
             {hydrated ? <Button type="button" look="outlined" onClick={() => setRows([...rows, emptyRow, emptyRow, emptyRow])}>More rows</Button> : null}
@@ -79,35 +89,23 @@ export function SkylineEditor({ rows: stored, paths, photos, base, saveLabel, ma
   );
 }
 
-interface LineProps {
-  readonly index: number;
-  readonly row: SkylineRow;
-  readonly field: ReturnType<typeof formFields>['field'];
-  readonly onChange: (row: SkylineRow) => void;
+/** Columns with a list. */
+const lists: Partial<Record<SkylineColumn, readonly (readonly [string, string])[]>> = {
+  source: skylineSources.map((one) => [one, one] as const),
+  leaf: [['', 'no tree'], ...leafStates.map((one) => [one, leafLabels[one]] as const)],
+};
+
+interface CellProps {
+  readonly field: FieldLike;
+  readonly label: string;
+  readonly column: SkylineColumn;
+  readonly value: string;
+  readonly onChange: (value: string) => void;
 }
 
-function Line({ index, row, field, onChange }: LineProps) {
-  const label = (column: SkylineColumn) => `Row ${index + 1}, ${heads[column]}`;
-  const box = (column: SkylineColumn, width: string) => (
-    <Cell>
-      <input name={rowName(index, column)} id={`skyline-${rowName(index, column)}`} value={row[column]} onChange={(event) => onChange({ ...row, [column]: event.currentTarget.value })} aria-label={label(column)} autoComplete="off" className={`field-box min-w-0 ${width}`} />
-      <FieldError field={field(rowName(index, column))} />
-    </Cell>
-  );
-  const pick = (column: 'source' | 'leaf', options: readonly (readonly [string, string])[]) => (
-    <Cell>
-      <select name={rowName(index, column)} value={row[column]} onChange={(event) => onChange({ ...row, [column]: event.currentTarget.value })} aria-label={label(column)} className="field-box !w-36">{options.map(([value, words]) => <option key={value} value={value}>{words}</option>)}</select>
-      <FieldError field={field(rowName(index, column))} />
-    </Cell>
-  );
-  return (
-    <Row tight>
-      {box('azimuthDeg', '!w-24')}
-      {box('elevationDeg', '!w-24')}
-      {box('plusMinusDeg', '!w-20')}
-      {pick('source', [['', 'clinometer'], ...skylineSources.map((one) => [one, one] as const)])}
-      {pick('leaf', [['', 'no tree'], ...leafStates.map((one) => [one, leafLabels[one]] as const)])}
-      {box('name', '!min-w-40')}
-    </Row>
-  );
+function CellControl({ field, label, column, value, onChange }: CellProps) {
+  const shared = { name: field.name, id: fieldIds(field).id, value, 'aria-label': label, 'aria-invalid': hasErrors(field) || undefined, 'aria-describedby': describedBy(field, false), className: 'field-box min-w-0' };
+  const list = lists[column];
+  if (!list) return <input {...shared} onChange={(event) => onChange(event.currentTarget.value)} autoComplete="off" {...(column === 'name' ? {} : { inputMode: 'text' as const })} />;
+  return <select {...shared} onChange={(event) => onChange(event.currentTarget.value)}>{list.map(([one, words]) => <option key={one} value={one}>{words}</option>)}</select>;
 }

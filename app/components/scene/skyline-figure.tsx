@@ -2,6 +2,7 @@ import { scaleLinear } from 'd3-scale';
 import { useId } from 'react';
 import { ChartFrame, HatchPattern, innerOf, PlotSvg, PlotText, XAxis, YAxis } from '#app/components/charts/plot.tsx';
 import type { PlotBox } from '#app/components/charts/plot.tsx';
+import { textWidthPx } from '#app/components/charts/text-width.ts';
 
 export interface SunPathLine {
   readonly label: string;
@@ -46,7 +47,7 @@ function SkylinePlot({ width, points, paths }: SkylineFigureProps & { readonly w
     <PlotSvg box={box} label={`Skyline of ${points.length} points, up to ${Math.max(0, ...points.map((point) => point.elevationDeg)).toFixed(1)}°.`}>
       <defs><HatchPattern id={`${id}h`} /></defs>
       <YAxis box={box} ticks={y.ticks(4).map((value) => ({ at: y(value), text: `${value}°` }))} />
-      {paths.map((path, index) => <Path key={path.label} path={path} x={x} y={y} middleDeg={middleDeg} place={index} />)}
+      {paths.map((path, index) => <Path key={path.label} path={path} x={x} y={y} middleDeg={middleDeg} place={index} highestDeg={highest} rightPx={inner.x2} />)}
       {sorted.length > 1 ? <path d={`${line}L${inner.x2} ${inner.y2}L${inner.x1} ${inner.y2}Z`} fill={`url(#${id}h)`} className="stroke-none" /> : null}
       {sorted.length > 1 ? <path d={line} className="fill-none stroke-ink" strokeWidth="1.9" /> : null}
       {sorted.map((point, index) => <circle key={index} cx={x(point.azimuthDeg)} cy={y(Math.max(0, point.elevationDeg))} r="2.6" className={point.isTree ? 'fill-paper stroke-ink' : 'fill-ink'} />)}
@@ -72,7 +73,7 @@ function culminatesNorth(paths: readonly SunPathLine[]): boolean {
 }
 
 /** Broken where the path crosses the edge of the drawing, and below the horizon. The label keeps off those of the others. */
-function Path({ path, x, y, middleDeg, place }: { readonly path: SunPathLine; readonly x: Scale; readonly y: Scale; readonly middleDeg: number; readonly place: number }) {
+function Path({ path, x, y, middleDeg, place, highestDeg, rightPx }: { readonly path: SunPathLine; readonly x: Scale; readonly y: Scale; readonly middleDeg: number; readonly place: number; readonly highestDeg: number; readonly rightPx: number }) {
   const dashed = place > 0;
   const up = path.points.filter((point) => point.elevationDeg >= 0);
   const d = up.map((point, index) => {
@@ -80,13 +81,22 @@ function Path({ path, x, y, middleDeg, place }: { readonly path: SunPathLine; re
     const broken = !before || Math.abs(turned(before.azimuthDeg, middleDeg) - turned(point.azimuthDeg, middleDeg)) > 180;
     return `${broken ? 'M' : 'L'}${x(point.azimuthDeg).toFixed(1)} ${y(point.elevationDeg).toFixed(1)}`;
   }).join('');
-  // In the afternoon half, where names of the skyline seldom stand in the way.
-  const sorted = up.toSorted((a, b) => turned(a.azimuthDeg, middleDeg) - turned(b.azimuthDeg, middleDeg));
-  const top = sorted[Math.floor(sorted.length * (0.62 + 0.13 * place))] ?? null;
+  const beside = besideTheTop(up, place, highestDeg, (point) => x(point.azimuthDeg));
   return (
     <g>
       <path d={d} className="fill-none stroke-clear" strokeWidth={dashed ? 1 : 2} {...(dashed ? { strokeDasharray: '5 4' } : {})} />
-      {top ? <PlotText x={x(top.azimuthDeg) + 6} y={y(top.elevationDeg) - 6} tone="clear">{path.label}</PlotText> : null}
+      {beside ? <PlotText x={Math.min(x(beside.azimuthDeg) + 6, rightPx - textWidthPx(path.label, 12))} y={y(beside.elevationDeg) - 4} tone="clear">{path.label}</PlotText> : null}
     </g>
   );
+}
+
+/** Shares of its own height up to which the label of a line may stand, for the day itself, June and December. */
+const labelShares = [0.95, 0.92, 0.45];
+
+/** The point right of the highest one where the label stands: lower for each further line, so that labels keep apart. */
+function besideTheTop(points: SunPathLine['points'], place: number, highestDeg: number, x: (point: SunPathLine['points'][number]) => number): SunPathLine['points'][number] | null {
+  const top = points.reduce<SunPathLine['points'][number] | null>((best, point) => (best && best.elevationDeg >= point.elevationDeg ? best : point), null);
+  if (!top) return null;
+  const wantedDeg = Math.min(highestDeg * (0.78 - 0.26 * place), top.elevationDeg * (labelShares[place] ?? 0.5));
+  return points.filter((point) => x(point) >= x(top)).reduce((best, point) => (Math.abs(point.elevationDeg - wantedDeg) < Math.abs(best.elevationDeg - wantedDeg) ? point : best), top);
 }

@@ -16,8 +16,8 @@ export interface DoorCardProps {
 /** One page for the door of a site: what to do, and the code that opens the report there. Black on white, as it is printed. */
 export function DoorCard({ card }: DoorCardProps) {
   return (
-    <article style={{ colorScheme: 'light' }} className="max-w-[180mm] border-2 border-ink bg-white p-6 text-ink tablet:p-8">
-      <p className="bg-ink px-4 py-3 text-[1.125rem]/6 font-semibold text-white">Smoking or burning? Raise the alarm, get out, call {card.emergencyNumber}. Report later.</p>
+    <article data-print="alone" style={{ colorScheme: 'light' }} className="max-w-[180mm] border-2 border-ink bg-white p-6 text-ink tablet:p-8 print:[zoom:1.1]">
+      <p className="border-2 border-ink bg-ink px-4 py-3 text-[1.125rem]/6 font-semibold text-white print:bg-transparent print:text-ink">Smoking or burning? Raise the alarm, get out, call {card.emergencyNumber}. Report later.</p>
       <h1 className="pt-5 font-serif text-title">Have you seen a burn mark, or a very bright patch of sunlight?</h1>
       <p className="pt-1 text-account">Tell the site team. It takes about two minutes. You need no account and no name.</p>
       <div className="flex flex-wrap items-center gap-6 py-5">

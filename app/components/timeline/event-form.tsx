@@ -27,7 +27,7 @@ export function EventForm({ clientId, zone, documents, answer }: EventFormProps)
         <Select field={field('source', { required: true })} label="Read from" emptyLabel="Choose" options={timelineSources.map((value) => ({ value, label: timelineSourceLabels[value] }))} />
         <TextInput field={field('sourceName', { required: true })} label="Which one" help="Such as: fire panel in the lobby, camera 3." autoComplete="off" />
         <ClockTimeField field={field('readingAt', { required: true })} fieldFor={field} label="Clock reading" zone={zone} help="As the source shows it, before any correction." />
-        <TextInput field={field('clockErrorMin')} label="Clock error, minutes" help="Reading less true time: 6 when the clock is 6 min fast, -1.5 when slow. Empty: none known." inputMode="text" autoComplete="off" />
+        <TextInput field={field('clockErrorMin')} label="Clock error, minutes" help="Reading less true time: 6 when the clock is 6 min fast, −1.5 when slow. Empty: none known." inputMode="text" autoComplete="off" />
       </div>
       <TextInput field={field('clockErrorBasis', { required: true })} label="How the error is known" help="Such as: compared with a phone, 3 Feb; or: not checked." />
       <TextInput field={field('what', { required: true })} label="What it shows" help="No names of people." />

@@ -5,6 +5,7 @@ import type { FormAnswer } from '#app/components/findings/problem-fields.ts';
 import { AppLink } from '#app/components/ui/app-link.tsx';
 import { Button } from '#app/components/ui/button.tsx';
 import { Cell, DataTable, GroupRow, HeadCell, Row, TableHead } from '#app/components/ui/data-table.tsx';
+import { noReading } from '#app/domain/timeline.ts';
 import type { TimelineRow } from '#app/domain/timeline.ts';
 
 export interface TimelineTableProps {
@@ -15,6 +16,9 @@ export interface TimelineTableProps {
   readonly answer: FormAnswer | null;
 }
 
+/** Columns that a phone leaves out; it says the same under the event. */
+const wide = 'max-tablet:hidden';
+
 /** What happened when, day by day: the clock as read, the correction, the true time. */
 export function TimelineTable({ caseNumber, rows, mayWrite, answer }: TimelineTableProps) {
   const days = [...new Set(rows.map((row) => row.day))];
@@ -22,8 +26,8 @@ export function TimelineTable({ caseNumber, rows, mayWrite, answer }: TimelineTa
     <DataTable caption="Timeline of the case, in the order of true time">
       <TableHead>
         <HeadCell>True time</HeadCell>
-        <HeadCell>Clock read</HeadCell>
-        <HeadCell>Correction</HeadCell>
+        <HeadCell className={wide}>Clock read</HeadCell>
+        <HeadCell className={wide}>Correction</HeadCell>
         <HeadCell>What, and from which source</HeadCell>
       </TableHead>
       {days.map((day) => (
@@ -41,11 +45,12 @@ function TimelineLine({ caseNumber, row, mayWrite, answer }: { readonly caseNumb
   return (
     <Row>
       <Cell heading className={`whitespace-nowrap ${struck}`}>{row.trueTime}</Cell>
-      <Cell className={`whitespace-nowrap ${row.reading === 'no clock read' ? 'text-second' : struck}`}>{row.reading}</Cell>
-      <Cell className="whitespace-nowrap">{row.correction}</Cell>
+      <Cell className={`${wide} whitespace-nowrap ${row.reading === noReading ? 'text-second' : struck}`}>{row.reading}</Cell>
+      <Cell className={`${wide} whitespace-nowrap`}>{row.correction}</Cell>
       <Cell>
         <span className={struck}>{row.path ? <AppLink href={`${href('/cases/:caseNumber', { caseNumber: String(caseNumber) })}${row.path}`}>{row.what}</AppLink> : row.what}</span>
         <span className="block text-axis text-second">{[row.source, row.basis].filter(Boolean).join('; ')}</span>
+        {row.reading === noReading ? null : <span className="block text-axis text-second tablet:hidden">Clock read {row.reading}, correction {row.correction}</span>}
         {row.withdrawn === null ? null : <span className="block text-axis">Withdrawn: {row.withdrawn}</span>}
         {mayWrite && row.eventId && row.withdrawn === null ? <Withdraw eventId={row.eventId} what={row.what} answer={answer?.typed['eventId'] === row.eventId ? answer : null} /> : null}
       </Cell>
@@ -57,7 +62,7 @@ function Withdraw({ eventId, what, answer }: { readonly eventId: string; readonl
   const field = problemFields(answer, {}, `withdraw-${eventId}-`);
   return (
     <details open={answer !== null} data-print="no" className="pt-1 text-small">
-      <summary className="inline-flex min-h-6 items-center underline decoration-ember decoration-2 underline-offset-4">Withdraw<span className="sr-only">: {what}</span></summary>
+      <summary className="inline-flex min-h-(--target-height) items-center underline decoration-ember decoration-2 underline-offset-4">Withdraw<span className="sr-only">: {what}</span></summary>
       <Form method="post" className="max-w-96 space-y-2 py-2">
         <input type="hidden" name="intent" value="withdraw" />
         <input type="hidden" name="eventId" value={eventId} />

@@ -30,8 +30,8 @@ export function Numbers({ figure, title, picture, numbers, note, numbersFirst = 
           {title}
         </figcaption>
         <span data-print="no" className="flex flex-none items-baseline gap-4">
-        {csv && files ? <AppLink href={`${files}/${csv}.csv`} download className="inline-flex min-h-6 items-center text-small" aria-describedby={`${id}-title`}>CSV</AppLink> : null}
-        <label className="relative inline-flex min-h-6 flex-none cursor-pointer items-center has-focus-visible:outline-3 has-focus-visible:outline-offset-2 has-focus-visible:outline-ink">
+        {csv && files ? <AppLink href={`${files}/${csv}.csv`} download className="inline-flex min-h-(--target-height) items-center text-small" aria-describedby={`${id}-title`}>CSV</AppLink> : null}
+        <label className="relative inline-flex min-h-(--target-height) flex-none cursor-pointer items-center has-focus-visible:outline-3 has-focus-visible:outline-offset-2 has-focus-visible:outline-ink">
           <input type="checkbox" className="numbers-switch absolute inset-0 h-full w-full cursor-pointer opacity-0" defaultChecked={numbersFirst} aria-label="Show the numbers" aria-describedby={`${id}-title`} />
           <span aria-hidden="true" className="text-small underline decoration-ember decoration-2 underline-offset-4">
             <span className="word-numbers">Numbers</span>

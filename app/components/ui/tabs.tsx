@@ -26,7 +26,7 @@ export function Tabs({ label, items, look = 'page' }: TabsProps) {
             <AppLink
               href={item.href}
               {...(item.current ? { 'aria-current': 'page' as const } : {})}
-              className={`inline-flex min-h-11 items-center border-b-4 no-underline ${page ? 'desk:min-h-10' : 'text-small desk:min-h-8'} ${item.current ? 'border-here font-semibold' : 'border-transparent font-medium'}`}
+              className={`inline-flex min-h-11 min-w-6 items-center justify-center border-b-4 no-underline ${page ? 'desk:min-h-10' : 'text-small desk:min-h-8'} ${item.current ? 'border-here font-semibold' : 'border-transparent font-medium'}`}
             >
               {item.label}
               {item.count === undefined ? null : <> {item.count}</>}

@@ -7,7 +7,6 @@ import { FieldError } from '#app/components/forms/field.tsx';
 import type { FieldLike } from '#app/components/forms/field-like.ts';
 import { Select, TextArea, TextInput } from '#app/components/forms/text-field.tsx';
 import { Button } from '#app/components/ui/button.tsx';
-import { SectionHeading } from '#app/components/ui/page-title.tsx';
 import { clockKindLabels, clockKinds, dateOrderLabels, dateOrders, unitsOf } from '#app/domain/weather-table.ts';
 import { weatherQuantities } from '#app/domain/weather.ts';
 import { sourceLabels, WeatherSourceFields } from './weather-source-fields.tsx';
@@ -50,10 +49,10 @@ export function WeatherFileForm({ problem }: { readonly problem: RefusedForm | u
 export function WeatherMappingForm({ stage, problem }: { readonly stage: FileStage; readonly problem: RefusedForm | undefined }) {
   const { field: fieldOf, refused } = formFields(problem?.intent ?? 'import', problem, 'map');
   const field = (name: string) => fieldOf(name, stage.typed[name]);
-  const labels = [...Object.entries({ ...sourceLabels, dateColumn: 'Date column', clock: 'Clock', stamp: 'Stamp', intervalMin: 'Length', headLine: 'Line of the names', file: 'File', offsetHours: 'Offset' }), ...weatherQuantities.map(({ key, label }): [string, string] => [key, label])];
+  const labels = [...Object.entries({ ...sourceLabels, dateColumn: 'Date, or date and time', clock: 'Times are', stamp: 'A time is the', intervalMin: 'Length of an interval', headLine: 'Names stand in line', file: 'File', offsetHours: 'Fixed offset' }), ...weatherQuantities.map(({ key, label }): [string, string] => [key, label])];
   return (
     <Form method="post" className="space-y-6" preventScrollReset>
-      <SectionHeading level={3} note={stage.look.formatWords}>The file</SectionHeading>
+      <p className="text-second">{stage.look.formatWords}</p>
       {refused ? <ErrorSummary errors={refused.formErrors} fields={labels.map(([name, label]) => ({ field: field(name), label }))} title="Not kept yet. The file is still here." /> : null}
       <textarea name="text" defaultValue={stage.typed['text'] ?? ''} readOnly hidden aria-hidden="true" />
       {stage.look.format === 'table' ? <Mapping columns={stage.look.columns} field={field} /> : null}

@@ -6,16 +6,15 @@ import { TextInput } from '#app/components/forms/text-field.tsx';
 import { Button } from '#app/components/ui/button.tsx';
 import { EmptyState } from '#app/components/ui/notice.tsx';
 import { SectionHeading } from '#app/components/ui/page-title.tsx';
-import { recordColumns } from '#app/domain/weather-view.ts';
 import type { WeatherRecordView } from '#app/domain/weather-view.ts';
 
 const summaryLook = 'inline-flex min-h-11 items-center underline decoration-ember decoration-2 underline-offset-4 desk:min-h-8';
 
 export function WeatherRecords({ records, mayEdit, problem }: { readonly records: readonly WeatherRecordView[]; readonly mayEdit: boolean; readonly problem: RefusedForm | undefined }) {
   return (
-    <section>
+    <section className="min-w-0">
       <SectionHeading note="each stays as it came; a wrong one is set aside">Records</SectionHeading>
-      {records.length === 0 ? <EmptyState title="No weather is on record for this case." /> : null}
+      {records.length === 0 ? <EmptyState title="Nothing yet.">Bring the numbers of the nearest station: its file, the archive, or a few values typed by hand. A station 30 km off cannot prove a clear gap.</EmptyState> : null}
       <ol>{records.map((record) => <Record key={record.number} record={record} mayEdit={mayEdit} problem={problem?.typed['number'] === String(record.number) ? problem : undefined} />)}</ol>
     </section>
   );
@@ -34,7 +33,7 @@ function Record({ record, mayEdit, problem }: { readonly record: WeatherRecordVi
       <div className="flex flex-wrap gap-x-6">
         <details className="min-w-0 max-w-full">
           <summary className={summaryLook}>Values<span className="sr-only"> of record {record.number}</span></summary>
-          <NumberTable caption={`Values of record ${record.number}`} columns={recordColumns.map((head, index) => ({ head, numeric: index > 1 }))} rows={record.rows} />
+          <NumberTable caption={`Values of record ${record.number}`} columns={record.columns.map((head, index) => ({ head, numeric: index > 1 }))} rows={record.rows.map((row) => row.map((text, index) => (index < 2 ? <span key={index} className="whitespace-nowrap">{text}</span> : text)))} />
           {record.rows.length === 60 ? <p className="text-axis text-second">The first 60 are shown.</p> : null}
         </details>
         {mayEdit && !record.setAside ? (

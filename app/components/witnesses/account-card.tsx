@@ -44,7 +44,7 @@ export function AccountCard({ account, statements, answer }: AccountCardProps) {
             { term: 'Speaks of', value: account.speaksOf ?? 'no moment named' },
             { term: 'Language', value: account.language },
             { term: 'Read back', value: account.readBack ? 'yes' : <b>no</b> },
-            { term: 'Signed copy', value: account.signedCopy ? <a href={href('/documents/:documentId', { documentId: account.signedCopy.id })} download className="inline-flex min-h-6 items-center">{account.signedCopy.words}</a> : 'none' },
+            { term: 'Signed copy', value: account.signedCopy ? <a href={href('/documents/:documentId', { documentId: account.signedCopy.id })} download className="inline-flex min-h-11 desk:min-h-0 items-center">{account.signedCopy.words}</a> : 'none' },
           ]}
         />
         {statements && !account.signedCopy && statements.length > 0 ? (

@@ -26,7 +26,7 @@ export function AccountForm({ clientId, zone, people, statements, answer }: Acco
       <input type="hidden" name="clientId" value={answer?.typed['clientId'] ?? clientId} />
       <ErrorSummary errors={answer?.formErrors} fields={names.map(([name, label]) => ({ field: field(name), label }))} />
       <fieldset className="space-y-4 border-l-4 border-hair pl-4">
-        <legend className="pb-1 font-semibold">The person, kept apart from the words</legend>
+        <legend className="pb-2 font-semibold">The person, kept apart from the words</legend>
         {people.length > 0 ? <Select field={field('involvementId')} label="Known in this case" emptyLabel="Somebody new" options={people.map((person) => ({ value: person.id, label: person.words }))} /> : null}
         <div className="grid gap-4 tablet:grid-cols-2">
           <TextInput field={field('personName')} label="Name of a new person" help="Seen by those who may see personal fields. A file for others says Witness A. No name of a child." autoComplete="off" />
@@ -38,7 +38,7 @@ export function AccountForm({ clientId, zone, people, statements, answer }: Acco
         <ClockTimeField field={field('takenAt', { required: true })} fieldFor={field} label="Taken at" zone={zone} />
         <ClockTimeField field={field('speaksOfAt')} fieldFor={field} label="The moment it speaks of, if it names one" zone={zone} />
       </div>
-      <div className="max-w-80"><TextInput field={field('language', { required: true })} label="Language" help="Say if there was an interpreter." autoComplete="off" /></div>
+      <div className="tablet:max-w-80"><TextInput field={field('language', { required: true })} label="Language" help="Say if there was an interpreter." autoComplete="off" /></div>
       <TextArea field={field('words', { required: true })} label="Account, in their own words" help="What the person saw, heard and did; not what they think the cause was. Write only what is needed. Injury details go in the injury box." rows={8} serif />
       <ChoiceChips field={field('readBack')} legend="Was it read back to them?" options={[{ value: 'yes', label: 'Yes' }, { value: 'no', label: 'No' }]} />
       {statements.length > 0 ? <div className="max-w-120"><Select field={field('signedAttachmentId')} label="Signed copy" emptyLabel="None yet" options={statements.map((one) => ({ value: one.id, label: one.words }))} /></div> : <p className="text-small text-second">A signed copy is added under Evidence as a personal document, and then named here.</p>}

@@ -2,6 +2,7 @@ import type { ExamKind, HolderRole } from '#app/domain/evidence.ts';
 import { examKindLabels, holderRoleLabels, isStored } from '#app/domain/evidence.ts';
 import { formatDay } from '#app/domain/local-time.ts';
 import type { FigureMark, ReportFigure } from '#app/domain/report-document.ts';
+import { custodyAxis } from './custody-axis.ts';
 import { foldedScale } from './folded-scale.ts';
 import type { FoldedScale } from './folded-scale.ts';
 import { textWidth } from './text-size.ts';
@@ -13,6 +14,8 @@ export interface CustodyLine {
   readonly seal: string;
   readonly holders: readonly { readonly role: HolderRole; readonly from: Date; readonly to: Date | null }[];
   readonly exams: readonly { readonly kind: ExamKind; readonly at: Date }[];
+  /** Days of planned examinations that may alter the item. */
+  readonly planned: readonly Date[];
 }
 
 export interface CustodyFigureOptions {
@@ -28,12 +31,14 @@ export interface CustodyFigureOptions {
 
 /**
  * One line an item over folded days: thick in a person's hands, thin in a store, a tick with a foot at each hand-over,
- * a square for each examination. Drawn from records that cannot have a gap between them.
+ * a square for each examination, dashed while it is planned. Drawn from records that cannot have a gap between them; the
+ * line ends at `now`, and a plan after it stands on bare ground.
  */
 export function custodyFigure(lines: readonly CustodyLine[], { number, width, textSize, zone, now: asked, endWords = 'today' }: CustodyFigureOptions): ReportFigure {
   const recorded = lines.flatMap((line) => [...line.holders.map((holder) => holder.from), ...line.exams.map((exam) => exam.at)]);
   const now = new Date(Math.max(asked.getTime(), ...recorded.map((instant) => instant.getTime())));
-  const instants = [...recorded, now];
+  const planned = lines.flatMap((line) => line.planned);
+  const instants = [...recorded, now, ...planned];
   const scale = foldedScale(instants, 4, width - 8);
   const head = textSize * 2.4;
   const row = textSize * 2 + 38;
@@ -45,38 +50,15 @@ export function custodyFigure(lines: readonly CustodyLine[], { number, width, te
     alt: `Custody of ${lines.length} ${lines.length === 1 ? 'item' : 'items'} without a gap. ${lines.map((line) => lineWords(line, zone)).join(' ')}`,
     widthPt: width,
     heightPt: height,
-    marks: [...axis(scale, { textSize, zone, head, height, now, endWords }), ...lines.flatMap((line, index) => itemMarks(line, scale, { top: head + index * row, row, textSize, width, now }))],
+    marks: [...custodyAxis(scale, { textSize, zone, head, height, now, endWords, first: planned }), ...lines.flatMap((line, index) => itemMarks(line, scale, { top: head + index * row, row, textSize, width, now }))],
   };
 }
 
-function lineWords({ code, holders, exams }: CustodyLine, zone: string): string {
+function lineWords({ code, holders, exams, planned }: CustodyLine, zone: string): string {
   const held = holders.map((holder) => `${holderRoleLabels[holder.role]} from ${formatDay(holder.from, zone)}`).join(', ');
-  const examined = exams.map((exam) => `${examKindLabels[exam.kind].toLowerCase()} ${formatDay(exam.at, zone)}`).join(', ');
+  const made = exams.map((exam) => `${examKindLabels[exam.kind].toLowerCase()} ${formatDay(exam.at, zone)}`);
+  const examined = [...made, ...planned.map((at) => `planned, may alter the item, ${formatDay(at, zone)}`)].join(', ');
   return `${code}: ${held}${examined ? `; ${examined}` : ''}.`;
-}
-
-function axis(scale: FoldedScale, { textSize, zone, head, height, now, endWords }: { textSize: number; zone: string; head: number; height: number; now: Date; endWords: string }): FigureMark[] {
-  const y = head - textSize * 0.6;
-  const marks: FigureMark[] = scale.folds.map((fold): FigureMark => ({ mark: 'line', points: [[fold.from + 2, y], [fold.to - 2, y]], ink: 'edge', widthPt: 1, dash: [1, 3] }));
-  let free = -Infinity;
-  let said = '';
-  for (const stop of scale.stops) {
-    const today = stop.at.getTime() === now.getTime();
-    const text = today ? endWords : formatDay(stop.at, zone).replace(/ \d{4}$/u, '');
-    const half = textWidth(text, textSize) / 2;
-    const x = Math.min(Math.max(stop.x, half), scale.stops.at(-1)?.x ?? stop.x);
-    if (text === said || (x - half < free && !today)) continue;
-    said = text;
-    if (today) marks.push({ mark: 'line', points: [[stop.x, y], [stop.x, height]], ink: 'clear', widthPt: 1.2 });
-    marks.push({ mark: 'line', points: [[stop.x, y - 3], [stop.x, y + 3]], ink: 'ink', widthPt: 1 });
-    if (x - half >= free) marks.push({ mark: 'text', x: today ? stop.x + 4 : x, y: y - 5, text, sizePt: textSize, anchor: today ? 'end' : 'middle', ink: today ? 'clear' : 'ink' });
-    free = x + half + textSize * 0.6;
-  }
-  for (const fold of scale.folds) {
-    const text = `${fold.days} days`;
-    if (fold.to - fold.from > textWidth(text, textSize)) marks.push({ mark: 'text', x: (fold.from + fold.to) / 2, y: y + textSize + 1, text, sizePt: textSize, anchor: 'middle', ink: 'second' });
-  }
-  return marks;
 }
 
 interface RowBox {
@@ -109,7 +91,7 @@ function itemMarks(line: CustodyLine, scale: FoldedScale, { top, row, textSize, 
       free = x1 + 4 + textWidth(label, textSize) + textSize * 0.5;
     }
   }
-  return [...marks, ...line.exams.flatMap((exam) => examMarks(exam.kind, scale.x(exam.at), y))];
+  return [...marks, ...line.exams.flatMap((exam) => examMarks(exam.kind, scale.x(exam.at), y)), ...line.planned.flatMap((at) => plannedMarks(scale.x(at), y))];
 }
 
 /** Small filled: looked at. Square in square: nothing altered. Square with a diagonal: may have altered it. */
@@ -118,4 +100,14 @@ function examMarks(kind: ExamKind, x: number, y: number): FigureMark[] {
   if (kind === 'visual') return [square(4, 'ink')];
   if (kind === 'non-destructive') return [square(6, 'paper'), square(2, 'ink')];
   return [square(6, 'paper'), { mark: 'line', points: [[x - 6, y + 6], [x + 6, y - 6]], ink: 'ink', widthPt: 1.4 }];
+}
+
+/** The square with a diagonal, dashed: planned, may alter. */
+function plannedMarks(x: number, y: number): FigureMark[] {
+  const corners = [[x - 6, y - 6], [x + 6, y - 6], [x + 6, y + 6], [x - 6, y + 6], [x - 6, y - 6]] as const;
+  return [
+    { mark: 'rect', x: x - 6, y: y - 6, width: 12, height: 12, fill: 'paper' },
+    { mark: 'line', points: corners, ink: 'ink', widthPt: 1.4, dash: [3, 2] },
+    { mark: 'line', points: [[x - 6, y + 6], [x + 6, y - 6]], ink: 'ink', widthPt: 1.4, dash: [3, 2] },
+  ];
 }

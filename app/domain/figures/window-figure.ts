@@ -2,6 +2,7 @@ import { formatClock, formatDay, formatDayClock, localDay } from '#app/domain/lo
 import type { FigureMark, ReportFigure } from '#app/domain/report-document.ts';
 import type { ReportedResult } from '#app/domain/report-source.ts';
 import { minuteReasonWords, minuteVerdictWords } from '#app/domain/run-words.ts';
+import { clockTicks } from './plot.ts';
 import { textWidth } from './text-size.ts';
 
 const hourMs = 3_600_000;
@@ -34,10 +35,11 @@ export function windowFigure(result: ReportedResult, options: FigureOptions): Re
   for (const run of result.runs) marks.push(...runMarks(run, x, middle));
   for (const edge of [start, end]) marks.push({ mark: 'line', points: [[x(edge), top - 3], [x(edge), top + height + 3]], ink: 'ink', widthPt: 1.5 });
   const { sunlit, notSunlit, cannotTell } = result.totals;
+  const days = [...new Set([start, end].map((at) => formatDay(new Date(at), zone)))];
   return {
     kind: 'figure',
     number,
-    title: `The onset window, ${formatDay(new Date(start), zone)}, case time ${zone.replaceAll('_', ' ')}`,
+    title: `The onset window, ${days.join(' to ')}, case time ${zone.replaceAll('_', ' ')}`,
     alt: `Examined from ${formatDayClock(new Date(start), zone)} to ${formatDayClock(new Date(end), zone)}: ${sunlit} min sunlit, ${notSunlit} min not sunlit, ${cannotTell} min that cannot be told. ${result.runs.map((run) => runWords(run, zone)).join('; ')}.`,
     widthPt: width,
     heightPt: top + height + 8,
@@ -58,18 +60,13 @@ function daylightOf(result: ReportedResult): { rise: number; set: number }[] {
 
 function hourMarks(from: number, to: number, x: (ms: number) => number, { top, textSize, zone, width }: { top: number; textSize: number; zone: string; width: number }): FigureMark[] {
   const marks: FigureMark[] = [];
-  const hours = (to - from) / hourMs;
-  const step = [0.5, 1, 2, 3, 6, 12, 24].find((candidate) => (candidate / hours) * width > textSize * 5) ?? 24;
   let free = -Infinity;
-  for (let at = Math.ceil(from / (hourMs / 2)) * (hourMs / 2); at <= to; at += hourMs / 2) {
-    const minutes = Number(formatClock(new Date(at), zone).slice(0, 2)) * 60 + Number(formatClock(new Date(at), zone).slice(3));
-    if (minutes % (step * 60) !== 0) continue;
-    const text = step === 24 ? formatDay(new Date(at), zone) : formatClock(new Date(at), zone);
+  for (const { at, text } of clockTicks(from, to, zone, x, textSize)) {
     const half = textWidth(text, textSize) / 2;
-    marks.push({ mark: 'line', points: [[x(at), top - 5], [x(at), top]], ink: 'ink', widthPt: 0.8 });
-    if (x(at) - half < free || x(at) - half < 0 || x(at) + half > width) continue;
-    marks.push({ mark: 'text', x: x(at), y: top - 8, text, sizePt: textSize, anchor: 'middle' });
-    free = x(at) + half + textSize * 0.5;
+    marks.push({ mark: 'line', points: [[at, top - 5], [at, top]], ink: 'ink', widthPt: 0.8 });
+    if (at - half < free || at - half < 0 || at + half > width) continue;
+    marks.push({ mark: 'text', x: at, y: top - 8, text, sizePt: textSize, anchor: 'middle' });
+    free = at + half + textSize * 0.5;
   }
   return marks;
 }

@@ -1,4 +1,4 @@
-import type { SourceRef } from '#app/physics/model.ts';
+import type { SourceRef } from '#app/physics/model/stated.ts';
 
 /** Sources that several material rows share. */
 export const fsri: SourceRef = {

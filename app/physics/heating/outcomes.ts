@@ -1,4 +1,6 @@
-import type { Band, HeatingResult, SourceRef, TargetInput, TargetOutcome } from '#app/physics/model.ts';
+import type { HeatingResult, TargetOutcome } from '#app/physics/model/heating.ts';
+import type { TargetInput } from '#app/physics/model/input.ts';
+import type { Band, SourceRef } from '#app/physics/model/stated.ts';
 import { zeroCelsiusK } from '#app/physics/constants.ts';
 import { roundSignificant } from '#app/physics/units.ts';
 import { steadySurfaceK, surfaceTemperatureK, type HeatedBody, type SpotSurroundings } from './heat-balance.ts';

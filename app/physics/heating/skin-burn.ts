@@ -1,4 +1,4 @@
-import type { SourceRef } from '#app/physics/model.ts';
+import type { SourceRef } from '#app/physics/model/stated.ts';
 
 /** Time and flux of a second-degree burn on blackened skin. Rows stoll-1 … stoll-30. */
 export const stollTable: readonly (readonly [seconds: number, fluxKwm2: number])[] = [

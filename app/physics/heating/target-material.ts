@@ -1,4 +1,4 @@
-import type { SourceRef } from '#app/physics/model.ts';
+import type { SourceRef } from '#app/physics/model/stated.ts';
 
 /** Rows of the reference data that a figure comes from. */
 export interface Provenance {

@@ -1,4 +1,4 @@
-import type { SourceRef } from '#app/physics/model.ts';
+import type { SourceRef } from '#app/physics/model/stated.ts';
 import type { OpticKind } from './optic.ts';
 
 /** Class value of the surface slope error. [mrad] One sigma on each axis. */

@@ -1,4 +1,4 @@
-import type { SourceRef } from '#app/physics/model.ts';
+import type { SourceRef } from '#app/physics/model/stated.ts';
 import type { RefractiveMaterialName } from './optic.ts';
 
 /**

@@ -1,4 +1,4 @@
-import type { BestMoment, DniResult } from '#app/physics/model.ts';
+import type { BestMoment, DniResult } from '#app/physics/model/focus.ts';
 import { lateralToleranceM, surveySigmaM } from '#app/physics/lit.ts';
 import { directBeamAt, type DirectBeam } from '#app/physics/sky/direct-beam.ts';
 import { geocentricSun } from '#app/physics/sun/ephemeris.ts';

@@ -1,4 +1,4 @@
-import type { ReconstructionResult } from '#app/physics/model.ts';
+import type { ReconstructionResult } from '#app/physics/model/result.ts';
 import { spannedDeg, surveySigmaM } from '#app/physics/lit.ts';
 import { recurrenceBands, yearMinutes } from '#app/physics/recurrence.ts';
 import { halfAngleRad } from '#app/physics/sun/sun-disc.ts';

@@ -1,4 +1,4 @@
-import type { ReconstructionInput } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
 import { checkRanges, inputRanges, materialRanges, opticRanges, sealedUnitRanges } from '#app/physics/input-ranges.ts';
 
 function checkOptic({ optic }: ReconstructionInput): void {

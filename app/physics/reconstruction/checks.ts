@@ -1,4 +1,5 @@
-import type { Check, HeatingResult, TestName } from '#app/physics/model.ts';
+import type { HeatingResult } from '#app/physics/model/heating.ts';
+import type { Check, TestName } from '#app/physics/model/tests.ts';
 import { headingDifferenceDeg } from '#app/physics/alignment.ts';
 import { sunshineThresholdWm2 } from '#app/physics/constants.ts';
 import { lateralToleranceM, surveySigmaM } from '#app/physics/lit.ts';

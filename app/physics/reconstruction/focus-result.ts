@@ -1,4 +1,5 @@
-import type { Band, FluxDisc, FocusResult } from '#app/physics/model.ts';
+import type { FluxDisc, FocusResult } from '#app/physics/model/focus.ts';
+import type { Band } from '#app/physics/model/stated.ts';
 import { roundBand } from '#app/physics/heating/outcomes.ts';
 import { contourDiscM, contourHalfWidthM, zoneAlong } from '#app/physics/reach.ts';
 import type { Beam } from '#app/physics/optics/closed-form/beam.ts';

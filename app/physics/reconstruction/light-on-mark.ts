@@ -1,4 +1,4 @@
-import type { LightInterval, LightOnMark } from '#app/physics/model.ts';
+import type { LightInterval, LightOnMark } from '#app/physics/model/minutes.ts';
 import { minuteMs } from '#app/physics/sun-track.ts';
 import { roundSignificant, toIsoUtc } from '#app/physics/units.ts';
 import { dot } from '#app/physics/vector.ts';

@@ -1,4 +1,4 @@
-import type { Assumption } from '#app/physics/model.ts';
+import type { Assumption } from '#app/physics/model/stated.ts';
 import type { Optic, OpticInput, PaneInput, SealedUnitInput } from '#app/physics/optics/optic.ts';
 import { checkRanges, sealedUnitRanges } from '#app/physics/input-ranges.ts';
 import { sealedUnitBow } from '#app/physics/optics/trace/plate.ts';

@@ -1,4 +1,4 @@
-import type { SamplingResult, TraceTableResult } from '#app/physics/model.ts';
+import type { SamplingResult, TraceTableResult } from '#app/physics/model/sampling.ts';
 import type { Mark, Miss } from '#app/physics/alignment.ts';
 import { coneAbsorptance, ignitionTime } from '#app/physics/heating/ignition.ts';
 import { absorptanceBand, roundBand } from '#app/physics/heating/outcomes.ts';

@@ -1,4 +1,5 @@
-import type { Assumption, OpeningInput, ReconstructionInput } from '#app/physics/model.ts';
+import type { OpeningInput, ReconstructionInput } from '#app/physics/model/input.ts';
+import type { Assumption } from '#app/physics/model/stated.ts';
 import { markFromCoordinates, readMark, requiredSunFor, type Mark, type RequiredSun } from '#app/physics/alignment.ts';
 import { lowestHarmfulFluxKwm2 } from '#app/physics/heating/outcomes.ts';
 import type { TargetMaterial } from '#app/physics/heating/target-material.ts';

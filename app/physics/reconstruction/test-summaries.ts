@@ -1,4 +1,6 @@
-import type { Check, Grade, HeatingResult, ReconstructionResult, TestName, TestResult, TestSummary } from '#app/physics/model.ts';
+import type { HeatingResult } from '#app/physics/model/heating.ts';
+import type { ReconstructionResult } from '#app/physics/model/result.ts';
+import type { Check, Grade, TestName, TestResult, TestSummary } from '#app/physics/model/tests.ts';
 import { sunshineThresholdWm2 } from '#app/physics/constants.ts';
 import { lateralToleranceM } from '#app/physics/lit.ts';
 import { focusesForward } from '#app/physics/reach.ts';

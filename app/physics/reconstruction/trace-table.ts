@@ -1,4 +1,4 @@
-import type { TraceTableResult } from '#app/physics/model.ts';
+import type { TraceTableResult } from '#app/physics/model/sampling.ts';
 import type { Beam } from '#app/physics/optics/closed-form/beam.ts';
 import type { Optic } from '#app/physics/optics/optic.ts';
 import { hasAxis, scaledOptic } from '#app/physics/optics/scaled-optic.ts';

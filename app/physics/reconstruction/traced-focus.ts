@@ -1,4 +1,5 @@
-import type { Assumption, TracedFocusResult } from '#app/physics/model.ts';
+import type { TracedFocusResult } from '#app/physics/model/focus.ts';
+import type { Assumption } from '#app/physics/model/stated.ts';
 import { slopeErrors } from '#app/physics/optics/optic-defaults.data.ts';
 import type { Beam } from '#app/physics/optics/closed-form/beam.ts';
 import { concentrationAlongAxis, dangerZone, type ZonePoint } from '#app/physics/optics/trace/danger-zone.ts';

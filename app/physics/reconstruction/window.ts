@@ -1,4 +1,5 @@
-import type { MinuteResult, MinuteRun, ReconstructionResult } from '#app/physics/model.ts';
+import type { MinuteResult, MinuteRun } from '#app/physics/model/minutes.ts';
+import type { ReconstructionResult } from '#app/physics/model/result.ts';
 import { judgeMinute, surveySigmaM, type Judgement } from '#app/physics/lit.ts';
 import { directBeamAt } from '#app/physics/sky/direct-beam.ts';
 import { minuteMs, type SunMinute } from '#app/physics/sun-track.ts';

@@ -1,4 +1,4 @@
-import type { ClimateClass } from '#app/physics/model.ts';
+import type { ClimateClass } from '#app/physics/model/input.ts';
 
 /** Median air of a climate class. The figures are stated values from memory, so the screen says "unverified". */
 export interface ClimateAir {

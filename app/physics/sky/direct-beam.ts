@@ -1,4 +1,4 @@
-import type { OpeningInput, SkyInput } from '#app/physics/model.ts';
+import type { OpeningInput, SkyInput } from '#app/physics/model/input.ts';
 import { degree, parseUtc, toIsoUtc, wrap180 } from '#app/physics/units.ts';
 import { clearSkyAt, type Air } from './clear-sky.ts';
 import { extraterrestrialWm2 } from './extraterrestrial.ts';

@@ -99,6 +99,7 @@ function TakeAway({ frame, fileHref }: { readonly frame: Frame; readonly fileHre
       {has('report.pdf') ? <ButtonLink href={fileHref('report.pdf')} download look="outlined" block>Report, PDF</ButtonLink> : null}
       {has('runs.csv') ? <ButtonLink href={fileHref('runs.csv')} download look="outlined" block>Minutes of sun, CSV</ButtonLink> : null}
       {has('measurements.csv') ? <ButtonLink href={fileHref('measurements.csv')} download look="outlined" block>Measurements, CSV</ButtonLink> : null}
+      {has('weather.csv') ? <ButtonLink href={fileHref('weather.csv')} download look="outlined" block>Weather, CSV</ButtonLink> : null}
       <p className="text-axis text-second">On paper: print this page. Release <span className="font-mono">{shortHash(frame.releasedHash)}</span></p>
     </section>
   );
@@ -114,7 +115,7 @@ function Siblings({ siblings, current }: { readonly siblings: Route.ComponentPro
           <li key={one.id} className="flex gap-3 border-b border-hair py-1.5">
             <span className="font-serif">{one.number}</span>
             <span>
-              {one.number === current ? <span aria-current="page" className="font-semibold">{one.released}, this one</span> : <AppLink href={href('/case-files/:releaseId', { releaseId: one.id })} className="inline-flex min-h-6 items-center">{one.released}</AppLink>}
+              {one.number === current ? <span aria-current="page" className="font-semibold">{one.released}, this one</span> : <AppLink href={href('/case-files/:releaseId', { releaseId: one.id })} className="inline-flex min-h-(--target-height) items-center">{one.released}</AppLink>}
               <span className="block text-axis text-second">{one.changeNote}</span>
             </span>
           </li>

@@ -66,7 +66,7 @@ export default function Account({ loaderData: account, actionData: problem }: Ro
             <section aria-labelledby="log-heading" className="border-t-[1.5px] border-ink pt-2">
               <h2 id="log-heading" className="text-group font-semibold">Log</h2>
               <LogLines lines={account.log} />
-              <p className="pt-1"><AppLink href={`${casePath}/log`} className="inline-flex min-h-8 items-center text-small">Whole log, {account.logCount} {account.logCount === 1 ? 'line' : 'lines'}</AppLink></p>
+              <p className="pt-1"><AppLink href={`${casePath}/log`} className="inline-flex min-h-(--target-height) items-center text-small">Whole log, {account.logCount} {account.logCount === 1 ? 'line' : 'lines'}</AppLink></p>
             </section>
           ) : null}
         </div>

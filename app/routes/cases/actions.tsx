@@ -9,7 +9,7 @@ import { ActionForm } from '#app/components/corrective-actions/action-form.tsx';
 import { YearRibbonKey } from '#app/components/burn-card/year-ribbon.tsx';
 import { ButtonLink } from '#app/components/ui/button.tsx';
 import { EmptyState } from '#app/components/ui/notice.tsx';
-import { actionFormSchema, effectSchema, noteSchema, reassignSchema, reDateSchema, verifySchema, withdrawSchema } from '#app/domain/action-form.ts';
+import { actionFormSchema, doneSchema, effectSchema, reassignSchema, reDateSchema, sendBackSchema, verifySchema, withdrawSchema } from '#app/domain/action-form.ts';
 import { readCaseNumber } from '#app/domain/case-number.ts';
 import { DomainError, notFound } from '#app/domain/errors.ts';
 import type { Actor } from '#app/domain/roles.ts';
@@ -78,11 +78,11 @@ async function step(intent: Exclude<z.infer<typeof intents>, 'add'>, actor: Acto
       await startAction(target);
       return '';
     case 'mark-done':
-      return read(noteSchema, ({ note }) => completeAction({ ...target, note, files }));
+      return read(doneSchema, ({ note }) => completeAction({ ...target, note, files }));
     case 'verify':
       return read(verifySchema, (typed) => verifyAction({ ...target, ...typed }));
     case 'send-back':
-      return read(noteSchema, ({ note }) => sendActionBack({ ...target, note }));
+      return read(sendBackSchema, ({ note }) => sendActionBack({ ...target, note }));
     case 'check-effect':
       return read(effectSchema, ({ effective, note, reason }) => checkEffect({ ...target, effective: effective === 'effective', note, reason, files }));
     case 'withdraw':

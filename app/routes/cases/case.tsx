@@ -1,9 +1,10 @@
-import { Outlet, useLocation } from 'react-router';
+import { Outlet, href, useLocation } from 'react-router';
 import type { Route } from './+types/case';
 import { db } from '#db/client.server.ts';
 import { getCaseHeader } from '#db/queries/case-header.server.ts';
 import { requireActor } from '#app/auth/middleware.server.ts';
 import { CaseHead } from '#app/components/cases/case-head.tsx';
+import { UndoBar } from '#app/components/cases/undo-bar.tsx';
 import { Page } from '#app/components/layout/page.tsx';
 import { readCaseNumber } from '#app/domain/case-number.ts';
 import type { CaseHeaderView } from '#app/domain/case-view.ts';
@@ -28,6 +29,7 @@ export default function Case({ loaderData }: Route.ComponentProps) {
   const { pathname } = useLocation();
   return (
     <Page>
+      {loaderData.undo ? <UndoBar key={loaderData.undo.sequence} offer={loaderData.undo} casePath={href('/cases/:caseNumber', { caseNumber: String(loaderData.number) })} /> : null}
       <CaseHead head={loaderData} path={pathname} />
       <div className="pt-4">
         <Outlet />

@@ -1,6 +1,5 @@
 import { randomUUID } from 'node:crypto';
 import { href, redirect } from 'react-router';
-import { z } from 'zod';
 import type { Route } from './+types/evidence-item';
 import { db } from '#db/client.server.ts';
 import { findCase } from '#db/queries/case-subject.server.ts';
@@ -8,7 +7,12 @@ import { getItemPage } from '#db/queries/evidence-page.server.ts';
 import { requireActor } from '#app/auth/middleware.server.ts';
 import { ChainTable, ExamTable } from '#app/components/evidence/chain-table.tsx';
 import { CustodyLines } from '#app/components/evidence/custody-lines.tsx';
-import { DisposalForm, ExamForm, HandOverForm } from '#app/components/evidence/item-forms.tsx';
+import { HandOverSection } from '#app/components/evidence/hand-over-section.tsx';
+import { DisposalForm, ExamForm } from '#app/components/evidence/item-forms.tsx';
+import { NoticeSection } from '#app/components/evidence/notice-section.tsx';
+import { OfferPanel } from '#app/components/evidence/offers.tsx';
+import { PlanForm } from '#app/components/evidence/plan-forms.tsx';
+import { PlanSection } from '#app/components/evidence/plan-section.tsx';
 import { answerTo } from '#app/components/findings/problem-fields.ts';
 import { AppLink } from '#app/components/ui/app-link.tsx';
 import { ButtonLink } from '#app/components/ui/button.tsx';
@@ -16,33 +20,18 @@ import { FactList } from '#app/components/ui/fact-list.tsx';
 import { SectionHeading } from '#app/components/ui/page-title.tsx';
 import { readCaseNumber } from '#app/domain/case-number.ts';
 import { notFound } from '#app/domain/errors.ts';
-import { decideDisposalSchema, handOverSchema, recordExamSchema } from '#app/domain/evidence-form.ts';
 import { readItemLetter } from '#app/domain/evidence.ts';
-import type { Actor } from '#app/domain/roles.ts';
-import { readMoments } from '#app/domain/typed-moment.ts';
-import { fieldErrorsOf } from '#app/http/field-errors.ts';
-import { formProblem, problemFromError, typedValues } from '#app/http/form-result.server.ts';
 import { respond } from '#app/http/to-response.server.ts';
-import { decideDisposal } from '#app/services/evidence/decide-disposal.server.ts';
-import { handOverItem } from '#app/services/evidence/hand-over.server.ts';
-import { recordExam } from '#app/services/evidence/record-exam.server.ts';
+import { actOnItem } from './evidence-item-actions.server.ts';
 
 export function loader({ request, context, params }: Route.LoaderArgs) {
   return respond(async () => {
     const actor = requireActor(context, request);
-    const page = await getItemPage(db, { actor, caseNumber: readCaseNumber(params.caseNumber), label: readItemLetter(params.letter) });
+    const now = new Date();
+    const page = await getItemPage(db, { actor, caseNumber: readCaseNumber(params.caseNumber), label: readItemLetter(params.letter), now });
     if (!page) throw notFound('The item');
-    return { ...page, now: new Date(), clientIds: { hand: randomUUID(), exam: randomUUID() } };
+    return { ...page, now, clientIds: { offer: randomUUID(), hand: randomUUID(), exam: randomUUID(), plan: randomUUID(), made: randomUUID(), notice: randomUUID(), answer: randomUUID() } };
   });
-}
-
-const intents = z.enum(['hand-over', 'exam', 'disposal']);
-interface Call {
-  readonly actor: Actor;
-  readonly caseNumber: number;
-  readonly label: number;
-  readonly zone: string;
-  readonly form: FormData;
 }
 
 export async function action({ request, context, params }: Route.ActionArgs) {
@@ -51,44 +40,10 @@ export async function action({ request, context, params }: Route.ActionArgs) {
     const caseNumber = readCaseNumber(params.caseNumber);
     const found = await findCase(db, actor, caseNumber);
     if (!found) throw notFound('The case');
-    const form = await request.formData();
-    const intent = intents.safeParse(form.get('intent'));
-    if (!intent.success) return formProblem('hand-over', form, { formErrors: ['The form is damaged. Open the page anew; what you typed can be copied from here.'] });
-    try {
-      const problem = await act[intent.data]({ actor, caseNumber, label: readItemLetter(params.letter), zone: found.row.zone, form });
-      return problem ?? redirect(href('/cases/:caseNumber/evidence/:letter', params), 303);
-    } catch (error) {
-      return problemFromError(intent.data, form, error);
-    }
+    const problem = await actOnItem({ actor, caseNumber, label: readItemLetter(params.letter), zone: found.row.zone, form: await request.formData() });
+    return problem ?? redirect(href('/cases/:caseNumber/evidence/:letter', params), 303);
   });
 }
-
-const act = {
-  'hand-over': async ({ actor, caseNumber, label, zone, form }: Call) => {
-    const typed = typedValues(form);
-    const parsed = handOverSchema.safeParse(typed);
-    const moments = readMoments(typed, zone, ['handedAt']);
-    const handedAt = moments.at('handedAt');
-    if (!parsed.success || !handedAt) return formProblem('hand-over', form, { fieldErrors: { ...(parsed.success ? {} : fieldErrorsOf(parsed.error)), ...moments.fieldErrors } });
-    await handOverItem({ actor, caseNumber, label, handOver: parsed.data, handedAt, now: new Date() });
-    return null;
-  },
-  exam: async ({ actor, caseNumber, label, zone, form }: Call) => {
-    const typed = typedValues(form);
-    const parsed = recordExamSchema.safeParse(typed);
-    const moments = readMoments(typed, zone, ['performedAt'], ['noticeAt']);
-    const performedAt = moments.at('performedAt');
-    if (!parsed.success || !performedAt || Object.keys(moments.fieldErrors).length > 0) return formProblem('exam', form, { fieldErrors: { ...(parsed.success ? {} : fieldErrorsOf(parsed.error)), ...moments.fieldErrors } });
-    await recordExam({ actor, caseNumber, label, exam: parsed.data, performedAt, noticeAt: moments.at('noticeAt'), now: new Date() });
-    return null;
-  },
-  disposal: async ({ actor, caseNumber, label, form }: Call) => {
-    const parsed = decideDisposalSchema.safeParse(typedValues(form));
-    if (!parsed.success) return formProblem('disposal', form, { fieldErrors: fieldErrorsOf(parsed.error) });
-    await decideDisposal({ actor, caseNumber, label, decision: parsed.data });
-    return null;
-  },
-};
 
 export const meta: Route.MetaFunction = ({ params }) => [{ title: `Item ${params.caseNumber}-${params.letter} · Scorchline` }];
 
@@ -102,6 +57,7 @@ export default function EvidenceItem({ loaderData: page, actionData, params }: R
         <ButtonLink href={href('/cases/:caseNumber/evidence/:letter/label', params)} look="outlined">Print the label</ButtonLink>
       </div>
       <CustodyLines lines={[page.line]} zone={page.zone} now={page.now} />
+      {page.offer ? <div className="pt-6"><OfferPanel key={page.offer.id} offer={page.offer} mayTakeOver={page.mayTakeOver} mayWithdraw={page.mayWithdraw} answer={actionData} /></div> : null}
       <div className="grid gap-x-12 gap-y-6 pt-6 desk:grid-cols-[minmax(0,1fr)_minmax(0,2fr)]">
         <section aria-labelledby="item-facts">
           <SectionHeading id="item-facts">The item</SectionHeading>
@@ -122,31 +78,42 @@ export default function EvidenceItem({ loaderData: page, actionData, params }: R
           <section aria-labelledby="chain">
             <SectionHeading id="chain" note="each record begins at the moment at which the one before it ends">Custody</SectionHeading>
             <ChainTable code={item.code} custody={item.custody} />
+            {page.pastOffers.length > 0 ? <ul className="pt-2 text-small text-second">{page.pastOffers.map(({ id, words }) => <li key={id}>{words}</li>)}</ul> : null}
           </section>
           <section aria-labelledby="exams">
             <SectionHeading id="exams">Examinations</SectionHeading>
             {item.examinations.length === 0 ? <p className="text-second">None recorded.</p> : <ExamTable code={item.code} exams={item.examinations} documents={page.documents} />}
           </section>
+          <PlanSection plans={page.plans} cancelled={page.cancelled} zone={page.zone} documents={page.documents} mayWrite={page.mayWrite} clientId={page.clientIds.made} answer={actionData} />
+          <NoticeSection notices={page.notices} choices={page.noticeChoices} plans={page.plans} zone={page.zone} clientIds={page.clientIds} mayWrite={page.mayWrite} answer={actionData} />
         </div>
       </div>
-      {page.mayWrite ? (
+      {page.mayWrite || page.mayOffer ? (
         <div className="grid gap-x-12 gap-y-8 pt-8 desk:grid-cols-2" data-print="no">
-          <section aria-labelledby="hand-over">
-            <SectionHeading id="hand-over">Hand the item over</SectionHeading>
-            <HandOverForm key={item.openSequence} clientId={page.clientIds.hand} zone={page.zone} sequence={item.openSequence} holderName={item.openHolderName} answer={answerTo(actionData, 'hand-over')} />
-          </section>
           <div className="space-y-8">
-            <section aria-labelledby="record-exam">
-              <SectionHeading id="record-exam">Record an examination</SectionHeading>
-              <ExamForm key={item.examinations.length} clientId={page.clientIds.exam} zone={page.zone} documents={page.documents} answer={answerTo(actionData, 'exam')} />
-            </section>
-            <section aria-labelledby="disposal">
-              <SectionHeading id="disposal">Disposal</SectionHeading>
-              <DisposalForm key={item.disposalWords} disposal={item.disposal} answer={answerTo(actionData, 'disposal')} />
-            </section>
+            <HandOverSection zone={page.zone} clientIds={page.clientIds} offered={page.offer !== null} mayOffer={page.mayOffer} mayWrite={page.mayWrite} receivers={page.receivers} sequence={item.openSequence} holderName={item.openHolderName} answer={actionData} />
+            {page.mayWrite ? (
+              <section aria-labelledby="disposal">
+                <SectionHeading id="disposal">Disposal</SectionHeading>
+                <DisposalForm key={item.disposalWords} disposal={item.disposal} answer={answerTo(actionData, 'disposal')} />
+              </section>
+            ) : null}
           </div>
+          {page.mayWrite ? (
+            <div className="space-y-8">
+              <section aria-labelledby="plan-exam">
+                <SectionHeading id="plan-exam">Plan an examination that may alter the item</SectionHeading>
+                <PlanForm key={page.plans.length} clientId={page.clientIds.plan} zone={page.zone} documents={page.documents} answer={answerTo(actionData, 'plan')} />
+              </section>
+              <section aria-labelledby="record-exam">
+                <SectionHeading id="record-exam">Record an examination</SectionHeading>
+                <ExamForm key={item.examinations.length} clientId={page.clientIds.exam} zone={page.zone} documents={page.documents} against={page.against} answer={answerTo(actionData, 'exam')} />
+              </section>
+            </div>
+          ) : null}
         </div>
-      ) : <p className="pt-6 text-second">Hand-overs and examinations are recorded by those who work on the case. {page.whoWrites}</p>}
+      ) : null}
+      {page.mayWrite ? null : <p className="pt-6 text-second">Hand-overs and examinations are recorded by those who work on the case. {page.whoWrites}</p>}
     </div>
   );
 }

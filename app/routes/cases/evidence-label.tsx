@@ -14,7 +14,7 @@ import { labelCode } from '#app/services/evidence/label-code.server.ts';
 export function loader({ request, context, params }: Route.LoaderArgs) {
   return respond(async () => {
     const actor = requireActor(context, request);
-    const page = await getItemPage(db, { actor, caseNumber: readCaseNumber(params.caseNumber), label: readItemLetter(params.letter) });
+    const page = await getItemPage(db, { actor, caseNumber: readCaseNumber(params.caseNumber), label: readItemLetter(params.letter), now: new Date() });
     if (!page) throw notFound('The item');
     const { code, description, sealWords, fromWhere, collected } = page.item;
     return { code, description, sealWords, fromWhere, collected, qr: labelCode(href('/cases/:caseNumber/evidence/:letter', params)) };
@@ -32,7 +32,7 @@ export default function EvidenceLabel({ loaderData: label, params }: Route.Compo
         <p><AppLink href={href('/cases/:caseNumber/evidence/:letter', params)} className="inline-flex min-h-8 items-center">Back to the item</AppLink></p>
         <p className="max-w-[64ch] text-second">Print this page with the print command of the browser, without scaling. The label is 100 mm wide. Fix it to the bag or the seal, never to the item.</p>
       </div>
-      <div className="w-full max-w-[100mm] border-2 border-ink bg-white p-[4mm] text-[#1c2430]">
+      <div data-print="alone" className="w-full max-w-[100mm] border-2 border-ink bg-white p-[4mm] text-[#1c2430]">
         <div className="flex justify-between gap-[4mm]">
           <div className="min-w-0">
             <p className="font-serif text-[1.75rem] leading-8 font-semibold">{label.code}</p>

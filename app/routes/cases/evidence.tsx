@@ -9,6 +9,9 @@ import { CollectForm } from '#app/components/evidence/collect-form.tsx';
 import { CustodyLines } from '#app/components/evidence/custody-lines.tsx';
 import { DocumentForm, DocumentTable } from '#app/components/evidence/documents.tsx';
 import { ItemTable } from '#app/components/evidence/item-table.tsx';
+import { NoticeLog } from '#app/components/evidence/notice-log.tsx';
+import { WaitingOffers } from '#app/components/evidence/offers.tsx';
+import { PlannedExams } from '#app/components/evidence/planned-exams.tsx';
 import { answerTo } from '#app/components/findings/problem-fields.ts';
 import { Caution } from '#app/components/ui/caution.tsx';
 import { EmptyState } from '#app/components/ui/notice.tsx';
@@ -31,9 +34,10 @@ import { collectItem } from '#app/services/evidence/collect-item.server.ts';
 export function loader({ request, context, params }: Route.LoaderArgs) {
   return respond(async () => {
     const actor = requireActor(context, request);
-    const page = await getEvidencePage(db, { actor, caseNumber: readCaseNumber(params.caseNumber) });
+    const now = new Date();
+    const page = await getEvidencePage(db, { actor, caseNumber: readCaseNumber(params.caseNumber), now });
     if (!page) throw notFound('The case');
-    return { ...page, now: new Date(), clientId: randomUUID() };
+    return { ...page, now, clientId: randomUUID() };
   });
 }
 
@@ -81,6 +85,13 @@ export default function Evidence({ loaderData: page, actionData }: Route.Compone
     <div>
       <h2 className="pb-4 font-serif text-title">{page.heading}</h2>
       <CustodyLines lines={page.lines} zone={page.zone} now={page.now} />
+      {page.items.length > 0 ? (
+        <div className="grid gap-x-12 gap-y-8 pt-6 desk:grid-cols-3">
+          <WaitingOffers caseNumber={page.caseNumber} offers={page.offers} />
+          <PlannedExams caseNumber={page.caseNumber} plans={page.plans} />
+          <NoticeLog notices={page.notices} ofCase />
+        </div>
+      ) : null}
       {page.items.length > 0 ? <ItemTable caseNumber={page.caseNumber} items={page.items} /> : (
         <EmptyState title="What can be touched is kept with a label, a seal and a line of hands.">Record each item as it is collected: from then on it always has exactly one holder.{page.mayCollect ? '' : ` ${page.whoCollects}`}</EmptyState>
       )}

@@ -3,7 +3,7 @@ import { z } from 'zod';
 import type { Route } from './+types/hypotheses';
 import { db } from '#db/client.server.ts';
 import { findCase } from '#db/queries/case-subject.server.ts';
-import { hasSeenOpinion, listFindings } from '#db/queries/findings.server.ts';
+import { isConclusionHidden } from '#db/queries/hidden-conclusion.server.ts';
 import { engineTests, getEngineSummary, listHypotheses } from '#db/queries/hypotheses.server.ts';
 import type { EngineSummary, HypothesisView } from '#db/queries/hypotheses.server.ts';
 import { listColleagues } from '#db/queries/recipients.server.ts';
@@ -36,7 +36,7 @@ export function loader({ request, context, params }: Route.LoaderArgs) {
     if (!found) throw notFound('The case');
     if (!canOnCase(actor, 'hypothesis:read', found.subject)) throw new DomainError('forbidden', `The hypotheses are not open to you. ${whoCan('hypothesis:read')}`);
     const list = await listHypotheses(db, { actor, caseNumber });
-    const outcomeShown = !canOnCase(actor, 'finding:review', found.subject) || (await hasOpenedOpinion(actor, caseNumber));
+    const outcomeShown = !(await isConclusionHidden(db, { actor, caseNumber }));
     const engine = await getEngineSummary(db, { actor, caseNumber });
     const editable = canOnCase(actor, 'hypothesis:write', found.subject);
     const url = new URL(request.url);
@@ -53,11 +53,6 @@ export function loader({ request, context, params }: Route.LoaderArgs) {
       form: editable ? await formView(actor, list, engine, url.searchParams) : null,
     };
   });
-}
-
-async function hasOpenedOpinion(actor: Actor, caseNumber: number): Promise<boolean> {
-  const [latest] = await listFindings(db, { actor, caseNumber });
-  return latest?.state !== 'sent' || hasSeenOpinion(db, { findingId: latest.id, userId: actor.userId });
 }
 
 const engineWords = (engine: EngineSummary) => ({

@@ -21,7 +21,7 @@ import { labelCode } from '#app/services/evidence/label-code.server.ts';
 import { declinationAt } from '#app/services/scenes/declination.server.ts';
 
 /** Height of the sketch on each paper, so that the page fills and does not run over. [mm] */
-const papers = { a4: { label: 'A4', gridMm: 118 }, letter: { label: 'Letter', gridMm: 98 } } as const;
+const papers = { a4: { label: 'A4', gridMm: 145 }, letter: { label: 'Letter', gridMm: 125 } } as const;
 
 export function loader({ request, context, params }: Route.LoaderArgs) {
   return respond(async () => {
@@ -60,7 +60,7 @@ export default function MeasurementSheet({ loaderData: { paper, ...sheet } }: Ro
         <h1 className="font-serif text-title">Sheet for paper, case {sheet.caseNumber}</h1>
         <Tabs label="Paper" look="filter" items={Object.entries(papers).map(([key, { label }]) => ({ href: `${base}/sheet?paper=${key}`, label, current: key === paper }))} />
         {hydrated ? <Button type="button" look="outlined" onClick={() => window.print()}>Print two pages</Button> : null}
-        <AppLink href={base} className="inline-flex min-h-8 items-center">Back to the measurements</AppLink>
+        <AppLink href={base} className="inline-flex min-h-(--target-height) items-center">Back to the measurements</AppLink>
         <p className="w-full max-w-[64ch] text-second">Print without scaling. What is known is filled in; measure it again if you doubt it. Page two has the sketch and the skyline.</p>
       </div>
       <PaperSheet {...sheet} isLetter={paper === 'letter'} gridMm={papers[paper].gridMm} />

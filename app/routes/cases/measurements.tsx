@@ -13,7 +13,7 @@ import { FactList } from '#app/components/ui/fact-list.tsx';
 import { SectionHeading } from '#app/components/ui/page-title.tsx';
 import { readCaseNumber } from '#app/domain/case-number.ts';
 import { formatDayClock, localDay } from '#app/domain/local-time.ts';
-import { declinationWords, sceneStamps, skylineWords } from '#app/domain/measurements-view.ts';
+import { declinationWords, measuredHeading, sceneStamps, skylineWords } from '#app/domain/measurements-view.ts';
 import { sceneToFields } from '#app/domain/scene-form-fields.ts';
 import { sceneFacts } from '#app/domain/scene-words.ts';
 import { respond } from '#app/http/to-response.server.ts';
@@ -36,6 +36,7 @@ export async function loader({ request, context, params }: Route.LoaderArgs) {
       mayEdit,
       whoEdits,
       kind: scene.optic.kind,
+      heading: measuredHeading(scene),
       stored: sceneToFields(scene),
       stamps: sceneStamps(scene),
       facts: sceneFacts(scene),
@@ -65,6 +66,7 @@ export default function Measurements({ loaderData: data, actionData: problem }: 
   return (
     <>
       <MeasureNav caseNumber={data.caseNumber} current="measurements" />
+      <h2 className="pb-4 font-serif text-title">{data.heading}</h2>
       <Columns sideLabel="Versions" side={<Versions versions={data.versions} />}>
         {data.mayEdit ? <TakeAlong address={href('/cases/:caseNumber/measurements', { caseNumber: String(data.caseNumber) })} madeAt={data.madeAt} /> : null}
         {data.mayEdit ? (

@@ -72,7 +72,7 @@ export default function PhotoMarks({ loaderData: { photo, marks, mayDraw, whoDra
   const removing = answerTo(actionData, 'remove-mark');
   return (
     <div>
-      <p className="pb-2" data-print="no"><AppLink href={href('/cases/:caseNumber/photos', { caseNumber: params.caseNumber })} className="inline-flex min-h-8 items-center">All photos</AppLink></p>
+      <p className="pb-2" data-print="no"><AppLink href={href('/cases/:caseNumber/photos', { caseNumber: params.caseNumber })} className="inline-flex min-h-(--target-height) items-center">All photos</AppLink></p>
       <h2 className="pb-1 font-serif text-title">{marks.length === 0 ? `Nothing is drawn over photo ${photo.label}` : `${marks.length} ${marks.length === 1 ? 'mark' : 'marks'} over photo ${photo.label}`}</h2>
       <p className="pb-4 text-small text-second">{params.caseNumber}-{photo.label} {photo.viewWords}. Marks lie on a layer of their own over a copy; the original keeps its hash.</p>
       {removing ? <div className="pb-4"><Notice role="alert" title="Not removed">{removing.formErrors.join(' ')}</Notice></div> : null}
@@ -86,7 +86,7 @@ export default function PhotoMarks({ loaderData: { photo, marks, mayDraw, whoDra
       )}
       {marks.length > 0 ? (
         <section aria-labelledby="marks" className="max-w-[60rem] pt-6">
-          <SectionHeading id="marks" aside={<Button type="button" look="quiet" className="min-h-8" aria-pressed={!shown} onClick={() => setShown(!shown)}>{shown ? 'Hide the marks' : 'Show the marks'}</Button>}>Marks in words</SectionHeading>
+          <SectionHeading id="marks" aside={<Button type="button" look="quiet" className="min-h-(--target-height)" aria-pressed={!shown} onClick={() => setShown(!shown)}>{shown ? 'Hide the marks' : 'Show the marks'}</Button>}>Marks in words</SectionHeading>
           <ol>
             {marks.map((mark, index) => (
               <li key={index} className="flex flex-wrap items-baseline justify-between gap-x-6 border-b border-hair py-1.5">
@@ -97,7 +97,7 @@ export default function PhotoMarks({ loaderData: { photo, marks, mayDraw, whoDra
                     <input type="hidden" name="photoId" value={photo.id} />
                     <input type="hidden" name="position" value={index} />
                     <input type="hidden" name="words" value={markWords(mark)} />
-                    <Button look="quiet" className="min-h-8">Remove<span className="sr-only"> mark {index + 1}</span></Button>
+                    <Button look="quiet" className="min-h-(--target-height)">Remove<span className="sr-only"> mark {index + 1}</span></Button>
                   </Form>
                 ) : null}
               </li>

@@ -8,7 +8,6 @@ import { requireActor } from '#app/auth/middleware.server.ts';
 import { PhotoMeasure } from '#app/components/scene/photo-measure.tsx';
 import { AppLink } from '#app/components/ui/app-link.tsx';
 import { EmptyState } from '#app/components/ui/notice.tsx';
-import { SectionHeading } from '#app/components/ui/page-title.tsx';
 import { readCaseNumber } from '#app/domain/case-number.ts';
 import { notFound } from '#app/domain/errors.ts';
 import { photoCard } from '#app/domain/photo-view.ts';
@@ -50,9 +49,10 @@ export const meta: Route.MetaFunction = ({ params }) => [{ title: `Case ${params
 export default function PhotoMeasurePage({ loaderData: data, actionData: problem }: Route.ComponentProps) {
   const sheet = href('/cases/:caseNumber/photos', { caseNumber: String(data.caseNumber) });
   return (
-    <div className="pt-2">
-      <SectionHeading note={data.viewWords} aside={<AppLink href={sheet} className="inline-flex min-h-8 items-center text-small">Back to the photos</AppLink>}>Measure on photo {data.label}</SectionHeading>
-      <p className="max-w-[64ch] pb-4">Something flat of known size that lay in the plane of the mark, such as a card or a rule, makes the photo square-on. Measure on paper too if you can get there: the two should agree.</p>
+    <div>
+      <p className="pb-2" data-print="no"><AppLink href={sheet} className="inline-flex min-h-(--target-height) items-center">All photos</AppLink></p>
+      <h2 className="font-serif text-title">Measure on photo {data.label}</h2>
+      <p className="max-w-[64ch] pb-4 text-second">{data.viewWords}. Something flat of known size that lay in the plane of the mark, such as a card or a rule, makes the photo square-on. Measure on paper too if you can get there: the two should agree.</p>
       {data.ready ? (
         <PhotoMeasure label={data.label} source={`/photos/${data.photoId}/view`} alt={data.alt} baseVersion={data.version} mayEdit={data.mayEdit} whoEdits={data.whoEdits} problem={problem} />
       ) : (

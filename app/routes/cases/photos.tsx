@@ -9,7 +9,6 @@ import type { PhotoProblem } from '#app/components/photos/photo-editor.tsx';
 import { PhotoFigure } from '#app/components/photos/photo-figure.tsx';
 import { AppLink } from '#app/components/ui/app-link.tsx';
 import { Button } from '#app/components/ui/button.tsx';
-import { EmptyState } from '#app/components/ui/notice.tsx';
 import { SectionHeading } from '#app/components/ui/page-title.tsx';
 import { notFound } from '#app/domain/errors.ts';
 import { canOnCase } from '#app/domain/permissions.ts';
@@ -109,7 +108,7 @@ export default function CasePhotos({ loaderData, actionData }: Route.ComponentPr
       <div className="flex flex-wrap items-baseline justify-between gap-4">
         <div>
           <h2 className="font-serif text-title">{heading}</h2>
-          <p className="text-small text-second">Originals are kept and never shown here; these are view copies, with position and camera data removed.</p>
+          <p className="text-small text-second">{cards.length === 0 ? 'None came with the report. One of the mark and one of the whole scene help most.' : 'Originals are kept and never shown here; these are view copies, with position and camera data removed.'}</p>
         </div>
         {mayReadOriginals && cards.length > 0 ? (
           <Form method="post">
@@ -118,7 +117,6 @@ export default function CasePhotos({ loaderData, actionData }: Route.ComponentPr
           </Form>
         ) : null}
       </div>
-      {cards.length === 0 ? <EmptyState title="No photo came with this report.">A photo of the mark and one of the whole scene help most.</EmptyState> : null}
       <ul className="grid gap-x-8 gap-y-10 tablet:grid-cols-2 desk:grid-cols-3">
         {cards.map((card) => <SheetItem key={card.id} card={card} rights={loaderData} problem={problemOf(card, actionData)} />)}
       </ul>
@@ -139,13 +137,14 @@ interface SheetItemProps {
 
 const marksWords = (count: number) => (count === 0 ? 'Draw on a copy' : `${count} ${count === 1 ? 'mark' : 'marks'} on a copy`);
 
-const summaryLook = 'inline-flex min-h-9 items-center underline decoration-ember decoration-2 underline-offset-4';
+const linkLook = 'inline-flex min-h-(--target-height) items-center';
+const summaryLook = 'inline-flex min-h-(--target-height) items-center text-small underline decoration-ember decoration-2 underline-offset-4';
 
 function SheetItem({ card, rights, problem }: SheetItemProps) {
   return (
-    <li id={`photo-${card.id}`} className="min-w-0 space-y-3">
+    <li id={`photo-${card.id}`} className="min-w-0 space-y-1">
       <PhotoFigure card={card} caseNumber={rights.caseNumber} />
-      <p className="text-small"><AppLink href={href('/cases/:caseNumber/photos/:label/marks', { caseNumber: String(rights.caseNumber), label: String(card.label) })} className="inline-flex min-h-8 items-center">{marksWords(card.marks.length)}<span className="sr-only"> over photo {card.label}</span></AppLink></p>
+      <p className="text-small"><AppLink href={href('/cases/:caseNumber/photos/:label/marks', { caseNumber: String(rights.caseNumber), label: String(card.label) })} className={linkLook}>{marksWords(card.marks.length)}<span className="sr-only"> over photo {card.label}</span></AppLink></p>
       <PhotoOffers card={card} editable={rights.mayAdd} />
       {rights.mayAdd ? (
         <details open={problem?.intent === 'describe' || undefined}>
@@ -159,8 +158,8 @@ function SheetItem({ card, rights, problem }: SheetItemProps) {
           <PhotoRelease card={card} problem={problem} />
         </details>
       ) : null}
-      {rights.mayMeasure && card.state === 'ready' ? <p className="text-small"><AppLink href={href('/cases/:caseNumber/photos/:photoId/measure', { caseNumber: String(rights.caseNumber), photoId: card.id })}>Measure on photo {card.label}</AppLink></p> : null}
-      {rights.mayReadOriginals ? <p className="text-small"><a href={`/photos/${card.id}/original`} download>Original of photo {card.label}</a></p> : null}
+      {rights.mayMeasure && card.state === 'ready' ? <p className="text-small"><AppLink href={href('/cases/:caseNumber/photos/:photoId/measure', { caseNumber: String(rights.caseNumber), photoId: card.id })} className={linkLook}>Measure on photo {card.label}</AppLink></p> : null}
+      {rights.mayReadOriginals ? <p className="text-small"><a href={`/photos/${card.id}/original`} download className={linkLook}>Original of photo {card.label}</a></p> : null}
     </li>
   );
 }

@@ -16,7 +16,7 @@ import { notFound } from '#app/domain/errors.ts';
 import { runNoteSchema } from '#app/domain/run-page.ts';
 import { formProblem, problemFromError } from '#app/http/form-result.server.ts';
 import { respond } from '#app/http/to-response.server.ts';
-import { engineVersion } from '#app/physics/model.ts';
+import { engineVersion } from '#app/physics/model/engine-version.ts';
 import { attachReconstruction } from '#app/services/reconstructions/attach-reconstruction.server.ts';
 import { repeatReconstruction } from '#app/services/reconstructions/repeat-reconstruction.server.ts';
 import { requestReconstruction } from '#app/services/reconstructions/request-reconstruction.server.ts';

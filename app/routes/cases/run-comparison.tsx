@@ -42,7 +42,8 @@ export default function RunComparison({ loaderData: { runs, a, b, view, mayRun, 
     <div className="space-y-8">
       <div className="space-y-2">
         <h2 className="font-serif text-title">{view ? view.heading : runs.length < 2 ? 'There is only one finished run, so nothing to compare' : 'Choose two finished runs'}</h2>
-        <p data-print="no" className="text-small"><AppLink href={href('/cases/:caseNumber/reconstructions', { caseNumber })} className="inline-flex min-h-8 items-center">All runs</AppLink></p>
+        <p data-print="no" className="text-small"><AppLink href={href('/cases/:caseNumber/reconstructions', { caseNumber })} className="inline-flex min-h-(--target-height) items-center">All runs</AppLink></p>
+        {runs.length < 2 ? <p className="max-w-[64ch] text-second">Two runs are compared to see what a changed measurement does to the answer. Change a value, or ask for a run under another assumption; both runs stay.</p> : null}
         {runs.length > 1 ? <ChooseRuns runs={runs} a={a} b={b} /> : null}
       </div>
       {view ? <Compared view={view} pathOf={pathOf} alone={alone} aloneHref={mayRun && view.inputs.changed.length > 1 ? `?a=${a}&b=${b}&alone=yes#alone` : null} /> : null}

@@ -1,16 +1,10 @@
 import { redirect } from 'react-router';
-import type { RouterContextProvider } from 'react-router';
 import { requireActor } from '#app/auth/middleware.server.ts';
 import { readCaseNumber } from '#app/domain/case-number.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import { problemFromError, typedValues } from '#app/http/form-result.server.ts';
 import { respond } from '#app/http/to-response.server.ts';
-
-interface PageArgs {
-  readonly request: Request;
-  readonly context: Readonly<RouterContextProvider>;
-  readonly params: { readonly caseNumber: string };
-}
+import type { PageArgs } from './post-to-case.server.ts';
 
 /** A new version of the measurements, as a form of one of their pages brings it. */
 export interface TypedVersion {

@@ -7,7 +7,7 @@ import { MeasureNav } from '#app/components/cases/measure-nav.tsx';
 import { SkylineEditor } from '#app/components/scene/skyline-editor.tsx';
 import { readCaseNumber } from '#app/domain/case-number.ts';
 import { localDay } from '#app/domain/local-time.ts';
-import { skylineWords } from '#app/domain/measurements-view.ts';
+import { skylineFinding } from '#app/domain/measurements-view.ts';
 import { photoCard } from '#app/domain/photo-view.ts';
 import { skylineRows } from '#app/domain/skyline-form.ts';
 import { sunLine, turningDays } from '#app/domain/sun-lines.ts';
@@ -30,7 +30,7 @@ export function loader({ request, context, params }: Route.LoaderArgs) {
       version,
       mayEdit,
       whoEdits,
-      words: skylineWords(scene.skyline, place.skyline),
+      finding: skylineFinding(scene.skyline, place.skyline),
       rows: skylineRows(scene.skyline ?? place.skyline),
       fromSite: !scene.skyline && place.skyline !== null,
       paths: [sunLine(day, place), ...turningDays(day.slice(0, 4)).map(([on, label]) => sunLine(on, place, label))],
@@ -47,7 +47,8 @@ export default function CaseSkyline({ loaderData: data, actionData: problem }: R
   return (
     <>
       <MeasureNav caseNumber={data.caseNumber} current="skyline" />
-      <p className="max-w-[64ch] pb-4">{data.words}{data.fromSite && data.mayEdit ? ' Saved here, these points become the case’s own.' : ''}</p>
+      <h2 className="font-serif text-title">{data.finding.heading}</h2>
+      <p className="max-w-[64ch] pb-4 text-second">{data.finding.words}{data.fromSite && data.mayEdit ? ' Saved here, they become the case’s own.' : ''}</p>
       <SkylineEditor key={data.version} rows={data.rows} paths={data.paths} photos={data.photos} base={{ name: 'baseVersion', value: String(data.version) }} saveLabel={`Save as version ${data.version + 1} of the measurements`} mayEdit={data.mayEdit} whoEdits={data.whoEdits} problem={problem} />
     </>
   );

@@ -1,8 +1,7 @@
 import { randomUUID } from 'node:crypto';
-import { href, redirect } from 'react-router';
+import { href } from 'react-router';
 import type { Route } from './+types/timeline';
 import { db } from '#db/client.server.ts';
-import { findCase } from '#db/queries/case-subject.server.ts';
 import { getTimelinePage } from '#db/queries/timeline-page.server.ts';
 import { requireActor } from '#app/auth/middleware.server.ts';
 import { answerTo } from '#app/components/findings/problem-fields.ts';
@@ -14,9 +13,10 @@ import { notFound } from '#app/domain/errors.ts';
 import { timelineEventSchema, withdrawEventSchema } from '#app/domain/timeline.ts';
 import { readMoments } from '#app/domain/typed-moment.ts';
 import { fieldErrorsOf } from '#app/http/field-errors.ts';
-import { formProblem, problemFromError, typedValues } from '#app/http/form-result.server.ts';
+import { formProblem } from '#app/http/form-result.server.ts';
 import { respond } from '#app/http/to-response.server.ts';
 import { addTimelineEvent, withdrawTimelineEvent } from '#app/services/timeline/timeline-events.server.ts';
+import { postToCase } from './post-to-case.server.ts';
 
 export function loader({ request, context, params }: Route.LoaderArgs) {
   return respond(async () => {
@@ -27,31 +27,23 @@ export function loader({ request, context, params }: Route.LoaderArgs) {
   });
 }
 
-export async function action({ request, context, params }: Route.ActionArgs) {
-  return respond(async () => {
-    const actor = requireActor(context, request);
-    const caseNumber = readCaseNumber(params.caseNumber);
-    const found = await findCase(db, actor, caseNumber);
-    if (!found) throw notFound('The case');
-    const form = await request.formData();
-    const typed = typedValues(form);
-    const intent = typed['intent'] === 'withdraw' ? 'withdraw' : 'add-event';
-    try {
-      if (intent === 'withdraw') {
-        const withdrawal = withdrawEventSchema.safeParse(typed);
-        if (!withdrawal.success) return formProblem(intent, form, { fieldErrors: fieldErrorsOf(withdrawal.error) });
-        await withdrawTimelineEvent({ actor, caseNumber, ...withdrawal.data, now: new Date() });
-      } else {
-        const event = timelineEventSchema.safeParse(typed);
-        const moments = readMoments(typed, found.row.zone, ['readingAt']);
-        const readingAt = moments.at('readingAt');
-        if (!event.success || !readingAt) return formProblem(intent, form, { fieldErrors: { ...(event.success ? {} : fieldErrorsOf(event.error)), ...moments.fieldErrors } });
-        await addTimelineEvent({ actor, caseNumber, event: event.data, readingAt, now: new Date() });
-      }
-      return redirect(href('/cases/:caseNumber/timeline', params), 303);
-    } catch (error) {
-      return problemFromError(intent, form, error);
-    }
+export function action(args: Route.ActionArgs) {
+  const here = href('/cases/:caseNumber/timeline', args.params);
+  return postToCase(args, {
+    'add-event': async ({ actor, caseNumber, zone, form, typed, now }) => {
+      const event = timelineEventSchema.safeParse(typed);
+      const moments = readMoments(typed, zone, ['readingAt']);
+      const readingAt = moments.at('readingAt');
+      if (!event.success || !readingAt) return formProblem('add-event', form, { fieldErrors: { ...(event.success ? {} : fieldErrorsOf(event.error)), ...moments.fieldErrors } });
+      await addTimelineEvent({ actor, caseNumber, event: event.data, readingAt, now });
+      return here;
+    },
+    withdraw: async ({ actor, caseNumber, form, typed, now }) => {
+      const withdrawal = withdrawEventSchema.safeParse(typed);
+      if (!withdrawal.success) return formProblem('withdraw', form, { fieldErrors: fieldErrorsOf(withdrawal.error) });
+      await withdrawTimelineEvent({ actor, caseNumber, ...withdrawal.data, now });
+      return here;
+    },
   });
 }
 

@@ -87,43 +87,59 @@ async function perform(intent: string, actor: Actor, caseNumber: number, typed: 
 
 export const meta: Route.MetaFunction = ({ params }) => [{ title: `Case ${params.caseNumber}, weather · Scorchline` }];
 
+/** Two things side by side at the desk. */
+const pair = 'space-y-8 desk:grid desk:grid-cols-[minmax(0,3fr)_minmax(0,2fr)] desk:items-start desk:gap-x-12 desk:space-y-0';
+
 export default function WeatherPage({ loaderData: page, actionData }: Route.ComponentProps) {
   const stage = actionData && 'stage' in actionData ? actionData.stage : null;
   const problem = actionData && 'intent' in actionData ? actionData : undefined;
   return (
-    <div className="space-y-8">
+    <>
       <MeasureNav caseNumber={page.caseNumber} current="weather" />
-      {page.again ? <p role="status" className="font-semibold">The same values of the same source are here already; nothing was added.</p> : null}
-      <section className="max-w-[1160px] space-y-2">
-        <p>{page.choiceWords} {page.choiceCaution}</p>
-        {page.trace ? (
-          <IrradianceDayFigure title="Direct irradiance through the onset window, W/m²" zone={page.zone} fromUtc={page.trace.fromUtc} toUtc={page.trace.toUtc} bound={page.trace.bound} likely={page.trace.likely} {...(page.trace.measured.length > 0 ? { measured: page.trace.measured, measuredName: page.trace.measuredName } : {})} note="Square to the sun, before any glass. Dashed: what the cleanest air could pass. Thin: likely clear sky of the air class. Steps: the record that a run goes by." />
-        ) : null}
-      </section>
-      <WeatherRecords records={page.records} mayEdit={page.mayEdit} problem={problem} />
-      {page.mayEdit ? (
-        <>
-          <section className="max-w-[1160px] space-y-4">
-            <SectionHeading note="tried first, kept after">From a file</SectionHeading>
-            {stage ? <WeatherMappingForm key={stage.dryRun ? 'tried' : 'new'} stage={stage} problem={problem} /> : <WeatherFileForm problem={problem} />}
-          </section>
-          <section className="max-w-[64ch] space-y-3">
-            <SectionHeading note={page.archive ?? 'switched off'}>From the archive</SectionHeading>
-            {problem?.intent === 'fetch-archive' ? <p role="alert" className="font-semibold">{problem.formErrors.join(' ')}</p> : null}
-            {page.archive ? (
-              <Form method="post">
-                <p className="pb-3">Hour means of a model or satellite for the days around the window. The place is sent rounded to 0.01°, nothing else of the case.</p>
-                <input type="hidden" name="intent" value="fetch-archive" />
-                <Button look="outlined">Fetch the hours around the window</Button>
-              </Form>
-            ) : <p>{page.archiveOff}</p>}
-          </section>
-          <section className="space-y-4">
-            <SectionHeading note={page.windowWords ? `onset window ${page.windowWords}` : undefined}>By hand</SectionHeading>
-            <WeatherHandForm key={page.records.length} day={page.day} zone={page.zone} problem={problem} />
-          </section>
-        </>
-      ) : <p className="text-small text-second">Changing it now: {page.whoEdits}</p>}
-    </div>
+      <div className="space-y-8">
+        {page.again ? <p role="status" className="font-semibold">The same values of the same source are here already; nothing was added.</p> : null}
+        <div>
+          <h2 className="font-serif text-title">{page.heading}</h2>
+          <p className="max-w-[64ch] text-second">{page.choiceWords} {page.choiceCaution}</p>
+        </div>
+        <div className={pair}>
+          {page.trace ? (
+            <IrradianceDayFigure title="Direct irradiance through the onset window, W/m²" zone={page.zone} fromUtc={page.trace.fromUtc} toUtc={page.trace.toUtc} bound={page.trace.bound} likely={page.trace.likely} {...(page.trace.measured.length > 0 ? { measured: page.trace.measured, measuredName: page.trace.measuredName } : {})} note="Square to the sun, before any glass. Dashed: what the cleanest air could pass. Thin: likely clear sky of the air class. Steps: the record that a run goes by." />
+          ) : null}
+          <WeatherRecords records={page.records} mayEdit={page.mayEdit} problem={problem} />
+        </div>
+        {page.mayEdit ? (
+          <>
+            <div className={stage ? 'space-y-8' : pair}>
+              <section className="min-w-0 space-y-4">
+                <SectionHeading note="tried first, kept after">From a file</SectionHeading>
+                {stage ? <WeatherMappingForm key={stage.dryRun ? 'tried' : 'new'} stage={stage} problem={problem} /> : <WeatherFileForm problem={problem} />}
+              </section>
+              <Archive host={page.archive} offWords={page.archiveOff} refused={problem?.intent === 'fetch-archive' ? problem.formErrors : []} />
+            </div>
+            <section className="space-y-4">
+              <SectionHeading note={page.windowWords ? `onset window ${page.windowWords}` : undefined}>By hand</SectionHeading>
+              <WeatherHandForm key={page.records.length} day={page.day} zone={page.zone} problem={problem} />
+            </section>
+          </>
+        ) : <p className="text-small text-second">Changing it now: {page.whoEdits}</p>}
+      </div>
+    </>
+  );
+}
+
+function Archive({ host, offWords, refused }: { readonly host: string | null; readonly offWords: string; readonly refused: readonly string[] }) {
+  return (
+    <section className="min-w-0 space-y-3">
+      <SectionHeading note={host ?? 'switched off'}>From the archive</SectionHeading>
+      {refused.length > 0 ? <p role="alert" className="font-semibold">{refused.join(' ')}</p> : null}
+      {host ? (
+        <Form method="post">
+          <p className="pb-3">Hour means of a model or satellite for the days around the window. The place is sent rounded to 0.01°, nothing else of the case.</p>
+          <input type="hidden" name="intent" value="fetch-archive" />
+          <Button look="outlined">Fetch the hours around the window</Button>
+        </Form>
+      ) : <p>{offWords}</p>}
+    </section>
   );
 }

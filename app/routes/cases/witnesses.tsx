@@ -1,8 +1,7 @@
 import { randomUUID } from 'node:crypto';
-import { href, redirect } from 'react-router';
+import { href } from 'react-router';
 import type { Route } from './+types/witnesses';
 import { db } from '#db/client.server.ts';
-import { findCase } from '#db/queries/case-subject.server.ts';
 import { getWitnessPage } from '#db/queries/witness-page.server.ts';
 import { requireActor } from '#app/auth/middleware.server.ts';
 import { answerTo } from '#app/components/findings/problem-fields.ts';
@@ -15,9 +14,10 @@ import { notFound } from '#app/domain/errors.ts';
 import { readMoments } from '#app/domain/typed-moment.ts';
 import { signedCopySchema, takeAccountSchema } from '#app/domain/witness.ts';
 import { fieldErrorsOf } from '#app/http/field-errors.ts';
-import { formProblem, problemFromError, typedValues } from '#app/http/form-result.server.ts';
+import { formProblem } from '#app/http/form-result.server.ts';
 import { respond } from '#app/http/to-response.server.ts';
 import { addSignedCopy, takeAccount } from '#app/services/witnesses/take-account.server.ts';
+import { postToCase } from './post-to-case.server.ts';
 
 export function loader({ request, context, params }: Route.LoaderArgs) {
   return respond(async () => {
@@ -28,32 +28,23 @@ export function loader({ request, context, params }: Route.LoaderArgs) {
   });
 }
 
-export async function action({ request, context, params }: Route.ActionArgs) {
-  return respond(async () => {
-    const actor = requireActor(context, request);
-    const caseNumber = readCaseNumber(params.caseNumber);
-    const found = await findCase(db, actor, caseNumber);
-    if (!found) throw notFound('The case');
-    const form = await request.formData();
-    const typed = typedValues(form);
-    const intent = typed['intent'] === 'signed-copy' ? 'signed-copy' : 'take-account';
-    const done = (label: string) => redirect(`${href('/cases/:caseNumber/witnesses', params)}${label}`, 303);
-    try {
-      if (intent === 'signed-copy') {
-        const copy = signedCopySchema.safeParse(typed);
-        if (!copy.success) return formProblem(intent, form, { fieldErrors: fieldErrorsOf(copy.error) });
-        await addSignedCopy({ actor, caseNumber, ...copy.data });
-        return done('');
-      }
+export function action(args: Route.ActionArgs) {
+  const here = href('/cases/:caseNumber/witnesses', args.params);
+  return postToCase(args, {
+    'take-account': async ({ actor, caseNumber, zone, form, typed, now }) => {
       const account = takeAccountSchema.safeParse(typed);
-      const moments = readMoments(typed, found.row.zone, ['takenAt'], ['speaksOfAt']);
+      const moments = readMoments(typed, zone, ['takenAt'], ['speaksOfAt']);
       const takenAt = moments.at('takenAt');
-      if (!account.success || !takenAt || Object.keys(moments.fieldErrors).length > 0) return formProblem(intent, form, { fieldErrors: { ...(account.success ? {} : fieldErrorsOf(account.error)), ...moments.fieldErrors } });
-      const { label } = await takeAccount({ actor, caseNumber, account: account.data, takenAt, speaksOfAt: moments.at('speaksOfAt'), now: new Date() });
-      return done(`#account-${label}`);
-    } catch (error) {
-      return problemFromError(intent, form, error);
-    }
+      if (!account.success || !takenAt || Object.keys(moments.fieldErrors).length > 0) return formProblem('take-account', form, { fieldErrors: { ...(account.success ? {} : fieldErrorsOf(account.error)), ...moments.fieldErrors } });
+      const { label } = await takeAccount({ actor, caseNumber, account: account.data, takenAt, speaksOfAt: moments.at('speaksOfAt'), now });
+      return `${here}#account-${label}`;
+    },
+    'signed-copy': async ({ actor, caseNumber, form, typed }) => {
+      const copy = signedCopySchema.safeParse(typed);
+      if (!copy.success) return formProblem('signed-copy', form, { fieldErrors: fieldErrorsOf(copy.error) });
+      await addSignedCopy({ actor, caseNumber, ...copy.data });
+      return here;
+    },
   });
 }
 

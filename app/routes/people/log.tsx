@@ -9,6 +9,7 @@ import { LogLines } from '#app/components/people/log-lines.tsx';
 import { AppLink } from '#app/components/ui/app-link.tsx';
 import { Button } from '#app/components/ui/button.tsx';
 import { PageTitle } from '#app/components/ui/page-title.tsx';
+import { formatDay } from '#app/domain/local-time.ts';
 import { holdsRole } from '#app/domain/roles.ts';
 import { respond } from '#app/http/to-response.server.ts';
 
@@ -36,9 +37,16 @@ export function loader({ context, request }: Route.LoaderArgs) {
       filter,
       withContent,
       olderThan: lines.length > pageSize ? (shown.at(-1)?.sequence ?? null) : null,
-      lines: shown.map((line) => ({ ...line, at: line.at.toISOString().slice(0, 19).replace('T', ' ') })),
+      lines: shown.map((line) => ({ ...line, at: `${formatDay(line.at, 'UTC')}, ${line.at.toISOString().slice(11, 19)}` })),
     };
   });
+}
+
+function headingOf({ filter, lines, olderThan }: Pick<Route.ComponentProps['loaderData'], 'filter' | 'lines' | 'olderThan'>): string {
+  const narrowed = Object.values(filter).some((text) => text !== '');
+  if (lines.length === 0) return narrowed ? 'No line fits' : 'Nothing has been done yet';
+  if (narrowed) return olderThan === null ? (lines.length === 1 ? 'One line fits' : `${lines.length} lines fit`) : `The newest ${lines.length} lines that fit`;
+  return `The newest line is of ${lines[0]?.at ?? ''}`;
 }
 
 export const meta: Route.MetaFunction = () => [{ title: 'Log · Scorchline' }];
@@ -48,18 +56,17 @@ export default function OrganisationLog({ loaderData }: Route.ComponentProps) {
   const older = new URLSearchParams({ event: filter.event, person: filter.person, case: filter.caseNumber, before: String(olderThan ?? '') });
   return (
     <Page>
-      <PageTitle below={`Lines are only ever added. Times in UTC.${withContent ? '' : ' What was done in a case is not shown to administrators.'}`}>Who did what, and when</PageTitle>
+      <PageTitle below={`Who did what, and when: lines are only ever added. Times in UTC.${withContent ? '' : ' What was done in a case is not shown to administrators.'}`}>{headingOf(loaderData)}</PageTitle>
       <Form method="get" role="search" aria-label="Narrow the log" className="flex flex-wrap items-end gap-4 pb-5">
         <div className="w-52 max-tablet:w-full"><TextInput field={{ name: 'event', defaultValue: filter.event }} label="Event" /></div>
         <div className="w-52 max-tablet:w-full"><TextInput field={{ name: 'person', defaultValue: filter.person }} label="Person" /></div>
         <div className="w-32"><TextInput field={{ name: 'case', defaultValue: filter.caseNumber }} label="Case number" inputMode="numeric" /></div>
         <Button look="outlined">Show</Button>
       </Form>
-      <LogLines lines={lines} withContent={withContent} />
-      {lines.length === 0 ? <p className="py-4 font-serif text-account">No line fits.</p> : null}
+      {lines.length > 0 ? <LogLines lines={lines} withContent={withContent} /> : null}
       {olderThan === null ? null : (
         <p className="pt-4">
-          <AppLink href={`/log?${older.toString()}`}>Older lines</AppLink>
+          <AppLink href={`/log?${older.toString()}`} className="inline-flex min-h-(--target-height) items-center">Older lines</AppLink>
         </p>
       )}
     </Page>

@@ -10,7 +10,7 @@ import { PageTitle } from '#app/components/ui/page-title.tsx';
 import { methodParts } from '#app/domain/method-models.ts';
 import { methodFigures } from '#app/domain/method-page.ts';
 import type { MethodFigures } from '#app/domain/method-page.ts';
-import { engineVersion } from '#app/physics/model.ts';
+import { engineVersion } from '#app/physics/model/engine-version.ts';
 
 export function loader() {
   return { figures: methodFigures(), engineVersion };

@@ -1,4 +1,5 @@
 import { Form, redirect } from 'react-router';
+import type { ShouldRevalidateFunctionArgs } from 'react-router';
 import { z } from 'zod';
 import type { Route } from './+types/progress';
 import { actorContext } from '#app/auth/actor-context.ts';
@@ -8,13 +9,14 @@ import type { FieldLike } from '#app/components/forms/field-like.ts';
 import { TextArea, TextInput } from '#app/components/forms/text-field.tsx';
 import { Page } from '#app/components/layout/page.tsx';
 import { ProgressLine } from '#app/components/report/progress-line.tsx';
+import { ProgressPhotos } from '#app/components/report/progress-photos.tsx';
 import { AppLink } from '#app/components/ui/app-link.tsx';
 import { Button } from '#app/components/ui/button.tsx';
 import { Caution } from '#app/components/ui/caution.tsx';
 import { SectionHeading } from '#app/components/ui/page-title.tsx';
 import { plainText } from '#app/domain/incident.ts';
 import { formatDay, formatDayClock } from '#app/domain/local-time.ts';
-import { progressHeading, progressSteps } from '#app/domain/report-progress.ts';
+import { photoClosedWords, progressHeading, progressSteps } from '#app/domain/report-progress.ts';
 import { readReceipt } from '#app/domain/report-receipt.ts';
 import { clientAddressContext } from '#app/http/client-address.ts';
 import type { FormProblem } from '#app/http/form-result.server.ts';
@@ -24,13 +26,16 @@ import { respond } from '#app/http/to-response.server.ts';
 import { answerQuestion } from '#app/services/reports/answer-question.server.ts';
 import { db } from '#db/client.server.ts';
 import { getReportProgress } from '#db/queries/reports.server.ts';
+import type { ReportProgress } from '#db/queries/reports.server.ts';
+import { receivePhotos } from './receive-photos.server.ts';
 
 /** Look-ups by one network address: enough for an office behind one, too few to search for receipts. */
 const lookups = { hits: 60, windowS: 600 } as const;
 
 export function loader({ request, context }: Route.LoaderArgs) {
   return respond(async () => {
-    const typed = new URL(request.url).searchParams.get('code')?.trim() ?? '';
+    const { searchParams } = new URL(request.url);
+    const typed = searchParams.get('code')?.trim() ?? '';
     if (typed === '') return { typed, report: null, problem: null };
     await limitRate(`progress:${context.get(clientAddressContext)}`, lookups.hits, lookups.windowS);
     const receipt = readReceipt(typed);
@@ -47,6 +52,7 @@ export function loader({ request, context }: Route.LoaderArgs) {
         receipt,
         heading: progressHeading(progress),
         sentWords: formatDayClock(progress.reportedAt, zone),
+        photos: { words: photoWords(progress), closedWords: photoClosedWords(progress.state), justStored: searchParams.get('photos') === 'stored' },
         question: question ? { words: question, dueWords: answerDueAt ? formatDay(answerDueAt, zone) : null } : null,
         steps: steps.map(({ state, name, words, at, reached, now }) => ({ state, name, words, reached, when: [at ? formatDayClock(at, zone) : '', now ? 'now' : ''].filter(Boolean).join(', ') })),
       },
@@ -54,11 +60,20 @@ export function loader({ request, context }: Route.LoaderArgs) {
   });
 }
 
+function photoWords({ photoCount, lastPhotoAt, zone }: ReportProgress): string {
+  if (photoCount === 0) return 'No photo is with this report.';
+  const came = lastPhotoAt ? `${photoCount === 1 ? 'It' : 'The last one'} came ${formatDayClock(lastPhotoAt, zone)}.` : '';
+  return `${photoCount === 1 ? 'One photo is' : `${photoCount} photos are`} with this report. ${came}`;
+}
+
 const answerSchema = z.object({ code: z.string(), choice: z.enum(['', 'Yes', 'No', "Don't know"]).catch(''), words: plainText(2_000) });
 
 export function action({ request, context }: Route.ActionArgs) {
   return respond(async () => {
-    await limitRate(`answer:${context.get(clientAddressContext)}`, 20, 600);
+    const { searchParams } = new URL(request.url);
+    const address = context.get(clientAddressContext);
+    if (searchParams.get('add') === 'photos') return receivePhotos({ request, code: searchParams.get('code') ?? '', actor: context.get(actorContext), address });
+    await limitRate(`answer:${address}`, 20, 600);
     const form = await request.formData();
     const read = answerSchema.safeParse({ code: form.get('code') ?? '', choice: form.get('choice') ?? '', words: form.get('words') ?? '' });
     if (!read.success) return formProblem('answer', form, { fieldErrors: z.flattenError(read.error).fieldErrors });
@@ -73,22 +88,28 @@ export function action({ request, context }: Route.ActionArgs) {
   });
 }
 
+/** Also after a refusal: of several photos some may have been stored. */
+export const shouldRevalidate = ({ actionStatus, defaultShouldRevalidate }: ShouldRevalidateFunctionArgs): boolean => actionStatus !== undefined || defaultShouldRevalidate;
+
 export const meta: Route.MetaFunction = () => [{ title: 'How far is my report? · Scorchline' }];
 
 export default function Progress({ loaderData, actionData }: Route.ComponentProps) {
   const { report, typed, problem } = loaderData;
   if (!report) return <LookUp typed={typed} problem={problem} />;
+  const photos = <ProgressPhotos key={report.photos.words} receipt={report.receipt} photos={report.photos} justStored={report.photos.justStored} problem={actionData?.intent === 'photos' ? actionData : null} />;
   return (
     <Page width="task">
       <h1 className="pt-6 font-serif text-title">{report.heading}</h1>
       <p className="pt-1 pb-4 text-second">Report <span className="font-mono">{report.receipt}</span>, sent {report.sentWords}</p>
-      {report.question ? <Question receipt={report.receipt} question={report.question} problem={actionData} /> : null}
+      {report.question ? <Question receipt={report.receipt} question={report.question} problem={actionData?.intent === 'answer' ? actionData : undefined} /> : null}
+      {report.question ? photos : null}
       <SectionHeading>What happened with it</SectionHeading>
-      <div className="pt-2"><ProgressLine steps={report.steps} /></div>
+      <div className="pt-2 pb-6"><ProgressLine steps={report.steps} /></div>
+      {report.question ? null : photos}
       <Caution>
         If you see the bright patch again: cover or shade it from the shaded side, and <AppLink href="/report">report it</AppLink>. Do not look along the beam.
       </Caution>
-      <p className="pt-6 text-small text-second">Anyone with the receipt can read this page. It holds no names.</p>
+      <p className="pt-6 text-small text-second">Anyone with the receipt can read this page{report.photos.closedWords ? '' : ' and add photos'}. It holds no names.</p>
     </Page>
   );
 }

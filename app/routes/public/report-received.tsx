@@ -81,7 +81,7 @@ export default function ReportReceived({ loaderData }: Route.ComponentProps) {
           <li>Somebody takes a first look: within one hour if the bright patch is still there or somebody was hurt, otherwise within four working hours. These are our own targets.</li>
           <li>If something is unclear you get one question. “Don't know” is a good answer.</li>
           <li>The place is measured and several explanations are tested, not only sunlight.</li>
-          <li>You can read here what came of it.</li>
+          <li>By the receipt you can read what came of it, and add photos until then.</li>
         </ol>
         <Caution>If the bright patch comes back: cover or shade it from the shaded side, do not look along the beam, and report it again.</Caution>
         <div className="space-y-3 pt-6">

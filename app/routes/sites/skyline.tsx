@@ -54,7 +54,7 @@ export default function SiteSkyline({ loaderData: data, actionData: problem }: R
   const finding = data.count === 0 ? `No skyline is measured at ${data.name}` : `${data.count} points of skyline at ${data.name}`;
   return (
     <Page>
-      <PageTitle below="Used by every case here that has no skyline of its own." aside={<AppLink href={href('/sites/:siteCode', { siteCode: data.code })} className="inline-flex min-h-8 items-center">Back to the site</AppLink>}>{finding}</PageTitle>
+      <PageTitle below="Used by every case here that has no skyline of its own." aside={<AppLink href={href('/sites/:siteCode', { siteCode: data.code })} className="inline-flex min-h-(--target-height) items-center">Back to the site</AppLink>}>{finding}</PageTitle>
       <SkylineEditor key={data.base} rows={data.rows} paths={data.paths} photos={[]} base={{ name: 'base', value: data.base }} saveLabel="Save the skyline of the site" mayEdit={data.mayEdit} whoEdits="Open to an investigator, the site manager or an administrator." problem={problem} />
     </Page>
   );

@@ -4,7 +4,7 @@ import { readMoveFacts } from '#db/queries/case-moves.server.ts';
 import { lockCase } from '#db/queries/case-subject.server.ts';
 import type { CaseRow } from '#db/queries/case-subject.server.ts';
 import { stateSince, updateCase } from '#db/queries/cases.server.ts';
-import { insertLogEntry } from '#db/queries/log.server.ts';
+import type { CasePatch } from '#db/queries/cases.server.ts';
 import type { MoveExtra } from '#app/domain/case-move.ts';
 import { missingInput, moveEvent, needsOf } from '#app/domain/case-move.ts';
 import type { CaseState, Move } from '#app/domain/case-state.ts';
@@ -12,6 +12,7 @@ import { caseStateLabels, findMove } from '#app/domain/case-state.ts';
 import { DomainError, notFound } from '#app/domain/errors.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import { authorize } from '#app/services/authorize.ts';
+import { logLine } from '#app/services/log-line.server.ts';
 import { applyFindingMove } from '#app/services/findings/finding-moves.server.ts';
 import { refuseStaleVersion } from './case-version.server.ts';
 import { effectOf, waiversOf } from './move-effects.server.ts';
@@ -63,8 +64,18 @@ async function moveInTransaction(tx: Transaction, request: MoveRequest): Promise
   if (needs.length > 0) throw new DomainError('invalid-state', `"${move.label}" is not ready yet.`, { needs });
   const effect = await effectOf(tx, { move, row: withWaivers, actor, reason, extra, now });
   await applyToFinding(tx, move, found.row, actor, reason);
-  const moved = await updateCase(tx, found.row.id, { ...waiversOf(move, extra), ...effect.patch, state: move.to });
-  await insertLogEntry(tx, logLine(move, moved, actor, reason, effect.summary));
+  const patch = { ...waiversOf(move, extra), ...effect.patch, state: move.to };
+  const moved = await updateCase(tx, found.row.id, patch);
+  await logLine(tx, actor, moved, {
+    event: moveEvent(move.id),
+    subject: 'cases',
+    subjectId: moved.id,
+    summary: effect.summary,
+    reason: reason.trim(),
+    // Enough to put the case back as it was, and to see later what a move overwrote.
+    before: columnsOf(found.row, patch),
+    after: { state: move.to, moveId: move.id, version: moved.version },
+  });
   await mailMove(tx, { move, row: moved, actor, reason });
   return { state: moved.state, version: moved.version };
 }
@@ -75,18 +86,7 @@ async function applyToFinding(tx: Transaction, move: Move, row: CaseRow, actor: 
   }
 }
 
-function logLine(move: Move, row: CaseRow, actor: Actor, reason: string, summary: string) {
-  return {
-    actorId: actor.userId,
-    actorName: actor.displayName,
-    organisationId: row.organisationId,
-    caseId: row.id,
-    event: moveEvent(move.id),
-    subject: 'cases',
-    subjectId: row.id,
-    summary,
-    reason: reason.trim(),
-    before: { state: move.from },
-    after: { state: move.to },
-  };
+/** The columns that a patch names, as they stand in a row. */
+export function columnsOf(row: CaseRow, patch: CasePatch): Record<string, unknown> {
+  return Object.fromEntries(Object.entries(row).filter(([column]) => column in patch));
 }

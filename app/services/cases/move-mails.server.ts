@@ -3,6 +3,7 @@ import { getPerson, listRoleHolders, reporterAddress } from '#db/queries/case-pe
 import type { CaseRow } from '#db/queries/case-subject.server.ts';
 import { insertMail } from '#db/queries/outbox.server.ts';
 import type { Move } from '#app/domain/case-state.ts';
+import { isHarmless, mailHoldSeconds } from '#app/domain/move-undo.ts';
 import { formatDay } from '#app/domain/local-time.ts';
 import type { Actor, Role } from '#app/domain/roles.ts';
 import { assignedMail, closedMail, findingSentMail, findingSignedMail, noActionMail, reopenedMail, returnedMail } from '#app/mail/templates/case-moved.ts';
@@ -13,28 +14,34 @@ interface Message {
   readonly bodyHtml: string;
 }
 
-/** Mail that follows from a move, in its transaction. Nobody is told of what they did themselves. */
+/** Start of the key of every message about one move; `version` is that of the case after it. */
+export const moveMailKey = (moveId: string, caseId: string, version: number): string => `case-${moveId}:${caseId}:${version}`;
+
+/**
+ * Mail that follows from a move, in its transaction. Nobody is told of what they did themselves. Where the move may be
+ * taken back, the mail waits until it no longer may.
+ */
 export async function mailMove(tx: Transaction, { move, row, actor }: { move: Move; row: CaseRow; actor: Actor; reason: string }): Promise<void> {
   const about = { caseNumber: row.number, receipt: row.receipt };
-  const key = `case-${move.id}:${row.id}:${row.version}`;
+  const occasion = { row, actor, key: moveMailKey(move.id, row.id, row.version), heldForS: isHarmless(move.id) ? mailHoldSeconds : 0 };
   switch (move.id) {
     case 'accept':
-      return mailAssigned(tx, { row, actor, key });
+      return mailAssigned(tx, occasion);
     case 'return':
-      return mailReporter(tx, { row, actor, key }, returnedMail(about, row.answerDueAt ? formatDay(row.answerDueAt, row.zone) : 'soon'));
+      return mailReporter(tx, occasion, returnedMail(about, row.answerDueAt ? formatDay(row.answerDueAt, row.zone) : 'soon'));
     case 'close':
     case 'close-no-action':
     case 'close-at-triage':
-      return mailReporter(tx, { row, actor, key }, closedMail(about));
+      return mailReporter(tx, occasion, closedMail(about));
     case 'reopen-investigation':
     case 'reopen-action':
-      return mailReporter(tx, { row, actor, key }, reopenedMail(about));
+      return mailReporter(tx, occasion, reopenedMail(about));
     case 'send-findings':
-      return mailHolders(tx, { row, actor, key }, 'reviewer', findingSentMail(about));
+      return mailHolders(tx, occasion, 'reviewer', findingSentMail(about));
     case 'sign':
-      return mailHolders(tx, { row, actor, key }, 'manager', findingSignedMail(about));
+      return mailHolders(tx, occasion, 'manager', findingSignedMail(about));
     case 'sign-no-action':
-      return mailHolders(tx, { row, actor, key }, 'manager', noActionMail(about));
+      return mailHolders(tx, occasion, 'manager', noActionMail(about));
     default:
       return;
   }
@@ -45,27 +52,31 @@ interface Occasion {
   readonly actor: Actor;
   /** One message per occasion and recipient. */
   readonly key: string;
+  /** Seconds for which the message waits. */
+  readonly heldForS?: number;
 }
 
 /** To the investigator of the case, unless they named themselves. */
-export async function mailAssigned(tx: Transaction, { row, actor, key }: Occasion): Promise<void> {
+export async function mailAssigned(tx: Transaction, occasion: Occasion): Promise<void> {
+  const { row, actor } = occasion;
   if (!row.assignedToId || row.assignedToId === actor.userId) return;
   const investigator = await getPerson(tx, row.assignedToId);
-  if (investigator) await post(tx, { row, key }, investigator.email, assignedMail({ caseNumber: row.number, receipt: row.receipt }));
+  if (investigator) await post(tx, occasion, investigator.email, assignedMail({ caseNumber: row.number, receipt: row.receipt }));
 }
 
-async function mailReporter(tx: Transaction, { row, actor, key }: Occasion, message: Message): Promise<void> {
-  const address = await reporterAddress(tx, row.id);
-  if (address && row.reporterId !== actor.userId) await post(tx, { row, key }, address, message);
+async function mailReporter(tx: Transaction, occasion: Occasion, message: Message): Promise<void> {
+  const address = await reporterAddress(tx, occasion.row.id);
+  if (address && occasion.row.reporterId !== occasion.actor.userId) await post(tx, occasion, address, message);
 }
 
-async function mailHolders(tx: Transaction, { row, actor, key }: Occasion, role: Role, message: Message): Promise<void> {
+async function mailHolders(tx: Transaction, occasion: Occasion, role: Role, message: Message): Promise<void> {
+  const { row, actor } = occasion;
   const people = await listRoleHolders(tx, { organisationId: row.organisationId, siteId: row.siteId, roles: [role] });
   for (const person of people) {
-    if (person.userId !== actor.userId) await post(tx, { row, key }, person.email, message);
+    if (person.userId !== actor.userId) await post(tx, occasion, person.email, message);
   }
 }
 
-function post(tx: Transaction, { row, key }: Pick<Occasion, 'row' | 'key'>, toAddress: string, message: Message): Promise<void> {
-  return insertMail(tx, { dedupeKey: `${key}:${toAddress}`, toAddress, caseId: row.id, ...message });
+function post(tx: Transaction, { row, key, heldForS = 0 }: Occasion, toAddress: string, message: Message): Promise<void> {
+  return insertMail(tx, { dedupeKey: `${key}:${toAddress}`, toAddress, caseId: row.id, heldForS, ...message });
 }

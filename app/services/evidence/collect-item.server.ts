@@ -8,6 +8,7 @@ import { itemCode } from '#app/domain/evidence.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import { authorize } from '#app/services/authorize.ts';
 import { logLine } from '#app/services/log-line.server.ts';
+import { ownSignature } from './hand-over.server.ts';
 
 export interface CollectItemRequest {
   readonly actor: Actor;
@@ -34,7 +35,7 @@ export async function collectItem({ actor, caseNumber, item, collectedAt, now }:
     const label = await nextItemLabel(tx, found.row.id);
     const { clientId, kind, description, fromWhere, collectedBy, sealNumber, condition, holderRole, holderName, place } = item;
     const itemId = await insertItem(tx, { caseId: found.row.id, clientId, label, kind, description, fromWhere, collectedBy, collectedAt, sealNumber, createdById: actor.userId });
-    await insertCustody(tx, { itemId, clientId: randomUUID(), sequence: 1, holderRole, holderName, place, purpose: 'Collected as evidence', condition, fromAt: collectedAt, receivedBy: holderName, recordedById: actor.userId });
+    await insertCustody(tx, { itemId, clientId: randomUUID(), sequence: 1, holderRole, holderName, place, purpose: 'Collected as evidence', condition, fromAt: collectedAt, receivedBy: holderName, receiverId: ownSignature(actor, holderName), recordedById: actor.userId });
     await logLine(tx, actor, found.row, {
       event: 'evidence.collected',
       subject: 'evidence_items',

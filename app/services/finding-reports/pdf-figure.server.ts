@@ -24,16 +24,16 @@ function drawMark(doc: Doc, mark: FigureMark): void {
     case 'area':
       polyline(doc, mark.points);
       doc.closePath();
-      paint(doc, mark.fill, mark.edge, mark.widthPt);
+      paint(doc, mark, mark.widthPt);
       return;
     case 'rect':
       if (mark.roundPt) doc.roundedRect(mark.x, mark.y, mark.width, mark.height, mark.roundPt);
       else doc.rect(mark.x, mark.y, mark.width, mark.height);
-      paint(doc, mark.fill, mark.edge, mark.widthPt);
+      paint(doc, mark, mark.widthPt);
       return;
     case 'dot':
       doc.circle(mark.x, mark.y, mark.radiusPt);
-      paint(doc, mark.fill, mark.edge, 1);
+      paint(doc, mark, 1);
       return;
     case 'text':
       drawText(doc, mark);
@@ -47,11 +47,13 @@ function polyline(doc: Doc, points: readonly (readonly [number, number])[]): voi
   }
 }
 
-function paint(doc: Doc, fill: keyof typeof inks | undefined, edge: keyof typeof inks | undefined, widthPt: number | undefined): void {
+function paint(doc: Doc, { fill, edge, opacity = 1 }: { readonly fill?: keyof typeof inks; readonly edge?: keyof typeof inks; readonly opacity?: number }, widthPt: number | undefined): void {
   doc.lineWidth(widthPt ?? 1);
+  if (opacity < 1) doc.fillOpacity(opacity);
   if (fill && edge) doc.fillAndStroke(inks[fill], inks[edge]);
   else if (fill) doc.fill(inks[fill]);
   else if (edge) doc.stroke(inks[edge]);
+  if (opacity < 1) doc.fillOpacity(1);
 }
 
 function drawText(doc: Doc, mark: Extract<FigureMark, { mark: 'text' }>): void {
@@ -59,6 +61,7 @@ function drawText(doc: Doc, mark: Extract<FigureMark, { mark: 'text' }>): void {
   const text = printable(doc, mark.text);
   const width = doc.widthOfString(text);
   const shift = mark.anchor === 'end' ? width : mark.anchor === 'middle' ? width / 2 : 0;
+  if (mark.bed) doc.rect(mark.x - shift - 1.5, mark.y - mark.sizePt * 0.8, width + 3, mark.sizePt * 1.05).fill(inks[mark.bed]).fillColor(inks[mark.ink ?? 'ink']);
   // The words of a figure stand on their base line, as in the drawing on the screen.
   doc.text(text, mark.x - shift, mark.y, { lineBreak: false, baseline: 'alphabetic' });
 }

@@ -2,8 +2,9 @@ import { db, inTransaction } from '#db/client.server.ts';
 import { findCase } from '#db/queries/case-subject.server.ts';
 import { getFindingReport, recordReportFile } from '#db/queries/finding-reports.server.ts';
 import type { FindingReportRow } from '#db/queries/finding-reports.server.ts';
-import { hasSeenOpinion, listFindings } from '#db/queries/findings.server.ts';
+import { listFindings } from '#db/queries/findings.server.ts';
 import type { FindingView } from '#db/queries/findings.server.ts';
+import { isConclusionHidden } from '#db/queries/hidden-conclusion.server.ts';
 import { readReportParts } from '#db/queries/report-parts.server.ts';
 import { buildReport } from '#app/domain/build-report.ts';
 import { DomainError, notFound } from '#app/domain/errors.ts';
@@ -54,8 +55,7 @@ async function choose({ actor, caseNumber, version }: ReportRequest): Promise<Ch
   const finding = version === null ? (readable[0] ?? null) : (readable.find((one) => one.version === version) ?? null);
   if (version !== null && !finding) throw notFound('This version of the finding');
   const [latest = null] = all;
-  const reviewing = latest?.state === 'sent' && canOnCase(actor, 'finding:review', subject);
-  const opinionShown = !reviewing || latest === null || (await hasSeenOpinion(db, { findingId: latest.id, userId: actor.userId }));
+  const opinionShown = !(await isConclusionHidden(db, { actor, caseNumber }));
   // A reviewer who has not asked for the opinion is shown no version of it, earlier ones included.
   return { finding: opinionShown ? finding : latest, opinionShown, signedVersions: readable.filter((one) => one.state === 'signed').map((one) => one.version), caseId: found.row.id, organisationId: found.row.organisationId };
 }

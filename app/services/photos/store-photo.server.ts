@@ -9,7 +9,6 @@ import type { PhotoDetails } from '#app/domain/photo-details.ts';
 import { noDetails } from '#app/domain/photo-details.ts';
 import { acceptedTime, photoExtension, photoRefusal, photosPerReport } from '#app/domain/photo.ts';
 import type { ReportHolder } from '#app/domain/report.ts';
-import type { Actor } from '#app/domain/roles.ts';
 import { preparePhotoJob } from '#app/jobs/definitions/prepare-photo.ts';
 import { enqueue } from '#app/jobs/queue.server.ts';
 import { log } from '#app/log.server.ts';
@@ -24,17 +23,25 @@ export type PhotoOutcome =
   | { readonly ok: true; readonly photoId: string; readonly fileName: string; readonly bytes: number; readonly repeated: boolean }
   | { readonly ok: false; readonly fileName: string; readonly sentence: string };
 
+/** Who brings a photo: a person, or somebody without an account under the words that the log uses for them. */
+export interface Uploader {
+  readonly userId: string | null;
+  readonly displayName: string;
+}
+
 interface Upload {
   readonly file: IncomingFile;
   /** The report that the photo belongs to, sent or not. */
   readonly clientId: string;
-  readonly uploader: Pick<Actor, 'userId' | 'displayName'> | null;
+  readonly uploader: Uploader;
   /** What the person said of it; nothing, for a photo added to a case. */
   readonly details?: PhotoDetails;
 }
 interface PhotoTarget extends Pick<SentReport, 'caseId' | 'organisationId'> {
   readonly zone?: string;
 }
+
+const guestByLink: Uploader = { userId: null, displayName: 'Guest by site link' };
 
 /**
  * Takes a photo for a report under way. The original goes to the object store first, byte for byte; only then is it
@@ -45,7 +52,7 @@ interface PhotoTarget extends Pick<SentReport, 'caseId' | 'organisationId'> {
  */
 export async function storeReportPhoto(params: { holder: ReportHolder; clientId: string; file: IncomingFile; details?: PhotoDetails }): Promise<PhotoOutcome> {
   const { holder, clientId, file, details = noDetails } = params;
-  return storePhoto({ file, clientId, uploader: holder.kind === 'person' ? holder.actor : null, details }, async (tx) => {
+  return storePhoto({ file, clientId, uploader: holder.kind === 'person' ? holder.actor : guestByLink, details }, async (tx) => {
     const sent = await findSentReport(tx, clientId);
     if (sent && !isHeldBy(sent, holder)) throw notYourReport();
     return sent;
@@ -74,7 +81,7 @@ export async function storePhoto({ file, clientId, uploader, details = noDetails
     const label = target ? await labelIn(tx, target.caseId) : null;
     const said = detailColumns(details, new Date());
     const takenAt = target?.zone ? acceptedTime({ exif: photo.exif, exifAnswer: said.exifAnswer }, target.zone) : null;
-    const row = await insertPhoto(tx, { reportClientId: clientId, caseId: target?.caseId ?? null, label, uploadedById: uploader?.userId ?? null, originalKey, ...columnsOf(photo), ...said, takenAt, madeSmaller: details.madeSmaller });
+    const row = await insertPhoto(tx, { reportClientId: clientId, caseId: target?.caseId ?? null, label, uploadedById: uploader.userId, originalKey, ...columnsOf(photo), ...said, takenAt, madeSmaller: details.madeSmaller });
     if (!row) throw new Error('The photo was inserted by another transaction in spite of the lock.');
     if (target) await logAdded(tx, row, target, uploader);
     await enqueue(tx, preparePhotoJob, { photoId: row.id });
@@ -115,8 +122,8 @@ function outcomeOf(row: PhotoRow, repeated: boolean): PhotoOutcome {
 
 async function logAdded(tx: Transaction, row: PhotoRow, target: PhotoTarget, uploader: Upload['uploader']): Promise<void> {
   await insertLogEntry(tx, {
-    actorId: uploader?.userId ?? null,
-    actorName: uploader?.displayName ?? 'Guest by site link',
+    actorId: uploader.userId,
+    actorName: uploader.displayName,
     organisationId: target.organisationId,
     caseId: target.caseId,
     event: 'photo.added',

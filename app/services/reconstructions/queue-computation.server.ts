@@ -4,7 +4,8 @@ import { insertLogEntry } from '#db/queries/log.server.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import { runComputationJob } from '#app/jobs/definitions/run-computation.ts';
 import { enqueue } from '#app/jobs/queue.server.ts';
-import { engineVersion, type ReconstructionInput } from '#app/physics/model.ts';
+import { engineVersion } from '#app/physics/model/engine-version.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
 import { hashOf } from '#app/storage/sha256.server.ts';
 
 /** Stores a long run for whoever asks and queues it; the same request sent again finds the run that it began. */

@@ -4,8 +4,8 @@ import { insertReconstruction } from '#db/queries/reconstructions.server.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import { runReconstructionJob } from '#app/jobs/definitions/run-reconstruction.ts';
 import { enqueue } from '#app/jobs/queue.server.ts';
-import type { ReconstructionInput } from '#app/physics/model.ts';
-import { engineVersion } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
+import { engineVersion } from '#app/physics/model/engine-version.ts';
 import { hashOf } from '#app/storage/sha256.server.ts';
 
 export interface RunToQueue {

@@ -1,7 +1,8 @@
 import { DomainError } from '#app/domain/errors.ts';
 import type { RecurrenceAnswer, RecurrenceRequest } from '#app/domain/recurrence-request.ts';
 import { EngineTimeoutError, runEngine, runRecurrence } from '#app/jobs/engine-runner.server.ts';
-import type { ReconstructionInput, ReconstructionResult } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
+import type { ReconstructionResult } from '#app/physics/model/result.ts';
 
 /** Runs that are answered at once, for the programming interface. Nothing is stored and no case is touched. */
 const timeoutMs = 20_000;

@@ -6,6 +6,7 @@ import type { Redaction } from '#app/domain/redaction.ts';
 import type { Audience } from '#app/domain/release-policy.ts';
 import { releasedReport } from '#app/domain/released-report.ts';
 import { measurementsCsv, runsCsv } from '#app/domain/released-tables.ts';
+import { weatherCsv } from '#app/domain/released-weather.ts';
 import { renderPdf } from '#app/services/finding-reports/render-pdf.server.ts';
 import { getObject } from '#app/storage/objects.server.ts';
 import { sha256Hex } from '#app/storage/sha256.server.ts';
@@ -28,6 +29,7 @@ const encoder = new TextEncoder();
 export async function makeReleaseFiles({ released, withheld, photos }: Redaction, source: CaseBeforeRedaction, audience: Audience): Promise<MadeFile[]> {
   const runs = runsCsv(released);
   const measurements = measurementsCsv(released);
+  const weather = weatherCsv(released);
   const data = encoder.encode(canonicalJson(released));
   const report = await renderPdf(buildReport(releasedReport({ released, withheld, audience, releasedHash: sha256Hex(data) })));
   const files: MadeFile[] = [
@@ -35,6 +37,7 @@ export async function makeReleaseFiles({ released, withheld, photos }: Redaction
     { name: reportFileName, change: 'made from the released case alone', mime: 'application/pdf', bytes: report },
     ...(runs === null ? [] : [{ name: 'runs.csv', change: 'from the reconstruction, no names in it', mime: 'text/csv; charset=utf-8', bytes: encoder.encode(runs) }]),
     ...(measurements === null ? [] : [{ name: 'measurements.csv', change: 'numbers and method, typed words left out', mime: 'text/csv; charset=utf-8', bytes: encoder.encode(measurements) }]),
+    ...(weather === null ? [] : [{ name: 'weather.csv', change: 'values that the run went by; bearing of the station left out', mime: 'text/csv; charset=utf-8', bytes: encoder.encode(weather) }]),
   ];
   for (const shared of photos) {
     const photo = source.photos.find((one) => one.photoId === shared.photoId);

@@ -5,7 +5,7 @@ import { db } from '#db/client.server.ts';
 import { getCaseAccount } from '#db/queries/case-account.server.ts';
 import { getCaseHeader } from '#db/queries/case-header.server.ts';
 import { getTriage, mayOpenTriage } from '#db/queries/triage.server.ts';
-import { caseNotes, cases, injuries, logEntries, outbox } from '#db/schema/all.ts';
+import { caseNotes, injuries, outbox } from '#db/schema/all.ts';
 import { actorContext } from '#app/auth/actor-context.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import type { FormProblem } from '#app/http/form-result.server.ts';
@@ -13,6 +13,8 @@ import { action as accountAction } from '#app/routes/cases/account.tsx';
 import { action as triageAction } from '#app/routes/cases/triage.tsx';
 import { actorOf, createActor, createCase, createHouse, createInjury, createInvolvement, createNote, createPhoto, createScene, createUser } from '#tests/support/factories.ts';
 import type { House } from '#tests/support/factories.ts';
+import { logOf, stored } from './stage.ts';
+import type { CaseRow } from './stage.ts';
 
 const now = new Date('2026-07-15T08:42:00Z');
 let house: House;
@@ -20,13 +22,6 @@ beforeAll(async () => {
   house = await createHouse();
 });
 
-type CaseRow = typeof cases.$inferSelect;
-const stored = async (row: CaseRow) => {
-  const [found] = await db.select().from(cases).where(eq(cases.id, row.id));
-  if (!found) throw new Error('gone');
-  return found;
-};
-const logOf = (row: CaseRow) => db.select().from(logEntries).where(eq(logEntries.caseId, row.id)).orderBy(logEntries.sequence);
 
 interface Posted {
   readonly status: number;

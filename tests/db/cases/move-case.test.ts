@@ -1,36 +1,18 @@
 import { eq } from 'drizzle-orm';
 import { beforeAll, describe, expect, test } from 'vitest';
 import { db } from '#db/client.server.ts';
-import { cases, logEntries, outbox } from '#db/schema/all.ts';
-import { DomainError } from '#app/domain/errors.ts';
+import { cases } from '#db/schema/all.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import { moveCase } from '#app/services/cases/move-case.server.ts';
 import { actorOf, createAction, createActor, createCase, createFinding, createHouse, createHypothesis, createInvolvement, createPhoto, createReviewComment, createScene, createSite, createUser } from '#tests/support/factories.ts';
 import type { House } from '#tests/support/factories.ts';
+import { logOf, mailOf, refusal, stored } from './stage.ts';
+import type { CaseRow } from './stage.ts';
 
 let house: House;
 beforeAll(async () => {
   house = await createHouse();
 });
-
-type CaseRow = typeof cases.$inferSelect;
-const stored = async (row: CaseRow) => {
-  const [found] = await db.select().from(cases).where(eq(cases.id, row.id));
-  if (!found) throw new Error('gone');
-  return found;
-};
-const logOf = (row: CaseRow) => db.select().from(logEntries).where(eq(logEntries.caseId, row.id)).orderBy(logEntries.sequence);
-const mailOf = (row: CaseRow) => db.select().from(outbox).where(eq(outbox.caseId, row.id));
-
-async function refusal(work: Promise<unknown>): Promise<DomainError> {
-  try {
-    await work;
-  } catch (error) {
-    if (error instanceof DomainError) return error;
-    throw error;
-  }
-  throw new Error('The move was made although it should have been refused.');
-}
 
 const move = (actor: Actor, row: CaseRow, moveId: string, more: Partial<Parameters<typeof moveCase>[0]> = {}) =>
   moveCase({ actor, caseNumber: row.number, moveId, version: row.version, reason: '', ...more });

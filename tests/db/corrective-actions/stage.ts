@@ -9,7 +9,7 @@ import type { ActionDraft } from '#app/domain/action-form.ts';
 import type { CaseState } from '#app/domain/case-state.ts';
 import { localDay } from '#app/domain/local-time.ts';
 import type { Actor } from '#app/domain/roles.ts';
-import type { ReconstructionInput } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
 
 export const zone = 'Europe/London';
 export const today = (): string => localDay(new Date(), zone);

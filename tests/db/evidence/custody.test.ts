@@ -49,9 +49,9 @@ describe('an item', () => {
 
   test('is not open to the reporter of the case, and is to those who work on it', async () => {
     await collected(stage);
-    await expect(getEvidencePage(db, { actor: stage.house.reporter, caseNumber: stage.caseNumber })).rejects.toMatchObject({ code: 'forbidden' });
-    for (const actor of [stage.house.investigator, stage.house.reviewer, stage.house.manager, stage.house.privacyLead]) expect((await getEvidencePage(db, { actor, caseNumber: stage.caseNumber }))?.items).toHaveLength(1);
-    expect(await getEvidencePage(db, { actor: stage.house.administrator, caseNumber: stage.caseNumber })).toBeNull();
+    await expect(getEvidencePage(db, { actor: stage.house.reporter, caseNumber: stage.caseNumber, now })).rejects.toMatchObject({ code: 'forbidden' });
+    for (const actor of [stage.house.investigator, stage.house.reviewer, stage.house.manager, stage.house.privacyLead]) expect((await getEvidencePage(db, { actor, caseNumber: stage.caseNumber, now }))?.items).toHaveLength(1);
+    expect(await getEvidencePage(db, { actor: stage.house.administrator, caseNumber: stage.caseNumber, now })).toBeNull();
   });
 
   test('cannot have been collected tomorrow', async () => {
@@ -161,7 +161,7 @@ describe('an examination', () => {
       actor,
       caseNumber: stage.caseNumber,
       label: 1,
-      exam: { clientId: randomUUID(), examKind: 'may-alter', method: 'A section of 2 mm', result: 'Charred through', performedBy: 'Laboratory Fennimore', noticeTo: '', protocolAttachmentId: null, ...values },
+      exam: { clientId: randomUUID(), examKind: 'may-alter', method: 'A section of 2 mm', result: 'Charred through', performedBy: 'Laboratory Fennimore', noticeTo: '', protocolAttachmentId: null, wentAheadReason: '', ...values },
       performedAt: times.performedAt ?? at('2026-05-20T10:00:00Z'),
       noticeAt: times.noticeAt ?? null,
       now,

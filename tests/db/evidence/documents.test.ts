@@ -1,6 +1,6 @@
 import { eq } from 'drizzle-orm';
 import { beforeEach, describe, expect, test } from 'vitest';
-import { document, evidenceStage } from './stage.ts';
+import { document, evidenceStage, now } from './stage.ts';
 import type { EvidenceStage } from './stage.ts';
 import { db } from '#db/client.server.ts';
 import { getEvidencePage } from '#db/queries/evidence-page.server.ts';
@@ -53,7 +53,7 @@ describe('who may read it', () => {
 
   test('a legal document is not even listed for those who may not read it', async () => {
     await document(stage, { class: 'legal', title: 'Advice of counsel' });
-    const page = await getEvidencePage(db, { actor: stage.house.investigator, caseNumber: stage.caseNumber });
+    const page = await getEvidencePage(db, { actor: stage.house.investigator, caseNumber: stage.caseNumber, now });
     expect(JSON.stringify(page)).not.toContain('Advice of counsel');
   });
 });
@@ -75,6 +75,6 @@ describe('each download', () => {
     await expect(readAttachment({ actor: stage.house.investigator, attachmentId })).rejects.toMatchObject({ code: 'conflict', message: expect.stringContaining('not handed out') });
     const events = (await db.select().from(logEntries).where(eq(logEntries.caseId, stage.caseId))).map((line) => line.event);
     expect(events).toContain('attachment.hash-differs');
-    expect((await getEvidencePage(db, { actor: stage.house.investigator, caseNumber: stage.caseNumber }))?.heading).toContain('not what came in');
+    expect((await getEvidencePage(db, { actor: stage.house.investigator, caseNumber: stage.caseNumber, now }))?.heading).toContain('not what came in');
   });
 });

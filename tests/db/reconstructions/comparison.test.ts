@@ -5,7 +5,7 @@ import { getRunComparison } from '#db/queries/run-comparison.server.ts';
 import { logEntries, reconstructions } from '#db/schema/all.ts';
 import { runReconstruction } from '#app/jobs/handlers/run-reconstruction.server.ts';
 import { stopQueue } from '#app/jobs/queue.server.ts';
-import type { ReconstructionInput } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
 import { reconstruct } from '#app/physics/reconstruct.ts';
 import { totalsWords } from '#app/domain/run-words.ts';
 import { changesAlone } from '#app/services/reconstructions/changes-alone.server.ts';

@@ -5,7 +5,7 @@ import { db } from '#db/client.server.ts';
 import { getRunPage, getRunsPage } from '#db/queries/reconstruction-page.server.ts';
 import { actorContext } from '#app/auth/actor-context.ts';
 import type { Actor } from '#app/domain/roles.ts';
-import type { ReconstructionInput } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
 import { reconstruct } from '#app/physics/reconstruct.ts';
 import { figureIds } from '#app/domain/run-figures.ts';
 import * as route from '#app/routes/cases/reconstruction.tsx';

@@ -1,5 +1,5 @@
 import { sceneSchema } from '#app/domain/scene.ts';
-import type { ReconstructionInput } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
 import { createCase, createHouse, createScene } from '#tests/support/factories.ts';
 import type { House } from '#tests/support/factories.ts';
 

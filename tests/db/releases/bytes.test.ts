@@ -27,7 +27,7 @@ beforeAll(async () => {
 
 describe('every byte of a release', () => {
   it('is listed in the manifest with its size and hash', () => {
-    expect([...bytes.files.keys()].sort()).toEqual(['data.json', 'measurements.csv', 'photo-01.jpg', 'report.pdf', 'runs.csv']);
+    expect([...bytes.files.keys()].sort()).toEqual(['data.json', 'measurements.csv', 'photo-01.jpg', 'report.pdf', 'runs.csv', 'weather.csv']);
     for (const file of bytes.row.files) {
       expect(sha256Hex(bytes.files.get(file.name) ?? '')).toBe(file.sha256);
       expect(bytes.files.get(file.name)?.byteLength).toBe(file.bytes);
@@ -48,6 +48,15 @@ describe('every byte of a release', () => {
     for (const typed of ['Mirror of', 'Q-77', 'kitchen']) expect(bytes.text).not.toContain(typed);
   });
 
+  it('tells the weather that the run went by, without the person in its name, the bearing of the station or its exact distance', () => {
+    expect(bytes.row.released.weather).toMatchObject({ number: 1, nature: 'station', distanceKm: 14, basis: 'measured', intervalMin: 10, setAside: false });
+    expect(bytes.row.released.weather?.source).toEqual([{ text: 'Rooftop instrument of ' }, { withheld: 'personal' }, { text: ', Tarn Head' }]);
+    expect(bytes.row.released.weather?.values.map((value) => [value.usedWm2, value.temperatureC])).toEqual([[812.5, 11.5], [96, 11.6], [640, 12]]);
+    const csv = (bytes.files.get('weather.csv') ?? Buffer.alloc(0)).toString('utf8');
+    expect(csv.split('\r\n')[1]).toBe('2026-05-09T12:00:00.000Z,2026-05-09T12:10:00.000Z,"9 May 2026, 13:00","9 May 2026, 13:10",10-minute means,812.5,812.5,,,,11.5,,');
+    for (const kept of ['213', '14.26', 'letter of']) expect(bytes.text).not.toContain(kept);
+  });
+
   it('holds what was shared', () => {
     expect(bytes.text).toContain('The curtain had a brown line.');
     expect(bytes.text).toContain('Focused sunlight is probable.');
@@ -61,6 +70,7 @@ describe('the report of a release', () => {
   it('says in print what the data says, and names what was withheld by class', async () => {
     const words = (await pdfText(pdf())).replace(/\s+/gu, ' ');
     for (const part of ['The curtain had a brown line.', 'Focused sunlight is probable.', bytes.row.releasedHash, '[withheld: personal]', 'do not look at the sun']) expect(words).toContain(part);
+    for (const part of ['Rooftop instrument of [withheld: personal], Tarn Head, 14 km off', 'Direct as used, 10-minute means', '812.5']) expect(words).toContain(part);
     for (const secret of ['Hollis', 'Vantongeren', 'SK9', '53.5123', stage.house.reporter.displayName]) expect(words).not.toMatch(new RegExp(`${secret}(?!\\d)`, 'u'));
   });
 
@@ -108,5 +118,5 @@ describe('photos of a release', () => {
 });
 
 it('names of files say nothing of the names that the files came with', () => {
-  expect(bytes.row.files.every((file) => /^(?:data\.json|report\.pdf|runs\.csv|measurements\.csv|photo-\d+\.jpg)$/u.test(file.name))).toBe(true);
+  expect(bytes.row.files.every((file) => /^(?:data\.json|report\.pdf|runs\.csv|measurements\.csv|weather\.csv|photo-\d+\.jpg)$/u.test(file.name))).toBe(true);
 });

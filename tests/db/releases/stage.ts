@@ -6,7 +6,8 @@ import { linesToDecide, photoKey } from '#app/domain/lines-to-decide.ts';
 import type { Decisions } from '#app/domain/redaction.ts';
 import type { Audience } from '#app/domain/release-policy.ts';
 import type { Actor } from '#app/domain/roles.ts';
-import type { ReconstructionInput, ReconstructionResult } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
+import type { ReconstructionResult } from '#app/physics/model/result.ts';
 import { releaseCaseFile } from '#app/services/releases/approve-release.server.ts';
 import { prepareRelease } from '#app/services/releases/prepare-release.server.ts';
 import { pdfText } from '#app/storage/pdf-text.server.ts';
@@ -14,7 +15,7 @@ import { getObject, putObject } from '#app/storage/objects.server.ts';
 import { sha256Hex } from '#app/storage/sha256.server.ts';
 import { db } from '#db/client.server.ts';
 import { readCaseBeforeRedaction } from '#db/queries/case-before-redaction.server.ts';
-import { releases, sites } from '#db/schema/all.ts';
+import { releases, sites, weatherRecords } from '#db/schema/all.ts';
 import type { organisations } from '#db/schema/all.ts';
 
 /** Where the phone says that the photo was taken. [°] */
@@ -36,10 +37,20 @@ export async function phonePhoto(): Promise<Buffer> {
     .toBuffer();
 }
 
+/** A record that names a person of the case; the third value lies beyond the window. */
+const weatherValues = [
+  { startUtc: '2026-05-09T12:00:00.000Z', endUtc: '2026-05-09T12:10:00.000Z', directWm2: 812.5, temperatureC: 11.5 },
+  { startUtc: '2026-05-09T12:10:00.000Z', endUtc: '2026-05-09T12:20:00.000Z', directWm2: 96, temperatureC: 11.6 },
+  { startUtc: '2026-05-09T15:00:00.000Z', endUtc: '2026-05-09T15:10:00.000Z', directWm2: 640, temperatureC: 12 },
+];
+
 const input: ReconstructionInput = {
   place: { latitudeDeg: 53.5, longitudeDeg: -1.6, elevationM: 60, heightAboveGroundM: 10, zone: 'Europe/London' },
   window: { startUtc: '2026-05-09T09:00:00.000Z', endUtc: '2026-05-09T14:10:00.000Z', clockSigmaS: 0 },
-  sky: { climateClass: 'temperate-rural' },
+  sky: {
+    climateClass: 'temperate-rural',
+    dniSeries: { basis: 'measured', source: 'Rooftop instrument of Hollis Branwen, Tarn Head; measured direct irradiance, 10-minute means', stationDistanceKm: 14.26, values: weatherValues.map(({ startUtc, endUtc, directWm2 }) => ({ startUtc, endUtc, dniWm2: directWm2 })) },
+  },
   seed: 3,
 };
 const result: ReconstructionResult = {
@@ -98,13 +109,15 @@ export async function releaseStage(): Promise<ReleaseStage> {
   await createInjury({ caseId, involvementId: hurt.id, part: 'right hand', kind: 'superficial-burn', treatment: 'first-aid' });
   await createScene({ caseId, scene: { optic: { kind: 'curved-mirror', diameterMm: { value: 150, plusMinus: 1, method: 'measured' } } } });
   const run = await createReconstruction({ caseId, number: 1, input, state: 'done', result, attachedAt: new Date('2026-05-12T11:00:00Z'), attachedById: house.investigator.userId });
+  await db.insert(weatherRecords).values({ caseId, number: 1, kind: 'file', nature: 'station', sourceName: 'Rooftop instrument of Hollis Branwen', station: 'Tarn Head', stationDistanceKm: 14.26, stationBearingDeg: 213.4, intervalMin: 10, licenceNote: 'By letter of Ottilie Vantongeren', values: weatherValues, valuesSha256: sha256Hex(JSON.stringify(weatherValues)), createdById: house.investigator.userId });
   await createSunReturn({ caseId, reconstructionId: run.id, onDay: '2027-08-03' });
   await createHypothesis({ caseId, statement: 'The mirror focused the sun.', evidenceFor: 'Ottilie Vantongeren saw the patch.', result: 'probable' });
   await createFinding({ caseId, authorId: house.investigator.userId, reviewerId: house.reviewer.userId, state: 'signed', opinion: 'Focused sunlight is probable.' });
   await createAction({ caseId, number: 1, ownerId: house.manager.userId, verifierId: house.investigator.userId, title: 'Take the mirror away', cost: 95, costCurrency: 'GBP' });
   await createNote({ caseId, authorId: house.reporter.userId, authorName: house.reporter.displayName, body: 'The sill is new.' });
   const bytes = await phonePhoto();
-  const originalKey = `originals/${sha256Hex(bytes)}`;
+  // Of its own: tests that run beside this one put other bytes in its place.
+  const originalKey = `originals/${caseId}/${sha256Hex(bytes)}`;
   await putObject(originalKey, bytes, 'image/jpeg');
   const photo = await createPhoto({
     caseId,

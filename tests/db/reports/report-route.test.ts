@@ -11,21 +11,18 @@ import { photos, sites } from '#db/schema/all.ts';
 import { plainJpeg } from '#tests/db/photos/picture-files.ts';
 import type { House } from '#tests/support/factories.ts';
 import { createActor, createHouse, createSite } from '#tests/support/factories.ts';
-import { caseOf, contextFor, openGuestLink } from './stage.ts';
+import { answersForm, caseOf, contextFor, houseWithLink, openGuestLink } from './stage.ts';
+import type { Sending } from './stage.ts';
 
 let house: House;
 let guestCode: string;
 
 beforeAll(async () => {
-  house = await createHouse();
-  guestCode = await openGuestLink(house.site.id);
+  ({ house, guestCode } = await houseWithLink());
 });
 afterAll(stopQueue);
 
-interface Attempt {
-  readonly actor?: Actor | null;
-  readonly at?: string;
-  readonly clientId?: string;
+interface Attempt extends Sending {
   readonly typed?: Readonly<Record<string, string>>;
   readonly files?: readonly File[];
 }
@@ -35,8 +32,7 @@ const routeArgs = (request: Request, actor: Actor | null) => ({ request, params:
 
 /** Posts the form as a browser without a script does. */
 async function post(attempt: Attempt) {
-  const form = new FormData();
-  for (const [name, value] of Object.entries({ siteId: house.site.id, foundWhen: 'just-now', sighting: 'mark', anyoneHurt: 'no', intent: 'send', ...attempt.typed })) form.append(name, value);
+  const form = answersForm(house.site.id, { intent: 'send', ...attempt.typed });
   for (const file of attempt.files ?? [new File([], '')]) form.append('photos', file);
   return settled(action(routeArgs(new Request(addressOf(attempt), { method: 'POST', body: form }), attempt.actor ?? null)));
 }

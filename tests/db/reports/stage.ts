@@ -7,6 +7,8 @@ import { readReport } from '#app/domain/report.ts';
 import type { Actor } from '#app/domain/roles.ts';
 import { db } from '#db/client.server.ts';
 import { cases, sites } from '#db/schema/all.ts';
+import { createHouse } from '#tests/support/factories.ts';
+import type { House } from '#tests/support/factories.ts';
 
 export const now = new Date('2026-05-09T14:12:00Z');
 
@@ -18,6 +20,27 @@ export function reportAt(site: ReportSite, typed: Readonly<Record<string, string
 }
 
 export const person = (actor: Actor): ReportHolder => ({ kind: 'person', actor });
+
+/** How a report reaches the server, and from whom. */
+export interface Sending {
+  readonly actor?: Actor | null;
+  /** Code of the account-free link. */
+  readonly at?: string;
+  readonly clientId?: string;
+}
+
+/** A form with the four answers at a site, and whatever the test adds or changes. */
+export function answersForm(siteId: string, typed: Readonly<Record<string, string>> = {}): FormData {
+  const form = new FormData();
+  for (const [name, value] of Object.entries({ siteId, foundWhen: 'just-now', sighting: 'mark', anyoneHurt: 'no', ...typed })) form.append(name, value);
+  return form;
+}
+
+/** A house of its own for a test file, with an account-free link. */
+export async function houseWithLink(): Promise<{ house: House; guestCode: string }> {
+  const house = await createHouse();
+  return { house, guestCode: await openGuestLink(house.site.id) };
+}
 
 /** Opens the account-free link of a site and gives its code. */
 export async function openGuestLink(siteId: string): Promise<string> {

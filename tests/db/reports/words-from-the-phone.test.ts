@@ -13,23 +13,19 @@ import { db } from '#db/client.server.ts';
 import { cases, photos } from '#db/schema/all.ts';
 import { plainJpeg } from '#tests/db/photos/picture-files.ts';
 import type { House } from '#tests/support/factories.ts';
-import { createHouse } from '#tests/support/factories.ts';
-import { caseOf, contextFor, openGuestLink } from './stage.ts';
+import { answersForm, caseOf, contextFor, houseWithLink } from './stage.ts';
+import type { Sending } from './stage.ts';
 
 let house: House;
 let guestCode: string;
 beforeAll(async () => {
-  house = await createHouse();
-  guestCode = await openGuestLink(house.site.id);
+  ({ house, guestCode } = await houseWithLink());
 });
 afterAll(stopQueue);
 
-interface Attempt {
-  readonly actor?: Actor | null;
-  readonly at?: string;
+interface Attempt extends Sending {
   /** Whose report the phone says it is; left out: it does not say. */
   readonly writtenBy?: string;
-  readonly clientId?: string;
 }
 
 type Route = (args: { request: Request; params: { clientId: string }; context: ReturnType<typeof contextFor>; url: URL; pattern: never }) => Promise<Response>;
@@ -42,11 +38,7 @@ async function post(action: unknown, what: 'words' | 'photos', form: FormData, {
   return { status: answer.status, body: z.record(z.string(), z.unknown()).parse(await answer.json()) };
 }
 
-const words = (typed: Readonly<Record<string, string>> = {}) => {
-  const form = new FormData();
-  for (const [name, value] of Object.entries({ siteId: house.site.id, foundWhen: 'just-now', sighting: 'mark', anyoneHurt: 'no', ...typed })) form.append(name, value);
-  return form;
-};
+const words = (typed: Readonly<Record<string, string>> = {}) => answersForm(house.site.id, typed);
 const ofPerson = (actor: Actor) => `person-${actor.userId}`;
 
 test('phone and server mean the same header', () => {

@@ -60,7 +60,7 @@ describe('values typed by hand', () => {
     const [line] = await db.select().from(logEntries).where(eq(logEntries.caseId, row.id));
     expect(line).toMatchObject({ event: 'weather.added', actorId: house.investigator.userId });
     const page = await look(house.investigator, row.number);
-    expect(page.choiceWords).toContain('record 1');
+    expect(page.heading).toContain('record 1');
     expect(page.choiceCaution).toContain('cannot prove a clear gap');
   });
 

@@ -4,6 +4,23 @@ import { projectRoot } from './app-process.ts';
 
 export const demoPhotoPath = (key: string): string => path.join(projectRoot, 'fixtures', 'photos', 'demo', `${key}.jpg`);
 
+/** The account-free link of a demonstration site. */
+export const guestReport = '/report?at=kestwick-roof-7q4m';
+
+/** Past the make-safe card. */
+export async function goOn(page: Page): Promise<void> {
+  await page.getByRole('button', { name: 'It is covered, or gone. Go on' }).click();
+}
+
+/** The three answers that are chips, by their values. */
+export async function chooseAnswers(page: Page): Promise<void> {
+  await page.locator('[name=foundWhen][value=just-now]').check();
+  await page.locator('[name=sighting][value=mark]').check();
+  await page.locator('[name=anyoneHurt][value=no]').check();
+}
+
+export const sendReport = (page: Page): Promise<void> => page.locator('button[value=send]').last().click();
+
 /** Chooses one chip of a group by its words. */
 export async function choose(page: Page, group: string, option: string): Promise<void> {
   await page.getByRole('group', { name: group }).getByRole('radio', { name: option, exact: true }).check();
@@ -22,6 +39,6 @@ export async function fillRooftopReport(page: Page, words: string): Promise<void
 /** Opens the report page and goes past the make-safe card. */
 export async function openReport(page: Page): Promise<void> {
   await page.goto('/report');
-  await page.getByRole('button', { name: 'It is covered, or gone. Go on' }).click();
+  await goOn(page);
   await page.getByRole('heading', { name: 'What did you find?' }).waitFor();
 }

@@ -1,4 +1,5 @@
 import type { Browser, Page } from 'playwright-core';
+import postgres from 'postgres';
 import { expect, inject } from 'vitest';
 import { launchBrowser, openPage } from '#tests/support/browser.ts';
 import type { OpenPageOptions, PageWatch } from '#tests/support/browser.ts';
@@ -12,7 +13,8 @@ import type { AppProcess } from './app-process.ts';
 /** The whole application with a copy of the demonstration, a mail server and a browser, for one test file. */
 export interface Stage {
   readonly baseUrl: string;
-  readonly databaseUrl: string;
+  /** The database behind the application, to look at what was stored. */
+  readonly sql: postgres.Sql;
   readonly web: AppProcess;
   readonly worker: AppProcess;
   readonly mail: FakeMail;
@@ -43,9 +45,10 @@ export async function openStage(overrides: Readonly<Record<string, string>> = {}
   const worker = appProcess('worker.mjs', env);
   const [browser] = await Promise.all([launchBrowser(), web.start(), worker.start()]);
   const watches: PageWatch[] = [];
+  const sql = postgres(database.url, { max: 1 });
   return {
     baseUrl,
-    databaseUrl: database.url,
+    sql,
     web,
     worker,
     mail,
@@ -59,6 +62,7 @@ export async function openStage(overrides: Readonly<Record<string, string>> = {}
       await browser.close();
       await Promise.all([web.stop(), worker.stop()]);
       await mail.stop();
+      await sql.end();
       await database.drop();
       expect(watches.flatMap((watch) => watch.faults), 'no page reported a fault').toEqual([]);
     },

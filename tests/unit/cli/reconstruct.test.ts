@@ -7,7 +7,7 @@ import { afterAll, expect, test, vi } from 'vitest';
 import { z } from 'zod';
 import { canonicalJson } from '#app/domain/canonical-json.ts';
 import { parseReconstructionInput } from '#app/domain/reconstruction-schema.ts';
-import { engineVersion } from '#app/physics/model.ts';
+import { engineVersion } from '#app/physics/model/engine-version.ts';
 import { reconstruct } from '#app/physics/reconstruct.ts';
 import { hashOf } from '#app/storage/sha256.server.ts';
 

@@ -3,7 +3,7 @@ import { describe, expect, test } from 'vitest';
 import { asksReason, missingInput, moveEvent, needsOf } from '#app/domain/case-move.ts';
 import type { MoveFacts } from '#app/domain/case-state.ts';
 import { caseStates, findMove, moves, movesFrom } from '#app/domain/case-state.ts';
-import { isReady, moveChecklist } from '#app/domain/move-checklist.ts';
+import { fieldOfNeed, isReady, moveChecklist } from '#app/domain/move-checklist.ts';
 
 /**
  * From the table of states in the requirements: from, to. The finding is passed on to action by signing it, or by the
@@ -218,4 +218,11 @@ describe('the checklist', () => {
     expect(isReady(move('close'), { ...signed, lesson: null, externalReports: null, actionsUnproven: 1 })).toBe(true);
     expect(isReady(move('close'), { ...signed, actionsOpen: 1 })).toBe(false);
   });
+});
+
+test('a need that the form of the move can fill in stands beside its field, and the others do not', () => {
+  const fieldsOf = (id: string, change: Partial<MoveFacts>) => needs(id, change).map((sentence) => fieldOfNeed(id, sentence));
+  expect(fieldsOf('close', { finding: { ...draft, state: 'signed' }, lesson: null, externalReports: null, actionsUnproven: 1 })).toEqual(['effectivenessWaiver', 'lesson', 'externalReports']);
+  expect(fieldsOf('close', { finding: { ...draft, state: 'signed' }, actionsOpen: 1, openReviewComments: 1 })).toEqual([null, null]);
+  expect(fieldsOf('send-findings', { attachedReconstructions: 0, photoCount: 0 })).toEqual(['reconstructionWaiver', 'evidenceWaiver']);
 });

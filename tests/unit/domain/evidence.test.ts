@@ -1,6 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import { examObstacles, handOverObstacles, itemCode, readItemLetter } from '#app/domain/evidence.ts';
-import { evidenceHeading } from '#app/domain/evidence-view.ts';
+import { evidenceHeading } from '#app/domain/evidence-heading.ts';
 import { custodyFigure } from '#app/domain/figures/custody-figure.ts';
 import { foldedScale } from '#app/domain/figures/folded-scale.ts';
 import { markWords, photoMarkSchema } from '#app/domain/photo-marks.ts';
@@ -59,7 +59,7 @@ describe('the folded scale', () => {
 });
 
 test('the custody figure names parts and never a person, and says in words what it draws', () => {
-  const line = { code: '7-A', description: 'Sphere', seal: 'seal 4', holders: [{ role: 'investigator' as const, from: at('2026-02-01T00:00:00Z'), to: at('2026-02-02T00:00:00Z') }, { role: 'store' as const, from: at('2026-02-02T00:00:00Z'), to: null }], exams: [{ kind: 'may-alter' as const, at: at('2026-02-03T00:00:00Z') }] };
+  const line = { code: '7-A', description: 'Sphere', seal: 'seal 4', holders: [{ role: 'investigator' as const, from: at('2026-02-01T00:00:00Z'), to: at('2026-02-02T00:00:00Z') }, { role: 'store' as const, from: at('2026-02-02T00:00:00Z'), to: null }], exams: [{ kind: 'may-alter' as const, at: at('2026-02-03T00:00:00Z') }], planned: [] };
   const figure = custodyFigure([line], { number: 1, width: 400, textSize: 12, zone: 'UTC', now: at('2026-07-01T00:00:00Z') });
   expect(figure.alt).toContain('7-A: Investigator from 1 Feb 2026, Store from 2 Feb 2026; may alter the item 3 Feb 2026');
   const thick = figure.marks.filter((mark) => mark.mark === 'line' && mark.widthPt === 4);
@@ -67,7 +67,7 @@ test('the custody figure names parts and never a person, and says in words what 
 });
 
 test('the heading names the weakest fact first', () => {
-  expect(evidenceHeading([], [], 118)).toBe('No item has been collected');
+  expect(evidenceHeading([], [], { caseNumber: 118, zone: 'UTC', now: at('2026-07-15T00:00:00Z') })).toBe('No item has been collected');
 });
 
 describe('clock errors', () => {
@@ -121,7 +121,7 @@ describe('marks over a photo', () => {
 });
 
 test('a line of custody never runs backwards: a record later than the day of the report moves its end', () => {
-  const line = { code: '7-A', description: 'Sphere', seal: '', holders: [{ role: 'investigator' as const, from: at('2026-05-10T00:00:00Z'), to: null }], exams: [] };
+  const line = { code: '7-A', description: 'Sphere', seal: '', holders: [{ role: 'investigator' as const, from: at('2026-05-10T00:00:00Z'), to: null }], exams: [], planned: [] };
   const figure = custodyFigure([line], { number: 1, width: 400, textSize: 12, zone: 'UTC', now: at('2026-03-02T00:00:00Z'), endWords: 'end' });
   const held = figure.marks.find((mark) => mark.mark === 'line' && mark.widthPt === 4);
   expect(held?.mark === 'line' && (held.points[1]?.[0] ?? 0) >= (held.points[0]?.[0] ?? 0)).toBe(true);

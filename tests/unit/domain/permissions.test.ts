@@ -36,6 +36,9 @@ const expected: Readonly<Record<CaseAction, readonly [string, readonly CaseState
   'photo:read-original': ['IRP', all],
   'evidence:read': ['IRMP', all],
   'evidence:write': ['I', [...working, 'closed']],
+  'evidence:offer': ['I', [...working, 'closed']],
+  'evidence:take-over': ['', []],
+  'evidence:withdraw-offer': ['', []],
   'attachment:read': ['IRMP', all],
   'attachment:add': ['IP', [...working, 'closed']],
   'witness:read': ['IRMP', all],
@@ -102,6 +105,9 @@ describe('without any role', () => {
     ['verifier-of-action', ['case:read', 'action:read', 'action:verify']],
     ['author-of-finding', []],
     ['preparer-of-release', []],
+    ['holder-of-item', ['evidence:offer']],
+    ['receiver-of-item', []],
+    ['maker-of-offer', []],
   ];
 
   test.each(byRelation)('the %s may do exactly what follows from that', (relation, actions) => {
@@ -111,6 +117,15 @@ describe('without any role', () => {
 
   test('nothing is open', () => {
     for (const action of caseActions) for (const state of caseStates) expect(canOnCase(nobody, action, subject(state))).toBe(false);
+  });
+});
+
+describe('with the role only', () => {
+  test.each([
+    ['evidence:take-over', 'receiver-of-item'],
+    ['evidence:withdraw-offer', 'maker-of-offer'],
+  ] as const)('%s is open to the %s who may read the evidence, while items change hands', (action, relation) => {
+    for (const role of roles) for (const state of caseStates) expect(canOnCase(actor(role), action, subject(state, [relation]))).toBe(['investigator', 'reviewer', 'manager', 'privacy-lead'].includes(role) && [...working, 'closed'].includes(state));
   });
 });
 
@@ -128,5 +143,6 @@ describe('in spite of the role', () => {
 
 test('the sentence about who can names every role of the rule and who is shut out', () => {
   expect(whoCan('finding:review')).toBe('Open to a technical reviewer, but not the author.');
+  expect(whoCan('evidence:take-over')).toBe('Open to an investigator, a technical reviewer, the site manager or the privacy lead, and there only to the person to whom it is offered.');
   expect(whoCan('case:reopen')).toBe('Open to a technical reviewer or the site manager.');
 });

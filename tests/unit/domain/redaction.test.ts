@@ -9,13 +9,16 @@ import { redactCase } from '#app/domain/redaction.ts';
 import { checkReleasedText } from '#app/domain/release-check.ts';
 import { releasedResultSchema, resultKeysKept } from '#app/domain/released-result.ts';
 import { measurementsCsv, runsCsv } from '#app/domain/released-tables.ts';
+import { weatherCsv } from '#app/domain/released-weather.ts';
 import { sceneSchema } from '#app/domain/scene.ts';
 import { reconstruct } from '#app/physics/reconstruct.ts';
-import type { ReconstructionResult } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
+import type { ReconstructionResult } from '#app/physics/model/result.ts';
 import { allShared, hypothesis, sourceOf } from './release-source.ts';
 
-const engineResult: ReconstructionResult = reconstruct({ ...exampleInput, window: { ...exampleInput.window, startUtc: '2025-03-12T13:30:00Z', endUtc: '2025-03-12T14:30:00Z' }, recurrenceToUtc: '2025-06-01T00:00:00Z', samples: 64, rays: 2_000 });
-const run = { number: 1, engineVersion: 'test', inputHash: 'a'.repeat(64), resultHash: 'b'.repeat(64), result: engineResult };
+const engineInput: ReconstructionInput = { ...exampleInput, window: { ...exampleInput.window, startUtc: '2025-03-12T13:30:00Z', endUtc: '2025-03-12T14:30:00Z' }, recurrenceToUtc: '2025-06-01T00:00:00Z', samples: 64, rays: 2_000 };
+const engineResult: ReconstructionResult = reconstruct(engineInput);
+const run = { number: 1, engineVersion: 'test', inputHash: 'a'.repeat(64), resultHash: 'b'.repeat(64), input: engineInput, result: engineResult };
 const photo = { photoId: '00000000-0000-4000-8000-000000000001', label: 3, view: 'close' as const, caption: 'Mark', altText: '', masks: [], releasable: 'yes' as const, exifPlace: null, originalKey: 'originals/x', sha256: 'c'.repeat(64) };
 
 const withheldIn = (pieces: readonly object[]) => pieces.flatMap((piece) => ('withheld' in piece ? [piece.withheld] : []));
@@ -123,6 +126,39 @@ describe('what each reader gets', () => {
     const named = sourceOf({ reconstruction: run, staff: [{ name: 'Invented Station', email: null }] });
     expect(engineResult.best?.dni.basis).toContain('invented station');
     expect(redactCase(named, 'insurer', {}).released.reconstruction?.result.best?.dni.basis).not.toMatch(/invented|station/iu);
+  });
+
+  describe('of the weather', () => {
+    const weather = { number: 2, nature: 'station' as const, sourceName: 'Rooftop of Ottilie Vantongeren', station: 'Quay', distanceKm: 0.4, bearingDeg: 77, basis: 'measured' as const, intervalMin: 60, setAside: false, values: [{ startUtc: '2025-03-12T14:00:00.000Z', endUtc: '2025-03-12T15:00:00.000Z', usedWm2: 742, directWm2: 742 }] };
+    const withWeather = sourceOf({ reconstruction: run, weather, people: [{ name: 'Ottilie Vantongeren', email: null, phone: null, isChild: false, guardianContact: null }] });
+    const basisIn = (released: ReturnType<typeof redactCase>['released']) => released.reconstruction?.result.best?.dni.basis;
+
+    it('an insurer: values, station as decided on without names, whole kilometres, no bearing', () => {
+      const { released, withheld } = redactCase(withWeather, 'insurer', allShared(withWeather, 'insurer'));
+      expect(released.weather).toEqual({ number: 2, nature: 'station', source: [{ text: 'Rooftop of ' }, { withheld: 'personal' }, { text: ', Quay' }], distanceKm: 1, basis: 'measured', intervalMin: 60, setAside: false, values: weather.values });
+      expect(withheld['exact-place']).toBe(redactCase({ ...withWeather, weather: { ...weather, bearingDeg: null } }, 'insurer', {}).withheld['exact-place'] + 1);
+      expect(weatherCsv(released)).toContain('hour means,742,742');
+    });
+
+    it('an insurer, where nobody decided: the station is held back, in the basis of the irradiance too', () => {
+      const { released } = redactCase(withWeather, 'insurer', {});
+      expect(released.weather?.source).toEqual([{ withheld: 'free-text' }]);
+      expect(basisIn(released)).toBe('measured');
+      expect(basisIn(redactCase(withWeather, 'insurer', allShared(withWeather, 'insurer')).released)).toContain('invented station');
+    });
+
+    it('another party: values, and no station to read the place from', () => {
+      const { released } = redactCase(withWeather, 'other-party', allShared(withWeather, 'other-party'));
+      expect(released.weather).toMatchObject({ source: [{ withheld: 'exact-place' }], values: weather.values });
+      expect(linesToDecide(withWeather, 'other-party').some((line) => line.group === 'weather')).toBe(false);
+      expect(released.reconstruction?.drawing).toMatchObject({ beam: null, sky: null, year: null, skyline: [] });
+    });
+
+    it('nobody, where the run went by the clear sky', () => {
+      const { released } = redactCase(sourceOf({ reconstruction: run }), 'insurer', {});
+      expect(released.weather).toBeNull();
+      expect(weatherCsv(released)).toBeNull();
+    });
   });
 
   it('authors of notes are told apart by letters, and the reporter is called so', () => {

@@ -37,6 +37,7 @@ export function sourceOf(values: Partial<CaseBeforeRedaction> = {}): CaseBeforeR
     photos: [],
     scene: null,
     reconstruction: null,
+    weather: null,
     hypotheses: [],
     finding: null,
     actions: [],

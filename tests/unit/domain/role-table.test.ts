@@ -50,6 +50,11 @@ describe('each square of the table says what the server decides', () => {
     expect(may('reporter', 'case:read-personal', ['reporter-of-case'])).toBe(true);
   });
 
+  test('where role and relation are both needed, the square is half and names the relation', () => {
+    expect(rightsOf('Sign for an item as its receiver').manager).toEqual({ kind: 'part', words: 'items offered to them' });
+    expect(kinds('Sign for an item as its receiver')).toMatchObject({ reporter: 'no', administrator: 'no', insurer: 'no' });
+  });
+
   test('an open square is closed by the relation that it names', () => {
     expect(rightsOf('Sign or send back a finding').reviewer).toEqual({ kind: 'limit', words: 'not own findings' });
     expect(may('reviewer', 'finding:review', ['author-of-finding'])).toBe(false);

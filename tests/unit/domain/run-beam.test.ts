@@ -1,7 +1,7 @@
 import { describe, expect, test } from 'vitest';
 import { opticOutline } from '#app/domain/optic-outline.ts';
 import { beamView, facingOf } from '#app/domain/run-beam.ts';
-import type { ReconstructionInput } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
 import { fromAzimuthElevation, lengthOf } from '#app/physics/vector.ts';
 import type { Vector } from '#app/physics/vector.ts';
 

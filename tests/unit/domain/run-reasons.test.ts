@@ -1,6 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import { reasonReader } from '#app/domain/run-reasons.ts';
-import type { ReconstructionInput } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
 import { reconstruct } from '#app/physics/reconstruct.ts';
 
 const plain: ReconstructionInput = {

@@ -1,6 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import { becauseWords, gradeHeading, reasonAt } from '#app/domain/run-words.ts';
-import type { Grade } from '#app/physics/model.ts';
+import type { Grade } from '#app/physics/model/tests.ts';
 
 const words: readonly Grade['word'][] = ['consistent', 'not refuted', 'inconsistent because', 'cannot tell because'];
 

@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest';
-import { likeness, offsetM } from '#app/domain/similar-cases.ts';
+import { likeness } from '#app/domain/similar-cases.ts';
 import type { Likeness } from '#app/domain/similar-cases.ts';
 
 const here: Likeness = { siteId: 'a', position: { latitudeDeg: 53.5, longitudeDeg: -1.6 }, opticKind: 'metal-trim', markBearingDeg: 187, day: '2026-05-09', listsDay: false };
@@ -21,11 +21,11 @@ describe('why another case is like this one', () => {
     expect(likeness({ ...here, opticKind: 'dont-know' }, other({ opticKind: 'dont-know' }))).toEqual([]);
   });
 
-  test('tells how far apart two places of one site are, in metres of the ground', () => {
-    // One minute of latitude is a sea mile by its old definition, 1,852 m to 1 part in 500.
-    expect(offsetM({ latitudeDeg: 0, longitudeDeg: 0 }, { latitudeDeg: 1 / 60, longitudeDeg: 0 }).northM / 1852).toBeCloseTo(1, 2);
-    // At 60° a degree of longitude is half as long as at the equator.
-    expect(offsetM({ latitudeDeg: 60, longitudeDeg: 0 }, { latitudeDeg: 60, longitudeDeg: 1 }).eastM / offsetM({ latitudeDeg: 0, longitudeDeg: 0 }, { latitudeDeg: 0, longitudeDeg: 1 }).eastM).toBeCloseTo(0.5, 6);
+  test('tells how far apart two places are, at one site and at two that are near', () => {
+    // 111.32 km to a degree of the equator, by the cosine of the latitude: a sphere is near enough for 60 m.
     expect(likeness(here, other({ siteId: 'a', position: { latitudeDeg: 53.5, longitudeDeg: -1.6 + 60 / (111_320 * Math.cos((53.5 * Math.PI) / 180)) } }))[0]).toBe('same site, 60 m off');
+    const north = (metres: number) => ({ latitudeDeg: 53.5 + metres / 111_250, longitudeDeg: -1.6 });
+    expect(likeness(here, other({ position: north(240) }))).toEqual(['240 m off, another site']);
+    expect(likeness(here, other({ position: north(260) }))).toEqual([]);
   });
 });

@@ -3,7 +3,7 @@ import { describe, expect, test, vi } from 'vitest';
 import { exampleInput } from '#app/cli/example-input.ts';
 import { parseReconstructionInput } from '#app/domain/reconstruction-schema.ts';
 import { inputRanges, materialRanges, opticRanges, sealedUnitRanges, type InputRange } from '#app/physics/input-ranges.ts';
-import type { ReconstructionInput } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
 import { opticKinds } from '#app/physics/optics/optic.ts';
 import { checkInput } from '#app/physics/reconstruction/checked-input.ts';
 import { settle } from '#app/physics/reconstruction/setting.ts';

@@ -1,5 +1,5 @@
 import { describe, expect, test, vi } from 'vitest';
-import type { ReconstructionInput } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
 import { reconstruct } from '#app/physics/reconstruct.ts';
 
 vi.setConfig({ testTimeout: 60_000 });

@@ -1,5 +1,6 @@
 import { describe, expect, test, vi } from 'vitest';
-import type { OccluderInput, ReconstructionInput, ReconstructionResult } from '#app/physics/model.ts';
+import type { OccluderInput, ReconstructionInput } from '#app/physics/model/input.ts';
+import type { ReconstructionResult } from '#app/physics/model/result.ts';
 import { readOccluders } from '#app/physics/occluders.ts';
 import { reconstruct } from '#app/physics/reconstruct.ts';
 import { solarPosition } from '#app/physics/sun/solar-position.ts';

@@ -1,6 +1,7 @@
 import { describe, expect, test, vi } from 'vitest';
 import { exampleInput } from '#app/cli/example-input.ts';
-import type { ReconstructionInput, ReconstructionResult } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
+import type { ReconstructionResult } from '#app/physics/model/result.ts';
 import { reconstruct } from '#app/physics/reconstruct.ts';
 
 // Whole runs with a year of recurrence: seconds on a busy machine.

@@ -1,11 +1,11 @@
 import { renderToStaticMarkup } from 'react-dom/server';
 import { describe, expect, it } from 'vitest';
 import { MarginRuler } from '#app/components/charts/margin-ruler.tsx';
-import { plainNumber } from '#app/components/charts/number-table.tsx';
 import { nearBearing, sunPathView } from '#app/components/charts/sun-path-view.ts';
 import { SunPathFigure } from '#app/components/charts/sun-path.tsx';
 import { textWidthPx } from '#app/components/charts/text-width.ts';
-import { litBands, plateSpan } from '#app/components/charts/year-plate-shape.ts';
+import { plainNumber } from '#app/domain/plain-number.ts';
+import { litBands } from '#app/domain/year-plate.ts';
 
 const minutes = [350, 355, 0, 5, 10].map((azimuthDeg, index) => ({
   atUtc: `2026-06-21T03:0${index}:00.000Z`, azimuthDeg, apparentElevationDeg: 30 - index, verdict: index < 3 ? ('not-sunlit' as const) : ('sunlit' as const),
@@ -34,11 +34,6 @@ describe('nearBearing', () => {
 
 describe('year plate', () => {
   const days = Array.from({ length: 365 }, (_, index) => ({ on: new Date(Date.UTC(2026, 0, 1 + index)).toISOString().slice(0, 10), riseMin: 360, setMin: 1080 }));
-
-  it('turns instants into local minutes of the day, summer time included', () => {
-    // 3 August 2026, 12:30 UTC is 13:30 in Europe/London (UTC+1).
-    expect(plateSpan('2026-08-03T12:30:00Z', '2026-08-03T13:10:00Z', 'Europe/London')).toEqual({ on: '2026-08-03', fromMin: 810, toMin: 850 });
-  });
 
   it('joins neighbouring lit days into one band and keeps spring and autumn apart', () => {
     const lit = ['2026-01-30', '2026-01-31', '2026-02-01', '2026-11-07'].map((on) => ({ on, fromMin: 620, toMin: 650 }));

@@ -3,7 +3,7 @@ import { describe, expect, test } from 'vitest';
 import { RunBody } from '#app/components/reconstruction/run-body.tsx';
 import type { RunPageView } from '#app/domain/run-page.ts';
 import { runView } from '#app/domain/run-view.ts';
-import type { ReconstructionInput } from '#app/physics/model.ts';
+import type { ReconstructionInput } from '#app/physics/model/input.ts';
 import { reconstruct } from '#app/physics/reconstruct.ts';
 
 const now = new Date('2026-06-01T08:00:00Z');

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { hullOf, metresWords, roundLengthM, scaleFrame } from '#app/components/charts/scale-drawing.ts';
+import { hullOf, metresWords, roundLengthM, scaleFrame } from '#app/domain/scale-drawing.ts';
 
 describe('drawings to scale', () => {
   it('take the outline of a square with points inside it', () => {

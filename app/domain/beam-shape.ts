@@ -1,8 +1,8 @@
-import type { BeamMinuteView, BeamView } from '#app/domain/run-beam.ts';
 import { add, cross, dot, scale } from '#app/physics/vector.ts';
 import type { Vector } from '#app/physics/vector.ts';
+import type { BeamMinuteView, BeamView } from './run-beam.ts';
 import { hullOf, seenFrom } from './scale-drawing.ts';
-import type { Flat, Sight } from './scale-drawing.ts';
+import type { Flat, ScaleFrame, Sight } from './scale-drawing.ts';
 
 /** Optic, mark and beam as one sees them in plan or section, in metres. */
 export interface BeamShape {
@@ -101,3 +101,40 @@ export function extentOf(shape: BeamShape, beam: BeamView, reference: BeamAt | n
   const onward: Flat[] = reference ? [[shape.start[0] + 0.92 * (reference.axis[1][0] - shape.start[0]), shape.start[1] + 0.92 * (reference.axis[1][1] - shape.start[1])]] : [];
   return [...optic, ...(shape.mark ? [shape.mark] : []), ...onward, ...incoming];
 }
+
+const rayShares = [-1, -0.5, 0, 0.5, 1] as const;
+
+/** Light that comes in: five parallel rays, each from the face that it meets to so far out towards the sun. [m] */
+export function incomingRays(shape: BeamShape, at: BeamAt, farM: number): (readonly [Flat, Flat])[] {
+  const [sunX, sunY] = at.towardsSun;
+  return rayShares.map((share) => {
+    const off = share * at.halfApertureM * 0.96;
+    const stopM = shape.ball ? Math.sqrt(Math.max(0, shape.ball.radiusM ** 2 - off ** 2)) : 0;
+    const from: Flat = [shape.entry[0] - sunY * off + sunX * stopM, shape.entry[1] + sunX * off + sunY * stopM];
+    return [from, [from[0] + sunX * farM, from[1] + sunY * farM]];
+  });
+}
+
+/** The surface that was hit, in the units of a drawing, y pointing down. */
+export interface TargetFace {
+  readonly face: readonly [Flat, Flat];
+  /** The same edge behind the face: between the two lies the material. */
+  readonly back: readonly [Flat, Flat];
+  /** The mark on it; its length in space lies along the face as drawn. */
+  readonly mark: readonly [Flat, Flat];
+}
+
+/** Drawn a little way to both sides of the mark; null where its surface is not seen from the side. */
+export function targetFace({ mark, surface }: BeamShape, markLengthMm: number | null, frame: ScaleFrame, size: { readonly leastHalf: number; readonly thick: number }): TargetFace | null {
+  if (!mark || !surface) return null;
+  const middle: Flat = [frame.x(mark[0]), frame.y(mark[1])];
+  const markHalf = markHalfDrawn(markLengthMm, frame);
+  const half = Math.max(size.leastHalf, markHalf + 20);
+  const along = (length: number): Flat => [middle[0] + surface.along[0] * length, middle[1] - surface.along[1] * length];
+  const behind = ([x, y]: Flat): Flat => [x - surface.outward[0] * size.thick, y + surface.outward[1] * size.thick];
+  const face = [along(-half), along(half)] as const;
+  return { face, back: [behind(face[0]), behind(face[1])], mark: [along(-markHalf), along(markHalf)] };
+}
+
+/** Half the length of the mark in a drawing, never too small to be seen. */
+export const markHalfDrawn = (lengthMm: number | null, frame: ScaleFrame): number => Math.max(3, ((lengthMm ?? 0) / 2000) * frame.pxPerM);
