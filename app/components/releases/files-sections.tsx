@@ -5,6 +5,9 @@ import { shortHash } from '#app/domain/release-view.ts';
 import { DocumentSection } from './document-section.tsx';
 import { RedactedWords } from './redacted-words.tsx';
 
+/** Columns that a phone leaves out; there the first one says the same. */
+const wide = 'max-tablet:hidden';
+
 export type FileHref = (fileName: string) => string;
 
 export function PhotosSection({ photos, fileHref, number }: { readonly photos: ReleaseDocument['photos']; readonly fileHref: FileHref; readonly number: number }) {
@@ -32,14 +35,17 @@ export function ManifestSection({ frame, fileHref, number }: { readonly frame: R
   return (
     <DocumentSection id="manifest" title={`${number}. Manifest`}>
       <DataTable caption="Files of this release">
-        <TableHead><HeadCell>File</HeadCell><HeadCell>Change made</HeadCell><HeadCell numeric>Bytes</HeadCell><HeadCell>SHA-256, first 8 bytes</HeadCell></TableHead>
+        <TableHead><HeadCell>File</HeadCell><HeadCell className={wide}>Change made</HeadCell><HeadCell numeric className={wide}>Bytes</HeadCell><HeadCell className={wide}>SHA-256, first 8 bytes</HeadCell></TableHead>
         <tbody>
           {frame.manifest.map((file) => (
             <Row key={file.name} tight>
-              <Cell><a href={fileHref(file.name)} download className="inline-flex min-h-6 items-center">{file.name}</a></Cell>
-              <Cell>{file.change}</Cell>
-              <Cell numeric>{file.bytes}</Cell>
-              <Cell className="font-mono text-axis whitespace-nowrap"><span title={file.sha256}>{shortHash(file.sha256)}</span></Cell>
+              <Cell>
+                <a href={fileHref(file.name)} download className="inline-flex min-h-(--target-height) items-center desk:min-h-6">{file.name}</a>
+                <span className="block pb-1 text-small text-second tablet:hidden">{file.change}; {file.bytes} bytes; <span className="font-mono text-axis">{shortHash(file.sha256)}</span></span>
+              </Cell>
+              <Cell className={wide}>{file.change}</Cell>
+              <Cell numeric className={wide}>{file.bytes}</Cell>
+              <Cell className={`${wide} font-mono text-axis whitespace-nowrap`}><span title={file.sha256}>{shortHash(file.sha256)}</span></Cell>
             </Row>
           ))}
         </tbody>

@@ -29,7 +29,7 @@ export default function EvidenceLabel({ loaderData: label, params }: Route.Compo
     <Page>
       <div className="space-y-2 py-4" data-print="no">
         <h1 className="font-serif text-title">Label for {label.code}</h1>
-        <p><AppLink href={href('/cases/:caseNumber/evidence/:letter', params)} className="inline-flex min-h-8 items-center">Back to the item</AppLink></p>
+        <p><AppLink href={href('/cases/:caseNumber/evidence/:letter', params)} className="inline-flex min-h-(--target-height) items-center">Back to the item</AppLink></p>
         <p className="max-w-[64ch] text-second">Print this page with the print command of the browser, without scaling. The label is 100 mm wide. Fix it to the bag or the seal, never to the item.</p>
       </div>
       <div data-print="alone" className="w-full max-w-[100mm] border-2 border-ink bg-white p-[4mm] text-[#1c2430]">
