@@ -22,8 +22,8 @@ const ordinaryWords = new Set(
     'victor violet walker wall ward warden water waters west wood woods young sun lens ray rays bright burns cole coles ash bush bird').split(' '),
 );
 
-const particles = new Set('van von der den de del della di da dos das du la le el al bin ibn abu ter ten zu zum zur af av und and mac mc st san'.split(' '));
-const titles = new Set('mr mrs ms miss mx dr prof sir dame lord lady rev herr frau mme'.split(' '));
+export const particles = new Set('van von der den de del della di da dos das du la le el al bin ibn abu ter ten zu zum zur af av und and mac mc st san'.split(' '));
+export const titles = new Set('mr mrs ms miss mx dr prof sir dame lord lady rev herr frau mme'.split(' '));
 const withoutWordSpaces = /[\p{Script=Han}\p{Script=Hiragana}\p{Script=Katakana}\p{Script=Thai}\p{Script=Hangul}]/u;
 
 const escapeSigns = (text: string): string => text.replace(/[.*+?^${}()|[\]\\/]/gu, '\\$&');
@@ -109,7 +109,7 @@ export function namesLikeWords(names: readonly string[]): readonly string[] {
   return [...new Set(found)].sort();
 }
 
-const genericPlaceWords = new Set(
+export const genericPlaceWords = new Set(
   ('house block court plot hotel bay ridge centre center offices office depot shop museum training lodge reserve building tower park road street lane quay ' +
     'square flat flats floor observatory publishing school hospital mill farm hall works site unit north south east west new old the of and at upper lower ' +
     'great little gap hill station estate estates garden gardens terrace yard wing college university library market house').split(' '),

@@ -10,6 +10,7 @@ import type { CaseRow } from './case-subject.server.ts';
 import { listEvidenceOfCase } from './evidence.server.ts';
 import { findCase } from './case-subject.server.ts';
 import { standingMoves } from './moves-in-log.server.ts';
+import { namesInRecords } from './names-in-records.server.ts';
 import { weatherOfCase } from './weather.server.ts';
 
 const iso = (instant: Date | null): string | null => instant?.toISOString() ?? null;
@@ -246,12 +247,13 @@ async function peopleOf(db: DbOrTx, caseId: string) {
   return rows.map(({ ageBand, ...person }) => ({ ...person, isChild: ageBand === 'under-16' || ageBand === '16-17' }));
 }
 
-/** Everybody with an account in the organisation, those who have left too, and whoever signed a note or a line of the log. */
+/** Everybody with an account in the organisation, those who have left too, whoever signed a note or a line of the log, and names typed into records. */
 async function staffOf(db: DbOrTx, row: CaseRow) {
   const accounts = await db.select({ name: users.displayName, email: users.email }).from(users).where(eq(users.organisationId, row.organisationId)).orderBy(asc(users.displayName), asc(users.id));
   const writers = await db.selectDistinct({ name: caseNotes.authorName }).from(caseNotes).where(and(eq(caseNotes.caseId, row.id), isNotNull(caseNotes.authorId)));
   const actors = await db.selectDistinct({ name: logEntries.actorName }).from(logEntries).where(and(eq(logEntries.caseId, row.id), isNotNull(logEntries.actorId)));
   const known = new Set(accounts.map((person) => person.name));
-  const others = [...new Set([...writers, ...actors].map((person) => person.name))].filter((name) => !known.has(name)).sort();
+  const typed = await namesInRecords(db, row.id);
+  const others = [...new Set([...[...writers, ...actors].map((person) => person.name), ...typed])].filter((name) => !known.has(name)).sort();
   return [...accounts, ...others.map((name) => ({ name, email: null }))];
 }

@@ -3,6 +3,8 @@ import exifr from 'exifr';
 import sharp from 'sharp';
 import { getDocument } from 'pdfjs-dist/legacy/build/pdf.mjs';
 import { beforeAll, describe, expect, it } from 'vitest';
+import { inTransaction } from '#db/client.server.ts';
+import { insertCaseNote } from '#db/queries/case-notes.server.ts';
 import { foreignJpegSegments } from '#app/domain/jpeg-segments.ts';
 import { collectItem } from '#app/services/evidence/collect-item.server.ts';
 import { masksAreSolid } from '#app/services/releases/release-photo.server.ts';
@@ -18,10 +20,11 @@ beforeAll(async () => {
   await collectItem({
     actor: stage.house.investigator,
     caseNumber: stage.caseNumber,
-    item: { clientId: randomUUID(), kind: 'optic', description: 'Mirror of Ottilie Vantongeren', fromWhere: 'kitchen sill', collectedBy: 'Branwen Hollis', sealNumber: 'Q-77', condition: 'whole', holderRole: 'investigator', holderName: 'Branwen Hollis', place: '' },
+    item: { clientId: randomUUID(), kind: 'optic', description: 'Mirror of Ottilie Vantongeren', fromWhere: 'kitchen sill', collectedBy: 'Branwen Hollis', sealNumber: 'Q-77', condition: 'whole', holderRole: 'investigator', holderName: 'Tarn laboratory, Edda Rosmarin', place: '' },
     collectedAt: new Date('2026-05-10T09:00:00Z'),
     now: new Date(),
   });
+  await inTransaction((tx) => insertCaseNote(tx, { caseId: stage.caseId, authorId: stage.house.investigator.userId, authorName: stage.house.investigator.displayName, body: 'Edda Rosmarin looked at the frame with a loupe.' }));
   bytes = await bytesOf(stage, await prepareAll(stage));
 });
 
@@ -35,7 +38,7 @@ describe('every byte of a release', () => {
     expect(bytes.row.files.find((file) => file.name === 'data.json')?.sha256).toBe(bytes.row.releasedHash);
   });
 
-  it.each(['Hollis', 'Branwen', 'Ottilie', 'Vantongeren', '900412', 'flats.example', 'Quarrel', 'SK9', '53.5123', '1.6123', 'right hand', 'INVENTED', 'kitchen'])('holds nothing of "%s"', (secret) => {
+  it.each(['Hollis', 'Branwen', 'Ottilie', 'Vantongeren', '900412', 'flats.example', 'Quarrel', 'SK9', '53.5123', '1.6123', 'right hand', 'INVENTED', 'kitchen', 'Rosmarin'])('holds nothing of "%s"', (secret) => {
     expect(bytes.text.toLowerCase()).not.toContain(secret.toLowerCase());
   });
 
@@ -58,6 +61,7 @@ describe('every byte of a release', () => {
   });
 
   it('holds what was shared', () => {
+    expect(bytes.text).toContain('looked at the frame with a loupe');
     expect(bytes.text).toContain('The curtain had a brown line.');
     expect(bytes.text).toContain('Focused sunlight is probable.');
     expect(bytes.row.released).toMatchObject({ siteName: stage.house.site.name, injury: 'yes, first aid', loss: { amount: 1850, currency: 'GBP' } });
