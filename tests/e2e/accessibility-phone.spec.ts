@@ -18,7 +18,7 @@ const pages: Readonly<Record<string, readonly string[]>> = {
   tomas: ['/report', '/cases', '/cases/127', '/account'],
   maren: [
     '/cases', '/cases/map', '/cases/122', '/cases/127/triage', '/cases/129/measurements', '/cases/129/measurements/sheet', '/cases/129/scene', '/cases/129/skyline', '/cases/129/weather',
-    '/cases/122/photos', '/cases/122/reconstructions', '/cases/122/reconstructions/1', '/cases/118/evidence', '/cases/118/witnesses', '/cases/118/timeline', '/cases/118/report',
+    '/cases/122/photos', '/cases/122/reconstructions', '/cases/122/reconstructions/1', '/cases/118/evidence', '/cases/118/evidence/A', '/cases/118/witnesses', '/cases/118/timeline', '/cases/118/report',
     '/cases/129/hypotheses', '/cases/129/findings', '/cases/122/actions', '/cases/122/log', '/cases/101/releases', '/actions', '/sites', '/sites/KESTWICK-C', '/case-files',
   ],
   odile: ['/cases/118/findings', '/log'],

@@ -1,9 +1,7 @@
-import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import { conclude, workToRun } from './support/case-work.ts';
 import type { Story } from './support/case-work.ts';
-import { castOf } from './support/cast.ts';
-import { openStage } from './support/stage.ts';
-import type { Stage } from './support/stage.ts';
+import { castOnStage } from './support/cast.ts';
 
 /**
  * Two marks that people blamed on the sun, worked from the raw report to the signed finding: the window never saw it,
@@ -42,14 +40,7 @@ const stories: readonly (Story & { readonly reason: RegExp })[] = [
   },
 ];
 
-let stage: Stage;
-const as = castOf(() => stage);
-beforeAll(async () => {
-  stage = await openStage();
-});
-afterAll(async () => {
-  await stage.close();
-});
+const as = castOnStage();
 
 describe.each(stories)('$name', (story) => {
   it('is worked from the report to a signed finding that rules the sun out', async () => {

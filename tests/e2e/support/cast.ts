@@ -1,5 +1,7 @@
 import type { Locator, Page } from 'playwright-core';
+import { afterAll, beforeAll } from 'vitest';
 import { signedIn } from './sign-in.ts';
+import { openStage } from './stage.ts';
 import type { Stage } from './stage.ts';
 
 /** The page of one person, opened at an address. */
@@ -16,6 +18,18 @@ export function castOf(stage: () => Stage): Cast {
     await page.waitForLoadState('networkidle');
     return page;
   };
+}
+
+/** The same, on a stage of their own that stands for the whole file. */
+export function castOnStage(): Cast {
+  let stage: Stage;
+  beforeAll(async () => {
+    stage = await openStage();
+  });
+  afterAll(async () => {
+    await stage.close();
+  });
+  return castOf(() => stage);
 }
 
 /** Presses a button and waits until the server has answered the form. */
